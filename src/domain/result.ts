@@ -1,0 +1,11 @@
+/** The answer of anything that may fail in an expected way. Exceptions are defects. */
+export type Result<T, F> =
+  | { readonly ok: true; readonly value: T }
+  | { readonly ok: false; readonly failure: F };
+
+export const ok = <T>(value: T): { readonly ok: true; readonly value: T } => ({ ok: true, value });
+
+export const fail = <F>(failure: F): { readonly ok: false; readonly failure: F } => ({
+  ok: false,
+  failure,
+});
