@@ -1,0 +1,52 @@
+import type { Figure } from './limit';
+import type { Written } from './written';
+
+/**
+ * What stands at one position, or over a whole clause.
+ * `no-statement`: there are numbers, but the gauge is not fit for this rule.
+ * `judged`: nothing here can be computed; the officials judge.
+ */
+export type State =
+  | 'within'
+  | 'outside'
+  | 'too-close'
+  | 'not-measured'
+  | 'could-not-be-reached'
+  | 'no-statement'
+  | 'complies'
+  | 'does-not-comply'
+  | 'judged'
+  | 'waived';
+
+export interface PositionResult {
+  /** `engine`, a cylinder's number, or a bore's key from the position map. */
+  readonly position: string;
+  readonly state: State;
+  /** The finding by the decision rule; `null` where there is none. Advisory results never say `false`. */
+  readonly pass: boolean | null;
+  /** Whether the gauge is fit for this rule; `null` where nothing was measured. */
+  readonly fit: boolean | null;
+  readonly figure?: Figure | undefined;
+  /** The figure that was compared. */
+  readonly value?: Written | undefined;
+  /** Expanded uncertainty U of that figure. */
+  readonly uncertainty?: Written | undefined;
+  /** A choice or yes / no as declared or found. */
+  readonly answer?: string | undefined;
+  readonly sentence: string;
+}
+
+/** One clause held against declared or measured facts. It assesses; a person decides. */
+export interface ClauseResult {
+  readonly clause: string;
+  readonly heading: string;
+  readonly state: State;
+  readonly pass: boolean | null;
+  readonly fit: boolean | null;
+  readonly advisory: boolean;
+  readonly perPosition: readonly PositionResult[];
+  /** The limit in words: `at least 0.0013 in and at most 0.0019 in`. */
+  readonly limit?: string | undefined;
+  readonly sentence: string;
+  readonly cautions: readonly string[];
+}
