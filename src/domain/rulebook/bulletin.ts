@@ -7,8 +7,8 @@ export type ClauseChange =
 
 /**
  * From when a bulletin counts.
- * - `next-event`: for events that start at or after its publication.
- * - `instant`: from that instant on, the instant itself included.
+ * - `next-event`: from the start of the first event that starts at or after its publication.
+ * - `instant`: from that instant on, the instant itself included; never before its publication.
  * - `safety`: at once, from its publication.
  */
 export type Effective =
@@ -20,6 +20,9 @@ export type Effective =
 export interface Bulletin {
   readonly id: string;
   readonly number: number;
+  /** The edition it amends: season and number. A later edition starts without it. */
+  readonly season: string;
+  readonly edition: number;
   readonly title: string;
   readonly reason: string;
   readonly changes: readonly ClauseChange[];
@@ -27,3 +30,20 @@ export interface Bulletin {
   /** ISO 8601 instant in UTC. */
   readonly publishedAt: string;
 }
+
+/**
+ * The instant from which a bulletin counts, as epoch milliseconds; nothing while no coming event
+ * is known. `eventStartsAt` are the class's events, in any order.
+ */
+export const findEffectiveAt = (
+  bulletin: Pick<Bulletin, 'effective' | 'publishedAt'>,
+  eventStartsAt: readonly string[],
+): number | undefined => {
+  const published = Date.parse(bulletin.publishedAt);
+  if (bulletin.effective.kind === 'safety') return published;
+  if (bulletin.effective.kind === 'instant') {
+    return Math.max(published, Date.parse(bulletin.effective.at));
+  }
+  const coming = eventStartsAt.map((start) => Date.parse(start)).filter((at) => at >= published);
+  return coming.length === 0 ? undefined : Math.min(...coming);
+};
