@@ -1,4 +1,4 @@
-import type { Clause } from './clause';
+import type { Clause } from './clause.ts';
 
 export type ClauseChange =
   | { readonly kind: 'add'; readonly clause: Clause }

@@ -1,5 +1,5 @@
-import type { Figure } from './limit';
-import type { Written } from './written';
+import type { Written } from '../quantity/dimension.ts';
+import type { Figure } from './limit.ts';
 
 /**
  * What stands at one position, or over a whole clause.

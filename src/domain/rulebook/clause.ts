@@ -1,4 +1,4 @@
-import type { Requirement } from './requirement';
+import type { Requirement } from './requirement.ts';
 
 /**
  * How binding a clause is.

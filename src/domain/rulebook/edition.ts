@@ -1,4 +1,4 @@
-import type { Clause } from './clause';
+import type { Clause } from './clause.ts';
 
 /** A row of the penalty schedule: what the first, second and later breaches cost. */
 export interface PenaltyRow {

@@ -1,5 +1,5 @@
-import type { Per, QuantityName } from './quantity-catalogue';
-import type { Written } from './written';
+import type { Written } from '../quantity/dimension.ts';
+import type { Per, QuantityName } from './quantity-catalogue.ts';
 
 /** Which figure of the readings at one position is held against the limit. */
 export type Figure = 'mean' | 'smallest' | 'largest';

@@ -1,14 +1,14 @@
+import type { Dimension } from '../quantity/dimension.ts';
+
 /** What a check is made once for. `lifter` and `bore` run over the same positions. */
 export type Per = 'bore' | 'lifter' | 'cylinder' | 'engine';
-
-export type QuantityDimension = 'length' | 'volume' | 'mass' | 'area' | 'force' | 'angle' | 'ratio';
 
 /** Which sheet the numbers for a quantity come from. */
 export type Source = 'lifter-sheet' | 'engine-sheet' | 'cam-sheet' | 'weight-sheet';
 
 export interface QuantityEntry {
   readonly label: string;
-  readonly dimension: QuantityDimension;
+  readonly dimension: Dimension;
   readonly unit: string;
   readonly per: Per;
   readonly source: Source;
@@ -107,7 +107,7 @@ export const QUANTITIES = {
   duration: {
     label: 'Duration',
     dimension: 'angle',
-    unit: '°',
+    unit: 'deg',
     per: 'bore',
     source: 'cam-sheet',
     from: 'crankshaft angle between the stated lifts, opening and closing',
@@ -117,7 +117,7 @@ export const QUANTITIES = {
   'rocker-ratio': {
     label: 'Rocker ratio',
     dimension: 'ratio',
-    unit: ':1',
+    unit: '1',
     per: 'bore',
     source: 'engine-sheet',
     from: 'valve travel over pushrod travel at the same cam angle',
@@ -159,7 +159,7 @@ export const QUANTITIES = {
   'chamber-volume': {
     label: 'Combustion chamber volume',
     dimension: 'volume',
-    unit: 'cm³',
+    unit: 'cc',
     per: 'cylinder',
     source: 'engine-sheet',
     from: 'fluid poured through a plate',
@@ -167,7 +167,7 @@ export const QUANTITIES = {
   'compression-ratio': {
     label: 'Compression ratio',
     dimension: 'ratio',
-    unit: ':1',
+    unit: '1',
     per: 'cylinder',
     source: 'engine-sheet',
     from: '(swept volume + clearance volume) ÷ clearance volume',

@@ -1,6 +1,6 @@
-import type { LimitRequirement, ReferenceAverageRequirement } from './limit';
-import type { Per } from './quantity-catalogue';
-import type { Written } from './written';
+import type { Written } from '../quantity/dimension.ts';
+import type { LimitRequirement, ReferenceAverageRequirement } from './limit.ts';
+import type { Per } from './quantity-catalogue.ts';
 
 export interface Option {
   /** A lasting key, `hydraulic-flat`. */
