@@ -1,0 +1,117 @@
+import { fail, ok, type Result } from '../result';
+import { findDegreesAndMinutes } from './angle-text';
+import { type Dimension, dimensionWords, type Written } from './dimension';
+import { dimensionsOf, findUnit, getUnit, unitSymbols } from './find-unit';
+import { readNumber } from './number-text';
+import type { Quantity } from './quantity';
+import { add, fromDecimalText, mul, type Rational } from './rational';
+import type { Unit } from './unit';
+
+export type ParseFaultName =
+  | 'empty'
+  | 'not-a-number'
+  | 'ambiguous'
+  | 'unit-missing'
+  | 'unit-unknown'
+  | 'wrong-dimension'
+  | 'impossible';
+
+/** What is wrong with a text and how to write it instead, in plain words. */
+export interface ParseFault {
+  readonly name: ParseFaultName;
+  readonly detail: string;
+}
+
+interface Expected<D extends Dimension> {
+  readonly dimension: D;
+  /** The unit of the column or the clause, for a number that stands alone. */
+  readonly defaultUnit?: string | undefined;
+}
+
+const SPLIT =
+  /^([+\-−–]?\s*[\d.,'’\u00a0\u202f/⁄ ]*\d[.,]?(?:[eE][+-]?\d{1,2})?|[+\-−–]?\s*[.,]\d+)\s*(\D.*)?$/;
+
+/**
+ * Reads a value with or without its unit, as people type it: `.0017`, `1.7 thou`, `17 tenths`,
+ * `0,0431`, `−0.0002`, `60 °C`, `104°30'`, `9.5:1`. What could mean two things is refused with words.
+ */
+export const parseQuantity = <D extends Dimension>(
+  typed: string,
+  { dimension, defaultUnit }: Expected<D>,
+): Result<Quantity<D>, ParseFault> => {
+  const text = typed.trim();
+  if (text === '') return refuse('empty', 'Nothing is written here.');
+  if (text.length > 60) return refuse('not-a-number', 'This is too long to be a measured value.');
+  if (dimension === 'angle') {
+    const degrees = findDegreesAndMinutes(text);
+    if (degrees !== undefined) return ok({ dimension, text, unit: 'deg', value: degrees });
+  }
+  const [, digits, name = ''] = SPLIT.exec(text) ?? [];
+  if (digits === undefined) return refuse('not-a-number', `"${text}" is not a number.`);
+  const number = readNumber(digits);
+  if (number.fault !== undefined) return refuseNumber(number.fault, digits.trim());
+  const unit = unitNamed(name.trim(), dimension, defaultUnit, text);
+  if (!unit.ok) return unit;
+  const value = inBase(fromDecimalText(number.plain), unit.value);
+  if (dimension === 'temperature' && value.n < 0n)
+    return refuse('impossible', `${text} is below absolute zero.`);
+  if (dimension === 'count' && value.d !== 1n)
+    return refuse('impossible', `A count is a whole number, not ${text}.`);
+  return ok({ dimension, text: digits.trim(), unit: unit.value.symbol, value });
+};
+
+/** Reads the wire form, whose unit stands apart. */
+export const parseWritten = <D extends Dimension>(
+  written: Written,
+  dimension: D,
+): Result<Quantity<D>, ParseFault> =>
+  findUnit(dimension, written.unit) === undefined
+    ? refuse('unit-unknown', unknownUnit(written.unit, dimension))
+    : parseQuantity(written.text, { dimension, defaultUnit: written.unit });
+
+const inBase = (number: Rational, unit: Unit): Rational => {
+  const scaled = mul(number, unit.factor);
+  return unit.offset === undefined ? scaled : add(scaled, unit.offset);
+};
+
+const unitNamed = <D extends Dimension>(
+  name: string,
+  dimension: D,
+  defaultUnit: string | undefined,
+  text: string,
+): Result<Unit<D>, ParseFault> => {
+  if (name !== '') {
+    const unit = findUnit(dimension, name);
+    if (unit !== undefined) return ok(unit);
+    const [other] = dimensionsOf(name);
+    return other === undefined
+      ? refuse('unit-unknown', unknownUnit(name, dimension))
+      : refuse(
+          'wrong-dimension',
+          `"${name}" measures ${dimensionWords(other)}; ${dimensionWords(dimension)} is wanted.`,
+        );
+  }
+  if (defaultUnit !== undefined) return ok(getUnit(dimension, defaultUnit));
+  if (dimension === 'count' || dimension === 'ratio') return ok(getUnit(dimension, '1'));
+  return refuse(
+    'unit-missing',
+    `${text} of what? Write the unit: ${unitSymbols(dimension).slice(0, 4).join(', ')}.`,
+  );
+};
+
+const unknownUnit = (name: string, dimension: Dimension): string =>
+  `"${name}" is no unit of ${dimensionWords(dimension)} known here. Write one of ${unitSymbols(dimension).join(', ')}.`;
+
+const NUMBER_WORDS = {
+  ambiguous: (text: string) =>
+    `${text} could be ${text.replace(',', '.')} or ${text.replace(',', '')}. Write it with a decimal point, or without the comma.`,
+  'two-numbers': (text: string) => `"${text}" looks like two numbers. Write one value here.`,
+  fraction: (text: string) => `"${text}" is a fraction. Write it as a decimal.`,
+  'not-a-number': (text: string) => `"${text}" is not a number.`,
+} as const;
+
+const refuseNumber = (fault: keyof typeof NUMBER_WORDS, text: string) =>
+  refuse(fault === 'ambiguous' ? 'ambiguous' : 'not-a-number', NUMBER_WORDS[fault](text));
+
+const refuse = (name: ParseFaultName, detail: string): { ok: false; failure: ParseFault } =>
+  fail({ name, detail });

@@ -1,0 +1,74 @@
+/** An exact number: numerator over denominator in lowest terms, the denominator positive. */
+export interface Rational {
+  readonly n: bigint;
+  readonly d: bigint;
+}
+
+const SAFE = BigInt(Number.MAX_SAFE_INTEGER);
+
+const gcd = (a: bigint, b: bigint): bigint => {
+  let x = a < 0n ? -a : a;
+  let y = b;
+  while (y > SAFE || x > SAFE) {
+    if (y === 0n) return x;
+    [x, y] = [y, x % y];
+  }
+  let p = Number(x);
+  let q = Number(y);
+  while (q !== 0) [p, q] = [q, p % q];
+  return BigInt(p);
+};
+
+/** Throws a RangeError on a denominator of zero: a defect, never an expected failure. */
+export const rational = (n: bigint, d = 1n): Rational => {
+  if (d === 0n) throw new RangeError('A rational number has no denominator of zero.');
+  if (d === 1n) return { n, d };
+  const [top, bottom] = d < 0n ? [-n, -d] : [n, d];
+  const common = gcd(top, bottom);
+  return common === 1n ? { n: top, d: bottom } : { n: top / common, d: bottom / common };
+};
+
+export const zero: Rational = { n: 0n, d: 1n };
+export const one: Rational = { n: 1n, d: 1n };
+
+export const add = (a: Rational, b: Rational): Rational =>
+  a.d === b.d ? rational(a.n + b.n, a.d) : rational(a.n * b.d + b.n * a.d, a.d * b.d);
+export const sub = (a: Rational, b: Rational): Rational => add(a, negate(b));
+export const mul = (a: Rational, b: Rational): Rational => rational(a.n * b.n, a.d * b.d);
+export const div = (a: Rational, b: Rational): Rational => rational(a.n * b.d, a.d * b.n);
+export const negate = (a: Rational): Rational => ({ n: -a.n, d: a.d });
+export const abs = (a: Rational): Rational => (a.n < 0n ? negate(a) : a);
+
+/** Negative, zero or positive as `a` is less than, equal to or greater than `b`. */
+export const compare = (a: Rational, b: Rational): -1 | 0 | 1 => {
+  const left = a.d === b.d ? a.n : a.n * b.d;
+  const right = a.d === b.d ? b.n : b.n * a.d;
+  return left < right ? -1 : left > right ? 1 : 0;
+};
+export const equal = (a: Rational, b: Rational): boolean => a.n === b.n && a.d === b.d;
+export const min = (a: Rational, b: Rational): Rational => (compare(a, b) <= 0 ? a : b);
+export const max = (a: Rational, b: Rational): Rational => (compare(a, b) >= 0 ? a : b);
+
+/** 10 to a whole power, negative powers included. */
+export const powerOfTen = (exponent: number): Rational =>
+  exponent >= 0 ? { n: 10n ** BigInt(exponent), d: 1n } : { n: 1n, d: 10n ** BigInt(-exponent) };
+
+const DECIMAL = /^([+-]?)(\d*)(?:\.(\d*))?(?:e([+-]?\d{1,3}))?$/i;
+
+/** Reads `-0.0002` or `1.7e-3` (ASCII, point). Throws a RangeError on anything else. */
+export const fromDecimalText = (text: string): Rational => {
+  const [, sign, whole = '', part = '', exponent = '0'] = DECIMAL.exec(text) ?? [];
+  if (sign === undefined || whole + part === '') throw new RangeError(`Not a decimal: "${text}"`);
+  const digits = BigInt(whole + part) * (sign === '-' ? -1n : 1n);
+  return part === '' && exponent === '0'
+    ? { n: digits, d: 1n }
+    : mul({ n: digits, d: 1n }, powerOfTen(Number(exponent) - part.length));
+};
+
+/** The nearest double, within an ulp, whatever the size of numerator and denominator. */
+export const toNumber = (a: Rational): number => {
+  const top = Number(a.n);
+  if (Math.abs(top) <= Number.MAX_SAFE_INTEGER && a.d <= SAFE) return top / Number(a.d);
+  const shift = BigInt(Math.max(0, a.d.toString(2).length - a.n.toString(2).length + 64));
+  return Number((a.n << shift) / a.d) / 2 ** Number(shift);
+};
