@@ -1,7 +1,7 @@
 import type { Dimension } from '../quantity/dimension.ts';
 
 /** What a check is made once for. `lifter` and `bore` run over the same positions. */
-export type Per = 'bore' | 'lifter' | 'cylinder' | 'engine';
+export type Per = 'bore' | 'lifter' | 'cylinder' | 'engine' | 'car';
 
 /** Which sheet the numbers for a quantity come from. */
 export type Source = 'lifter-sheet' | 'engine-sheet' | 'cam-sheet' | 'weight-sheet';
@@ -233,7 +233,7 @@ export const QUANTITIES = {
     label: 'Car weight',
     dimension: 'mass',
     unit: 'lb',
-    per: 'engine',
+    per: 'car',
     source: 'weight-sheet',
     from: 'the car over the scale, as the datum says: with or without driver and fuel',
     needsDatum: true,
