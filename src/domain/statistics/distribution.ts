@@ -1,3 +1,5 @@
+import { betaFraction } from './incomplete-beta';
+
 const SQRT_PI = Math.sqrt(Math.PI);
 const SQRT_2PI = Math.sqrt(2 * Math.PI);
 
@@ -106,23 +108,4 @@ function gammaRatio(a: number): number {
   const series =
     1 + r * (-1 / 8 + r * (1 / 128 + r * (5 / 1024 + r * (-21 / 32768 - r * (399 / 262144)))));
   return shift * Math.sqrt(b) * series;
-}
-
-/** The continued fraction of the incomplete beta function (DLMF 8.17.22), by Lentz's method. */
-export function betaFraction(x: number, a: number, b: number): number {
-  let c = 1;
-  let d = 1 / (1 - ((a + b) * x) / (a + 1));
-  let value = d;
-  for (let m = 1; m < 5000; m += 1) {
-    const even = (m * (b - m) * x) / ((a + 2 * m - 1) * (a + 2 * m));
-    d = 1 / (1 + even * d);
-    c = 1 + even / c;
-    value *= d * c;
-    const odd = (-(a + m) * (a + b + m) * x) / ((a + 2 * m) * (a + 2 * m + 1));
-    d = 1 / (1 + odd * d);
-    c = 1 + odd / c;
-    value *= d * c;
-    if (Math.abs(d * c - 1) < 1e-16) break;
-  }
-  return value;
 }

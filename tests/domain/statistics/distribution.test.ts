@@ -6,27 +6,15 @@ import {
   studentCdf,
   studentQuantile,
 } from '@/domain/statistics/distribution';
-import checkValues from '../../check-values.json';
-
-const entry = (id: string) => {
-  const found = checkValues.find((candidate) => candidate.id === id);
-  if (found === undefined) throw new Error(`no check value ${id}`);
-  return found as unknown as {
-    inputs: Record<string, unknown>;
-    expected: Record<string, unknown>;
-    tolerance: number;
-    source: string;
-    note?: string;
-  };
-};
+import { checkValue, provenance } from './check-value';
 
 describe('the normal distribution', () => {
-  const published = entry('normal-quantiles');
+  const published = checkValue('normal-quantiles');
   const z = published.expected['z'] as number[];
   it.each((published.inputs['p'] as number[]).map((p, i) => [p, z[i] as number]))(
-    `quantile at %d is %d (${published.source})`,
+    `quantile at %d is %d (${provenance(published)})`,
     (p, expected) => {
-      expect(Math.abs(normalQuantile(p) - expected)).toBeLessThan(published.tolerance);
+      expect(Math.abs(normalQuantile(p) - expected)).toBeLessThan(published.tolerance as number);
       expect(Math.abs(normalCdf(expected) - p)).toBeLessThan(1e-14);
     },
   );
@@ -45,18 +33,21 @@ describe('the normal distribution', () => {
 });
 
 describe("Student's distribution", () => {
-  const published = entry('t-quantiles');
+  const published = checkValue('t-quantiles');
   const t = published.expected['t'] as number[];
   const full = JSON.parse(published.note ?? '') as number[];
   it.each(
     (published.inputs['nu'] as number[]).map((nu, i) => [nu, t[i] as number, full[i] as number]),
-  )(`0.975 quantile, %d degrees of freedom, is %d (${published.source})`, (nu, printed, digits) => {
-    const found = studentQuantile(0.975, nu);
-    expect(Math.abs(found - printed)).toBeLessThan(published.tolerance);
-    expect(Math.abs(found - digits)).toBeLessThan(1e-9);
-  });
+  )(
+    `0.975 quantile, %d degrees of freedom, is %d (${provenance(published)})`,
+    (nu, printed, digits) => {
+      const found = studentQuantile(0.975, nu);
+      expect(Math.abs(found - printed)).toBeLessThan(published.tolerance as number);
+      expect(Math.abs(found - digits)).toBeLessThan(1e-9);
+    },
+  );
 
-  const gum = entry('gum-G.2-ttable');
+  const gum = checkValue('gum-G.2-ttable');
   // 68.27, 95.45 and 99.73 stand for the exact normal coverages of 1, 2 and 3 σ.
   const coverage: Record<number, number> = { 68.27: 1, 95.45: 2, 99.73: 3 };
   const exact = (percent: number) => {
@@ -67,7 +58,7 @@ describe("Student's distribution", () => {
     it(`Table G.2, ${dof} degrees of freedom (JCGM 100:2008 Table G.2, in part from memory)`, () => {
       (gum.inputs['p_percent'] as number[]).forEach((percent, i) => {
         const quantile = studentQuantile((1 + exact(percent)) / 2, Number(dof));
-        expect(Math.abs(quantile - (row[i] as number))).toBeLessThan(gum.tolerance);
+        expect(Math.abs(quantile - (row[i] as number))).toBeLessThan(gum.tolerance as number);
       });
     });
   }
