@@ -1,0 +1,141 @@
+import { Migration } from '@mikro-orm/migrations';
+import { appendFunction } from './sql';
+
+/**
+ * The acts (what makes a repeat harmless) and the ledger. The application reads both and writes
+ * neither: it calls the functions below, which check what they can.
+ */
+export class TheRecord extends Migration {
+  override up(): void {
+    this.addSql(`
+create table record.act (
+  id uuid primary key,
+  series_id uuid,
+  actor_id uuid,
+  kind text not null,
+  request_hash bytea not null check (length(request_hash) = 32),
+  claimed_at timestamptz not null default clock_timestamp(),
+  claimed_in xid8 not null default pg_current_xact_id(),
+  answer jsonb
+)`);
+    // An act of another transaction that is not finished yet makes the insert wait; afterwards its
+    // answer is there to be read.
+    this.addSql(`
+create function append.claim_act(
+  p_id uuid, p_series uuid, p_actor uuid, p_kind text, p_request_hash bytea,
+  out fresh boolean, out same boolean, out answer jsonb
+) language plpgsql security definer set search_path = pg_catalog, pg_temp as $fn$
+begin
+  insert into record.act (id, series_id, actor_id, kind, request_hash)
+  values (p_id, p_series, p_actor, p_kind, p_request_hash)
+  on conflict (id) do nothing;
+  if found then
+    fresh := true; same := true; answer := null;
+  else
+    fresh := false;
+    select a.kind = p_kind and a.request_hash = p_request_hash
+           and a.actor_id is not distinct from p_actor and a.series_id is not distinct from p_series,
+           a.answer
+      into same, answer from record.act a where a.id = p_id;
+  end if;
+end $fn$`);
+    this.addSql(`
+create function append.answer_act(p_id uuid, p_answer jsonb) returns void
+language plpgsql security definer set search_path = pg_catalog, pg_temp as $fn$
+begin
+  update record.act set answer = p_answer
+  where id = p_id and answer is null and claimed_in = pg_catalog.pg_current_xact_id();
+  if not found then
+    raise exception 'act % was not claimed in this transaction', p_id using errcode = '42501';
+  end if;
+end $fn$`);
+
+    this.addSql(`
+create table record.ledger_head (
+  series_id uuid primary key references public.series (id),
+  size bigint not null default 0 check (size >= 0)
+)`);
+    this.addSql(`
+create table record.ledger_line (
+  series_id uuid not null references record.ledger_head (series_id),
+  index bigint not null,
+  kind text not null,
+  line text not null,
+  leaf_hash bytea not null check (length(leaf_hash) = 32),
+  act_id uuid,
+  appended_at timestamptz not null default clock_timestamp(),
+  primary key (series_id, index)
+)`);
+    this.addSql('create index ledger_line_by_act on record.ledger_line (series_id, act_id)');
+    // Hashes of the complete subtrees: level 0 holds the leaves, a node at level k covers 2^k of
+    // them. Kept on append so that a proof reads O(log n) rows.
+    this.addSql(`
+create table record.ledger_node (
+  series_id uuid not null references record.ledger_head (series_id),
+  level smallint not null,
+  index bigint not null,
+  hash bytea not null check (length(hash) = 32),
+  primary key (series_id, level, index)
+)`);
+    this.addSql(`
+create table record.ledger_content (
+  series_id uuid not null,
+  line_index bigint not null,
+  role text not null,
+  open boolean not null,
+  salt bytea check (length(salt) = 32),
+  content text,
+  primary key (series_id, line_index, role),
+  foreign key (series_id, line_index) references record.ledger_line (series_id, index)
+)`);
+    this.addSql(`
+create table record.checkpoint (
+  series_id uuid not null references record.ledger_head (series_id),
+  size bigint not null,
+  root bytea not null check (length(root) = 32),
+  note text not null,
+  signed_at timestamptz not null default clock_timestamp(),
+  primary key (series_id, size)
+)`);
+    this.addSql(`
+create function append.open_ledger(p_series uuid) returns void
+language sql security definer set search_path = pg_catalog, pg_temp as $fn$
+  insert into record.ledger_head (series_id) values (p_series) on conflict do nothing
+$fn$`);
+    // RFC 9162 section 2.1: leaf = SHA-256(0x00 || data), node = SHA-256(0x01 || left || right).
+    // The row lock on the head orders the lines; being the last write of a transaction, it is held
+    // through the commit only.
+    this.addSql(`
+create function append.ledger_line(
+  p_series uuid, p_kind text, p_line text, p_act uuid, p_contents jsonb
+) returns bigint
+language plpgsql security definer set search_path = pg_catalog, pg_temp as $fn$
+declare
+  v_index bigint; v_hash bytea; v_left bytea; v_at bigint; v_level smallint := 0;
+begin
+  update record.ledger_head set size = size + 1 where series_id = p_series
+  returning size - 1 into v_index;
+  if v_index is null then
+    raise exception 'series % has no ledger', p_series using errcode = '23503';
+  end if;
+  v_hash := sha256('\\x00'::bytea || convert_to(p_line, 'UTF8'));
+  insert into record.ledger_line (series_id, index, kind, line, leaf_hash, act_id)
+  values (p_series, v_index, p_kind, p_line, v_hash, p_act);
+  insert into record.ledger_node values (p_series, 0, v_index, v_hash);
+  v_at := v_index;
+  while v_at % 2 = 1 loop
+    select hash into strict v_left from record.ledger_node
+    where series_id = p_series and level = v_level and index = v_at - 1;
+    v_hash := sha256('\\x01'::bytea || v_left || v_hash);
+    v_level := v_level + 1;
+    v_at := v_at / 2;
+    insert into record.ledger_node values (p_series, v_level, v_at, v_hash);
+  end loop;
+  insert into record.ledger_content (series_id, line_index, role, open, salt, content)
+  select p_series, v_index, c.role, c.open, c.salt, c.content
+  from jsonb_populate_recordset(null::record.ledger_content, p_contents) c;
+  return v_index;
+end $fn$`);
+    this.addSql(appendFunction('checkpoint', ['series_id', 'size', 'root', 'note']));
+  }
+}

@@ -1,0 +1,19 @@
+import type { MigrationObject } from '@mikro-orm/core';
+import { SchemasAndRoles } from './0001-schemas-and-roles';
+import { PeopleAndSeries } from './0002-people-and-series';
+import { TheRecord } from './0003-the-record';
+import { Rulebooks } from './0004-rulebooks';
+import { EnginePaperwork } from './0005-engine-paperwork';
+import { EventsAndInspections } from './0006-events-and-inspections';
+import { Verdicts } from './0007-verdicts';
+
+/** In order of application. A new migration is added here by hand. */
+export const migrationsList: MigrationObject[] = [
+  { name: '0001-schemas-and-roles', class: SchemasAndRoles },
+  { name: '0002-people-and-series', class: PeopleAndSeries },
+  { name: '0003-the-record', class: TheRecord },
+  { name: '0004-rulebooks', class: Rulebooks },
+  { name: '0005-engine-paperwork', class: EnginePaperwork },
+  { name: '0006-events-and-inspections', class: EventsAndInspections },
+  { name: '0007-verdicts', class: Verdicts },
+];

@@ -1,0 +1,10 @@
+/** The job queues; the owner creates them, the application only works them. */
+export const QUEUES = [
+  'send-mail',
+  'make-previews',
+  'render-notice',
+  'sign-checkpoint',
+  'sweep-uploads',
+] as const;
+
+export type QueueName = (typeof QUEUES)[number];
