@@ -6,7 +6,7 @@ import {
   studentCdf,
   studentQuantile,
 } from '@/domain/statistics/distribution';
-import { checkValue, provenance } from './check-value';
+import { checkValue, provenance } from '../../support/check-value';
 
 describe('the normal distribution', () => {
   const published = checkValue('normal-quantiles');

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { oneWay } from '@/domain/statistics/one-way';
 import { summary } from '@/domain/statistics/summary';
-import { checkValue, correctDigits, provenance } from './check-value';
+import { checkValue, correctDigits, provenance } from '../../support/check-value';
 
 const repeat = (first: string, pair: readonly string[], pairs: number): string[] => [
   first,

@@ -10,7 +10,7 @@ import { gaugeCapability, individualsChart } from '@/domain/statistics/study/gau
 import { iso5725 } from '@/domain/statistics/study/iso5725';
 import { kappa } from '@/domain/statistics/study/kappa';
 import { d2, d2Star, k1, kOfOneRange } from '@/domain/statistics/study/range-constants';
-import { checkValue, provenance } from './check-value';
+import { checkValue, provenance } from '../../support/check-value';
 
 const near = (found: number, expected: number, tolerance: number): void => {
   expect(Math.abs(found - expected), `${found} against ${expected}`).toBeLessThanOrEqual(tolerance);

@@ -1,4 +1,4 @@
-import checkValues from '../../check-values.json';
+import checkValues from '../check-values.json';
 
 interface CheckValue {
   readonly id: string;
