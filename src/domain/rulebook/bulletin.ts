@@ -1,4 +1,4 @@
-import type { Clause } from './clause.ts';
+import type { Clause } from './clause';
 
 export type ClauseChange =
   | { readonly kind: 'add'; readonly clause: Clause }

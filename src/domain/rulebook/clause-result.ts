@@ -1,5 +1,5 @@
-import type { Written } from '../quantity/dimension.ts';
-import type { Figure } from './limit.ts';
+import type { Written } from '../quantity/dimension';
+import type { Figure } from './limit';
 
 /**
  * What stands at one position, or over a whole clause.
@@ -27,13 +27,16 @@ export interface PositionResult {
   /** Whether the gauge is fit for this rule; `null` where nothing was measured. */
   readonly fit: boolean | null;
   readonly figure?: Figure | undefined;
-  /** The figure that was compared. */
+  /** The value compared, to the places worth reading; `exact` in full (ten places where endless). */
   readonly value?: Written | undefined;
+  readonly exact?: Written | undefined;
   /** Expanded uncertainty U of that figure. */
   readonly uncertainty?: Written | undefined;
   /** A choice or yes / no as declared or found. */
   readonly answer?: string | undefined;
   readonly sentence: string;
+  /** The decision rule with its numbers, in one plain sentence. */
+  readonly rule?: string | undefined;
 }
 
 /** One clause held against declared or measured facts. It assesses; a person decides. */

@@ -1,4 +1,4 @@
-import type { Requirement } from './requirement.ts';
+import type { Requirement } from './requirement';
 
 /**
  * How binding a clause is.

@@ -8,7 +8,7 @@ export type PlainDocument =
 
 /**
  * Plain data as a document to be canonicalised: numbers become strings, absent members are left
- * out. Throws on what JSON cannot hold (a defect of the caller).
+ * out, members stand in the order of their names. Throws on what JSON cannot hold (a defect of the caller).
  */
 export const toDocument = (value: unknown): PlainDocument => {
   if (value === null || typeof value === 'string' || typeof value === 'boolean') return value;
@@ -18,6 +18,7 @@ export const toDocument = (value: unknown): PlainDocument => {
     return Object.fromEntries(
       Object.entries(value)
         .filter(([, member]) => member !== undefined)
+        .sort(([a], [b]) => (a < b ? -1 : 1))
         .map(([key, member]) => [key, toDocument(member)]),
     );
   }

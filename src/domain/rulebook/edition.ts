@@ -1,4 +1,4 @@
-import type { Clause } from './clause.ts';
+import type { Clause } from './clause';
 
 /** A row of the penalty schedule: what the first, second and later breaches cost. */
 export interface PenaltyRow {

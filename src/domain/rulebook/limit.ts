@@ -1,14 +1,17 @@
-import type { Written } from '../quantity/dimension.ts';
-import type { Per, QuantityName } from './quantity-catalogue.ts';
+import type { DecisionRule } from '../decision/decision-rule';
+import type { Comparison } from '../decision/requirement';
+import type { Written } from '../quantity/dimension';
+import type { Per, QuantityName } from './quantity-catalogue';
 
 /** Which figure of the readings at one position is held against the limit. */
 export type Figure = 'mean' | 'smallest' | 'largest';
 
-export type Nominal = {
+/** Permitted from `size` − `minus` to `size` + `plus`. */
+export interface Nominal {
   readonly size: Written;
   readonly plus: Written;
   readonly minus: Written;
-};
+}
 
 /** "Rounded up" helps one side or the other: a rule says what is rounded, how, and to which step. */
 export interface LimitRounding {
@@ -19,53 +22,49 @@ export interface LimitRounding {
 
 export type CheckingLifter = 'solid' | 'as-fitted';
 
-/**
- * A limit on a measured or derived quantity: `min`, `max` or both, or a nominal with its
- * tolerance; bounds belong to the permitted zone.
- */
-export interface LimitRequirement {
-  readonly kind: 'limit';
+/** What is measured and where, shared by every requirement on a number. */
+export interface Measurand {
   readonly quantity: QuantityName;
+  /** The unit in which results are stated. */
   readonly unit: string;
   readonly per: Per;
-  readonly min?: Written | undefined;
-  readonly max?: Written | undefined;
-  readonly nominal?: Nominal | undefined;
   readonly figure?: Figure | undefined;
   /** Where the quantity is measured, `at the pushrod`. */
   readonly datum?: string | undefined;
   /** Lash at which a lift or timing is taken. */
   readonly lash?: Written | undefined;
   readonly checkingLifter?: CheckingLifter | undefined;
-  /** All positions, or a stated number of them. */
-  readonly sample: { readonly kind: 'all' } | { readonly kind: 'some'; readonly count: number };
-  readonly decision: DecisionClause;
-  readonly rounding?: LimitRounding | undefined;
 }
 
-/** How a measured value is held against the limit, as the rule words it. */
-export interface DecisionClause {
-  /** Who has the benefit of the doubt inside the guard band; see the decision room. */
-  readonly rule: DecisionRuleName;
-  /** A gauge serves when U is at most this part of the permitted zone's width, `1/4`. */
+/** How a measured value is held against its limit. */
+export interface HeldAgainst {
+  readonly decisionRule: DecisionRule;
+  readonly comparison: Comparison;
+  /** The smallest allowed window ÷ 2U as decimal text. */
   readonly fitRatio?: string | undefined;
   readonly maximumUncertainty?: Written | undefined;
 }
 
-export type DecisionRuleName = 'simple' | 'benefit-to-competitor' | 'benefit-to-rule';
+/** All positions, or a stated number of them. */
+export type Sample = { readonly kind: 'all' } | { readonly kind: 'some'; readonly count: number };
 
-/** The measured value must lie within ± `tolerance` of the mean of at least `n` reference parts. */
-export interface ReferenceAverageRequirement {
+/**
+ * A limit on a measured or derived quantity: `min`, `max` or both, or else a nominal with its
+ * tolerance. Bounds belong to the permitted window.
+ */
+export interface LimitRequirement extends Measurand, HeldAgainst {
+  readonly kind: 'limit';
+  readonly min?: Written | undefined;
+  readonly max?: Written | undefined;
+  readonly nominal?: Nominal | undefined;
+  readonly sample: Sample;
+  readonly rounding?: LimitRounding | undefined;
+}
+
+/** The value must lie from − `minus` to + `plus` about the mean of at least `n` reference parts. */
+export interface ReferenceAverageRequirement extends Measurand, HeldAgainst {
   readonly kind: 'reference-average';
-  readonly quantity: QuantityName;
-  readonly unit: string;
-  readonly per: Per;
   readonly n: number;
   readonly plus: Written;
   readonly minus: Written;
-  readonly figure?: Figure | undefined;
-  readonly datum?: string | undefined;
-  readonly lash?: Written | undefined;
-  readonly checkingLifter?: CheckingLifter | undefined;
-  readonly decision: DecisionClause;
 }

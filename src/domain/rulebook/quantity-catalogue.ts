@@ -1,4 +1,4 @@
-import type { Dimension } from '../quantity/dimension.ts';
+import type { Dimension } from '../quantity/dimension';
 
 /** What a check is made once for. `lifter` and `bore` run over the same positions. */
 export type Per = 'bore' | 'lifter' | 'cylinder' | 'engine' | 'car';
@@ -6,9 +6,12 @@ export type Per = 'bore' | 'lifter' | 'cylinder' | 'engine' | 'car';
 /** Which sheet the numbers for a quantity come from. */
 export type Source = 'lifter-sheet' | 'engine-sheet' | 'cam-sheet' | 'weight-sheet';
 
+/** Temperatures are logged beside readings, never ruled on: differences and means need no offset. */
+export type RuleDimension = Exclude<Dimension, 'temperature'>;
+
 export interface QuantityEntry {
   readonly label: string;
-  readonly dimension: Dimension;
+  readonly dimension: RuleDimension;
   readonly unit: string;
   readonly per: Per;
   readonly source: Source;

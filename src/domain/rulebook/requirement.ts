@@ -1,6 +1,6 @@
-import type { Written } from '../quantity/dimension.ts';
-import type { LimitRequirement, ReferenceAverageRequirement } from './limit.ts';
-import type { Per } from './quantity-catalogue.ts';
+import type { Written } from '../quantity/dimension';
+import type { LimitRequirement, ReferenceAverageRequirement } from './limit';
+import type { Per } from './quantity-catalogue';
 
 export interface Option {
   /** A lasting key, `hydraulic-flat`. */

@@ -1,8 +1,8 @@
-import { type Bulletin, findEffectiveAt } from './bulletin.ts';
-import { type Clause, sortClauses } from './clause.ts';
-import { type PlainDocument, toDocument } from './document.ts';
-import type { Edition, PenaltyRow } from './edition.ts';
-import type { Clarification, Waiver } from './ruling.ts';
+import { type Bulletin, findEffectiveAt } from './bulletin';
+import { type Clause, sortClauses } from './clause';
+import { type PlainDocument, toDocument } from './document';
+import type { Edition, PenaltyRow } from './edition';
+import type { Clarification, Waiver } from './ruling';
 
 /** One class's published rules, and the instant for which they are asked. */
 export interface RulesQuestion {

@@ -1,0 +1,96 @@
+import { assess } from '../../decision/assess';
+import type { Assessment, LimitRequirement as Decision } from '../../decision/requirement';
+import { convert } from '../../quantity/convert';
+import type { Written } from '../../quantity/dimension';
+import { asciiIn, formatWidth } from '../../quantity/format';
+import { decimalsOf } from '../../quantity/number-text';
+import type { Quantity } from '../../quantity/quantity';
+import type { PositionResult, State } from '../clause-result';
+import { writtenWords } from '../describe';
+import type { Figure } from '../limit';
+import type { RuleDimension } from '../quantity-catalogue';
+import type { NumberFact, Position } from './facts';
+
+const WORDS = {
+  within: 'within',
+  outside: 'outside',
+  'too-close': 'too close to call',
+} as const;
+
+const UNFIT = 'no statement, since the gauge is not fit for this rule';
+
+/** Exact where that is short, else two places more than the limit has. */
+const readable = (value: Quantity, places: number): Written =>
+  decimalsOf(value.text) <= places + 3
+    ? { text: value.text, unit: value.unit }
+    : { text: asciiIn(value, value.unit, places + 2), unit: value.unit };
+
+export interface Held {
+  readonly position: Position;
+  readonly fact: NumberFact;
+  /** As the rule rounds it, where it does. */
+  readonly compared: Quantity<RuleDimension>;
+  readonly decision: Decision<RuleDimension>;
+  readonly unit: string;
+  readonly figure?: Figure | undefined;
+  readonly advisory: boolean;
+  readonly limit: string;
+}
+
+const stateOf = (held: Held, assessment: Assessment<RuleDimension>): State => {
+  if (!assessment.fit) return 'no-statement';
+  const breach = assessment.complies === false && held.fact.cannotSupportBreach !== undefined;
+  return breach ? 'no-statement' : assessment.assessment;
+};
+
+const ending = (held: Held, assessment: Assessment<RuleDimension>, state: State): string => {
+  if (state !== 'no-statement') return `: ${WORDS[assessment.assessment]}.`;
+  if (!assessment.fit) return `: ${UNFIT}.`;
+  return `: no statement, since ${held.fact.cannotSupportBreach ?? 'the reading cannot support one'}.`;
+};
+
+/** One number held against one window, by the decision room; the words come from its numbers. */
+export const heldNumber = (held: Held): PositionResult => {
+  const { fact, decision, position, unit } = held;
+  const assessment = assess(decision, {
+    value: held.compared,
+    standardUncertainty: fact.standardUncertainty,
+    degreesOfFreedom: fact.degreesOfFreedom,
+  });
+  const bounds = [decision.limits.min, decision.limits.max];
+  const places = Math.max(
+    ...bounds.map((bound) => (bound === undefined ? 0 : decimalsOf(convert(bound, unit).text))),
+  );
+  const shown = convert(held.compared, unit);
+  const value = readable(shown, Math.min(places, 7));
+  const state = stateOf(held, assessment);
+  const silent = state === 'no-statement' || (held.advisory && assessment.complies === false);
+  const spread = fact.standardUncertainty > 0;
+  const uncertainty: Written = {
+    text: formatWidth(shown.dimension, assessment.expandedUncertainty, unit, places + 1),
+    unit,
+  };
+  const figure = held.figure === undefined ? '' : `${held.figure} `;
+  const reach = spread ? ` ± ${writtenWords(uncertainty)}` : '';
+  return {
+    position: position.key,
+    state,
+    pass: silent ? null : assessment.complies,
+    fit: assessment.fit,
+    figure: held.figure,
+    value,
+    exact: { text: shown.text, unit: shown.unit },
+    ...(spread ? { uncertainty } : {}),
+    sentence: `${position.label}: ${figure}${writtenWords(value)}${reach}; ${held.limit}${ending(held, assessment, state)}`,
+    rule: assessment.sentence,
+  };
+};
+
+/** A position without a number: never measured, or tried and out of reach. */
+export const missingAt = (position: Position, outOfReach: boolean): PositionResult => ({
+  position: position.key,
+  state: outOfReach ? 'could-not-be-reached' : 'not-measured',
+  pass: null,
+  fit: null,
+  sentence: `${position.label}: ${outOfReach ? 'could not be reached' : 'not measured'}.`,
+});

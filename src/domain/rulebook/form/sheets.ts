@@ -1,0 +1,84 @@
+import type { Clause } from '../clause';
+import { getQuantityEntry, type Per, type QuantityName, type Source } from '../quantity-catalogue';
+import type { SheetKind } from '../requirement';
+import type { SheetColumn, SheetForm } from './form';
+
+const SHEETS: Readonly<Record<Source, { readonly sheet: SheetKind; readonly title: string }>> = {
+  'lifter-sheet': { sheet: 'lifters', title: 'Lifter sheet, one row per bore' },
+  'engine-sheet': { sheet: 'engine', title: 'Build sheet' },
+  'cam-sheet': { sheet: 'camshaft', title: 'Cam card' },
+  'weight-sheet': { sheet: 'weights', title: 'Weights' },
+};
+
+/** What a builder writes down so that the quantity can be worked out. */
+const MEASURED: Partial<Record<QuantityName, readonly QuantityName[]>> = {
+  'foot-less-body': ['lifter-body-diameter', 'foot-diameter'],
+  'tappet-clearance': ['lifter-body-diameter', 'tappet-bore-diameter'],
+  'bore-out-of-round': ['tappet-bore-diameter'],
+  'bore-taper': ['tappet-bore-diameter'],
+};
+
+interface Needed {
+  readonly source: Source;
+  readonly per: Per;
+  readonly columns: Map<QuantityName, Set<string>>;
+}
+
+/** A lifter is written in the row of its bore. */
+const rowOf = (per: Per): Per => (per === 'lifter' ? 'bore' : per);
+
+const needed = (clauses: readonly Clause[]): readonly Needed[] => {
+  const sheets = new Map<string, Needed>();
+  for (const { number, requirement: rule } of clauses) {
+    if (rule?.kind !== 'limit' && rule?.kind !== 'reference-average') continue;
+    if (rule.per === 'engine' || rule.per === 'car') continue;
+    const { source } = getQuantityEntry(rule.quantity);
+    const per = rowOf(rule.per);
+    const key = `${source} ${per}`;
+    const sheet = sheets.get(key) ?? { source, per, columns: new Map() };
+    sheets.set(key, sheet);
+    for (const quantity of MEASURED[rule.quantity] ?? [rule.quantity]) {
+      sheet.columns.set(quantity, (sheet.columns.get(quantity) ?? new Set()).add(number));
+    }
+  }
+  return [...sheets.values()];
+};
+
+const column = (quantity: QuantityName, clauses: ReadonlySet<string>): SheetColumn => {
+  const { label, unit } = getQuantityEntry(quantity);
+  return { quantity, label, unit, clauses: [...clauses] };
+};
+
+/** Sheets by what limits need per bore, lifter or cylinder, and those that a clause asks by name. */
+export const sheetsFrom = (clauses: readonly Clause[]): readonly SheetForm[] => {
+  const asked = clauses.flatMap(({ number, requirement }) =>
+    requirement?.kind === 'sheet' ? [{ number, ...requirement }] : [],
+  );
+  const worked = needed(clauses).map(({ source, per, columns }): SheetForm => {
+    const { sheet, title } = SHEETS[source];
+    const named = asked.filter((row) => row.sheet === sheet);
+    const numbers = [...columns.values()].flatMap((set) => [...set]);
+    return {
+      sheet,
+      subject: named[0]?.subject ?? source,
+      title: named[0]?.title ?? title,
+      per,
+      columns: [...columns].map(([quantity, set]) => column(quantity, set)),
+      clauses: [...new Set([...named.map((row) => row.number), ...numbers])],
+    };
+  });
+  const covered = new Set(worked.map((form) => form.sheet));
+  const files = asked
+    .filter((row) => row.sheet === 'other' || !covered.has(row.sheet))
+    .map(
+      (row): SheetForm => ({
+        sheet: row.sheet,
+        subject: row.subject,
+        title: row.title,
+        per: 'engine',
+        columns: [],
+        clauses: [row.number],
+      }),
+    );
+  return [...worked, ...files];
+};
