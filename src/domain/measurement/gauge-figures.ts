@@ -1,40 +1,41 @@
 import { baseNumber } from '../quantity/convert';
 import { getUnit } from '../quantity/find-unit';
-import { toNumber } from '../quantity/rational';
+import { fromDecimalText, mul, type Rational, toNumber, zero } from '../quantity/rational';
 import type { Gauge, GaugeKind } from './gauge';
 import { ofDivision, rectangular, type UncertaintyComponent } from './uncertainty';
 
-const INCH = toNumber(getUnit('length', 'in').factor);
+type Scaled = Exclude<GaugeKind, 'scale' | 'other'>;
 
 /**
  * Half-widths of error in inches where there is no certificate. Common practice, not a published value:
- * a 0–1 in micrometer of 0.0001 in holds one division; a dial bore gauge over the few thousandths between
- * zero and reading holds half a division; a telescoping gauge can be off by 0.001 in, a caliper too.
+ * a 0–1 in micrometer of 0.0001 in checked on its standard holds half a division, and so does a dial bore
+ * gauge over the few thousandths between zero and reading; a telescoping gauge can be off by 0.001 in, a caliper too.
  */
-const HALF_WIDTH_IN: Readonly<Record<Exclude<GaugeKind, 'scale' | 'other'>, number>> = {
-  micrometer: 0.0001,
-  'dial-bore-gauge': 0.00005,
-  'telescoping-gauge': 0.001,
-  caliper: 0.001,
-  'setting-ring': 0.00005,
-  'plug-gauge': 0.00005,
+const HALF_WIDTHS: Readonly<Record<Scaled, string>> = {
+  micrometer: '0.00005',
+  'dial-bore-gauge': '0.00005',
+  'telescoping-gauge': '0.001',
+  caliper: '0.001',
+  'setting-ring': '0.00005',
+  'plug-gauge': '0.00005',
 };
 
 /** Division in inches where none is stated. Common practice. */
-const DIVISION_IN: Readonly<Record<Exclude<GaugeKind, 'scale' | 'other'>, number>> = {
-  micrometer: 0.0001,
-  'dial-bore-gauge': 0.0001,
-  'telescoping-gauge': 0.0001,
-  caliper: 0.001,
-  'setting-ring': 0,
-  'plug-gauge': 0,
+const DIVISIONS: Readonly<Record<Scaled, string>> = {
+  micrometer: '0.0001',
+  'dial-bore-gauge': '0.0001',
+  'telescoping-gauge': '0.0001',
+  caliper: '0.001',
+  'setting-ring': '0',
+  'plug-gauge': '0',
 };
 
-/** The division in the base; 0 for what is not read off a scale or is not known. */
-export const divisionOf = (gauge: Gauge): number => {
-  if (gauge.division !== undefined) return baseNumber(gauge.division);
-  return gauge.kind === 'scale' || gauge.kind === 'other' ? 0 : DIVISION_IN[gauge.kind] * INCH;
-};
+const inches = (text: string): Rational =>
+  mul(fromDecimalText(text), getUnit('length', 'in').factor);
+
+/** The division in the base, exact; 0 for what is not read off a scale or is not known. */
+export const divisionOf = ({ division, kind }: Gauge): Rational =>
+  division?.value ?? (kind === 'scale' || kind === 'other' ? zero : inches(DIVISIONS[kind]));
 
 /** From the certificate, else from common practice; a scale or another gauge without one: its division. */
 export const calibrationOf = (
@@ -53,14 +54,18 @@ export const calibrationOf = (
   const halfWidth =
     gauge.kind === 'scale' || gauge.kind === 'other'
       ? divisionOf(gauge)
-      : HALF_WIDTH_IN[gauge.kind] * INCH;
-  return { ...common, standardUncertainty: rectangular(halfWidth), degreesOfFreedom: null };
+      : inches(HALF_WIDTHS[gauge.kind]);
+  return {
+    ...common,
+    standardUncertainty: rectangular(toNumber(halfWidth)),
+    degreesOfFreedom: null,
+  };
 };
 
 /** Reading to whole divisions; `readings` is how many independent readings make the result (zero and bore: 2). */
 export const resolutionOf = (gauge: Gauge, words: string, readings = 1): UncertaintyComponent => ({
   name: `division: ${gauge.kind}`,
-  standardUncertainty: ofDivision(divisionOf(gauge)),
+  standardUncertainty: ofDivision(toNumber(divisionOf(gauge))),
   sensitivity: Math.sqrt(readings),
   degreesOfFreedom: null,
   words,

@@ -62,13 +62,13 @@ export const temperatureComponents = (
     standardUncertainty: rectangular(toNumber(warmth.material.halfWidth)),
     sensitivity: -length * toNumber(above20(warmth)),
     degreesOfFreedom: null,
-    words: `how much ${words} expands`,
+    words: `${words}’s expansion`,
   },
   {
     name: `temperature: ${words}`,
     standardUncertainty: rectangular(halfWidth),
     sensitivity: -length * toNumber(warmth.material.coefficient),
     degreesOfFreedom: null,
-    words: `how warm ${words} is`,
+    words: `${words}’s temperature`,
   },
 ];

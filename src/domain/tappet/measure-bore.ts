@@ -1,0 +1,84 @@
+import { type BudgetLine, budgetLines } from '../measurement/budget';
+import { divisionOf } from '../measurement/gauge-figures';
+import { combine } from '../measurement/uncertainty';
+import { quantityOf } from '../quantity/quantity';
+import type { Rational } from '../quantity/rational';
+import type { BoreSheet, Length } from './bore-sheet';
+import { type Clearance, clearanceOf, diametersOf } from './clearance';
+import { clearanceAt20 } from './clearance-at-20';
+import { correctedReadings, driftOf } from './dial';
+import { outOfRound, taperOf } from './form';
+import { missingOf } from './missing';
+import { placesOf } from './places';
+import { mustRedo } from './redo';
+import type { Shape } from './shape';
+import { DIAL, sheetBudget, sheetRepeatability } from './sheet-budget';
+import { warningsOf } from './warnings';
+
+export interface ClearanceFigures {
+  readonly mean: Length;
+  readonly min: Length;
+  readonly max: Length;
+}
+
+/** What one bore's sheet comes to, by docs/definitions.md. Lengths are exact, in the sheet's unit. */
+export interface BoreMeasurement {
+  /** `null` when readings it needs are missing. */
+  readonly clearance: ClearanceFigures | null;
+  readonly clearanceAt20C?: ClearanceFigures;
+  /** `null` where no depth has two axes. */
+  readonly outOfRound: Length | null;
+  /** `null` with fewer than two depths. */
+  readonly taper: {
+    readonly depthMeans: Length;
+    readonly worstAxis: Length;
+    readonly signed: Length;
+    readonly shape: Shape;
+  } | null;
+  readonly drift?: Length;
+  readonly redo: boolean;
+  /** Of a clearance at a place, in metres. */
+  readonly standardUncertainty: number;
+  readonly degreesOfFreedom: number | null;
+  readonly missing: readonly string[];
+  readonly warnings: readonly string[];
+  /** Largest first. */
+  readonly budget: readonly BudgetLine[];
+}
+
+/** From the readings of one bore and its lifter to clearance, form and uncertainty. */
+export const measureBore = (sheet: BoreSheet): BoreMeasurement => {
+  const length = (value: Rational): Length => quantityOf('length', value, sheet.unit);
+  const figures = ({ mean, min, max }: Clearance): ClearanceFigures => ({
+    mean: length(mean),
+    min: length(min),
+    max: length(max),
+  });
+  const places = placesOf(correctedReadings(sheet));
+  const now = diametersOf(sheet, places);
+  const clearance = now && clearanceOf(now.bores, now.lifters);
+  const settled = now && clearanceAt20(sheet, now);
+  const division = divisionOf(sheet.gauge ?? DIAL);
+  const round = outOfRound(places);
+  const taper = taperOf(places, division);
+  const drift = driftOf(sheet.zeros);
+  const redo = mustRedo(sheet.zeros, division, sheet.window?.value);
+  const budget = budgetLines(sheetBudget(sheet, places, now));
+  return {
+    clearance: clearance && figures(clearance),
+    ...(settled && { clearanceAt20C: figures(settled) }),
+    outOfRound: round && length(round),
+    taper: taper && {
+      depthMeans: length(taper.depthMeans),
+      worstAxis: length(taper.worstAxis),
+      signed: length(taper.signed),
+      shape: taper.shape,
+    },
+    ...(drift && { drift: length(drift) }),
+    redo,
+    ...combine(budget),
+    missing: missingOf(sheet),
+    warnings: warningsOf(sheet, clearance, sheetRepeatability(sheet, places), redo),
+    budget,
+  };
+};
