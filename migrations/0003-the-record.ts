@@ -102,27 +102,42 @@ create function append.open_ledger(p_series uuid) returns void
 language sql security definer set search_path = pg_catalog, pg_temp as $fn$
   insert into record.ledger_head (series_id) values (p_series) on conflict do nothing
 $fn$`);
-    // RFC 9162 section 2.1: leaf = SHA-256(0x00 || data), node = SHA-256(0x01 || left || right).
-    // The row lock on the head orders the lines; being the last write of a transaction, it is held
-    // through the commit only.
+    // A line names its own number, so the number is asked for first. The row lock on the head orders
+    // the lines; being taken by the last writes of a transaction, it is held through the commit only.
     this.addSql(`
-create function append.ledger_line(
-  p_series uuid, p_kind text, p_line text, p_act uuid, p_contents jsonb
-) returns bigint
+create function append.next_line(p_series uuid) returns bigint
 language plpgsql security definer set search_path = pg_catalog, pg_temp as $fn$
-declare
-  v_index bigint; v_hash bytea; v_left bytea; v_at bigint; v_level smallint := 0;
+declare v_size bigint;
 begin
-  update record.ledger_head set size = size + 1 where series_id = p_series
-  returning size - 1 into v_index;
-  if v_index is null then
+  select size into v_size from record.ledger_head where series_id = p_series for update;
+  if v_size is null then
     raise exception 'series % has no ledger', p_series using errcode = '23503';
   end if;
-  v_hash := sha256('\\x00'::bytea || convert_to(p_line, 'UTF8'));
+  return v_size;
+end $fn$`);
+    // RFC 9162 section 2.1: leaf = SHA-256(0x00 || data), node = SHA-256(0x01 || left || right).
+    this.addSql(`
+create function append.ledger_line(
+  p_series uuid, p_index bigint, p_kind text, p_line text, p_act uuid, p_contents jsonb
+) returns bytea
+language plpgsql security definer set search_path = pg_catalog, pg_temp as $fn$
+declare
+  v_leaf bytea := sha256('\\x00'::bytea || convert_to(p_line, 'UTF8'));
+  v_hash bytea := v_leaf; v_left bytea; v_at bigint := p_index; v_level smallint := 0;
+begin
+  if (p_line::jsonb ->> 'series') is distinct from p_series::text
+     or (p_line::jsonb ->> 'index') is distinct from p_index::text
+     or (p_line::jsonb ->> 'kind') is distinct from p_kind then
+    raise exception 'the line does not say series %, index %, kind %', p_series, p_index, p_kind
+      using errcode = '22023';
+  end if;
+  update record.ledger_head set size = size + 1 where series_id = p_series and size = p_index;
+  if not found then
+    raise exception 'line % of series % is not the next one', p_index, p_series using errcode = '40001';
+  end if;
   insert into record.ledger_line (series_id, index, kind, line, leaf_hash, act_id)
-  values (p_series, v_index, p_kind, p_line, v_hash, p_act);
-  insert into record.ledger_node values (p_series, 0, v_index, v_hash);
-  v_at := v_index;
+  values (p_series, p_index, p_kind, p_line, v_leaf, p_act);
+  insert into record.ledger_node values (p_series, 0, p_index, v_leaf);
   while v_at % 2 = 1 loop
     select hash into strict v_left from record.ledger_node
     where series_id = p_series and level = v_level and index = v_at - 1;
@@ -132,9 +147,9 @@ begin
     insert into record.ledger_node values (p_series, v_level, v_at, v_hash);
   end loop;
   insert into record.ledger_content (series_id, line_index, role, open, salt, content)
-  select p_series, v_index, c.role, c.open, c.salt, c.content
+  select p_series, p_index, c.role, c.open, c.salt, c.content
   from jsonb_populate_recordset(null::record.ledger_content, p_contents) c;
-  return v_index;
+  return v_leaf;
 end $fn$`);
     this.addSql(appendFunction('checkpoint', ['series_id', 'size', 'root', 'note']));
   }

@@ -1,0 +1,23 @@
+import { randomBytes } from 'node:crypto';
+import type { Clock, Random } from '@/services/ports';
+
+export const systemClock: Clock = { now: () => new Date() };
+
+export const systemRandom: Random = {
+  bytes: (length) => randomBytes(length),
+  uuid: () => {
+    // RFC 9562 section 5.7: 48 bits of Unix milliseconds, version, random bits.
+    const bytes = randomBytes(16);
+    bytes.writeUIntBE(Date.now(), 0, 6);
+    bytes.writeUInt8((bytes.readUInt8(6) & 0x0f) | 0x70, 6);
+    bytes.writeUInt8((bytes.readUInt8(8) & 0x3f) | 0x80, 8);
+    const hex = bytes.toString('hex');
+    return [
+      hex.slice(0, 8),
+      hex.slice(8, 12),
+      hex.slice(12, 16),
+      hex.slice(16, 20),
+      hex.slice(20),
+    ].join('-');
+  },
+};

@@ -1,0 +1,46 @@
+import { Entry } from './event/entry';
+import { Event } from './event/event';
+import { GaugeRow } from './event/gauge';
+import { Inspection } from './event/inspection';
+import { NoticeCounter } from './event/notice-counter';
+import { VerdictDraft } from './event/verdict-draft';
+import { Car } from './paperwork/car';
+import { Engine } from './paperwork/engine';
+import { KeptFile } from './paperwork/file';
+import { Paperwork } from './paperwork/paperwork';
+import { Identity } from './people/identity';
+import { Invitation } from './people/invitation';
+import { Mail } from './people/mail';
+import { Membership } from './people/membership';
+import { Person } from './people/person';
+import { Session } from './people/session';
+import { SignInLink } from './people/sign-in-link';
+import { RaceClass } from './series/race-class';
+import { RulebookDraft } from './series/rulebook-draft';
+import { Season } from './series/season';
+import { Series } from './series/series';
+
+/** Every mapped table, listed: nothing is discovered. */
+export const entities = [
+  Person,
+  Identity,
+  Session,
+  SignInLink,
+  Series,
+  Membership,
+  Invitation,
+  Mail,
+  Season,
+  RaceClass,
+  RulebookDraft,
+  Car,
+  Engine,
+  Paperwork,
+  KeptFile,
+  Event,
+  Entry,
+  GaugeRow,
+  Inspection,
+  VerdictDraft,
+  NoticeCounter,
+];

@@ -1,0 +1,19 @@
+import { defineEntity, type InferEntity } from '@mikro-orm/core';
+
+export const Engine = defineEntity({
+  name: 'Engine',
+  tableName: 'engine',
+  properties: (p) => ({
+    id: p.uuid().primary(),
+    ownerId: p.uuid(),
+    reference: p.text(),
+    layout: p.json<Record<string, unknown>>(),
+    blockCasting: p.text(),
+    headCastings: p.text(),
+    serial: p.text(),
+    version: p.integer().version(),
+    createdAt: p.datetime(),
+  }),
+});
+
+export type Engine = InferEntity<typeof Engine>;

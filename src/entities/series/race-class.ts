@@ -1,0 +1,15 @@
+import { defineEntity, type InferEntity } from '@mikro-orm/core';
+
+export const RaceClass = defineEntity({
+  name: 'RaceClass',
+  tableName: 'class',
+  properties: (p) => ({
+    seriesId: p.uuid().primary(),
+    id: p.uuid().primary(),
+    seasonId: p.uuid(),
+    slug: p.text(),
+    name: p.text(),
+  }),
+});
+
+export type RaceClass = InferEntity<typeof RaceClass>;

@@ -1,0 +1,78 @@
+import type { EntityManager } from '@mikro-orm/postgresql';
+import { toHex, utf8 } from '@/domain/ledger/bytes';
+import { commit, SALT_LENGTH } from '@/domain/ledger/commitment';
+import { lineText } from '@/domain/ledger/line';
+import type { LineKind } from '@/domain/ledger/line-kind';
+import type { Random } from '../ports';
+
+/** Tables of the record; each has an append function of the same name and takes rows in its columns' names. */
+export type AppendTable =
+  | 'rule_publication'
+  | 'paperwork_version'
+  | 'paperwork_decision'
+  | 'capture_batch'
+  | 'zero'
+  | 'reading'
+  | 'remark'
+  | 'report'
+  | 'verdict'
+  | 'notice_pdf';
+
+export interface NewLedgerLine {
+  readonly seriesId: string;
+  readonly kind: LineKind;
+  /**
+   * What the line commits to, by role. `open` content may be shown to everybody beside its salt;
+   * the rest is shown to the parties only.
+   */
+  readonly contents: Readonly<Record<string, { readonly text: string; readonly open: boolean }>>;
+  /** Hashes, ids, line numbers and instants; never a name. */
+  readonly refs?: Readonly<Record<string, string>>;
+}
+
+/** Bytes as PostgreSQL reads them out of JSON. */
+export const hexBytes = (row: Readonly<Record<string, unknown>>): Record<string, unknown> =>
+  Object.fromEntries(
+    Object.entries(row).map(([column, value]) => [
+      column,
+      value instanceof Uint8Array ? `\\x${toHex(value)}` : value,
+    ]),
+  );
+
+/** Appends one line to the series' ledger. The last write of its transaction. */
+export const writeLine = async (
+  em: EntityManager,
+  random: Random,
+  act: string,
+  at: Date,
+  line: NewLedgerLine,
+): Promise<number> => {
+  const contents = Object.entries(line.contents).map(([role, { text, open }]) => {
+    const salt = random.bytes(SALT_LENGTH);
+    return { role, open, salt, content: text, commitment: toHex(commit(salt, utf8(text))) };
+  });
+  const [next] = await em.execute<{ index: string }[]>('select append.next_line(?) as index', [
+    line.seriesId,
+  ]);
+  const index = Number(next?.index);
+  const text = lineText({
+    series: line.seriesId,
+    index,
+    kind: line.kind,
+    at: at.toISOString(),
+    act,
+    commitments: Object.fromEntries(contents.map((c) => [c.role, c.commitment])),
+    refs: line.refs ?? {},
+  });
+  await em.execute('select append.ledger_line(?, ?, ?, ?, ?, ?::jsonb)', [
+    line.seriesId,
+    index,
+    line.kind,
+    text,
+    act,
+    JSON.stringify(
+      contents.map(({ role, open, salt, content }) => hexBytes({ role, open, salt, content })),
+    ),
+  ]);
+  return index;
+};

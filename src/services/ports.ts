@@ -1,0 +1,115 @@
+import type { EntityManager } from '@mikro-orm/postgresql';
+
+/** What the use cases need of the world. Each one names its own share: `Pick<Ports, 'db' | 'clock'>`. */
+export interface Ports {
+  /** A forked entity manager; one a request or job. */
+  readonly db: EntityManager;
+  readonly clock: Clock;
+  readonly random: Random;
+  readonly jobs: Jobs;
+  readonly objects: Objects;
+  readonly images: Images;
+  readonly mailer: Mailer;
+  readonly notices: NoticePrinter;
+  readonly site: Site;
+}
+
+export interface Clock {
+  now(): Date;
+}
+
+export interface Random {
+  /** UUID version 7 (RFC 9562) of the clock's instant. */
+  uuid(): string;
+  bytes(length: number): Uint8Array;
+}
+
+/** Where this installation is reached, and how it signs itself. */
+export interface Site {
+  /** Origin without a trailing slash. */
+  readonly publicUrl: string;
+  readonly mailFrom: string;
+}
+
+export interface JobPayloads {
+  readonly 'send-mail': { readonly mailId: string };
+  readonly 'make-previews': { readonly seriesId: string; readonly fileId: string };
+  readonly 'render-notice': { readonly seriesId: string; readonly verdictId: string };
+  readonly 'sign-checkpoint': { readonly seriesId: string };
+  readonly 'sweep-uploads': Record<string, never>;
+}
+
+export interface Jobs {
+  /** Sends on the connection of the running transaction of `em`, so that the job exists only if the act does. */
+  send<Q extends keyof JobPayloads>(
+    em: EntityManager,
+    queue: Q,
+    data: JobPayloads[Q],
+  ): Promise<void>;
+}
+
+export interface ObjectHead {
+  readonly bytes: number;
+}
+
+/** The object store. Keys are content-addressed once a file counts. */
+export interface Objects {
+  /** A URL to which the browser may PUT exactly these bytes' length and type, for a few minutes. */
+  presignPut(key: string, type: string, bytes: number): Promise<string>;
+  /** Nothing if there is no such object. */
+  findHead(key: string): Promise<ObjectHead | undefined>;
+  /** The whole object; refuses (throws) beyond `limit` bytes. */
+  read(key: string, limit: number): Promise<Uint8Array>;
+  write(key: string, body: Uint8Array, type: string): Promise<void>;
+  remove(key: string): Promise<void>;
+}
+
+export interface ImageFacts {
+  readonly type: 'image/jpeg' | 'image/png' | 'image/webp';
+  readonly width: number;
+  readonly height: number;
+}
+
+export interface Preview {
+  readonly width: number;
+  readonly bytes: Uint8Array;
+}
+
+export interface Images {
+  /** Facts of a JPEG, PNG or WebP by its content; nothing for anything else or a damaged one. */
+  findFacts(bytes: Uint8Array): Promise<ImageFacts | undefined>;
+  /** JPEG previews without any metadata, one for each width. */
+  previews(bytes: Uint8Array, widths: readonly number[]): Promise<readonly Preview[]>;
+}
+
+export interface OutgoingMail {
+  readonly to: string;
+  readonly from: string;
+  readonly subject: string;
+  readonly text: string;
+  readonly html: string;
+  readonly messageId: string;
+  readonly attachments: readonly {
+    readonly name: string;
+    readonly type: string;
+    readonly bytes: Uint8Array;
+  }[];
+}
+
+export interface Mailer {
+  send(mail: OutgoingMail): Promise<void>;
+}
+
+export interface NoticePrinter {
+  /** The same notice gives the same bytes. */
+  print(input: PrintedNotice): Promise<Uint8Array>;
+}
+
+export interface PrintedNotice {
+  /** The canonical JSON of the notice document. */
+  readonly notice: string;
+  readonly noticeHash: string;
+  readonly ledgerLine: string;
+  readonly verifyUrl: string;
+  readonly attachments: readonly { readonly name: string; readonly bytes: Uint8Array }[];
+}
