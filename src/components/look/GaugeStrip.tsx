@@ -1,8 +1,8 @@
 import { paint } from './paint';
 import { displayNumber } from './ReadingValue';
 import { type Status, statusWord } from './status';
-import { measures, type StripSize } from './strip/measures';
-import { Hatch, type Labelled, Limit, Line, Reading } from './strip/parts';
+import { labelWidth, measures, NARROWEST, type StripSize } from './strip/measures';
+import { Hatch, Label, type Labelled, Limit, Line, Reading } from './strip/parts';
 import { type Guard, guardBands, stripScale } from './strip/scale';
 
 export interface GaugeStripProps {
@@ -46,13 +46,12 @@ export const GaugeStrip = (props: GaugeStripProps) => {
   const isPrint = size === 'print';
   const values = { min: min?.value, max: max?.value, reading: reading?.value, uncertainty, guard };
   const scale = stripScale(values);
-  const apart = (a: Labelled | undefined, b: Labelled | undefined) =>
-    a === undefined || b === undefined
-      ? Number.POSITIVE_INFINITY
-      : (Math.abs(scale.at(a.value) - scale.at(b.value)) / 100) * m.nominal -
-        ((a.label.length + b.label.length) / 2) * m.font * 0.62;
-  const crowded = apart(min, max) < 12;
-  const labelled = isPrint && apart(reading, min) > 8 && apart(reading, max) > 8;
+  const clear = (a: Labelled | undefined, b: Labelled | undefined) =>
+    a === undefined ||
+    b === undefined ||
+    (Math.abs(scale.at(a.value) - scale.at(b.value)) / 100) * NARROWEST >
+      (labelWidth(a.label, m) + labelWidth(b.label, m)) / 2 + 8;
+  const limitsClear = clear(min, max);
   const common = { m, scale };
   return (
     <svg
@@ -68,21 +67,16 @@ export const GaugeStrip = (props: GaugeStripProps) => {
       ))}
       <Line {...common} tick={isPrint ? paint.ink : paint.edge} />
       {min !== undefined && (
-        <Limit
-          {...common}
-          side="min"
-          limit={min}
-          word={outsideWord}
-          anchor={crowded ? 'end' : undefined}
-        />
+        <Limit {...common} side="min" limit={min} word={outsideWord} labelled={limitsClear} />
       )}
       {max !== undefined && (
-        <Limit
-          {...common}
-          side="max"
-          limit={max}
-          word={outsideWord}
-          anchor={crowded ? 'start' : undefined}
+        <Limit {...common} side="max" limit={max} word={outsideWord} labelled={limitsClear} />
+      )}
+      {!limitsClear && m.font > 0 && min !== undefined && max !== undefined && (
+        <Label
+          m={m}
+          place={(scale.at(min.value) + scale.at(max.value)) / 2}
+          label={`${min.label}, ${max.label}`}
         />
       )}
       {reading !== undefined && (
@@ -91,7 +85,7 @@ export const GaugeStrip = (props: GaugeStripProps) => {
           reading={reading}
           uncertainty={uncertainty}
           ink={isPrint ? paint.ink : paint.marking}
-          labelled={labelled}
+          labelled={isPrint && clear(reading, min) && clear(reading, max)}
           settle={settle}
         />
       )}

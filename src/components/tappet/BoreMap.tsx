@@ -1,11 +1,12 @@
 import type { KeyboardEvent } from 'react';
+import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
 import { face, paint } from '../look/paint';
 import { displayNumber } from '../look/ReadingValue';
 import { type Status, statusWord } from '../look/status';
-import { BoreShape, ValveLetter } from './BoreShape';
-import { MapGround } from './MapGround';
-import { type BorePlan, neighbour, type PlacedBore, placeBores } from './plan';
-import { frames, project, projectBox, stepOfKey, type View } from './projection';
+import { BoreShape, ValveLetter } from './map/BoreShape';
+import { MapGround } from './map/MapGround';
+import { neighbour, type PlacedBore, placeBores, planOf } from './map/plan';
+import { frames, project, projectBox, stepOfKey, type View } from './map/projection';
 
 /** What one bore carries on the map. */
 export interface BoreState {
@@ -15,8 +16,8 @@ export interface BoreState {
 }
 
 export interface BoreMapProps {
-  readonly plan: BorePlan;
-  /** By bore key; a bore that is missing here counts as not measured. */
+  readonly layout: BoreLayout;
+  /** By bore name, "5 exhaust"; a bore that is missing here counts as not measured. */
   readonly bores: Readonly<Record<string, BoreState>>;
   readonly view: View;
   /** Unit of every value on the map: "0.001 in". */
@@ -32,22 +33,19 @@ export interface BoreMapProps {
 }
 
 /** "5 exhaust, too close to call, 1.8 thousandths". */
-export const boreName = (
-  bore: { readonly cylinder: string; readonly valve: string },
-  state: BoreState,
-  unit = '',
-): string => {
+export const boreSentence = (name: string, state: BoreState, unit = ''): string => {
   const value =
     state.value === undefined ? '' : `, ${displayNumber(state.value)} ${unit}`.trimEnd();
-  return `${bore.cylinder} ${bore.valve}, ${statusWord[state.status]}${value}`;
+  return `${name}, ${statusWord[state.status]}${value}`;
 };
 
 const nothing: BoreState = { status: 'not-measured' };
 
 /** The engine's tappet bores in plan view, each with its mark and value. Second signature of the look. */
 export const BoreMap = (props: BoreMapProps) => {
-  const { plan, bores: states, view, unit, unitAloud = unit, current, onSelect, hrefs } = props;
+  const { layout, bores: states, view, unit, unitAloud = unit, current, onSelect, hrefs } = props;
   const frame = frames[view];
+  const plan = planOf(layout);
   const placed = placeBores(plan, frame.length);
   const radiusOf = (bore: PlacedBore) => Math.min(frame.radius, bore.pitch * 0.44);
   const stateOf = (bore: PlacedBore) => states[bore.key] ?? nothing;
@@ -65,7 +63,7 @@ export const BoreMap = (props: BoreMapProps) => {
   };
 
   const target = (bore: PlacedBore) => {
-    const name = boreName(bore, stateOf(bore), unitAloud);
+    const name = boreSentence(bore.key, stateOf(bore), unitAloud);
     const href = hrefs?.[bore.key];
     const isCurrent = bore.key === current;
     if (href !== undefined)
@@ -105,12 +103,12 @@ export const BoreMap = (props: BoreMapProps) => {
   const label =
     props.label ?? `Bore map, ${view === 'front-up' ? 'front at the top' : 'front at the left'}`;
   const summary = isStatic
-    ? `${label}: ${placed.bores.map((bore) => boreName(bore, stateOf(bore), unitAloud)).join('; ')}`
+    ? `${label}: ${placed.bores.map((bore) => boreSentence(bore.key, stateOf(bore), unitAloud)).join('; ')}`
     : label;
 
   return (
     <svg
-      className={`bore-map ${props.className ?? ''}`.trim()}
+      className={`bore-map bore-map-${view} ${props.className ?? ''}`.trim()}
       viewBox={`0 0 ${frame.width} ${frame.height}`}
       role={isStatic ? 'img' : 'group'}
       aria-label={summary}
@@ -150,7 +148,8 @@ export const BoreMap = (props: BoreMapProps) => {
                 {...letter}
                 size={frame.fonts.letter}
                 valve={bore.valve}
-                current={isCurrent}
+                strong={isCurrent}
+                ink={isCurrent ? paint.marking : paint.ink2}
               />
               {frame.fonts.value > 0 && state.value !== undefined && (
                 <text

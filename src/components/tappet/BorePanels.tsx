@@ -1,9 +1,26 @@
+import type { Valve } from '@/domain/tappet/layout/bore-layout';
 import { GaugeStrip, type GaugeStripProps } from '../look/GaugeStrip';
+import { face, paint } from '../look/paint';
 import { displayNumber } from '../look/ReadingValue';
+import { ValveLetter } from './map/BoreShape';
+
+/** "5 E", its I with serifs. */
+const BoreSign = ({ cylinder, valve }: Pick<BoreHeaderProps, 'cylinder' | 'valve'>) => {
+  const digits = cylinder.length * 30;
+  const width = digits + 40;
+  return (
+    <svg width={width} height="38" viewBox={`0 0 ${width} 38`} aria-hidden="true">
+      <text x="0" y="36" fontSize="46" fontFamily={face.num} fontWeight="700" fill={paint.ink}>
+        {cylinder}
+      </text>
+      <ValveLetter x={digits + 24} y={18.9} size={46} valve={valve} strong ink={paint.ink} />
+    </svg>
+  );
+};
 
 interface BoreHeaderProps {
   readonly cylinder: string;
-  readonly valve: 'intake' | 'exhaust';
+  readonly valve: Valve;
   readonly clause: string;
   readonly heading: string;
   /** "min 0.0013 in, max 0.0019 in". */
@@ -15,9 +32,7 @@ interface BoreHeaderProps {
 export const BoreHeader = (props: BoreHeaderProps) => (
   <div className="bore-head">
     <h2 className="bore-name">
-      <span aria-hidden="true">
-        {props.cylinder} {props.valve === 'intake' ? 'I' : 'E'}
-      </span>
+      <BoreSign cylinder={props.cylinder} valve={props.valve} />
       <span className="visually-hidden">{`Bore ${props.cylinder} `}</span>
       <span className="note">{props.valve}</span>
     </h2>

@@ -71,7 +71,7 @@ export const Keypad = (props: KeypadProps) => {
         <button className="key" aria-label="Decimal point" {...press('point')}>
           {decimal}
         </button>
-        <button className="key key-tall" aria-label="Erase the last digit" {...press('erase')}>
+        <button className="key" aria-label="Erase the last digit" {...press('erase')}>
           <svg width="40" height="28" viewBox="0 0 40 28" aria-hidden="true">
             <path
               d="M13 2h25v24H13L2 14zM18 9l10 10M28 9L18 19"
@@ -81,7 +81,7 @@ export const Keypad = (props: KeypadProps) => {
             />
           </svg>
         </button>
-        <button className="key key-enter key-tall" {...press('enter')}>
+        <button className="key key-enter" {...press('enter')}>
           Enter
           {enterHint !== undefined && <small>{enterHint}</small>}
         </button>

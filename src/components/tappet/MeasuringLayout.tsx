@@ -5,7 +5,12 @@ import { BoreMap, type BoreMapProps } from './BoreMap';
 interface MeasuringLayoutProps {
   readonly carNumber: string;
   /** Cells of the top bar: "Engine" over "VR-2231". */
-  readonly facts: readonly { readonly name: string; readonly value: string }[];
+  readonly facts: readonly {
+    readonly name: string;
+    readonly value: string;
+    /** Goes first when the bar is too narrow. */
+    readonly minor?: boolean;
+  }[];
   readonly saved: ReactNode;
   readonly map: ReactNode;
   readonly tally: ReactNode;
@@ -22,7 +27,7 @@ export const MeasuringLayout = (props: MeasuringLayoutProps) => (
     <header className="bar measuring-bar">
       <CarPlate number={props.carNumber} size="bar" />
       {props.facts.map((fact) => (
-        <div className="bar-cell" key={fact.name}>
+        <div className={fact.minor ? 'bar-cell minor' : 'bar-cell'} key={fact.name}>
           <span>{fact.name}</span>
           <span>{fact.value}</span>
         </div>

@@ -1,9 +1,12 @@
+import type { Valve } from '@/domain/tappet/layout/bore-layout';
 import { face, paint } from '../look/paint';
+import { ValveLetter } from './map/BoreShape';
 
 export interface RunStop {
+  /** The bore's name in the domain: "5 exhaust". */
   readonly key: string;
-  /** "5 E". */
-  readonly label: string;
+  readonly cylinder: string;
+  readonly valve: Valve;
 }
 
 export interface RunLineProps {
@@ -61,8 +64,8 @@ const Post = ({ x, taken }: { readonly x: string; readonly taken: boolean }) => 
 );
 
 const sentence = ({ opening, stops, current, closing }: RunLineProps): string => {
-  const names = stops.map((stop) => stop.label).join(', ');
-  const at = stops.find((stop) => stop.key === current)?.label;
+  const names = stops.map((stop) => stop.key).join(', ');
+  const at = stops.find((stop) => stop.key === current)?.key;
   return [
     opening === undefined ? 'Opening zero not taken' : `Opening zero ${opening}`,
     `bores ${names}`,
@@ -127,9 +130,27 @@ export const RunLine = (props: RunLineProps) => {
               />
             )}
             {written(index) && (
-              <Text x={x} y={60} current={index === at} faint={index > done}>
-                {stop.label}
-              </Text>
+              <svg
+                x={x}
+                y="60"
+                width="1"
+                height="1"
+                overflow="visible"
+                aria-hidden="true"
+                className={index % 2 === 1 && index !== at ? 'odd' : undefined}
+              >
+                <Text x="-7" y={0} current={index === at} faint={index > done}>
+                  {stop.cylinder}
+                </Text>
+                <ValveLetter
+                  x={8}
+                  y={-6}
+                  size={16}
+                  valve={stop.valve}
+                  strong={index === at}
+                  ink={index === at ? paint.marking : index > done ? paint.ink2 : paint.ink}
+                />
+              </svg>
             )}
           </g>
         );

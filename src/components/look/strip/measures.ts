@@ -82,6 +82,12 @@ export const measures: Readonly<Record<StripSize, Measures>> = {
   },
 };
 
+/** The narrowest column a labelled strip is expected in, in px. */
+export const NARROWEST = 328;
+
+/** Width of a label in px: B612's digits are 0.65 em wide, its letters less. */
+export const labelWidth = (label: string, m: Measures): number => label.length * m.font * 0.62;
+
 /** Half-width of the diamond: smaller than U on the line, else the whiskers vanish behind it. */
 export const diamondHalf = (m: Measures, uncertaintyPx: number): number =>
   uncertaintyPx <= 0 ? m.diamond : Math.max(3, Math.min(m.diamond, uncertaintyPx * 0.55));

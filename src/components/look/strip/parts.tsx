@@ -1,5 +1,5 @@
 import { face, paint } from '../paint';
-import { diamondHalf, hatchPath, type Measures } from './measures';
+import { diamondHalf, hatchPath, labelWidth, type Measures, NARROWEST } from './measures';
 import type { Scale } from './scale';
 
 export interface Labelled {
@@ -15,31 +15,31 @@ interface PartProps {
 
 const pct = (place: number) => `${place}%`;
 
-/** Keeps a label inside the drawing: at the ends it hangs to the inner side. */
-const anchorAt = (place: number, label: string, m: Measures): 'start' | 'middle' | 'end' => {
-  const half = (label.length * m.font * 0.62) / 2 / (m.nominal / 100);
-  if (place < half) return 'start';
-  return place > 100 - half ? 'end' : 'middle';
+/** Shift in px that keeps a centred label inside the drawing, however narrow its column. */
+const inward = (place: number, label: string, m: Measures): number => {
+  const half = labelWidth(label, m) / 2;
+  const left = (place / 100) * NARROWEST;
+  const right = NARROWEST - left;
+  return Math.round(Math.max(0, half - left) - Math.max(0, half - right));
 };
 
-const Label = ({
+export const Label = ({
   place,
   label,
   m,
-  anchor = anchorAt(place, label, m),
 }: {
   readonly place: number;
   readonly label: string;
   readonly m: Measures;
-  readonly anchor?: 'start' | 'middle' | 'end';
 }) => (
   <text
     x={pct(place)}
+    dx={inward(place, label, m)}
     y={m.labelY}
     fontSize={m.font}
     fontFamily={face.num}
     fill={paint.ink}
-    textAnchor={anchor}
+    textAnchor="middle"
   >
     {label}
   </text>
@@ -104,12 +104,12 @@ export const Limit = ({
   side,
   limit,
   word,
-  anchor,
+  labelled,
 }: PartProps & {
   readonly side: 'min' | 'max';
   readonly limit: Labelled;
   readonly word: string;
-  readonly anchor?: 'start' | 'end' | undefined;
+  readonly labelled: boolean;
 }) => {
   const place = scale.at(limit.value);
   const bar =
@@ -137,12 +137,7 @@ export const Limit = ({
           >
             {word}
           </text>
-          <Label
-            place={place}
-            label={limit.label}
-            m={m}
-            {...(anchor !== undefined && { anchor })}
-          />
+          {labelled && <Label place={place} label={limit.label} m={m} />}
         </>
       )}
     </>

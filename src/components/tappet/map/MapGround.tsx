@@ -1,9 +1,9 @@
-import { face, paint } from '../look/paint';
-import type { BorePlan, PlacedPlan } from './plan';
+import { face, paint } from '../../look/paint';
+import type { PlacedPlan, PlanBank } from './plan';
 import { type Frame, project, type View } from './projection';
 
 interface MapGroundProps {
-  readonly plan: BorePlan;
+  readonly plan: readonly PlanBank[];
   readonly placed: PlacedPlan;
   readonly view: View;
   readonly frame: Frame;
@@ -36,7 +36,7 @@ const Note = ({
 );
 
 const Banks = ({ plan, view, frame, unit }: Omit<MapGroundProps, 'placed'>) =>
-  plan.banks.map(({ name, side }) => {
+  plan.map(({ name, side }) => {
     const isLeft = side === 'left';
     if (view === 'front-up')
       return (

@@ -73,7 +73,7 @@ export const frames: Readonly<Record<View, Frame>> = {
     arc: 84,
     arcRadius: 34,
     number: 60,
-    edge: 70,
+    edge: 49,
     fonts: { value: 0, letter: 16, number: 16 },
   },
 };

@@ -1,6 +1,7 @@
-import { MarkShape } from '../look/Mark';
-import { face, paint } from '../look/paint';
-import type { Status } from '../look/status';
+import type { Valve } from '@/domain/tappet/layout/bore-layout';
+import { MarkShape } from '../../look/Mark';
+import { face, paint } from '../../look/paint';
+import type { Status } from '../../look/status';
 
 interface BoreShapeProps {
   readonly x: number;
@@ -64,13 +65,21 @@ interface ValveLetterProps {
   readonly x: number;
   readonly y: number;
   readonly size: number;
-  readonly valve: 'intake' | 'exhaust';
-  readonly current: boolean;
+  readonly valve: Valve;
+  /** Bold. */
+  readonly strong?: boolean;
+  readonly ink?: string;
 }
 
 /** E or I beside the cam line. The I has serifs: a bare stroke would read as 1 or as a scribe mark. */
-export const ValveLetter = ({ x, y, size, valve, current }: ValveLetterProps) => {
-  const fill = current ? paint.marking : paint.ink2;
+export const ValveLetter = ({
+  x,
+  y,
+  size,
+  valve,
+  strong = false,
+  ink = paint.ink2,
+}: ValveLetterProps) => {
   const h = Math.round(size * 3.7) / 10;
   return valve === 'exhaust' ? (
     <text
@@ -78,17 +87,17 @@ export const ValveLetter = ({ x, y, size, valve, current }: ValveLetterProps) =>
       y={y + h}
       fontSize={size}
       fontFamily={face.num}
-      fontWeight={current ? 700 : 400}
-      fill={fill}
+      fontWeight={strong ? 700 : 400}
+      fill={ink}
       textAnchor="middle"
     >
       E
     </text>
   ) : (
     <path
-      d={`M${x - h * 0.72} ${y - h}h${h * 1.44}M${x - h * 0.72} ${y + h}h${h * 1.44}M${x} ${y - h}v${2 * h}`}
-      stroke={fill}
-      strokeWidth={(current ? 0.14 : 0.095) * size}
+      d={`M${x - h * 0.58} ${y - h}h${h * 1.16}M${x - h * 0.58} ${y + h}h${h * 1.16}M${x} ${y - h}v${2 * h}`}
+      stroke={ink}
+      strokeWidth={(strong ? 0.14 : 0.095) * size}
       fill="none"
     />
   );
