@@ -1,25 +1,42 @@
-import { plus, type Quantity, quantityOf } from '../../quantity/quantity';
-import { div, rational } from '../../quantity/rational';
+import { mean } from '../../measurement/series';
+import { combine } from '../../measurement/uncertainty';
+import { type Quantity, quantityOf } from '../../quantity/quantity';
 import type { PositionResult } from '../clause-result';
 import { writtenWords } from '../describe';
 import type { ReferenceAverageRequirement } from '../limit';
 import { getQuantityEntry, type RuleDimension } from '../quantity-catalogue';
 import { around, decisionWithin } from './decision-of';
-import { type Facts, findNumber, positionsFor, type ReferenceFact, wasOutOfReach } from './facts';
+import {
+  type Facts,
+  findNumber,
+  type NumberFact,
+  positionsFor,
+  type ReferenceFact,
+  wasOutOfReach,
+} from './facts';
 import { heldNumber, missingAt } from './held-number';
 
-const meanOf = (
-  first: ReferenceFact,
-  others: readonly ReferenceFact[],
-): Quantity<RuleDimension> => {
-  const sum = others.reduce((total, part) => plus(total, part.value), first.value);
-  const count = rational(BigInt(others.length + 1));
-  return quantityOf(sum.dimension, div(sum.value, count), sum.unit);
-};
+const meanOf = (first: ReferenceFact, parts: readonly ReferenceFact[]): Quantity<RuleDimension> =>
+  quantityOf(first.value.dimension, mean(parts.map((part) => part.value.value)), first.value.unit);
 
-/** u of (value − mean of n parts), the parts measured independently: JCGM 100:2008, 5.1.2. */
-const combined = (standard: number, parts: readonly ReferenceFact[]): number =>
-  Math.hypot(standard, ...parts.map((part) => part.standardUncertainty / parts.length));
+/** Of the value less the mean of n parts, all measured independently. */
+const combined = (fact: NumberFact, parts: readonly ReferenceFact[]) =>
+  combine([
+    {
+      name: 'part',
+      words: 'the part',
+      standardUncertainty: fact.standardUncertainty,
+      sensitivity: 1,
+      degreesOfFreedom: fact.degreesOfFreedom ?? null,
+    },
+    ...parts.map((part) => ({
+      name: `reference ${part.part}`,
+      words: `reference part ${part.part}`,
+      standardUncertainty: part.standardUncertainty,
+      sensitivity: 1 / parts.length,
+      degreesOfFreedom: null,
+    })),
+  ]);
 
 /** Every position held against the mean of the reference parts. */
 export const evaluateReference = (
@@ -28,7 +45,7 @@ export const evaluateReference = (
   advisory: boolean,
 ): readonly PositionResult[] => {
   const parts = facts.references.filter((part) => part.quantity === rule.quantity);
-  const [first, ...others] = parts;
+  const [first] = parts;
   const positions = positionsFor(rule.per, facts.positions);
   if (first === undefined || parts.length < rule.n) {
     return positions.map((position) => ({
@@ -37,7 +54,7 @@ export const evaluateReference = (
     }));
   }
   const { dimension } = getQuantityEntry(rule.quantity);
-  const decision = decisionWithin(rule, dimension, around(meanOf(first, others), rule));
+  const decision = decisionWithin(rule, dimension, around(meanOf(first, parts), rule));
   const limit = `within +${writtenWords(rule.plus)} −${writtenWords(rule.minus)} of the mean of ${parts.length} reference parts`;
   return positions.map((position) => {
     const fact = findNumber(facts, rule.quantity, position.key, rule.figure);
@@ -45,7 +62,7 @@ export const evaluateReference = (
       return missingAt(position, wasOutOfReach(facts, rule.quantity, position.key));
     return heldNumber({
       position,
-      fact: { ...fact, standardUncertainty: combined(fact.standardUncertainty, parts) },
+      fact: { ...fact, ...combined(fact, parts) },
       compared: fact.value,
       decision,
       unit: rule.unit,

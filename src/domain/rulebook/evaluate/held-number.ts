@@ -19,11 +19,17 @@ const WORDS = {
 
 const UNFIT = 'no statement, since the gauge is not fit for this rule';
 
-/** Exact where that is short, else two places more than the limit has. */
-const readable = (value: Quantity, places: number): Written =>
-  decimalsOf(value.text) <= places + 3
-    ? { text: value.text, unit: value.unit }
-    : { text: asciiIn(value, value.unit, places + 2), unit: value.unit };
+/** With the limit's places at least; exact where that is short, else two places more than the limit. */
+const readable = (value: Quantity, places: number): Written => {
+  const own = decimalsOf(value.text);
+  const decimals = own <= places + 3 ? Math.max(own, places) : places + 2;
+  return { text: asciiIn(value, value.unit, decimals), unit: value.unit };
+};
+
+const placesIn = (bound: Quantity | undefined, unit: string): number => {
+  if (bound === undefined) return 0;
+  return decimalsOf(bound.unit === unit ? bound.text : convert(bound, unit).text);
+};
 
 export interface Held {
   readonly position: Position;
@@ -58,11 +64,9 @@ export const heldNumber = (held: Held): PositionResult => {
     degreesOfFreedom: fact.degreesOfFreedom,
   });
   const bounds = [decision.limits.min, decision.limits.max];
-  const places = Math.max(
-    ...bounds.map((bound) => (bound === undefined ? 0 : decimalsOf(convert(bound, unit).text))),
-  );
-  const shown = convert(held.compared, unit);
-  const value = readable(shown, Math.min(places, 7));
+  const places = Math.min(7, Math.max(...bounds.map((bound) => placesIn(bound, unit))));
+  const shown = held.compared.unit === unit ? held.compared : convert(held.compared, unit);
+  const value = readable(shown, places);
   const state = stateOf(held, assessment);
   const silent = state === 'no-statement' || (held.advisory && assessment.complies === false);
   const spread = fact.standardUncertainty > 0;
