@@ -1,4 +1,4 @@
-import { instantOf, wallTimeAt } from './zone.ts';
+import { instantOf, wallTimeAt } from './zone';
 
 /** How long a clock runs. */
 export type Window =

@@ -1,5 +1,5 @@
-import type { Deadline } from './deadline.ts';
-import { offsetAt, wallTimeAt } from './zone.ts';
+import type { Deadline } from './deadline';
+import { offsetAt, wallTimeAt } from './zone';
 
 const WEEKDAYS = ['Sunday', 'Monday', 'Tuesday', 'Wednesday', 'Thursday', 'Friday', 'Saturday'];
 const MONTHS = [

@@ -1,4 +1,4 @@
-import type { ClauseResult } from '../rulebook/clause-result.ts';
+import type { ClauseResult } from '../rulebook/clause-result';
 
 /** A measurement or check held against one clause, as it stands in a signed report. */
 export interface Finding extends ClauseResult {
