@@ -10,7 +10,7 @@ export interface Ports {
   readonly objects: Objects;
   readonly images: Images;
   readonly mailer: Mailer;
-  readonly notices: NoticePrinter;
+  readonly identity: IdentityProvider;
   readonly site: Site;
 }
 
@@ -82,6 +82,33 @@ export interface Images {
   previews(bytes: Uint8Array, widths: readonly number[]): Promise<readonly Preview[]>;
 }
 
+export interface ProviderPerson {
+  readonly issuer: string;
+  readonly subject: string;
+  /** Lower case. */
+  readonly email: string;
+  readonly emailVerified: boolean;
+  readonly name: string;
+}
+
+export interface ProviderRequest {
+  readonly url: string;
+  readonly state: string;
+  readonly nonce: string;
+  readonly verifier: string;
+}
+
+export interface IdentityProvider {
+  /** `fresh` asks the provider to have the person sign in anew. */
+  begin(input: { readonly fresh: boolean }): Promise<ProviderRequest>;
+  /** Throws if the code, the token's signature or one of its claims does not hold. */
+  finish(input: {
+    readonly code: string;
+    readonly verifier: string;
+    readonly nonce: string;
+  }): Promise<ProviderPerson>;
+}
+
 export interface OutgoingMail {
   readonly to: string;
   readonly from: string;
@@ -98,18 +125,4 @@ export interface OutgoingMail {
 
 export interface Mailer {
   send(mail: OutgoingMail): Promise<void>;
-}
-
-export interface NoticePrinter {
-  /** The same notice gives the same bytes. */
-  print(input: PrintedNotice): Promise<Uint8Array>;
-}
-
-export interface PrintedNotice {
-  /** The canonical JSON of the notice document. */
-  readonly notice: string;
-  readonly noticeHash: string;
-  readonly ledgerLine: string;
-  readonly verifyUrl: string;
-  readonly attachments: readonly { readonly name: string; readonly bytes: Uint8Array }[];
 }

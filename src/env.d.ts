@@ -1,0 +1,9 @@
+/// <reference types="astro/client" />
+
+declare namespace App {
+  interface Locals {
+    readonly requestId: string;
+    readonly actor: import('@/domain/access/permission').Actor | null;
+    readonly ports: import('@/services/ports').Ports;
+  }
+}

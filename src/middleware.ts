@@ -1,0 +1,53 @@
+import { sequence } from 'astro:middleware';
+import type { MiddlewareHandler } from 'astro';
+import { composition } from '@/composition';
+import { failure } from '@/domain/failure';
+import { crossSite } from '@/http/origin';
+import { problem } from '@/http/problem';
+import { SESSION_COOKIE } from '@/http/session-cookie';
+import { findActor } from '@/services/session/find-actor';
+
+let worker: Promise<void> | undefined;
+
+/** Ports and person of this request. */
+const wire: MiddlewareHandler = async (context, next) => {
+  const app = await composition();
+  // The built server starts the worker itself; under `astro dev` the first request does.
+  if (import.meta.env.DEV && app.config.worker === 'in-process') {
+    worker ??= app.startWorker();
+    await worker;
+  }
+  if (crossSite(context.request, app.config.publicUrl)) {
+    return problem(
+      failure('absent', 'This was sent from another site and was not carried out.'),
+      403,
+    );
+  }
+  const ports = app.ports();
+  const token = context.cookies.get(SESSION_COOKIE)?.value;
+  Object.assign(context.locals, {
+    requestId: ports.random.uuid(),
+    ports,
+    actor: token === undefined ? null : await findActor(ports, token),
+  });
+  const response = await next();
+  secure(response.headers, app.config.objects.publicEndpoint);
+  response.headers.set('x-request-id', context.locals.requestId);
+  if (context.locals.actor !== null && !response.headers.has('cache-control')) {
+    response.headers.set('cache-control', 'private, no-store');
+  }
+  return response;
+};
+
+/** What the page may reach besides itself: the object store, to which photographs go directly. */
+const secure = (headers: Headers, objectStore: string): void => {
+  const policy = headers.get('content-security-policy');
+  if (policy !== null) {
+    headers.set(
+      'content-security-policy',
+      `${policy} connect-src 'self' ${objectStore}; img-src 'self' blob: data:;`,
+    );
+  }
+};
+
+export const onRequest = sequence(wire);

@@ -1,0 +1,22 @@
+import type PgBoss from 'pg-boss';
+import { makePreviews } from '@/services/file/make-previews';
+import { sendMail } from '@/services/mail/send-mail';
+import type { JobPayloads, Ports } from '@/services/ports';
+
+type Handlers = {
+  readonly [Q in keyof JobPayloads]?: (ports: Ports, data: JobPayloads[Q]) => Promise<void>;
+};
+
+const handlers: Handlers = {
+  'send-mail': sendMail,
+  'make-previews': makePreviews,
+};
+
+/** Works the queues in this process: one job of a kind at a time; a failed one is tried again later. */
+export const startWorker = async (boss: PgBoss, ports: () => Ports): Promise<void> => {
+  for (const [queue, handle] of Object.entries(handlers)) {
+    await boss.work(queue, { batchSize: 1, pollingIntervalSeconds: 0.5 }, async (jobs) => {
+      for (const job of jobs) await handle(ports(), job.data as never);
+    });
+  }
+};
