@@ -55,11 +55,18 @@ export async function rememberedPorts(file, names) {
 }
 
 /**
+ * Waits a moment for a port that a server just left, then insists.
+ *
  * @param {number} port
  * @param {string} what who wants it, for the message
  * @param {string} mend
  */
 export async function demandFree(port, what, mend) {
-  if (await isFree(port)) return;
-  throw new Problem(`Port ${port}, wanted for ${what}, is taken by another program.`, mend);
+  const until = performance.now() + 3000;
+  while (!(await isFree(port))) {
+    if (performance.now() > until) {
+      throw new Problem(`Port ${port}, wanted for ${what}, is taken by another program.`, mend);
+    }
+    await new Promise((resolve) => setTimeout(resolve, 100));
+  }
 }

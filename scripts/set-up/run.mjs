@@ -5,10 +5,18 @@ import { spawn } from 'node:child_process';
  * @property {string} [cwd]
  * @property {NodeJS.ProcessEnv} [env]
  * @property {'capture' | 'show'} [output] `show` passes the command's output on; default `capture`
- * @property {AbortSignal} [signal] ends the command
+ * @property {boolean} [wholly] lets it come to its end even when this process is asked to stop
  */
 
 /** @typedef {{ code: number, output: string }} RunResult */
+
+/** @type {Set<import('node:child_process').ChildProcess>} */
+const interruptible = new Set();
+
+/** Ends the commands that are running now, those excepted that were started as `wholly`. */
+export function interruptCommands() {
+  for (const child of interruptible) child.kill('SIGTERM');
+}
 
 /**
  * Runs a command to its end, without a terminal and without input.
@@ -25,8 +33,10 @@ export function run(command, args, options = {}) {
       cwd: options.cwd ?? '/',
       env: options.env ?? process.env,
       stdio: ['ignore', 'pipe', 'pipe'],
-      ...(options.signal === undefined ? {} : { signal: options.signal }),
+      // A group of its own: Ctrl-C in a terminal reaches this process alone, which decides.
+      detached: true,
     });
+    if (options.wholly !== true) interruptible.add(child);
     let output = '';
     /** @param {Buffer} chunk */
     const take = (chunk) => {
@@ -35,8 +45,13 @@ export function run(command, args, options = {}) {
     };
     child.stdout.on('data', take);
     child.stderr.on('data', take);
-    child.on('error', (error) => resolve({ code: 127, output: `${output}${error.message}` }));
-    child.on('close', (code) => resolve({ code: code ?? 143, output }));
+    /** @param {RunResult} result */
+    const finish = (result) => {
+      interruptible.delete(child);
+      resolve(result);
+    };
+    child.on('error', (error) => finish({ code: 127, output: `${output}${error.message}` }));
+    child.on('close', (code) => finish({ code: code ?? 143, output }));
   });
 }
 

@@ -1,7 +1,7 @@
 import { accessSync, chmodSync, constants, mkdtempSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { serverAccount } from './account.mjs';
+import { serverAccount } from '../postgres/account.mjs';
 import { Problem } from './problem.mjs';
 
 /** @param {string} folder */

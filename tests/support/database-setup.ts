@@ -2,10 +2,10 @@ import { rmSync } from 'node:fs';
 import { join } from 'node:path';
 import type { TestProject } from 'vitest/node';
 import { migrate } from '@/adapters/database/migrate';
-import { type Cluster, startCluster } from '../../scripts/set-up/cluster.mjs';
+import { type Cluster, startCluster } from '../../scripts/postgres/cluster.mjs';
+import { connect, createDatabase } from '../../scripts/postgres/roles.mjs';
 import { ensurePostgres } from '../../scripts/set-up/packages.mjs';
 import { rememberedPorts } from '../../scripts/set-up/ports.mjs';
-import { connect, createDatabase } from '../../scripts/set-up/roles.mjs';
 import { newTemporaryFolder } from '../../scripts/set-up/temporary.mjs';
 
 export interface TestCluster {

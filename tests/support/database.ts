@@ -1,6 +1,6 @@
 import { randomBytes } from 'node:crypto';
 import { inject } from 'vitest';
-import { connect, createDatabase } from '../../scripts/set-up/roles.mjs';
+import { connect, createDatabase } from '../../scripts/postgres/roles.mjs';
 import { withDatabase } from './database-setup';
 
 export interface TestDatabase {

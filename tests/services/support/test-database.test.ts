@@ -1,5 +1,5 @@
 import { afterAll, expect, test } from 'vitest';
-import { connect } from '../../../scripts/set-up/roles.mjs';
+import { connect } from '../../../scripts/postgres/roles.mjs';
 import { createTestDatabase } from '../../support/database';
 
 const first = await createTestDatabase();

@@ -1,7 +1,7 @@
 import { execFileSync } from 'node:child_process';
 import { chownSync } from 'node:fs';
-import { Problem } from './problem.mjs';
-import { run } from './run.mjs';
+import { Problem } from '../set-up/problem.mjs';
+import { run } from '../set-up/run.mjs';
 
 /**
  * The unprivileged account that a database server runs under.
@@ -9,7 +9,7 @@ import { run } from './run.mjs';
  * @typedef {object} Account
  * @property {number} uid
  * @property {string} name
- * @property {(command: string, args: readonly string[]) => Promise<import('./run.mjs').RunResult>} run
+ * @property {(command: string, args: readonly string[]) => Promise<import('../set-up/run.mjs').RunResult>} run
  *   runs a command as this account, in the root folder, without the caller's environment
  * @property {(path: string) => void} own makes the account the owner of a file or folder
  * @property {(folder: string) => Promise<boolean>} canEnter
@@ -44,7 +44,7 @@ export function serverAccount() {
   /** @type {Account['run']} */
   const runAs = (command, args) => {
     const [first = command, ...rest] = [...prefix, command, ...args];
-    return run(first, rest, { cwd: '/', env: plainEnvironment });
+    return run(first, rest, { cwd: '/', env: plainEnvironment, wholly: true });
   };
   return {
     uid,

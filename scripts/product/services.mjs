@@ -1,9 +1,9 @@
 import { spawn } from 'node:child_process';
 import { createWriteStream, mkdirSync, readFileSync } from 'node:fs';
 import { dirname, join } from 'node:path';
-import { root } from './files.mjs';
-import { Problem } from './problem.mjs';
-import { tail } from './run.mjs';
+import { root } from '../set-up/files.mjs';
+import { Problem } from '../set-up/problem.mjs';
+import { tail } from '../set-up/run.mjs';
 
 /**
  * A program that runs beside this one and ends with it.
@@ -15,7 +15,7 @@ import { tail } from './run.mjs';
  * @property {() => Promise<void>} stop asks it to end, and after ten seconds makes it
  */
 
-const follow = join(root, 'scripts/set-up/follow-parent.mjs');
+const follow = join(root, 'scripts/product/follow-parent.mjs');
 
 /**
  * Starts a script of this checkout in a process group of its own, so that Ctrl-C reaches this

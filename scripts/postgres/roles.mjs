@@ -1,4 +1,4 @@
-import { Problem } from './problem.mjs';
+import { Problem } from '../set-up/problem.mjs';
 
 const inUse = '57P03';
 
