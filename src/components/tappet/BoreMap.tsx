@@ -77,6 +77,7 @@ export const BoreMap = (props: BoreMapProps) => {
           <span className="visually-hidden">{name}</span>
         </a>
       );
+    if (onSelect === undefined) return null;
     return (
       <button
         type="button"
@@ -84,7 +85,7 @@ export const BoreMap = (props: BoreMapProps) => {
         aria-current={isCurrent ? 'true' : undefined}
         data-bore={bore.key}
         tabIndex={bore.key === stop ? 0 : -1}
-        onClick={() => onSelect?.(bore.key)}
+        onClick={() => onSelect(bore.key)}
       >
         <span className="visually-hidden">{name}</span>
       </button>
