@@ -20,7 +20,8 @@ const PLAIN = /^(\d*)(?:([.,])(\d*))?$/;
  */
 export const readNumber = (typed: string): NumberReading => {
   const text = typed.trim().replace(/^[−–]/, '-');
-  if (/^[+-]?\d+\s+\d/.test(text) && !/[\u00a0\u202f]/.test(text)) return { fault: 'two-numbers' };
+  if (/^[+-]?[\d.,]+\s+[\d.,]/.test(text) && !/[\u00a0\u202f]/.test(text))
+    return { fault: 'two-numbers' };
   if (/\d\s*[/⁄]\s*\d/.test(text)) return { fault: 'fraction' };
   const [, sign = '', digits = '', exponent = ''] =
     /^([+-]?)(.*?)(e[+-]?\d{1,2})?$/i.exec(text) ?? [];
