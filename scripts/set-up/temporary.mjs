@@ -14,6 +14,18 @@ function isWritable(folder) {
   }
 }
 
+/** @returns {string} `TMPDIR` where that is usable, else `/tmp` or `/var/tmp` */
+export function usableTemporaryFolder() {
+  const found = [tmpdir(), '/tmp', '/var/tmp'].find(
+    (folder) => folder.startsWith('/') && isWritable(folder),
+  );
+  if (found !== undefined) return found;
+  throw new Problem(
+    'Neither TMPDIR nor /tmp nor /var/tmp can be used for temporary files.',
+    'Set TMPDIR to a folder that this account can write.',
+  );
+}
+
 /**
  * A new temporary folder that the database's account can pass through. `TMPDIR` is used where it
  * exists, is writable and is open to that account; else `/tmp` or `/var/tmp`.
