@@ -15,8 +15,13 @@ import { rectangular, type UncertaintyComponent } from './uncertainty';
 /** 20 °C, the standard reference temperature (ISO 1), in kelvin. */
 export const REFERENCE = fromDecimalText('293.15');
 
-/** A thermometer's half-width of error in kelvin where none is stated. Common practice. */
-export const THERMOMETER_HALF_WIDTH = 1;
+/**
+ * How well one spot's thermometer tells the temperature of the whole part: half-width in kelvin of 1, and
+ * a tenth of the part's distance from 20 °C, since what is far from its surroundings is not even. Common
+ * practice.
+ */
+const THERMOMETER = 1;
+const UNEVEN = 0.1;
 
 /** How warm something is and what it is made of. */
 export interface Warmth {
@@ -55,7 +60,7 @@ export const temperatureComponents = (
   length: number,
   warmth: Warmth,
   words: string,
-  halfWidth = THERMOMETER_HALF_WIDTH,
+  halfWidth = THERMOMETER + UNEVEN * Math.abs(toNumber(above20(warmth))),
 ): readonly UncertaintyComponent[] => [
   {
     name: `expansion: ${words}`,

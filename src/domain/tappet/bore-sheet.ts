@@ -55,4 +55,6 @@ export interface BoreSheet {
   readonly repeatability?: Repeatability | undefined;
   /** Width of the permitted zone: what drift and temperature are weighed against. */
   readonly window?: Length | undefined;
+  /** The class's number for window ÷ 2U; "2" unless stated. */
+  readonly fitRatio?: string | undefined;
 }

@@ -1,10 +1,13 @@
+import { DEFAULT_FIT_RATIO } from '../decision/fitness';
 import { type BudgetLine, budgetLines } from '../measurement/budget';
 import { divisionOf } from '../measurement/gauge-figures';
+import { bearable, type TemperatureAdvice, temperatureAdvice } from '../measurement/hold';
 import { combine } from '../measurement/uncertainty';
+import { baseNumber } from '../quantity/convert';
 import { quantityOf } from '../quantity/quantity';
-import type { Rational } from '../quantity/rational';
+import { type Rational, sub, toNumber } from '../quantity/rational';
 import type { BoreSheet, Length } from './bore-sheet';
-import { type Clearance, clearanceOf, diametersOf } from './clearance';
+import { type Clearance, clearanceOf, type Diameters, diametersOf } from './clearance';
 import { clearanceAt20 } from './clearance-at-20';
 import { correctedReadings, driftOf } from './dial';
 import { outOfRound, taperOf } from './form';
@@ -12,7 +15,7 @@ import { missingOf } from './missing';
 import { placesOf } from './places';
 import { mustRedo } from './redo';
 import type { Shape } from './shape';
-import { DIAL, sheetBudget, sheetRepeatability } from './sheet-budget';
+import { DIAL, sheetBudget, sheetRepeatability, temperatureBudget } from './sheet-budget';
 import { warningsOf } from './warnings';
 
 export interface ClearanceFigures {
@@ -26,6 +29,8 @@ export interface BoreMeasurement {
   /** `null` when readings it needs are missing. */
   readonly clearance: ClearanceFigures | null;
   readonly clearanceAt20C?: ClearanceFigures;
+  /** Where temperatures were logged and the window is known. */
+  readonly temperatureAdvice?: TemperatureAdvice;
   /** `null` where no depth has two axes. */
   readonly outOfRound: Length | null;
   /** `null` with fewer than two depths. */
@@ -58,6 +63,7 @@ export const measureBore = (sheet: BoreSheet): BoreMeasurement => {
   const now = diametersOf(sheet, places);
   const clearance = now && clearanceOf(now.bores, now.lifters);
   const settled = now && clearanceAt20(sheet, now);
+  const advice = settled && clearance && adviceFor(sheet, now, sub(settled.mean, clearance.mean));
   const division = divisionOf(sheet.gauge ?? DIAL);
   const round = outOfRound(places);
   const taper = taperOf(places, division);
@@ -67,6 +73,7 @@ export const measureBore = (sheet: BoreSheet): BoreMeasurement => {
   return {
     clearance: clearance && figures(clearance),
     ...(settled && { clearanceAt20C: figures(settled) }),
+    ...(advice && { temperatureAdvice: advice }),
     outOfRound: round && length(round),
     taper: taper && {
       depthMeans: length(taper.depthMeans),
@@ -78,7 +85,22 @@ export const measureBore = (sheet: BoreSheet): BoreMeasurement => {
     redo,
     ...combine(budget),
     missing: missingOf(sheet),
-    warnings: warningsOf(sheet, clearance, sheetRepeatability(sheet, places), redo),
+    warnings: warningsOf(sheet, {
+      clearance,
+      advice,
+      repeatability: sheetRepeatability(sheet, places),
+      redo,
+    }),
     budget,
   };
+};
+
+const adviceFor = (
+  sheet: BoreSheet,
+  now: Diameters,
+  correction: Rational,
+): TemperatureAdvice | undefined => {
+  if (sheet.window === undefined) return undefined;
+  const bears = bearable(baseNumber(sheet.window), Number(sheet.fitRatio ?? DEFAULT_FIT_RATIO));
+  return temperatureAdvice(toNumber(correction), temperatureBudget(sheet, now), bears);
 };

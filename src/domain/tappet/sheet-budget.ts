@@ -55,7 +55,7 @@ export const sheetBudget = (
       ? [calibrationOf(sheet.settingRing ?? RING, 'the setting ring’s calibration')]
       : []),
     ...drift(sheet),
-    ...temperature(sheet, now),
+    ...temperatureBudget(sheet, now),
   ];
 };
 
@@ -117,7 +117,11 @@ const drift = ({ zeros }: BoreSheet) => {
       ];
 };
 
-const temperature = (sheet: BoreSheet, now: Diameters | null): readonly UncertaintyComponent[] => {
+/** The temperature's lines of the budget: of the correction where temperatures were logged, else an allowance. */
+export const temperatureBudget = (
+  sheet: BoreSheet,
+  now: Diameters | null,
+): readonly UncertaintyComponent[] => {
   const [lifter] = now?.sizesKnown === true ? now.lifters : [];
   const size = lifter === undefined ? USUAL_SIZE : toNumber(lifter);
   const warmths = warmthsOf(sheet);

@@ -1,3 +1,4 @@
+import type { TemperatureAdvice } from '../measurement/hold';
 import type { Repeatability } from '../measurement/repeatability';
 import { abs, compare, fromDecimalText, type Rational, sub } from '../quantity/rational';
 import type { BoreSheet } from './bore-sheet';
@@ -10,12 +11,17 @@ const SETTLE = fromDecimalText('5');
 /** No clearance of a tappet is this large, in metres (0.020 in): a slip of the pen or of the zero. */
 const SLIP = fromDecimalText('0.000508');
 
+interface Found {
+  readonly clearance: Clearance | null;
+  readonly advice: TemperatureAdvice | null | undefined;
+  readonly repeatability: Repeatability | null;
+  readonly redo: boolean;
+}
+
 /** Typical errors and weak points of the sheet, each in a plain sentence with what to do. */
 export const warningsOf = (
   sheet: BoreSheet,
-  clearance: Clearance | null,
-  repeatability: Repeatability | null,
-  redo: boolean,
+  { clearance, advice, repeatability, redo }: Found,
 ): readonly string[] => {
   const comparative = sheet.method === 'comparative';
   const onLifter = comparative && sheet.zeroSize === undefined;
@@ -44,7 +50,7 @@ export const warningsOf = (
     comparative &&
       sheet.gauge?.division === undefined &&
       'The dial’s division was not given: 0.0001 in is taken.',
-    ...(temperatures === undefined ? [] : temperatureWarnings(sheet)),
+    ...(temperatures === undefined ? [] : temperatureWarnings(sheet, advice)),
   ];
   return said.filter((one) => one !== false);
 };
@@ -52,13 +58,18 @@ export const warningsOf = (
 const isInches = (value: Rational, inches: Rational): boolean =>
   value.n * INCH.d * inches.d === inches.n * INCH.n * value.d;
 
-const temperatureWarnings = (sheet: BoreSheet): readonly (string | false)[] => {
+const temperatureWarnings = (
+  sheet: BoreSheet,
+  advice: Found['advice'],
+): readonly (string | false)[] => {
   const { temperatures, lifter, method, zeroSize } = sheet;
   if (temperatures === undefined) return [];
   const apart = compare(abs(sub(temperatures.bore.value, temperatures.lifter.value)), SETTLE) > 0;
   return [
-    apart &&
-      'Block and lifter differ by more than 5 °C: hold them until they settle, and measure again.',
+    advice === 'refuse' &&
+      'The temperatures are too uncertain for this limit: nothing is stated from these readings. Hold the parts and measure again.',
+    (advice === 'hold' || (advice !== 'refuse' && apart)) &&
+      'The parts are not settled: hold them until block, lifter and gauge are within 5 °C, and measure again.',
     sheet.materials === undefined &&
       'Materials were not given: an iron block and a steel lifter are taken.',
     method === 'comparative' &&
