@@ -37,9 +37,10 @@ const CAPTURED_KEYS = `
 const PLACE = `
   bank text not null default '',
   cylinder text not null default '',
-  valve text not null default '' check (valve in ('', 'intake', 'exhaust'))`;
+  valve text not null default '' check (valve in ('', 'intake', 'exhaust')),
+  place_index integer check (place_index > 0)`;
 
-const PLACE_COLUMNS = ['bank', 'cylinder', 'valve'] as const;
+const PLACE_COLUMNS = ['bank', 'cylinder', 'valve', 'place_index'] as const;
 
 /** Events, entries, the cars picked, gauges, and everything recorded in the bay. */
 export class EventsAndInspections extends Migration {

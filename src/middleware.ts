@@ -45,7 +45,7 @@ const secure = (headers: Headers, objectStore: string): void => {
   if (policy !== null) {
     headers.set(
       'content-security-policy',
-      `${policy} connect-src 'self' ${objectStore}; img-src 'self' blob: data:;`,
+      `${policy} connect-src 'self' ${objectStore}; img-src 'self' blob:;`,
     );
   }
 };

@@ -1,6 +1,5 @@
 import type { ClearanceRequest, ClearanceResponse } from '@/contracts/bench/clearance';
 import { type Failure, invalid } from '@/domain/failure';
-import { findMaterial, MATERIALS, type Material } from '@/domain/measurement/material';
 import { widthIn } from '@/domain/quantity/convert';
 import { fail, ok, type Result } from '@/domain/result';
 import type { BoreSheet } from '@/domain/tappet/bore-sheet';
@@ -58,8 +57,8 @@ function sheetOf(request: ClearanceRequest, take: Taker): BoreSheet {
     },
     temperatures: temperaturesOf(request, take),
     materials: request.materials && {
-      bore: material('/materials/bore', request.materials.bore, take),
-      lifter: material('/materials/lifter', request.materials.lifter, take),
+      bore: take.material('/materials/bore', request.materials.bore),
+      lifter: take.material('/materials/lifter', request.materials.lifter),
     },
   };
 }
@@ -78,15 +77,6 @@ function temperaturesOf(
     setting: setting === undefined ? undefined : of('setting', setting),
     gauge: gauge === undefined ? undefined : of('gauge', gauge),
   };
-}
-
-function material(pointer: string, text: string, take: Taker): Material {
-  const found = findMaterial(text);
-  const [first] = MATERIALS;
-  if (found !== undefined || first === undefined) return found as Material;
-  const names = MATERIALS.map(({ name }) => name).join(', ');
-  take.refuse(pointer, `Write one of ${names}, or a coefficient per kelvin such as 11.4e-6.`);
-  return first;
 }
 
 function responseOf(unit: string, bore: BoreMeasurement): ClearanceResponse {

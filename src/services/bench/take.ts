@@ -1,4 +1,5 @@
 import type { Fault } from '@/domain/failure';
+import { findMaterial, getMaterial, MATERIALS, type Material } from '@/domain/measurement/material';
 import { widthFrom } from '@/domain/quantity/convert';
 import type { Dimension } from '@/domain/quantity/dimension';
 import { dimensionWords } from '@/domain/quantity/dimension';
@@ -52,6 +53,15 @@ export class Taker {
     if (this.faults.length === before && quantity.value.n <= 0n)
       this.refuse(pointer, 'This must be larger than zero.');
     return quantity;
+  }
+
+  /** By name, or by a coefficient of expansion per kelvin. */
+  material(pointer: string, text: string): Material {
+    const found = findMaterial(text);
+    if (found !== undefined) return found;
+    const names = MATERIALS.map(({ name }) => name).join(', ');
+    this.refuse(pointer, `Write one of ${names}, or a coefficient per kelvin such as 11.4e-6.`);
+    return getMaterial('steel');
   }
 
   /** Finite. */

@@ -11,14 +11,15 @@ export const makePreviews = async (
   { seriesId, fileId }: { readonly seriesId: string; readonly fileId: string },
 ): Promise<void> => {
   const file = await deps.db.findOneOrFail(KeptFile, { seriesId, id: fileId });
-  if (file.previews !== null || file.objectKey === null || file.sha256 === null) return;
-  const original = await deps.objects.read(file.objectKey, MOST_PHOTOGRAPH_BYTES);
+  const { objectKey, sha256 } = file;
+  if (file.previews || !objectKey || !sha256) return;
+  const original = await deps.objects.read(objectKey, MOST_PHOTOGRAPH_BYTES);
   const made = await deps.images.previews(original, PREVIEW_WIDTHS);
   const previews: Record<string, string> = {};
   for (const [at, width] of PREVIEW_WIDTHS.entries()) {
     const preview = made[at];
     if (preview === undefined) throw new Error(`No preview of ${width} pixels was made.`);
-    const key = `previews/${toHex(new Uint8Array(file.sha256))}/${width}.jpg`;
+    const key = `previews/${toHex(new Uint8Array(sha256))}/${width}.jpg`;
     await deps.objects.write(key, preview.bytes, 'image/jpeg');
     previews[width] = key;
   }

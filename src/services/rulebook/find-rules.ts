@@ -1,15 +1,14 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import { sha256, utf8 } from '@/domain/ledger/bytes';
+import * as shapes from '@/contracts/rulebook/edition';
+import { readRulesDocument } from '@/contracts/rulebook/rules-document';
+import { sha256, toHex, utf8 } from '@/domain/ledger/bytes';
 import { canonicalJson } from '@/domain/ledger/canonical';
-import type { Bulletin } from '@/domain/rulebook/bulletin';
-import type { Edition } from '@/domain/rulebook/edition';
 import {
   findRulesInForce,
   type RulesInForce,
   type RulesQuestion,
   rulesDocument,
 } from '@/domain/rulebook/rules-in-force';
-import type { Clarification, Waiver } from '@/domain/rulebook/ruling';
 
 export interface StandingRules {
   readonly rules: RulesInForce;
@@ -40,13 +39,13 @@ export const readPublications = async (
      where e.series_id = ? and c.id = ? order by e.starts_at`,
     [seriesId, classId],
   );
-  const of = <T>(kind: Row['kind']): readonly T[] =>
-    rows.filter((row) => row.kind === kind).map((row) => row.content as T);
+  const of = (kind: Row['kind']) =>
+    rows.filter((row) => row.kind === kind).map((row) => row.content);
   return {
-    editions: of<Edition>('edition'),
-    bulletins: of<Bulletin>('bulletin'),
-    clarifications: of<Clarification>('clarification'),
-    waivers: of<Waiver>('waiver'),
+    editions: of('edition').map((content) => shapes.edition.parse(content)),
+    bulletins: of('bulletin').map((content) => shapes.bulletin.parse(content)),
+    clarifications: of('clarification').map((content) => shapes.clarification.parse(content)),
+    waivers: of('waiver').map((content) => shapes.waiver.parse(content)),
     eventStartsAt: starts.map((row) => new Date(row.starts_at).toISOString()),
   };
 };
@@ -63,4 +62,19 @@ export const findRules = async (
   if (rules === undefined) return undefined;
   const document = canonicalJson(rulesDocument(rules));
   return { rules, document, hash: sha256(utf8(document)) };
+};
+
+/** The rules that a finding or verdict points to, back from where they are kept by their hash. */
+export const getRules = async (
+  em: EntityManager,
+  seriesId: string,
+  hash: Uint8Array,
+): Promise<RulesInForce> => {
+  const [row] = await em.execute<{ document: unknown }[]>(
+    'select document::jsonb as document from record.rules where series_id = ? and hash = ?',
+    [seriesId, Buffer.from(hash)],
+  );
+  const rules = readRulesDocument(row?.document);
+  if (!rules.ok) throw new Error(`Rules ${toHex(hash)} cannot be read: ${rules.failure.detail}`);
+  return rules.value;
 };
