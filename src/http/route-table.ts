@@ -1,0 +1,27 @@
+import type { Permission } from '@/domain/access/permission';
+
+/**
+ * Who may reach each route. `own`: what is shown depends on whose it is, and a stranger gets the
+ * answer of an unknown thing. A route that is not listed here fails the authorisation test.
+ */
+export type RouteAccess =
+  | { readonly access: 'public' }
+  | { readonly access: 'signed-in' }
+  | { readonly access: 'own' }
+  | { readonly access: 'permission'; readonly permission: Permission };
+
+const open: RouteAccess = { access: 'public' };
+
+/** Keys are the routes as files name them, `/invitations/[token]`. */
+export const ROUTES: Readonly<Record<string, RouteAccess>> = {
+  '/': open,
+  '/404': open,
+  '/500': open,
+  '/enter': open,
+  '/invitations/[token]': open,
+  '/sign-in': open,
+  '/sign-in/link/[token]': open,
+  '/sign-in/provider': open,
+  '/sign-in/return': open,
+  '/sign-out': open,
+};
