@@ -41,9 +41,12 @@ export const padKeyOf = (press: KeyPress): PadKey | undefined => {
 /** Elements that have their own use for what is typed. */
 const OWN_KEYS = 'input, textarea, select, [contenteditable], dialog[open]';
 
-/** Whether the pad may take a press that arrived at `target`: Enter on a focused button is the button's. */
+/** Buttons and links use Enter themselves, unless they stand for the bore or cell already chosen. */
+const OWN_ENTER = ':is(button, a[href], summary):not([aria-current="true"])';
+
+/** Whether the pad may take a press that arrived at `target`. */
 export const padMayTake = (target: EventTarget | null, key: PadKey): boolean => {
   if (!(target instanceof Element)) return true;
   if (target.closest(OWN_KEYS) !== null) return false;
-  return key !== 'enter' || target.closest('button, a[href], summary') === null;
+  return key !== 'enter' || target.closest(OWN_ENTER) === null;
 };

@@ -29,13 +29,19 @@ const Note = ({
     fontFamily={face.head}
     fontWeight={600}
     fill={paint.ink2}
+    stroke={paint.plate}
+    strokeWidth={6}
+    paintOrder="stroke"
     textAnchor={end ? 'end' : 'start'}
   >
     {children}
   </text>
 );
 
-const Banks = ({ plan, view, frame, unit }: Omit<MapGroundProps, 'placed'>) =>
+/** Clear length in px that a row leaves for its unit before the first or after the last bore. */
+const ROOM = 36;
+
+const Banks = ({ plan, placed, view, frame, unit }: MapGroundProps) =>
   plan.map(({ name, side }) => {
     const isLeft = side === 'left';
     if (view === 'front-up')
@@ -45,13 +51,16 @@ const Banks = ({ plan, view, frame, unit }: Omit<MapGroundProps, 'placed'>) =>
         </Note>
       );
     const edge = { x: isLeft ? frame.width - 20 : 20, end: isLeft };
+    const row = placed.rows.find(({ v }) => v === (isLeft ? -1 : 1));
+    const hasRoom = row !== undefined && (isLeft ? frame.length - row.to : row.from) >= ROOM;
+    const beside = isLeft ? frame.height - 69 : 78;
     return (
       <g key={side}>
         <Note {...edge} y={isLeft ? frame.height - 16 : 26}>
           {name}
         </Note>
         {unit !== undefined && (
-          <Note {...edge} y={isLeft ? frame.height - 69 : 78}>
+          <Note {...edge} y={hasRoom ? beside : isLeft ? frame.height - 36 : 46}>
             {unit}
           </Note>
         )}
