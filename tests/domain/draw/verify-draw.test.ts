@@ -11,8 +11,21 @@ import { verifyDrawLines } from '@/domain/draw/verify-draw-lines';
 import { verifyVoid } from '@/domain/draw/verify-void';
 import { sha256, toHex } from '@/domain/ledger/bytes';
 import { canonicalBytes, canonicalJson } from '@/domain/ledger/canonical';
+import { originOf } from '@/domain/ledger/checkpoint';
+import { lineText, type NewLine } from '@/domain/ledger/line';
 import { conclude, type Step } from '@/domain/ledger/verify/step';
-import { example, proofOf, saltOf, signer, text } from '../ledger/example';
+import {
+  commitments,
+  example,
+  proofIn,
+  proofOf,
+  SERIES,
+  saltOf,
+  signer,
+  testSigner,
+  text,
+  uuid,
+} from '../ledger/example';
 import { flipped } from '../ledger/grown-tree';
 
 const { drawCommitment: commitment, drawSecret: secret, made } = example;
@@ -224,6 +237,7 @@ describe('the history of a subject’s draw', () => {
       [none, made],
       [none, again],
       [committed, commitment],
+      [committed, again],
       [committed, { ...made, draw: commitment.event }],
       [committed, { ...ended, commitment: '00'.repeat(32) }],
       [done, made],
@@ -276,5 +290,44 @@ describe('verifyDrawLines', () => {
       'logged-before-session',
     ]);
     expect(conclude(verifyDrawLines(first, second, []))).toBe('failed');
+  });
+
+  it('demands lines of the right kinds, in order, in the series’ own ledger', async () => {
+    const other = testSigner(originOf('records.example/ledger', uuid('other series')), 'foreign');
+    const run = async (
+      order: readonly ['draw-committed' | 'report-signed', 'draw-made' | 'report-signed'],
+      by = signer,
+      series = SERIES,
+      turned = false,
+    ) => {
+      const line = (index: number, kind: NewLine['kind'], label: string, document: string) =>
+        lineText({
+          series,
+          index,
+          act: series,
+          at: `2027-05-01T0${index}:00:00.000Z`,
+          kind,
+          commitments: commitments(label, { draw: document }),
+        });
+      const [a, b] = turned ? [1, 0] : [0, 1];
+      const announcedLine = line(a, order[0], 'draw', text.drawCommitment);
+      const madeLine = line(b, order[1], 'result', text.drawMade);
+      const ledger = turned ? [madeLine, announcedLine] : [announcedLine, madeLine];
+      const steps = verifyDrawLines(
+        { ...(await announced()), proof: await proofIn(ledger, a, by) },
+        { ...(await result()), proof: await proofIn(ledger, b, by) },
+        [by.key],
+      );
+      return failedIds(steps);
+    };
+    expect(await run(['draw-committed', 'draw-made'])).toEqual([]);
+    expect(await run(['report-signed', 'draw-made'])).toEqual(['draw-logged']);
+    expect(await run(['draw-committed', 'report-signed'])).toEqual(['draw-logged']);
+    expect(await run(['draw-committed', 'draw-made'], signer, SERIES, true)).toEqual([
+      'draw-logged',
+    ]);
+    expect(await run(['draw-committed', 'draw-made'], other, uuid('other series'))).toEqual([
+      'draw-logged',
+    ]);
   });
 });

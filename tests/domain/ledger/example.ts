@@ -20,7 +20,7 @@ import { grow } from './grown-tree';
 export const seedOf = (label: string): Uint8Array =>
   Uint8Array.from(createHash('sha256').update(`record-format example: ${label}`).digest());
 
-const uuid = (label: string): string => {
+export const uuid = (label: string): string => {
   const hex = toHex(seedOf(label));
   return `${hex.slice(0, 8)}-${hex.slice(8, 12)}-7${hex.slice(13, 16)}-a${hex.slice(17, 20)}-${hex.slice(20, 32)}`;
 };
@@ -47,7 +47,7 @@ export const signer = testSigner(ORIGIN, 'key');
 const nextSigner = testSigner(ORIGIN, 'next key');
 export const KEY = formatVerifierKey(signer.key);
 
-const commitments = (label: string, contents: Readonly<Record<string, string>>) =>
+export const commitments = (label: string, contents: Readonly<Record<string, string>>) =>
   Object.fromEntries(
     Object.entries(contents).map(([role, content]) => [
       role,
@@ -188,6 +188,21 @@ export const tree = grow(lines.length, lines.map(lineLeaf));
 
 export const headAt = (size: number, by: readonly NoteSigner[] = [signer]): Promise<string> =>
   signCheckpoint({ origin: ORIGIN, size, root: tree.root(size) }, by);
+
+/** Proves a line of any small ledger under a head of all its lines. */
+export const proofIn = async (
+  ledger: readonly string[],
+  index: number,
+  by: NoteSigner,
+): Promise<LineProof> => {
+  const grown = grow(ledger.length, ledger.map(lineLeaf));
+  const head = { origin: by.key.name, size: ledger.length, root: grown.root(ledger.length) };
+  return {
+    line: ledger[index] ?? '',
+    path: fillPlan(planInclusion(index, ledger.length), grown.read).map(toHex),
+    checkpoint: await signCheckpoint(head, [by]),
+  };
+};
 
 export const proofOf = async (
   index: number,

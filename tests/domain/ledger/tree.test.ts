@@ -151,6 +151,27 @@ describe('inclusion', () => {
   });
 });
 
+describe('a proof for a tree of another height', () => {
+  it('is refused though its hashes lead to the root', () => {
+    const tree = grow(16);
+    const path = fillPlan(planInclusion(0, 8), tree.read);
+    const claim = { leafHash: tree.leaves[0]!, index: 0, path, root: tree.root(8) };
+    expect(verifyInclusion({ ...claim, size: 8 })).toBe(true);
+    for (const size of [1, 2, 3, 4, 9, 16, 1000]) {
+      expect(verifyInclusion({ ...claim, size }), String(size)).toBe(false);
+    }
+    const grown = {
+      first: { size: 4, root: tree.root(4) },
+      path: fillPlan(planConsistency(4, 8), tree.read),
+    };
+    expect(verifyConsistency({ ...grown, second: { size: 8, root: tree.root(8) } })).toBe(true);
+    for (const size of [4, 9, 16, 1000]) {
+      const second = { size, root: tree.root(8) };
+      expect(verifyConsistency({ ...grown, second }), String(size)).toBe(false);
+    }
+  });
+});
+
 describe('consistency', () => {
   // transparency-dev/merkle testdata/consistency, happy paths: 6 → 8 and 2 → 5.
   it.each([

@@ -1,13 +1,18 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { sha256 } from '@/domain/ledger/bytes';
-import { signCheckpoint } from '@/domain/ledger/checkpoint';
+import { sha256, toHex } from '@/domain/ledger/bytes';
+import { canonicalJson } from '@/domain/ledger/canonical';
+import { originOf, signCheckpoint } from '@/domain/ledger/checkpoint';
+import { commit } from '@/domain/ledger/commitment';
+import { lineText, type NewLine } from '@/domain/ledger/line';
+import type { NoteSigner } from '@/domain/ledger/note/signed-note';
 import { formatVerifierKey } from '@/domain/ledger/note/verifier-key';
 import { followKeys } from '@/domain/ledger/verify/follow-keys';
 import { type NoticeFile, readNoticeFile, readPdfFile } from '@/domain/ledger/verify/notice-file';
 import { conclude, type Step } from '@/domain/ledger/verify/step';
 import { type NoticeToVerify, verifyNotice } from '@/domain/ledger/verify-notice';
 import {
+  commitments,
   example,
   extensionOf,
   KEY,
@@ -15,12 +20,16 @@ import {
   ORIGIN,
   pdf,
   pdfFile,
+  proofIn,
   proofOf,
+  SERIES,
   saltOf,
+  seedOf,
   signer,
   testSigner,
   text,
   tree,
+  uuid,
 } from './example';
 
 const outcomes = (steps: readonly Step[]) =>
@@ -172,6 +181,45 @@ describe('verifyNotice', () => {
     });
   });
 
+  it('takes the PDF’s hash from a line made for that, in the notice’s own ledger', async () => {
+    const notice = await good();
+    const foreign = testSigner(originOf('records.example/ledger', uuid('other series')), 'foreign');
+    const trustedKeys = [KEY, formatVerifierKey(foreign.key)];
+    const written = (change: Partial<NewLine>) =>
+      lineText({
+        series: SERIES,
+        index: 0,
+        act: SERIES,
+        at: '2027-05-01T20:00:00.000Z',
+        kind: 'notice-pdf',
+        commitments: { pdf: toHex(commit(seedOf('salt of pdf'), pdf)) },
+        refs: { notice: '4' },
+        ...change,
+      });
+    const outcome = async (line: string, by: NoteSigner) => {
+      const file = { ...notice.pdf!.file!, proof: await proofIn([line], 0, by) };
+      const steps = verifyNotice({ ...notice, trustedKeys, pdf: { sha256: sha256(pdf), file } });
+      expect(outcomes(steps)['pdf-line-included']).toBe('passed');
+      expect(outcomes(steps)['pdf-same-ledger']).toBe('passed');
+      return outcomes(steps)['pdf-committed'];
+    };
+    expect(await outcome(written({}), signer)).toBe('passed');
+    expect(await outcome(written({ kind: 'report-signed' }), signer)).toBe('failed');
+    expect(await outcome(written({ refs: {} }), signer)).toBe('failed');
+    expect(await outcome(written({ series: uuid('other series') }), foreign)).toBe('failed');
+  });
+
+  it('takes a newer head of the same ledger only', async () => {
+    const notice = await good();
+    const foreign = testSigner('records.example/ledger/another', 'foreign');
+    const head = { origin: foreign.key.name, size: 7, root: tree.root(7) };
+    const since = { ...notice.since!, checkpoint: await signCheckpoint(head, [foreign]) };
+    const trustedKeys = [KEY, formatVerifierKey(foreign.key)];
+    expect(outcomes(verifyNotice({ ...notice, since, trustedKeys }))['only-appended']).toBe(
+      'failed',
+    );
+  });
+
   it('names a history that was rewritten since', async () => {
     const notice = await good();
     const since = await extensionOf(4, 7);
@@ -232,5 +280,28 @@ describe('followKeys', () => {
       expect(conclude(followed.steps)).toBe('failed');
     }
     expect(followKeys([stranger.key], [good]).keys).toEqual([stranger.key]);
+  });
+
+  it('follows only a line of that kind, to a key of this ledger, from a key it knows', async () => {
+    const next = formatVerifierKey(example.nextSigner.key);
+    const elsewhere = formatVerifierKey(testSigner('records.example/other', 'elsewhere').key);
+    const follow = async (kind: NewLine['kind'], key: string, replaces: string) => {
+      const document = canonicalJson({ v: '1', type: 'tagwire/key', key, replaces });
+      const line = lineText({
+        series: SERIES,
+        index: 0,
+        act: SERIES,
+        at: '2027-05-01T20:00:00.000Z',
+        kind,
+        commitments: commitments('key', { key: document }),
+      });
+      const proof = await proofIn([line], 0, signer);
+      return followKeys([signer.key], [{ document, salt: saltOf('key'), proof }]).keys.length;
+    };
+    expect(await follow('key-published', next, KEY)).toBe(2);
+    expect(await follow('report-signed', next, KEY)).toBe(1);
+    expect(await follow('key-published', elsewhere, KEY)).toBe(1);
+    expect(await follow('key-published', next, next)).toBe(1);
+    expect(await follow('key-published', next, '')).toBe(1);
   });
 });
