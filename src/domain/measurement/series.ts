@@ -1,4 +1,4 @@
-import { compare, max, min, type Rational, rational, sub } from '../quantity/rational';
+import { max, min, type Rational, rational, sub } from '../quantity/rational';
 
 /** At least one value; an empty series is a defect and throws. */
 export type Series = readonly Rational[];
@@ -26,5 +26,3 @@ export const mean = (series: Series): Rational => {
 export const smallest = (series: Series): Rational => series.reduce(min);
 export const largest = (series: Series): Rational => series.reduce(max);
 export const range = (series: Series): Rational => sub(largest(series), smallest(series));
-
-export const ascending = (series: Series): Series => [...series].sort(compare);

@@ -1,8 +1,8 @@
 import { at20, readBy } from '../measurement/temperature';
 import { add, type Rational, sub } from '../quantity/rational';
 import type { BoreSheet } from './bore-sheet';
+import { warmthsOf } from './budget/warmths';
 import { type Clearance, clearanceOf, type Diameters } from './clearance';
-import { warmthsOf } from './warmths';
 
 /**
  * The clearance when all is at 20 °C (ISO 1): each diameter as it truly is now (the gauge's or the

@@ -7,16 +7,18 @@ import { baseNumber } from '../quantity/convert';
 import { quantityOf } from '../quantity/quantity';
 import { type Rational, sub, toNumber } from '../quantity/rational';
 import type { BoreSheet, Length } from './bore-sheet';
+import { sheetRepeatability } from './budget/reading-lines';
+import { temperatureBudget } from './budget/temperature-budget';
+import { missingOf } from './checks/missing';
+import { warningsOf } from './checks/warnings';
 import { type Clearance, clearanceOf, type Diameters, diametersOf } from './clearance';
 import { clearanceAt20 } from './clearance-at-20';
 import { correctedReadings, driftOf } from './dial';
-import { outOfRound, taperOf } from './form';
-import { missingOf } from './missing';
+import { outOfRound, taperOf } from './form/form';
+import type { Shape } from './form/shape';
 import { placesOf } from './places';
 import { mustRedo } from './redo';
-import type { Shape } from './shape';
-import { DIAL, sheetBudget, sheetRepeatability, temperatureBudget } from './sheet-budget';
-import { warningsOf } from './warnings';
+import { DIAL, sheetBudget } from './sheet-budget';
 
 export interface ClearanceFigures {
   readonly mean: Length;

@@ -1,4 +1,4 @@
-import type { BoreSheet } from './bore-sheet';
+import type { BoreSheet } from '../bore-sheet';
 
 const unique = (values: readonly string[]): readonly string[] => [...new Set(values)];
 

@@ -1,9 +1,9 @@
-import { assess } from '../decision/assess';
-import type { LimitRequirement } from '../decision/requirement';
-import { type BudgetLine, budgetLines } from '../measurement/budget';
-import { combine } from '../measurement/uncertainty';
-import type { BoreSheet } from './bore-sheet';
-import { sheetBudget } from './sheet-budget';
+import { assess } from '../../decision/assess';
+import type { LimitRequirement } from '../../decision/requirement';
+import { type BudgetLine, budgetLines } from '../../measurement/budget';
+import { combine } from '../../measurement/uncertainty';
+import type { BoreSheet } from '../bore-sheet';
+import { sheetBudget } from '../sheet-budget';
 
 /** What a clearance is about to be measured with. */
 export type Kit = Pick<

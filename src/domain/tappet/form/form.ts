@@ -1,6 +1,6 @@
-import { largest, mean, range, type Series } from '../measurement/series';
-import { compare, type Rational, sub } from '../quantity/rational';
-import { axesOf, depthsOf, type Place } from './places';
+import { largest, mean, range, type Series } from '../../measurement/series';
+import { type Rational, sub } from '../../quantity/rational';
+import { axesOf, depthsOf, type Place } from '../places';
 import { type Shape, shapeOf } from './shape';
 
 export interface Taper {
@@ -41,18 +41,4 @@ export const taperOf = (places: readonly Place[], division: Rational): Taper | n
     signed: sub(top, bottom),
     shape: shapeOf(means, division),
   };
-};
-
-/** The places whose bore is smallest and largest: where to look again. */
-export const extremes = (
-  places: readonly Place[],
-): { readonly smallest: Place; readonly largest: Place } | null => {
-  const [first] = places;
-  if (first === undefined) return null;
-  const pick = (better: 1 | -1) =>
-    places.reduce(
-      (best, place) => (compare(place.value, best.value) === better ? place : best),
-      first,
-    );
-  return { smallest: pick(-1), largest: pick(1) };
 };

@@ -1,8 +1,8 @@
-import type { TemperatureAdvice } from '../measurement/hold';
-import type { Repeatability } from '../measurement/repeatability';
-import { abs, compare, fromDecimalText, type Rational, sub } from '../quantity/rational';
-import type { BoreSheet } from './bore-sheet';
-import type { Clearance } from './clearance';
+import type { TemperatureAdvice } from '../../measurement/hold';
+import type { Repeatability } from '../../measurement/repeatability';
+import { abs, compare, fromDecimalText, type Rational, sub } from '../../quantity/rational';
+import type { BoreSheet } from '../bore-sheet';
+import type { Clearance } from '../clearance';
 
 const NOMINAL = ['0.842', '0.875', '0.904'].map((inches) => fromDecimalText(inches));
 const INCH = fromDecimalText('0.0254');

@@ -1,6 +1,6 @@
-import { getMaterial, type Material } from '../measurement/material';
-import type { Warmth } from '../measurement/temperature';
-import type { BoreSheet } from './bore-sheet';
+import { getMaterial, type Material } from '../../measurement/material';
+import type { Warmth } from '../../measurement/temperature';
+import type { BoreSheet } from '../bore-sheet';
 
 export interface Warmths {
   readonly bore: Warmth;

@@ -1,5 +1,5 @@
-import { range, type Series } from '../measurement/series';
-import { compare, type Rational, sub } from '../quantity/rational';
+import { range, type Series } from '../../measurement/series';
+import { compare, type Rational, sub } from '../../quantity/rational';
 
 export type Shape = 'straight' | 'tapered' | 'bell-mouthed' | 'waisted' | 'barrelled';
 
