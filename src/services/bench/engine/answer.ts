@@ -2,8 +2,17 @@ import type { Derived } from '@/domain/engine/derived';
 import { expand } from '@/domain/measurement/uncertainty';
 import { widthIn } from '@/domain/quantity/convert';
 
+interface Answer {
+  readonly value: string;
+  readonly unit: string;
+  readonly working: string[];
+  readonly datum: string;
+  readonly expandedUncertainty?: number;
+  readonly coverageFactor?: number;
+}
+
 /** A derived quantity as the bench answers it, U at two-sided 95 % where an uncertainty is known. */
-export function answerOf({ value, standardUncertainty, working, datum }: Derived) {
+export function answerOf({ value, standardUncertainty, working, datum }: Derived): Answer {
   const answer = { value: value.text, unit: value.unit, working: [...working], datum };
   if (standardUncertainty === undefined) return answer;
   const expanded = expand({ standardUncertainty, degreesOfFreedom: null });

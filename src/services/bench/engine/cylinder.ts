@@ -1,6 +1,7 @@
 import type { EngineInputs, EngineResponse } from '@/contracts/bench/engine';
 import { roundArea } from '@/domain/engine/area';
 import { clearanceVolume, compressionRatio } from '@/domain/engine/compression-ratio';
+import { shown } from '@/domain/engine/derived';
 import { displacement, roundedUp } from '@/domain/engine/displacement';
 import { type Failure, invalid } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
@@ -17,9 +18,22 @@ export function workOutDisplacement(inputs: EngineInputs<'displacement'>): Answe
   if (take.faults.length > 0) return fail(invalid(take.faults));
   const result = displacement({ bores, stroke, cylinders: inputs.cylinders });
   if (inputs.roundUp !== true) return ok(answerOf(result));
+  // U belongs to the value before rounding, so it moves into the working with it.
+  const { expandedUncertainty, coverageFactor, ...before } = answerOf(result);
   const value = roundedUp(result.value);
-  const line = `Rounded up to the next whole unit: ${value.text} ${value.unit}`;
-  return ok(answerOf({ ...result, value, working: [...result.working, line] }));
+  const spread =
+    expandedUncertainty === undefined || coverageFactor === undefined
+      ? ''
+      : ` ± ${expandedUncertainty.toPrecision(2)} ${before.unit} (k = ${coverageFactor.toFixed(2)})`;
+  return ok({
+    ...before,
+    value: value.text,
+    working: [
+      ...before.working,
+      `Before rounding: ${shown(result.value, 4)}${spread}`,
+      `Rounded up to the next whole unit: ${value.text} ${value.unit}`,
+    ],
+  });
 }
 
 export function workOutCompressionRatio(inputs: EngineInputs<'compression-ratio'>): Answer {
