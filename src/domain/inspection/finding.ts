@@ -2,21 +2,18 @@ import type { ClauseResult } from '../rulebook/clause-result';
 
 /** A measurement or check held against one clause, as it stands in a signed report. */
 export interface Finding extends ClauseResult {
-  /** The numbers behind the statement: readings' ids in taking order. */
+  /** Ids of the rows behind the statement, in taking order. */
   readonly readings: readonly string[];
+  readonly checks: readonly string[];
   readonly gauges: readonly string[];
   readonly photographs: readonly string[];
-  /** The inspector's own words, where they add something. */
-  readonly remark?: string | undefined;
 }
 
-/** A closed finding is corrected only by a new revision; both stay. */
+/** A closed report is corrected only by a new revision with a reason; both stay. */
 export interface Revision {
   readonly number: number;
+  /** Empty for the first. */
   readonly reason: string;
-  readonly by: string;
-  /** ISO 8601 instant in UTC. */
-  readonly at: string;
-  /** SHA-256 of the report that this one corrects. */
-  readonly corrects: string;
+  /** SHA-256, hexadecimal, of the report that this one corrects. */
+  readonly corrects?: string | undefined;
 }

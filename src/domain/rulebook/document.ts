@@ -1,10 +1,7 @@
+import type { Json } from '../ledger/canonical';
+
 /** JSON without numbers: they stand as strings, since `0.8440` would come back as `0.844`. */
-export type PlainDocument =
-  | string
-  | boolean
-  | null
-  | readonly PlainDocument[]
-  | { readonly [key: string]: PlainDocument };
+export type PlainDocument = Json;
 
 /**
  * Plain data as a document to be canonicalised: numbers become strings, absent members are left

@@ -253,3 +253,14 @@ export const getQuantityEntry = (name: QuantityName): QuantityEntry => QUANTITIE
 
 export const QUANTITY_NAMES: readonly QuantityName[] =
   Object.keys(QUANTITIES).filter(isQuantityName);
+
+const READ: Partial<Record<QuantityName, readonly QuantityName[]>> = {
+  'foot-less-body': ['lifter-body-diameter', 'foot-diameter'],
+  'tappet-clearance': ['lifter-body-diameter', 'tappet-bore-diameter'],
+  'bore-out-of-round': ['tappet-bore-diameter'],
+  'bore-taper': ['tappet-bore-diameter'],
+  displacement: ['displacement', 'cylinder-bore', 'stroke'],
+};
+
+/** What is read off a gauge, or written on a sheet, so that the quantity can be worked out. */
+export const readingsFor = (name: QuantityName): readonly QuantityName[] => READ[name] ?? [name];

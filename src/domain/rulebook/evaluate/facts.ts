@@ -75,7 +75,7 @@ export const positionsFor = (per: Per, positions: Positions): readonly Position[
 };
 
 export const findNumber = (
-  facts: Facts,
+  facts: Pick<Facts, 'numbers'>,
   quantity: QuantityName,
   position: string,
   figure: Figure | undefined,

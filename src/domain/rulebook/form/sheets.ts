@@ -1,5 +1,11 @@
 import type { Clause } from '../clause';
-import { getQuantityEntry, type Per, type QuantityName, type Source } from '../quantity-catalogue';
+import {
+  getQuantityEntry,
+  type Per,
+  type QuantityName,
+  readingsFor,
+  type Source,
+} from '../quantity-catalogue';
 import type { SheetKind } from '../requirement';
 import type { SheetColumn, SheetForm } from './form';
 
@@ -8,14 +14,6 @@ const SHEETS: Readonly<Record<Source, { readonly sheet: SheetKind; readonly titl
   'engine-sheet': { sheet: 'engine', title: 'Build sheet' },
   'cam-sheet': { sheet: 'camshaft', title: 'Cam card' },
   'weight-sheet': { sheet: 'weights', title: 'Weights' },
-};
-
-/** What a builder writes down so that the quantity can be worked out. */
-const MEASURED: Partial<Record<QuantityName, readonly QuantityName[]>> = {
-  'foot-less-body': ['lifter-body-diameter', 'foot-diameter'],
-  'tappet-clearance': ['lifter-body-diameter', 'tappet-bore-diameter'],
-  'bore-out-of-round': ['tappet-bore-diameter'],
-  'bore-taper': ['tappet-bore-diameter'],
 };
 
 interface Needed {
@@ -37,7 +35,7 @@ const needed = (clauses: readonly Clause[]): readonly Needed[] => {
     const key = `${source} ${per}`;
     const sheet = sheets.get(key) ?? { source, per, columns: new Map() };
     sheets.set(key, sheet);
-    for (const quantity of MEASURED[rule.quantity] ?? [rule.quantity]) {
+    for (const quantity of readingsFor(rule.quantity)) {
       sheet.columns.set(quantity, (sheet.columns.get(quantity) ?? new Set()).add(number));
     }
   }

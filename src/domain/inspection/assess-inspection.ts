@@ -1,0 +1,147 @@
+import { pooledRepeatability, type Repeatability } from '../measurement/repeatability';
+import { findAs, minus, type Quantity } from '../quantity/quantity';
+import { fromStored } from '../quantity/stored';
+import { decisionOf } from '../rulebook/evaluate/decision-of';
+import { type Bearer, evaluateRules } from '../rulebook/evaluate/evaluate-rules';
+import type { Facts, NumberFact } from '../rulebook/evaluate/facts';
+import { getQuantityEntry, type Per } from '../rulebook/quantity-catalogue';
+import type { RulesInForce } from '../rulebook/rules-in-force';
+import type { BoreSheet } from '../tappet/bore-sheet';
+import type { Completeness } from '../tappet/completeness';
+import {
+  type BoreLayout,
+  type BorePosition,
+  boreName,
+  positionsOf,
+} from '../tappet/layout/bore-layout';
+import { DOMAIN_VERSION } from '../version';
+import type { GaugeRecord } from './capture/gauge-record';
+import { type JudgedReading, judgeReadings } from './capture/readings-that-count';
+import { positionKey, type ReadingRow, type RemarkRow, type ZeroRow } from './capture/rows';
+import { completenessBy } from './completeness';
+import type { Finding } from './finding';
+import { withRows } from './findings';
+import { answersFrom, gapsFrom, positionsIn, readingsBehind, weaknessOf } from './found-facts';
+import { boreSetsOf, type Capture } from './measure/bore-sets';
+import { factsOfSet, joinSets, measureSet, type SetResult } from './measure/measure-position';
+import { derivedNumbers, plainNumbers } from './measure/plain-numbers';
+
+/** Everything recorded in the bay, and what it is held against. */
+export interface InspectionRecord {
+  readonly rules: RulesInForce;
+  readonly bearer: Bearer;
+  readonly layout: BoreLayout;
+  /** The event's IANA zone: a gauge's due day is a day there. */
+  readonly zone: string;
+  readonly readings: readonly ReadingRow[];
+  readonly zeros: readonly ZeroRow[];
+  readonly remarks: readonly RemarkRow[];
+  readonly gauges: readonly GaugeRecord[];
+  /** The accepted declaration as facts, for what must match it. */
+  readonly paperwork?: Facts | undefined;
+  /** Unit of lengths per bore; inches unless stated. */
+  readonly unit?: string | undefined;
+  readonly materials?: BoreSheet['materials'];
+}
+
+export interface BoreResult {
+  readonly key: string;
+  readonly position: BorePosition;
+  /** First set and independent second ones. */
+  readonly sets: readonly SetResult[];
+}
+
+export interface InspectionAssessment {
+  readonly domainVersion: string;
+  readonly bores: readonly BoreResult[];
+  readonly findings: readonly Finding[];
+  readonly completeness: Completeness;
+  /** Bores whose closing zero failed: to be measured again. */
+  readonly redo: readonly BorePosition[];
+  readonly judged: readonly JudgedReading[];
+  readonly facts: Facts;
+}
+
+const windowOf = (rules: RulesInForce): Quantity<'length'> | undefined => {
+  for (const { requirement } of rules.clauses) {
+    if (requirement?.kind !== 'limit' || requirement.quantity !== 'tappet-clearance') continue;
+    const { min, max } = decisionOf(requirement).limits;
+    const low = min && findAs('length', min);
+    const high = max && findAs('length', max);
+    if (low !== undefined && high !== undefined) return minus(high, low);
+  }
+  return undefined;
+};
+
+/** Pooled over the true repeats of the whole inspection: same bore, set, run, depth and axis. */
+const pooled = (counting: readonly JudgedReading[]): Repeatability | undefined => {
+  const groups = new Map<string, JudgedReading[]>();
+  for (const reading of counting) {
+    const { quantity, depth, axis, set, zeroRunId = '' } = reading.row;
+    if (quantity !== 'tappet-bore-diameter') continue;
+    const place = [positionKey(reading.place, 'bore'), set, zeroRunId, depth, axis].join('\n');
+    groups.set(place, [...(groups.get(place) ?? []), reading]);
+  }
+  const series = [...groups.values()].map((group) =>
+    group.map(({ row }) => fromStored(row.value, 'length').value),
+  );
+  return pooledRepeatability(series) ?? undefined;
+};
+
+const rowsOf = (per: Per) => (per === 'lifter' ? 'bore' : per);
+
+/**
+ * From the rows of the bay to a result per bore and a finding per clause. The tablet and the server
+ * run this same function on the same rows, in whatever order those arrived.
+ */
+export const assessInspection = (record: InspectionRecord): InspectionAssessment => {
+  const { rules, layout, remarks, gauges } = record;
+  const judged = judgeReadings(record.readings, remarks);
+  const counting = judged.filter((reading) => reading.state === 'counts');
+  const capture: Capture = {
+    judged,
+    zeros: record.zeros,
+    gauges,
+    unit: record.unit ?? 'in',
+    window: windowOf(rules),
+    materials: record.materials,
+    repeatability: pooled(counting),
+  };
+  const bores = positionsOf(layout).map((position): BoreResult => {
+    const key = boreName(position);
+    return { key, position, sets: boreSetsOf(capture, key).map(measureSet) };
+  });
+  const positions = positionsIn(layout);
+  const plain = plainNumbers(counting, gauges);
+  const numbers = [
+    ...bores.flatMap(({ key, sets }) => joinSets(key, sets.map(factsOfSet))),
+    ...plain,
+    ...derivedNumbers(plain, positions),
+  ].map((fact): NumberFact => {
+    if (fact.cannotSupportBreach !== undefined) return fact;
+    const per = rowsOf(getQuantityEntry(fact.quantity).per);
+    const weakness = weaknessOf(readingsBehind(fact, counting, per), record);
+    return weakness === undefined ? fact : { ...fact, cannotSupportBreach: weakness };
+  });
+  const facts: Facts = {
+    origin: 'found',
+    positions,
+    numbers,
+    answers: answersFrom(remarks),
+    evidence: [],
+    couldNotBeReached: gapsFrom(remarks),
+    references: [],
+    declared: record.paperwork,
+  };
+  return {
+    domainVersion: DOMAIN_VERSION,
+    bores,
+    findings: withRows(evaluateRules(rules, facts, record.bearer), { rules, counting, remarks }),
+    completeness: completenessBy(rules, layout, counting, remarks),
+    redo: bores
+      .filter(({ sets }) => sets.some(({ measurement }) => measurement.redo))
+      .map(({ position }) => position),
+    judged,
+    facts,
+  };
+};

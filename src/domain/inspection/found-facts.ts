@@ -1,0 +1,81 @@
+import { fromStored } from '../quantity/stored';
+import type { AnswerFact, GapFact, NumberFact, Positions } from '../rulebook/evaluate/facts';
+import {
+  getQuantityEntry,
+  isQuantityName,
+  QUANTITY_NAMES,
+  readingsFor,
+} from '../rulebook/quantity-catalogue';
+import { type BoreLayout, boreName, positionsOf } from '../tappet/layout/bore-layout';
+import { findWeakness, type GaugeRecord } from './capture/gauge-record';
+import type { JudgedReading } from './capture/readings-that-count';
+import { inTakingOrder, positionKey, type RemarkRow } from './capture/rows';
+
+/** Every bore and cylinder of a position map, as facts and results name them. */
+export const positionsIn = (layout: BoreLayout): Positions => ({
+  bores: positionsOf(layout).map((position) => ({
+    key: boreName(position),
+    label: `Bore ${boreName(position)}`,
+  })),
+  cylinders: layout.banks
+    .flatMap((bank) => bank.cylinders)
+    .sort((a, b) => a - b)
+    .map((cylinder) => ({ key: String(cylinder), label: `Cylinder ${cylinder}` })),
+});
+
+const accepted = (remarks: readonly RemarkRow[], kind: RemarkRow['kind']): readonly RemarkRow[] =>
+  inTakingOrder(remarks).filter((row) => row.kind === kind && row.standing === 'accepted');
+
+/** The last answer of each check stands. */
+export const answersFrom = (remarks: readonly RemarkRow[]): readonly AnswerFact[] => {
+  const last = new Map<string, AnswerFact>();
+  for (const { place, subject, answer } of accepted(remarks, 'check')) {
+    const position = positionKey(place, 'bore');
+    if (answer.value !== undefined)
+      last.set(`${subject} ${position}`, { subject, position, answer: answer.value });
+  }
+  return [...last.values()];
+};
+
+/** A bore out of reach leaves open whatever is worked out from its readings. */
+export const gapsFrom = (remarks: readonly RemarkRow[]): readonly GapFact[] =>
+  accepted(remarks, 'not-reached').flatMap(({ place, subject }): readonly GapFact[] => {
+    const position = positionKey(place, 'bore');
+    if (subject === '') return [{ position }];
+    if (!isQuantityName(subject)) return [{ position, subject }];
+    return QUANTITY_NAMES.filter(
+      (name) => name === subject || readingsFor(name).includes(subject),
+    ).map((name) => ({ position, subject: name }));
+  });
+
+/** The readings that a number stands on. */
+export const readingsBehind = (
+  fact: Pick<NumberFact, 'quantity' | 'position'>,
+  counting: readonly JudgedReading[],
+  per: 'bore' | 'cylinder' | 'engine' | 'car',
+): readonly JudgedReading[] =>
+  counting.filter(
+    ({ row, place }) =>
+      readingsFor(fact.quantity).includes(row.quantity) &&
+      positionKey(place, per) === fact.position,
+  );
+
+interface Bay {
+  readonly gauges: readonly GaugeRecord[];
+  readonly zone: string;
+}
+
+/** Why readings cannot support a breach: a gauge unknown, out of calibration or out of its range. */
+export const weaknessOf = (readings: readonly JudgedReading[], bay: Bay): string | undefined => {
+  for (const { row } of readings) {
+    const record = bay.gauges.find((gauge) => gauge.id === row.gaugeId);
+    if (record === undefined) return 'the gauge is not in the register';
+    const size = row.method === 'absolute' ? sizeOf(row) : undefined;
+    const weakness = findWeakness(record, { occurredAt: row.occurredAt, zone: bay.zone, size });
+    if (weakness !== undefined) return weakness;
+  }
+  return undefined;
+};
+
+const sizeOf = (row: JudgedReading['row']) =>
+  fromStored(row.value, getQuantityEntry(row.quantity).dimension);

@@ -1,0 +1,181 @@
+import { assess } from '../../decision/assess';
+import { largest, mean, type Series, smallest } from '../../measurement/series';
+import type { Combined } from '../../measurement/uncertainty';
+import { combine } from '../../measurement/uncertainty';
+import { quantityOf } from '../../quantity/quantity';
+import type { NumberFact } from '../../rulebook/evaluate/facts';
+import type { QuantityName } from '../../rulebook/quantity-catalogue';
+import type { Length } from '../../tappet/bore-sheet';
+import { diametersOf } from '../../tappet/clearance';
+import { correctedReadings } from '../../tappet/dial';
+import { type FootAgainstBody, footAgainstBody } from '../../tappet/foot';
+import { type BoreMeasurement, measureBore } from '../../tappet/measure-bore';
+import { placesOf } from '../../tappet/places';
+import { DIAL, MICROMETER } from '../../tappet/sheet-budget';
+import type { BoreSet } from './bore-sets';
+import { diameterUncertainty, formUncertainty } from './measure-lifter';
+
+export interface SetResult {
+  readonly set: BoreSet;
+  readonly measurement: BoreMeasurement;
+  readonly foot: FootAgainstBody | null;
+}
+
+export const measureSet = (set: BoreSet): SetResult => ({
+  set,
+  measurement: measureBore(set.sheet),
+  foot: footAgainstBody(set.foot, set.sheet.lifter, set.sheet.unit, set.sheet.lifterGauge),
+});
+
+type Fact = Omit<NumberFact, 'position'>;
+
+const threeFigures = (
+  quantity: QuantityName,
+  unit: string,
+  series: Series,
+  uncertainty: Combined,
+): readonly Fact[] =>
+  series.length === 0
+    ? []
+    : [
+        {
+          quantity,
+          figure: 'mean',
+          value: quantityOf('length', mean(series), unit),
+          ...uncertainty,
+        },
+        {
+          quantity,
+          figure: 'smallest',
+          value: quantityOf('length', smallest(series), unit),
+          ...uncertainty,
+        },
+        {
+          quantity,
+          figure: 'largest',
+          value: quantityOf('length', largest(series), unit),
+          ...uncertainty,
+        },
+      ];
+
+const clearanceFacts = ({ measurement }: SetResult): readonly Fact[] => {
+  const found = measurement.clearanceAt20C ?? measurement.clearance;
+  if (found === null) return [];
+  const { standardUncertainty, degreesOfFreedom } = measurement;
+  const fact = { quantity: 'tappet-clearance', standardUncertainty, degreesOfFreedom } as const;
+  return [
+    { ...fact, figure: 'mean', value: found.mean },
+    { ...fact, figure: 'smallest', value: found.min },
+    { ...fact, figure: 'largest', value: found.max },
+  ];
+};
+
+const formFacts = ({ set, measurement }: SetResult): readonly Fact[] => {
+  const uncertainty = formUncertainty(set.sheet.gauge ?? DIAL, measurement.budget);
+  const { outOfRound, taper } = measurement;
+  const fact = (quantity: QuantityName, value: Length): Fact => ({
+    quantity,
+    value,
+    ...uncertainty,
+  });
+  return [
+    ...(outOfRound === null ? [] : [fact('bore-out-of-round', outOfRound)]),
+    ...(taper === null ? [] : [fact('bore-taper', taper.depthMeans)]),
+  ];
+};
+
+const lifterFacts = ({ set, foot }: SetResult): readonly Fact[] => {
+  const { lifter, lifterGauge = MICROMETER, unit } = set.sheet;
+  const figures = (quantity: QuantityName, lengths: readonly Length[]) => {
+    const [first] = lengths;
+    return first === undefined
+      ? []
+      : threeFigures(
+          quantity,
+          unit,
+          lengths.map((length) => length.value),
+          diameterUncertainty(first, lifterGauge),
+        );
+  };
+  return [
+    ...figures('lifter-body-diameter', lifter),
+    ...figures('foot-diameter', set.foot),
+    ...(foot === null
+      ? []
+      : [
+          {
+            quantity: 'foot-less-body',
+            value: foot.difference,
+            ...combine(foot.components),
+          } as const,
+        ]),
+  ];
+};
+
+const boreFacts = ({ set, measurement }: SetResult): readonly Fact[] => {
+  const now = diametersOf(set.sheet, placesOf(correctedReadings(set.sheet)));
+  if (now?.sizesKnown !== true) return [];
+  const { standardUncertainty, degreesOfFreedom } = measurement;
+  return threeFigures('tappet-bore-diameter', set.sheet.unit, now.bores, {
+    standardUncertainty,
+    degreesOfFreedom,
+  });
+};
+
+/** Every number that one set gives, each with its uncertainty. */
+export const factsOfSet = (result: SetResult): readonly Fact[] => [
+  ...lifterFacts(result),
+  ...boreFacts(result),
+  ...clearanceFacts(result),
+  ...formFacts(result),
+];
+
+const DISAGREE = 'two independent sets of readings differ by more than their uncertainty';
+
+/** Whether a second value differs from a first by no more than their joint U. */
+const agrees = (first: Fact, second: Fact): boolean =>
+  assess(
+    {
+      limits: { min: first.value, max: first.value },
+      decisionRule: { kind: 'guarded-rejection', guardFactor: '1' },
+      comparison: { method: 'absolute' },
+      fitRatio: '0',
+    },
+    {
+      value: second.value,
+      standardUncertainty: Math.hypot(first.standardUncertainty, second.standardUncertainty),
+    },
+  ).complies === true;
+
+/**
+ * One fact a figure out of all sets: their mean, with the larger uncertainty (independent sets by one
+ * gauge share its errors). Sets that disagree support no breach.
+ */
+export const joinSets = (
+  position: string,
+  sets: readonly (readonly Fact[])[],
+): readonly NumberFact[] => {
+  const groups = new Map<string, Fact[]>();
+  for (const fact of sets.flat()) {
+    const key = `${fact.quantity} ${fact.figure ?? ''}`;
+    groups.set(key, [...(groups.get(key) ?? []), fact]);
+  }
+  return [...groups.values()].flatMap(([first, ...others]): readonly NumberFact[] => {
+    if (first === undefined) return [];
+    if (others.length === 0) return [{ ...first, position }];
+    const widest = others.reduce(
+      (wide, fact) => (fact.standardUncertainty > wide.standardUncertainty ? fact : wide),
+      first,
+    );
+    const { dimension, unit } = first.value;
+    const joined = mean([first, ...others].map((fact) => fact.value.value));
+    return [
+      {
+        ...widest,
+        position,
+        value: quantityOf(dimension, joined, unit),
+        ...(others.every((fact) => agrees(first, fact)) ? {} : { cannotSupportBreach: DISAGREE }),
+      },
+    ];
+  });
+};
