@@ -87,20 +87,35 @@ const insertPlainly = async (client: Client, seriesId: string, index: number): P
   ]);
 };
 
-const inTransactions = async (
+const inTransaction = async (
   client: Client,
-  count: number,
-  size: number,
+  indices: readonly number[],
   one: (index: number) => Promise<void>,
 ): Promise<number> => {
   const { ms } = await timed(async () => {
-    for (let from = 0; from < count; from += size) {
-      await client.query('begin');
-      for (let index = from; index < Math.min(count, from + size); index++) await one(index);
-      await client.query('commit');
-    }
+    await client.query('begin');
+    for (const index of indices) await one(index);
+    await client.query('commit');
   });
   return ms;
+};
+
+/** Both ways turn about, so that what else the machine does weighs on both alike. */
+const compare = async (
+  count: number,
+  size: number,
+  plain: { client: Client; one: (index: number) => Promise<void> },
+  ledger: { client: Client; one: (index: number) => Promise<void> },
+): Promise<void> => {
+  let plainMs = 0;
+  let ledgerMs = 0;
+  for (let from = 0; from < count; from += size) {
+    const indices = Array.from({ length: Math.min(size, count - from) }, (_, i) => from + i);
+    plainMs += await inTransaction(plain.client, indices, plain.one);
+    ledgerMs += await inTransaction(ledger.client, indices, ledger.one);
+  }
+  say(`${String(size).padStart(3)} a transaction  plain insert ${perSecond(count, plainMs)}`);
+  say(`                   ledger line  ${perSecond(count, ledgerMs)}`);
 };
 
 const readNodes = async (client: Client, plan: ProofPlan | readonly NodeAt[]) => {
@@ -150,16 +165,17 @@ const appending = async (app: Client, owner: Client): Promise<void> => {
     `create table public.bench_plain (series_id uuid, index bigint, kind text not null, line text not null,
      leaf_hash bytea not null, act_id uuid, primary key (series_id, index))`,
   );
-  const single = await inTransactions(app, SINGLE, 1, () => append(app, other));
-  const plainSingle = await inTransactions(owner, SINGLE, 1, (i) => insertPlainly(owner, other, i));
-  say(`one a transaction    plain insert ${perSecond(SINGLE, plainSingle)}`);
-  say(`                     ledger line  ${perSecond(SINGLE, single)}`);
-  const bulk = await inTransactions(app, total, BATCH, () => append(app, series));
-  const plainBulk = await inTransactions(owner, total, BATCH, (i) =>
-    insertPlainly(owner, series, i),
-  );
-  say(`${BATCH} a transaction    plain insert ${perSecond(total, plainBulk)}`);
-  say(`                     ledger line  ${perSecond(total, bulk)}`);
+  for (const [count, size, id] of [
+    [SINGLE, 1, other],
+    [total, BATCH, series],
+  ] as const) {
+    await compare(
+      count,
+      size,
+      { client: owner, one: (index) => insertPlainly(owner, id, index) },
+      { client: app, one: () => append(app, id) },
+    );
+  }
 };
 
 const verifying = async (app: Client): Promise<void> => {

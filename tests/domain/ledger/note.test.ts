@@ -65,6 +65,12 @@ describe('Ed25519', () => {
     expect(verifySignature(signer, unhex(message), unhex(signature).slice(1))).toBe(false);
   });
 
+  it('refuses the key of small order, under which one signature fits every text', () => {
+    const one = Uint8Array.from({ length: 32 }, (_, i) => (i === 0 ? 1 : 0));
+    const anything = concat(one, new Uint8Array(32));
+    expect(verifySignature(verifierKey('x', one), utf8('any text'), anything)).toBe(false);
+  });
+
   it('verifies what OpenSSL signs', () => {
     fc.assert(
       fc.property(fc.uint8Array({ maxLength: 200 }), (message) => {

@@ -80,7 +80,8 @@ describe('the stored frontier', () => {
     expect(decodeFrontier(bytes.slice(0, -1)).ok).toBe(false);
     expect(decodeFrontier(bytes.slice(0, -32)).ok).toBe(false);
     expect(decodeFrontier(bytes.slice(0, 7)).ok).toBe(false);
-    expect(decodeFrontier(Uint8Array.of(255, 255, 255, 255, 255, 255, 255, 255)).ok).toBe(false);
+    expect(decodeFrontier(Uint8Array.from({ length: 8 }, () => 255)).ok).toBe(false);
+    expect(decodeFrontier(Uint8Array.from({ length: 40 }, () => 255)).ok).toBe(false);
   });
 });
 
@@ -160,6 +161,17 @@ describe('a proof for a tree of another height', () => {
     for (const size of [1, 2, 3, 4, 9, 16, 1000]) {
       expect(verifyInclusion({ ...claim, size }), String(size)).toBe(false);
     }
+    const later = fillPlan(planInclusion(4, 8), tree.read);
+    const moved = { leafHash: tree.leaves[4]!, index: 0, size: 4, path: later, root: tree.root(8) };
+    expect(verifyInclusion(moved)).toBe(false);
+    const shrunk = {
+      first: { size: 3, root: tree.root(7) },
+      second: { size: 4, root: tree.root(8) },
+      path: fillPlan(planConsistency(7, 8), tree.read),
+    };
+    expect(verifyConsistency(shrunk)).toBe(false);
+    const nothing = { size: 0, root: tree.root(0) };
+    expect(verifyConsistency({ first: nothing, second: nothing, path: [] })).toBe(false);
     const grown = {
       first: { size: 4, root: tree.root(4) },
       path: fillPlan(planConsistency(4, 8), tree.read),
