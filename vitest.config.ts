@@ -25,6 +25,7 @@ export default defineConfig({
     env: { TZ: 'UTC', ASTRO_TELEMETRY_DISABLED: '1' },
     projects: [
       project('domain'),
+      project('contracts'),
       project('components'),
       project('services', { globalSetup: database }),
       project('api', { globalSetup: database, testTimeout: 60_000 }),
