@@ -1,14 +1,17 @@
 import type { APIContext, APIRoute } from 'astro';
 import { describe, expect, it } from 'vitest';
+import * as z from 'zod/mini';
 import { assessResponse } from '@/contracts/bench/assess';
 import { clearanceResponse } from '@/contracts/bench/clearance';
 import { engineResponse } from '@/contracts/bench/engine';
+import { operations } from '@/contracts/bench/operations';
 import { studyResponse } from '@/contracts/bench/study';
 import { uncertaintyResponse } from '@/contracts/bench/uncertainty';
 import { POST as assess } from '@/pages/api/bench/assess';
 import { POST as clearance } from '@/pages/api/bench/clearance';
 import { POST as engine } from '@/pages/api/bench/engine';
 import { POST as study } from '@/pages/api/bench/study';
+import { POST as temperature } from '@/pages/api/bench/temperature';
 import { POST as uncertainty } from '@/pages/api/bench/uncertainty';
 import { checkValue, provenance } from '../support/check-value';
 
@@ -667,5 +670,42 @@ describe('the plumbing of the bench', () => {
     expect((await send(study, body, '192.0.2.10')).status).toBe(200);
     clock.at = new Date(clock.at.getTime() + 1000);
     expect((await send(study, body, '192.0.2.9')).status).toBe(200);
+  });
+});
+
+describe('the contract in OpenAPI', () => {
+  it.each(operations.map((operation) => [operation.path, operation] as const))(
+    '%s has a JSON Schema of what goes in and out',
+    (_, { body, answer }) => {
+      for (const [schema, io] of [
+        [body, 'input'],
+        [answer, 'output'],
+      ] as const) {
+        const made = z.toJSONSchema(schema as z.ZodMiniType, { io });
+        expect(Object.keys(made).length).toBeGreaterThan(1);
+      }
+    },
+  );
+});
+
+describe('POST /api/bench/temperature', () => {
+  it('an iron bore read at 60 °C (constructed: 0.844 ÷ (1 + 11.4e-6 × 40))', async () => {
+    const request = { unit: 'in', length: '0.8440', temperature: '140 °F', material: 'iron' };
+    const answer = await answered(temperature, request);
+    near(answer['lengthAt20C'], 0.844 / (1 + 11.4e-6 * 40), 1e-9);
+    near(answer['change'], 0.844 - 0.844 / (1 + 11.4e-6 * 40), 1e-9);
+    // A steel gauge as warm as the part reads it almost right.
+    const warm = await answered(temperature, { ...request, gaugeTemperature: '60 C' });
+    near(warm['lengthAt20C'], (0.844 * (1 + 11.5e-6 * 40)) / (1 + 11.4e-6 * 40), 1e-9);
+  });
+
+  it.each([
+    ['a temperature without its unit', { temperature: '60' }, '/temperature'],
+    ['below absolute zero', { temperature: '-300 °C' }, '/temperature'],
+    ['an unknown material', { material: 'cheese' }, '/material'],
+    ['a length of zero', { length: '0' }, '/length'],
+  ])('refuses %s, naming the field', async (_, change, pointer) => {
+    const request = { unit: 'in', length: '0.8440', temperature: '60 °C', material: 'iron' };
+    expect(await refused(temperature, { ...request, ...change })).toContain(pointer);
   });
 });
