@@ -32,6 +32,10 @@ export interface PositionResult {
   readonly exact?: Written | undefined;
   /** Expanded uncertainty U of that figure. */
   readonly uncertainty?: Written | undefined;
+  /** Coverage factor k of U, to two decimals; with U, or not at all. */
+  readonly coverageFactor?: string | undefined;
+  /** Width of the guard band where the rule has one. */
+  readonly guardBand?: Written | undefined;
   /** A choice or yes / no as declared or found. */
   readonly answer?: string | undefined;
   readonly sentence: string;

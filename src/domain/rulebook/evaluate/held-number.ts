@@ -4,7 +4,7 @@ import { convert } from '../../quantity/convert';
 import type { Written } from '../../quantity/dimension';
 import { asciiIn, formatWidth } from '../../quantity/format';
 import { decimalsOf } from '../../quantity/number-text';
-import type { Quantity } from '../../quantity/quantity';
+import { minus, type Quantity } from '../../quantity/quantity';
 import type { PositionResult, State } from '../clause-result';
 import { writtenWords } from '../describe';
 import type { Figure } from '../limit';
@@ -55,6 +55,27 @@ const ending = (held: Held, assessment: Assessment<RuleDimension>, state: State)
   return `: no statement, since ${held.fact.cannotSupportBreach ?? 'the reading cannot support one'}.`;
 };
 
+/** The acceptance window less the limits, on the side that has one. */
+const guardOf = (
+  { acceptance }: Assessment<RuleDimension>,
+  { limits }: Decision<RuleDimension>,
+  unit: string,
+  places: number,
+): Written | undefined => {
+  const ends = [
+    [acceptance?.max, limits.max],
+    [acceptance?.min, limits.min],
+  ] as const;
+  for (const [accepted, limit] of ends) {
+    if (accepted === undefined || limit === undefined) continue;
+    const moved = minus(accepted, limit);
+    if (moved.value.n === 0n) return undefined;
+    const width = moved.value.n < 0n ? minus(limit, accepted) : moved;
+    return { text: asciiIn(width, unit, places), unit };
+  }
+  return undefined;
+};
+
 /** One number held against one window, by the decision room; the words come from its numbers. */
 export const heldNumber = (held: Held): PositionResult => {
   const { fact, decision, position, unit } = held;
@@ -74,6 +95,7 @@ export const heldNumber = (held: Held): PositionResult => {
     text: formatWidth(shown.dimension, assessment.expandedUncertainty, unit, places + 1),
     unit,
   };
+  const guardBand = guardOf(assessment, decision, unit, places + 1);
   const figure = held.figure === undefined ? '' : `${held.figure} `;
   const reach = spread ? ` ± ${writtenWords(uncertainty)}` : '';
   return {
@@ -84,7 +106,8 @@ export const heldNumber = (held: Held): PositionResult => {
     figure: held.figure,
     value,
     exact: { text: shown.text, unit: shown.unit },
-    ...(spread ? { uncertainty } : {}),
+    ...(spread ? { uncertainty, coverageFactor: assessment.coverageFactor.toFixed(2) } : {}),
+    ...(guardBand === undefined ? {} : { guardBand }),
     sentence: `${position.label}: ${figure}${writtenWords(value)}${reach}; ${held.limit}${ending(held, assessment, state)}`,
     rule: assessment.sentence,
   };
