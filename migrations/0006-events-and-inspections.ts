@@ -112,6 +112,8 @@ create table public.inspection (
   layout jsonb not null,
   state text not null default 'to-do',
   state_reason text not null default '',
+  -- Not empty while a closed report is open for correction.
+  correction_reason text not null default '',
   bay text not null default '',
   inspector_id uuid references public.person (id),
   opened_at timestamptz,
@@ -208,7 +210,7 @@ ${PLACE},
   zero_run_id uuid,
   value_text text not null,
   value_unit text not null,
-  value_exact bigint not null,
+  value_exact numeric not null,
   temperatures jsonb not null default '{}'::jsonb,
 ${CAPTURED_KEYS},
   foreign key (series_id, gauge_id) references public.gauge (series_id, id)

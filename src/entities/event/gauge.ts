@@ -1,4 +1,12 @@
 import { defineEntity, type InferEntity } from '@mikro-orm/core';
+import type { GaugeRecord } from '@/domain/inspection/capture/gauge-record';
+import type { Written } from '@/domain/quantity/dimension';
+
+/** What the register keeps of a gauge beside its code; a setting ring also has its size. */
+export interface GaugeFigures extends Omit<GaugeRecord, 'id' | 'code' | 'checkedOnRing'> {
+  readonly name: string;
+  readonly size?: Written | undefined;
+}
 
 export const GaugeRow = defineEntity({
   name: 'GaugeRow',
@@ -7,7 +15,7 @@ export const GaugeRow = defineEntity({
     seriesId: p.uuid().primary(),
     id: p.uuid().primary(),
     code: p.text(),
-    description: p.json<Record<string, unknown>>(),
+    description: p.json<GaugeFigures>(),
     status: p.text().$type<'in-use' | 'withdrawn'>(),
     version: p.integer().version(),
   }),

@@ -1,4 +1,6 @@
 import { defineEntity, type InferEntity } from '@mikro-orm/core';
+import type { InspectionState } from '@/domain/inspection/state';
+import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
 
 export const Inspection = defineEntity({
   name: 'Inspection',
@@ -15,9 +17,10 @@ export const Inspection = defineEntity({
     pickedBy: p.uuid(),
     pickedAt: p.datetime(),
     rulesHash: p.blob(),
-    layout: p.json<Record<string, unknown>>(),
-    state: p.text(),
+    layout: p.json<BoreLayout>(),
+    state: p.text().$type<InspectionState>(),
     stateReason: p.text(),
+    correctionReason: p.text(),
     bay: p.text(),
     inspectorId: p.uuid().nullable(),
     openedAt: p.datetime().nullable(),

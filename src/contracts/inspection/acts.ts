@@ -1,0 +1,31 @@
+import * as z from 'zod/mini';
+
+const act = z.uuid('The act needs its identifier.');
+const reason = z.string().check(z.maxLength(500, 'Write at most 500 characters.'));
+
+export const assignRequest = z.strictObject({
+  act,
+  inspectorId: z.nullable(z.uuid('Choose an inspector.')),
+  bay: z.string().check(z.maxLength(20, 'A bay has at most 20 characters.')),
+  version: z.int(),
+});
+
+export const stateRequest = z.strictObject({
+  act,
+  to: z.enum(['open', 'hold', 'resume', 'refuse', 'stop', 'defer'], 'This cannot be asked for.'),
+  reason,
+});
+
+export const signRequest = z.strictObject({
+  act,
+  /** The chain's head as the signer saw it, hexadecimal: what is signed is what was read. */
+  head: z.string().check(z.regex(/^[0-9a-f]{64}$/, 'The report’s state is missing.')),
+});
+
+export const reviseRequest = z.strictObject({
+  act,
+  reason: reason.check(z.minLength(1, 'A correction needs its reason.')),
+});
+
+export const actAnswer = z.strictObject({ state: z.string(), version: z.int() });
+export const signAnswer = z.strictObject({ revision: z.int(), hash: z.string() });

@@ -1,0 +1,50 @@
+import type { Operation } from '../operation';
+import {
+  actAnswer,
+  assignRequest,
+  reviseRequest,
+  signAnswer,
+  signRequest,
+  stateRequest,
+} from './acts';
+import { capturesAnswer, capturesRequest } from './captures';
+
+const signedIn = { method: 'post', access: 'signed-in' } as const;
+
+export const operations: readonly Operation[] = [
+  {
+    ...signedIn,
+    path: '/api/inspections/{id}/captures',
+    summary: 'Record readings, zeros and remarks taken in the bay, exactly once.',
+    body: capturesRequest,
+    answer: capturesAnswer,
+  },
+  {
+    ...signedIn,
+    path: '/api/inspections/{id}/assignment',
+    summary: 'Name the inspector and the bay.',
+    body: assignRequest,
+    answer: actAnswer,
+  },
+  {
+    ...signedIn,
+    path: '/api/inspections/{id}/state',
+    summary: 'Open, hold, refuse, stop, defer or take up an inspection.',
+    body: stateRequest,
+    answer: actAnswer,
+  },
+  {
+    ...signedIn,
+    path: '/api/inspections/{id}/report',
+    summary: 'Sign the report and close the inspection; needs a fresh sign-in.',
+    body: signRequest,
+    answer: signAnswer,
+  },
+  {
+    ...signedIn,
+    path: '/api/inspections/{id}/correction',
+    summary: 'Open a closed report for a correction, with its reason.',
+    body: reviseRequest,
+    answer: actAnswer,
+  },
+];
