@@ -3,7 +3,7 @@ import { renderToStaticMarkup } from 'react-dom/server';
 import { describe, expect, it } from 'vitest';
 import { GaugeStrip, type GaugeStripProps } from '@/components/look/GaugeStrip';
 import { diamondHalf, measures } from '@/components/look/strip/measures';
-import { guardBands, stripScale } from '@/components/look/strip/scale';
+import { guardBands, stripScale } from '@/domain/decision/strip-scale';
 
 const clearance: GaugeStripProps = {
   min: { value: 1.3, label: '1.3 min' },

@@ -1,9 +1,9 @@
+import { type Guard, guardBands, stripScale } from '@/domain/decision/strip-scale';
 import { paint } from './paint';
 import { displayNumber } from './ReadingValue';
 import { type Status, statusWord } from './status';
 import { labelWidth, measures, NARROWEST, type StripSize } from './strip/measures';
 import { Hatch, Label, type Labelled, Limit, Line, Reading } from './strip/parts';
-import { type Guard, guardBands, stripScale } from './strip/scale';
 
 export interface GaugeStripProps {
   readonly min?: Labelled | undefined;

@@ -1,6 +1,6 @@
+import type { Scale } from '@/domain/decision/strip-scale';
 import { face, paint } from '../paint';
 import { diamondHalf, hatchPath, labelWidth, type Measures, NARROWEST } from './measures';
-import type { Scale } from './scale';
 
 export interface Labelled {
   readonly value: number;
