@@ -206,6 +206,7 @@ describe('a void draw', () => {
     expect(conclude(check({}))).toBe('passed');
     expect(failedIds(check({ secret: '00'.repeat(32) }))).toEqual(['secret-kept']);
     expect(failedIds(check({ commitment: '00'.repeat(32) }))).toEqual(['same-draw']);
+    expect(failedIds(check({ draw: commitment.event }))).toEqual(['same-draw']);
     expect(conclude(check({ secret: '' }))).toBe('not checked');
     expect(conclude(verifyVoid({ commitment: text.drawCommitment, ended: '{}' }))).toBe('failed');
   });
