@@ -63,3 +63,14 @@ export async function createDatabase(superuser, name, template = 'template1') {
   await superuser.query(`revoke all on database "${name}" from public`);
   await superuser.query(`grant connect on database "${name}" to tagwire_app`);
 }
+
+/**
+ * @param {string} url
+ * @param {string} name
+ * @returns {string} the address of another database of the same cluster
+ */
+export function withDatabase(url, name) {
+  const changed = new URL(url);
+  changed.pathname = `/${name}`;
+  return changed.href;
+}

@@ -1,7 +1,7 @@
 import { mkdirSync } from 'node:fs';
 import { statfs } from 'node:fs/promises';
 import { join } from 'node:path';
-import { rememberedPorts } from '../set-up/ports.mjs';
+import { demandFree, rememberedPorts } from '../set-up/ports.mjs';
 import { Problem } from '../set-up/problem.mjs';
 
 const host = '127.0.0.1';
@@ -42,4 +42,20 @@ export async function chooseAddresses(home, env) {
   const port = env['PORT'] ? Number(env['PORT']) : ports.site;
   const publicUrl = env['PUBLIC_URL'] || `http://${host}:${port}`;
   return { ports, port, publicUrl };
+}
+
+/**
+ * @param {object} options
+ * @param {string} options.home
+ * @param {number} options.port
+ * @param {NodeJS.ProcessEnv} options.env
+ */
+export async function demandSitePort({ home, port, env }) {
+  await demandFree(
+    port,
+    'the site',
+    env['PORT']
+      ? 'Stop that program, or set PORT to another one.'
+      : `Stop that program, or remove ${join(home, 'ports.json')} to choose other ports.`,
+  );
 }

@@ -6,7 +6,7 @@ import { explain } from '../set-up/problem.mjs';
 import { progressOn } from '../set-up/progress.mjs';
 import { interruptCommands } from '../set-up/run.mjs';
 import { usableTemporaryFolder } from '../set-up/temporary.mjs';
-import { chooseAddresses, openStorage } from './home.mjs';
+import { chooseAddresses, demandSitePort, openStorage } from './home.mjs';
 import { startProduct } from './product.mjs';
 import { demoPeople } from './seed.mjs';
 import { newStack } from './stack.mjs';
@@ -58,8 +58,9 @@ export async function start(args) {
   try {
     process.env['TMPDIR'] = usableTemporaryFolder();
     await openStorage(home);
-    const { publicUrl } = await chooseAddresses(home, process.env);
+    const { publicUrl, port } = await chooseAddresses(home, process.env);
     lock = takeLock(join(home, 'running.json'), publicUrl);
+    await demandSitePort({ home, port, env: process.env });
     await ensureDependencies(root, progress);
     signal.throwIfAborted();
     const { server, mailboxUrl, cluster } = await startProduct({

@@ -1,14 +1,14 @@
 import { existsSync } from 'node:fs';
 import { join } from 'node:path';
-import { startCluster } from '../postgres/cluster.mjs';
-import { root } from '../set-up/files.mjs';
+import { databaseName, startCluster } from '../postgres/cluster.mjs';
+import { withDatabase } from '../postgres/roles.mjs';
+import { root, writePrivately } from '../set-up/files.mjs';
 import { ensurePostgres, postgresPrograms } from '../set-up/packages.mjs';
-import { demandFree } from '../set-up/ports.mjs';
 import { ensureBuild } from './build.mjs';
-import { ensureLedgerKey, wantedStandIns } from './environment.mjs';
-import { chooseAddresses } from './home.mjs';
+import { ensureLedgerKey, variables, wantedStandIns } from './environment.mjs';
+import { chooseAddresses, demandSitePort } from './home.mjs';
 import { runMigrations } from './migrations.mjs';
-import { ensureSeed } from './seed.mjs';
+import { demoPeople, ensureSeed } from './seed.mjs';
 import { startService, untilAnswering } from './services.mjs';
 import { startStandIns } from './stand-ins.mjs';
 
@@ -43,13 +43,7 @@ const host = '127.0.0.1';
 export async function startProduct({ home, env, mode, buildFolder, stack, progress, signal }) {
   const addresses = await chooseAddresses(home, env);
   const { ports, port, publicUrl } = addresses;
-  await demandFree(
-    port,
-    'the site',
-    env['PORT']
-      ? 'Stop that program, or set PORT to another one.'
-      : `Stop that program, or remove ${join(home, 'ports.json')} to choose other ports.`,
-  );
+  await demandSitePort({ home, port, env });
   const wanted = wantedStandIns(env);
   const quiet = { ...env, ASTRO_TELEMETRY_DISABLED: '1', TZ: 'UTC' };
 
@@ -112,7 +106,30 @@ export async function startProduct({ home, env, mode, buildFolder, stack, progre
     await untilAnswering({ service, url: mode === 'dev' ? local : `${local}/healthz`, log });
     return service;
   });
+  writePrivately(
+    join(home, 'product.json'),
+    `${JSON.stringify(wordOf({ home, publicUrl, mailboxUrl, cluster, env: configured }), null, 2)}\n`,
+  );
   return { publicUrl, mailboxUrl, cluster, env: configured, server };
+}
+
+/**
+ * What the browser tests need to know of a started product.
+ *
+ * @param {Pick<Product, 'publicUrl' | 'mailboxUrl' | 'cluster' | 'env'> & { home: string }} product
+ */
+function wordOf({ home, publicUrl, mailboxUrl, cluster, env }) {
+  return {
+    home,
+    publicUrl,
+    mailboxUrl,
+    superuserUrl:
+      cluster === undefined ? undefined : withDatabase(cluster.superuserUrl, databaseName),
+    ownerUrl: cluster?.ownerUrl,
+    appUrl: cluster?.appUrl,
+    people: demoPeople(home),
+    env: Object.fromEntries(variables.map((name) => [name, env[name]])),
+  };
 }
 
 /**

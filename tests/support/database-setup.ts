@@ -3,7 +3,7 @@ import { join } from 'node:path';
 import type { TestProject } from 'vitest/node';
 import { migrate } from '@/adapters/database/migrate';
 import { type Cluster, startCluster } from '../../scripts/postgres/cluster.mjs';
-import { connect, createDatabase } from '../../scripts/postgres/roles.mjs';
+import { connect, createDatabase, withDatabase } from '../../scripts/postgres/roles.mjs';
 import { ensurePostgres } from '../../scripts/set-up/packages.mjs';
 import { rememberedPorts } from '../../scripts/set-up/ports.mjs';
 import { newTemporaryFolder } from '../../scripts/set-up/temporary.mjs';
@@ -57,13 +57,6 @@ async function openCluster(): Promise<{ urls: Urls; stop: () => Promise<void> }>
   };
   return { urls: cluster, stop };
 }
-
-/** The URL of another database of the same cluster. */
-export const withDatabase = (url: string, name: string): string => {
-  const changed = new URL(url);
-  changed.pathname = `/${name}`;
-  return changed.href;
-};
 
 async function prepare() {
   const { urls, stop } = await openCluster();

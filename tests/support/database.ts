@@ -1,7 +1,6 @@
 import { randomBytes } from 'node:crypto';
 import { inject } from 'vitest';
-import { connect, createDatabase } from '../../scripts/postgres/roles.mjs';
-import { withDatabase } from './database-setup';
+import { connect, createDatabase, withDatabase } from '../../scripts/postgres/roles.mjs';
 
 export interface TestDatabase {
   /** The migrating role: owns every table. */
