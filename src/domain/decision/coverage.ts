@@ -7,7 +7,14 @@ export interface Spread {
   readonly cdf: (x: number) => number;
 }
 
-const NORMAL: Spread = { distribution: 'normal', quantile: normalQuantile, cdf: normalCdf };
+// The quantiles nearly every decision asks for: U at 95 % and a one-sided guard band at 95 %.
+const USUAL = new Map([0.95, 0.975].map((p) => [p, normalQuantile(p)]));
+
+const NORMAL: Spread = {
+  distribution: 'normal',
+  quantile: (probability) => USUAL.get(probability) ?? normalQuantile(probability),
+  cdf: normalCdf,
+};
 
 /**
  * Student's t for finite degrees of freedom, cut to the next lower whole number as JCGM 100:2008 G.4.1

@@ -1,7 +1,7 @@
 import { getUnit } from '../quantity/find-unit';
-import { formatIn } from '../quantity/format';
+import { valueText, withRealMinus } from '../quantity/format';
 import { decimalsOf } from '../quantity/number-text';
-import { type Quantity, quantityOf } from '../quantity/quantity';
+import type { Quantity } from '../quantity/quantity';
 import type { Rational } from '../quantity/rational';
 import { down, halfEven, type Rounding, up } from '../quantity/round';
 import { DEFAULT_PROBABILITY, type DecisionRule } from './decision-rule';
@@ -56,7 +56,7 @@ const percent = (probability: number): string => `${Number((probability * 100).t
 const range = (window: Window, told: Told, low: Rounding, high: Rounding): string => {
   const { dimension, unit } = told.limit;
   const end = (at: Rational, way: Rounding): string =>
-    `${formatIn(quantityOf(dimension, at, unit), unit, places(told), way)} ${unit}`;
+    `${withRealMinus(valueText(dimension, at, unit, places(told), way))} ${unit}`;
   if (window.low === undefined)
     return window.high === undefined ? 'always' : `up to ${end(window.high.at, high)}`;
   if (window.high === undefined) return `from ${end(window.low.at, low)} up`;
@@ -78,7 +78,7 @@ const guardWidth = (told: Told): string => {
   const base =
     dimension === 'temperature' || offset !== undefined ? 'temperature-difference' : dimension;
   const symbol = base === 'temperature-difference' && unit === '°C' ? 'K' : unit;
-  return formatIn(quantityOf(base, told.guard, symbol), symbol, places(told), way);
+  return valueText(base, told.guard, symbol, places(told), way);
 };
 
 const rounding = ({ requirement: { comparison }, limit }: Told): string =>

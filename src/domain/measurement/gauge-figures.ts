@@ -4,6 +4,9 @@ import { fromDecimalText, mul, type Rational, toNumber, zero } from '../quantity
 import type { Gauge, GaugeKind } from './gauge';
 import { ofDivision, rectangular, type UncertaintyComponent } from './uncertainty';
 
+const inches = (text: string): Rational =>
+  mul(fromDecimalText(text), getUnit('length', 'in').factor);
+
 type Scaled = Exclude<GaugeKind, 'scale' | 'other'>;
 
 /**
@@ -11,31 +14,28 @@ type Scaled = Exclude<GaugeKind, 'scale' | 'other'>;
  * a 0–1 in micrometer of 0.0001 in checked on its standard holds half a division, and so does a dial bore
  * gauge over the few thousandths between zero and reading; a telescoping gauge can be off by 0.001 in, a caliper too.
  */
-const HALF_WIDTHS: Readonly<Record<Scaled, string>> = {
-  micrometer: '0.00005',
-  'dial-bore-gauge': '0.00005',
-  'telescoping-gauge': '0.001',
-  caliper: '0.001',
-  'setting-ring': '0.00005',
-  'plug-gauge': '0.00005',
+const HALF_WIDTHS: Readonly<Record<Scaled, Rational>> = {
+  micrometer: inches('0.00005'),
+  'dial-bore-gauge': inches('0.00005'),
+  'telescoping-gauge': inches('0.001'),
+  caliper: inches('0.001'),
+  'setting-ring': inches('0.00005'),
+  'plug-gauge': inches('0.00005'),
 };
 
 /** Division in inches where none is stated. Common practice. */
-const DIVISIONS: Readonly<Record<Scaled, string>> = {
-  micrometer: '0.0001',
-  'dial-bore-gauge': '0.0001',
-  'telescoping-gauge': '0.0001',
-  caliper: '0.001',
-  'setting-ring': '0',
-  'plug-gauge': '0',
+const DIVISIONS: Readonly<Record<Scaled, Rational>> = {
+  micrometer: inches('0.0001'),
+  'dial-bore-gauge': inches('0.0001'),
+  'telescoping-gauge': inches('0.0001'),
+  caliper: inches('0.001'),
+  'setting-ring': inches('0'),
+  'plug-gauge': inches('0'),
 };
-
-const inches = (text: string): Rational =>
-  mul(fromDecimalText(text), getUnit('length', 'in').factor);
 
 /** The division in the base, exact; 0 for what is not read off a scale or is not known. */
 export const divisionOf = ({ division, kind }: Gauge): Rational =>
-  division?.value ?? (kind === 'scale' || kind === 'other' ? zero : inches(DIVISIONS[kind]));
+  division?.value ?? (kind === 'scale' || kind === 'other' ? zero : DIVISIONS[kind]);
 
 /** From the certificate, else from common practice; a scale or another gauge without one: its division. */
 export const calibrationOf = (
@@ -52,9 +52,7 @@ export const calibrationOf = (
       degreesOfFreedom: certificate.degreesOfFreedom ?? null,
     };
   const halfWidth =
-    gauge.kind === 'scale' || gauge.kind === 'other'
-      ? divisionOf(gauge)
-      : inches(HALF_WIDTHS[gauge.kind]);
+    gauge.kind === 'scale' || gauge.kind === 'other' ? divisionOf(gauge) : HALF_WIDTHS[gauge.kind];
   return {
     ...common,
     standardUncertainty: rectangular(toNumber(halfWidth)),

@@ -1,4 +1,4 @@
-import { type Rational, rational } from './rational';
+import type { Rational } from './rational';
 import { halfEven } from './round';
 
 /** `n` tenths-to-the-`decimals` as ASCII text with exactly that many decimals: (-25n, 2) is "-0.25". */
@@ -12,15 +12,15 @@ export const scaledText = (n: bigint, decimals: number): string => {
 /** Decimals needed to write the number exactly; `undefined` where no finite decimal does. */
 const exactDecimals = (value: Rational): number | undefined => {
   let rest = value.d;
-  let twos = 0;
-  let fives = 0;
-  for (; rest % 2n === 0n; rest /= 2n) twos += 1;
-  for (; rest % 5n === 0n; rest /= 5n) fives += 1;
-  return rest === 1n ? Math.max(twos, fives) : undefined;
+  let decimals = 0;
+  for (; rest % 10n === 0n; rest /= 10n) decimals += 1;
+  const factor = rest % 2n === 0n ? 2n : 5n;
+  for (; rest % factor === 0n; rest /= factor) decimals += 1;
+  return rest === 1n ? decimals : undefined;
 };
 
 /** The exact decimal in ASCII, or, where there is none, `decimals` places rounded half to even. */
 export const decimalText = (value: Rational, decimals: number): string => {
   const places = exactDecimals(value) ?? decimals;
-  return scaledText(halfEven(rational(value.n * 10n ** BigInt(places), value.d)), places);
+  return scaledText(halfEven({ n: value.n * 10n ** BigInt(places), d: value.d }), places);
 };

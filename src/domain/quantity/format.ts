@@ -5,17 +5,26 @@ import type { Quantity } from './quantity';
 import { div, fromDecimalText, mul, powerOfTen, type Rational, sub } from './rational';
 import { halfEven, type Rounding, up } from './round';
 
-/** The number alone with exactly `decimals` places, minus as ASCII: for files and the wire. */
-export const asciiIn = (
-  quantity: Quantity,
+/** A value in the base as a number alone in the unit, minus as ASCII. */
+export const valueText = (
+  dimension: Dimension,
+  base: Rational,
   unitName: string,
   decimals: number,
   rounding: Rounding = halfEven,
 ): string => {
-  const unit = getUnit(quantity.dimension, unitName);
-  const value = unit.offset === undefined ? quantity.value : sub(quantity.value, unit.offset);
+  const unit = getUnit(dimension, unitName);
+  const value = unit.offset === undefined ? base : sub(base, unit.offset);
   return numberText(div(value, unit.factor), decimals, rounding);
 };
+
+/** The number alone with exactly `decimals` places, minus as ASCII: for files and the wire. */
+export const asciiIn = (
+  { dimension, value }: Quantity,
+  unitName: string,
+  decimals: number,
+  rounding: Rounding = halfEven,
+): string => valueText(dimension, value, unitName, decimals, rounding);
 
 /** The number alone with exactly `decimals` places and a real minus (U+2212): for people. */
 export const formatIn = (

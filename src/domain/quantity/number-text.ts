@@ -53,6 +53,8 @@ export const findNumber = (typed: string): Rational | undefined => {
 
 /** Decimals a text carries, trailing zeros included: the resolution it was read with. `0.8440` has 4. */
 export const decimalsOf = (typed: string): number => {
+  const bare = /^-?\d*\.(\d+)$/.exec(typed);
+  if (bare !== null) return bare[1]?.length ?? 0;
   const [, decimals = '', exponent = '0'] =
     /\.?(\d*)(?:e([+-]?\d+))?$/i.exec((readNumber(typed).plain ?? '').replace(/^[^.e]*/i, '')) ??
     [];

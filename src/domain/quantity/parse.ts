@@ -28,6 +28,8 @@ interface Expected<D extends Dimension> {
   readonly defaultUnit?: string | undefined;
 }
 
+/** What most cells hold: digits with at most one point, no unit. */
+const BARE = /^-?(?:\d{1,9}(?:\.\d{0,12})?|\.\d{1,12})$/;
 const SPLIT =
   /^([+\-−–]?\s*[\d.,'’\u00a0\u202f/⁄ ]*\d[.,]?(?:[eE][+-]?\d{1,2})?|[+\-−–]?\s*[.,]\d+)\s*(\D.*)?$/;
 
@@ -40,6 +42,8 @@ export const parseQuantity = <D extends Dimension>(
   { dimension, defaultUnit }: Expected<D>,
 ): Result<Quantity<D>, ParseFault> => {
   const text = typed.trim();
+  if (defaultUnit !== undefined && BARE.test(text))
+    return taken(text, text, getUnit(dimension, defaultUnit));
   if (text === '') return refuse('empty', 'Nothing is written here.');
   if (text.length > 60) return refuse('not-a-number', 'This is too long to be a measured value.');
   if (dimension === 'angle') {
@@ -52,12 +56,21 @@ export const parseQuantity = <D extends Dimension>(
   if (number.fault !== undefined) return refuseNumber(number.fault, digits.trim());
   const unit = unitNamed(name.trim(), dimension, defaultUnit, text);
   if (!unit.ok) return unit;
-  const value = inBase(fromDecimalText(number.plain), unit.value);
+  return taken(digits.trim(), number.plain, unit.value);
+};
+
+const taken = <D extends Dimension>(
+  text: string,
+  plain: string,
+  unit: Unit<D>,
+): Result<Quantity<D>, ParseFault> => {
+  const { dimension, symbol } = unit;
+  const value = inBase(fromDecimalText(plain), unit);
   if (dimension === 'temperature' && value.n < 0n)
-    return refuse('impossible', `${text} is below absolute zero.`);
+    return refuse('impossible', `${text} ${symbol} is below absolute zero.`);
   if (dimension === 'count' && value.d !== 1n)
     return refuse('impossible', `A count is a whole number, not ${text}.`);
-  return ok({ dimension, text: digits.trim(), unit: unit.value.symbol, value });
+  return ok({ dimension, text, unit: symbol, value });
 };
 
 /** Reads the wire form, whose unit stands apart. */

@@ -6,33 +6,49 @@ export interface Rational {
 
 const SAFE = BigInt(Number.MAX_SAFE_INTEGER);
 
-const gcd = (a: bigint, b: bigint): bigint => {
-  let x = a < 0n ? -a : a;
+const bigGcd = (a: bigint, b: bigint): bigint => {
+  let [x, y] = [a, b];
+  while (y !== 0n) [x, y] = [y, x % y];
+  return x;
+};
+
+const gcd = (a: number, b: number): number => {
+  let x = a;
   let y = b;
-  while (y > SAFE || x > SAFE) {
-    if (y === 0n) return x;
-    [x, y] = [y, x % y];
+  while (y !== 0) {
+    const rest = x % y;
+    x = y;
+    y = rest;
   }
-  let p = Number(x);
-  let q = Number(y);
-  while (q !== 0) [p, q] = [q, p % q];
-  return BigInt(p);
+  return x;
 };
 
 /** Throws a RangeError on a denominator of zero: a defect, never an expected failure. */
 export const rational = (n: bigint, d = 1n): Rational => {
-  if (d === 0n) throw new RangeError('A rational number has no denominator of zero.');
   if (d === 1n) return { n, d };
-  const [top, bottom] = d < 0n ? [-n, -d] : [n, d];
-  const common = gcd(top, bottom);
-  return common === 1n ? { n: top, d: bottom } : { n: top / common, d: bottom / common };
+  if (d === 0n) throw new RangeError('A rational number has no denominator of zero.');
+  if (d < 0n) return rational(-n, -d);
+  const size = n < 0n ? -n : n;
+  // Most measured values fit a double's whole numbers, where a common divisor is found much faster.
+  if (size <= SAFE && d <= SAFE) {
+    const [top, bottom] = [Number(n), Number(d)];
+    const common = gcd(Math.abs(top), bottom);
+    return common === 1 ? { n, d } : { n: BigInt(top / common), d: BigInt(bottom / common) };
+  }
+  const common = bigGcd(size, d);
+  return common === 1n ? { n, d } : { n: n / common, d: d / common };
 };
 
 export const zero: Rational = { n: 0n, d: 1n };
 export const one: Rational = { n: 1n, d: 1n };
 
-export const add = (a: Rational, b: Rational): Rational =>
-  a.d === b.d ? rational(a.n + b.n, a.d) : rational(a.n * b.d + b.n * a.d, a.d * b.d);
+export const add = (a: Rational, b: Rational): Rational => {
+  if (a.d === b.d) return rational(a.n + b.n, a.d);
+  // Denominators of decimals mostly divide each other: the larger then serves for both.
+  if (a.d % b.d === 0n) return rational(a.n + b.n * (a.d / b.d), a.d);
+  if (b.d % a.d === 0n) return rational(a.n * (b.d / a.d) + b.n, b.d);
+  return rational(a.n * b.d + b.n * a.d, a.d * b.d);
+};
 export const sub = (a: Rational, b: Rational): Rational => add(a, negate(b));
 export const mul = (a: Rational, b: Rational): Rational => rational(a.n * b.n, a.d * b.d);
 export const div = (a: Rational, b: Rational): Rational => rational(a.n * b.d, a.d * b.n);

@@ -1,5 +1,5 @@
 import type { LargerReads } from '../measurement/gauge';
-import { add, mul, negate, type Rational, rational, sub, zero } from '../quantity/rational';
+import { add, div, mul, negate, type Rational, rational, sub, zero } from '../quantity/rational';
 import type { BoreSheet, PlaceReading, Zeros } from './bore-sheet';
 
 /** A reading that was taken, freed from drift and in the part's own direction: larger is more. */
@@ -19,16 +19,18 @@ export const driftOf = (zeros: Zeros | undefined): Rational | undefined =>
  * For reading i of n in taking order: reading − (opening + (closing − opening)·i ÷ (n + 1)), and then
  * the sign of the dial's direction.
  */
-export const corrected = (
-  reading: Rational,
-  place: { readonly i: number; readonly n: number },
+export const corrector = (
+  n: number,
   zeros: Zeros | undefined,
   largerReads: LargerReads,
-): Rational => {
+): ((reading: Rational, i: number) => Rational) => {
   const opening = zeros?.opening?.value ?? zero;
-  const share = mul(driftOf(zeros) ?? zero, rational(BigInt(place.i), BigInt(place.n + 1)));
-  const freed = sub(reading, add(opening, share));
-  return largerReads === 'minus' ? negate(freed) : freed;
+  const step = div(driftOf(zeros) ?? zero, rational(BigInt(n + 1)));
+  const still = opening.n === 0n && step.n === 0n;
+  return (reading, i) => {
+    const freed = still ? reading : sub(reading, add(opening, mul(step, rational(BigInt(i)))));
+    return largerReads === 'minus' ? negate(freed) : freed;
+  };
 };
 
 const taken = (
@@ -44,9 +46,10 @@ export const correctedReadings = (sheet: BoreSheet): readonly Corrected[] => {
     ...readings.map((place) => place.order ?? 0),
   );
   const direction = sheet.method === 'comparative' ? (sheet.gauge?.largerReads ?? 'plus') : 'plus';
+  const correct = corrector(n, sheet.zeros, direction);
   return readings.map(({ depth, axis, reading, order }, at) => ({
     depth,
     axis,
-    value: corrected(reading.value, { i: order ?? at + 1, n }, sheet.zeros, direction),
+    value: correct(reading.value, order ?? at + 1),
   }));
 };
