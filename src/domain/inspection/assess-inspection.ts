@@ -22,9 +22,11 @@ import { completenessBy } from './completeness';
 import type { Finding } from './finding';
 import { withRows } from './findings';
 import { answersFrom, gapsFrom, positionsIn, readingsBehind, weaknessOf } from './found-facts';
-import { boreSetsOf, type Capture } from './measure/bore-sets';
-import { factsOfSet, joinSets, measureSet, type SetResult } from './measure/measure-position';
+import { boreSetsOf } from './measure/bore-sets';
+import { joinSets } from './measure/join-sets';
+import { factsOfSet, measureSet, type SetResult } from './measure/measure-position';
 import { derivedNumbers, plainNumbers } from './measure/plain-numbers';
+import type { Capture } from './measure/runs';
 
 /** Everything recorded in the bay, and what it is held against. */
 export interface InspectionRecord {

@@ -31,6 +31,8 @@ export interface GaugeRecord {
   readonly dueOn?: string | undefined;
   /** Checked on the series' ring this night, where the class lets that count. */
   readonly checkedOnRing?: boolean | undefined;
+  /** Taken out of use: what it read is kept and supports no breach. */
+  readonly withdrawn?: boolean | undefined;
 }
 
 /** The record with its figures read; those of another dimension than asked are left out. */
@@ -86,6 +88,7 @@ export const findWeakness = (
   const { size } = reading;
   if (size !== undefined && !reaches(gaugeOf(record, size.dimension), size))
     return `${size.text} ${size.unit} is out of the range of gauge ${record.code}`;
+  if (record.withdrawn === true) return `gauge ${record.code} is withdrawn`;
   if (record.checkedOnRing === true) return undefined;
   const state = calibrationState(
     gaugeOf(record, 'length'),

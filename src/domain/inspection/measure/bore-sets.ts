@@ -1,12 +1,9 @@
-import { divisionOf } from '../../measurement/gauge-figures';
 import type { Quantity } from '../../quantity/quantity';
 import { fromStored } from '../../quantity/stored';
-import type { BoreSheet, Length, PlaceReading, Temperatures, Zeros } from '../../tappet/bore-sheet';
-import { mustRedo } from '../../tappet/redo';
-import { DIAL } from '../../tappet/sheet-budget';
-import { type GaugeRecord, gaugeOf } from '../capture/gauge-record';
+import type { BoreSheet, Length, PlaceReading, Temperatures } from '../../tappet/bore-sheet';
 import type { JudgedReading } from '../capture/readings-that-count';
-import { inTakingOrder, type LoggedTemperatures, positionKey, type ZeroRow } from '../capture/rows';
+import { type LoggedTemperatures, positionKey } from '../capture/rows';
+import { type Capture, findGauge, runsOf, standingRun, zerosOf } from './runs';
 
 /** One set of readings of one bore and its lifter, ready to be measured. */
 export interface BoreSet {
@@ -20,43 +17,7 @@ export interface BoreSet {
   readonly superseded: readonly JudgedReading[];
 }
 
-export interface Capture {
-  /** All readings with what became of them: struck ones took their turn in a run. */
-  readonly judged: readonly JudgedReading[];
-  readonly zeros: readonly ZeroRow[];
-  readonly gauges: readonly GaugeRecord[];
-  /** Unit of the results. */
-  readonly unit: string;
-  /** Width of the permitted zone of the clearance, where a clause gives one. */
-  readonly window?: Length | undefined;
-  readonly materials?: BoreSheet['materials'];
-  readonly repeatability?: BoreSheet['repeatability'];
-}
-
 const lengthOf = (reading: JudgedReading): Length => fromStored(reading.row.value, 'length');
-
-const findGauge = (capture: Capture, id: string | undefined) => {
-  const record = capture.gauges.find((gauge) => gauge.id === id);
-  return record && gaugeOf(record, 'length');
-};
-
-const zerosOf = (capture: Capture, runId: string | undefined) => {
-  const rows = inTakingOrder(capture.zeros).filter(
-    (row) => row.runId === runId && row.standing === 'accepted',
-  );
-  const opening = rows.find((row) => row.kind === 'opening');
-  const closing = rows.findLast((row) => row.kind === 'closing');
-  const run = capture.judged.filter(
-    ({ row, state }) =>
-      row.zeroRunId === runId && state !== 'received' && row.method === 'comparative',
-  );
-  const zeros: Zeros = {
-    opening: opening && fromStored(opening.reading, 'length'),
-    closing: closing && fromStored(closing.reading, 'length'),
-    readingsInRun: run.length,
-  };
-  return { opening, zeros, order: new Map(run.map(({ row }, i) => [row.id, i + 1])) };
-};
 
 const temperaturesOf = (readings: readonly JudgedReading[]): Temperatures | undefined => {
   const logged = readings
@@ -71,27 +32,6 @@ const temperaturesOf = (readings: readonly JudgedReading[]): Temperatures | unde
     setting: read(logged.setting),
     gauge: read(logged.gauge),
   };
-};
-
-/** Readings of one method and run, in the order in which the runs began. */
-const runsOf = (readings: readonly JudgedReading[]): readonly (readonly JudgedReading[])[] => {
-  const runs = new Map<string, JudgedReading[]>();
-  for (const reading of readings) {
-    const run = `${reading.row.method} ${reading.row.zeroRunId ?? ''}`;
-    runs.set(run, [...(runs.get(run) ?? []), reading]);
-  }
-  return [...runs.values()];
-};
-
-/** The last run whose closing zero held; the last run of all where none did. */
-const standingRun = (capture: Capture, runs: readonly (readonly JudgedReading[])[]) => {
-  const failed = (run: readonly JudgedReading[]) => {
-    const [first] = run;
-    if (first?.row.method !== 'comparative') return false;
-    const division = divisionOf(findGauge(capture, first.row.gaugeId) ?? DIAL);
-    return mustRedo(zerosOf(capture, first.row.zeroRunId).zeros, division, capture.window?.value);
-  };
-  return runs.findLast((run) => !failed(run)) ?? runs.at(-1) ?? [];
 };
 
 const sheetOf = (

@@ -1,4 +1,3 @@
-import { assess } from '../../decision/assess';
 import { largest, mean, type Series, smallest } from '../../measurement/series';
 import type { Combined } from '../../measurement/uncertainty';
 import { combine } from '../../measurement/uncertainty';
@@ -27,7 +26,8 @@ export const measureSet = (set: BoreSet): SetResult => ({
   foot: footAgainstBody(set.foot, set.sheet.lifter, set.sheet.unit, set.sheet.lifterGauge),
 });
 
-type Fact = Omit<NumberFact, 'position'>;
+/** A number before it has its place. */
+export type Fact = Omit<NumberFact, 'position'>;
 
 const threeFigures = (
   quantity: QuantityName,
@@ -129,53 +129,3 @@ export const factsOfSet = (result: SetResult): readonly Fact[] => [
   ...clearanceFacts(result),
   ...formFacts(result),
 ];
-
-const DISAGREE = 'two independent sets of readings differ by more than their uncertainty';
-
-/** Whether a second value differs from a first by no more than their joint U. */
-const agrees = (first: Fact, second: Fact): boolean =>
-  assess(
-    {
-      limits: { min: first.value, max: first.value },
-      decisionRule: { kind: 'guarded-rejection', guardFactor: '1' },
-      comparison: { method: 'absolute' },
-      fitRatio: '0',
-    },
-    {
-      value: second.value,
-      standardUncertainty: Math.hypot(first.standardUncertainty, second.standardUncertainty),
-    },
-  ).complies === true;
-
-/**
- * One fact a figure out of all sets: their mean, with the larger uncertainty (independent sets by one
- * gauge share its errors). Sets that disagree support no breach.
- */
-export const joinSets = (
-  position: string,
-  sets: readonly (readonly Fact[])[],
-): readonly NumberFact[] => {
-  const groups = new Map<string, Fact[]>();
-  for (const fact of sets.flat()) {
-    const key = `${fact.quantity} ${fact.figure ?? ''}`;
-    groups.set(key, [...(groups.get(key) ?? []), fact]);
-  }
-  return [...groups.values()].flatMap(([first, ...others]): readonly NumberFact[] => {
-    if (first === undefined) return [];
-    if (others.length === 0) return [{ ...first, position }];
-    const widest = others.reduce(
-      (wide, fact) => (fact.standardUncertainty > wide.standardUncertainty ? fact : wide),
-      first,
-    );
-    const { dimension, unit } = first.value;
-    const joined = mean([first, ...others].map((fact) => fact.value.value));
-    return [
-      {
-        ...widest,
-        position,
-        value: quantityOf(dimension, joined, unit),
-        ...(others.every((fact) => agrees(first, fact)) ? {} : { cannotSupportBreach: DISAGREE }),
-      },
-    ];
-  });
-};

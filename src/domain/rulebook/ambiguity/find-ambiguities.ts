@@ -5,6 +5,7 @@ import type { Requirement } from '../requirement';
 import { isBlank, when } from './check';
 import { requirementFaults } from './check-faults';
 import { crossFaults } from './cross-faults';
+import { penaltyFaults } from './penalty-faults';
 
 const ROUNDS = /\bround(?:ed|ing|s)?\s+(?:up|down|off)\b/i;
 
@@ -68,4 +69,5 @@ export const findAmbiguities = (
   ...when(clauses.length === 0, '/clauses', 'A rulebook needs at least one clause.'),
   ...clauses.flatMap((clause, index) => clauseFaults(clause, `/clauses/${index}`)),
   ...crossFaults(clauses, penalties),
+  ...penaltyFaults(penalties),
 ];

@@ -1,0 +1,55 @@
+import { assess } from '../../decision/assess';
+import { mean } from '../../measurement/series';
+import { quantityOf } from '../../quantity/quantity';
+import type { NumberFact } from '../../rulebook/evaluate/facts';
+import type { Fact } from './measure-position';
+
+const DISAGREE = 'two independent sets of readings differ by more than their uncertainty';
+
+/** Whether a second value differs from a first by no more than their joint U. */
+const agrees = (first: Fact, second: Fact): boolean =>
+  assess(
+    {
+      limits: { min: first.value, max: first.value },
+      decisionRule: { kind: 'guarded-rejection', guardFactor: '1' },
+      comparison: { method: 'absolute' },
+      fitRatio: '0',
+    },
+    {
+      value: second.value,
+      standardUncertainty: Math.hypot(first.standardUncertainty, second.standardUncertainty),
+    },
+  ).complies === true;
+
+/**
+ * One fact a figure out of all sets: their mean, with the larger uncertainty (independent sets by one
+ * gauge share its errors). Sets that disagree support no breach.
+ */
+export const joinSets = (
+  position: string,
+  sets: readonly (readonly Fact[])[],
+): readonly NumberFact[] => {
+  const groups = new Map<string, Fact[]>();
+  for (const fact of sets.flat()) {
+    const key = `${fact.quantity} ${fact.figure ?? ''}`;
+    groups.set(key, [...(groups.get(key) ?? []), fact]);
+  }
+  return [...groups.values()].flatMap(([first, ...others]): readonly NumberFact[] => {
+    if (first === undefined) return [];
+    if (others.length === 0) return [{ ...first, position }];
+    const widest = others.reduce(
+      (wide, fact) => (fact.standardUncertainty > wide.standardUncertainty ? fact : wide),
+      first,
+    );
+    const { dimension, unit } = first.value;
+    const joined = mean([first, ...others].map((fact) => fact.value.value));
+    return [
+      {
+        ...widest,
+        position,
+        value: quantityOf(dimension, joined, unit),
+        ...(others.every((fact) => agrees(first, fact)) ? {} : { cannotSupportBreach: DISAGREE }),
+      },
+    ];
+  });
+};
