@@ -1,0 +1,95 @@
+import type { PaperworkForm, Question, SheetForm, Shot } from '../rulebook/form/form';
+import type { RulesInForce } from '../rulebook/rules-in-force';
+import type { BoreLayout } from '../tappet/layout/bore-layout';
+import { answerFault, type PaperworkFile } from './declare';
+import { cellsOf, findTyped, type PaperworkDraft } from './draft';
+import { type JudgedCell, judgeCells } from './sheet/judge-cells';
+import { rowsFor } from './sheet/positions';
+
+/** What stands between a draft and handing it in. */
+export interface StillMissing {
+  readonly questions: readonly Question[];
+  readonly photographs: readonly Shot[];
+  /** Sheets that a clause asks for by name and that have no complete numbers. */
+  readonly sheets: readonly { readonly form: SheetForm; readonly values: number }[];
+  /** Cells that are no number, or in question. */
+  readonly cells: readonly JudgedCell[];
+}
+
+const answered = (draft: PaperworkDraft, question: Question): boolean => {
+  const whole = question.per === 'car' ? 'car' : 'engine';
+  const answer = findTyped(draft, question.subject, whole);
+  return answer !== undefined && answerFault(question, answer) === undefined;
+};
+
+const isAskedByName = (rules: Pick<RulesInForce, 'clauses'>, { subject }: SheetForm): boolean =>
+  rules.clauses.some(
+    ({ force, requirement }) =>
+      force === 'mandatory' && requirement?.kind === 'sheet' && requirement.subject === subject,
+  );
+
+/** Places of the sheet without a number; a sheet without columns is wanted as a file. */
+export const emptyValues = (draft: PaperworkDraft, form: SheetForm, layout: BoreLayout): number => {
+  const cells = cellsOf(draft, form.subject).filter((cell) => cell.typed.trim() !== '');
+  const has = (position: string, quantity: string) =>
+    cells.some((cell) => cell.position === position && cell.quantity === quantity);
+  return rowsFor(form.per, layout).reduce(
+    (sum, { key }) => sum + form.columns.filter(({ quantity }) => !has(key, quantity)).length,
+    0,
+  );
+};
+
+/**
+ * Answers to mandatory clauses, photographs, sheets that a clause asks for by name, and no cell that is
+ * faulty or in question. Whether the numbers comply stops nobody from handing them in.
+ */
+export const stillMissing = (
+  draft: PaperworkDraft,
+  rules: Pick<RulesInForce, 'clauses'>,
+  form: PaperworkForm,
+  layout: BoreLayout,
+  files: readonly Pick<PaperworkFile, 'item' | 'purpose'>[],
+): StillMissing => ({
+  questions: form.questions.filter(
+    (question) => question.force === 'mandatory' && !answered(draft, question),
+  ),
+  photographs: form.photographs.filter(
+    (shot) => !files.some((file) => file.purpose === 'photograph' && file.item === shot.subject),
+  ),
+  sheets: form.sheets
+    .filter((sheet) => isAskedByName(rules, sheet))
+    .map((sheet) => ({ form: sheet, values: emptyValues(draft, sheet, layout) }))
+    .filter(({ form: sheet, values }) =>
+      sheet.columns.length > 0
+        ? values > 0
+        : !files.some((file) => file.purpose === 'sheet' && file.item === sheet.subject),
+    ),
+  cells: draft.sheets.flatMap((sheet) =>
+    judgeCells(sheet.cells).filter((cell) => cell.state !== 'ok'),
+  ),
+});
+
+export const isComplete = (missing: StillMissing): boolean =>
+  [missing.questions, missing.photographs, missing.sheets, missing.cells].every(
+    (list) => list.length === 0,
+  );
+
+const counted = (count: number, one: string, many: string): readonly string[] =>
+  count === 0 ? [] : [`${count} ${count === 1 ? one : many}`];
+
+/** `3 answers and 1 photograph missing, 2 cells to correct`; empty when nothing is. */
+export const missingWords = (missing: StillMissing): string => {
+  const values = missing.sheets.reduce((sum, sheet) => sum + Math.max(1, sheet.values), 0);
+  const absentParts = [
+    ...counted(missing.questions.length, 'answer', 'answers'),
+    ...counted(missing.photographs.length, 'photograph', 'photographs'),
+    ...counted(values, 'value', 'values'),
+  ];
+  const absent =
+    absentParts.length === 0
+      ? []
+      : [`${absentParts.join(', ').replace(/, ([^,]*)$/, ' and $1')} missing`];
+  return [...absent, ...counted(missing.cells.length, 'cell to correct', 'cells to correct')].join(
+    ', ',
+  );
+};
