@@ -1,6 +1,6 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import { toHex, utf8 } from '@/domain/ledger/bytes';
-import { commit, SALT_LENGTH } from '@/domain/ledger/commitment';
+import { commit, commitHash, SALT_LENGTH } from '@/domain/ledger/commitment';
 import { lineText } from '@/domain/ledger/line';
 import type { LineKind } from '@/domain/ledger/line-kind';
 import type { Random } from '../ports';
@@ -18,6 +18,12 @@ export type AppendTable =
   | 'verdict'
   | 'notice_pdf';
 
+/** A document's exact text, or the SHA-256 of something kept elsewhere, a PDF. */
+export type LineContent = { readonly open: boolean } & (
+  | { readonly text: string }
+  | { readonly sha256: Uint8Array }
+);
+
 export interface NewLedgerLine {
   readonly seriesId: string;
   readonly kind: LineKind;
@@ -25,7 +31,7 @@ export interface NewLedgerLine {
    * What the line commits to, by role. `open` content may be shown to everybody beside its salt;
    * the rest is shown to the parties only.
    */
-  readonly contents: Readonly<Record<string, { readonly text: string; readonly open: boolean }>>;
+  readonly contents: Readonly<Record<string, LineContent>>;
   /** Hashes, ids, line numbers and instants; never a name. */
   readonly refs?: Readonly<Record<string, string>>;
 }
@@ -47,9 +53,17 @@ export const writeLine = async (
   at: Date,
   line: NewLedgerLine,
 ): Promise<number> => {
-  const contents = Object.entries(line.contents).map(([role, { text, open }]) => {
+  const contents = Object.entries(line.contents).map(([role, content]) => {
     const salt = random.bytes(SALT_LENGTH);
-    return { role, open, salt, content: text, commitment: toHex(commit(salt, utf8(text))) };
+    const commitment =
+      'text' in content ? commit(salt, utf8(content.text)) : commitHash(salt, content.sha256);
+    return {
+      role,
+      open: content.open,
+      salt,
+      content: 'text' in content ? content.text : null,
+      commitment: toHex(commitment),
+    };
   });
   const [next] = await em.execute<{ index: string }[]>('select append.next_line(?) as index', [
     line.seriesId,
