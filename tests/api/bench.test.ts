@@ -117,6 +117,48 @@ describe('POST /api/bench/assess', () => {
     near(answer['expandedUncertainty'], 2.776445105 * 0.0008, 1e-9);
   });
 
+  const zener = checkValue('jcgm106-7.3.3-ex1-zener');
+  it(`a unit the trade does not use, named by both sides (${provenance(zener)})`, async () => {
+    const answer = await answered(assess, {
+      requirement: { unit: 'V', max: '-5.40', decisionRule: { kind: 'guarded-acceptance' } },
+      value: '-5.47',
+      unit: 'V',
+      standardUncertainty: zener.inputs['u'],
+    });
+    near(answer['conformanceProbability'], 0.9192433408, 1e-9);
+    expect(answer['complies']).toBe(false);
+    expect(answer['sentence']).toMatch(/\d V/);
+    expect(answer['sentence']).not.toMatch(/\d 1\b/);
+  });
+
+  const oil = checkValue('jcgm106-7.4-sae40');
+  it(`conformance probability of a window (${provenance(oil)})`, async () => {
+    const answer = await answered(assess, {
+      requirement: { unit: 'mm²/s', min: '12.5', max: '16.3', decisionRule: { kind: 'simple' } },
+      value: '13.6',
+      unit: 'mm²/s',
+      standardUncertainty: '1.8',
+    });
+    near(answer['conformanceProbability'], oil.expected['pC'] as number, 0.005);
+  });
+
+  const speed = checkValue('jcgm106-8.3.3-speed');
+  it(`guarded rejection at 0.999 (${provenance(speed)}; unrounded 106.5876)`, async () => {
+    const answer = await answered(assess, {
+      requirement: {
+        unit: 'km/h',
+        max: '100',
+        decisionRule: { kind: 'guarded-rejection', probability: 0.999 },
+        maximumUncertainty: '10',
+      },
+      value: '106.5',
+      unit: 'km/h',
+      standardUncertainty: 0.02 * 106.5876,
+    });
+    near((answer['acceptance'] as { max: string }).max, 106.5876, 1e-3);
+    expect(answer['complies']).toBe(true);
+  });
+
   it.each([
     [
       'both guards',

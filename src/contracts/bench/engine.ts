@@ -18,8 +18,8 @@ const displacement = z.strictObject({
   stroke: figure,
   cylinders: count,
   unit: unitName,
-  /** Up to the next whole unit of volume, as a rule may say of its limit or of the measured value. */
-  roundUp: z.optional(z.boolean()),
+  /** Up to the next whole unit of volume, as a rule says of its limit or of the measured value. */
+  roundUp: z.optional(z.union([z.boolean(), z.enum(['limit', 'measured'])])),
   uncertainties: uncertainties('bore', 'stroke'),
 });
 

@@ -14,8 +14,21 @@ import { compareQuantities } from '@/domain/quantity/quantity';
 import { fail, ok, type Result } from '@/domain/result';
 import { Taker } from './take';
 
-/** One measured value against one requirement, by its decision rule. Computed, never a verdict. */
+/**
+ * One measured value against one requirement, by its decision rule. Computed, never a verdict. A unit
+ * that is not known here (V, HRC) is taken as it stands where value and limit both name it.
+ */
 export function assessValue(request: AssessRequest): Result<AssessResponse, Failure> {
+  const { unit, requirement } = request;
+  if (unit !== requirement.unit || dimensionsOf(unit).length > 0) return assessKnown(request);
+  const plain = { ...request, unit: '1', requirement: { ...requirement, unit: '1' } };
+  const result = assessKnown(plain);
+  if (!result.ok) return result;
+  const sentence = result.value.sentence.replaceAll(/(?<=\d) 1(?!\d)/g, ` ${unit}`);
+  return ok({ ...result.value, sentence });
+}
+
+function assessKnown(request: AssessRequest): Result<AssessResponse, Failure> {
   const take = new Taker();
   const dimension = dimensionOf(request, take);
   const requirement = requirementOf(request, dimension, take);

@@ -17,7 +17,7 @@ export function workOutDisplacement(inputs: EngineInputs<'displacement'>): Answe
   const stroke = take.sized('stroke', 'length', unit);
   if (take.faults.length > 0) return fail(invalid(take.faults));
   const result = displacement({ bores, stroke, cylinders: inputs.cylinders });
-  if (inputs.roundUp !== true) return ok(answerOf(result));
+  if (inputs.roundUp === undefined || inputs.roundUp === false) return ok(answerOf(result));
   // U belongs to the value before rounding, so it moves into the working with it.
   const { expandedUncertainty, coverageFactor, ...before } = answerOf(result);
   const value = roundedUp(result.value);
