@@ -9,7 +9,7 @@ import {
 import { type BoreLayout, boreName, positionsOf } from '../tappet/layout/bore-layout';
 import { findWeakness, type GaugeRecord } from './capture/gauge-record';
 import type { JudgedReading } from './capture/readings-that-count';
-import { inTakingOrder, positionKey, type RemarkRow } from './capture/rows';
+import { inTakingOrder, positionKey, type RemarkRow, type ZeroRow } from './capture/rows';
 
 /** Every bore and cylinder of a position map, as facts and results name them. */
 export const positionsIn = (layout: BoreLayout): Positions => ({
@@ -62,17 +62,29 @@ export const readingsBehind = (
 
 interface Bay {
   readonly gauges: readonly GaugeRecord[];
+  readonly zeros: readonly ZeroRow[];
   readonly zone: string;
 }
 
+/** The gauge of a reading, and the ring on which its run was zeroed. */
+const instrumentsOf = ({ row }: JudgedReading, zeros: readonly ZeroRow[]) => {
+  const rings = zeros
+    .filter((zero) => row.zeroRunId !== undefined && zero.runId === row.zeroRunId)
+    .flatMap((zero) => zero.ringId ?? []);
+  const size = row.method === 'absolute' ? sizeOf(row) : undefined;
+  return [{ id: row.gaugeId, size }, ...rings.map((id) => ({ id, size: undefined }))];
+};
+
 /** Why readings cannot support a breach: a gauge unknown, out of calibration or out of its range. */
 export const weaknessOf = (readings: readonly JudgedReading[], bay: Bay): string | undefined => {
-  for (const { row } of readings) {
-    const record = bay.gauges.find((gauge) => gauge.id === row.gaugeId);
-    if (record === undefined) return 'the gauge is not in the register';
-    const size = row.method === 'absolute' ? sizeOf(row) : undefined;
-    const weakness = findWeakness(record, { occurredAt: row.occurredAt, zone: bay.zone, size });
-    if (weakness !== undefined) return weakness;
+  for (const reading of readings) {
+    const { occurredAt } = reading.row;
+    for (const { id, size } of instrumentsOf(reading, bay.zeros)) {
+      const record = bay.gauges.find((gauge) => gauge.id === id);
+      if (record === undefined) return 'the gauge is not in the register';
+      const weakness = findWeakness(record, { occurredAt, zone: bay.zone, size });
+      if (weakness !== undefined) return weakness;
+    }
   }
   return undefined;
 };

@@ -3,7 +3,10 @@ import { describe, expect, it } from 'vitest';
 import { assessInspection, type InspectionRecord } from '@/domain/inspection/assess-inspection';
 import type { ReadingRow } from '@/domain/inspection/capture/rows';
 import { neededPerBore } from '@/domain/inspection/completeness';
-import { facts } from '../rulebook/build';
+import { declaredAgainstFound } from '@/domain/inspection/declared-against-found';
+import { positionsIn } from '@/domain/inspection/found-facts';
+import { secondSetsWanted } from '@/domain/inspection/second-set';
+import { facts, number } from '../rulebook/build';
 import {
   atIntake,
   body,
@@ -16,6 +19,7 @@ import {
   reading,
   record,
   remark,
+  TWIN,
   zero,
 } from './build';
 
@@ -202,7 +206,39 @@ describe('the lifter', () => {
   });
 });
 
+describe('a ring overdue for calibration', () => {
+  it('supports no breach of what was zeroed on it', () => {
+    const rules = {
+      ...RULES,
+      clauses: RULES.clauses.map((row) =>
+        row.number === '4.6' ? { ...row, force: 'mandatory' as const } : row,
+      ),
+    };
+    const readings = [...bodies, dial('r11', '-0.0015')];
+    const zeroed = (ringId: string) => [
+      zero('z10', 'opening', '0', { zeroedOn: 'ring', ringId, size: inches('0.8435') }),
+    ];
+    expect(atIntake('4.6', { readings, rules, zeros: zeroed('ring') }).pass).toBe(false);
+    const old = atIntake('4.6', { readings, rules, zeros: zeroed('old') });
+    expect(old).toMatchObject({ state: 'no-statement', pass: null });
+  });
+});
+
 describe('an independent second set', () => {
+  it('is wanted where a mandatory number is too close to call, until there is one', () => {
+    const near = [
+      body('r1', '0.8426'),
+      body('r2', '0.8427'),
+      body('r3', '0.8423', { place: exhaust }),
+    ];
+    expect(secondSetsWanted(assessInspection(record({ readings: near })))).toEqual(['1 intake']);
+    const second = [...near, body('r4', '0.8426', { set: 2 }), body('r5', '0.8427', { set: 2 })];
+    expect(secondSetsWanted(assessInspection(record({ readings: second })))).toEqual([]);
+    const advisory = [...bodies, reading('r3', '0.8442')];
+    expect(atIntake('4.6', { readings: advisory }).state).toBe('too-close');
+    expect(secondSetsWanted(assessInspection(record({ readings: advisory })))).toEqual([]);
+  });
+
   const set = (n: number, text: string, id: string) => [
     body(`r${id}1`, '0.8423', { set: n }),
     reading(`r${id}2`, text, { set: n }),
@@ -261,6 +297,35 @@ describe('checks', () => {
       state: 'does-not-comply',
       pass: false,
     });
+  });
+});
+
+describe('declared against found', () => {
+  it('marks what differs by more than the uncertainty, and breaches nothing', () => {
+    const paperwork = facts({
+      origin: 'declared',
+      positions: positionsIn(TWIN),
+      numbers: [
+        number('lifter-body-diameter', '1 intake', '0.84235'),
+        number('lifter-body-diameter', '1 exhaust', '0.8410'),
+        number('displacement', 'engine', '355'),
+      ],
+    });
+    const readings = [body('r1', '0.8423'), body('r2', '0.8423', { place: exhaust })];
+    const assessed = assessInspection(record({ readings, paperwork }));
+    expect(
+      declaredAgainstFound(assessed.facts).map((row) => [
+        row.position,
+        row.declared.text,
+        row.found.text,
+        row.differs,
+      ]),
+    ).toEqual([
+      ['1 intake', '0.84235', '0.8423', false],
+      ['1 exhaust', '0.8410', '0.8423', true],
+    ]);
+    expect(assessed.findings.find((row) => row.clause === '4.2')?.pass).toBe(true);
+    expect(declaredAgainstFound(assessInspection(record({ readings })).facts)).toEqual([]);
   });
 });
 
