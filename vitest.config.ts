@@ -6,7 +6,12 @@ const source = fileURLToPath(new URL('./src', import.meta.url));
 /** A project is a folder of `tests/`; those that need a database say so. */
 const project = (
   name: string,
-  options: { globalSetup?: string[]; testTimeout?: number; maxWorkers?: number } = {},
+  options: {
+    globalSetup?: string[];
+    testTimeout?: number;
+    hookTimeout?: number;
+    maxWorkers?: number;
+  } = {},
 ) => ({
   resolve: { alias: { '@': source } },
   test: {
@@ -28,7 +33,7 @@ export default defineConfig({
       project('contracts'),
       project('components'),
       project('services', { globalSetup: database }),
-      project('api', { globalSetup: database, testTimeout: 60_000 }),
+      project('api', { globalSetup: database, testTimeout: 60_000, hookTimeout: 360_000 }),
       project('scripts', { testTimeout: 120_000 }),
       project('browser', {
         globalSetup: ['tests/support/browser-setup.ts'],

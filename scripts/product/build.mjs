@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
 import { existsSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
+import { readJson } from '../set-up/files.mjs';
 import { Problem } from '../set-up/problem.mjs';
 import { run, tail } from '../set-up/run.mjs';
 
@@ -12,7 +13,7 @@ const inputs = [
   'package-lock.json',
   'tsconfig.json',
 ];
-const stampName = '.built-from';
+const stampName = '.built-from.json';
 
 /**
  * @param {string} folder
@@ -45,6 +46,15 @@ export function hashOfSources(root, publicUrl) {
 }
 
 /**
+ * @param {string} folder
+ * @returns {{ hash: string, publicUrl: string } | undefined} what a whole build there was made from
+ */
+export const buildIn = (folder) =>
+  /** @type {{ hash: string, publicUrl: string } | undefined} */ (
+    readJson(join(folder, stampName))
+  );
+
+/**
  * Builds the site into `folder` when its sources are not those of the last build there.
  *
  * @param {object} options
@@ -55,9 +65,8 @@ export function hashOfSources(root, publicUrl) {
  * @param {import('../set-up/progress.mjs').Progress} options.progress
  */
 export async function ensureBuild({ root, folder, publicUrl, env, progress }) {
-  const stamp = join(folder, stampName);
-  const from = hashOfSources(root, publicUrl);
-  if (existsSync(stamp) && readFileSync(stamp, 'utf8') === from) return;
+  const hash = hashOfSources(root, publicUrl);
+  if (buildIn(folder)?.hash === hash) return;
   await progress.step('site built', async () => {
     const astro = join(root, 'node_modules/astro/astro.js');
     const built = await run(process.execPath, [astro, 'build', '--outDir', folder], {
@@ -70,6 +79,6 @@ export async function ensureBuild({ root, folder, publicUrl, env, progress }) {
         'Mend what the lines above name; `npm run types` and `npm run lint` often say more.',
       );
     }
-    writeFileSync(stamp, from);
+    writeFileSync(join(folder, stampName), JSON.stringify({ hash, publicUrl }));
   });
 }

@@ -105,7 +105,6 @@ async function testIn({ folder, chromium, wants, filters, tally, stack, signal, 
       TEST_CLUSTER_URL: cluster.superuserUrl,
       TEST_CLUSTER_OWNER_URL: cluster.ownerUrl,
       TEST_CLUSTER_APP_URL: cluster.appUrl,
-      TEST_BUILD_URL: publicUrl,
     };
     for (const line of await runProjects({ projects, filters, env: testEnv, folder }))
       tally.add(line);

@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs';
 import type { CaughtMail } from '../../scripts/local/mail.mjs';
+import { eventually } from './wait';
 
 export interface DemoPerson {
   readonly subject: string;
@@ -40,26 +41,7 @@ export async function mailsTo(address: string): Promise<readonly CaughtMail[]> {
   return (await response.json()) as CaughtMail[];
 }
 
-/**
- * Asks again and again until there is an answer.
- *
- * @param what  for the error when there is none after `patience` milliseconds
- */
-export async function eventually<T>(
-  what: string,
-  ask: () => Promise<T | undefined>,
-  patience = 30_000,
-): Promise<T> {
-  const until = performance.now() + patience;
-  do {
-    const answer = await ask();
-    if (answer !== undefined) return answer;
-    await new Promise((resolve) => setTimeout(resolve, 100));
-  } while (performance.now() < until);
-  throw new Error(`Waited ${patience / 1000} s in vain for ${what}.`);
-}
-
-/** The first message to an address whose subject matches, waited for. */
+/** The newest message to an address whose subject matches, waited for. */
 export const mailTo = (address: string, subject: RegExp): Promise<CaughtMail> =>
   eventually(`a mail to ${address} about ${subject}`, async () =>
     (await mailsTo(address)).findLast((mail) => subject.test(mail.subject)),
