@@ -134,6 +134,11 @@ create table public.inspection (
       'alter table public.file add foreign key (series_id, inspection_id) references public.inspection (series_id, id)',
     );
 
+    // What happened to an inspection reads as its lines of the ledger.
+    this.addSql(`
+create index ledger_line_by_inspection on record.ledger_line (series_id, (line::jsonb #>> '{refs,inspection}'))
+where kind in ('inspection-opened', 'inspection-changed', 'report-signed', 'report-revised')`);
+
     // One accepted sending from a tablet. The heads form the inspection's hash chain.
     this.addSql(`
 create table record.capture_batch (

@@ -31,6 +31,8 @@ export const capturesAnswer = z.strictObject({
   receivedAt: z.string(),
   /** Rows that are kept and do not count, with the reason. */
   received: z.array(z.strictObject({ id: z.string(), reason: z.string() })),
+  /** Rows that are kept and count, by a gauge that cannot support a breach. */
+  marked: z.array(z.strictObject({ id: z.string(), reason: z.string() })),
 });
 
 export type CapturesRequest = z.output<typeof capturesRequest>;

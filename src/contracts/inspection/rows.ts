@@ -142,7 +142,7 @@ export const remarkRow = z.discriminatedUnion('remark', [
   }),
 ]);
 
-export const captureRow = z.union([readingRow, zeroRow, remarkRow]);
+export const captureRow = z.discriminatedUnion('kind', [readingRow, zeroRow, remarkRow]);
 
 export type SentReading = z.output<typeof readingRow>;
 export type SentZero = z.output<typeof zeroRow>;

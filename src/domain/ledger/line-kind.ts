@@ -25,6 +25,7 @@ export const LINE_KINDS = [
   'bond-settled',
   'appeal-handed-in',
   'appeal-decided',
+  'inspection-changed',
 ] as const;
 
 export type LineKind = (typeof LINE_KINDS)[number];

@@ -1,0 +1,46 @@
+import type { EntityManager } from '@mikro-orm/postgresql';
+import type { Inspection } from '@/entities/event/inspection';
+
+interface Found {
+  readonly person_id: string;
+  readonly why: string;
+}
+
+/**
+ * Who has an interest in an inspected car, and which: nobody inspects the car they enter, the engine
+ * they own, paperwork they handed in, or a class they run in at the same event. One set-based query.
+ */
+export const interestsIn = async (
+  em: EntityManager,
+  { seriesId, id }: Pick<Inspection, 'seriesId' | 'id'>,
+): Promise<ReadonlyMap<string, string>> => {
+  const rows = await em.execute<Found[]>(
+    `with inspected as (
+       select i.series_id, e.event_id, e.class_id, e.competitor_id,
+              coalesce(i.paperwork_id, e.paperwork_id) as paperwork_id
+       from public.inspection i
+       join public.entry e on e.series_id = i.series_id and e.id = i.entry_id
+       where i.series_id = ? and i.id = ?
+     )
+     select person_id, why from (
+       select competitor_id as person_id, 'enters this car' as why, 1 as place from inspected
+       union all
+       select p.competitor_id, 'declared this engine', 2 from inspected i
+       join public.paperwork p on p.series_id = i.series_id and p.id = i.paperwork_id
+       union all
+       select g.owner_id, 'owns this engine', 3 from inspected i
+       join public.paperwork p on p.series_id = i.series_id and p.id = i.paperwork_id
+       join public.engine g on g.id = p.engine_id
+       union all
+       select v.handed_in_by, 'handed in this engine’s paperwork', 4 from inspected i
+       join record.paperwork_version v
+         on v.series_id = i.series_id and v.paperwork_id = i.paperwork_id
+       union all
+       select e.competitor_id, 'runs in this class at this event', 5 from inspected i
+       join public.entry e on e.series_id = i.series_id and e.event_id = i.event_id
+         and e.class_id = i.class_id and e.state = 'entered'
+     ) found where person_id is not null order by place desc`,
+    [seriesId, id],
+  );
+  return new Map(rows.map((row) => [row.person_id, row.why]));
+};

@@ -1,0 +1,31 @@
+import type { EntityManager } from '@mikro-orm/postgresql';
+
+/** One signed report, as it stands for good. */
+export interface SignedReport {
+  readonly revision: number;
+  readonly reason: string;
+  /** Hexadecimal. */
+  readonly hash: string;
+  readonly chainHead: string;
+  readonly signedBy: string;
+  readonly signer: string;
+  readonly signedAt: string;
+  /** Canonical JSON. */
+  readonly document: string;
+}
+
+/** Every revision of an inspection's report, the first one first. */
+export const readReports = (
+  em: EntityManager,
+  seriesId: string,
+  inspectionId: string,
+): Promise<readonly SignedReport[]> =>
+  em.execute<SignedReport[]>(
+    `select r.revision, r.reason, encode(r.hash, 'hex') as hash,
+            encode(r.chain_head, 'hex') as "chainHead", r.signed_by as "signedBy", p.name as signer,
+            to_char(r.signed_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"') as "signedAt",
+            r.document
+     from record.report r join public.person p on p.id = r.signed_by
+     where r.series_id = ? and r.inspection_id = ? order by r.revision`,
+    [seriesId, inspectionId],
+  );
