@@ -21,7 +21,8 @@ export const findDegreesAndMinutes = (text: string): Rational | undefined => {
     if (value === undefined) return undefined;
     sum = add(sum, value);
   }
-  return degrees[1] === '' || degrees[1] === '+' ? sum : negate(sum);
+  const whole = rational(sum.n, sum.d);
+  return degrees[1] === '' || degrees[1] === '+' ? whole : negate(whole);
 };
 
 const part = (text: string, perDegree: bigint): Rational | undefined => {

@@ -1,7 +1,8 @@
 import type { Dimension } from './dimension';
 import { UNITS, type Unit } from './unit';
 
-const key = (name: string): string => name.trim().toLowerCase().replace(/\s+/g, ' ');
+const key = (name: string): string =>
+  name.trim().toLowerCase().replaceAll('.', '').replace(/\s+/g, ' ');
 
 const byName = new Map<Dimension, Map<string, Unit>>();
 for (const unit of UNITS) {
@@ -10,7 +11,7 @@ for (const unit of UNITS) {
   for (const name of [unit.symbol, ...unit.names]) names.set(key(name), unit);
 }
 
-/** The unit a person calls by this name when they speak of this dimension, capitals and spaces aside. */
+/** The unit a person calls by this name when they speak of this dimension, capitals, spaces and full stops aside. */
 export const findUnit = <D extends Dimension>(dimension: D, name: string): Unit<D> | undefined =>
   (byName.get(dimension)?.get(name) ?? byName.get(dimension)?.get(key(name))) as
     | Unit<D>

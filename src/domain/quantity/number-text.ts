@@ -8,6 +8,9 @@ export type NumberReading =
   | { readonly plain: string; readonly fault?: undefined }
   | { readonly plain?: undefined; readonly fault: NumberFault };
 
+// No reading of any unit needs more; beyond it a text is a slip or an attack.
+const LARGEST_EXPONENT = 15;
+
 const GROUPS = "[,.'’\\u00a0\\u202f]";
 const GROUPED = new RegExp(`^([1-9]\\d{0,2})((${GROUPS})\\d{3}(?:\\3\\d{3})*)(?:([.,])(\\d*))?$`);
 const PLAIN = /^(\d*)(?:([.,])(\d*))?$/;
@@ -25,7 +28,8 @@ export const readNumber = (typed: string): NumberReading => {
   if (/\d\s*[/⁄]\s*\d/.test(text)) return { fault: 'fraction' };
   const [, sign = '', digits = '', exponent = ''] =
     /^([+-]?)(.*?)(e[+-]?\d{1,2})?$/i.exec(text) ?? [];
-  if (!/\d/.test(digits)) return { fault: 'not-a-number' };
+  if (!/\d/.test(digits) || Math.abs(Number(exponent.slice(1))) > LARGEST_EXPONENT)
+    return { fault: 'not-a-number' };
   const grouped = GROUPED.exec(digits);
   if (grouped !== null) return readGrouped(sign, grouped, exponent);
   const plain = PLAIN.exec(digits);

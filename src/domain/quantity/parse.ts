@@ -1,32 +1,22 @@
-import { fail, ok, type Result } from '../result';
+import { ok, type Result } from '../result';
 import { findDegreesAndMinutes } from './angle-text';
 import { type Dimension, dimensionWords, type Written } from './dimension';
 import { dimensionsOf, findUnit, getUnit, unitSymbols } from './find-unit';
 import { readNumber } from './number-text';
+import { type ParseFault, refuse, refuseNumber, unknownUnit } from './parse-fault';
 import type { Quantity } from './quantity';
-import { add, fromDecimalText, mul, type Rational } from './rational';
+import { abs, add, compare, fromDecimalText, mul, type Rational, rational } from './rational';
 import type { Unit } from './unit';
-
-export type ParseFaultName =
-  | 'empty'
-  | 'not-a-number'
-  | 'ambiguous'
-  | 'unit-missing'
-  | 'unit-unknown'
-  | 'wrong-dimension'
-  | 'impossible';
-
-/** What is wrong with a text and how to write it instead, in plain words. */
-export interface ParseFault {
-  readonly name: ParseFaultName;
-  readonly detail: string;
-}
 
 interface Expected<D extends Dimension> {
   readonly dimension: D;
   /** The unit of the column or the clause, for a number that stands alone. */
   readonly defaultUnit?: string | undefined;
 }
+
+// In metres: what a 64-bit number of picometres holds.
+const LARGEST_LENGTH = fromDecimalText('9000000');
+const LARGEST = fromDecimalText('1e12');
 
 /** What most cells hold: digits with at most one point, no unit. */
 const BARE = /^-?(?:\d{1,9}(?:\.\d{0,12})?|\.\d{1,12})$/;
@@ -52,6 +42,7 @@ export const parseQuantity = <D extends Dimension>(
   }
   const [, digits, name = ''] = SPLIT.exec(text) ?? [];
   if (digits === undefined) return refuse('not-a-number', `"${text}" is not a number.`);
+  if (/^[-−–+±]?\s*[\d.,]/.test(name)) return refuseNumber('two-numbers', text);
   const number = readNumber(digits);
   if (number.fault !== undefined) return refuseNumber(number.fault, digits.trim());
   const unit = unitNamed(name.trim(), dimension, defaultUnit, text);
@@ -70,6 +61,8 @@ const taken = <D extends Dimension>(
     return refuse('impossible', `${text} ${symbol} is below absolute zero.`);
   if (dimension === 'count' && value.d !== 1n)
     return refuse('impossible', `A count is a whole number, not ${text}.`);
+  if (compare(abs(value), dimension === 'length' ? LARGEST_LENGTH : LARGEST) > 0)
+    return refuse('impossible', `${text} ${symbol} is too large to have been measured.`);
   return ok({ dimension, text, unit: symbol, value });
 };
 
@@ -84,7 +77,9 @@ export const parseWritten = <D extends Dimension>(
 
 const inBase = (number: Rational, unit: Unit): Rational => {
   const scaled = mul(number, unit.factor);
-  return unit.offset === undefined ? scaled : add(scaled, unit.offset);
+  if (unit.offset === undefined) return scaled;
+  const { n, d } = add(scaled, unit.offset);
+  return rational(n, d);
 };
 
 const unitNamed = <D extends Dimension>(
@@ -111,20 +106,3 @@ const unitNamed = <D extends Dimension>(
     `${text} of what? Write the unit: ${unitSymbols(dimension).slice(0, 4).join(', ')}.`,
   );
 };
-
-const unknownUnit = (name: string, dimension: Dimension): string =>
-  `"${name}" is no unit of ${dimensionWords(dimension)} known here. Write one of ${unitSymbols(dimension).join(', ')}.`;
-
-const NUMBER_WORDS = {
-  ambiguous: (text: string) =>
-    `${text} could be ${text.replace(',', '.')} or ${text.replace(',', '')}. Write it with a decimal point, or without the comma.`,
-  'two-numbers': (text: string) => `"${text}" looks like two numbers. Write one value here.`,
-  fraction: (text: string) => `"${text}" is a fraction. Write it as a decimal.`,
-  'not-a-number': (text: string) => `"${text}" is not a number.`,
-} as const;
-
-const refuseNumber = (fault: keyof typeof NUMBER_WORDS, text: string) =>
-  refuse(fault === 'ambiguous' ? 'ambiguous' : 'not-a-number', NUMBER_WORDS[fault](text));
-
-const refuse = (name: ParseFaultName, detail: string): { ok: false; failure: ParseFault } =>
-  fail({ name, detail });

@@ -12,7 +12,7 @@ export interface Quantity<D extends Dimension = Dimension> extends Written {
   readonly value: exact.Rational;
 }
 
-/** From an exact value in the base. Its text is the exact decimal, or ten places where there is none. */
+/** From an exact value in the base, kept in lowest terms. Its text is the exact decimal, or ten places where there is none. */
 export const quantityOf = <D extends Dimension>(
   dimension: D,
   value: exact.Rational,
@@ -21,7 +21,7 @@ export const quantityOf = <D extends Dimension>(
   const unit = getUnit(dimension, unitName);
   const shifted = unit.offset === undefined ? value : exact.sub(value, unit.offset);
   const text = decimalText(exact.div(shifted, unit.factor), 10);
-  return { dimension, text, unit: unit.symbol, value };
+  return { dimension, text, unit: unit.symbol, value: exact.rational(value.n, value.d) };
 };
 
 const refuseMix = (a: Quantity, b: Quantity): void => {

@@ -1,4 +1,7 @@
-/** An exact number: numerator over denominator in lowest terms, the denominator positive. */
+/**
+ * An exact number: numerator over a positive denominator. In lowest terms from every function but `add`
+ * and `sub`, whose denominators cannot grow past the larger one's: compare with `equal`, not by parts.
+ */
 export interface Rational {
   readonly n: bigint;
   readonly d: bigint;
@@ -43,10 +46,10 @@ export const zero: Rational = { n: 0n, d: 1n };
 export const one: Rational = { n: 1n, d: 1n };
 
 export const add = (a: Rational, b: Rational): Rational => {
-  if (a.d === b.d) return rational(a.n + b.n, a.d);
+  if (a.d === b.d) return { n: a.n + b.n, d: a.d };
   // Denominators of decimals mostly divide each other: the larger then serves for both.
-  if (a.d % b.d === 0n) return rational(a.n + b.n * (a.d / b.d), a.d);
-  if (b.d % a.d === 0n) return rational(a.n * (b.d / a.d) + b.n, b.d);
+  if (a.d % b.d === 0n) return { n: a.n + b.n * (a.d / b.d), d: a.d };
+  if (b.d % a.d === 0n) return { n: a.n * (b.d / a.d) + b.n, d: b.d };
   return rational(a.n * b.d + b.n * a.d, a.d * b.d);
 };
 export const sub = (a: Rational, b: Rational): Rational => add(a, negate(b));
@@ -61,7 +64,7 @@ export const compare = (a: Rational, b: Rational): -1 | 0 | 1 => {
   const right = a.d === b.d ? b.n : b.n * a.d;
   return left < right ? -1 : left > right ? 1 : 0;
 };
-export const equal = (a: Rational, b: Rational): boolean => a.n === b.n && a.d === b.d;
+export const equal = (a: Rational, b: Rational): boolean => a.n * b.d === b.n * a.d;
 export const min = (a: Rational, b: Rational): Rational => (compare(a, b) <= 0 ? a : b);
 export const max = (a: Rational, b: Rational): Rational => (compare(a, b) >= 0 ? a : b);
 
