@@ -53,13 +53,13 @@ export const penaltySentence = ({ penalty }: NoticeDocument): string | undefined
     : `Penalty: ${penalty.words}${penalty.money === undefined ? '' : `; fine of ${moneyWords(penalty.money)}`}.`;
 
 export const computedSentence = (notice: NoticeDocument): string => {
+  const { computed, againstComputedBecause: against } = notice;
   const statement =
-    notice.computed === 'none'
+    computed === 'none'
       ? 'The signed report makes no statement on a mandatory clause'
-      : `The computed finding was ${notice.computed}`;
-  return notice.againstComputedBecause === undefined
-    ? `${statement}; the decision agrees with it.`
-    : `${statement}; the decision departs from it: ${notice.againstComputedBecause}`;
+      : `The computed finding was ${computed}`;
+  if (against !== undefined) return `${statement}; the decision departs from it: ${against}`;
+  return computed === 'none' ? `${statement}.` : `${statement}; the decision agrees with it.`;
 };
 
 export const provisionalWords = (notice: NoticeDocument): string =>
