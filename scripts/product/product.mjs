@@ -45,7 +45,12 @@ export async function startProduct({ home, env, mode, buildFolder, stack, progre
   const { ports, port, publicUrl } = addresses;
   await demandSitePort({ home, port, env });
   const wanted = wantedStandIns(env);
-  const quiet = { ...env, ASTRO_TELEMETRY_DISABLED: '1', TZ: 'UTC' };
+  const quiet = {
+    ...env,
+    ASTRO_TELEMETRY_DISABLED: '1',
+    ASTRO_DISABLE_UPDATE_CHECK: 'true',
+    TZ: 'UTC',
+  };
 
   const prepare = async () => {
     const cluster = wanted.database
