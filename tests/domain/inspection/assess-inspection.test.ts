@@ -140,6 +140,19 @@ describe('a run whose closing zero failed', () => {
     expect(set?.set.superseded.map(({ row }) => row.id)).toEqual(['r11', 'r12']);
   });
 
+  it('of two runs that held the later counts', () => {
+    const held = [zero('z10', 'opening', '0'), zero('z13', 'closing', '0')];
+    const again = [dial('r31', '-0.0018', { zeroRunId: 'run2' })];
+    const good = [
+      zero('z30', 'opening', '0', { runId: 'run2' }),
+      zero('z33', 'closing', '0', { runId: 'run2' }),
+    ];
+    const result = assessInspection(
+      record({ readings: [...first, ...again], zeros: [...held, ...good] }),
+    );
+    expect(result.bores[0]?.sets[0]?.measurement.clearance?.mean.text).toBe('0.0018');
+  });
+
   it('is not replaced by a later run that failed too', () => {
     const good = [zero('z13', 'closing', '0'), zero('z10', 'opening', '0')];
     const again = [dial('r31', '-0.0018', { zeroRunId: 'run2' })];
@@ -436,7 +449,11 @@ describe('the assessment', () => {
       found
         .find((row) => row.clause === clause)
         ?.perPosition.find((row) => row.position === '1 exhaust')?.state;
-    expect([stateAt('4.6'), stateAt('4.2')]).toEqual(['could-not-be-reached', 'within']);
+    expect([stateAt('4.6'), stateAt('4.2'), stateAt('4.3')]).toEqual([
+      'could-not-be-reached',
+      'within',
+      'not-measured',
+    ]);
   });
 
   it('never fails a clause on an advisory number', () => {
