@@ -1,11 +1,11 @@
 import { ok, type Result } from '../result';
-import { findDegreesAndMinutes } from './angle-text';
 import { type Dimension, dimensionWords, type Written } from './dimension';
 import { dimensionsOf, findUnit, getUnit, unitSymbols } from './find-unit';
 import { readNumber } from './number-text';
-import { type ParseFault, refuse, refuseNumber, unknownUnit } from './parse-fault';
 import type { Quantity } from './quantity';
 import { abs, add, compare, fromDecimalText, mul, type Rational, rational } from './rational';
+import { findDegreesAndMinutes } from './text/angle-text';
+import { type ParseFault, refuse, refuseNumber, unknownUnit } from './text/parse-fault';
 import type { Unit } from './unit';
 
 interface Expected<D extends Dimension> {

@@ -1,5 +1,5 @@
-import { findNumber } from './number-text';
-import { add, negate, type Rational, rational } from './rational';
+import { findNumber } from '../number-text';
+import { add, negate, type Rational, rational } from '../rational';
 
 const DEGREES = /^([+\-−–]?)\s*(\d+)\s*(?:°|º|deg(?:rees?)?)\s*/i;
 const MINUTES = /^([\d.,]+)\s*(?:['′’]|min(?:utes?)?)\s*/i;

@@ -1,6 +1,6 @@
-import { fail } from '../result';
-import { type Dimension, dimensionWords } from './dimension';
-import { unitSymbols } from './find-unit';
+import { fail } from '../../result';
+import { type Dimension, dimensionWords } from '../dimension';
+import { unitSymbols } from '../find-unit';
 
 export type ParseFaultName =
   | 'empty'
