@@ -6,6 +6,7 @@ import { Rulebooks } from './0004-rulebooks';
 import { EnginePaperwork } from './0005-engine-paperwork';
 import { EventsAndInspections } from './0006-events-and-inspections';
 import { Verdicts } from './0007-verdicts';
+import { RulesQuestions } from './0008-rules-questions';
 
 /** In order of application. A new migration is added here by hand. */
 export const migrationsList: MigrationObject[] = [
@@ -16,4 +17,5 @@ export const migrationsList: MigrationObject[] = [
   { name: '0005-engine-paperwork', class: EnginePaperwork },
   { name: '0006-events-and-inspections', class: EventsAndInspections },
   { name: '0007-verdicts', class: Verdicts },
+  { name: '0008-rules-questions', class: RulesQuestions },
 ];

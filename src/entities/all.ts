@@ -17,6 +17,7 @@ import { Session } from './people/session';
 import { SignInLink } from './people/sign-in-link';
 import { RaceClass } from './series/race-class';
 import { RulebookDraft } from './series/rulebook-draft';
+import { RulesQuestion } from './series/rules-question';
 import { Season } from './series/season';
 import { Series } from './series/series';
 
@@ -33,6 +34,7 @@ export const entities = [
   Season,
   RaceClass,
   RulebookDraft,
+  RulesQuestion,
   Car,
   Engine,
   Paperwork,

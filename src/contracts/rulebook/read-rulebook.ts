@@ -3,14 +3,19 @@ import { type Failure, invalid } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import { findAmbiguities } from '@/domain/rulebook/ambiguity/find-ambiguities';
 import { readBench } from '../bench/read-bench';
-import { rulebookContent, rulebookFile } from './edition';
+import { bulletinContent, rulebookContent, rulebookFile } from './edition';
 
 export type RulebookContent = z.output<typeof rulebookContent>;
 export type RulebookFile = z.output<typeof rulebookFile>;
+export type BulletinContent = z.output<typeof bulletinContent>;
 
 /** A draft's content by its shape; it may still be ambiguous. */
 export const readRulebookContent = (body: unknown): Result<RulebookContent, Failure> =>
   readBench(rulebookContent, body);
+
+/** A bulletin's draft by its shape; what keeps it from being published is asked with the rules in force. */
+export const readBulletinContent = (body: unknown): Result<BulletinContent, Failure> =>
+  readBench(bulletinContent, body);
 
 /** An imported file: every fault with its place, shape first, and nothing taken by half. */
 export const readRulebookFile = (body: unknown): Result<RulebookFile, Failure> =>
