@@ -1,6 +1,7 @@
 import { expect, test } from 'vitest';
 import { clearanceExample } from '@/components/bench/forms/clearance';
 import { compressionExample } from '@/components/bench/forms/compression';
+import { sizesExamples } from '@/components/bench/forms/sizes';
 import { temperatureExample } from '@/components/bench/forms/temperature';
 import { uncertaintyExample } from '@/components/bench/forms/uncertainty';
 import { journey } from '../support/browser';
@@ -23,6 +24,7 @@ test.each([phone, desk])(
         `/bench/compression${compressionExample}`,
         '/bench/cam?of=events&intakeOpens=6&intakeCloses=42&exhaustOpens=48&exhaustCloses=12',
         `/bench/temperature${temperatureExample}`,
+        `/bench/sizes${sizesExamples.weights}`,
       ]) {
         await visitor.open(path);
         expect(await visitor.page.locator('h1').count(), path).toBe(1);

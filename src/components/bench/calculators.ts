@@ -37,6 +37,11 @@ export const calculators = [
     name: 'Temperature',
     purpose: 'A length read warm or cold, brought to 20 °C.',
   },
+  {
+    slug: 'sizes',
+    name: 'Springs, holes, weights',
+    purpose: 'Spring rate, area of a restrictor or port, shares of the car’s weight.',
+  },
 ] as const;
 
 export type CalculatorSlug = (typeof calculators)[number]['slug'];

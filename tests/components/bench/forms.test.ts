@@ -1,4 +1,10 @@
 import { describe, expect, it } from 'vitest';
+import {
+  placesFor,
+  shownDecimal,
+  shownPercent,
+  shownWidth,
+} from '@/components/bench/answers/shown';
 import { calculators } from '@/components/bench/calculators';
 import { type FieldGroup, fieldsOf, type Typed } from '@/components/bench/fields';
 import {
@@ -23,6 +29,15 @@ import {
   displacementForm,
 } from '@/components/bench/forms/displacement';
 import {
+  areaBody,
+  areaForm,
+  sizesExamples,
+  springBody,
+  springForm,
+  weightsBody,
+  weightsForm,
+} from '@/components/bench/forms/sizes';
+import {
   temperatureBody,
   temperatureExample,
   temperatureForm,
@@ -32,7 +47,6 @@ import {
   uncertaintyExample,
   uncertaintyForm,
 } from '@/components/bench/forms/uncertainty';
-import { placesFor, shownDecimal, shownPercent, shownWidth } from '@/components/bench/shown';
 import { faultsByField, typedFrom } from '@/components/bench/typed';
 import { assessRequest } from '@/contracts/bench/assess';
 import { clearanceRequest } from '@/contracts/bench/clearance';
@@ -54,6 +68,9 @@ const forms = [
   ['cam events', eventsForm, camExamples.events, eventsBody, engineRequest],
   ['cam table', tableForm, camExamples.table, tableBody, engineRequest],
   ['cam lift', liftForm, camExamples.lift, liftBody, engineRequest],
+  ['spring', springForm, sizesExamples.spring, springBody, engineRequest],
+  ['area', areaForm, sizesExamples.area, areaBody, engineRequest],
+  ['weights', weightsForm, sizesExamples.weights, weightsBody, engineRequest],
   ['temperature', temperatureForm, temperatureExample, temperatureBody, temperatureRequest],
 ] as const;
 
@@ -84,7 +101,7 @@ describe('each calculator', () => {
     expect(new Set(fields.map(({ pointer }) => pointer)).size).toBe(fields.length);
   });
 
-  it('has its place in the list of seven', () => {
+  it('has its place in the list', () => {
     expect(calculators.map(({ slug }) => slug)).toEqual([
       'clearance',
       'decision',
@@ -93,6 +110,7 @@ describe('each calculator', () => {
       'compression',
       'cam',
       'temperature',
+      'sizes',
     ]);
   });
 });
