@@ -18,15 +18,22 @@ export function report(error) {
   if (trace !== undefined) console.error(trace);
 }
 
-/** @returns {AbortSignal} aborted at the first SIGINT, SIGTERM or SIGHUP */
+/** @returns {AbortSignal} aborted at the first SIGINT, SIGTERM or SIGHUP, or when npm is gone */
 export function stopSignal() {
   const controller = new AbortController();
+  /** @param {string} reason */
+  const stop = (reason) => {
+    if (controller.signal.aborted) return;
+    controller.abort(new Error(`stopped by ${reason}`));
+    interruptCommands();
+  };
   for (const name of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
-    process.on(name, () => {
-      if (controller.signal.aborted) return;
-      controller.abort(new Error(`stopped by ${name}`));
-      interruptCommands();
-    });
+    process.on(name, () => stop(name));
+  }
+  // npm that is killed takes nobody along; whoever it ran is then handed to another parent.
+  if (process.env['npm_lifecycle_event'] !== undefined) {
+    const npm = process.ppid;
+    setInterval(() => process.ppid === npm || stop('the end of npm'), 250).unref();
   }
   // Whoever read the output may be gone; stopping goes on all the same.
   process.stdout.on('error', () => undefined);
