@@ -68,6 +68,7 @@ create table public.file (
   created_by uuid not null references public.person (id),
   created_at timestamptz not null,
   kept_at timestamptz,
+  removed_at timestamptz,
   primary key (series_id, id),
   foreign key (series_id, paperwork_id) references public.paperwork (series_id, id),
   check (state <> 'kept' or (object_key is not null and sha256 is not null and bytes is not null))

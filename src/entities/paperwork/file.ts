@@ -26,6 +26,8 @@ export const KeptFile = defineEntity({
     createdBy: p.uuid(),
     createdAt: p.datetime(),
     keptAt: p.datetime().nullable(),
+    /** Taken out of the draft; versions handed in before still show it. */
+    removedAt: p.datetime().nullable(),
   }),
 });
 

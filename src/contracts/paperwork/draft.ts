@@ -1,0 +1,49 @@
+import * as z from 'zod/mini';
+import { quantityName } from './document';
+
+const line = z.string().check(z.maxLength(200, 'At most 200 characters.'));
+const typed = z.string().check(z.maxLength(500, 'At most 500 characters.'));
+
+const place = {
+  position: line,
+  quantity: quantityName,
+  depth: line,
+  axis: line,
+};
+
+const cell = z.strictObject({
+  ...place,
+  typed,
+  unit: line,
+  source: z.optional(z.strictObject({ fileId: z.uuid(), file: line, cell: line })),
+  confirmed: z.optional(z.boolean()),
+});
+
+export const columnMeaning = z.discriminatedUnion('kind', [
+  z.strictObject({ kind: z.literal('position') }),
+  z.strictObject({ kind: z.literal('cylinder') }),
+  z.strictObject({ kind: z.literal('valve') }),
+  z.strictObject({ kind: z.literal('not-taken') }),
+  z.strictObject({
+    kind: z.literal('reading'),
+    quantity: quantityName,
+    unit: line,
+    depth: line,
+    axis: line,
+    valve: z.optional(z.enum(['intake', 'exhaust'])),
+  }),
+]);
+
+export const mapping = z.record(line, columnMeaning);
+
+/** A draft as it is typed: any text may stand in it. */
+export const paperworkDraft = z.strictObject({
+  answers: z
+    .array(z.strictObject({ subject: line, position: line, typed, unit: z.optional(line) }))
+    .check(z.maxLength(600)),
+  sheets: z
+    .array(z.strictObject({ subject: line, cells: z.array(cell).check(z.maxLength(2_000)) }))
+    .check(z.maxLength(20)),
+  mapping,
+  note: z.string().check(z.maxLength(2_000, 'At most 2,000 characters.')),
+});

@@ -1,0 +1,28 @@
+import type { SniffedKind } from './sniff';
+
+const at16 = (bytes: Uint8Array, at: number): number =>
+  (bytes[at] ?? 0) * 256 + (bytes[at + 1] ?? 0);
+const at32 = (bytes: Uint8Array, at: number): number =>
+  at16(bytes, at) * 65_536 + at16(bytes, at + 2);
+
+/** From the first frame header of a JPEG (ITU-T T.81, annex B.2.2). */
+const jpegPixels = (bytes: Uint8Array): number | undefined => {
+  let at = 2;
+  while (at + 9 < bytes.length && bytes[at] === 0xff) {
+    const marker = bytes[at + 1] ?? 0;
+    const isFrame =
+      marker >= 0xc0 && marker <= 0xcf && marker !== 0xc4 && marker !== 0xc8 && marker !== 0xcc;
+    if (isFrame) return at16(bytes, at + 5) * at16(bytes, at + 7);
+    at += 2 + at16(bytes, at + 2);
+  }
+  return undefined;
+};
+
+/**
+ * Pixels that a picture says it has, read from its header without decoding anything; nothing where it
+ * does not say. PNG: the IHDR chunk (ISO/IEC 15948, 11.2.2).
+ */
+export const findPixels = (bytes: Uint8Array, kind: SniffedKind): number | undefined => {
+  if (kind === 'png') return at32(bytes, 16) * at32(bytes, 20);
+  return kind === 'jpeg' ? jpegPixels(bytes) : undefined;
+};

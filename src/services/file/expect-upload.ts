@@ -1,0 +1,102 @@
+import type { Actor } from '@/domain/access/permission';
+import { absent, type Failure, failure, invalid } from '@/domain/failure';
+import {
+  type FilePurpose,
+  HEIC_WORDS,
+  MOST_BYTES,
+  MOST_FILES,
+  tooLargeWords,
+} from '@/domain/paperwork/file/limits';
+import { isWritable } from '@/domain/paperwork/state';
+import { fail, ok, type Result } from '@/domain/result';
+import { KeptFile } from '@/entities/paperwork/file';
+import { performAct } from '../act/perform-act';
+import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
+import type { Ports } from '../ports';
+
+export interface ExpectedUpload {
+  readonly act: string;
+  /** Client-made UUIDv7. */
+  readonly fileId: string;
+  readonly paperworkId: string;
+  readonly purpose: FilePurpose;
+  /** The photograph's or sheet's subject in the rulebook. */
+  readonly item: string;
+  readonly name: string;
+  readonly type: string;
+  readonly bytes: number;
+}
+
+/** What can be refused before a byte is sent. */
+const refusalOf = ({ purpose, name, type, bytes }: ExpectedUpload): Failure | undefined => {
+  if (bytes < 1) return failure('damaged-file', 'The file is empty.');
+  if (bytes > MOST_BYTES[purpose]) return failure('too-large', tooLargeWords(purpose, bytes));
+  const isHeic = /^image\/hei[cf]/.test(type) || /\.hei[cf]$/i.test(name);
+  if (purpose === 'photograph' && isHeic) return failure('unsupported-file', HEIC_WORDS);
+  return undefined;
+};
+
+export const wrongPlace = (): Failure =>
+  failure('not-in-this-state', 'This paperwork is handed in; files are added to a draft.');
+
+/**
+ * Announces a file and answers where its bytes go: one PUT within minutes. It counts only after
+ * `confirmUpload` has read it back.
+ */
+export const expectUpload = async (
+  deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs' | 'objects'>,
+  actor: Actor,
+  input: ExpectedUpload,
+): Promise<
+  Result<{ readonly fileId: string; readonly url: string; readonly type: string }, Failure>
+> => {
+  const { act, fileId, paperworkId, purpose, item, name, bytes } = input;
+  const known = isId(paperworkId) ? await findOwnPaperwork(deps.db, actor, paperworkId) : undefined;
+  if (known === undefined) return fail(absent());
+  const refusal = refusalOf(input);
+  if (refusal !== undefined)
+    return fail({ ...refusal, faults: [{ pointer: '/bytes', detail: refusal.detail }] });
+  const { seriesId } = known;
+  const type = input.type.trim() === '' ? 'application/octet-stream' : input.type.trim();
+  const request = { fileId, paperworkId, purpose, item, name, type, bytes };
+  const uploadKey = `uploads/${seriesId}/${fileId}`;
+  const expected = await performAct(
+    deps,
+    actor,
+    { id: act, kind: 'expect-upload', seriesId, input: request },
+    async ({ em, at }) => {
+      const paperwork = await findOwnPaperwork(em, actor, paperworkId, true);
+      if (paperwork === undefined) return fail(absent());
+      if (!isWritable(paperwork.state)) return fail(wrongPlace());
+      const there = await em.count(KeptFile, {
+        seriesId,
+        paperworkId,
+        state: { $ne: 'refused' },
+        removedAt: null,
+      });
+      if (there >= MOST_FILES) {
+        const detail = `There are ${MOST_FILES} files already. Take one out first.`;
+        return fail(invalid([{ pointer: '', detail }]));
+      }
+      em.persist(
+        em.create(KeptFile, {
+          seriesId,
+          id: fileId,
+          paperworkId,
+          purpose,
+          item,
+          name,
+          declaredType: type,
+          declaredBytes: bytes,
+          uploadKey,
+          state: 'expected',
+          createdBy: actor.personId,
+          createdAt: at,
+        }),
+      );
+      return ok({ fileId });
+    },
+  );
+  if (!expected.ok) return expected;
+  return ok({ fileId, url: await deps.objects.presignPut(uploadKey, type, bytes), type });
+};

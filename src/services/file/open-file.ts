@@ -1,0 +1,40 @@
+import type { Actor } from '@/domain/access/permission';
+import { absent, type Failure, failure } from '@/domain/failure';
+import { fail, ok, type Result } from '@/domain/result';
+import type { Ports } from '../ports';
+import { MOST_PHOTOGRAPH_BYTES, PREVIEW_WIDTHS } from './make-previews';
+import { findReadableFile } from './own-file';
+
+export interface OpenedFile {
+  readonly bytes: Uint8Array;
+  readonly type: string;
+  readonly name: string;
+}
+
+/** A preview of a photograph: a JPEG of this width without position data. Not made yet: try again soon. */
+export const openPreview = async (
+  deps: Pick<Ports, 'db' | 'objects'>,
+  actor: Actor,
+  input: { readonly fileId: string; readonly width: number },
+): Promise<Result<OpenedFile, Failure>> => {
+  const file = await findReadableFile(deps.db, actor, input.fileId);
+  const width = PREVIEW_WIDTHS.find((one) => one === input.width);
+  if (file === undefined || width === undefined || file.state !== 'kept') return fail(absent());
+  const key = file.previews?.[String(width)];
+  if (key === undefined)
+    return fail(failure('unavailable', 'The preview is still being made. Try again in a moment.'));
+  const bytes = await deps.objects.read(key, MOST_PHOTOGRAPH_BYTES);
+  return ok({ bytes, type: 'image/jpeg', name: `${width}.jpg` });
+};
+
+/** The file byte for byte, as it was sent; it may hold position data, so it goes to the parties only. */
+export const openOriginal = async (
+  deps: Pick<Ports, 'db' | 'objects'>,
+  actor: Actor,
+  input: { readonly fileId: string },
+): Promise<Result<OpenedFile, Failure>> => {
+  const file = await findReadableFile(deps.db, actor, input.fileId);
+  if (file === undefined || !file.objectKey || !file.mediaType) return fail(absent());
+  const bytes = await deps.objects.read(file.objectKey, MOST_PHOTOGRAPH_BYTES);
+  return ok({ bytes, type: file.mediaType, name: file.name });
+};

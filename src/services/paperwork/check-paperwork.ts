@@ -1,0 +1,113 @@
+import type { EntityManager } from '@mikro-orm/postgresql';
+import { type Actor, seriesWhere } from '@/domain/access/permission';
+import { absent, type Failure, failure } from '@/domain/failure';
+import { toHex } from '@/domain/ledger/bytes';
+import { declare } from '@/domain/paperwork/declare';
+import { type Declared, declaredFacts } from '@/domain/paperwork/declared-facts';
+import { cellWords } from '@/domain/paperwork/sheet/judge-cells';
+import {
+  isComplete,
+  missingWords,
+  type StillMissing,
+  stillMissing,
+} from '@/domain/paperwork/still-missing';
+import { fail, ok, type Result } from '@/domain/result';
+import type { ClauseResult } from '@/domain/rulebook/clause-result';
+import { evaluateRules } from '@/domain/rulebook/evaluate/evaluate-rules';
+import type { PaperworkForm } from '@/domain/rulebook/form/form';
+import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';
+import type { Ports } from '../ports';
+import { findRules, type StandingRules } from '../rulebook/find-rules';
+import { isId } from './own-paperwork';
+import {
+  declaredFile,
+  isKept,
+  type PaperworkRow,
+  readFiles,
+  readPaperwork,
+  type StoredFile,
+} from './read-row';
+
+export interface CheckedPaperwork {
+  readonly standing: StandingRules;
+  readonly form: PaperworkForm;
+  readonly files: readonly StoredFile[];
+  readonly declared: Declared;
+  readonly missing: StillMissing;
+  readonly results: readonly ClauseResult[];
+}
+
+export const noRules = (): Failure =>
+  failure('not-in-this-state', 'No rulebook of this class is in force: there is nothing to check.');
+
+/** The stored draft against the rules in force at an instant. */
+export const checkRow = async (
+  em: EntityManager,
+  row: PaperworkRow,
+  at: Date,
+): Promise<CheckedPaperwork | undefined> => {
+  const standing = await findRules(em, row.seriesId, row.classId, at);
+  if (standing === undefined) return undefined;
+  const files = await readFiles(em, row.seriesId, row.id);
+  const kept = files.filter(isKept).map(declaredFile);
+  const form = paperworkForm(standing.rules);
+  const declared = declare(row.draft, form, row.layout, kept);
+  return {
+    standing,
+    form,
+    files,
+    declared,
+    missing: stillMissing(row.draft, standing.rules, form, row.layout, kept),
+    results: evaluateRules(standing.rules, declaredFacts(declared), {
+      carNumber: row.carNumber,
+      engineId: row.engineId,
+    }),
+  };
+};
+
+/** The actor's own paperwork by id. */
+export const findOwnRow = async (
+  em: EntityManager,
+  actor: Actor,
+  id: string,
+): Promise<PaperworkRow | undefined> => {
+  const open = seriesWhere(actor, 'paperwork.hand-in');
+  if (!isId(id) || open.length === 0) return undefined;
+  const where = 'p.id = ? and p.competitor_id = ? and p.series_id = any(?::uuid[])';
+  const [row] = await readPaperwork(em, where, [id, actor.personId, `{${open.join(',')}}`]);
+  return row;
+};
+
+/** What the saved draft lacks, and each clause held against what it declares. Nothing is changed. */
+export const checkPaperwork = async (
+  deps: Pick<Ports, 'db' | 'clock'>,
+  actor: Actor,
+  { paperworkId }: { readonly paperworkId: string },
+): Promise<
+  Result<
+    {
+      readonly rulesHash: string;
+      readonly missing: string;
+      readonly complete: boolean;
+      readonly cells: readonly { readonly place: string; readonly detail: string }[];
+      readonly results: readonly ClauseResult[];
+    },
+    Failure
+  >
+> => {
+  const row = await findOwnRow(deps.db, actor, paperworkId);
+  if (row === undefined) return fail(absent());
+  const checked = await checkRow(deps.db, row, deps.clock.now());
+  if (checked === undefined) return fail(noRules());
+  const { missing, results, standing } = checked;
+  return ok({
+    rulesHash: toHex(standing.hash),
+    missing: missingWords(missing),
+    complete: isComplete(missing),
+    cells: missing.cells.map(({ cell, detail }) => ({
+      place: cellWords(cell),
+      detail: detail ?? '',
+    })),
+    results,
+  });
+};
