@@ -5,6 +5,7 @@ import { images } from '@/adapters/images/sharp';
 import { openJobs } from '@/adapters/jobs';
 import { openMailer } from '@/adapters/mail/smtp';
 import { openObjects } from '@/adapters/objects/s3';
+import { noticePrinter } from '@/adapters/pdf/notice-printer';
 import { systemClock, systemRandom } from '@/adapters/system/system';
 import { type Config, readConfig } from '@/config';
 import type { Ports } from '@/services/ports';
@@ -41,6 +42,7 @@ export const compose = async (config: Config): Promise<Composition> => {
     images,
     mailer,
     identity,
+    notices: noticePrinter,
     site: { publicUrl: config.publicUrl, mailFrom: config.mail.from },
   });
   return {

@@ -1,4 +1,5 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
+import type { NoticeDocument } from '@/domain/verdict/notice';
 
 /** What the use cases need of the world. Each one names its own share: `Pick<Ports, 'db' | 'clock'>`. */
 export interface Ports {
@@ -11,6 +12,7 @@ export interface Ports {
   readonly images: Images;
   readonly mailer: Mailer;
   readonly identity: IdentityProvider;
+  readonly notices: NoticePrinter;
   readonly site: Site;
 }
 
@@ -125,4 +127,19 @@ export interface OutgoingMail {
 
 export interface Mailer {
   send(mail: OutgoingMail): Promise<void>;
+}
+
+export interface NoticeToPrint {
+  readonly notice: NoticeDocument;
+  /** The ledger line that commits to the notice, and the signed head that covers it, once there is one. */
+  readonly ledger: { readonly line: number; readonly checkpoint?: number | undefined };
+  /** Where a reader of the print finds and checks the notice; printed as a QR code. */
+  readonly url: string;
+  /** Carried inside the PDF: document, salt, line and, once there is one, the proof. */
+  readonly attachment: { readonly name: string; readonly text: string };
+}
+
+export interface NoticePrinter {
+  /** The same notice gives the same bytes, every time. */
+  print(input: NoticeToPrint): Promise<Uint8Array>;
 }

@@ -1,0 +1,115 @@
+import { readFile } from 'node:fs/promises';
+import { createRequire } from 'node:module';
+import fontkit, { type Font } from '@pdf-lib/fontkit';
+import type { PDFDocument, PDFFont, PDFPage } from 'pdf-lib';
+
+/** Faces of the printed sheet; sizes and places are in CSS pixels, as the sheet was drawn. */
+export type Face = 'text' | 'bold' | 'head' | 'num' | 'num-bold';
+
+export interface Style {
+  readonly face: Face;
+  readonly size: number;
+  readonly white?: boolean;
+}
+
+const barlow = (cut: number) => [
+  `barlow/files/barlow-latin-${cut}-normal.woff`,
+  `barlow/files/barlow-latin-ext-${cut}-normal.woff`,
+];
+
+const condensed = ['latin', 'latin-ext'].map(
+  (part) => `barlow-semi-condensed/files/barlow-semi-condensed-${part}-600-normal.woff`,
+);
+
+// WOFF, since the subsetter cannot take WOFF2's transformed outlines apart. B612 is Latin only: what
+// it lacks is set in Barlow.
+const FILES: { readonly [F in Face]: readonly string[] } = {
+  text: barlow(500),
+  bold: barlow(600),
+  head: condensed,
+  num: ['b612/files/b612-latin-400-normal.woff', ...barlow(500)],
+  'num-bold': ['b612/files/b612-latin-700-normal.woff', ...barlow(600)],
+};
+
+interface Cut {
+  readonly outlines: Font;
+  readonly embedded: PDFFont;
+}
+
+/** What stands for a character that no face has: B612 and Barlow share it. */
+const BOX = '¤';
+
+const cuts = new Map<string, Promise<Uint8Array>>();
+const require = createRequire(import.meta.url);
+
+const load = (file: string): Promise<Uint8Array> => {
+  const known = cuts.get(file) ?? readFile(require.resolve(`@fontsource/${file}`));
+  cuts.set(file, known);
+  return known;
+};
+
+export interface Typesetter {
+  readonly width: (text: string, style: Style) => number;
+  /** Draws on a baseline, in the page's own points. */
+  readonly draw: (page: PDFPage, text: string, at: Placed) => void;
+}
+
+export interface Placed {
+  readonly x: number;
+  readonly y: number;
+  readonly style: Style;
+  readonly scale: number;
+  readonly ink: Parameters<PDFPage['drawText']>[1] extends infer O
+    ? O extends { color?: infer C }
+      ? C
+      : never
+    : never;
+}
+
+/** Faces embedded into one document, each subset to what is drawn. */
+export const openTypefaces = async (document: PDFDocument): Promise<Typesetter> => {
+  document.registerFontkit(fontkit);
+  const opened = new Map<string, Cut>();
+  for (const file of new Set(Object.values(FILES).flat())) {
+    const bytes = await load(file);
+    const embedded = await document.embedFont(bytes, {
+      subset: true,
+      // Figures of one width; no ligatures, so that the text can be searched letter by letter.
+      features: { tnum: true, liga: false },
+    });
+    opened.set(file, { outlines: fontkit.create(bytes), embedded });
+  }
+  const cutsOf = (face: Face) => FILES[face].flatMap((file) => opened.get(file) ?? []);
+
+  /** The text cut where the font changes. */
+  const runs = (text: string, face: Face): readonly { font: PDFFont; text: string }[] => {
+    const parts: { font: PDFFont; text: string }[] = [];
+    for (const letter of text.normalize('NFC')) {
+      const has = (char: string) =>
+        cutsOf(face).find(({ outlines }) =>
+          outlines.hasGlyphForCodePoint(char.codePointAt(0) ?? 0),
+        );
+      const cut = has(letter);
+      const font = cut ?? has(BOX);
+      if (font === undefined) throw new Error('The print’s faces lack their own sign.');
+      const shown = cut === undefined ? BOX : letter;
+      const last = parts.at(-1);
+      if (last?.font === font.embedded) last.text += shown;
+      else parts.push({ font: font.embedded, text: shown });
+    }
+    return parts;
+  };
+
+  return {
+    width: (text, { face, size }) =>
+      runs(text, face).reduce((sum, run) => sum + run.font.widthOfTextAtSize(run.text, size), 0),
+    draw: (page, text, { x, y, style, scale, ink }) => {
+      let at = x;
+      for (const run of runs(text, style.face)) {
+        const size = style.size * scale;
+        page.drawText(run.text, { x: at, y, size, font: run.font, ...(ink ? { color: ink } : {}) });
+        at += run.font.widthOfTextAtSize(run.text, size);
+      }
+    },
+  };
+};
