@@ -444,6 +444,29 @@ describe('POST /api/bench/engine', () => {
     });
   });
 
+  it('valve events and weights carry the uncertainty of one event, of one corner', async () => {
+    const k = 1.959963984540054;
+    const timing = await work('valve-events', {
+      intakeOpens: '6',
+      intakeCloses: '42',
+      exhaustOpens: '48',
+      exhaustCloses: '12',
+      uncertainties: { event: '1' },
+    });
+    const spread = timing['expandedUncertainties'] as Record<string, number>;
+    near(spread['intakeDuration'], k * Math.SQRT2, 1e-9);
+    near(spread['lobeSeparation'], k / 2, 1e-9);
+    const car = await work('weights', {
+      leftFront: '800',
+      rightFront: '800',
+      leftRear: '800',
+      rightRear: '800',
+      unit: 'lb',
+      uncertainties: { corner: 1 },
+    });
+    near((car['expandedUncertainties'] as Record<string, number>)['total'], 2 * k, 1e-9);
+  });
+
   const lift = checkValue('valve-lift');
   it(`lift (${provenance(lift)})`, async () => {
     const inputs = { lobeLift: '0.3', rockerRatio: '1.5', unit: 'in' };

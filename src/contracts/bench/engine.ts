@@ -59,6 +59,7 @@ const valveEvents = z.strictObject({
   intakeCloses: figure,
   exhaustOpens: figure,
   exhaustCloses: figure,
+  uncertainties: uncertainties('event'),
 });
 
 const lift = z.strictObject({
@@ -90,6 +91,7 @@ const weights = z.strictObject({
   leftRear: figure,
   rightRear: figure,
   unit: unitName,
+  uncertainties: uncertainties('corner'),
 });
 
 export const engineRequest = z.discriminatedUnion('quantity', [
@@ -107,6 +109,12 @@ const shared = {
   unit: z.string(),
   working: z.array(z.string()),
   datum: z.string(),
+};
+
+const several = {
+  ...shared,
+  /** U of each figure at two-sided 95 %, where an uncertainty was stated. */
+  expandedUncertainties: z.optional(z.record(z.string(), z.number())),
 };
 
 const single = z.strictObject({
@@ -128,7 +136,7 @@ export const engineResponse = z.union([
     warnings: z.array(z.string()),
   }),
   z.strictObject({
-    ...shared,
+    ...several,
     intakeDuration: z.string(),
     exhaustDuration: z.string(),
     intakeCentreline: z.string(),
@@ -138,7 +146,7 @@ export const engineResponse = z.union([
   }),
   /** Shares in per cent of the total. */
   z.strictObject({
-    ...shared,
+    ...several,
     total: z.string(),
     left: z.string(),
     rear: z.string(),

@@ -61,6 +61,8 @@ const gaugeStudy = {
   PV: z.number(),
   TV: z.number(),
   ndc: z.nullable(z.number()),
+  /** Analysis of variance: whether the interaction was pooled with the repeatability. */
+  pooled: z.optional(z.boolean()),
 };
 
 export const studyResponse = z.union([

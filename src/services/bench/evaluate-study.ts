@@ -38,7 +38,8 @@ function prepare(request: StudyRequest, take: StudyTaker): () => StudyResponse {
       return () => {
         const study = request.method === 'anova' ? crossedAnova(readings) : averageRange(readings);
         const { method, EV, AV, GRR, PV, TV, ndc } = study;
-        return { method, EV, AV, GRR, PV, TV, ndc };
+        const pooling = 'pooled' in study ? { pooled: study.pooled } : {};
+        return { method, EV, AV, GRR, PV, TV, ndc, ...pooling };
       };
     }
     case 'iso5725': {

@@ -61,17 +61,17 @@ describe('valve events', () => {
       card.expected['centerline_ATDC'],
     );
     const found = camTiming({
-      intakeOpens: deg(IO_BTDC),
-      intakeCloses: deg(IC_ABDC),
-      exhaustOpens: deg(48),
-      exhaustCloses: deg(EC_ATDC),
+      intakeOpens: { value: deg(IO_BTDC) },
+      intakeCloses: { value: deg(IC_ABDC) },
+      exhaustOpens: { value: deg(48) },
+      exhaustCloses: { value: deg(EC_ATDC) },
     });
-    expect(found.overlap.text).toBe(String(card.expected['overlap']));
-    expect(found.intakeDuration.text).toBe(String(card.expected['duration']));
-    expect(found.intakeCentreline.text).toBe(String(card.expected['centerline_ATDC']));
-    expect(found.exhaustDuration.text).toBe('240');
-    expect(found.exhaustCentreline.text).toBe('108');
-    expect(found.lobeSeparation.text).toBe('108');
+    expect(found.overlap.value.text).toBe(String(card.expected['overlap']));
+    expect(found.intakeDuration.value.text).toBe(String(card.expected['duration']));
+    expect(found.intakeCentreline.value.text).toBe(String(card.expected['centerline_ATDC']));
+    expect(found.exhaustDuration.value.text).toBe('240');
+    expect(found.exhaustCentreline.value.text).toBe('108');
+    expect(found.lobeSeparation.value.text).toBe('108');
   });
 
   const other = checkValue('cam-40-60');
@@ -86,15 +86,30 @@ describe('valve events', () => {
     );
   });
 
+  it('one degree at each event: √2 on a duration, half of that on a centreline (constructed)', () => {
+    const event = (text: string) => ({ value: deg(text), standardUncertainty: 1 });
+    const found = camTiming({
+      intakeOpens: event('6'),
+      intakeCloses: event('42'),
+      exhaustOpens: event('48'),
+      exhaustCloses: event('12'),
+    });
+    // (io + ic)/2 − io = (ic − io)/2, so the errors share no sign but half the size.
+    expect(found.intakeDuration.standardUncertainty).toBeCloseTo(Math.SQRT2, 12);
+    expect(found.intakeCentreline.standardUncertainty).toBeCloseTo(Math.SQRT1_2, 12);
+    expect(found.overlap.standardUncertainty).toBeCloseTo(Math.SQRT2, 12);
+    expect(found.lobeSeparation.standardUncertainty).toBeCloseTo(0.5, 12);
+  });
+
   it('an event on the far side of its dead centre is negative', () => {
     const found = camTiming({
-      intakeOpens: deg(-5),
-      intakeCloses: deg(41),
-      exhaustOpens: deg(46),
-      exhaustCloses: deg(-6),
+      intakeOpens: { value: deg(-5) },
+      intakeCloses: { value: deg(41) },
+      exhaustOpens: { value: deg(46) },
+      exhaustCloses: { value: deg(-6) },
     });
-    expect(found.overlap.text).toBe('-11');
-    expect(found.working.join(' ')).toContain('−5');
+    expect(found.overlap.value.text).toBe('-11');
+    expect(found.overlap.working.join(' ')).toContain('−5');
   });
 });
 

@@ -139,14 +139,12 @@ describe('what must not matter does not', () => {
   });
 
   it('which inspector stands in the rows of a kappa table', () => {
-    const table = fc
-      .integer({ min: 2, max: 4 })
-      .chain((n) =>
-        fc.array(fc.array(fc.nat(50), { minLength: n, maxLength: n }), {
-          minLength: n,
-          maxLength: n,
-        }),
-      );
+    const table = fc.integer({ min: 2, max: 4 }).chain((n) =>
+      fc.array(fc.array(fc.nat(50), { minLength: n, maxLength: n }), {
+        minLength: n,
+        maxLength: n,
+      }),
+    );
     fc.assert(
       fc.property(table, (counts) => {
         fc.pre(counts.flat().some((count) => count > 0));

@@ -1,35 +1,36 @@
-import type { Quantity } from '../../quantity/quantity';
 import { add, div, type Rational, rational, sub } from '../../quantity/rational';
-import { writtenOut } from '../derived';
+import { type Derived, derive, type Input } from '../derived';
 
 /** The four events as a cam card prints them; an event on the other side of its dead centre is negative. */
 export interface ValveEvents {
   /** Before top dead centre. */
-  readonly intakeOpens: Quantity<'angle'>;
+  readonly intakeOpens: Input<'angle'>;
   /** After bottom dead centre. */
-  readonly intakeCloses: Quantity<'angle'>;
+  readonly intakeCloses: Input<'angle'>;
   /** Before bottom dead centre. */
-  readonly exhaustOpens: Quantity<'angle'>;
+  readonly exhaustOpens: Input<'angle'>;
   /** After top dead centre. */
-  readonly exhaustCloses: Quantity<'angle'>;
+  readonly exhaustCloses: Input<'angle'>;
 }
 
 export interface CamTiming {
-  readonly intakeDuration: Quantity<'angle'>;
-  readonly exhaustDuration: Quantity<'angle'>;
+  readonly intakeDuration: Derived<'angle'>;
+  readonly exhaustDuration: Derived<'angle'>;
   /** After top dead centre. */
-  readonly intakeCentreline: Quantity<'angle'>;
+  readonly intakeCentreline: Derived<'angle'>;
   /** Before top dead centre. */
-  readonly exhaustCentreline: Quantity<'angle'>;
-  readonly overlap: Quantity<'angle'>;
+  readonly exhaustCentreline: Derived<'angle'>;
+  readonly overlap: Derived<'angle'>;
   /** Camshaft degrees between the two centrelines. */
-  readonly lobeSeparation: Quantity<'angle'>;
-  readonly working: readonly string[];
+  readonly lobeSeparation: Derived<'angle'>;
 }
+
+type Sizes = { readonly [Name in keyof ValveEvents]: Rational };
 
 const HALF_TURN = rational(180n);
 const TWO = rational(2n);
-const deg = (value: Rational): Quantity<'angle'> => writtenOut('angle', value, 'deg');
+
+export const EVENTS_DATUM = 'crankshaft degrees at the lift at which the four events were taken';
 
 /** Crankshaft degrees open, from an opening before one dead centre to a closing after the other. */
 export const durationOfEvents = (opens: Rational, closes: Rational): Rational =>
@@ -39,35 +40,50 @@ export const durationOfEvents = (opens: Rational, closes: Rational): Rational =>
 export const centrelineOfEvents = (duration: Rational, near: Rational): Rational =>
   sub(div(duration, TWO), near);
 
+const intake = (x: Sizes) => durationOfEvents(x.intakeOpens, x.intakeCloses);
+const exhaust = (x: Sizes) => durationOfEvents(x.exhaustOpens, x.exhaustCloses);
+const intakeCentre = (x: Sizes) => centrelineOfEvents(intake(x), x.intakeOpens);
+const exhaustCentre = (x: Sizes) => centrelineOfEvents(exhaust(x), x.exhaustCloses);
+
 /** Durations, centrelines and overlap at the lift at which the events were taken. */
 export function camTiming(events: ValveEvents): CamTiming {
-  const [io, ic, eo, ec] = [
-    events.intakeOpens.value,
-    events.intakeCloses.value,
-    events.exhaustOpens.value,
-    events.exhaustCloses.value,
-  ];
-  const intake = durationOfEvents(io, ic);
-  const exhaust = durationOfEvents(eo, ec);
-  const intakeCentre = centrelineOfEvents(intake, io);
-  const exhaustCentre = centrelineOfEvents(exhaust, ec);
-  const timing = {
-    intakeDuration: deg(intake),
-    exhaustDuration: deg(exhaust),
-    intakeCentreline: deg(intakeCentre),
-    exhaustCentreline: deg(exhaustCentre),
-    overlap: deg(add(io, ec)),
-    lobeSeparation: deg(div(add(intakeCentre, exhaustCentre), TWO)),
+  const text = (name: keyof ValveEvents) => events[name].value.text.replace('-', '−');
+  const angle = (evaluate: (x: Sizes) => Rational, told: string, after = ''): Derived<'angle'> => {
+    const result = derive({
+      dimension: 'angle',
+      unit: 'deg',
+      inputs: { ...events },
+      evaluate,
+      datum: EVENTS_DATUM,
+      working: [],
+    });
+    const value = result.value.text.replace('-', '−');
+    return { ...result, working: [`${told} = ${value} deg${after}`] };
   };
-  const text = (quantity: Quantity<'angle'>) => quantity.text.replace('-', '−');
+  const [io, ic, eo, ec] = [
+    text('intakeOpens'),
+    text('intakeCloses'),
+    text('exhaustOpens'),
+    text('exhaustCloses'),
+  ];
   return {
-    ...timing,
-    working: [
-      `Intake duration: ${text(events.intakeOpens)} + 180 + ${text(events.intakeCloses)} = ${text(timing.intakeDuration)} deg`,
-      `Exhaust duration: ${text(events.exhaustOpens)} + 180 + ${text(events.exhaustCloses)} = ${text(timing.exhaustDuration)} deg`,
-      `Intake centreline: ${text(timing.intakeDuration)} ÷ 2 − ${text(events.intakeOpens)} = ${text(timing.intakeCentreline)} deg after top dead centre`,
-      `Exhaust centreline: ${text(timing.exhaustDuration)} ÷ 2 − ${text(events.exhaustCloses)} = ${text(timing.exhaustCentreline)} deg before top dead centre`,
-      `Overlap: ${text(events.intakeOpens)} + ${text(events.exhaustCloses)} = ${text(timing.overlap)} deg`,
-    ],
+    intakeDuration: angle(intake, `Intake duration: ${io} + 180 + ${ic}`),
+    exhaustDuration: angle(exhaust, `Exhaust duration: ${eo} + 180 + ${ec}`),
+    intakeCentreline: angle(
+      intakeCentre,
+      `Intake centreline: half its duration − ${io}`,
+      ' after top dead centre',
+    ),
+    exhaustCentreline: angle(
+      exhaustCentre,
+      `Exhaust centreline: half its duration − ${ec}`,
+      ' before top dead centre',
+    ),
+    overlap: angle((x) => add(x.intakeOpens, x.exhaustCloses), `Overlap: ${io} + ${ec}`),
+    lobeSeparation: angle(
+      (x) => div(add(intakeCentre(x), exhaustCentre(x)), TWO),
+      'Lobe separation: half the sum of the centrelines',
+      ' of the cam',
+    ),
   };
 }

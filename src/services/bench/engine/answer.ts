@@ -22,3 +22,19 @@ export function answerOf({ value, standardUncertainty, working, datum }: Derived
     coverageFactor: expanded.coverageFactor,
   };
 }
+
+/** Several figures at once: their texts, their U where an uncertainty is known, and all the working. */
+export function answersOf<Name extends string>(figures: { readonly [N in Name]: Derived }) {
+  const entries = Object.entries<Derived>(figures);
+  const answers = entries.map(([name, derived]) => [name, answerOf(derived)] as const);
+  const expanded = answers.flatMap(([name, { expandedUncertainty: u }]) =>
+    u === undefined ? [] : [[name, u] as const],
+  );
+  return {
+    ...(Object.fromEntries(answers.map(([name, { value }]) => [name, value])) as {
+      readonly [N in Name]: string;
+    }),
+    ...(expanded.length > 0 && { expandedUncertainties: Object.fromEntries(expanded) }),
+    working: answers.flatMap(([, { working }]) => working),
+  };
+}

@@ -1,11 +1,11 @@
 import type { EngineInputs, EngineResponse } from '@/contracts/bench/engine';
 import { grossLift, netLift } from '@/domain/engine/cam/lift';
 import { durationAtLift, liftTableFault } from '@/domain/engine/cam/lift-table';
-import { camTiming } from '@/domain/engine/cam/valve-events';
+import { camTiming, EVENTS_DATUM, type ValveEvents } from '@/domain/engine/cam/valve-events';
 import { oneHeightOnly, springRate } from '@/domain/engine/spring';
 import { type Failure, invalid } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
-import { answerOf } from './answer';
+import { answerOf, answersOf } from './answer';
 import { InputTaker } from './input-taker';
 
 type Answer = Result<EngineResponse, Failure>;
@@ -37,7 +37,11 @@ export function workOutDuration(inputs: EngineInputs<'duration'>): Answer {
 
 export function workOutValveEvents(inputs: EngineInputs<'valve-events'>): Answer {
   const take = new InputTaker(inputs);
-  const event = (name: keyof typeof inputs) => take.input(name, 'angle', 'deg').value;
+  const standardUncertainty = take.uncertaintyOf('event', 'angle', 'deg');
+  const event = (name: keyof ValveEvents) => ({
+    value: take.input(name, 'angle', 'deg').value,
+    standardUncertainty,
+  });
   const events = {
     intakeOpens: event('intakeOpens'),
     intakeCloses: event('intakeCloses'),
@@ -45,18 +49,7 @@ export function workOutValveEvents(inputs: EngineInputs<'valve-events'>): Answer
     exhaustCloses: event('exhaustCloses'),
   };
   if (take.faults.length > 0) return fail(invalid(take.faults));
-  const timing = camTiming(events);
-  return ok({
-    intakeDuration: timing.intakeDuration.text,
-    exhaustDuration: timing.exhaustDuration.text,
-    intakeCentreline: timing.intakeCentreline.text,
-    exhaustCentreline: timing.exhaustCentreline.text,
-    overlap: timing.overlap.text,
-    lobeSeparation: timing.lobeSeparation.text,
-    unit: 'deg',
-    working: [...timing.working],
-    datum: 'crankshaft degrees at the lift at which the four events were taken',
-  });
+  return ok({ ...answersOf(camTiming(events)), unit: 'deg', datum: EVENTS_DATUM });
 }
 
 export function workOutLift(inputs: EngineInputs<'lift'>): Answer {
