@@ -54,7 +54,7 @@ export const openWorld = async (fixed: Partial<Ports> = {}): Promise<World> => {
       images: missing('image work') as Ports['images'],
       mailer: missing('mail') as Ports['mailer'],
       identity: missing('the identity provider') as Ports['identity'],
-      ...({ notices: missing('the notice printer') } as object),
+      notices: missing('the notice printer') as Ports['notices'],
       ...fixed,
       ...overrides,
     }),
