@@ -42,6 +42,8 @@ const cases: fc.Arbitrary<Case> = fc
     decimals: fc.constantFrom<Case['decimals']>(null, 3, 4, 5),
     low: fc.integer({ min: -40, max: 40 }),
     width: fc.integer({ min: 0, max: 20 }),
+    // Now and then a limit written finer than values are rounded to.
+    skew: fc.constantFrom(0, 0, 0, 0.3, -0.5),
     ends: fc.constantFrom('min', 'max', 'both'),
     at: fc.constantFrom('low', 'high'),
     off: fc.constantFrom(0, 0, 1, -1, 0.5, -0.5),
@@ -54,10 +56,10 @@ const cases: fc.Arbitrary<Case> = fc
     rule: fc.constantFrom<Case['rule']>('simple', 'guarded-acceptance', 'guarded-rejection'),
     guardFactor: fc.constantFrom(null, 0, 0.5, 1, 2),
   })
-  .map(({ decimals, low, width, ends, at, off, nudge, ...rest }) => {
+  .map(({ decimals, low, width, skew, ends, at, off, nudge, ...rest }) => {
     const step = 10 ** (7 - (decimals ?? 4));
-    const min = low * step;
-    const max = (low + width) * step;
+    const min = Math.round((low + skew) * step);
+    const max = Math.round((low + width + skew) * step);
     return {
       ...rest,
       decimals,
