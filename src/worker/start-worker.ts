@@ -1,6 +1,8 @@
 import type PgBoss from 'pg-boss';
 import { makePreviews } from '@/services/file/make-previews';
+import { signCheckpoint } from '@/services/ledger/checkpoint/sign-checkpoint';
 import { sendMail } from '@/services/mail/send-mail';
+import { renderNotice } from '@/services/notice/render-notice';
 import type { JobPayloads, Ports } from '@/services/ports';
 
 type Handlers = {
@@ -10,6 +12,8 @@ type Handlers = {
 const handlers: Handlers = {
   'send-mail': sendMail,
   'make-previews': makePreviews,
+  'sign-checkpoint': signCheckpoint,
+  'render-notice': (ports, verdict) => renderNotice(ports, verdict),
 };
 
 /** Works the queues in this process: one job of a kind at a time; a failed one is tried again later. */

@@ -16,6 +16,10 @@ const plate = (pen: Pen, car: string, size: number, height: number): number => {
   return SHEET.left + width;
 };
 
+// Four cubic curves: the writer's arcs do not close.
+const RING =
+  'M14 2.5C20.35 2.5 25.5 7.65 25.5 14S20.35 25.5 14 25.5 2.5 20.35 2.5 14 7.65 2.5 14 2.5z';
+
 /** The mark of the decision in a box of `size`: a solid square with a cross, a ring with a tick. */
 export const drawMark = (pen: Pen, breach: boolean, x: number, y: number, size: number): void => {
   const scale = size / 28;
@@ -24,7 +28,7 @@ export const drawMark = (pen: Pen, breach: boolean, x: number, y: number, size: 
     pen.path('M8 8l12 12M20 8L8 20', x, y, { scale, weight: 3.4, white: true });
     return;
   }
-  pen.path('M14 2.5a11.5 11.5 0 1 1 0 23a11.5 11.5 0 1 1 0 -23z', x, y, { scale, weight: 3 });
+  pen.path(RING, x, y, { scale, weight: 3 });
   pen.path('M8.2 14.4l4.2 4.2 7.6-8.6', x, y, { scale, weight: 3 });
 };
 

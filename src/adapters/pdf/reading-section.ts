@@ -28,7 +28,7 @@ const large = (clause: NoticeClause, position: NoticePosition, width: Width): re
   const unit = value.unit === '1' ? '' : ` ${value.unit}`;
   const main = `${minus(value.text)}${unit}${uncertainty === undefined ? '' : ` ± ${uncertainty.text}${unit}`}`;
   const factor = uncertainty === undefined || k === undefined ? '' : `(k = ${k})`;
-  const what = `${(clause.measured ?? '').toLowerCase()}, ${position.position}`;
+  const what = `${(clause.measured ?? '').toLowerCase().replaceAll(' diameter', '')}, ${position.position}`;
   const left = SHEET.content + width(main, LARGE) + 10;
   const beside = left + width(factor, FACTOR) + 10 + width(what, BOLD) <= SHEET.right;
   const bound = (limit: 'min' | 'max') => {
@@ -70,43 +70,44 @@ const large = (clause: NoticeClause, position: NoticePosition, width: Width): re
   ];
 };
 
-/** One reading as it is, several as their range. */
-const readingWords = (position: NoticePosition, label: string): string => {
-  const texts = position.readings
+// A foot is held against its body at the largest of each: those two figures stand in the table.
+const PARTS = [
+  { label: 'Lifter foot diameter', head: 'Foot', at: 312 },
+  { label: 'Lifter body diameter', head: 'Body', at: 372 },
+] as const;
+
+const largest = ({ readings }: NoticePosition, label: string): string => {
+  const texts = readings
     .filter((reading) => reading.label === label)
     .map(({ value }) => value.text);
-  const sorted = [...new Set(texts)].sort((a, b) => Number(a) - Number(b));
-  const [low = '', high] = [sorted[0], sorted.at(-1)];
-  return low === high ? minus(low) : `${minus(low)}–${minus(high ?? '')}`;
+  return texts.sort((a, b) => Number(b) - Number(a))[0] ?? '';
 };
 
 const numbers = (clause: NoticeClause): readonly Block[] => {
   const [first] = clause.positions;
-  const unit = first?.value?.unit ?? '';
-  const labels = [
-    ...new Set(clause.positions.flatMap(({ readings }) => readings.map(({ label }) => label))),
-  ]
-    .filter((label) => label !== clause.measured)
-    .slice(0, 2);
+  const unit = first?.value?.unit === '1' ? '' : `, ${first?.value?.unit ?? ''}`;
+  const parts = PARTS.filter(({ label }) =>
+    clause.positions.every((position) => largest(position, label) !== ''),
+  );
+  const both = parts.length === PARTS.length;
   const k = first?.k === undefined ? '' : ` (k = ${first.k})`;
   const columns: Column[] = [
     { head: 'Position', at: SHEET.content },
-    ...labels.map((label, i): Column => {
-      const short = label.replace(/^Lifter |^Tappet | diameter$/g, '');
-      return { head: `${short}, ${unit}`, at: 356 - (labels.length - 1 - i) * 104, align: 'right' };
-    }),
-    {
-      head: labels.length > 0 ? `Difference, ${unit}` : `Measured, ${unit}`,
-      at: 446,
-      align: 'right',
-    },
-    { head: `± U, ${unit}${k}`, at: 556, align: 'right' },
-    { head: 'Against limit', at: 568 },
+    ...(both ? parts : []).map(
+      ({ head, at }): Column => ({
+        head: `${head}${unit}`,
+        at,
+        align: 'right',
+      }),
+    ),
+    { head: both ? `Difference${unit}` : `Measured${unit}`, at: 456, align: 'right' },
+    { head: `± U${unit}${k}`, at: 562, align: 'right' },
+    { head: 'Against limit', at: 574 },
     { head: 'Finding', at: SHEET.right, align: 'right' },
   ];
   const rows = clause.positions.map((position): readonly Cell[] => [
     { text: position.position },
-    ...labels.map((label) => ({ text: readingWords(position, label), style: NUM })),
+    ...(both ? parts : []).map(({ label }) => ({ text: largest(position, label), style: NUM })),
     { text: minus(position.value?.text ?? ''), style: NUM },
     { text: position.uncertainty?.text ?? '', style: NUM },
     { draw: (pen, x, top) => drawSmallStrip(pen, stripOf(clause, position), x, top, 100) },
@@ -128,7 +129,7 @@ export const readingSection = (clause: NoticeClause, width: Width): Section => {
   const measured = clause.positions.filter(({ value }) => value !== undefined);
   const [worst] = [...measured].sort((a, b) => beyond(clause, b) - beyond(clause, a));
   return {
-    label: [worst === undefined ? 'Finding' : 'Reading', `clause ${clause.number}`],
+    label: [worst === undefined ? 'Finding' : 'Reading'],
     blocks:
       worst === undefined
         ? answers(clause, width)

@@ -1,4 +1,6 @@
 import { convert } from '../quantity/convert';
+import { asciiIn } from '../quantity/format';
+import { decimalsOf } from '../quantity/number-text';
 import type { Clause } from '../rulebook/clause';
 import { decisionOf } from '../rulebook/evaluate/decision-of';
 import { getQuantityEntry, isQuantityName } from '../rulebook/quantity-catalogue';
@@ -62,9 +64,14 @@ const position = (
 const limitsOf = ({ requirement }: Clause, [first]: readonly ReportPosition[]) => {
   if (requirement?.kind !== 'limit') return undefined;
   const { min, max } = decisionOf(requirement).limits;
+  const written = [requirement.min, requirement.max, requirement.nominal?.size]
+    .filter((limit) => limit?.unit === requirement.unit)
+    .map((limit) => decimalsOf(limit?.text ?? ''));
+  // Where it is printed beside "0.0010 in" in the clause, the limit keeps its zero.
   const bound = (quantity: NonNullable<typeof min>) => {
     const { text, unit } = convert(quantity, requirement.unit);
-    return { text, unit };
+    const places = Math.max(decimalsOf(text), ...written);
+    return { text: asciiIn(quantity, unit, places), unit };
   };
   const kind = requirement.decisionRule.kind === 'guarded-rejection' ? 'rejection' : 'acceptance';
   const limits: NoticeLimits = {
