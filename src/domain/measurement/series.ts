@@ -1,4 +1,4 @@
-import { max, min, type Rational, rational, sub } from '../quantity/rational';
+import { max, min, type Rational, sub } from '../quantity/rational';
 
 /** At least one value; an empty series is a defect and throws. */
 export type Series = readonly Rational[];
@@ -14,13 +14,10 @@ export const overOne = (
   return { tops: series.map((value) => value.n * (d / value.d)), d };
 };
 
-/** Exact, and so the same in whatever order the values come. */
+/** Exact, and so the same in whatever order the values come; not always in lowest terms. */
 export const mean = (series: Series): Rational => {
   const { tops, d } = overOne(series);
-  return rational(
-    tops.reduce((sum, top) => sum + top, 0n),
-    d * BigInt(series.length),
-  );
+  return { n: tops.reduce((sum, top) => sum + top, 0n), d: d * BigInt(series.length) };
 };
 
 export const smallest = (series: Series): Rational => series.reduce(min);

@@ -1,4 +1,4 @@
-import type { Rational } from './rational';
+import { type Rational, rational } from './rational';
 import { halfEven } from './round';
 
 /** `n` tenths-to-the-`decimals` as ASCII text with exactly that many decimals: (-25n, 2) is "-0.25". */
@@ -19,8 +19,19 @@ const exactDecimals = (value: Rational): number | undefined => {
   return rest === 1n ? decimals : undefined;
 };
 
-/** The exact decimal in ASCII, or, where there is none, `decimals` places rounded half to even. */
+const TEN = 10n ** 10n;
+
+/**
+ * The exact decimal in ASCII, or, where there is none, `decimals` places rounded half to even. The
+ * number need not be in lowest terms.
+ */
 export const decimalText = (value: Rational, decimals: number): string => {
-  const places = exactDecimals(value) ?? decimals;
-  return scaledText(halfEven({ n: value.n * 10n ** BigInt(places), d: value.d }), places);
+  const scaled = value.n * TEN;
+  // Measured values end within ten places, which a division shows without looking for common divisors.
+  if (scaled % value.d === 0n) return trimmed(scaledText(scaled / value.d, 10));
+  const lowest = rational(value.n, value.d);
+  const places = exactDecimals(lowest) ?? decimals;
+  return scaledText(halfEven({ n: lowest.n * 10n ** BigInt(places), d: lowest.d }), places);
 };
+
+const trimmed = (text: string): string => text.replace(/\.?0+$/, '');

@@ -20,7 +20,8 @@ export const quantityOf = <D extends Dimension>(
 ): Quantity<D> => {
   const unit = getUnit(dimension, unitName);
   const shifted = unit.offset === undefined ? value : exact.sub(value, unit.offset);
-  const text = decimalText(exact.div(shifted, unit.factor), 10);
+  const { factor } = unit;
+  const text = decimalText({ n: shifted.n * factor.d, d: shifted.d * factor.n }, 10);
   return { dimension, text, unit: unit.symbol, value: exact.rational(value.n, value.d) };
 };
 

@@ -1,6 +1,6 @@
 /**
- * An exact number: numerator over a positive denominator. In lowest terms from every function but `add`
- * and `sub`, whose denominators cannot grow past the larger one's: compare with `equal`, not by parts.
+ * An exact number: numerator over a positive denominator. In lowest terms from every function here but
+ * `add` and `sub`, whose denominators cannot grow past the larger one's: compare with `equal`, not by parts.
  */
 export interface Rational {
   readonly n: bigint;

@@ -1,5 +1,5 @@
 import type { LargerReads } from '../measurement/gauge';
-import { add, div, mul, negate, type Rational, rational, sub, zero } from '../quantity/rational';
+import { add, div, negate, type Rational, rational, sub, zero } from '../quantity/rational';
 import type { BoreSheet, PlaceReading, Zeros } from './bore-sheet';
 
 /** A reading that was taken, freed from drift and in the part's own direction: larger is more. */
@@ -28,7 +28,9 @@ export const corrector = (
   const step = div(driftOf(zeros) ?? zero, rational(BigInt(n + 1)));
   const still = opening.n === 0n && step.n === 0n;
   return (reading, i) => {
-    const freed = still ? reading : sub(reading, add(opening, mul(step, rational(BigInt(i)))));
+    const freed = still
+      ? reading
+      : sub(reading, add(opening, { n: step.n * BigInt(i), d: step.d }));
     return largerReads === 'minus' ? negate(freed) : freed;
   };
 };
