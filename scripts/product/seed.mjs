@@ -68,7 +68,7 @@ export async function ensureSeed({ home, cluster, env, progress }) {
     const done = await run(
       process.execPath,
       ['--import', 'tsx', join(root, 'scripts/seed.ts'), join(home, 'people.json')],
-      { cwd: root, env: { ...env, MIGRATION_DATABASE_URL: cluster.ownerUrl } },
+      { cwd: root, env },
     );
     if (done.code !== 0) {
       throw new Problem(

@@ -8,7 +8,7 @@ import { ownCluster, startProduct } from '../product/product.mjs';
 import { newStack } from '../product/stack.mjs';
 import { ensureDependencies } from '../set-up/dependencies.mjs';
 import { root } from '../set-up/files.mjs';
-import { ensureChromium } from '../set-up/packages.mjs';
+import { ensureChromium, ensurePostgres, postgresPrograms } from '../set-up/packages.mjs';
 import { progressOn } from '../set-up/progress.mjs';
 import { newTemporaryFolder, usableTemporaryFolder } from '../set-up/temporary.mjs';
 import { runCheck } from './checks.mjs';
@@ -41,6 +41,9 @@ export async function test(args) {
       wants('browser') || wants('scripts')
         ? await progress.step('Chromium present', () => ensureChromium())
         : '';
+    if (postgresPrograms().length === 0) {
+      await progress.step('PostgreSQL installed', () => ensurePostgres());
+    }
     signal.throwIfAborted();
     const folder = await newTemporaryFolder('tagwire-test-');
     stack.push(async () => rmSync(folder, { recursive: true, force: true, maxRetries: 5 }));

@@ -98,20 +98,12 @@ const ended = (child: ChildProcess): Promise<void> =>
     : new Promise((resolve) => child.once('close', () => resolve()));
 
 /**
- * The built product's server over a test database. `npm test` builds it; by hand it takes the build
- * of the last `npm start`. A build holds one public address, so a second server waits for its turn.
+ * Waits until no other test serves the build, which holds one public address, and keeps it.
+ *
+ * @param url where it will be served
  */
-export async function startServer(options: {
-  readonly database: TestDatabase;
-  readonly services: TestServices;
-  readonly env?: Readonly<Record<string, string>>;
-}): Promise<TestServer> {
-  const entry = join(buildFolder, 'server/server.mjs');
-  if (buildIn(buildFolder) === undefined) {
-    throw new Error('This test needs the built product: run it with `npm test -- api <file>`.');
-  }
-  const url = options.services.publicUrl;
-  const turn = await eventually(
+export const takeTurn = (url: string): Promise<{ readonly release: () => void }> =>
+  eventually(
     'the turn to serve the one build',
     async () => {
       try {
@@ -123,6 +115,28 @@ export async function startServer(options: {
     },
     300_000,
   );
+
+/** The build under test. @throws Error when there is none */
+export function testBuild(): { readonly folder: string; readonly publicUrl: string } {
+  const build = buildIn(buildFolder);
+  if (build === undefined) {
+    throw new Error('This test needs the built product: run it with `npm test -- api <file>`.');
+  }
+  return { folder: buildFolder, publicUrl: build.publicUrl };
+}
+
+/**
+ * The built product's server over a test database. `npm test` builds it; by hand it takes the build
+ * of the last `npm start`. A build holds one public address, so a second server waits for its turn.
+ */
+export async function startServer(options: {
+  readonly database: TestDatabase;
+  readonly services: TestServices;
+  readonly env?: Readonly<Record<string, string>>;
+}): Promise<TestServer> {
+  const entry = join(testBuild().folder, 'server/server.mjs');
+  const url = options.services.publicUrl;
+  const turn = await takeTurn(url);
   const child = spawn(process.execPath, [entry], {
     cwd: root,
     stdio: ['ignore', 'pipe', 'pipe'],
