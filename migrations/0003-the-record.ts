@@ -1,5 +1,4 @@
 import { Migration } from '@mikro-orm/migrations';
-import { appendFunction } from './sql';
 
 /**
  * The acts (what makes a repeat harmless) and the ledger. The application reads both and writes
@@ -67,6 +66,9 @@ create table record.ledger_line (
   primary key (series_id, index)
 )`);
     this.addSql('create index ledger_line_by_act on record.ledger_line (series_id, act_id)');
+    this.addSql(`
+create index ledger_line_key_or_restore on record.ledger_line (series_id, kind, index)
+where kind in ('key-published', 'restore-recorded', 'content-erased')`);
     // Hashes of the complete subtrees: level 0 holds the leaves, a node at level k covers 2^k of
     // them. Kept on append so that a proof reads O(log n) rows.
     this.addSql(`
@@ -151,6 +153,34 @@ begin
   from jsonb_populate_recordset(null::record.ledger_content, p_contents) c;
   return v_leaf;
 end $fn$`);
-    this.addSql(appendFunction('checkpoint', ['series_id', 'size', 'root', 'note']));
+    // Stores a signed head only if it is true: the root is folded anew from the kept subtrees, those
+    // that the size's binary digits name, and the note must say it. A head stored before is kept.
+    this.addSql(`
+create function append.checkpoint(p_series uuid, p_size bigint, p_note text) returns boolean
+language plpgsql security definer set search_path = pg_catalog, pg_temp as $fn$
+declare v_head bigint; v_root bytea; v_hash bytea; v_level integer;
+begin
+  select size into v_head from record.ledger_head where series_id = p_series;
+  if v_head is null or p_size < 1 or p_size > v_head then
+    raise exception 'series % has no ledger of % lines', p_series, p_size using errcode = '22023';
+  end if;
+  for v_level in 0..62 loop
+    if (p_size >> v_level) & 1 = 1 then
+      select hash into strict v_hash from record.ledger_node
+      where series_id = p_series and level = v_level
+        and index = ((p_size >> v_level) - 1);
+      v_root := case when v_root is null then v_hash else sha256('\\x01'::bytea || v_hash || v_root) end;
+    end if;
+  end loop;
+  if split_part(split_part(p_note, E'\\n', 1), '/', -1) <> p_series::text
+     or split_part(p_note, E'\\n', 2) <> p_size::text
+     or split_part(p_note, E'\\n', 3) <> encode(v_root, 'base64') then
+    raise exception 'the note is not of series % at % lines', p_series, p_size using errcode = '22023';
+  end if;
+  insert into record.checkpoint (series_id, size, root, note)
+  values (p_series, p_size, v_root, p_note)
+  on conflict (series_id, size) do nothing;
+  return found;
+end $fn$`);
   }
 }

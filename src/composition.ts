@@ -3,11 +3,14 @@ import { openDatabase } from '@/adapters/database/orm';
 import { openIdentityProvider } from '@/adapters/identity/oidc';
 import { images } from '@/adapters/images/sharp';
 import { openJobs } from '@/adapters/jobs';
+import { openHeadMemory } from '@/adapters/ledger/head-memory';
+import { openLedgerKeys } from '@/adapters/ledger/keys';
 import { openMailer } from '@/adapters/mail/smtp';
 import { openObjects } from '@/adapters/objects/s3';
 import { noticePrinter } from '@/adapters/pdf/notice-printer';
 import { systemClock, systemRandom } from '@/adapters/system/system';
 import { type Config, readConfig } from '@/config';
+import { watchRecord } from '@/services/ledger/restore/watch-record';
 import type { Ports } from '@/services/ports';
 import { startWorker } from '@/worker/start-worker';
 
@@ -33,6 +36,9 @@ export const compose = async (config: Config): Promise<Composition> => {
     ...config.identity,
     redirectUri: `${config.publicUrl}/sign-in/return`,
   });
+  const keys = openLedgerKeys(config.ledger);
+  const heads = openHeadMemory(config.storageDir);
+  const recordState = watchRecord(() => ({ db: orm.em.fork(), heads }));
   const ports = (): Ports => ({
     db: orm.em.fork(),
     clock: systemClock,
@@ -43,6 +49,9 @@ export const compose = async (config: Config): Promise<Composition> => {
     mailer,
     identity,
     notices: noticePrinter,
+    keys,
+    heads,
+    recordState,
     site: { publicUrl: config.publicUrl, mailFrom: config.mail.from },
   });
   return {

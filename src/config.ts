@@ -19,7 +19,12 @@ const schema = z.object({
   OIDC_ISSUER: url,
   OIDC_CLIENT_ID: z.string().min(1),
   OIDC_CLIENT_SECRET: z.string().min(1),
+  LEDGER_NAME: z
+    .string()
+    .regex(/^[^\s+]+$/)
+    .default('tagwire'),
   LEDGER_KEY_FILE: z.string().min(1),
+  LEDGER_PREVIOUS_KEY_FILE: z.string().min(1).optional(),
   STORAGE_DIR: z.string().min(1),
   TRUSTED_PROXY: z.enum(['yes', 'no']).default('no'),
   WORKER: z.enum(['in-process', 'off']).default('in-process'),
@@ -57,7 +62,11 @@ export const readConfig = (environment: NodeJS.ProcessEnv = process.env) => {
       clientId: e.OIDC_CLIENT_ID,
       clientSecret: e.OIDC_CLIENT_SECRET,
     },
-    ledgerKeyFile: e.LEDGER_KEY_FILE,
+    ledger: {
+      name: e.LEDGER_NAME,
+      current: e.LEDGER_KEY_FILE,
+      previous: e.LEDGER_PREVIOUS_KEY_FILE,
+    },
     storageDir: e.STORAGE_DIR,
     trustedProxy: e.TRUSTED_PROXY === 'yes',
     worker: e.WORKER,

@@ -60,6 +60,8 @@ export async function ensureSeed({ home, cluster, env, progress }) {
         await createDatabase(client, databaseName);
       });
       rmSync(join(home, 'people.json'), { force: true });
+      // Heads signed for the dropped half would close the record of the next attempt.
+      rmSync(join(home, 'ledger-heads'), { recursive: true, force: true });
       await runMigrations(cluster.ownerUrl, env);
     }
     await asSuperuser(cluster, (client) =>

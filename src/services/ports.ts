@@ -1,4 +1,6 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
+import type { Failure } from '@/domain/failure';
+import type { NoteSigner } from '@/domain/ledger/note/signed-note';
 import type { NoticeDocument } from '@/domain/verdict/notice';
 
 /** What the use cases need of the world. Each one names its own share: `Pick<Ports, 'db' | 'clock'>`. */
@@ -13,6 +15,9 @@ export interface Ports {
   readonly mailer: Mailer;
   readonly identity: IdentityProvider;
   readonly notices: NoticePrinter;
+  readonly keys: LedgerKeys;
+  readonly heads: HeadMemory;
+  readonly recordState: RecordState;
   readonly site: Site;
 }
 
@@ -142,4 +147,29 @@ export interface NoticeToPrint {
 export interface NoticePrinter {
   /** The same notice gives the same bytes, every time. */
   print(input: NoticeToPrint): Promise<Uint8Array>;
+}
+
+/** The keys that sign the ledgers' heads; they are never in the database. */
+export interface LedgerKeys {
+  signer(seriesId: string): NoteSigner;
+  /** The key that hands over to the current one, as long as the installation is given it. */
+  findPrevious(seriesId: string): NoteSigner | undefined;
+}
+
+/** The last head this installation signed for each series, remembered outside the database. */
+export interface HeadMemory {
+  find(seriesId: string): Promise<string | undefined>;
+  list(): Promise<readonly { readonly seriesId: string; readonly note: string }[]>;
+  /** Returns when the note would outlast a power cut. */
+  remember(seriesId: string, note: string): Promise<void>;
+  /** Keeps the note under another name, where it is no longer looked at. */
+  setAside(seriesId: string, word: string): Promise<void>;
+}
+
+/** Whether the record may be written: not while the database is behind a head that was signed. */
+export interface RecordState {
+  /** Why nothing may be written; nothing when all is well. */
+  findObstacle(): Promise<Failure | undefined>;
+  /** Has the next question looked up anew: something was seen that must not be. */
+  doubt(): void;
 }

@@ -1,6 +1,7 @@
 import type PgBoss from 'pg-boss';
 import { makePreviews } from '@/services/file/make-previews';
 import { signCheckpoint } from '@/services/ledger/checkpoint/sign-checkpoint';
+import { proveForNotice } from '@/services/ledger/proof/prove-for-notice';
 import { sendMail } from '@/services/mail/send-mail';
 import { renderNotice } from '@/services/notice/render-notice';
 import type { JobPayloads, Ports } from '@/services/ports';
@@ -13,7 +14,8 @@ const handlers: Handlers = {
   'send-mail': sendMail,
   'make-previews': makePreviews,
   'sign-checkpoint': signCheckpoint,
-  'render-notice': (ports, verdict) => renderNotice(ports, verdict),
+  'render-notice': (ports, verdict) =>
+    renderNotice(ports, verdict, (line) => proveForNotice(ports, verdict.seriesId, line)),
 };
 
 /** Works the queues in this process: one job of a kind at a time; a failed one is tried again later. */

@@ -15,6 +15,8 @@ export interface ActRequest {
   readonly seriesId: string | null;
   /** What was asked, as plain JSON; its hash tells a repeat from another act under the same id. */
   readonly input: unknown;
+  /** Only the record of a restore is written while the record is closed for writing. */
+  readonly whileReadOnly?: true;
 }
 
 /**
@@ -32,7 +34,9 @@ export interface Act {
   keepRules(seriesId: string, document: string): Promise<Uint8Array>;
 }
 
-export type ActDeps = Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>;
+export type ActDeps = Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'> &
+  // Every request's ports carry it; a use case need not name it.
+  Partial<Pick<Ports, 'recordState'>>;
 
 class Abandon extends Error {
   constructor(readonly failure: Failure) {
@@ -54,6 +58,8 @@ export const performAct = async <T>(
   work: (act: Act) => Promise<Result<T, Failure>>,
 ): Promise<Result<T, Failure>> => {
   const { id, kind, seriesId, input } = request;
+  const obstacle = request.whileReadOnly ? undefined : await deps.recordState?.findObstacle();
+  if (obstacle !== undefined) return fail(obstacle);
   const requestHash = sha256(utf8(canonicalJson({ kind, seriesId, input })));
   try {
     return await deps.db.fork().transactional(async (em) => {
