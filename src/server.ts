@@ -6,11 +6,7 @@ import { composition } from '@/composition';
 import { limitBody } from '@/http/limit-body';
 import { secureHeaders } from '@/http/secure-headers';
 
-type Handler = (
-  request: IncomingMessage,
-  response: ServerResponse,
-  next: (error?: unknown) => void,
-) => void;
+type Handler = (request: IncomingMessage, response: ServerResponse, next?: () => void) => void;
 
 const app = await composition();
 const { config } = app;
@@ -50,15 +46,7 @@ const server = createServer((request, response) => {
     return;
   }
   if (!limitBody(request, response)) return;
-  compress(request, response, () =>
-    assets(request, response, () =>
-      pages(request, response, (error) => {
-        if (error !== undefined) console.error(error);
-        if (!response.headersSent) response.writeHead(error === undefined ? 404 : 500);
-        response.end();
-      }),
-    ),
-  );
+  compress(request, response, () => assets(request, response, () => pages(request, response)));
 });
 
 server.requestTimeout = 30_000;
