@@ -19,12 +19,20 @@ const schemaOf = (schema: z.core.$ZodType, io: 'input' | 'output'): Schema => {
 };
 
 const operationOf = (operation: Operation): Schema => {
-  const parameters = [...operation.path.matchAll(/\{(\w+)\}/g)].map(([, name]) => ({
+  const inPath = [...operation.path.matchAll(/\{(\w+)\}/g)].map(([, name]) => ({
     name,
     in: 'path',
     required: true,
     schema: { type: 'string' },
   }));
+  const inQuery = (operation.query ?? []).map(({ name, words, required = false }) => ({
+    name,
+    in: 'query',
+    description: words,
+    required,
+    schema: { type: 'string' },
+  }));
+  const parameters = [...inPath, ...inQuery];
   const refusal = {
     description: 'Problem details (RFC 9457); `errors` name fields by JSON Pointer (RFC 6901).',
     content: { 'application/problem+json': { schema: { $ref: '#/components/schemas/Problem' } } },
@@ -46,6 +54,9 @@ const operationOf = (operation: Operation): Schema => {
         ...(operation.answer
           ? { content: { 'application/json': { schema: schemaOf(operation.answer, 'output') } } }
           : {}),
+        ...(operation.answerType === undefined
+          ? {}
+          : { content: { [operation.answerType]: { schema: { type: 'string' } } } }),
       },
       default: refusal,
     },

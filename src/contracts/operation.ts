@@ -8,5 +8,13 @@ export interface Operation {
   readonly summary: string;
   readonly access: 'public' | 'signed-in';
   readonly body?: z.core.$ZodType;
+  /** Query parameters, all of them text. */
+  readonly query?: readonly {
+    readonly name: string;
+    readonly words: string;
+    readonly required?: true;
+  }[];
+  /** Media type of an answer that is not JSON. */
+  readonly answerType?: string;
   readonly answer?: z.core.$ZodType;
 }
