@@ -86,9 +86,13 @@ export const ROUTES: Readonly<Record<string, RouteAccess>> = {
   '/paddock/paperwork/[id]/review': { access: 'own' },
   '/paddock/paperwork/[id]/versions/[number]': { access: 'own' },
   '/paddock/paperwork/new': { access: 'own' },
+  '/record-format.md': open,
+  '/series/[slug]/ledger': open,
+  '/series/[slug]/ledger/feed.xml': open,
   '/sign-in': open,
   '/sign-in/link/[token]': open,
   '/sign-in/provider': open,
   '/sign-in/return': open,
   '/sign-out': open,
+  '/verify': open,
 };

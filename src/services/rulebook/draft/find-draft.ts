@@ -28,7 +28,7 @@ export const findDraft = async (
   draftId: string,
 ): Promise<DraftFound | undefined> => {
   const seriesIds = seriesWhere(actor, 'rulebook.write');
-  if (seriesIds.length === 0) return undefined;
+  if (seriesIds.length === 0 || !/^[0-9a-f-]{36}$/.test(draftId)) return undefined;
   const em = deps.db.fork();
   const draft = await em.findOne(RulebookDraft, { seriesId: { $in: [...seriesIds] }, id: draftId });
   if (draft === null) return undefined;
