@@ -1,9 +1,11 @@
 import { sequence } from 'astro:middleware';
-import type { MiddlewareHandler } from 'astro';
+import type { APIContext, MiddlewareHandler } from 'astro';
 import { composition } from '@/composition';
+import type { Actor } from '@/domain/access/permission';
 import { failure } from '@/domain/failure';
 import { crossSite } from '@/http/origin';
 import { problem } from '@/http/problem';
+import { ROUTES } from '@/http/route-table';
 import { SESSION_COOKIE } from '@/http/session-cookie';
 import { findActor } from '@/services/session/find-actor';
 
@@ -30,7 +32,9 @@ const wire: MiddlewareHandler = async (context, next) => {
     ports,
     actor: token === undefined ? null : await findActor(ports, token),
   });
-  const response = await next();
+  const response = needsSignIn(context.routePattern, context.locals.actor)
+    ? signInFor(context)
+    : await next();
   secure(response.headers, app.config.objects.publicEndpoint);
   response.headers.set('x-request-id', context.locals.requestId);
   if (context.locals.actor !== null && !response.headers.has('cache-control')) {
@@ -38,6 +42,15 @@ const wire: MiddlewareHandler = async (context, next) => {
   }
   return response;
 };
+
+/** The route table is the first gate: what is not listed as public is for people who are signed in. */
+const needsSignIn = (route: string, actor: Actor | null): boolean =>
+  actor === null && ROUTES[route]?.access !== 'public';
+
+const signInFor = ({ url, request, redirect }: APIContext): Response =>
+  url.pathname.startsWith('/api/') || request.method !== 'GET'
+    ? problem(failure('sign-in-required', 'Sign in, then send it again.'))
+    : redirect(`/sign-in?return=${encodeURIComponent(url.pathname + url.search)}`, 303);
 
 /** What the page may reach besides itself: the object store, to which photographs go directly. */
 const secure = (headers: Headers, objectStore: string): void => {
