@@ -14,13 +14,11 @@ const SideWords = ({ part }: { readonly part: Part | undefined }) =>
   part === undefined ? (
     <em>Not there</em>
   ) : (
-    <>
-      {part.words.map((words) => (
-        <span className="side-words" key={words}>
-          {words}
-        </span>
-      ))}
-    </>
+    part.words.map((words) => (
+      <span className="side-words" key={words}>
+        {words}
+      </span>
+    ))
   );
 
 const OneChoice = ({
