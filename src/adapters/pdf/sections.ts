@@ -1,10 +1,10 @@
 import { dayAndClockWords, shortDay } from '@/domain/verdict/instant-words';
+import { moneyWords } from '@/domain/verdict/money';
 import type { NoticeDocument, NoticeGauge, NoticePerson } from '@/domain/verdict/notice';
 import {
   appealUntilWords,
   computedSentence,
   decisionWords,
-  moneyWords,
   penaltySentence,
   provisionalWords,
   ROLE_WORDS,

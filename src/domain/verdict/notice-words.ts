@@ -1,5 +1,6 @@
 import { formatDeadline, formatInZone } from '../deadline/format-in-zone';
 import { dayWords } from './instant-words';
+import { moneyWords } from './money';
 import type { NoticeClause, NoticeDocument, NoticeRole } from './notice';
 
 /** `4.3`, `4.1 and 4.3`, `3.1, 4.1 and 4.3` */
@@ -7,24 +8,6 @@ export const listWords = (items: readonly string[]): string =>
   items.length < 2
     ? items.join('')
     : `${items.slice(0, -1).join(', ')} and ${items[items.length - 1]}`;
-
-/** A sum in the currency's smallest unit as people read it: `250 USD`, `12.50 USD`. */
-export const moneyWords = ({
-  minor,
-  currency,
-}: {
-  readonly minor: string;
-  readonly currency: string;
-}): string => {
-  const { maximumFractionDigits: digits = 2 } = new Intl.NumberFormat('en', {
-    style: 'currency',
-    currency,
-  }).resolvedOptions();
-  const padded = minor.padStart(digits + 1, '0');
-  const cut = padded.length - digits;
-  const part = padded.slice(cut);
-  return `${padded.slice(0, cut)}${/^0*$/.test(part) ? '' : `.${part}`} ${currency}`;
-};
 
 export const DECISION_WORDS = { breach: 'Breach', 'no-breach': 'No breach' } as const;
 

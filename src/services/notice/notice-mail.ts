@@ -1,9 +1,9 @@
+import { moneyWords } from '@/domain/verdict/money';
 import type { NoticeDocument } from '@/domain/verdict/notice';
 import {
   appealUntilWords,
   DECISION_WORDS,
   decisionWords,
-  moneyWords,
   penaltySentence,
   provisionalWords,
 } from '@/domain/verdict/notice-words';
