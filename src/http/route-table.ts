@@ -35,6 +35,7 @@ export const ROUTES: Readonly<Record<string, RouteAccess>> = {
   '/api/gauges/[series]': { access: 'permission', permission: 'gauge.manage' },
   '/api/inspections/[id]/assignment': { access: 'permission', permission: 'inspection.assign' },
   '/api/inspections/[id]/captures': { access: 'permission', permission: 'inspection.record' },
+  '/api/inspections/[id]/case-file': { access: 'permission', permission: 'case-file.read' },
   '/api/inspections/[id]/correction': { access: 'permission', permission: 'inspection.record' },
   '/api/inspections/[id]/report': { access: 'permission', permission: 'inspection.record' },
   '/api/inspections/[id]/state': { access: 'permission', permission: 'inspection.read' },

@@ -50,19 +50,25 @@ export const readPublications = async (
   };
 };
 
+/** Of everything published, what is in force at an instant, with the document that is hashed. */
+export const standingRules = (
+  published: Omit<RulesQuestion, 'at'>,
+  at: Date,
+): StandingRules | undefined => {
+  const rules = findRulesInForce({ ...published, at: at.toISOString() });
+  if (rules === undefined) return undefined;
+  const document = canonicalJson(rulesDocument(rules));
+  return { rules, document, hash: sha256(utf8(document)) };
+};
+
 /** The rules of a class in force at an instant, with the document that is hashed; nothing before the first edition. */
 export const findRules = async (
   em: EntityManager,
   seriesId: string,
   classId: string,
   at: Date,
-): Promise<StandingRules | undefined> => {
-  const published = await readPublications(em, seriesId, classId);
-  const rules = findRulesInForce({ ...published, at: at.toISOString() });
-  if (rules === undefined) return undefined;
-  const document = canonicalJson(rulesDocument(rules));
-  return { rules, document, hash: sha256(utf8(document)) };
-};
+): Promise<StandingRules | undefined> =>
+  standingRules(await readPublications(em, seriesId, classId), at);
 
 /** The rules that a finding or verdict points to, back from where they are kept by their hash. */
 export const getRules = async (
