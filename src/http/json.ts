@@ -1,20 +1,7 @@
 import type * as z from 'zod/mini';
-import { type Failure, type Fault, failure, invalid } from '@/domain/failure';
-import { fail, ok, type Result } from '@/domain/result';
-
-/** JSON Pointer of a path. */
-export const pointer = (path: readonly PropertyKey[]): string =>
-  path.map((step) => `/${String(step).replaceAll('~', '~0').replaceAll('/', '~1')}`).join('');
-
-export const faultsOf = (error: z.core.$ZodError): readonly Fault[] =>
-  error.issues.flatMap((issue): Fault[] =>
-    issue.code === 'unrecognized_keys'
-      ? issue.keys.map((key) => ({
-          pointer: pointer([...issue.path, key]),
-          detail: 'There is no such field.',
-        }))
-      : [{ pointer: pointer(issue.path), detail: issue.message }],
-  );
+import { readBody } from '@/contracts/read-body';
+import { type Failure, failure } from '@/domain/failure';
+import { fail, type Result } from '@/domain/result';
 
 /** Reads a JSON body against a contract. Malformed JSON is told apart from fields at fault. */
 export const readJson = async <S extends z.core.$ZodType>(
@@ -33,9 +20,7 @@ export const readJson = async <S extends z.core.$ZodType>(
       failure('invalid', 'The body is not JSON.', [{ pointer: '', detail: 'Not JSON.' }]),
     );
   }
-  const { safeParse } = await import('zod/mini');
-  const read = safeParse(schema, value);
-  return read.success ? ok(read.data) : fail(invalid(faultsOf(read.error)));
+  return readBody(schema, value);
 };
 
 /** The use case's answer as a response. */

@@ -3,7 +3,7 @@ import type { Failure } from '@/domain/failure';
 import type { PaperworkDocument } from '@/domain/paperwork/document';
 import type { Result } from '@/domain/result';
 import { isQuantityName, type QuantityName } from '@/domain/rulebook/quantity-catalogue';
-import { readBench } from '../bench/read-bench';
+import { readBody } from '../read-body';
 import { written } from '../rulebook/text';
 import { boreLayout } from './layout';
 
@@ -64,4 +64,4 @@ const shape = z.strictObject({
 
 /** Paperwork as handed in, back from its stored document (parsed JSON). */
 export const readPaperworkDocument = (parsed: unknown): Result<PaperworkDocument, Failure> =>
-  readBench(shape, parsed);
+  readBody(shape, parsed);

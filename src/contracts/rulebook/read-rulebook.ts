@@ -2,7 +2,7 @@ import type * as z from 'zod/mini';
 import { type Failure, invalid } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import { findAmbiguities } from '@/domain/rulebook/ambiguity/find-ambiguities';
-import { readBench } from '../bench/read-bench';
+import { readBody } from '../read-body';
 import { bulletinContent, rulebookContent, rulebookFile } from './edition';
 
 export type RulebookContent = z.output<typeof rulebookContent>;
@@ -11,19 +11,19 @@ export type BulletinContent = z.output<typeof bulletinContent>;
 
 /** A draft's content by its shape; it may still be ambiguous. */
 export const readRulebookContent = (body: unknown): Result<RulebookContent, Failure> =>
-  readBench(rulebookContent, body);
+  readBody(rulebookContent, body);
 
 /** A bulletin's draft by its shape; what keeps it from being published is asked with the rules in force. */
 export const readBulletinContent = (body: unknown): Result<BulletinContent, Failure> =>
-  readBench(bulletinContent, body);
+  readBody(bulletinContent, body);
 
 /** An imported file: every fault with its place, shape first, and nothing taken by half. */
 export const readRulebookFile = (body: unknown): Result<RulebookFile, Failure> =>
-  readBench(rulebookFile, body);
+  readBody(rulebookFile, body);
 
 /** Content that may be published: sound in shape and with nothing left open. */
 export const readPublishable = (body: unknown): Result<RulebookContent, Failure> => {
-  const read = readBench(rulebookContent, body);
+  const read = readBody(rulebookContent, body);
   if (!read.ok) return read;
   const faults = findAmbiguities(read.value.clauses, read.value.penalties);
   return faults.length === 0 ? ok(read.value) : fail(invalid(faults));

@@ -2,7 +2,7 @@ import * as z from 'zod/mini';
 import type { Failure } from '@/domain/failure';
 import { ok, type Result } from '@/domain/result';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
-import { readBench } from '../bench/read-bench';
+import { readBody } from '../read-body';
 import { clauses, penalties } from './clause';
 import { clarification, waiver } from './edition';
 import { clauseNumber, short, whole } from './text';
@@ -29,7 +29,7 @@ const shape = z.strictObject({
 
 /** The rules in force back from their stored document (parsed JSON), numbers as numbers again. */
 export const readRulesDocument = (parsed: unknown): Result<RulesInForce, Failure> => {
-  const read = readBench(shape, parsed);
+  const read = readBody(shape, parsed);
   if (!read.ok) return read;
   const { document: _document, version: _version, ...rules } = read.value;
   return ok(rules);

@@ -1,5 +1,5 @@
 import type * as z from 'zod/mini';
-import { readBench } from '@/contracts/bench/read-bench';
+import { readBody } from '@/contracts/read-body';
 import type { Failure } from '@/domain/failure';
 import type { Result } from '@/domain/result';
 
@@ -9,6 +9,6 @@ export function work<Request, Response>(
   body: unknown,
   workOut: (request: Request) => Result<Response, Failure>,
 ): Result<Response, Failure> {
-  const request = readBench(schema, body);
+  const request = readBody(schema, body);
   return request.ok ? workOut(request.value) : request;
 }

@@ -51,7 +51,7 @@ import { faultsByField, typedFrom } from '@/components/bench/typed';
 import { assessRequest } from '@/contracts/bench/assess';
 import { clearanceRequest } from '@/contracts/bench/clearance';
 import { engineRequest } from '@/contracts/bench/engine';
-import { readBench } from '@/contracts/bench/read-bench';
+import { readBody } from '@/contracts/read-body';
 import { temperatureRequest } from '@/contracts/bench/temperature';
 import { uncertaintyRequest } from '@/contracts/bench/uncertainty';
 import { invalid } from '@/domain/failure';
@@ -86,7 +86,7 @@ describe('each calculator', () => {
   it.each(forms)(
     '%s: what was left out is told at a field that exists',
     (_, groups, __, body, schema) => {
-      const result = readBench(schema as typeof assessRequest, body({}));
+      const result = readBody(schema as typeof assessRequest, body({}));
       const faults = faultsByField(groups, result.ok ? undefined : result.failure);
       const names = fieldsOf(groups).map(({ name }) => name);
       const places = Object.keys(faults);

@@ -1,6 +1,6 @@
 import type { APIRoute } from 'astro';
 import * as z from 'zod/mini';
-import { readBench } from '@/contracts/bench/read-bench';
+import { readBody } from '@/contracts/read-body';
 import { type Failure, failure } from '@/domain/failure';
 import type { Result } from '@/domain/result';
 import { write } from '@/http/api';
@@ -15,7 +15,7 @@ export const bench = <Request, Response>(
   workOut: (request: Request) => Result<Response, Failure>,
 ): APIRoute => {
   const answer = write(z.unknown(), async ({ body }) => {
-    const request = readBench(schema, body);
+    const request = readBody(schema, body);
     return request.ok ? workOut(request.value) : request;
   });
   return async (context) => {
