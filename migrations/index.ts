@@ -7,6 +7,7 @@ import { EnginePaperwork } from './0005-engine-paperwork';
 import { EventsAndInspections } from './0006-events-and-inspections';
 import { Verdicts } from './0007-verdicts';
 import { RulesQuestions } from './0008-rules-questions';
+import { Draws } from './0009-draws';
 
 /** In order of application. A new migration is added here by hand. */
 export const migrationsList: MigrationObject[] = [
@@ -18,4 +19,5 @@ export const migrationsList: MigrationObject[] = [
   { name: '0006-events-and-inspections', class: EventsAndInspections },
   { name: '0007-verdicts', class: Verdicts },
   { name: '0008-rules-questions', class: RulesQuestions },
+  { name: '0009-draws', class: Draws },
 ];

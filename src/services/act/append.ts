@@ -16,7 +16,10 @@ export type AppendTable =
   | 'remark'
   | 'report'
   | 'verdict'
-  | 'notice_pdf';
+  | 'notice_pdf'
+  | 'draw'
+  | 'draw_end'
+  | 'draw_secret';
 
 /** A document's exact text, or the SHA-256 of something kept elsewhere, a PDF. */
 export type LineContent = { readonly open: boolean } & (
