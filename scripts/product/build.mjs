@@ -6,6 +6,7 @@ import { Problem } from '../set-up/problem.mjs';
 import { run, tail } from '../set-up/run.mjs';
 
 const inputs = [
+  'docs/record-format.md',
   'src',
   'public',
   'astro.config.mjs',

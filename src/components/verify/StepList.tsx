@@ -1,0 +1,39 @@
+import type { Outcome, Step } from '@/domain/ledger/verify/step';
+import { Mark } from '../look/Mark';
+import type { Status } from '../look/status';
+
+const MARKS: Readonly<Record<Outcome, Status>> = {
+  passed: 'within',
+  failed: 'outside',
+  'not checked': 'not-measured',
+};
+
+const WORDS: Readonly<Record<Outcome, string>> = {
+  passed: 'Holds',
+  failed: 'Does not hold',
+  'not checked': 'Not checked',
+};
+
+/** What was looked at, one by one: what was found, what that proves, and what it does not. */
+export const StepList = ({ steps }: { readonly steps: readonly Step[] }) => (
+  <ol className="rows stack">
+    {steps.map((step) => (
+      <li key={`${step.id} ${step.found}`} data-step={step.id} data-outcome={step.outcome}>
+        <p className="status">
+          <Mark status={MARKS[step.outcome]} />
+          <span>
+            <strong>{WORDS[step.outcome]}:</strong> {step.checked}
+          </span>
+        </p>
+        <dl className="break-words">
+          <dt>Found</dt>
+          <dd className="break-all">{step.found}</dd>
+          <dt>Proves</dt>
+          <dd>{step.proves}</dd>
+          <dt>Does not prove</dt>
+          <dd>{step.doesNotProve}</dd>
+        </dl>
+      </li>
+    ))}
+  </ol>
+);

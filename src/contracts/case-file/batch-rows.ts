@@ -1,0 +1,88 @@
+import * as z from 'zod/mini';
+import type { ReadingRow, RemarkRow, ZeroRow } from '@/domain/inspection/capture/rows';
+import type { QuantityName } from '@/domain/rulebook/quantity-catalogue';
+import { captureRow, type SentRow } from '../inspection/rows';
+
+export interface RawRows {
+  readonly readings: readonly ReadingRow[];
+  readonly zeros: readonly ZeroRow[];
+  readonly remarks: readonly RemarkRow[];
+}
+
+const loose = z.looseObject({});
+const batchShape = z.looseObject({
+  v: z.literal('1'),
+  type: z.literal('tagwire/batch'),
+  inspection: z.string(),
+  by: z.string(),
+  clockOffsetMs: z.string().check(z.regex(/^-?\d{1,12}$/)),
+  /** Why none of the batch counts. */
+  received: z.optional(z.string()),
+  rows: z.array(loose),
+});
+
+type Batch = z.infer<typeof batchShape>;
+
+/** Whole numbers stand as text in a document; the rows' contract has them as numbers. */
+const withNumbers = (row: Record<string, unknown>): Record<string, unknown> => {
+  const number = (key: string, of: Record<string, unknown>) =>
+    typeof of[key] === 'string' ? { [key]: Number(of[key]) } : {};
+  const place = row['place'];
+  const placed =
+    typeof place === 'object' && place !== null
+      ? { place: { ...place, ...number('index', place as Record<string, unknown>) } }
+      : {};
+  return { ...row, ...number('repeat', row), ...number('set', row), ...placed };
+};
+
+/** Throws on a batch that is none: the chain's hash was compared before. */
+const readBatch = (
+  document: string,
+): { readonly batch: Batch; readonly rows: readonly SentRow[] } => {
+  const batch = batchShape.parse(JSON.parse(document));
+  return { batch, rows: batch.rows.map((row) => captureRow.parse(withNumbers(row))) };
+};
+
+const rowsOf = (document: string): RawRows => {
+  const { batch, rows } = readBatch(document);
+  const offset = Number(batch.clockOffsetMs);
+  const common = (row: SentRow) => ({
+    id: row.id,
+    takenBy: batch.by,
+    occurredAt: new Date(Date.parse(row.occurredAt) + offset).toISOString(),
+    standing: batch.received === undefined ? ('accepted' as const) : ('received' as const),
+  });
+  const readings: ReadingRow[] = [];
+  const zeros: ZeroRow[] = [];
+  const remarks: RemarkRow[] = [];
+  for (const row of rows) {
+    if (row.kind === 'reading') {
+      const { kind: _kind, quantity, ...rest } = row;
+      readings.push({ ...rest, ...common(row), quantity: quantity as QuantityName });
+    } else if (row.kind === 'zero') {
+      const { kind: _kind, end, ...rest } = row;
+      zeros.push({ ...rest, ...common(row), kind: end });
+    } else {
+      remarks.push({
+        ...common(row),
+        kind: row.remark,
+        ...('readingId' in row ? { readingId: row.readingId } : {}),
+        place: row.place,
+        subject: 'subject' in row ? row.subject : '',
+        answer: 'value' in row ? { value: row.value } : {},
+        reason: row.reason,
+      });
+    }
+  }
+  return { readings, zeros, remarks };
+};
+
+/** The rows of all batches in order, as the domain assesses them. Throws on what is no batch. */
+export const rowsOfBatches = (documents: readonly string[]): RawRows => {
+  const all = documents.map(rowsOf);
+  return {
+    readings: all.flatMap((rows) => rows.readings),
+    zeros: all.flatMap((rows) => rows.zeros),
+    remarks: all.flatMap((rows) => rows.remarks),
+  };
+};
