@@ -43,6 +43,11 @@ export const ROUTES: Readonly<Record<string, RouteAccess>> = {
   '/api/inspections/[id]/captures': { access: 'permission', permission: 'inspection.record' },
   '/api/inspections/[id]/case-file': { access: 'permission', permission: 'case-file.read' },
   '/api/inspections/[id]/correction': { access: 'permission', permission: 'inspection.record' },
+  '/api/inspections/[id]/photographs': { access: 'permission', permission: 'inspection.record' },
+  '/api/inspections/[id]/photographs/[file]': {
+    access: 'permission',
+    permission: 'inspection.record',
+  },
   '/api/inspections/[id]/report': { access: 'permission', permission: 'inspection.record' },
   '/api/inspections/[id]/state': { access: 'permission', permission: 'inspection.read' },
   '/api/ledger/[series]/checkpoint': open,

@@ -1,3 +1,4 @@
+import { expectUploadResponse, fileActRequest, keptFile } from '../file/file';
 import type { Operation } from '../operation';
 import {
   actAnswer,
@@ -8,6 +9,7 @@ import {
   stateRequest,
 } from './acts';
 import { capturesAnswer, capturesRequest } from './captures';
+import { expectPhotographRequest } from './photograph';
 
 const signedIn = { method: 'post', access: 'signed-in' } as const;
 
@@ -18,6 +20,20 @@ export const operations: readonly Operation[] = [
     summary: 'Record readings, zeros and remarks taken in the bay, exactly once.',
     body: capturesRequest,
     answer: capturesAnswer,
+  },
+  {
+    ...signedIn,
+    path: '/api/inspections/{id}/photographs',
+    summary: 'Announce a photograph of the bay; its bytes go straight to the object store.',
+    body: expectPhotographRequest,
+    answer: expectUploadResponse,
+  },
+  {
+    ...signedIn,
+    path: '/api/inspections/{id}/photographs/{file}',
+    summary: 'Have a photograph read back, sized and hashed, so that it counts.',
+    body: fileActRequest,
+    answer: keptFile,
   },
   {
     ...signedIn,

@@ -7,6 +7,7 @@ import { Entry } from '@/entities/event/entry';
 import { Event } from '@/entities/event/event';
 import { RaceClass } from '@/entities/series/race-class';
 import { performAct } from '../act/perform-act';
+import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 
 interface Declared {
@@ -64,7 +65,7 @@ export const enterCars = async (
   },
 ): Promise<Result<{ readonly count: number }, Failure>> => {
   const { act, seriesId, eventId, entries } = input;
-  if (!may(actor, 'event.manage', seriesId)) return fail(absent());
+  if (!may(actor, 'event.manage', seriesId) || !isId(eventId)) return fail(absent());
   return performAct(
     deps,
     actor,

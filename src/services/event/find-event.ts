@@ -5,6 +5,7 @@ import { fail, ok, type Result } from '@/domain/result';
 import { Event } from '@/entities/event/event';
 import { RaceClass } from '@/entities/series/race-class';
 import { Series } from '@/entities/series/series';
+import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 
 export interface EventNamed {
@@ -72,6 +73,7 @@ export const findEvent = async (
   actor: Actor,
   eventId: string,
 ): Promise<Result<EventSheet, Failure>> => {
+  if (!isId(eventId)) return fail(absent());
   const series = seriesWhere(actor, 'event.manage');
   const event = await deps.db.findOne(Event, { id: eventId, seriesId: { $in: [...series] } });
   if (event === null || !may(actor, 'event.manage', event.seriesId)) return fail(absent());

@@ -11,6 +11,7 @@ import { Entry } from '@/entities/event/entry';
 import { Event } from '@/entities/event/event';
 import { Inspection } from '@/entities/event/inspection';
 import { performAct } from '../act/perform-act';
+import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 import { findRules } from '../rulebook/find-rules';
 
@@ -65,7 +66,7 @@ export const pickCars = async (
   },
 ): Promise<Result<{ readonly inspections: readonly string[] }, Failure>> => {
   const { act, seriesId, eventId, picks } = input;
-  if (!may(actor, 'cars.pick', seriesId)) return fail(absent());
+  if (!may(actor, 'cars.pick', seriesId) || !isId(eventId)) return fail(absent());
   return performAct(
     deps,
     actor,

@@ -4,6 +4,7 @@ import { fail, ok, type Result } from '@/domain/result';
 import { Entry } from '@/entities/event/entry';
 import { Event } from '@/entities/event/event';
 import { performAct } from '../act/perform-act';
+import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 
 export interface WrittenPosition {
@@ -24,7 +25,7 @@ export const writePositions = async (
   },
 ): Promise<Result<{ readonly count: number }, Failure>> => {
   const { act, seriesId, eventId, positions } = input;
-  if (!may(actor, 'event.manage', seriesId)) return fail(absent());
+  if (!may(actor, 'event.manage', seriesId) || !isId(eventId)) return fail(absent());
   return performAct(
     deps,
     actor,

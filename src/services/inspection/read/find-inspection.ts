@@ -3,6 +3,7 @@ import { type Actor, type Permission, rolesIn, seriesWhere } from '@/domain/acce
 import { absent, type Failure } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import { Inspection } from '@/entities/event/inspection';
+import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { getInspectionFile, type InspectionFile } from './inspection-file';
 
@@ -14,7 +15,7 @@ export const findInspectionRow = (
   id: string,
 ): Promise<Inspection | null> => {
   const series = [...seriesWhere(actor, permission)];
-  return series.length === 0
+  return series.length === 0 || !isId(id)
     ? Promise.resolve(null)
     : em.findOne(Inspection, { id, seriesId: { $in: series } });
 };

@@ -1,0 +1,123 @@
+import { FindingRow, FindingTable } from '@/components/look/FindingRow';
+import { StatusWord } from '@/components/look/StatusWord';
+import { markOfState, type Status, wordOfState } from '@/components/look/status';
+import type { BoreResult } from '@/domain/inspection/assess-inspection';
+import type { Finding } from '@/domain/inspection/finding';
+import { formatWidth } from '@/domain/quantity/format';
+import type { Clause } from '@/domain/rulebook/clause';
+import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
+import { shownResult } from '../sheet/shown';
+
+interface ClauseFindingsProps {
+  readonly rules: RulesInForce;
+  readonly findings: readonly Finding[];
+  readonly bores: readonly BoreResult[];
+}
+
+const BREACHING: readonly string[] = ['outside', 'does-not-comply', 'too-close', 'no-statement'];
+
+const passWord = (pass: boolean | null, state: Finding['state']): string =>
+  pass === null ? wordOfState(state) : `${wordOfState(state)}: ${pass ? 'pass' : 'fail'}`;
+
+const Numbers = ({ clause, finding }: { readonly clause: Clause; readonly finding: Finding }) => {
+  const rows = finding.perPosition.flatMap((result) => {
+    const shown = shownResult(clause, result);
+    return shown === undefined ? [] : [{ result, shown }];
+  });
+  const [first] = rows;
+  if (first === undefined) return null;
+  return (
+    <FindingTable
+      unit={first.shown.unit}
+      k={first.shown.k}
+      against={finding.limit ?? ''}
+      subject="Where"
+    >
+      {rows.map(({ result, shown }) => (
+        <FindingRow
+          key={result.position}
+          subject={result.position}
+          value={shown.value}
+          uncertainty={shown.uncertainty}
+          strip={shown.strip}
+          status={markOfState(result.state)}
+          finding={passWord(result.pass, result.state)}
+        />
+      ))}
+    </FindingTable>
+  );
+};
+
+const Others = ({ finding }: { readonly finding: Finding }) => {
+  const told = finding.perPosition.filter(
+    (result) => result.value === undefined && result.state !== 'not-measured',
+  );
+  const unusual = told.filter((result) => BREACHING.includes(result.state));
+  const shown = unusual.length > 0 ? unusual : told.slice(0, 1);
+  return (
+    <ul>
+      {shown.map((result) => (
+        <li key={result.position}>{result.sentence}</li>
+      ))}
+    </ul>
+  );
+};
+
+/** Every clause with its statement, its numbers on their strips, the rule's sentence, and the budget. */
+export const ClauseFindings = ({ rules, findings, bores }: ClauseFindingsProps) => {
+  const budget = bores
+    .flatMap(({ sets }) => sets)
+    .find(({ measurement }) => measurement.budget.length > 0);
+  return (
+    <div className="grid gap-8 mt-5">
+      {findings.map((finding) => {
+        const clause = rules.clauses.find((one) => one.number === finding.clause);
+        if (clause === undefined) return null;
+        const status: Status = markOfState(finding.state);
+        const rule = finding.perPosition.find((result) => result.rule !== undefined)?.rule;
+        return (
+          <section key={finding.clause}>
+            <div className="section-head ruled">
+              <h3>
+                <span className="finding-clause">{finding.clause}</span> {finding.heading}
+                {finding.advisory && <span className="note"> advisory</span>}
+              </h3>
+              <StatusWord status={status} word={passWord(finding.pass, finding.state)} />
+            </div>
+            <p>{finding.sentence}</p>
+            {rule !== undefined && <p className="note">{rule}</p>}
+            {finding.cautions.map((caution) => (
+              <p key={caution} className="note">
+                {caution}
+              </p>
+            ))}
+            {finding.perPosition.some((result) => result.value !== undefined) ? (
+              <details open={BREACHING.includes(finding.state)}>
+                <summary>Numbers, each with its uncertainty</summary>
+                <Numbers clause={clause} finding={finding} />
+              </details>
+            ) : (
+              <Others finding={finding} />
+            )}
+          </section>
+        );
+      })}
+      {budget !== undefined && (
+        <details>
+          <summary>What the uncertainty of a clearance is made of, at {budget.set.key}</summary>
+          <ul>
+            {budget.measurement.budget.map((line) => (
+              <li key={line.name}>
+                {line.sentence}{' '}
+                <span className="note">
+                  {formatWidth('length', line.contribution, 'µin', 1)} µin,{' '}
+                  {Math.round(line.share * 100)} %
+                </span>
+              </li>
+            ))}
+          </ul>
+        </details>
+      )}
+    </div>
+  );
+};

@@ -1,0 +1,92 @@
+import type { GaugeStripProps } from '@/components/look/GaugeStrip';
+import { markOfState } from '@/components/look/status';
+import type { Finding } from '@/domain/inspection/finding';
+import { baseNumber, convert, widthIn } from '@/domain/quantity/convert';
+import type { Written } from '@/domain/quantity/dimension';
+import { asciiIn, formatWidth } from '@/domain/quantity/format';
+import { decimalsOf } from '@/domain/quantity/number-text';
+import { parseWritten } from '@/domain/quantity/parse';
+import { quantityOf } from '@/domain/quantity/quantity';
+import type { Clause } from '@/domain/rulebook/clause';
+import type { PositionResult } from '@/domain/rulebook/clause-result';
+import { decisionOf } from '@/domain/rulebook/evaluate/decision-of';
+import { getQuantityEntry } from '@/domain/rulebook/quantity-catalogue';
+
+/** What a strip and a result line show of one position's result, in the unit of the sheet. */
+export interface ShownResult {
+  readonly value: string;
+  readonly uncertainty: string;
+  readonly k: string;
+  readonly unit: string;
+  readonly strip: GaugeStripProps;
+}
+
+type Limit = Extract<NonNullable<Clause['requirement']>, { kind: 'limit' }>;
+
+/** Clearances and differences read in thousandths of an inch; sizes in their own unit. */
+export const unitShown = (requirement: Limit): { unit: string; shown: string } => {
+  const small = ['tappet-clearance', 'foot-less-body', 'bore-out-of-round', 'bore-taper'];
+  return requirement.unit === 'in' && small.includes(requirement.quantity)
+    ? { unit: 'thou', shown: '0.001 in' }
+    : { unit: requirement.unit, shown: requirement.unit };
+};
+
+/** The numbers of a result against its clause; nothing where the position has none. */
+export const shownResult = (clause: Clause, result: PositionResult): ShownResult | undefined => {
+  const { requirement } = clause;
+  if (requirement?.kind !== 'limit' || result.value === undefined) return undefined;
+  const { dimension } = getQuantityEntry(requirement.quantity);
+  const { unit, shown } = unitShown(requirement);
+  const steps = (base: number) => widthIn(dimension, base, unit);
+  const read = (written: Written) => {
+    const quantity = parseWritten(written, dimension);
+    if (!quantity.ok) throw new RangeError(quantity.failure.detail);
+    return quantity.value;
+  };
+  const number = (written: Written) => steps(baseNumber(read(written)));
+  const exact = read(result.exact ?? result.value);
+  const places = decimalsOf(convert(read(result.value), unit).text);
+  const value = asciiIn(exact, unit, places);
+  const { limits } = decisionOf(requirement);
+  const bound = (limit: typeof limits.max, word: string) =>
+    limit && {
+      value: steps(baseNumber(limit)),
+      label: `${asciiIn(limit, unit, decimalsOf(convert(quantityOf(dimension, limit.value, limit.unit), unit).text))} ${word}`,
+    };
+  const uncertainty = result.uncertainty ? number(result.uncertainty) : 0;
+  const guarded = result.guardBand;
+  return {
+    value,
+    uncertainty: result.uncertainty
+      ? formatWidth(dimension, baseNumber(read(result.uncertainty)), unit, Math.max(places, 2))
+      : '0',
+    k: result.coverageFactor ?? '2',
+    unit: shown,
+    strip: {
+      min: bound(limits.min, 'min'),
+      max: bound(limits.max, 'max'),
+      reading: { value: number({ text: exact.text, unit: exact.unit }), label: value },
+      uncertainty,
+      unit: shown,
+      status: markOfState(result.state),
+      ...(guarded === undefined
+        ? {}
+        : {
+            guard: {
+              kind:
+                requirement.decisionRule.kind === 'guarded-rejection' ? 'rejection' : 'acceptance',
+              width: number(guarded),
+            } as const,
+          }),
+    },
+  };
+};
+
+export const resultAt = (
+  findings: readonly Finding[],
+  clause: string | undefined,
+  position: string,
+): PositionResult | undefined =>
+  findings
+    .find((finding) => finding.clause === clause)
+    ?.perPosition.find((result) => result.position === position);

@@ -1,0 +1,146 @@
+import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import type { CapturesRequest } from '@/contracts/inspection/captures';
+import type { SentRow } from '@/contracts/inspection/rows';
+import { wallTimeAt } from '@/domain/deadline/zone';
+import {
+  changeActs,
+  forgetActs,
+  type KeptAct,
+  keepAct,
+  readActs,
+  readWaiting,
+} from './queue/device-store';
+import { postCaptures } from './queue/post-captures';
+import { runSender } from './queue/run-sender';
+import type { SendOutcome } from './queue/send-waiting';
+import { uuidV7 } from './queue/uuid-v7';
+import { joinRows, type SheetRows } from './sheet/recorded';
+import type { Sheet } from './sheet/sheet';
+
+export interface Capture {
+  readonly rows: SheetRows;
+  /** Whether what this device holds has been read: nothing is entered before. */
+  readonly ready: boolean;
+  readonly waiting: number;
+  readonly refused: readonly KeptAct[];
+  readonly outcome: SendOutcome | undefined;
+  readonly saved: { readonly state: 'device' | 'sent' | 'failed'; readonly at: string };
+  /** Resolves once the rows are written through to the device; rejects when they are not. */
+  readonly record: (rows: readonly SentRow[]) => Promise<void>;
+  readonly sendAgain: (seq: number) => Promise<void>;
+}
+
+/** Server's clock less this device's, from the answer that brought the page. */
+const measuredOffset = (servedAt: string): number => {
+  const [page] = performance.getEntriesByType('navigation') as PerformanceNavigationTiming[];
+  const arrived = performance.timeOrigin + (page?.responseStart ?? 0);
+  return Math.round(Date.parse(servedAt) - arrived);
+};
+
+const clock = (zone: string, at: number): string => {
+  const { hour, minute } = wallTimeAt(zone, at);
+  return `${String(hour).padStart(2, '0')}:${String(minute).padStart(2, '0')}`;
+};
+
+/** Rows of one inspection: what the server had, what this device holds, and the way between. */
+export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']): Capture => {
+  const { inspectionId, personId, zone } = sheet;
+  const [acts, setActs] = useState<readonly KeptAct[]>([]);
+  const [ready, setReady] = useState(false);
+  const [outcome, setOutcome] = useState<SendOutcome>();
+  const [changedAt, setChangedAt] = useState(() => Date.now());
+  const [failedAt, setFailedAt] = useState<number>();
+  const offset = useMemo(() => measuredOffset(sheet.servedAt), [sheet.servedAt]);
+  const sender = useRef<ReturnType<typeof runSender>>(undefined);
+  const latestTablet = useRef(tablet);
+  latestTablet.current = tablet;
+
+  const reread = useCallback(async () => setActs(await readActs(inspectionId)), [inspectionId]);
+
+  useEffect(() => {
+    const known = new Set(
+      [sheet.rows.readings, sheet.rows.zeros, sheet.rows.remarks].flat().map((row) => row.id),
+    );
+    const open = async () => {
+      const kept = await readActs(inspectionId);
+      const done = kept.filter(
+        (act) => act.state === 'sent' && act.rows.every((row) => known.has(row.id)),
+      );
+      await forgetActs(done.flatMap(({ seq }) => (seq === undefined ? [] : [seq])));
+      await reread();
+      setReady(true);
+    };
+    open().catch(() => setFailedAt(Date.now()));
+    sender.current = runSender(
+      {
+        readWaiting,
+        changeActs,
+        post: postCaptures,
+        newSending: (id) => ({
+          act: uuidV7(),
+          clockOffsetMs: offset,
+          ...(id === inspectionId ? { tablet: latestTablet.current() } : {}),
+        }),
+      },
+      (told) => {
+        setOutcome(told);
+        setChangedAt(Date.now());
+        void reread();
+      },
+    );
+    return () => sender.current?.stop();
+  }, [inspectionId, offset, reread, sheet.rows]);
+
+  const record = useCallback(
+    async (rows: readonly SentRow[]) => {
+      try {
+        await keepAct({ inspectionId, rows, keptAt: Date.now() });
+      } catch (error) {
+        setFailedAt(Date.now());
+        throw error;
+      }
+      setFailedAt(undefined);
+      setChangedAt(Date.now());
+      await reread();
+      sender.current?.now();
+    },
+    [inspectionId, reread],
+  );
+
+  const sendAgain = useCallback(
+    async (seq: number) => {
+      await changeActs([seq], (act) => ({
+        ...act,
+        state: 'waiting',
+        sending: undefined,
+        problem: undefined,
+      }));
+      await reread();
+      sender.current?.now();
+    },
+    [reread],
+  );
+
+  const rows = useMemo(
+    () =>
+      joinRows(
+        sheet.rows,
+        acts.filter((act) => act.state !== 'refused').flatMap((act) => act.rows),
+        personId,
+        offset,
+      ),
+    [sheet.rows, acts, personId, offset],
+  );
+  const waiting = acts.filter((act) => act.state === 'waiting').length;
+  const state = failedAt !== undefined ? 'failed' : waiting > 0 ? 'device' : 'sent';
+  return {
+    rows,
+    ready,
+    waiting,
+    refused: acts.filter((act) => act.state === 'refused'),
+    outcome,
+    saved: { state, at: clock(zone, failedAt ?? changedAt) },
+    record,
+    sendAgain,
+  };
+};

@@ -1,0 +1,44 @@
+import { useCallback, useEffect, useState } from 'react';
+import { boreName, positionsOf } from '@/domain/tappet/layout/bore-layout';
+import { keepPlace, readPlace } from './queue/device-store';
+import { type SetUp, usualSetUp } from './sheet/set-up';
+import type { Cursor, Sheet } from './sheet/sheet';
+
+interface Kept {
+  readonly cursor: Cursor;
+  readonly setUp: SetUp;
+}
+
+/** Where the inspector stands and how the sheet is set up; both outlive a reload of this device. */
+export const usePlace = (sheet: Sheet, firstPart: string) => {
+  const { inspectionId } = sheet;
+  const [first] = positionsOf(sheet.layout);
+  const [place, setPlace] = useState<Kept>(() => ({
+    cursor: { bore: first === undefined ? '' : boreName(first), part: firstPart, set: 1 },
+    setUp: usualSetUp(sheet.gauges, sheet.servedAt.slice(0, 10)),
+  }));
+  const [isRead, setIsRead] = useState(false);
+
+  useEffect(() => {
+    readPlace<Kept>(inspectionId)
+      .then((kept) => kept !== undefined && setPlace(kept))
+      .catch(() => undefined)
+      .finally(() => setIsRead(true));
+  }, [inspectionId]);
+
+  useEffect(() => {
+    if (isRead) keepPlace(inspectionId, place).catch(() => undefined);
+  }, [inspectionId, isRead, place]);
+
+  const go = useCallback(
+    (to: Partial<Cursor>) =>
+      setPlace(({ cursor, setUp }) => ({ cursor: { ...cursor, ...to }, setUp })),
+    [],
+  );
+  const setUpAs = useCallback(
+    (to: Partial<SetUp>) =>
+      setPlace(({ cursor, setUp }) => ({ cursor, setUp: { ...setUp, ...to } })),
+    [],
+  );
+  return { cursor: place.cursor, setUp: place.setUp, isRead, go, setUpAs };
+};
