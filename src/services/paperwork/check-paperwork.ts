@@ -26,7 +26,7 @@ import {
   readFiles,
   readPaperwork,
   type StoredFile,
-} from './read-row';
+} from './read/read-row';
 
 export interface CheckedPaperwork {
   readonly standing: StandingRules;

@@ -9,7 +9,7 @@ import { performAct } from '../act/perform-act';
 import { queueMail } from '../mail/queue-mail';
 import type { Ports } from '../ports';
 import { isId } from './own-paperwork';
-import { readPaperwork } from './read-row';
+import { readPaperwork } from './read/read-row';
 
 export interface PaperworkDecision {
   readonly act: string;

@@ -13,7 +13,7 @@ import { queueMail } from '../mail/queue-mail';
 import type { Ports } from '../ports';
 import { type CheckedPaperwork, checkRow, findOwnRow, noRules } from './check-paperwork';
 import { findOwnPaperwork, isId } from './own-paperwork';
-import type { PaperworkRow } from './read-row';
+import type { PaperworkRow } from './read/read-row';
 
 export interface Receipt {
   readonly number: number;

@@ -17,7 +17,7 @@ const filledIn = async (
 ): Promise<PaperworkDraft> => {
   const [last] = await em.execute<{ draft: PaperworkDraft }[]>(
     `select draft from public.paperwork
-     where engine_id = ? and competitor_id = ? order by updated_at desc limit 1`,
+     where engine_id = ? and competitor_id = ? order by updated_at desc, version desc limit 1`,
     [engine.id, competitorId],
   );
   if (last !== undefined) return { ...last.draft, note: '' };

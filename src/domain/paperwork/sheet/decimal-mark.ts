@@ -9,6 +9,8 @@ export const hasDecimalCommas = (rows: TextRows): boolean => {
   return cells.some((cell) => COMMA.test(cell)) && !cells.some((cell) => POINT.test(cell));
 };
 
-/** `21,387` is 21.387 on such a sheet; anything else stays as it was written. */
+const EITHER = /^[+\-−]?[1-9]\d{0,2},\d{3}(\s*\D*)?$/;
+
+/** `21,387` alone could be two numbers; on such a sheet it is 21.387. Anything else stays as it was written. */
 export const withPoint = (text: string): string =>
-  COMMA.test(text.trim()) ? text.replace(',', '.') : text;
+  EITHER.test(text.trim()) ? text.replace(',', '.') : text;

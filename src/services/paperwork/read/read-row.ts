@@ -25,7 +25,8 @@ export interface PaperworkRow {
   readonly draft: PaperworkDraft;
   readonly versions: number;
   readonly version: number;
-  readonly updatedAt: Date;
+  /** ISO 8601 instants in UTC, here and below. */
+  readonly updatedAt: string;
   readonly engineId: string;
   readonly reference: string;
   readonly layout: BoreLayout;
@@ -34,12 +35,16 @@ export interface PaperworkRow {
   readonly serial: string;
 }
 
+/** An instant as ISO 8601 in UTC: raw rows are read without a mapper. */
+export const isoOf = (column: string): string =>
+  `to_char(${column} at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"')`;
+
 const SELECT = `
 select p.series_id as "seriesId", s.name as "seriesName", s.slug as "seriesSlug", s.zone,
   n.name as "seasonName", n.slug as "seasonSlug", p.id, p.class_id as "classId",
   c.name as "className", c.slug as "classSlug", p.competitor_id as "competitorId",
   o.name as "competitorName", o.email as "competitorEmail", p.car_number as "carNumber", p.state,
-  p.draft, p.versions, p.version, p.updated_at as "updatedAt", e.id as "engineId", e.reference,
+  p.draft, p.versions, p.version, ${isoOf('p.updated_at')} as "updatedAt", e.id as "engineId", e.reference,
   e.layout, e.block_casting as "blockCasting", e.head_castings as "headCastings", e.serial
 from public.paperwork p
 join public.series s on s.id = p.series_id
@@ -59,7 +64,7 @@ export const readPaperwork = (
 export interface StoredFile extends PaperworkFile {
   readonly state: 'expected' | 'kept' | 'refused';
   readonly refusedBecause: string | null;
-  readonly keptAt: Date | null;
+  readonly keptAt: string | null;
   readonly hasPreviews: boolean;
 }
 
@@ -73,7 +78,7 @@ interface FileRow {
   readonly bytes: string | null;
   readonly sha256: Buffer | null;
   readonly refused_because: string | null;
-  readonly kept_at: Date | null;
+  readonly kept_at: string | null;
   readonly has_previews: boolean;
 }
 
@@ -84,7 +89,8 @@ export const readFiles = async (
   paperworkId: string,
 ): Promise<readonly StoredFile[]> => {
   const rows = await em.execute<FileRow[]>(
-    `select id, purpose, item, name, state, media_type, bytes, sha256, refused_because, kept_at,
+    `select id, purpose, item, name, state, media_type, bytes, sha256, refused_because,
+       ${isoOf('kept_at')} as kept_at,
        previews is not null as has_previews
      from public.file where series_id = ? and paperwork_id = ? and removed_at is null
      order by created_at, id`,
@@ -122,10 +128,10 @@ export interface VersionRow {
   readonly number: number;
   readonly hash: string;
   readonly rulesHash: string;
-  readonly receivedAt: Date;
+  readonly receivedAt: string;
   readonly decision: 'accepted' | 'returned' | null;
   readonly remarks: readonly ItemRemark[];
-  readonly decidedAt: Date | null;
+  readonly decidedAt: string | null;
   readonly decidedBy: string | null;
 }
 
@@ -139,7 +145,8 @@ export const readVersions = async (
     (Omit<VersionRow, 'remarks'> & { readonly remarks: readonly ItemRemark[] | null })[]
   >(
     `select v.number, encode(v.hash, 'hex') as hash, encode(v.rules_hash, 'hex') as "rulesHash",
-       v.received_at as "receivedAt", d.decision, d.remarks, d.received_at as "decidedAt",
+       ${isoOf('v.received_at')} as "receivedAt", d.decision, d.remarks,
+       ${isoOf('d.received_at')} as "decidedAt",
        o.name as "decidedBy"
      from record.paperwork_version v
      left join record.paperwork_decision d on d.series_id = v.series_id

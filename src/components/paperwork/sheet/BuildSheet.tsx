@@ -1,0 +1,143 @@
+import { useState } from 'react';
+import { boreMarks } from '@/domain/paperwork/bore-marks';
+import { cellsOf, type PaperworkDraft, withCells } from '@/domain/paperwork/draft';
+import { judgeCells } from '@/domain/paperwork/sheet/judge-cells';
+import { placeKey, type SheetCell } from '@/domain/paperwork/sheet/sheet-cell';
+import type { ItemRemark } from '@/domain/paperwork/state';
+import { emptyValues } from '@/domain/paperwork/still-missing';
+import type { ClauseResult } from '@/domain/rulebook/clause-result';
+import type { SheetForm } from '@/domain/rulebook/form/form';
+import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
+import { BoreMap } from '../../tappet/BoreMap';
+import { FilePick } from '../files/FilePick';
+import { FileRow, SendingRow } from '../files/FileRow';
+import type { Files } from '../files/use-files';
+import { RemarksOn } from '../RemarksOn';
+import { CellsToCorrect } from './CellsToCorrect';
+import { boreStates } from './marks';
+import { SheetImport } from './SheetImport';
+import { ValuesTable } from './ValuesTable';
+
+const SHEETS = {
+  'text/csv': ['.csv', '.txt'],
+  'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet': ['.xlsx'],
+  'application/pdf': ['.pdf'],
+} as const;
+
+interface BuildSheetProps {
+  readonly paperworkId: string;
+  readonly form: SheetForm;
+  readonly layout: BoreLayout;
+  readonly draft: PaperworkDraft;
+  readonly files: Files;
+  readonly results: readonly ClauseResult[];
+  readonly remarks: readonly ItemRemark[];
+  readonly onChange: (make: (before: PaperworkDraft) => PaperworkDraft) => void;
+}
+
+const merged = (
+  before: readonly SheetCell[],
+  added: readonly SheetCell[],
+): readonly SheetCell[] => [
+  ...new Map([...before, ...added].map((cell) => [placeKey(cell), cell])).values(),
+];
+
+/** One measurement sheet: a file to read from, the bores at a glance, what to correct, and every value. */
+export const BuildSheet = (props: BuildSheetProps) => {
+  const { paperworkId, form, layout, draft, files, results, remarks, onChange } = props;
+  const judged = judgeCells(cellsOf(draft, form.subject));
+  const wrong = judged.filter(({ state }) => state !== 'ok');
+  const missing = emptyValues(draft, form, layout);
+  const own = files.files.filter((file) => file.item === form.subject);
+  const sending = files.sending.filter((one) => one.item === form.subject);
+  const readable = own.filter((file) => file.state === 'kept' && file.type !== 'application/pdf');
+  const [shown, setShown] = useState<readonly string[]>([]);
+  const take = (cells: readonly SheetCell[]) =>
+    onChange((before) =>
+      withCells(before, form.subject, merged(cellsOf(before, form.subject), cells)),
+    );
+  const byBore = form.per === 'bore' || form.per === 'lifter';
+  const fresh = readable.filter(
+    (file) => !judged.some(({ cell }) => cell.source?.fileId === file.fileId),
+  );
+  return (
+    <section aria-labelledby={`sheet-${form.subject}`} id={`sheet-section-${form.subject}`}>
+      <div className="section-head ruled">
+        <h2 id={`sheet-${form.subject}`}>{form.title}</h2>
+        <span className="text-ink-2">
+          {form.columns.length === 0
+            ? `${own.length} files`
+            : `${wrong.length === 0 ? '' : `${wrong.length} to correct, `}${missing} missing`}
+        </span>
+      </div>
+      <RemarksOn remarks={remarks} item={form.subject} />
+      <FilePick
+        accept={SHEETS}
+        label="Add a sheet"
+        what={form.title}
+        onFiles={(list) => files.add(list, 'sheet', form.subject)}
+      >
+        <p className="min-w-0 flex-1 basis-56 py-2 text-ink-2">
+          CSV or XLSX as you have it.{' '}
+          {form.columns.length > 0 && (
+            <>
+              To start from:{' '}
+              <a href={`/api/paperwork/${paperworkId}/template/${form.subject}`}>
+                template in inches
+              </a>
+              ,{' '}
+              <a href={`/api/paperwork/${paperworkId}/template/${form.subject}?units=metric`}>
+                in millimetres
+              </a>
+              .
+            </>
+          )}
+        </p>
+      </FilePick>
+      {own.map((file) => (
+        <FileRow key={file.fileId} file={file} onRemove={() => void files.remove(file.fileId)} />
+      ))}
+      {sending.map((one) => (
+        <SendingRow key={one.fileId} one={one} files={files} />
+      ))}
+      {form.columns.length > 0 &&
+        readable
+          .filter((file) => fresh.includes(file) || shown.includes(file.fileId))
+          .map((file) => (
+            <SheetImport
+              key={file.fileId}
+              file={file}
+              form={form}
+              mapping={draft.mapping}
+              onMapping={(mapping) => onChange((before) => ({ ...before, mapping }))}
+              onTake={(cells) => {
+                setShown([...shown, file.fileId]);
+                take(cells);
+              }}
+            />
+          ))}
+      {form.columns.length > 0 && byBore && (
+        <BoreMap
+          layout={layout}
+          view="mini"
+          bores={boreStates(boreMarks(layout, form, judged, results))}
+          label={`${form.title}, front at the left`}
+        />
+      )}
+      <CellsToCorrect cells={wrong} onChange={(cell) => take([cell])} />
+      {form.columns.length > 0 && (
+        <details className="py-3">
+          <summary className="min-h-12 cursor-pointer font-semibold">
+            Type or see all values
+          </summary>
+          <ValuesTable
+            form={form}
+            layout={layout}
+            judged={judged}
+            onChange={(cell) => take([cell])}
+          />
+        </details>
+      )}
+    </section>
+  );
+};

@@ -1,0 +1,10 @@
+import { readSheetRequest } from '@/contracts/file/file';
+import { fail } from '@/domain/result';
+import { signInFirst, write } from '@/http/api';
+import { readSheetFile } from '@/services/paperwork/read-sheet-file';
+
+export const POST = write(readSheetRequest, async ({ ports, actor, body, params }) =>
+  actor === null
+    ? fail(signInFirst())
+    : readSheetFile(ports, actor, { ...body, fileId: params['file'] ?? '' }),
+);

@@ -1,0 +1,10 @@
+import { expectUploadRequest } from '@/contracts/file/file';
+import { fail } from '@/domain/result';
+import { signInFirst, write } from '@/http/api';
+import { expectUpload } from '@/services/file/expect-upload';
+
+export const POST = write(expectUploadRequest, async ({ ports, actor, body, params }) =>
+  actor === null
+    ? fail(signInFirst())
+    : expectUpload(ports, actor, { ...body, paperworkId: params['paperwork'] ?? '' }),
+);
