@@ -11,6 +11,8 @@ export interface StartingPoint {
   readonly key: string;
   readonly label: string;
   readonly about: string;
+  /** The class it comes from, where it comes from one. */
+  readonly classId?: string;
 }
 
 const SETS = [TAPPET_RULE_SET, ENGINE_RULE_SET, WEIGHTS_RULE_SET];
@@ -32,9 +34,16 @@ export const listStartingPoints = async (
 ): Promise<readonly StartingPoint[]> => {
   if (!may(actor, 'rulebook.write', seriesId)) return [];
   const rows = await deps.db.execute<
-    { id: string; number: number; title: string; class: string; season: string }[]
+    {
+      id: string;
+      number: number;
+      title: string;
+      class_id: string;
+      class: string;
+      season: string;
+    }[]
   >(
-    `select p.id, p.number, p.title, c.name as class, s.name as season
+    `select p.id, p.number, p.title, p.class_id, c.name as class, s.name as season
      from record.rule_publication p
      join public.class c on c.series_id = p.series_id and c.id = p.class_id
      join public.season s on s.series_id = c.series_id and s.id = c.season_id
@@ -56,11 +65,13 @@ export const listStartingPoints = async (
       key: `rules:${row.id}`,
       label: `${row.class}, season ${row.season}, as in force now`,
       about: 'The edition with its bulletins taken in.',
+      classId: row.id,
     })),
     ...rows.map((row) => ({
       key: `edition:${row.id}`,
       label: `${row.class}, season ${row.season}, edition ${row.number}`,
       about: row.title,
+      classId: row.class_id,
     })),
   ];
 };
