@@ -57,6 +57,8 @@ export const composeNotice = (parts: NoticeParts): NoticeDocument => {
   const { draft, rules, report, series, event, at } = parts;
   const breached = draft.decision === 'breach' ? draft.clauses : [];
   const named = report.findings.filter((finding) => breached.includes(finding.clause));
+  // A window runs from the next full minute: it shuts on a minute that people can read off a clock.
+  const from = new Date(Math.ceil(Date.parse(at) / 60_000) * 60_000).toISOString();
   const window = { kind: 'minutes', minutes: event.protestMinutes } as const;
   const appeal = { kind: 'end-of-day', days: series.appealDays } as const;
   const { protestMinutes: _, ...eventNamed } = event;
@@ -85,7 +87,7 @@ export const composeNotice = (parts: NoticeParts): NoticeDocument => {
     gauges: noticeGauges(report, named),
     people: noticePeople(report, named, { by: parts.decidedBy, at }, parts.nameOf),
     publishedAt: at,
-    provisionalUntil: deadlineFrom(at, window, event.zone).endsAt,
+    provisionalUntil: deadlineFrom(from, window, event.zone).endsAt,
     appeal: {
       until: deadlineFrom(at, appeal, event.zone).endsAt,
       address: series.appealsAddress,
