@@ -6,7 +6,7 @@ export interface DemoGauges {
   readonly micrometer: string;
   readonly boreGauge: string;
   readonly ring: string;
-  readonly caliper: string;
+  readonly insideMicrometer: string;
 }
 
 const RING = 8440;
@@ -26,7 +26,7 @@ interface Taking {
   readonly gauges: DemoGauges;
 }
 
-/** Lifter bodies (two heights, two axes) and feet, off a micrometer. */
+/** Lifter bodies at two heights and feet, each along and across, off a micrometer. */
 export const lifterRows = (bores: readonly TrueBore[], take: Taking): readonly SentRow[] =>
   bores.flatMap(({ position, body, foot }): SentRow[] => {
     const reading = (quantity: string, depth: string, axis: string, tenths: number): SentRow => ({
@@ -44,9 +44,12 @@ export const lifterRows = (bores: readonly TrueBore[], take: Taking): readonly S
       value: { text: micrometer(tenths), unit: 'in' },
     });
     return [
-      reading('lifter-body-diameter', 'above', 'along', body),
-      reading('lifter-body-diameter', 'below', 'across', body),
-      reading('foot-diameter', '', '', foot),
+      reading('lifter-body-diameter', 'upper', 'along', body),
+      reading('lifter-body-diameter', 'upper', 'across', body),
+      reading('lifter-body-diameter', 'lower', 'along', body),
+      reading('lifter-body-diameter', 'lower', 'across', body),
+      reading('foot-diameter', 'foot', 'along', foot),
+      reading('foot-diameter', 'foot', 'across', foot),
     ];
   });
 
@@ -148,12 +151,12 @@ export const cylinderRows = (
         occurredAt: take.next(),
         quantity,
         place: { bank, cylinder: String(cylinder), valve: '' },
-        depth: '',
-        axis: '',
+        depth: quantity === 'stroke' ? '' : 'top',
+        axis: quantity === 'stroke' ? '' : 'along',
         repeat: 1,
         set: 1,
         method: 'absolute',
-        gaugeId: take.gauges.caliper,
+        gaugeId: take.gauges.insideMicrometer,
         value: { text: quantity === 'stroke' ? size.stroke : size.bore, unit: 'in' },
       }),
     ),

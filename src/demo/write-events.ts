@@ -68,7 +68,7 @@ export const writeGauges = async (stage: Stage, seriesId: string): Promise<DemoG
     calibratedOn,
     dueOn,
   });
-  const caliper = await keep('IM-02', {
+  const insideMicrometer = await keep('IM-02', {
     kind: 'micrometer',
     name: 'Inside micrometer, 2–6 in',
     division: inch('0.0005'),
@@ -85,7 +85,7 @@ export const writeGauges = async (stage: Stage, seriesId: string): Promise<DemoG
     calibratedOn: day(stage.lastEvent, -500),
     dueOn: day(stage.lastEvent, -135),
   });
-  return { micrometer, boreGauge, ring, caliper };
+  return { micrometer, boreGauge, ring, insideMicrometer };
 };
 
 export interface PickedCar {
@@ -148,15 +148,15 @@ export const writeEvents = async (
   classes: DemoClasses,
 ): Promise<readonly PickedCar[]> => {
   stage.clock.set(new Date(stage.lastEvent.getTime() - 4 * HOUR));
-  await enter(stage, seriesId, classes, {
-    slug: 'round-2',
-    startsAt: stage.nextEvent,
-    positions: false,
-  });
   const { eventId, entries } = await enter(stage, seriesId, classes, {
     slug: 'round-1',
     startsAt: stage.lastEvent,
     positions: true,
+  });
+  await enter(stage, seriesId, classes, {
+    slug: 'round-2',
+    startsAt: stage.nextEvent,
+    positions: false,
   });
   stage.clock.set(new Date(stage.lastEvent.getTime() + 3 * HOUR));
   const picked = entries.filter(({ competitor }) =>

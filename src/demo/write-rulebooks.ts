@@ -75,7 +75,7 @@ export const writeRulebooks = async (stage: Stage, seriesId: string): Promise<De
         seriesId,
         id: draftId,
         classId,
-        title: `${name}, ${stage.seasonName}`,
+        title: `First edition of season ${stage.seasonName}`,
         content: JSON.parse(JSON.stringify(content)),
       }),
     );
