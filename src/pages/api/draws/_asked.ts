@@ -16,13 +16,3 @@ export const drawAsked = async (
   const found = series && (await findPublicDraw(ports, { seriesId: series.id, drawId }));
   return found === undefined ? fail(absent()) : ok(found);
 };
-
-/** Text byte for byte, open to pages of other sites: whoever checks need not be at ours. */
-export const exactly = (text: string): Response =>
-  new Response(text, {
-    headers: {
-      'content-type': 'application/json; charset=utf-8',
-      'cache-control': 'no-cache',
-      'access-control-allow-origin': '*',
-    },
-  });

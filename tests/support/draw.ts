@@ -1,0 +1,29 @@
+import { execFileSync } from 'node:child_process';
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+
+const page = join(import.meta.dirname, '../../docs/record-format.md');
+
+/**
+ * Runs the stand-alone script that docs/record-format.md prints, in a process of its own, on two
+ * published documents. Gives what it prints and how it ends.
+ */
+export const runPrintedScript = (
+  commitment: string,
+  made: string,
+): { readonly says: string; readonly code: number } => {
+  const [, script] = /^```js draw\.mjs\n([\s\S]*?)^```$/m.exec(readFileSync(page, 'utf8')) ?? [];
+  if (script === undefined) throw new Error('The page prints no script.');
+  const folder = mkdtempSync(join(tmpdir(), 'tagwire-draw-'));
+  const paths = ['draw.mjs', 'commitment.json', 'made.json'].map((name) => join(folder, name));
+  for (const [i, text] of [script, commitment, made].entries()) writeFileSync(paths[i] ?? '', text);
+  try {
+    return { says: execFileSync(process.execPath, paths, { encoding: 'utf8' }).trim(), code: 0 };
+  } catch (error) {
+    const { stdout, status } = error as { stdout: string; status: number };
+    return { says: stdout.trim(), code: status };
+  } finally {
+    rmSync(folder, { recursive: true, force: true });
+  }
+};
