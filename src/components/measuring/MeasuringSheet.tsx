@@ -272,6 +272,7 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
           <Keypad
             onKey={onKey}
             unit={scale?.shown ?? ''}
+            unitNote={`${scale?.decimals ?? 0} ${scale?.decimals === 1 ? 'decimal' : 'decimals'} implied`}
             {...(hint === undefined ? {} : { enterHint: hint })}
             listens={capture.ready && isRead}
             acts={

@@ -7,13 +7,14 @@ import type { SentRow } from '@/contracts/inspection/rows';
 import type { InspectionAssessment } from '@/domain/inspection/assess-inspection';
 import type { JudgedReading } from '@/domain/inspection/capture/readings-that-count';
 import type { RemarkRow } from '@/domain/inspection/capture/rows';
+import { secondSetsWanted } from '@/domain/inspection/second-set';
 import type { Clause } from '@/domain/rulebook/clause';
 import { limitWords } from '@/domain/rulebook/describe';
 import { type BorePosition, boreName } from '@/domain/tappet/layout/bore-layout';
 import { cellKey, cellsOf, cellWords, type Part } from '../sheet/parts';
 import type { Scale } from '../sheet/set-up';
 import type { Cursor, Sheet } from '../sheet/sheet';
-import { resultAt, shownResult } from '../sheet/shown';
+import { nearWords, resultAt, shownResult } from '../sheet/shown';
 import type { Step } from '../sheet/steps';
 import { isComplete, takenAt } from '../sheet/taken';
 import { aloud } from '../sheet/typing';
@@ -77,6 +78,7 @@ const Result = ({
   const shown = shownResult(clause, result);
   const status = result.state in tone ? tone[result.state as keyof typeof tone] : 'set-aside';
   const word = wordOfState(result.state);
+  const wanted = secondSetsWanted(assessment).includes(boreName(position));
   return (
     <>
       {shown !== undefined && (
@@ -89,7 +91,12 @@ const Result = ({
         />
       )}
       <Caution status={status} title={word.charAt(0).toUpperCase() + word.slice(1)}>
-        <p>{result.rule ?? result.sentence}</p>
+        <p>
+          {result.state === 'no-statement' || shown === undefined
+            ? result.sentence
+            : nearWords(shown)}
+          {wanted && ' An independent second set follows the closing zero, this set hidden.'}
+        </p>
       </Caution>
     </>
   );
@@ -173,10 +180,10 @@ export const WorkPanel = (props: WorkPanelProps) => {
         {...(against === undefined ? {} : { against })}
         value={displayNumber(shownValue, comparative)}
         unit={scale.shown}
-        {...(shownValue === '' ? {} : { aloud: aloud(shownValue, comparative) })}
+        {...(shownValue === '' || !comparative ? {} : { aloud: aloud(shownValue, true) })}
       />
       <CellsTable
-        progress={`${taken.size} of ${cellsOf(part).length} taken${cursor.set > 1 ? ', second set, first hidden' : ''}`}
+        progress={`${cellsOf(part).filter((one) => taken.has(cellKey(one))).length} of ${cellsOf(part).length} taken${cursor.set > 1 ? ', second set, first hidden' : ''}`}
         axes={part.axes.map((axis) => axis.label)}
         rows={cells}
         current={cell ?? (last === undefined ? undefined : cellKey(last.row))}

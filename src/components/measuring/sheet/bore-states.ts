@@ -20,8 +20,8 @@ interface Seen {
   readonly outOfReach: ReadonlySet<string>;
 }
 
-/** Sizes are told apart by their last places: 0.8423 stands on the map as .8423. */
-const onMap = (value: string): string => value.replace(/^0(?=\.\d{3})/, '');
+/** What fits beside a bore; longer ones are read where the bore is chosen. */
+const onMap = (value: string) => (value.length <= 4 ? { value } : {});
 
 /**
  * What each bore carries on the map for the part that is being read. A result shows only once the
@@ -69,7 +69,7 @@ export const boreStates = ({
       const shown = shownResult(clause, result);
       if (shown === undefined) return [key, { status: markOfState(result.state) }];
       unit = shown.unit;
-      return [key, { status: markOfState(result.state), value: onMap(shown.value) }];
+      return [key, { status: markOfState(result.state), ...onMap(shown.value) }];
     }),
   );
   return { bores, unit };

@@ -90,3 +90,17 @@ export const resultAt = (
   findings
     .find((finding) => finding.clause === clause)
     ?.perPosition.find((result) => result.position === position);
+
+/** "0.10 under the max; U is 0.15." Where a value stands against its nearer limit, in short. */
+export const nearWords = ({ strip, uncertainty, value }: ShownResult): string => {
+  const reading = strip.reading?.value ?? Number(value);
+  const places = Math.max(2, uncertainty.split('.')[1]?.length ?? 0);
+  const sides = [
+    strip.max && { off: strip.max.value - reading, inside: 'under the max', past: 'over the max' },
+    strip.min && { off: reading - strip.min.value, inside: 'over the min', past: 'under the min' },
+  ].filter((side) => side !== undefined);
+  const [near] = sides.sort((a, b) => a.off - b.off);
+  if (near === undefined) return '';
+  const off = Math.abs(near.off).toFixed(places);
+  return `${off} ${near.off < 0 ? near.past : near.inside}; U is ${uncertainty}.`;
+};
