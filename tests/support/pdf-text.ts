@@ -38,7 +38,9 @@ const objectsOf = (pdf: string): ReadonlyMap<string, Stream> => {
 const mapOf = (cmap: string): ReadonlyMap<string, string> => {
   const map = new Map<string, string>();
   const letters = (hex: string) =>
-    (hex.match(/.{4}/g) ?? []).map((unit) => String.fromCharCode(Number.parseInt(unit, 16))).join('');
+    (hex.match(/.{4}/g) ?? [])
+      .map((unit) => String.fromCharCode(Number.parseInt(unit, 16)))
+      .join('');
   for (const block of cmap.matchAll(/beginbfchar([\s\S]*?)endbfchar/g)) {
     for (const pair of (block[1] ?? '').matchAll(/<([0-9a-f]+)>\s*<([0-9a-f]+)>/gi)) {
       map.set((pair[1] ?? '').toLowerCase(), letters(pair[2] ?? ''));
@@ -56,7 +58,8 @@ export const readPdf = (file: Uint8Array): PdfContent => {
     for (const [, block = ''] of dictionary.matchAll(/\/Font\s*<<([\s\S]*?)>>/g)) {
       for (const [, name = '', id = ''] of block.matchAll(/\/(\S+) (\d+) 0 R/g)) {
         const unicode = /\/ToUnicode (\d+) 0 R/.exec(objects.get(id)?.dictionary ?? '')?.[1];
-        if (unicode !== undefined) fonts.set(name, mapOf(latin(objects.get(unicode)?.bytes ?? new Uint8Array())));
+        if (unicode !== undefined)
+          fonts.set(name, mapOf(latin(objects.get(unicode)?.bytes ?? new Uint8Array())));
       }
     }
   }
@@ -69,7 +72,9 @@ export const readPdf = (file: Uint8Array): PdfContent => {
       /\/(\S+) [\d.]+ Tf[\s\S]*?([-\d.]+) Tm\s*<([0-9A-Fa-f]*)> Tj/g,
     )) {
       const map = fonts.get(font);
-      const text = (glyphs.match(/.{4}/g) ?? []).map((glyph) => map?.get(glyph.toLowerCase()) ?? '?').join('');
+      const text = (glyphs.match(/.{4}/g) ?? [])
+        .map((glyph) => map?.get(glyph.toLowerCase()) ?? '?')
+        .join('');
       if (place === last) lines[lines.length - 1] += text;
       else lines.push(text);
       last = place;
@@ -80,7 +85,9 @@ export const readPdf = (file: Uint8Array): PdfContent => {
     const name = /\/Type \/Filespec[\s\S]*?\/UF <FEFF([0-9A-F]+)>/.exec(dictionary)?.[1];
     const id = /\/EF <<[\s\S]*?\/F (\d+) 0 R/.exec(dictionary)?.[1];
     if (name === undefined || id === undefined) continue;
-    const letters = (name.match(/.{4}/g) ?? []).map((unit) => String.fromCharCode(Number.parseInt(unit, 16)));
+    const letters = (name.match(/.{4}/g) ?? []).map((unit) =>
+      String.fromCharCode(Number.parseInt(unit, 16)),
+    );
     attachments[letters.join('')] = objects.get(id)?.bytes.toString('utf8') ?? '';
   }
   return {

@@ -1,7 +1,7 @@
 import { readFile } from 'node:fs/promises';
 import { createRequire } from 'node:module';
 import fontkit, { type Font } from '@pdf-lib/fontkit';
-import type { PDFDocument, PDFFont, PDFPage } from 'pdf-lib';
+import type { Color, PDFDocument, PDFFont, PDFPage } from 'pdf-lib';
 
 /** Faces of the printed sheet; sizes and places are in CSS pixels, as the sheet was drawn. */
 export type Face = 'text' | 'bold' | 'head' | 'num' | 'num-bold';
@@ -36,6 +36,19 @@ interface Cut {
   readonly embedded: PDFFont;
 }
 
+interface Glyph {
+  readonly font: PDFFont;
+  readonly shown: string;
+  /** At size 1. */
+  readonly width: number;
+}
+
+interface Run {
+  readonly font: PDFFont;
+  text: string;
+  width: number;
+}
+
 /** What stands for a character that no face has: B612 and Barlow share it. */
 const BOX = '¤';
 
@@ -59,11 +72,7 @@ export interface Placed {
   readonly y: number;
   readonly style: Style;
   readonly scale: number;
-  readonly ink: Parameters<PDFPage['drawText']>[1] extends infer O
-    ? O extends { color?: infer C }
-      ? C
-      : never
-    : never;
+  readonly ink: Color;
 }
 
 /** Faces embedded into one document, each subset to what is drawn. */
@@ -80,35 +89,47 @@ export const openTypefaces = async (document: PDFDocument): Promise<Typesetter> 
     opened.set(file, { outlines: fontkit.create(bytes), embedded });
   }
   const cutsOf = (face: Face) => FILES[face].flatMap((file) => opened.get(file) ?? []);
+  const find = (letter: string, face: Face): Cut | undefined =>
+    cutsOf(face).find(({ outlines }) => outlines.hasGlyphForCodePoint(letter.codePointAt(0) ?? 0));
+
+  const glyphs = new Map<string, Glyph>();
+  /** Letters are measured one by one and kept: the writer sets them without kerning. */
+  const glyphOf = (letter: string, face: Face): Glyph => {
+    const key = `${face}${letter}`;
+    const known = glyphs.get(key);
+    if (known !== undefined) return known;
+    const cut = find(letter, face);
+    const font = (cut ?? find(BOX, face))?.embedded;
+    if (font === undefined) throw new Error('The print’s faces lack their own sign.');
+    const shown = cut === undefined ? BOX : letter;
+    const glyph = { font, shown, width: font.widthOfTextAtSize(shown, 1000) / 1000 };
+    glyphs.set(key, glyph);
+    return glyph;
+  };
 
   /** The text cut where the font changes. */
-  const runs = (text: string, face: Face): readonly { font: PDFFont; text: string }[] => {
-    const parts: { font: PDFFont; text: string }[] = [];
+  const runs = (text: string, face: Face): readonly Run[] => {
+    const parts: Run[] = [];
     for (const letter of text.normalize('NFC')) {
-      const has = (char: string) =>
-        cutsOf(face).find(({ outlines }) =>
-          outlines.hasGlyphForCodePoint(char.codePointAt(0) ?? 0),
-        );
-      const cut = has(letter);
-      const font = cut ?? has(BOX);
-      if (font === undefined) throw new Error('The print’s faces lack their own sign.');
-      const shown = cut === undefined ? BOX : letter;
+      const { font, shown, width } = glyphOf(letter, face);
       const last = parts.at(-1);
-      if (last?.font === font.embedded) last.text += shown;
-      else parts.push({ font: font.embedded, text: shown });
+      if (last?.font === font) {
+        last.text += shown;
+        last.width += width;
+      } else parts.push({ font, text: shown, width });
     }
     return parts;
   };
 
   return {
     width: (text, { face, size }) =>
-      runs(text, face).reduce((sum, run) => sum + run.font.widthOfTextAtSize(run.text, size), 0),
+      runs(text, face).reduce((sum, run) => sum + run.width * size, 0),
     draw: (page, text, { x, y, style, scale, ink }) => {
       let at = x;
       for (const run of runs(text, style.face)) {
         const size = style.size * scale;
-        page.drawText(run.text, { x: at, y, size, font: run.font, ...(ink ? { color: ink } : {}) });
-        at += run.font.widthOfTextAtSize(run.text, size);
+        page.drawText(run.text, { x: at, y, size, font: run.font, color: ink });
+        at += run.width * size;
       }
     },
   };
