@@ -18,7 +18,9 @@ export const CheckList = ({ results }: { readonly results: readonly ClauseResult
         <div className="min-w-0 flex-1">
           <strong className="num">{result.clause}</strong> {result.heading}
           {result.advisory && ' (advisory)'}: {result.sentence}
-          {result.limit !== undefined && <span className="text-ink-2"> {result.limit}.</span>}
+          {result.limit !== undefined && result.perPosition.length > 1 && (
+            <span className="text-ink-2"> {result.limit}.</span>
+          )}
           {named(result).length > 0 && (
             <ul>
               {named(result).map((row) => (

@@ -2,7 +2,12 @@ import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { useDeferredValue, useEffect, useMemo, useState } from 'react';
 import { declare, type PaperworkFile } from '@/domain/paperwork/declare';
 import { declaredFacts } from '@/domain/paperwork/declared-facts';
-import { isComplete, missingWords, stillMissing } from '@/domain/paperwork/still-missing';
+import {
+  isAskedByName,
+  isComplete,
+  missingWords,
+  stillMissing,
+} from '@/domain/paperwork/still-missing';
 import { evaluateRules } from '@/domain/rulebook/evaluate/evaluate-rules';
 import { Caution } from '../look/Caution';
 import { CheckList } from './CheckList';
@@ -70,6 +75,7 @@ const Editor = (props: PaperworkProps) => {
           key={sheet.subject}
           paperworkId={paperworkId}
           form={sheet}
+          required={isAskedByName(rules, sheet)}
           layout={layout}
           draft={draft}
           files={files}

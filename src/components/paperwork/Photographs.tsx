@@ -45,7 +45,7 @@ export const Photographs = ({ shots, files, remarks }: PhotographsProps) => {
               what={shot.heading}
               onFiles={(list) => files.add(list, 'photograph', shot.subject)}
             >
-              <div className="min-w-0 flex-1 basis-48">
+              <div className="min-w-0 flex-1 basis-36">
                 <strong>{shot.heading}</strong>{' '}
                 <span className="num text-ink-2">{shot.clause}</span>
                 <br />

@@ -48,7 +48,7 @@ export const Questions = ({ questions, draft, remarks, onChange }: QuestionsProp
               ) : (
                 <div className="flex min-h-12 flex-wrap items-center gap-x-3">
                   <span className="num text-ink-2">{at + 1}</span>
-                  <span className="min-w-0 flex-1 basis-40">{question.question}</span>
+                  <span className="min-w-0 flex-1 basis-28">{question.question}</span>
                   <strong className="break-words">
                     {answerWords(question, answer?.typed ?? '', answer?.unit)}
                   </strong>

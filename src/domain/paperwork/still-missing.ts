@@ -22,7 +22,11 @@ const answered = (draft: PaperworkDraft, question: Question): boolean => {
   return answer !== undefined && answerFault(question, answer) === undefined;
 };
 
-const isAskedByName = (rules: Pick<RulesInForce, 'clauses'>, { subject }: SheetForm): boolean =>
+/** Whether a mandatory clause asks for this sheet; others are worth giving and hold nobody up. */
+export const isAskedByName = (
+  rules: Pick<RulesInForce, 'clauses'>,
+  { subject }: SheetForm,
+): boolean =>
   rules.clauses.some(
     ({ force, requirement }) =>
       force === 'mandatory' && requirement?.kind === 'sheet' && requirement.subject === subject,

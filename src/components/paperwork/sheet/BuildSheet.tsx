@@ -27,6 +27,8 @@ const SHEETS = {
 interface BuildSheetProps {
   readonly paperworkId: string;
   readonly form: SheetForm;
+  /** Whether a mandatory clause asks for it by name. */
+  readonly required: boolean;
   readonly layout: BoreLayout;
   readonly draft: PaperworkDraft;
   readonly files: Files;
@@ -44,7 +46,7 @@ const merged = (
 
 /** One measurement sheet: a file to read from, the bores at a glance, what to correct, and every value. */
 export const BuildSheet = (props: BuildSheetProps) => {
-  const { paperworkId, form, layout, draft, files, results, remarks, onChange } = props;
+  const { paperworkId, form, required, layout, draft, files, results, remarks, onChange } = props;
   const judged = judgeCells(cellsOf(draft, form.subject));
   const wrong = judged.filter(({ state }) => state !== 'ok');
   const missing = emptyValues(draft, form, layout);
@@ -67,7 +69,7 @@ export const BuildSheet = (props: BuildSheetProps) => {
         <span className="text-ink-2">
           {form.columns.length === 0
             ? `${own.length} files`
-            : `${wrong.length === 0 ? '' : `${wrong.length} to correct, `}${missing} missing`}
+            : `${wrong.length === 0 ? '' : `${wrong.length} to correct, `}${required ? `${missing} missing` : `${missing} not given, optional`}`}
         </span>
       </div>
       <RemarksOn remarks={remarks} item={form.subject} />
@@ -77,7 +79,7 @@ export const BuildSheet = (props: BuildSheetProps) => {
         what={form.title}
         onFiles={(list) => files.add(list, 'sheet', form.subject)}
       >
-        <p className="min-w-0 flex-1 basis-56 py-2 text-ink-2">
+        <p className="min-w-0 flex-1 basis-36 py-2 text-ink-2">
           CSV or XLSX as you have it.{' '}
           {form.columns.length > 0 && (
             <>

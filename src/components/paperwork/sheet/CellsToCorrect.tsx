@@ -34,7 +34,7 @@ const Editor = ({
         className="input input-num"
         inputMode="decimal"
         autoComplete="off"
-        // biome formats; the person asked for this field by pressing Correct.
+        // The person asked for this field by pressing Correct.
         ref={(field) => field?.focus()}
         aria-label={`${cellWords(judged.cell)}, in ${judged.cell.unit}`}
         value={typed}
@@ -68,7 +68,7 @@ export const CellsToCorrect = ({ cells, onChange }: CellsToCorrectProps) => {
         return (
           <li className="flex flex-wrap items-center gap-3 border-b border-hair py-2" key={key}>
             <Mark status="unreadable" />
-            <span className="min-w-0 flex-1 basis-44">
+            <span className="min-w-0 flex-1 basis-36">
               {judged.detail}
               {source !== undefined && (
                 <span className="text-ink-2">
