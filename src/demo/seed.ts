@@ -35,7 +35,7 @@ const ENDS: Readonly<Record<string, PaperworkEnd>> = {
 const sizeOf = ({ className }: DemoCompetitor) =>
   className === 'Street Eight'
     ? { bore: '4.0310', stroke: '3.4800', displacement: '355.3' }
-    : { bore: '3.7800', stroke: '3.1260', displacement: '140.3' };
+    : { bore: '3.7800', stroke: '3.1100', displacement: '139.6' };
 
 const layoutOf = ({ className }: DemoCompetitor) => {
   const name = className === 'Street Eight' ? 'V8, odd cylinders left' : 'Inline four';

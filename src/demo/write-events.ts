@@ -46,7 +46,7 @@ export const writeGauges = async (stage: Stage, seriesId: string): Promise<DemoG
     name: 'Micrometer, 0–1 in',
     division: inch('0.0001'),
     range: { from: inch('0'), to: inch('1') },
-    certificate: certificate('C-7719', '0.00008'),
+    certificate: certificate('C-7719', '0.00005'),
     calibratedOn,
     dueOn,
   });
@@ -56,7 +56,7 @@ export const writeGauges = async (stage: Stage, seriesId: string): Promise<DemoG
     division: inch('0.0001'),
     range: { from: inch('0.8'), to: inch('1') },
     largerReads: 'plus',
-    certificate: certificate('C-7741', '0.00010'),
+    certificate: certificate('C-7741', '0.00005'),
     calibratedOn,
     dueOn,
   });
@@ -64,7 +64,7 @@ export const writeGauges = async (stage: Stage, seriesId: string): Promise<DemoG
     kind: 'setting-ring',
     name: 'Setting ring 0.8440 in',
     size: inch('0.8440'),
-    certificate: certificate('C-7702', '0.00004'),
+    certificate: certificate('C-7702', '0.00002'),
     calibratedOn,
     dueOn,
   });
