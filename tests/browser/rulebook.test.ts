@@ -1,0 +1,281 @@
+import type { Page } from 'playwright-core';
+import { expect, test } from 'vitest';
+import { journey, type Visitor } from '../support/browser';
+import { eventually } from '../support/wait';
+
+const OFFICIAL = 'Ilse Törnkvist';
+const SECOND = 'Jory Vantreese';
+
+/** Waits until the server has the draft as it stands on the screen. */
+const sent = (page: Page) => page.locator('.saved-line', { hasText: /^Sent/ }).waitFor();
+
+/** Waits until the editor answers to the hand. */
+const ready = (page: Page) =>
+  page.locator('astro-island:not([ssr])').first().waitFor({ state: 'attached' });
+
+/** Adds a class to the demo series and opens its rulebook. */
+const openNewClass = async ({ page, open }: Visitor, name: string): Promise<string> => {
+  await open('/office');
+  await page.getByRole('link', { name: 'Seasons and classes' }).first().click();
+  await page
+    .getByLabel(/^New class in season/)
+    .first()
+    .fill(name);
+  await page.getByRole('button', { name: 'Add the class' }).first().click();
+  await page.getByRole('link', { name, exact: true }).click();
+  await page.waitForURL(/\/office\/rulebooks\/[0-9a-f-]+$/);
+  return new URL(page.url()).pathname;
+};
+
+const startFrom = async ({ page, open }: Visitor, office: string, choice: string) => {
+  await open(`${office}/start`);
+  await page.getByLabel(choice).check();
+  await page.getByRole('button', { name: 'Start writing' }).click();
+  await page.waitForURL(/\/draft\//);
+  await ready(page);
+};
+
+interface Written {
+  readonly heading: string;
+  readonly words: string;
+  readonly kind?: string;
+  readonly fill?: (page: Page) => Promise<void>;
+}
+
+/** Writes a clause at the end of the rulebook, or one below the clause of this number. */
+const addClause = async (page: Page, under: string | undefined, clause: Written) => {
+  if (under === undefined)
+    await page.getByRole('button', { name: 'Add a clause', exact: true }).click();
+  else {
+    await page
+      .locator('.clause-row')
+      .filter({ has: page.getByText(under, { exact: true }) })
+      .click();
+    await page.getByRole('button', { name: `Add a clause below ${under}` }).click();
+  }
+  await page.getByLabel('Heading', { exact: true }).fill(clause.heading);
+  await page.getByLabel('Words', { exact: true }).fill(clause.words);
+  if (clause.kind !== undefined) {
+    await page.getByLabel('Checked by').selectOption({ label: clause.kind });
+    await page.getByLabel('Row of the penalty schedule').selectOption('A');
+  }
+  await clause.fill?.(page);
+  await page.getByRole('button', { name: /^Close clause/ }).click();
+};
+
+const LIMIT = 'A limit on a measured or derived quantity';
+
+const CLAUSES: readonly (Written & { readonly under?: string })[] = [
+  { heading: 'Engine', words: 'What holds for the engine.' },
+  {
+    under: '1',
+    heading: 'Displacement',
+    words: 'Displacement is at most 362.0 cubic inches.',
+    kind: LIMIT,
+    fill: async (page) => {
+      await page.getByLabel('Quantity').selectOption({ label: 'Displacement' });
+      await page.getByRole('textbox', { name: 'At most', exact: true }).fill('362.0');
+    },
+  },
+  { heading: 'Tappets', words: 'What holds for the tappets.' },
+  {
+    under: '2',
+    heading: 'Type',
+    words: 'Tappets are flat.',
+    kind: 'A listed choice',
+    fill: async (page) => {
+      await page.getByLabel(/^Question/).fill('Which type are the tappets?');
+      await page.getByLabel('Key', { exact: true }).first().fill('tappet-type');
+      await page.getByRole('button', { name: 'Add an option' }).click();
+      await page.getByLabel('Option 1', { exact: true }).fill('Flat');
+      await page.getByRole('button', { name: 'Add an option' }).click();
+      await page.getByLabel('Option 2', { exact: true }).fill('Roller');
+      await page.getByRole('checkbox', { name: 'Flat' }).check();
+    },
+  },
+  {
+    under: '2',
+    heading: 'Body size',
+    words: 'The body measures 0.842 in, 0.0006 in over and 0.0004 in under.',
+    kind: LIMIT,
+    fill: async (page) => {
+      await page.getByLabel('Which figure counts').selectOption('mean');
+      await page.getByLabel('Stated as').selectOption('nominal');
+      await page.getByLabel('Nominal', { exact: true }).fill('0.8420');
+      await page.getByLabel('Over, at most', { exact: true }).fill('0.0006');
+      await page.getByLabel('Under, at most', { exact: true }).fill('0.0004');
+    },
+  },
+  {
+    under: '2',
+    heading: 'Bushed bores',
+    words: 'Bores are not bushed.',
+    kind: 'Yes or no',
+    fill: async (page) => {
+      await page.getByLabel(/^Question/).fill('Is the lifter bore bushed?');
+      await page.getByLabel('Key', { exact: true }).first().fill('bore-bushed');
+      await page.getByLabel('Once for').selectOption('bore');
+      await page.getByLabel('The answer that complies').selectOption('no');
+    },
+  },
+  {
+    under: '2',
+    heading: 'Valve lift',
+    words: 'Valve lift at the retainer is at most 0.4800 in.',
+    kind: LIMIT,
+    fill: async (page) => {
+      await page.getByLabel('Quantity').selectOption({ label: 'Valve lift' });
+      await page.getByLabel('Lash', { exact: true }).fill('0.000');
+      await page.getByLabel('Checking lifter').selectOption('solid');
+      await page.getByRole('textbox', { name: 'At most', exact: true }).fill('0.4800');
+    },
+  },
+];
+
+/** Midnight after the clocks of the demo series' zone went forward next year: second Sunday of March. */
+const springDay = (): string => {
+  const year = new Date().getFullYear() + 1;
+  const first = new Date(Date.UTC(year, 2, 1)).getUTCDay();
+  return `${year}-03-${String(((7 - first) % 7) + 8).padStart(2, '0')}`;
+};
+
+test('an official writes the demo class from empty, publishes it and amends it across midnight', async () => {
+  await journey('rulebook from empty', async ({ enter }) => {
+    const official = await enter();
+    const { page } = official;
+    await official.signInAs(OFFICIAL);
+    const name = `Street Six ${Date.now().toString(36)}`;
+    const office = await openNewClass(official, name);
+    await startFrom(official, office, 'Nothing');
+
+    await page.getByRole('button', { name: 'Edit the schedule' }).click();
+    await page.getByRole('button', { name: 'Add a row' }).click();
+    await page.getByLabel('Name', { exact: true }).fill('A');
+    await page.getByLabel('For which breaches').fill('A part that can improve performance');
+    await page.getByLabel('First breach').fill('Loss of the result');
+    for (const clause of CLAUSES) await addClause(page, clause.under, clause);
+
+    // The lift has no datum yet: the fault says so and leads to the field.
+    const fault = page.getByRole('button', { name: /2\.4 Valve lift needs its datum/ });
+    await fault.click();
+    await eventually('the datum under the cursor', async () =>
+      (await page.getByLabel('Datum').evaluate((field) => field === document.activeElement))
+        ? true
+        : undefined,
+    );
+    await official.expectAccessible();
+    await official.expectNoSidewaysScroll();
+    await sent(page);
+    await page.getByRole('link', { name: 'Check before publishing' }).click();
+    await page.getByRole('heading', { name: 'Still ambiguous: 1' }).waitFor();
+    expect(await page.getByRole('button', { name: /^Publish/ }).count()).toBe(0);
+    await page.getByRole('link', { name: 'Back to writing' }).click();
+    await ready(page);
+    await page.locator('.clause-row', { hasText: 'Valve lift' }).click();
+    await page.getByLabel('Datum').fill('at the valve spring retainer');
+    await page.getByRole('heading', { name: 'Nothing is ambiguous' }).waitFor();
+    await sent(page);
+    await official.shot('rulebook-editor');
+
+    await page.getByRole('link', { name: 'Check before publishing' }).click();
+    await official.expectAccessible();
+    await page.getByRole('button', { name: `Publish this edition for ${name}` }).click();
+    await page.waitForURL(new RegExp(`${office}$`));
+    await page.getByRole('rowheader', { name: 'Edition 1' }).waitFor();
+
+    await page.getByRole('button', { name: 'Write a bulletin' }).click();
+    await page.waitForURL(/\/draft\//);
+    await ready(page);
+    await page.getByLabel('Title').fill('Less lift');
+    await page.getByLabel('Reason').fill('Springs bind.');
+    await page.getByLabel('It counts').selectOption('instant');
+    const day = springDay();
+    const from = page.getByRole('textbox', { name: 'From' });
+    await from.fill(`${day} 00:00`);
+    await from.press('Enter');
+    await page.getByLabel('Clause in force').selectOption('2.4');
+    await page.getByRole('button', { name: 'Change this clause' }).click();
+    await page.getByLabel('Words', { exact: true }).fill('Valve lift is at most 0.4500 in.');
+    await page.getByRole('textbox', { name: 'At most', exact: true }).fill('0.4500');
+    await page.getByRole('heading', { name: 'Nothing is ambiguous' }).waitFor();
+    await sent(page);
+    await official.expectAccessible();
+    await page.getByRole('link', { name: 'Check before publishing' }).click();
+    await page.getByRole('heading', { name: 'Tried on accepted engines' }).waitFor();
+    await page.getByRole('button', { name: `Publish this bulletin for ${name}` }).click();
+    await page.getByRole('rowheader', { name: 'Bulletin 1' }).waitFor();
+    const address = await page
+      .getByRole('link', { name: 'As everybody reads it' })
+      .getAttribute('href');
+
+    const reader = await enter({ javaScript: false, viewport: { width: 390, height: 800 } });
+    const before = new Date(`${day}T00:00:00Z`);
+    before.setUTCDate(before.getUTCDate() - 1);
+    const eve = `${before.toISOString().slice(0, 10)}T23:59`;
+    for (const [on, lift] of [
+      [eve, '0.4800 in'],
+      [day, '0.4500 in'],
+    ]) {
+      await reader.open(`${address}?on=${on}`);
+      expect(await reader.page.locator('[id="2.4"]').textContent()).toContain(`at most ${lift}`);
+    }
+    expect(await reader.page.locator('script').count()).toBe(0);
+    await reader.expectNoSidewaysScroll();
+    await reader.expectAccessible();
+    await reader.open(`${address}/changes?from=${eve}&to=${day}`);
+    expect(await reader.page.locator('main').textContent()).toContain('0.4500 in');
+    await reader.expectAccessible();
+    await reader.open(`${address}/clauses/2.4?on=${day}`);
+    await reader.page.getByRole('img', { name: 'Address of clause 2.4' }).waitFor();
+    await reader.expectAccessible();
+    await reader.open(`${address}?find=bushed`);
+    expect(await reader.page.locator('article.rule').count()).toBe(1);
+  });
+});
+
+test('two officials on one draft choose, clause by clause, what stays', async () => {
+  await journey('two officials on one draft', async ({ enter }) => {
+    const one = await enter();
+    const two = await enter();
+    await one.signInAs(OFFICIAL);
+    await two.signInAs(SECOND);
+    const office = await openNewClass(one, `Street Five ${Date.now().toString(36)}`);
+    await startFrom(one, office, 'Rule set: Weights');
+    await two.open(new URL(one.page.url()).pathname);
+    await ready(two.page);
+
+    const edit = async (page: Page, heading: string, words: string) => {
+      await page.locator('.clause-row', { hasText: heading }).first().click();
+      await page.getByLabel('Words', { exact: true }).fill(words);
+    };
+    await edit(one.page, 'Crankshaft', 'The crankshaft weighs at least 50.0 lb, bare.');
+    await sent(one.page);
+    await edit(one.page, 'Lifters', 'Each lifter weighs at least 82.0 g.');
+    await sent(one.page);
+
+    two.expectRefusal({ url: /\/api\/rulebooks\/drafts\//, status: 412 });
+    await edit(two.page, 'Crankshaft', 'A bare crankshaft weighs 50.0 lb or more.');
+    await two.page.getByRole('heading', { name: /Ilse Törnkvist saved this draft/ }).waitFor();
+    await two.expectAccessible();
+    await two.shot('rulebook-choice');
+    const goOn = two.page.getByRole('button', { name: 'Go on with these' });
+    expect(await goOn.isDisabled()).toBe(true);
+    await two.page
+      .getByRole('group', { name: /Clause 3\.1: you both changed it/ })
+      .getByRole('radio', { name: /^Yours/ })
+      .check();
+    await goOn.click();
+    await sent(two.page);
+
+    await one.page.reload();
+    await ready(one.page);
+    await one.page.locator('.clause-row', { hasText: 'Crankshaft' }).click();
+    expect(await one.page.getByLabel('Words', { exact: true }).inputValue()).toBe(
+      'A bare crankshaft weighs 50.0 lb or more.',
+    );
+    await one.page.locator('.clause-row', { hasText: 'Lifters' }).click();
+    expect(await one.page.getByLabel('Words', { exact: true }).inputValue()).toBe(
+      'Each lifter weighs at least 82.0 g.',
+    );
+  });
+});
