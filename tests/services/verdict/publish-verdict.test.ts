@@ -4,6 +4,7 @@ import { parseLine } from '@/domain/ledger/line';
 import { lineCommitsTo } from '@/domain/ledger/verify/check-opening';
 import { findNotice } from '@/services/public/find-notice';
 import { listNotices } from '@/services/public/list-notices';
+import { listOwnVerdicts, openOwnVerdict } from '@/services/verdict/open-own-verdict';
 import { previewNotice } from '@/services/verdict/preview-notice';
 import { publishVerdict } from '@/services/verdict/publish-verdict';
 import { readForDecision } from '@/services/verdict/read-for-decision';
@@ -74,6 +75,7 @@ describe('publishing a verdict', () => {
     expect(contents).toEqual([
       { role: 'decision', open: false },
       { role: 'notice', open: true },
+      { role: 'rows', open: false },
     ]);
     const [verdict] = await world
       .ports()
@@ -383,5 +385,31 @@ describe('the notice board', () => {
     const [after] = (await listNotices(world.ports(), { seriesId: v.seriesId, find: '2026-001' }))
       .notices;
     expect(after?.final).toBe(true);
+  });
+});
+
+describe('a competitor', () => {
+  it('sees all findings on their own engine, and nobody else does', async () => {
+    const other = await addActor(world, 'Other Entrant', [
+      { seriesId: v.seriesId, role: 'competitor' },
+    ]);
+    const inspection = await v.addInspection('81');
+    await v.sign(inspection, BIG_FEET);
+    const done = await v.decide(inspection, BREACH);
+    if (!done.ok) throw new Error(done.failure.detail);
+    const open = (by: typeof other, series = 'corran-valley') =>
+      openOwnVerdict(world.ports(), by, { number: done.value.number, series });
+    const own = await open(v.competitor);
+    if (!own.ok) throw new Error(own.failure.detail);
+    expect(own.value.report.findings.find(({ clause }) => clause === '4.6')).toMatchObject({
+      advisory: true,
+      state: 'outside',
+    });
+    expect(failureOf(await open(other))?.name).toBe('absent');
+    expect(failureOf(await open(v.official))?.name).toBe('absent');
+    expect(failureOf(await open(v.competitor, 'elsewhere'))?.name).toBe('absent');
+    const listed = await listOwnVerdicts(world.ports(), v.competitor);
+    expect(listed.map(({ number }) => number)).toContain(done.value.number);
+    expect(await listOwnVerdicts(world.ports(), other)).toEqual([]);
   });
 });
