@@ -141,6 +141,7 @@ export const ROUTES: Readonly<Record<string, RouteAccess>> = {
   '/series/[slug]/rulebooks/[class]/clauses/[number]': open,
   '/series/[slug]/rulebooks/[class]/feed.xml': open,
   '/series/[slug]/rulebooks/[class]/rulebook.json': open,
+  '/series/[slug]/rulebooks/[class]/rulebook.pdf': open,
   '/series/[slug]/rulebooks/[class]/rules.json': open,
   '/series/[slug]/verdicts/[number]': open,
   '/series/[slug]/verdicts/[number].pdf': open,
