@@ -8,6 +8,7 @@ import { openLedgerKeys } from '@/adapters/ledger/keys';
 import { openMailer } from '@/adapters/mail/smtp';
 import { openObjects } from '@/adapters/objects/s3';
 import { noticePrinter } from '@/adapters/pdf/notice-printer';
+import { rulebookPrinter } from '@/adapters/pdf/rulebook-printer';
 import { systemClock, systemRandom } from '@/adapters/system/system';
 import { type Config, readConfig } from '@/config';
 import { watchRecord } from '@/services/ledger/restore/watch-record';
@@ -49,6 +50,7 @@ export const compose = async (config: Config): Promise<Composition> => {
     mailer,
     identity,
     notices: noticePrinter,
+    rulebooks: rulebookPrinter,
     keys,
     heads,
     recordState,

@@ -1,6 +1,7 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import type { Failure } from '@/domain/failure';
 import type { NoteSigner } from '@/domain/ledger/note/signed-note';
+import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import type { NoticeDocument } from '@/domain/verdict/notice';
 
 /** What the use cases need of the world. Each one names its own share: `Pick<Ports, 'db' | 'clock'>`. */
@@ -15,6 +16,7 @@ export interface Ports {
   readonly mailer: Mailer;
   readonly identity: IdentityProvider;
   readonly notices: NoticePrinter;
+  readonly rulebooks: RulebookPrinter;
   readonly keys: LedgerKeys;
   readonly heads: HeadMemory;
   readonly recordState: RecordState;
@@ -147,6 +149,23 @@ export interface NoticeToPrint {
 export interface NoticePrinter {
   /** The same notice gives the same bytes, every time. */
   print(input: NoticeToPrint): Promise<Uint8Array>;
+}
+
+export interface RulebookToPrint {
+  readonly rules: RulesInForce;
+  /** Of the rules in force, hexadecimal. */
+  readonly hash: string;
+  readonly series: string;
+  readonly zone: string;
+  /** The instant for which the rules were asked; ISO 8601 in UTC. */
+  readonly at: string;
+  /** Where the same rules are read; printed as a QR code. */
+  readonly url: string;
+}
+
+export interface RulebookPrinter {
+  /** The same rules at the same instant give the same bytes. */
+  print(input: RulebookToPrint): Promise<Uint8Array>;
 }
 
 /** The keys that sign the ledgers' heads; they are never in the database. */

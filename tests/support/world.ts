@@ -55,6 +55,7 @@ export const openWorld = async (fixed: Partial<Ports> = {}): Promise<World> => {
       mailer: missing('mail') as Ports['mailer'],
       identity: missing('the identity provider') as Ports['identity'],
       notices: missing('the notice printer') as Ports['notices'],
+      rulebooks: missing('the rulebook printer') as Ports['rulebooks'],
       keys: missing('the ledger’s keys') as Ports['keys'],
       heads: missing('the memory of signed heads') as Ports['heads'],
       recordState: { findObstacle: async () => undefined, doubt: () => undefined },

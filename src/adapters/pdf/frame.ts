@@ -22,7 +22,7 @@ export const drawFrame = (pen: Pen): void => {
   pen.path(outline(5), 0, 0, { weight: 1 });
 };
 
-const drawQr = (pen: Pen, url: string, left: number, top: number, size: number): void => {
+export const drawQr = (pen: Pen, url: string, left: number, top: number, size: number): void => {
   const { modules } = QRCode.create(url, { errorCorrectionLevel: 'M' });
   const edge = size / modules.size;
   for (let row = 0; row < modules.size; row += 1) {
