@@ -49,6 +49,37 @@ begin
   end if;
 end $fn$`);
 
+    // How an act's rows stand: a digest over the named columns of the rows it appended, its own row
+    // included. The line of the act commits to it, so that no column of such a row can be changed
+    // unseen. Columns are named, so that a later one does not change an old digest.
+    this.addSql(`
+create function append.act_digest(p_act uuid, p_tables text[], p_columns jsonb) returns jsonb
+language plpgsql stable
+set search_path = pg_catalog, pg_temp set timezone = 'UTC' set bytea_output = 'hex' as $fn$
+declare
+  v_table text; v_names jsonb; v_list text; v_rows text; v_columns jsonb := '{}'; v_all text := '';
+begin
+  for v_table in select t from unnest(p_tables) t where to_regclass(format('record.%I', t)) is not null
+    group by t order by t collate "C" loop
+    v_names := p_columns -> v_table;
+    if v_names is null then
+      select jsonb_agg(a.attname order by a.attnum) into strict v_names from pg_attribute a
+      where a.attrelid = format('record.%I', v_table)::regclass and a.attnum > 0 and not a.attisdropped;
+    end if;
+    select string_agg(format('t.%I', n), ', ') into strict v_list
+    from jsonb_array_elements_text(v_names) n;
+    execute format(
+      $q$select coalesce(string_agg(r, chr(10) order by r collate "C"), '')
+         from (select jsonb_build_array(%s)::text r from record.%I t where t.%I = $1) x$q$,
+      v_list, v_table, case v_table when 'act' then 'id' else 'act_id' end
+    ) into v_rows using p_act;
+    v_columns := v_columns || jsonb_build_object(v_table, v_names);
+    v_all := v_all || v_table || chr(10) || v_rows || chr(10);
+  end loop;
+  return jsonb_build_object(
+    'columns', v_columns, 'digest', encode(sha256(convert_to(v_all, 'UTF8')), 'hex'));
+end $fn$`);
+
     this.addSql(`
 create table record.ledger_head (
   series_id uuid primary key references public.series (id),

@@ -8,6 +8,7 @@ import { EventsAndInspections } from './0006-events-and-inspections';
 import { Verdicts } from './0007-verdicts';
 import { RulesQuestions } from './0008-rules-questions';
 import { Draws } from './0009-draws';
+import { RowsByAct } from './0010-rows-by-act';
 
 /** In order of application. A new migration is added here by hand. */
 export const migrationsList: MigrationObject[] = [
@@ -20,4 +21,5 @@ export const migrationsList: MigrationObject[] = [
   { name: '0007-verdicts', class: Verdicts },
   { name: '0008-rules-questions', class: RulesQuestions },
   { name: '0009-draws', class: Draws },
+  { name: '0010-rows-by-act', class: RowsByAct },
 ];

@@ -6,6 +6,7 @@ import { canonicalJson } from '@/domain/ledger/canonical';
 import { fail, type Result } from '@/domain/result';
 import type { JobPayloads, Ports } from '../ports';
 import { type AppendTable, hexBytes, type NewLedgerLine, writeLine } from './append';
+import { withRows } from './with-rows';
 
 export interface ActRequest {
   /** Client-made UUIDv7: the same one twice is the same act. */
@@ -117,7 +118,11 @@ export const performAct = async <T>(
         id,
         JSON.stringify({ value: result.value ?? null }),
       ]);
-      for (const line of lines) await writeLine(em, deps.random, id, act.at, line);
+      const tables = ['act', ...appends.map(([table]) => table)];
+      for (const line of lines) {
+        const anchored = await withRows(em, id, tables, line);
+        await writeLine(em, deps.random, id, act.at, anchored);
+      }
       return result;
     });
   } catch (error) {

@@ -188,7 +188,7 @@ describe('handing in', () => {
     expect(stored!.document).toContain('"text":"0.8420"');
     const lines = await rows<{ kind: string; open: boolean }>(
       `select l.kind, c.open from record.ledger_line l
-       join record.ledger_content c on c.series_id = l.series_id and c.line_index = l.index
+       join record.ledger_content c on c.series_id = l.series_id and c.line_index = l.index and c.role = 'paperwork'
        where l.series_id = ? and position(? in l.line) > 0`,
       [paddock.seriesId, receipt.hash],
     );
