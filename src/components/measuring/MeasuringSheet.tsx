@@ -173,6 +173,9 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
     setTyped(NOTHING);
     setProblem(undefined);
   };
+  // Without a run that is open, the one by which this bore was read.
+  const seenRun =
+    part && [...takenAt(judged, part, position, cursor.set).values()].at(-1)?.row.zeroRunId;
   const states = boreStates({
     positions,
     parts,
@@ -242,7 +245,8 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
           stops={stops}
           current={cursor.bore}
           zeros={capture.rows.zeros}
-          runId={cursor.run?.id}
+          runId={cursor.run?.id ?? seenRun}
+          open={cursor.run !== undefined}
           scale={scale}
           onClosing={() => go({ zero: 'closing' })}
         />

@@ -15,6 +15,8 @@ interface RunPanelProps {
   readonly current: string;
   readonly zeros: readonly ZeroRow[];
   readonly runId: string | undefined;
+  /** Whether that run still waits for its closing zero on this device. */
+  readonly open: boolean;
   readonly scale: Scale | undefined;
   readonly onClosing: () => void;
 }
@@ -64,7 +66,7 @@ export const RunPanel = (props: RunPanelProps) => {
           valve: position.valve,
         }))}
       />
-      <button className="btn" type="button" disabled={runId === undefined} onClick={onClosing}>
+      <button className="btn" type="button" disabled={!props.open} onClick={onClosing}>
         Take the closing zero
       </button>
     </div>

@@ -114,7 +114,7 @@ export const WorkPanel = (props: WorkPanelProps) => {
   );
   if (part === undefined || scale === undefined)
     return (
-      <div className="work">
+      <div className="work gap-3">
         {switcher}
         <ChecksPanel {...props} />
         <Troubles {...props} />
@@ -150,7 +150,7 @@ export const WorkPanel = (props: WorkPanelProps) => {
     zero !== undefined
       ? 'as the dial stands'
       : showLast
-        ? 'last value, to read back'
+        ? 'last value'
         : comparative && lifter
           ? `lifter ${lifter.row.value.text} ${lifter.row.value.unit}`
           : undefined;
@@ -163,7 +163,7 @@ export const WorkPanel = (props: WorkPanelProps) => {
     }),
   }));
   return (
-    <div className="work">
+    <div className="work gap-3">
       {switcher}
       {clause !== undefined && (
         <BoreHeader

@@ -20,9 +20,6 @@ interface Seen {
   readonly outOfReach: ReadonlySet<string>;
 }
 
-/** What fits beside a bore; longer ones are read where the bore is chosen. */
-const onMap = (value: string) => (value.length <= 4 ? { value } : {});
-
 /**
  * What each bore carries on the map for the part that is being read. A result shows only once the
  * bore's set is complete: "outside" while a gauge is still being rocked would bias the hand.
@@ -69,7 +66,7 @@ export const boreStates = ({
       const shown = shownResult(clause, result);
       if (shown === undefined) return [key, { status: markOfState(result.state) }];
       unit = shown.unit;
-      return [key, { status: markOfState(result.state), ...onMap(shown.value) }];
+      return [key, { status: markOfState(result.state), value: shown.short }];
     }),
   );
   return { bores, unit };

@@ -15,6 +15,8 @@ import { getQuantityEntry } from '@/domain/rulebook/quantity-catalogue';
 /** What a strip and a result line show of one position's result, in the unit of the sheet. */
 export interface ShownResult {
   readonly value: string;
+  /** Rounded for a place on the map; nothing where even that is too long. */
+  readonly short?: string | undefined;
   readonly uncertainty: string;
   readonly k: string;
   readonly unit: string;
@@ -46,7 +48,7 @@ export const shownResult = (clause: Clause, result: PositionResult): ShownResult
   const number = (written: Written) => steps(baseNumber(read(written)));
   const exact = read(result.exact ?? result.value);
   const places = decimalsOf(convert(read(result.value), unit).text);
-  const value = asciiIn(exact, unit, places);
+  const value = asciiIn(exact, unit, unit === 'thou' ? Math.max(places, 2) : places);
   const { limits } = decisionOf(requirement);
   const bound = (limit: typeof limits.max, word: string) =>
     limit && {
@@ -57,8 +59,18 @@ export const shownResult = (clause: Clause, result: PositionResult): ShownResult
   const guarded = result.guardBand;
   return {
     value,
+    ...(unit === 'thou'
+      ? { short: asciiIn(exact, unit, 1) }
+      : value.length <= 4
+        ? { short: value }
+        : {}),
     uncertainty: result.uncertainty
-      ? formatWidth(dimension, baseNumber(read(result.uncertainty)), unit, Math.max(places, 2))
+      ? formatWidth(
+          dimension,
+          baseNumber(read(result.uncertainty)),
+          unit,
+          unit === 'thou' ? 2 : places,
+        )
       : '0',
     k: result.coverageFactor ?? '2',
     unit: shown,
