@@ -1,5 +1,6 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import type { PublicDrawAnswer } from '@/contracts/draw/draw';
+import type { DrawShown } from '@/contracts/draw/draw-shown';
 import { findCovering } from '../ledger/checkpoint/find-checkpoint';
 import { proofUnder } from '../ledger/proof/prove-line';
 import { isId } from '../paperwork/own-paperwork';
@@ -55,17 +56,6 @@ export const findPublicDraw = async (
   const row = await findDrawRow(deps.db, asked.seriesId, asked.drawId);
   return row && publish(deps.db, asked.seriesId, row);
 };
-
-/** A draw on its event's public page. */
-export interface DrawShown {
-  readonly published: PublicDrawAnswer;
-  readonly announcedAt: string;
-  readonly endedAt: string | null;
-  /** Cars entered in the class after the announcement: they are not in the pool. */
-  readonly enteredLater: readonly string[];
-  /** Cars of the pool that withdrew after the announcement. */
-  readonly withdrawn: readonly string[];
-}
 
 /** Every draw of an event, void ones too, in the order announced. */
 export const listPublicDraws = async (
