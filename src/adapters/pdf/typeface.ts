@@ -3,6 +3,8 @@ import { createRequire } from 'node:module';
 import fontkit, { type Font } from '@pdf-lib/fontkit';
 import type { Color, PDFDocument, PDFFont, PDFPage } from 'pdf-lib';
 
+import { unpackWoff } from './unpack-woff';
+
 /** Faces of the printed sheet; sizes and places are in CSS pixels, as the sheet was drawn. */
 export type Face = 'text' | 'bold' | 'head' | 'num' | 'num-bold';
 
@@ -56,7 +58,7 @@ const cuts = new Map<string, Promise<Uint8Array>>();
 const require = createRequire(import.meta.url);
 
 const load = (file: string): Promise<Uint8Array> => {
-  const known = cuts.get(file) ?? readFile(require.resolve(`@fontsource/${file}`));
+  const known = cuts.get(file) ?? readFile(require.resolve(`@fontsource/${file}`)).then(unpackWoff);
   cuts.set(file, known);
   return known;
 };
