@@ -20,6 +20,8 @@ const beyond = ({ limits }: NoticeClause, { value }: NoticePosition): number => 
 };
 
 const LARGE: Style = { face: 'num-bold', size: 29 };
+/** Smaller where the figure would not leave room for what it is of. */
+const SIZES = [29, 27, 25, 23];
 const FACTOR: Style = { face: 'num', size: 16 };
 
 const large = (clause: NoticeClause, position: NoticePosition, width: Width): readonly Block[] => {
@@ -29,8 +31,11 @@ const large = (clause: NoticeClause, position: NoticePosition, width: Width): re
   const main = `${minus(value.text)}${unit}${uncertainty === undefined ? '' : ` ± ${uncertainty.text}${unit}`}`;
   const factor = uncertainty === undefined || k === undefined ? '' : `(k = ${k})`;
   const what = `${(clause.measured ?? '').toLowerCase().replaceAll(' diameter', '')}, ${position.position}`;
-  const left = SHEET.content + width(main, LARGE) + 10;
-  const beside = left + width(factor, FACTOR) + 10 + width(what, BOLD) <= SHEET.right;
+  const room = SHEET.right - SHEET.content - width(factor, FACTOR) - width(what, BOLD) - 20;
+  const fitting = SIZES.find((size) => width(main, { ...LARGE, size }) <= room);
+  const style = { ...LARGE, size: fitting ?? LARGE.size };
+  const left = SHEET.content + width(main, style) + 10;
+  const beside = fitting !== undefined;
   const bound = (limit: 'min' | 'max') => {
     const written = clause.limits?.[limit];
     return written === undefined
@@ -41,7 +46,7 @@ const large = (clause: NoticeClause, position: NoticePosition, width: Width): re
     {
       height: 40,
       draw: (pen, top) => {
-        pen.text(SHEET.content, top + 24, main, LARGE);
+        pen.text(SHEET.content, top + 24, main, style);
         pen.text(left, top + 24, factor, FACTOR);
         if (beside) pen.text(SHEET.right, top + 24, what, BOLD, 'right');
       },
