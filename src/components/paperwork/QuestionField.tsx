@@ -25,7 +25,8 @@ export const QuestionField = ({ question, answer, onChange }: QuestionFieldProps
   const fault = answer === undefined ? undefined : answerFault(question, answer);
   const rule = (
     <p className="hint">
-      Clause <span className="num">{question.clauses.join(', ')}</span>. {question.rule}
+      Clause <span className="num">{question.clauses.join(', ')}</span>.{' '}
+      {question.rule.replace(`${question.question} `, '')}
     </p>
   );
   if (question.kind === 'choice' || question.kind === 'yes-no') {
