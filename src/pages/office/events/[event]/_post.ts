@@ -2,7 +2,6 @@ import { entriesRequest, positionsRequest } from '@/contracts/event/event';
 import { readBody } from '@/contracts/read-body';
 import type { Actor } from '@/domain/access/permission';
 import type { Fault } from '@/domain/failure';
-import { readForm } from '@/http/form';
 import { enterCars } from '@/services/event/enter-cars';
 import type { EventSheet } from '@/services/event/find-event';
 import { type EntriesFile, readEntriesFile } from '@/services/event/read-entries-file';
@@ -22,6 +21,17 @@ const problemsAt = (faults: readonly Fault[]) =>
     return /^[a-zA-Z]+$/.test(field) ? { field, message: detail } : { message: detail };
   });
 
+/** The text fields, the lines of a chosen file in the place of pasted ones. */
+const readWithFile = async (request: Request): Promise<ReadonlyMap<string, string>> => {
+  const form = await request.formData();
+  const fields = new Map<string, string>();
+  for (const [name, value] of form.entries())
+    if (typeof value === 'string') fields.set(name, value);
+  const upload = form.get('upload');
+  if (upload instanceof File && upload.size > 0) fields.set('csv', await upload.text());
+  return fields;
+};
+
 /** What the forms of an event's page ask for. A file is first read through; nothing is written then. */
 export const handlePost = async (
   ports: Ports,
@@ -29,7 +39,7 @@ export const handlePost = async (
   { event, classes, entries }: EventSheet,
   request: Request,
 ): Promise<Posted> => {
-  const typed = await readForm(request);
+  const typed = await readWithFile(request);
   const text = (name: string) => (typed.get(name) ?? '').trim();
   const { seriesId, id: eventId } = event;
   const to = `/office/events/${eventId}`;
