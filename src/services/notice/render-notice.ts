@@ -33,8 +33,9 @@ const findVerdict = async (em: EntityManager, seriesId: string, verdictId: strin
   return row;
 };
 
-export const noticePath = (notice: Pick<NoticeDocument, 'series' | 'number'>): string =>
-  `/series/${notice.series.slug}/verdicts/${notice.number}`;
+/** Where the print's code leads: the page that checks the notice and shows it. */
+const verifyPath = ({ series, number }: Pick<NoticeDocument, 'series' | 'number'>): string =>
+  `/verify?${new URLSearchParams({ series: series.slug, number })}`;
 
 /**
  * Prints a published notice, keeps the PDF by its hash, records that hash in a ledger line and
@@ -56,7 +57,7 @@ export const renderNotice = async (
   const pdf = await deps.notices.print({
     notice,
     ledger: { line: line.index, checkpoint: proven?.checkpoint },
-    url: `${deps.site.publicUrl}${noticePath(notice)}`,
+    url: `${deps.site.publicUrl}${verifyPath(notice)}`,
     attachment: noticeAttachment(row.notice, line, proven),
   });
   const hash = sha256(pdf);
