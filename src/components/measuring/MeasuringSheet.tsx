@@ -33,9 +33,14 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
   const [asked, setAsked] = useState<string>();
   const [panel, setPanel] = useState<PadPanel>();
   const [problem, setProblem] = useState<string>();
-  const [, settle] = useState(0);
+  const [turn, settle] = useState(0);
   const busy = useRef(false);
-  const pending = useRef(false);
+  const waiting = useRef<PadKey[]>([]);
+  const typing = useRef(NOTHING);
+  const type = useCallback((to: Typed) => {
+    typing.current = to;
+    setTyped(to);
+  }, []);
 
   const positions = useMemo(() => positionsOf(sheet.layout), [sheet.layout]);
   const parts = useMemo(() => partsOf(sheet.rules, setUp.form), [sheet.rules, setUp.form]);
@@ -76,6 +81,8 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
   );
 
   const enter = async () => {
+    const entered = typing.current;
+    const value = scale && typedNumber(entered, scale.decimals);
     if (standing === undefined || step === undefined || position === undefined || !part) return;
     if (value === undefined) {
       if (step.kind === 'bore') go({ bore: boreName(step.to), cell: undefined, set: 1 });
@@ -97,11 +104,11 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
       return;
     }
     // Digits of the next number may come while this one is being kept.
-    setTyped(NOTHING);
+    type(NOTHING);
     setAsked(undefined);
     const kept = async (sent: readonly SentRow[]) => {
       const done = await record(sent);
-      if (!done) setTyped((now) => (now.digits === '' ? typed : now));
+      if (!done) type(entered);
       return done;
     };
     const base = { gauge, setUp, gauges: sheet.gauges, value: { text: value, unit: scale.unit } };
@@ -142,35 +149,36 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
 
   const latestEnter = useRef(enter);
   latestEnter.current = enter;
-  // An Enter that comes while the one before is being kept waits for the screen to have moved on.
-  const run = useCallback(() => {
-    if (busy.current) {
-      pending.current = true;
-      return;
-    }
-    busy.current = true;
-    void latestEnter.current().finally(() => {
-      busy.current = false;
-      settle((turn) => turn + 1);
-    });
-  }, []);
-  useEffect(() => {
-    if (!pending.current || busy.current) return;
-    pending.current = false;
-    run();
-  });
-  const onKey = useCallback(
+  // Keys that come while a reading is being kept wait until the screen has moved on to the next cell:
+  // no number is entered twice, and none runs into the next.
+  const take = useCallback(
     (key: PadKey) => {
-      if (key === 'enter') run();
-      else setTyped((now) => press(now, key));
+      if (busy.current) {
+        waiting.current.push(key);
+        return;
+      }
+      if (key !== 'enter') {
+        type(press(typing.current, key));
+        return;
+      }
+      busy.current = true;
+      void latestEnter.current().finally(() => settle((turn) => turn + 1));
     },
-    [run],
+    [type],
   );
+  useEffect(() => {
+    if (turn === 0) return;
+    busy.current = false;
+    while (waiting.current.length > 0 && !busy.current) {
+      const [key] = waiting.current.splice(0, 1);
+      if (key !== undefined) take(key);
+    }
+  }, [turn, take]);
 
   if (position === undefined) return <p>This engine’s position map has no bores.</p>;
   const select = (bore: string) => {
     go({ bore, cell: undefined, set: 1, zero: undefined });
-    setTyped(NOTHING);
+    type(NOTHING);
     setProblem(undefined);
   };
   // Without a run that is open, the one by which this bore was read.
@@ -274,7 +282,7 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
       pad={
         panel === undefined && part !== undefined ? (
           <Keypad
-            onKey={onKey}
+            onKey={take}
             unit={scale?.shown ?? ''}
             unitNote={`${scale?.decimals ?? 0} ${scale?.decimals === 1 ? 'decimal' : 'decimals'} implied`}
             {...(hint === undefined ? {} : { enterHint: hint })}
