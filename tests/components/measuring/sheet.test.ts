@@ -84,6 +84,23 @@ describe('the usual set-up', () => {
     expect(scale('lifter-body-diameter', 1)).toEqual({ unit: 'in', shown: 'in', decimals: 4 });
   });
 
+  it('takes gauges that reach what they are for', () => {
+    const range = (from: string, to: string) => ({
+      range: { from: { text: from, unit: 'in' }, to: { text: to, unit: 'in' } },
+    });
+    const several = [
+      gauge({ code: 'IM-02', ...range('2', '6') }),
+      gauge({ code: 'MC-01', ...range('0', '1') }),
+      gauge({ code: 'DB-01', kind: 'dial-bore-gauge', ...range('1.4', '2.4') }),
+      gauge({ code: 'DB-07', kind: 'dial-bore-gauge', ...range('0.8', '1.0') }),
+    ];
+    expect(usualSetUp(several, '2026-07-11')).toMatchObject({
+      micrometerId: 'MC-01',
+      boreGaugeId: 'DB-07',
+      otherGaugeId: 'IM-02',
+    });
+  });
+
   it('asks about what can hardly be meant, and about nothing else', () => {
     const ask = (value: string, unit: string, comparative: boolean) =>
       questionOf({

@@ -1,8 +1,12 @@
+import { gaugeOf } from '@/domain/inspection/capture/gauge-record';
 import type { LoggedTemperatures } from '@/domain/inspection/capture/rows';
+import { reaches } from '@/domain/measurement/gauge';
 import { convert } from '@/domain/quantity/convert';
 import type { Written } from '@/domain/quantity/dimension';
 import { decimalsOf } from '@/domain/quantity/number-text';
 import { parseWritten } from '@/domain/quantity/parse';
+import type { Quantity } from '@/domain/quantity/quantity';
+import { fromStored } from '@/domain/quantity/stored';
 import { getQuantityEntry, type QuantityName } from '@/domain/rulebook/quantity-catalogue';
 import type { Form } from './parts';
 import type { SheetGauge } from './sheet';
@@ -21,13 +25,21 @@ export interface SetUp {
   readonly hand: 'right' | 'left';
 }
 
-/** The first gauge of a kind that is in use and not overdue; else any of the kind; else none. */
+// Common practice: the smallest lifters and their bores, and a cylinder's bore.
+const LIFTER = fromStored({ text: '0.842', unit: 'in' }, 'length');
+const CYLINDER = fromStored({ text: '4', unit: 'in' }, 'length');
+
+/** The first gauge of a kind that reaches the size, is in use and not overdue; else one that reaches it; else none. */
 const firstOf = (
   gauges: readonly SheetGauge[],
   kinds: readonly string[],
   today: string,
+  size?: Quantity<'length'>,
 ): string => {
-  const alike = gauges.filter((gauge) => kinds.includes(gauge.kind));
+  const alike = gauges.filter(
+    (gauge) =>
+      kinds.includes(gauge.kind) && (size === undefined || reaches(gaugeOf(gauge, 'length'), size)),
+  );
   const good = alike.find(
     (gauge) =>
       gauge.withdrawn !== true &&
@@ -39,15 +51,15 @@ const firstOf = (
 
 export const usualSetUp = (gauges: readonly SheetGauge[], today: string): SetUp => {
   const ringId = firstOf(gauges, ['setting-ring'], today);
-  const boreGaugeId = firstOf(gauges, ['dial-bore-gauge', 'telescoping-gauge'], today);
+  const boreGaugeId = firstOf(gauges, ['dial-bore-gauge', 'telescoping-gauge'], today, LIFTER);
   return {
     form: 'full',
     method: boreGaugeId === '' ? 'absolute' : 'comparative',
     zeroedOn: ringId === '' ? 'lifter' : 'ring',
-    micrometerId: firstOf(gauges, ['micrometer', 'caliper'], today),
+    micrometerId: firstOf(gauges, ['micrometer', 'caliper'], today, LIFTER),
     boreGaugeId,
     ringId,
-    otherGaugeId: firstOf(gauges, ['other', 'micrometer', 'caliper'], today),
+    otherGaugeId: firstOf(gauges, ['other', 'micrometer', 'caliper'], today, CYLINDER),
     temperatures: {},
     hand: 'right',
   };
