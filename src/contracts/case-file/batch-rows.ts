@@ -14,14 +14,13 @@ const batchShape = z.looseObject({
   v: z.literal('1'),
   type: z.literal('tagwire/batch'),
   inspection: z.string(),
+  act: z.string(),
   by: z.string(),
   clockOffsetMs: z.string().check(z.regex(/^-?\d{1,12}$/)),
   /** Why none of the batch counts. */
   received: z.optional(z.string()),
   rows: z.array(loose),
 });
-
-type Batch = z.infer<typeof batchShape>;
 
 /** Whole numbers stand as text in a document; the rows' contract has them as numbers. */
 const withNumbers = (row: Record<string, unknown>): Record<string, unknown> => {
@@ -35,21 +34,22 @@ const withNumbers = (row: Record<string, unknown>): Record<string, unknown> => {
   return { ...row, ...number('repeat', row), ...number('set', row), ...placed };
 };
 
-/** Throws on a batch that is none: the chain's hash was compared before. */
-const readBatch = (
-  document: string,
-): { readonly batch: Batch; readonly rows: readonly SentRow[] } => {
-  const batch = batchShape.parse(JSON.parse(document));
-  return { batch, rows: batch.rows.map((row) => captureRow.parse(withNumbers(row))) };
+/** A batch as it was sent, with who sent it. Throws on a text that is none. */
+export const rawBatch = (document: string) => {
+  const { rows, clockOffsetMs, ...batch } = batchShape.parse(JSON.parse(document));
+  return {
+    ...batch,
+    clockOffsetMs: Number(clockOffsetMs),
+    rows: rows.map((row): SentRow => captureRow.parse(withNumbers(row))),
+  };
 };
 
 const rowsOf = (document: string): RawRows => {
-  const { batch, rows } = readBatch(document);
-  const offset = Number(batch.clockOffsetMs);
+  const { rows, ...batch } = rawBatch(document);
   const common = (row: SentRow) => ({
     id: row.id,
     takenBy: batch.by,
-    occurredAt: new Date(Date.parse(row.occurredAt) + offset).toISOString(),
+    occurredAt: new Date(Date.parse(row.occurredAt) + batch.clockOffsetMs).toISOString(),
     standing: batch.received === undefined ? ('accepted' as const) : ('received' as const),
   });
   const readings: ReadingRow[] = [];

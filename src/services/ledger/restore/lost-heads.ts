@@ -22,14 +22,22 @@ const headOf = ({ seriesId, note }: Remembered) => {
   return head.value;
 };
 
-/** Whether a recorded restore has already said that lines of a head of this size were lost. */
-const isRecorded = async (em: EntityManager, seriesId: string, size: number): Promise<boolean> => {
+/**
+ * Whether a recorded restore has said that this head’s lines were lost: by its root, or by a larger
+ * head of the same loss, which another process remembers.
+ */
+const isRecorded = async (
+  em: EntityManager,
+  seriesId: string,
+  { size, root }: { readonly size: number; readonly root: Uint8Array },
+): Promise<boolean> => {
   const [row] = await em.execute<unknown[]>(
     `select 1 from record.ledger_line
-     where series_id = ? and kind = 'restore-recorded' and index < ?
-       and (line::jsonb #>> '{refs,lost-size}')::bigint >= ?
+     where series_id = ? and kind = 'restore-recorded'
+       and ((index < ? and (line::jsonb #>> '{refs,lost-size}')::bigint >= ?)
+            or line::jsonb #>> '{refs,lost-root}' = ?)
      limit 1`,
-    [seriesId, size, size],
+    [seriesId, size, size, toHex(root)],
   );
   return row !== undefined;
 };
@@ -41,7 +49,7 @@ export const isLost = async (em: EntityManager, remembered: Remembered): Promise
   const present = await findSize(em, seriesId);
   const holds =
     present !== undefined && present >= size && sameBytes(await readRoot(em, seriesId, size), root);
-  return !holds && !(await isRecorded(em, seriesId, size));
+  return !holds && !(await isRecorded(em, seriesId, { size, root }));
 };
 
 /** Every series whose ledger is behind, or apart from, the last head signed for it. */
