@@ -4,6 +4,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { type Actor, may, type Role } from '@/domain/access/permission';
 import { ROUTES } from '@/http/route-table';
 import { allOperations } from '@/pages/api/openapi.json';
+import { demoParameters, pathOf } from '../support/demo-routes';
 import { readProduct } from '../support/product';
 
 const { publicUrl, superuserUrl } = readProduct();
@@ -17,8 +18,7 @@ interface Visitor {
 }
 
 const visitors: Visitor[] = [];
-/** Route parameters by what stands before them; real ones of the demo, all of them Wren Halloway's or the series'. */
-const real = new Map<string, string>();
+let real: ReadonlyMap<string, string> = new Map();
 let seriesId = '';
 
 const one = async (sql: string, values: unknown[] = []): Promise<string> => {
@@ -77,52 +77,9 @@ beforeAll(async () => {
     await enter(name, await one('select id from public.person where name = $1', [name]));
   }
   seriesId = await one("select id from public.series where slug = 'corran-valley'");
-  const wren = await one("select id from public.person where name = 'Wren Halloway'");
-  const paperwork = await one('select id from public.paperwork where competitor_id = $1', [wren]);
-  const inspection = await one(
-    `select i.id from public.inspection i join public.entry e on e.series_id = i.series_id and e.id = i.entry_id
-     where e.car_number = '12J'`,
-  );
-  const event = await one("select id from public.event where slug = 'round-1'");
-  const raceClass = await one("select id from public.class where slug = 'street-eight'");
-  const all: Record<string, string> = {
-    '/api/paperwork/[paperwork]': paperwork,
-    '/paddock/paperwork/[id]': paperwork,
-    '/office/paperwork/[id]': paperwork,
-    '/barn/inspections/[id]': inspection,
-    '/api/inspections/[id]': inspection,
-    '/office/verdicts/[inspection]': inspection,
-    '/api/files/[file]': await one(
-      "select id from public.file where paperwork_id = $1 and purpose = 'photograph'",
-      [paperwork],
-    ),
-    '/series/[slug]/rulebooks/[class]': 'street-eight',
-    '[width]': '160',
-    '[sheet]': 'lifter-sheet',
-    '[series]': seriesId,
-    '[event]': event,
-    '[class]': raceClass,
-    '[draft]': await one('select id from public.rulebook_draft where class_id = $1', [raceClass]),
-    '[gauge]': await one("select id from public.gauge where code = 'MIC-014'"),
-    '[slug]': 'corran-valley',
-    '[number]': '1',
-  };
-  for (const [key, value] of Object.entries(all)) real.set(key, value);
+  real = await demoParameters(client);
 });
 afterAll(() => client.end());
-
-/** The route with the demo's own parameters, or with ones that nothing has. */
-const pathOf = (route: string, known: boolean): string => {
-  const parts = route.split('/');
-  return parts
-    .map((part, at) => {
-      if (!part.startsWith('[')) return part;
-      if (!known)
-        return part === '[slug]' ? 'no-such-series' : '01900000-0000-7000-8000-000000000000';
-      return real.get(parts.slice(0, at + 1).join('/')) ?? real.get(part) ?? randomUUID();
-    })
-    .join('/');
-};
 
 const methodOf = (route: string): string =>
   allOperations
@@ -130,7 +87,7 @@ const methodOf = (route: string): string =>
     ?.method.toUpperCase() ?? 'GET';
 
 const knock = async (visitor: Visitor, route: string, known: boolean) => {
-  const path = pathOf(route, known);
+  const path = pathOf(route, real, known);
   const method = methodOf(route);
   const response = await fetch(`${publicUrl}${path}`, {
     method,

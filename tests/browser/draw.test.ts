@@ -1,0 +1,192 @@
+import { expect, test } from 'vitest';
+import { journey, type Visitor } from '../support/browser';
+import { runPrintedScript } from '../support/draw';
+import { readProduct } from '../support/product';
+import { eventually } from '../support/wait';
+
+const phone = { width: 390, height: 844 };
+const OFFICIAL = 'Ilse Törnkvist';
+const CLASS = 'Street Eight';
+const { publicUrl } = readProduct();
+
+/** Local time at the track, as the form writes it, of the next whole minute that is still to come. */
+const nextMinute = (zone: string): { readonly written: string; readonly at: number } => {
+  // A minute that is about to end leaves no time to announce.
+  const at = Math.ceil((Date.now() + 20_000) / 60_000) * 60_000;
+  const parts = new Intl.DateTimeFormat('sv-SE', {
+    timeZone: zone,
+    dateStyle: 'short',
+    timeStyle: 'short',
+  }).format(at);
+  return { written: parts.replace(' ', 'T'), at };
+};
+
+const toClass = async ({ page, open }: Visitor, event: RegExp, raceClass = CLASS) => {
+  await open('/office/events');
+  await page.getByRole('link', { name: event }).first().click();
+  const id = /events\/([0-9a-f-]{36})/.exec(page.url())?.[1] ?? '';
+  await open(`/office/draws/${id}`);
+  await page.getByRole('link', { name: raceClass }).click();
+  await page.getByRole('heading', { name: `Draw, ${raceClass}` }).waitFor();
+};
+
+const announce = async (visitor: Visitor, session: string | undefined, shot?: string) => {
+  const { page } = visitor;
+  await page.getByRole('link', { name: /^Announce/ }).click();
+  if (session !== undefined) await page.getByLabel('When do the values begin').fill(session);
+  if (shot !== undefined) {
+    await visitor.expectAccessible();
+    await visitor.expectNoSidewaysScroll();
+    await visitor.shot(`${shot}-form`);
+  }
+  await page.getByRole('button', { name: 'Check the announcement' }).click();
+  await page.getByRole('heading', { name: 'Check the announcement' }).waitFor();
+  if (shot !== undefined) {
+    await visitor.expectAccessible();
+    await visitor.shot(`${shot}-check`);
+  }
+  await page.getByRole('button', { name: 'Announce it to everybody' }).click();
+  await page.getByText('Nobody can read it before the draw is made').waitFor();
+};
+
+test('a draw is announced and declared void on a phone, and everybody reads why', async () => {
+  await journey('void draw', async ({ enter }) => {
+    const official = await enter({ viewport: phone, touch: true });
+    await official.signInAs(OFFICIAL);
+    await toClass(official, /Tallow Mere Evening/, 'Modified Four');
+    await announce(official, undefined, 'draw-390-announce');
+    const { page } = official;
+    await official.expectAccessible();
+    await official.expectNoSidewaysScroll();
+    await official.shot('draw-390-announced');
+    expect(await page.getByRole('link', { name: 'Enter the values' }).count()).toBe(0);
+    await page.getByRole('link', { name: /declare it void/ }).click();
+    official.expectRefusal({ url: /\/void$/, status: 422 });
+    await page.getByRole('button', { name: 'Declare the draw void' }).click();
+    await page.getByText('Say why the draw cannot count').first().waitFor();
+    await official.shot('draw-390-void-form');
+    await page.getByLabel('Why can it not count?').fill('The meeting was moved to another day.');
+    await page.getByRole('button', { name: 'Declare the draw void' }).click();
+    await page.getByText('The meeting was moved to another day.').waitFor();
+    await announce(official, undefined);
+
+    const visitor = await enter();
+    await visitor.open('/series/corran-valley/events/round-2/draw');
+    expect(await visitor.page.locator('[data-draw="void"]').textContent()).toContain(
+      'The meeting was moved to another day.',
+    );
+    expect(await visitor.page.locator('[data-draw="announced"]').textContent()).toContain(
+      'This draw follows one that was declared void',
+    );
+    await visitor.expectAccessible();
+    await visitor.shot('draw-1280-void');
+  });
+});
+
+test('a draw at a hand-scored track: announced, made once, checked by a stranger and by a script', async () => {
+  await journey('draw made', async ({ enter }) => {
+    const official = await enter({ viewport: phone, touch: true });
+    const { page } = official;
+    await official.signInAs(OFFICIAL);
+    await toClass(official, /Quarrel Fen Opener/);
+    const session = nextMinute('America/Chicago');
+    await announce(official, session.written);
+
+    const visitor = await enter({ viewport: { width: 1280, height: 900 } });
+    const draw = '/series/corran-valley/events/round-1/draw';
+    await visitor.open(draw);
+    const announced = visitor.page.locator('[data-draw="announced"]');
+    expect(await announced.textContent()).toContain('Two dice');
+    await visitor.expectAccessible();
+    await visitor.shot('draw-1280-announced');
+    const href = await announced
+      .getByRole('link', { name: 'The announcement as a file' })
+      .getAttribute('href');
+    const noted = await (await fetch(`${publicUrl}${href}`)).text();
+
+    await eventually(
+      'the session to begin',
+      async () => {
+        await page.reload();
+        const link = page.getByRole('link', { name: 'Enter the values' });
+        return (await link.count()) === 1 ? true : undefined;
+      },
+      120_000,
+    );
+    expect(Date.now()).toBeGreaterThanOrEqual(session.at);
+    await page.getByRole('link', { name: 'Enter the values' }).click();
+    const numbers = page.getByLabel('Numbers');
+    official.expectRefusal({ url: /\/values$/, status: 422 });
+    await numbers.nth(0).fill('7 11,4');
+    await numbers.nth(1).fill('25 25 24');
+    await page.getByRole('button', { name: 'Read the values back' }).click();
+    await page.getByText('“11,4” is no whole number').first().waitFor();
+    expect(await numbers.nth(1).inputValue()).toBe('25 25 24');
+    await official.expectAccessible();
+    await official.shot('draw-390-values-fault');
+    await numbers.nth(0).fill('07 11 4');
+    await page.getByRole('button', { name: 'Read the values back' }).click();
+    await page.getByRole('heading', { name: 'Read the values back' }).waitFor();
+    expect(await page.locator('.sheet-draft').textContent()).toMatch(/7\s*11\s*4/);
+    await official.expectNoSidewaysScroll();
+    await official.shot('draw-390-read-back');
+    await page.getByRole('button', { name: 'Make the draw now' }).click();
+    const cars = page.getByRole('list', { name: 'Cars in the order drawn' });
+    await cars.waitFor();
+    await official.expectAccessible();
+    await official.expectNoSidewaysScroll();
+    await official.shot('draw-390-made');
+    expect(await cars.textContent()).toMatch(/inspection opened|picked already/);
+    expect(await page.getByRole('link', { name: /nnounce/ }).count()).toBe(0);
+
+    const { page: seen } = visitor;
+    await eventually('the head that covers the result', async () => {
+      const id = /draws\/[^/]+\/([^/]+)/.exec(href ?? '')?.[1] ?? '';
+      const { end } = await (await fetch(`${publicUrl}/api/draws/corran-valley/${id}`)).json();
+      return end?.proof === null ? undefined : true;
+    });
+    await eventually('the result on the public page', async () => {
+      await visitor.open(draw);
+      return (await seen.locator('[data-draw="made"]').count()) === 1 ? true : undefined;
+    });
+    await seen.getByRole('button', { name: 'Run it again in this browser' }).click();
+    await seen.locator('[data-stage="draw-announced"]').waitFor();
+    expect(await seen.locator('[data-stage]').count()).toBe(1);
+    await seen.getByRole('button', { name: 'Next step' }).click();
+    expect(await seen.locator('[data-stage]').count()).toBe(2);
+    await seen.getByRole('button', { name: 'All steps' }).click();
+    await seen.locator('[data-conclusion="passed"]').waitFor();
+    expect(await seen.locator('[data-conclusion]').textContent()).toContain('Every step holds');
+    expect(await seen.locator('[data-outcome]:not([data-outcome="passed"])').count()).toBe(0);
+    await visitor.expectAccessible();
+    await visitor.expectNoSidewaysScroll();
+    await visitor.shot('draw-1280-rerun');
+
+    const made = await (
+      await fetch(`${publicUrl}${href?.replace('commitment.json', 'made.json')}`)
+    ).text();
+    const script = runPrintedScript(noted, made);
+    expect(script.code).toBe(0);
+    const drawn = script.says.replace('same: ', '').split(', ');
+    for (const car of drawn)
+      expect(await seen.locator('[data-draw="made"] .sheet-closed').textContent()).toContain(car);
+  });
+});
+
+test.each([390, 820, 1280])(
+  'a made draw is sound at %i px, with script and without',
+  async (width) => {
+    await journey(`public draw ${width}`, async ({ enter }) => {
+      for (const javaScript of [true, false]) {
+        const visitor = await enter({ viewport: { width, height: 1180 }, javaScript });
+        await visitor.open('/series/corran-valley/events/round-1/draw');
+        const made = visitor.page.locator('[data-draw="made"]');
+        await made.locator('summary').first().click();
+        expect(await made.locator('[data-stage="same-cars"]').textContent()).toContain('Drawn: ');
+        await visitor.expectNoSidewaysScroll();
+        if (javaScript) await visitor.expectAccessible();
+        await visitor.shot(`draw-${width}-public${javaScript ? '' : '-plain'}`);
+      }
+    });
+  },
+);

@@ -1,0 +1,214 @@
+import pg from 'pg';
+import { expect } from 'vitest';
+import type { Visitor } from '../../support/browser';
+import { readProduct } from '../../support/product';
+import type { Upload } from './files';
+import { INSPECTOR, look, type Story, WITNESS } from './story';
+
+const inspectionPage = (id: string): string => `/barn/inspections/${id}`;
+
+/** The chief names the inspector and the bay. Gives the inspection. */
+export const nameInspector = async (chief: Visitor, story: Story): Promise<string> => {
+  const { page, open } = chief;
+  await open('/barn');
+  await look(chief, 'barn');
+  await page
+    .getByRole('row', { name: new RegExp(story.className) })
+    .getByRole('link', { name: 'Name an inspector' })
+    .click();
+  const inspectors = page.getByLabel('Inspector', { exact: true });
+  const person = await inspectors.locator('option', { hasText: INSPECTOR }).getAttribute('value');
+  await inspectors.selectOption(person);
+  await page.getByLabel('Bay').fill('2');
+  await look(chief, 'assign');
+  await page.getByRole('button', { name: 'Save', exact: true }).click();
+  await page.waitForLoadState();
+  expect(await page.getByLabel('Bay').inputValue()).toBe('2');
+  return new URL(page.url()).pathname.split('/').at(-1) ?? '';
+};
+
+/** Reads what is asked before the first bolt, and opens. */
+export const openInspection = async (inspector: Visitor, story: Story): Promise<void> => {
+  const { page, open } = inspector;
+  await open('/barn');
+  await page
+    .getByRole('row', { name: new RegExp(story.className) })
+    .getByRole('link', { name: /^Open/ })
+    .click();
+  await page.getByRole('heading', { name: 'Before the first bolt' }).waitFor();
+  const words = await page.locator('main').textContent();
+  expect(words).toContain('eye protection');
+  expect(words).toContain('4.3');
+  await look(inspector, 'before-the-first-bolt');
+  await page.getByRole('button', { name: 'Open the inspection' }).click();
+  await page.waitForURL(/\/measure$/);
+};
+
+const saved = async ({ page }: Visitor): Promise<void> => {
+  await page.locator('.saved-line', { hasText: /^Sent/ }).waitFor();
+};
+
+const part = ({ page }: Visitor, name: string) =>
+  page.getByRole('navigation', { name: 'What is read' }).getByRole('button', { name }).click();
+
+/** Keys as they are tapped, then Enter; waits until the number stands where it belongs. */
+const enter = async (
+  { page }: Visitor,
+  keys: string,
+  taken: { readonly cell: string; readonly shown: string },
+): Promise<void> => {
+  const pad = page.getByRole('region', { name: 'Keypad' });
+  for (const key of keys) {
+    await pad
+      .getByRole('button', { name: key === '-' ? 'Change the sign' : key, exact: true })
+      .click();
+  }
+  await pad.getByRole('button', { name: /^Enter/ }).click();
+  await page.getByRole('button', { name: `${taken.cell}: ${taken.shown}`, exact: true }).waitFor();
+};
+
+const bore = ({ page }: Visitor, name: string) =>
+  page.locator('.only-wide').getByRole('button', { name: new RegExp(`^${name},`) });
+
+/** The checks without numbers, for the engine and for this bore. */
+const check = async (inspector: Visitor, story: Story): Promise<void> => {
+  const { page } = inspector;
+  await part(inspector, 'Checks');
+  await page.getByLabel('As found').fill(story.casting);
+  await page.getByRole('button', { name: 'Keep' }).click();
+  await page.getByRole('button', { name: 'Solid flat' }).click();
+  await page
+    .getByRole('group', { name: /bushed/ })
+    .getByRole('button', { name: 'No', exact: true })
+    .click();
+  await page.locator('[aria-pressed="true"]').nth(1).waitFor();
+  await look(inspector, 'checks');
+};
+
+/** One bore in full: checks, lifter, an oversize foot, the bore against the ring between two zeros. */
+export const measureBore = async (
+  inspector: Visitor,
+  story: Story,
+  picture: Upload,
+): Promise<void> => {
+  const { page } = inspector;
+  await bore(inspector, '3 exhaust').click();
+  await check(inspector, story);
+
+  await part(inspector, 'Lifter');
+  await enter(inspector, '8423', { cell: 'Body, upper, Along', shown: '0.8423' });
+  await enter(inspector, '8432', { cell: 'Body, upper, Across', shown: '0.8432' });
+  await page.getByRole('button', { name: 'Strike last reading' }).click();
+  await page.getByText('It stays on record, with the reason.').waitFor();
+  await page.getByRole('button', { name: 'Written wrong' }).click();
+  await page.getByRole('button', { name: 'Body, upper, Across: empty' }).waitFor();
+  await enter(inspector, '8423', { cell: 'Body, upper, Across', shown: '0.8423' });
+  await enter(inspector, '8422', { cell: 'Body, lower, Along', shown: '0.8422' });
+  await enter(inspector, '8423', { cell: 'Body, lower, Across', shown: '0.8423' });
+  await look(inspector, 'lifter');
+
+  await part(inspector, 'Foot');
+  await enter(inspector, '8452', { cell: 'Foot, Along', shown: '0.8452' });
+  await enter(inspector, '8450', { cell: 'Foot, Across', shown: '0.8450' });
+  await page.getByText('Outside', { exact: true }).waitFor();
+  await look(inspector, 'foot');
+
+  await part(inspector, 'Bore');
+  const pad = page.getByRole('region', { name: 'Keypad' });
+  await pad.getByRole('button', { name: '0', exact: true }).click();
+  await pad.getByRole('button', { name: 'Enter opening zero' }).click();
+  await enter(inspector, '-1', { cell: 'Above the gallery, Along', shown: '−0.1' });
+  await enter(inspector, '0', { cell: 'Above the gallery, Across', shown: '0.0' });
+  await saved(inspector);
+  await page.reload();
+  await page.getByRole('button', { name: 'Above the gallery, Along: −0.1', exact: true }).waitFor();
+  await part(inspector, 'Lifter');
+  for (const [cell, shown] of [
+    ['Body, upper, Along', '0.8423'],
+    ['Body, upper, Across', '0.8423'],
+    ['Body, lower, Along', '0.8422'],
+    ['Body, lower, Across', '0.8423'],
+  ] as const)
+    await page.getByRole('button', { name: `${cell}: ${shown}`, exact: true }).waitFor();
+  await part(inspector, 'Bore');
+  await enter(inspector, '1', { cell: 'Below the gallery, Along', shown: '+0.1' });
+  await enter(inspector, '2', { cell: 'Below the gallery, Across', shown: '+0.2' });
+  await page.getByRole('button', { name: 'Take the closing zero' }).click();
+  await page.getByText('Closing zero', { exact: true }).waitFor();
+  await pad.getByRole('button', { name: '1', exact: true }).click();
+  await pad.getByRole('button', { name: /^Enter/ }).click();
+  await page.getByRole('img', { name: /closing zero 0\.1/ }).waitFor();
+  await look(inspector, 'bore');
+
+  await page.getByRole('button', { name: 'Photograph, set up, more' }).click();
+  await page.getByRole('button', { name: 'Photograph this bore' }).click();
+  await look(inspector, 'bore-photograph');
+  await page.getByLabel('Photograph of 3 exhaust').setInputFiles(picture);
+  await page.getByRole('button', { name: 'Photograph, set up, more' }).waitFor();
+  await saved(inspector);
+};
+
+/** Sets the clock of this person's sign-ins back, as if they had begun earlier in the evening. */
+const ageSignIns = async (email: string, minutes: number): Promise<void> => {
+  const client = new pg.Client({ connectionString: readProduct().superuserUrl });
+  await client.connect();
+  try {
+    await client.query(
+      `update public.session set authenticated_at = authenticated_at - make_interval(mins => $2)
+       where person_id = (select id from public.person where email = $1)`,
+      [email, minutes],
+    );
+  } finally {
+    await client.end();
+  }
+};
+
+/** The witness signs; the inspector signs in once more, and signs. */
+export const signReport = async (inspector: Visitor, inspectionId: string): Promise<void> => {
+  const { page, open } = inspector;
+  await ageSignIns('oona.brannick@example.org', 20);
+  await open(inspectionPage(inspectionId));
+  await page.getByLabel('Name of the competitor’s representative').fill(WITNESS);
+  await page.getByRole('button', { name: 'I have seen the findings: sign' }).click();
+  await page.getByText(`${WITNESS} has seen the findings and signed`).waitFor();
+  expect(await page.getByRole('button', { name: 'Sign the report and close' }).count()).toBe(0);
+  await look(inspector, 'findings');
+  await signAgain(inspector);
+  await page.getByRole('button', { name: 'Sign the report and close' }).click();
+  await page.getByText(/^Revision 1, signed/).waitFor();
+  await look(inspector, 'signed');
+};
+
+const signAgain = async ({ page }: Visitor): Promise<void> => {
+  await page.getByRole('link', { name: 'Sign in once more' }).click();
+  await page.getByRole('button', { name: INSPECTOR }).click();
+  await page.waitForURL(/\/barn\/inspections\//);
+};
+
+/** Opens a correction with its reason, reads the foot once more, and signs revision 2. */
+export const correctReport = async (
+  inspector: Visitor,
+  inspectionId: string,
+  reason: string,
+): Promise<void> => {
+  const { page, open } = inspector;
+  await open(inspectionPage(inspectionId));
+  await page.getByText('Correct this report').click();
+  await page.getByLabel('Why it is corrected').fill(reason);
+  await page.getByRole('button', { name: 'Open a correction' }).click();
+  await page.getByRole('link', { name: 'Measure' }).click();
+  await page.waitForURL(/\/measure$/);
+  await bore(inspector, '3 exhaust').click();
+  await part(inspector, 'Foot');
+  await page.getByRole('button', { name: 'Foot, Across: 0.8450', exact: true }).click();
+  await enter(inspector, '8451', { cell: 'Foot, Across', shown: '0.8451' });
+  await saved(inspector);
+  await open(inspectionPage(inspectionId));
+  await look(inspector, 'correcting');
+  await page.getByRole('button', { name: 'Sign the correction' }).click();
+  await page.getByText(/^Revision 2, signed/).waitFor();
+  const words = await page.locator('main').textContent();
+  expect(words).toContain('Revision 1, signed');
+  expect(words).toContain(reason);
+  await look(inspector, 'corrected');
+};
