@@ -238,7 +238,7 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
         <TurningBoreMap
           layout={sheet.layout}
           bores={states.bores}
-          unit={states.unit}
+          {...(states.unit === '' ? {} : { unit: states.unit })}
           unitAloud={states.unit === '0.001 in' ? 'thousandths' : states.unit}
           current={cursor.bore}
           onSelect={select}

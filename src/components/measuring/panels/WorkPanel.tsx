@@ -114,7 +114,7 @@ export const WorkPanel = (props: WorkPanelProps) => {
   );
   if (part === undefined || scale === undefined)
     return (
-      <div className="work gap-3">
+      <div className="work gap-3 justify-start">
         {switcher}
         <ChecksPanel {...props} />
         <Troubles {...props} />
@@ -163,7 +163,7 @@ export const WorkPanel = (props: WorkPanelProps) => {
     }),
   }));
   return (
-    <div className="work gap-3">
+    <div className="work gap-3 justify-start">
       {switcher}
       {clause !== undefined && (
         <BoreHeader

@@ -50,7 +50,8 @@ const Numbers = ({ clause, finding }: { readonly clause: Clause; readonly findin
 
 const Others = ({ finding }: { readonly finding: Finding }) => {
   const told = finding.perPosition.filter(
-    (result) => result.value === undefined && result.state !== 'not-measured',
+    ({ value, state, sentence }) =>
+      value === undefined && state !== 'not-measured' && sentence !== finding.sentence,
   );
   const unusual = told.filter((result) => BREACHING.includes(result.state));
   const shown = unusual.length > 0 ? unusual : told.slice(0, 1);
