@@ -74,14 +74,12 @@ export const valuesRequest = z.strictObject({
         source: z.enum(['announced', 'substitute', 'missing'], 'Say which value this is.'),
         numbers: z
           .array(
-            z
-              .string()
-              .check(
-                z.refine(
-                  isValueNumber,
-                  'Whole numbers only, without leading zeros: 21.417 s is 21417.',
-                ),
-              ),
+            z.string().check(
+              z.refine(isValueNumber, {
+                error: ({ input }) =>
+                  `“${input}” is no whole number. Put spaces between numbers; 21.417 s is 21417.`,
+              }),
+            ),
           )
           .check(z.maxLength(200, 'At most 200 numbers.')),
       }),

@@ -44,13 +44,13 @@ export const StageList = ({
         </h4>
         <dl className="mt-2 ml-10">
           {stage.facts.map(({ name, value }) => (
-            <div key={name} className="mt-1">
+            <div key={name} className="mt-1 md:grid md:grid-cols-[13rem_minmax(0,1fr)] md:gap-5">
               <dt className="note">{name}</dt>
               <dd className={/^[0-9a-f./]{16,}$/.test(value) ? 'num break-all' : ''}>{value}</dd>
             </div>
           ))}
           {stage.doesNotProve !== undefined && (
-            <div className="mt-1">
+            <div className="mt-1 md:grid md:grid-cols-[13rem_minmax(0,1fr)] md:gap-5">
               <dt className="note">It does not prove</dt>
               <dd>{stage.doesNotProve}</dd>
             </div>
