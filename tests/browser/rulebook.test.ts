@@ -202,6 +202,7 @@ test('an official writes the demo class from empty, publishes it and amends it a
     await official.expectAccessible();
     await page.getByRole('link', { name: 'Check before publishing' }).click();
     await page.getByRole('heading', { name: 'Tried on accepted engines' }).waitFor();
+    await page.getByRole('heading', { name: 'Tried on past findings' }).waitFor();
     await page.getByRole('button', { name: `Publish this bulletin for ${name}` }).click();
     await page.getByRole('rowheader', { name: 'Bulletin 1' }).waitFor();
     const address = await page

@@ -19,7 +19,26 @@ export interface BulletinChecked {
   readonly affected: readonly AcceptedEngine[];
 }
 
-/** A bulletin held against the rules it amends, as if published now; nothing without an edition to amend. */
+export type Amended = Pick<BulletinChecked, 'before' | 'countsFrom'>;
+
+/** The rules that a bulletin amends if published now; nothing without an edition to amend. */
+export const findAmended = async (
+  em: EntityManager,
+  seriesId: string,
+  classId: string,
+  content: Pick<BulletinContent, 'effective'>,
+  at: Date,
+): Promise<Amended | undefined> => {
+  const published = await readPublications(em, seriesId, classId);
+  const publishedAt = at.toISOString();
+  const { effective } = content;
+  const from = findEffectiveAt({ effective, publishedAt }, published.eventStartsAt);
+  const countsFrom = from === undefined ? undefined : new Date(from).toISOString();
+  const before = findRulesInForce({ ...published, at: countsFrom ?? publishedAt });
+  return before && { before, countsFrom };
+};
+
+/** A bulletin held against the rules it amends and the accepted engines, as if published now. */
 export const checkBulletin = async (
   em: EntityManager,
   seriesId: string,
@@ -27,21 +46,14 @@ export const checkBulletin = async (
   content: BulletinContent,
   at: Date,
 ): Promise<BulletinChecked | undefined> => {
-  const published = await readPublications(em, seriesId, classId);
-  const publishedAt = at.toISOString();
-  const { effective } = content;
-  const from = findEffectiveAt({ effective, publishedAt }, published.eventStartsAt);
-  const before = findRulesInForce({
-    ...published,
-    at: from === undefined ? publishedAt : new Date(from).toISOString(),
-  });
-  if (before === undefined) return undefined;
-  const countsFrom = from === undefined ? undefined : new Date(from).toISOString();
-  const faults = findBulletinFaults(content, before, publishedAt);
-  if (faults.length > 0) return { before, countsFrom, faults, trial: undefined, affected: [] };
+  const amended = await findAmended(em, seriesId, classId, content, at);
+  if (amended === undefined) return undefined;
+  const { before } = amended;
+  const faults = findBulletinFaults(content, before, at.toISOString());
+  if (faults.length > 0) return { ...amended, faults, trial: undefined, affected: [] };
   const engines = await readAcceptedEngines(em, seriesId, [classId]);
   const after = { ...before, clauses: withChanges(before.clauses, content.changes) };
   const trial = tryRules(after, engines, before);
   const failing = new Set(trial.failed.map((one) => one.id));
-  return { before, countsFrom, faults, trial, affected: engines.filter((e) => failing.has(e.id)) };
+  return { ...amended, faults, trial, affected: engines.filter((e) => failing.has(e.id)) };
 };

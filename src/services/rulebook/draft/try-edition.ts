@@ -4,15 +4,19 @@ import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import { type Trial, tryRules } from '@/domain/rulebook/trial/try-rules';
 import type { Ports } from '../../ports';
 import { readAcceptedEngines } from '../bulletin/past-cases';
+import { readPastFindings } from '../bulletin/past-findings';
 import { findRules } from '../find-rules';
 
 export interface EditionTried {
   /** The rules it follows: of this class, or of the class of the same name in an earlier season. */
   readonly before: RulesInForce | undefined;
+  /** On accepted paperwork. */
   readonly trial: Trial;
+  /** On what was found in closed inspections. */
+  readonly found: Trial;
 }
 
-/** A sound draft held against the accepted engines of this class in this and earlier seasons. */
+/** A sound draft held against accepted paperwork and findings of this class, in this and earlier seasons. */
 export const tryEdition = async (
   deps: Pick<Ports, 'db' | 'clock'>,
   actor: Actor,
@@ -38,11 +42,13 @@ export const tryEdition = async (
   for (const { id } of classes) {
     before ??= (await findRules(deps.db, seriesId, id, now))?.rules;
   }
-  const engines = await readAcceptedEngines(
-    deps.db,
-    seriesId,
-    classes.map((one) => one.id),
-  );
+  const ids = classes.map((one) => one.id);
+  const engines = await readAcceptedEngines(deps.db, seriesId, ids);
+  const findings = await readPastFindings(deps.db, seriesId, ids);
   const after = { clauses: content.clauses, waivers: before?.waivers ?? [] };
-  return { before, trial: tryRules(after, engines, before) };
+  return {
+    before,
+    trial: tryRules(after, engines, before),
+    found: tryRules(after, findings, before),
+  };
 };
