@@ -31,7 +31,7 @@ const check = async (target: string, pinned: string, server?: string): Promise<R
   }
   const url = new URL(target);
   const ask = askServer(url.origin);
-  const [, slug, number] = /^\/series\/([^/]+)\/verdicts\/([^/]+)\/?$/.exec(url.pathname) ?? [];
+  const [, slug, number] = /^\/series\/([^/]+)\/verdicts\/([^/.]+)\/?$/.exec(url.pathname) ?? [];
   if (slug !== undefined && number !== undefined) {
     return checkNumber(decodeURIComponent(slug), decodeURIComponent(number), pinned, ask);
   }

@@ -113,6 +113,7 @@ export const ROUTES: Readonly<Record<string, RouteAccess>> = {
   },
   '/office/rulebooks/[class]/start': { access: 'permission', permission: 'rulebook.write' },
   '/office/rulebooks/[class]/waive': { access: 'permission', permission: 'rulebook.publish' },
+  '/office/record': { access: 'own' },
   '/office/series/[slug]': { access: 'permission', permission: 'series.administer' },
   '/office/series/new': { access: 'own' },
   '/office/verdicts': { access: 'permission', permission: 'verdict.decide' },
