@@ -8,6 +8,7 @@ import { SelectField } from './fields/SelectField';
 import { ReadField, TextField } from './fields/TextField';
 import { isKind, KIND_WORDS, newRequirement } from './requirement/new-requirement';
 import { RequirementForm } from './requirement/RequirementForm';
+import { unsaidNumbers } from './unsaid-numbers';
 
 const FORCES = [
   { value: 'mandatory', label: 'Mandatory: a breach can be decided on it' },
@@ -45,6 +46,7 @@ export const ClauseForm = ({ clause, faults, penaltyRows, onChange, ...rest }: C
   // What was entered for another kind comes back when that kind is chosen again.
   const kinds = useRef(new Map<string, Requirement>());
   const { requirement } = clause;
+  const unsaid = unsaidNumbers(clause);
 
   const chooseKind = (kind: string) => {
     if (requirement !== undefined) kinds.current.set(requirement.kind, requirement);
@@ -92,6 +94,12 @@ export const ClauseForm = ({ clause, faults, penaltyRows, onChange, ...rest }: C
         value={clause.words}
         onChange={(words) => onChange({ ...clause, words })}
       />
+      {unsaid.length > 0 && (
+        <p className="note" role="status">
+          The words do not say {unsaid.join(' and ')}, which the limit states. Do they still say the
+          same?
+        </p>
+      )}
       <SelectField
         at="/kind"
         label="Checked by"

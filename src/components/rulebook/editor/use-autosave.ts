@@ -1,6 +1,6 @@
 import { useMutation } from '@tanstack/react-query';
 import { useCallback, useEffect, useRef, useState } from 'react';
-import { newAct } from './new-act';
+import { uuidV7 } from '@/components/measuring/queue/uuid-v7';
 import { type DraftSent, type NewerDraft, putDraft, type Saved } from './put-draft';
 
 /** A draft as it stands on the screen. */
@@ -62,7 +62,7 @@ export const useAutosave = (
   useEffect(() => {
     if (draft === kept.current || isPending || state.kind === 'newer') return undefined;
     const timer = setTimeout(() => {
-      const act = newAct();
+      const act = uuidV7();
       setState({ kind: 'changed' });
       mutate({
         version: version.current,
