@@ -1,9 +1,10 @@
 import { readFileSync } from 'node:fs';
 import { openDatabase } from '@/adapters/database/orm';
 import { openObjects } from '@/adapters/objects/s3';
-import { readConfig } from '@/config';
+
 import { auditLedger } from '@/services/ledger/audit/audit-ledger';
 import { readArguments, run } from './arguments';
+import { openInstallation } from './environment';
 
 const usage = `usage: npm run audit -- [signed head…] [--key <verifier key>]
   Holds everything in the database and the object store against the ledgers, with the environment of
@@ -14,7 +15,7 @@ const usage = `usage: npm run audit -- [signed head…] [--key <verifier key>]
 await run(usage, async () => {
   const { files, flags } = readArguments(['key']);
   const heads = files.map((file) => readFileSync(file, 'utf8'));
-  const config = readConfig();
+  const { config } = openInstallation();
   const orm = await openDatabase(config.databaseUrl, 2);
   const objects = openObjects(config.objects);
   try {
