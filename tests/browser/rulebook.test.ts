@@ -13,9 +13,13 @@ const sent = (page: Page) => page.locator('.saved-line', { hasText: /^Sent/ }).w
 const ready = (page: Page) =>
   page.locator('astro-island:not([ssr])').first().waitFor({ state: 'attached' });
 
+/** A page that is left while its type still loads would count as a failed request. */
+const settled = (page: Page) => page.waitForLoadState('networkidle');
+
 /** Adds a class to the demo series and opens its rulebook. */
 const openNewClass = async ({ page, open }: Visitor, name: string): Promise<string> => {
   await open('/office');
+  await settled(page);
   await page.getByRole('link', { name: 'Seasons and classes' }).first().click();
   await page
     .getByLabel(/^New class in season/)
@@ -24,6 +28,7 @@ const openNewClass = async ({ page, open }: Visitor, name: string): Promise<stri
   await page.getByRole('button', { name: 'Add the class' }).first().click();
   await page.getByRole('link', { name, exact: true }).click();
   await page.waitForURL(/\/office\/rulebooks\/[0-9a-f-]+$/);
+  await settled(page);
   return new URL(page.url()).pathname;
 };
 
@@ -32,6 +37,7 @@ const startFrom = async ({ page, open }: Visitor, office: string, choice: string
   await page.getByLabel(choice).check();
   await page.getByRole('button', { name: 'Start writing' }).click();
   await page.waitForURL(/\/draft\//);
+  await settled(page);
   await ready(page);
 };
 
@@ -166,7 +172,9 @@ test('an official writes the demo class from empty, publishes it and amends it a
     await official.expectAccessible();
     await official.expectNoSidewaysScroll();
     await sent(page);
+    await settled(page);
     await page.getByRole('link', { name: 'Check before publishing' }).click();
+    await settled(page);
     await page.getByRole('heading', { name: 'Still ambiguous: 1' }).waitFor();
     expect(await page.getByRole('button', { name: /^Publish/ }).count()).toBe(0);
     await page.getByRole('link', { name: 'Back to writing' }).click();
@@ -177,7 +185,9 @@ test('an official writes the demo class from empty, publishes it and amends it a
     await sent(page);
     await official.shot('rulebook-editor');
 
+    await settled(page);
     await page.getByRole('link', { name: 'Check before publishing' }).click();
+    await settled(page);
     await official.expectAccessible();
     await page.getByRole('button', { name: `Publish this edition for ${name}` }).click();
     await page.waitForURL(new RegExp(`${office}$`));
@@ -200,7 +210,9 @@ test('an official writes the demo class from empty, publishes it and amends it a
     await page.getByRole('heading', { name: 'Nothing is ambiguous' }).waitFor();
     await sent(page);
     await official.expectAccessible();
+    await settled(page);
     await page.getByRole('link', { name: 'Check before publishing' }).click();
+    await settled(page);
     await page.getByRole('heading', { name: 'Tried on accepted engines' }).waitFor();
     await page.getByRole('heading', { name: 'Tried on past findings' }).waitFor();
     await page.getByRole('button', { name: `Publish this bulletin for ${name}` }).click();
@@ -210,10 +222,9 @@ test('an official writes the demo class from empty, publishes it and amends it a
       .getAttribute('href');
 
     const reader = await enter({ viewport: { width: 390, height: 800 } });
-    // A page that is left while its type still loads would count as a failed request.
     const read = async (path: string) => {
       await reader.open(`${address}${path}`);
-      await reader.page.waitForLoadState('networkidle');
+      await settled(reader.page);
     };
     const before = new Date(`${day}T00:00:00Z`);
     before.setUTCDate(before.getUTCDate() - 1);
