@@ -6,6 +6,7 @@ import { addClass } from '@/services/series/add-class';
 import { openSeason } from '@/services/series/open-season';
 import { OFFICIAL } from './people';
 import { done, type Stage } from './stage';
+import { writeBulletins } from './write-bulletins';
 
 export interface DemoClasses {
   readonly seasonId: string;
@@ -92,9 +93,8 @@ export const writeRulebooks = async (stage: Stage, seriesId: string): Promise<De
     );
     return classId;
   };
-  return {
-    seasonId: season.seasonId,
-    streetEight: await write('Street Eight', TAPPET_RULE_SET.clauses),
-    modifiedFour: await write('Modified Four', TAPPET_RULE_SET.clauses.map(forFour)),
-  };
+  const streetEight = await write('Street Eight', TAPPET_RULE_SET.clauses);
+  const modifiedFour = await write('Modified Four', TAPPET_RULE_SET.clauses.map(forFour));
+  await writeBulletins(stage, seriesId, streetEight);
+  return { seasonId: season.seasonId, streetEight, modifiedFour };
 };

@@ -135,7 +135,7 @@ export const ROUTES: Readonly<Record<string, RouteAccess>> = {
   '/series/[slug]/ledger/feed.xml': open,
   '/series/[slug]/rulebooks': open,
   '/series/[slug]/rulebooks/[class]': open,
-  '/series/[slug]/rulebooks/[class]/ask': { access: 'own' },
+  '/series/[slug]/rulebooks/[class]/ask': { access: 'permission', permission: 'paperwork.hand-in' },
   '/series/[slug]/rulebooks/[class]/bulletins/[number]': open,
   '/series/[slug]/rulebooks/[class]/changes': open,
   '/series/[slug]/rulebooks/[class]/clauses.csv': open,

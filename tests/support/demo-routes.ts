@@ -21,6 +21,9 @@ export async function demoParameters(client: pg.Client): Promise<ReadonlyMap<str
   );
   const event = await one("select id from public.event where slug = 'round-1'");
   const raceClass = await one("select id from public.class where slug = 'street-eight'");
+  const notice = await one('select number from record.verdict where inspection_id = $1', [
+    inspection,
+  ]);
   const all: Record<string, string> = {
     '/api/paperwork/[paperwork]': paperwork,
     '/paddock/paperwork/[id]': paperwork,
@@ -33,6 +36,11 @@ export async function demoParameters(client: pg.Client): Promise<ReadonlyMap<str
       [paperwork],
     ),
     '/series/[slug]/rulebooks/[class]': 'street-eight',
+    '/series/[slug]/events/[event]': 'round-1',
+    '/series/[slug]/verdicts/[number]': notice,
+    '/paddock/verdicts/[number]': notice,
+    '/api/verdicts/[series]/[number]': notice,
+    '/api/ledger/[series]/notices/[number]': notice,
     '[width]': '160',
     '[sheet]': 'lifter-sheet',
     '[series]': seriesId,
