@@ -22,10 +22,10 @@ export const StepList = ({ steps }: { readonly steps: readonly Step[] }) => (
         <p className="status">
           <Mark status={MARKS[step.outcome]} />
           <span>
-            <strong>{WORDS[step.outcome]}:</strong> {step.checked}
+            <strong>{WORDS[step.outcome]}</strong> {step.checked}
           </span>
         </p>
-        <dl className="break-words">
+        <dl className="gap-x-5 break-words md:grid md:grid-cols-[9rem_minmax(0,1fr)]">
           <dt>Found</dt>
           <dd className="break-all">{step.found}</dd>
           <dt>Proves</dt>

@@ -9,10 +9,25 @@ import {
 } from '@/domain/verdict/notice-words';
 import type { NewMail } from '../mail/queue-mail';
 
+/** What makes the reader of the mail a witness: kept elsewhere, it cannot be changed here. */
+export interface Receipt {
+  readonly line: number;
+  /** Of the notice's document, hexadecimal. */
+  readonly sha256: string;
+  /** The signed note, byte for byte. */
+  readonly head: string;
+}
+
+const receiptWords = ({ line, sha256, head }: Receipt): readonly string[] => [
+  `Receipt: line ${line} of the series’ ledger holds this notice, SHA-256 ${sha256}. Keep this message: with the signed head below anybody can show later that nothing before it was changed.`,
+  head.trimEnd(),
+];
+
 /** What the competitor is told, with the PDF attached. */
 export const noticeMail = (
   notice: NoticeDocument,
   objectKey: string,
+  receipt: Receipt | undefined,
 ): Omit<NewMail, 'seriesId' | 'personId' | 'address'> => {
   const penalty = penaltySentence(notice);
   return {
@@ -24,6 +39,7 @@ export const noticeMail = (
       notice.reasons,
       `${provisionalWords(notice)}. An appeal is lodged in writing by ${appealUntilWords(notice)}, with the bond of ${moneyWords(notice.appeal.bond)}.`,
       'The notice is attached. It decides on the rules of a class and certifies no engine as safe.',
+      ...(receipt === undefined ? [] : receiptWords(receipt)),
     ],
     link: {
       label: 'Read the notice',

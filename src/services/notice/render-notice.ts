@@ -1,5 +1,5 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import { sha256, toHex } from '@/domain/ledger/bytes';
+import { sha256, toHex, utf8 } from '@/domain/ledger/bytes';
 import { ok } from '@/domain/result';
 import type { NoticeDocument } from '@/domain/verdict/notice';
 import { performAct } from '../act/perform-act';
@@ -61,6 +61,11 @@ export const renderNotice = async (
     attachment: noticeAttachment(row.notice, line, proven),
   });
   const hash = sha256(pdf);
+  const receipt = proven && {
+    line: line.index,
+    sha256: toHex(sha256(utf8(row.notice))),
+    head: proven.proof.checkpoint,
+  };
   const objectKey = `notices/${toHex(hash)}.pdf`;
   await deps.objects.write(objectKey, pdf, 'application/pdf');
   const id = actIdFor('render-notice', verdictId);
@@ -80,7 +85,7 @@ export const renderNotice = async (
       ]);
       if (row.email !== null) {
         const to = { seriesId, personId: row.personId, address: row.email };
-        queueMail(deps, em, { send, at }, { ...to, ...noticeMail(notice, objectKey) });
+        queueMail(deps, em, { send, at }, { ...to, ...noticeMail(notice, objectKey, receipt) });
       }
       write({
         seriesId,

@@ -4,6 +4,8 @@ import { noticePrinter } from '@/adapters/pdf/notice-printer';
 import { checkNotice } from '@/components/verify/check-notice';
 import { readFile } from '@/components/verify/read-file';
 import { checkBytes, checkNumber } from '@/components/verify/run-check';
+import { sha256, toHex, utf8 } from '@/domain/ledger/bytes';
+import { openCheckpoint } from '@/domain/ledger/checkpoint';
 import { formatVerifierKey } from '@/domain/ledger/note/verifier-key';
 import { NOTICE_FILE_NAME } from '@/domain/ledger/verify/notice-file';
 import { findNoticeFile, findPdfFile } from '@/services/ledger/proof/find-notice-file';
@@ -189,6 +191,24 @@ describe('a notice’s PDF', () => {
     expect((await checkBytes(later, first, ask)).outcome).toBe('passed');
     const second = formatVerifierKey(world.keys.signer(v.seriesId).key);
     expect((await checkBytes(later, second, ask)).outcome).toBe('passed');
+  });
+
+  it('is mailed with a receipt: the line, the notice’s hash and the signed head, byte for byte', async () => {
+    const [mail] = await world
+      .ports()
+      .db.execute<{ content: { paragraphs: string[] } }[]>(
+        "select content from public.mail where kind = 'verdict-published' order by created_at limit 1",
+      );
+    const read = await readFile(pdf);
+    if (read.kind !== 'notice') throw new Error('no notice');
+    const paragraphs = mail?.content.paragraphs ?? [];
+    const line = JSON.parse(read.file.proof.line) as { index: string };
+    const hash = toHex(sha256(utf8(read.file.document)));
+    expect(paragraphs.at(-2)).toContain(`line ${line.index} of`);
+    expect(paragraphs.at(-2)).toContain(hash);
+    const { key: first } = signerFrom('first', world.keys.signer(v.seriesId).key.name);
+    expect(openCheckpoint(`${paragraphs.at(-1)}\n`, [first]).ok).toBe(true);
+    expect(`${paragraphs.at(-1)}\n`).toBe(read.file.proof.checkpoint);
   });
 
   it('is asked of the series whose line it carries, never of the name it gives', async () => {
