@@ -5,6 +5,7 @@ import { saveGauge } from '@/services/gauge/save-gauge';
 import type { DemoGauges } from './measure';
 import { CHIEF, COMPETITORS, type DemoCompetitor, OFFICIAL } from './people';
 import { done, type Stage, ZONE } from './stage';
+import { writeAnnouncement, writeDrawMade } from './write-draws';
 import type { DemoClasses } from './write-rulebooks';
 
 const HOUR = 3_600_000;
@@ -153,12 +154,17 @@ export const writeEvents = async (
     startsAt: stage.lastEvent,
     positions: true,
   });
-  await enter(stage, seriesId, classes, {
+  const next = await enter(stage, seriesId, classes, {
     slug: 'round-2',
     startsAt: stage.nextEvent,
     positions: false,
   });
+  const drawn = { seriesId, eventId, classId: classes.modifiedFour };
+  const drawId = await writeAnnouncement(stage, drawn, stage.lastEvent);
+  const toCome = { seriesId, eventId: next.eventId, classId: classes.streetEight };
+  await writeAnnouncement(stage, toCome, stage.nextEvent);
   stage.clock.set(new Date(stage.lastEvent.getTime() + 3 * HOUR));
+  await writeDrawMade(stage, seriesId, drawId);
   const picked = entries.filter(({ competitor }) =>
     ['12J', '408', '88', '7', '31'].includes(competitor.carNumber),
   );

@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto';
 import { expect, test } from 'vitest';
 import { journey, type Visitor } from '../support/browser';
 import { runPrintedScript } from '../support/draw';
@@ -8,6 +9,12 @@ const phone = { width: 390, height: 844 };
 const OFFICIAL = 'Ilse Törnkvist';
 const CLASS = 'Street Eight';
 const { publicUrl } = readProduct();
+
+/** The sections of a class on a public page of draws, by where each draw stands. */
+const drawOf = ({ page }: Visitor, state: 'announced' | 'made' | 'void', raceClass = CLASS) =>
+  page
+    .locator(`[data-draw="${state}"]`)
+    .filter({ has: page.getByRole('heading', { name: raceClass, exact: true }) });
 
 /** Local time at the track, as the form writes it, of the next whole minute that is still to come. */
 const nextMinute = (zone: string): { readonly written: string; readonly at: number } => {
@@ -72,10 +79,10 @@ test('a draw is announced and declared void on a phone, and everybody reads why'
 
     const visitor = await enter();
     await visitor.open('/series/corran-valley/events/round-2/draw');
-    expect(await visitor.page.locator('[data-draw="void"]').textContent()).toContain(
+    expect(await drawOf(visitor, 'void', 'Modified Four').textContent()).toContain(
       'The meeting was moved to another day.',
     );
-    expect(await visitor.page.locator('[data-draw="announced"]').textContent()).toContain(
+    expect(await drawOf(visitor, 'announced', 'Modified Four').textContent()).toContain(
       'This draw follows one that was declared void',
     );
     await visitor.expectAccessible();
@@ -95,7 +102,7 @@ test('a draw at a hand-scored track: announced, made once, checked by a stranger
     const visitor = await enter({ viewport: { width: 1280, height: 900 } });
     const draw = '/series/corran-valley/events/round-1/draw';
     await visitor.open(draw);
-    const announced = visitor.page.locator('[data-draw="announced"]');
+    const announced = drawOf(visitor, 'announced');
     expect(await announced.textContent()).toContain('Two dice');
     await visitor.expectAccessible();
     await visitor.shot('draw-1280-announced');
@@ -139,7 +146,7 @@ test('a draw at a hand-scored track: announced, made once, checked by a stranger
     expect(await cars.textContent()).toMatch(/inspection opened|picked already/);
     expect(await page.getByRole('link', { name: /nnounce/ }).count()).toBe(0);
 
-    const { page: seen } = visitor;
+    const result = drawOf(visitor, 'made');
     await eventually('the head that covers the result', async () => {
       const id = /draws\/[^/]+\/([^/]+)/.exec(href ?? '')?.[1] ?? '';
       const { end } = await (await fetch(`${publicUrl}/api/draws/corran-valley/${id}`)).json();
@@ -147,17 +154,28 @@ test('a draw at a hand-scored track: announced, made once, checked by a stranger
     });
     await eventually('the result on the public page', async () => {
       await visitor.open(draw);
-      return (await seen.locator('[data-draw="made"]').count()) === 1 ? true : undefined;
+      return (await drawOf(visitor, 'made').count()) === 1 ? true : undefined;
     });
-    await seen.getByRole('button', { name: 'Run it again in this browser' }).click();
-    await seen.locator('[data-stage="draw-announced"]').waitFor();
-    expect(await seen.locator('[data-stage]').count()).toBe(1);
-    await seen.getByRole('button', { name: 'Next step' }).click();
-    expect(await seen.locator('[data-stage]').count()).toBe(2);
-    await seen.getByRole('button', { name: 'All steps' }).click();
-    await seen.locator('[data-conclusion="passed"]').waitFor();
-    expect(await seen.locator('[data-conclusion]').textContent()).toContain('Every step holds');
-    expect(await seen.locator('[data-outcome]:not([data-outcome="passed"])').count()).toBe(0);
+    await result.getByRole('button', { name: 'Run it again in this browser' }).click();
+    await result.getByRole('button', { name: 'Next step' }).waitFor();
+    const steps = result.locator('[data-stage]');
+    expect(await steps.count()).toBe(1);
+    await result.getByRole('button', { name: 'Next step' }).click();
+    expect(await steps.count()).toBe(2);
+    await result.getByRole('button', { name: 'All steps' }).click();
+    await result.locator('[data-conclusion="passed"]').waitFor();
+    expect(await result.locator('[data-conclusion]').textContent()).toContain('Every step holds');
+    expect(await steps.count()).toBeGreaterThan(15);
+    expect(await result.locator('[data-outcome]:not([data-outcome="passed"])').count()).toBe(0);
+    const noted8 = createHash('sha256').update(noted).digest('hex').slice(0, 8);
+    await result.getByLabel('Did you note the announcement').fill(noted8.toUpperCase());
+    await result.getByRole('button', { name: 'Compare' }).click();
+    await result.getByText('It is the same announcement.').waitFor();
+    await result
+      .getByLabel('Did you note the announcement')
+      .fill(`${noted8.startsWith('0') ? '1' : '0'}${noted8.slice(1)}`);
+    await result.getByRole('button', { name: 'Compare' }).click();
+    await result.getByText('It is not the announcement shown here.').waitFor();
     await visitor.expectAccessible();
     await visitor.expectNoSidewaysScroll();
     await visitor.shot('draw-1280-rerun');
@@ -169,7 +187,7 @@ test('a draw at a hand-scored track: announced, made once, checked by a stranger
     expect(script.code).toBe(0);
     const drawn = script.says.replace('same: ', '').split(', ');
     for (const car of drawn)
-      expect(await seen.locator('[data-draw="made"] .sheet-closed').textContent()).toContain(car);
+      expect(await result.locator('.sheet-closed').textContent()).toContain(car);
   });
 });
 
@@ -180,7 +198,7 @@ test.each([390, 820, 1280])(
       for (const javaScript of [true, false]) {
         const visitor = await enter({ viewport: { width, height: 1180 }, javaScript });
         await visitor.open('/series/corran-valley/events/round-1/draw');
-        const made = visitor.page.locator('[data-draw="made"]');
+        const made = drawOf(visitor, 'made');
         await made.locator('summary').first().click();
         expect(await made.locator('[data-stage="same-cars"]').textContent()).toContain('Drawn: ');
         await visitor.expectNoSidewaysScroll();
