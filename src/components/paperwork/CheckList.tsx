@@ -1,4 +1,8 @@
+import { remediesInClass } from '@/domain/inspection/remedies-in-class';
 import type { ClauseResult, PositionResult, State } from '@/domain/rulebook/clause-result';
+import type { Facts } from '@/domain/rulebook/evaluate/facts';
+import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
+import { Remedies } from '../finding/Remedies';
 import { Mark } from '../look/Mark';
 import { markOfState, wordOfState } from '../look/status';
 
@@ -9,32 +13,56 @@ const named = (result: ClauseResult): readonly PositionResult[] =>
     ? []
     : result.perPosition.filter((row) => WORTH_NAMING.includes(row.state));
 
+interface CheckListProps {
+  readonly results: readonly ClauseResult[];
+  readonly rules: Pick<RulesInForce, 'clauses'>;
+  /** What is declared so far. */
+  readonly facts: Pick<Facts, 'numbers'>;
+}
+
 /** Every clause that can be held against what is declared, with its mark, its word and its cautions. */
-export const CheckList = ({ results }: { readonly results: readonly ClauseResult[] }) => (
-  <ul>
-    {results.map((result) => (
-      <li className="flex gap-3 border-b border-hair py-3" key={result.clause}>
-        <Mark status={markOfState(result.state)} title={wordOfState(result.state)} />
-        <div className="min-w-0 flex-1">
-          <strong className="num">{result.clause}</strong> {result.heading}
-          {result.advisory && ' (advisory)'}: {result.sentence}
-          {result.limit !== undefined && result.perPosition.length > 1 && (
-            <span className="text-ink-2"> {result.limit}.</span>
-          )}
-          {named(result).length > 0 && (
-            <ul>
-              {named(result).map((row) => (
-                <li key={row.position}>{row.sentence}</li>
+export const CheckList = ({ results, rules, facts }: CheckListProps) => (
+  <>
+    <details>
+      <summary>Values as declared, without uncertainty</summary>
+      <p>
+        A declared value does not say by which gauge it was measured, so no U can be worked out for
+        it here. What an inspector measures has one, and can fall on the other side of a near limit.
+      </p>
+    </details>
+    <ul>
+      {results.map((result) => (
+        <li className="flex gap-3 border-b border-hair py-3" key={result.clause}>
+          <Mark status={markOfState(result.state)} title={wordOfState(result.state)} />
+          <div className="min-w-0 flex-1">
+            <strong className="num">{result.clause}</strong> {result.heading}
+            {result.advisory && ' (advisory)'}: {result.sentence}
+            {result.limit !== undefined && result.perPosition.length > 1 && (
+              <span className="text-ink-2"> {result.limit}.</span>
+            )}
+            {named(result).length > 0 && (
+              <ul>
+                {named(result).map((row) => (
+                  <li key={row.position}>{row.sentence}</li>
+                ))}
+              </ul>
+            )}
+            {result.cautions.map((caution) => (
+              <p key={caution} className="mt-1 font-semibold">
+                {caution}
+              </p>
+            ))}
+            {rules.clauses
+              .filter(({ number }) => number === result.clause)
+              .map((clause) => (
+                <Remedies
+                  key={clause.number}
+                  bores={remediesInClass(clause, { clauses: rules.clauses, results }, facts)}
+                />
               ))}
-            </ul>
-          )}
-          {result.cautions.map((caution) => (
-            <p key={caution} className="mt-1 font-semibold">
-              {caution}
-            </p>
-          ))}
-        </div>
-      </li>
-    ))}
-  </ul>
+          </div>
+        </li>
+      ))}
+    </ul>
+  </>
 );

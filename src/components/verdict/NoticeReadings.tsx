@@ -1,3 +1,4 @@
+import { Budgets } from '@/components/finding/Budgets';
 import { FindingRow, FindingTable } from '@/components/look/FindingRow';
 import { GaugeStrip, type GaugeStripProps } from '@/components/look/GaugeStrip';
 import { displayNumber, ReadingValue } from '@/components/look/ReadingValue';
@@ -85,6 +86,7 @@ export const NoticeReadings = ({ clause }: { readonly clause: NoticeClause }) =>
           />
         ))}
       </FindingTable>
+      <Budgets results={measured} />
     </>
   );
 };

@@ -64,15 +64,19 @@ export interface InspectionAssessment {
   readonly facts: Facts;
 }
 
-const windowOf = (rules: RulesInForce): Quantity<'length'> | undefined => {
+/** What the clearance's own clause can bear: its window, and how fit it wants the gauge. */
+const windowOf = (
+  rules: RulesInForce,
+): { readonly window?: Quantity<'length'>; readonly fitRatio?: string | undefined } => {
   for (const { requirement } of rules.clauses) {
     if (requirement?.kind !== 'limit' || requirement.quantity !== 'tappet-clearance') continue;
     const { min, max } = decisionOf(requirement).limits;
     const low = min && findAs('length', min);
     const high = max && findAs('length', max);
-    if (low !== undefined && high !== undefined) return minus(high, low);
+    if (low !== undefined && high !== undefined)
+      return { window: minus(high, low), fitRatio: requirement.fitRatio };
   }
-  return undefined;
+  return {};
 };
 
 /** Pooled over the true repeats of the whole inspection: same bore, set, run, depth and axis. */
@@ -105,7 +109,7 @@ export const assessInspection = (record: InspectionRecord): InspectionAssessment
     zeros: record.zeros,
     gauges,
     unit: record.unit ?? 'in',
-    window: windowOf(rules),
+    ...windowOf(rules),
     materials: record.materials,
     repeatability: pooled(counting),
   };

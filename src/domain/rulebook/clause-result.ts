@@ -18,6 +18,12 @@ export type State =
   | 'judged'
   | 'waived';
 
+/** One source of the uncertainty: words that stand alone, and its part of the variance in whole percent. */
+export interface BudgetWords {
+  readonly words: string;
+  readonly share: string;
+}
+
 export interface PositionResult {
   /** `engine`, a cylinder's number, or a bore's key from the position map. */
   readonly position: string;
@@ -34,6 +40,8 @@ export interface PositionResult {
   readonly uncertainty?: Written | undefined;
   /** Coverage factor k of U, to two decimals; with U, or not at all. */
   readonly coverageFactor?: string | undefined;
+  /** What U is made of, the largest first; with U, where the budget is known. */
+  readonly budget?: readonly BudgetWords[] | undefined;
   /** Width of the guard band where the rule has one. */
   readonly guardBand?: Written | undefined;
   /** A choice or yes / no as declared or found. */

@@ -56,6 +56,7 @@ const position = (
   value: at.value,
   uncertainty: at.uncertainty,
   k: at.coverageFactor,
+  budget: at.budget,
   answer: at.answer,
   sentence: at.sentence,
   readings: readingsAt(report, finding, at.position).map(reading),

@@ -1,5 +1,5 @@
 import type { Written } from '../quantity/dimension';
-import type { State } from '../rulebook/clause-result';
+import type { BudgetWords, State } from '../rulebook/clause-result';
 
 /** A person's decision on an entry. */
 export type Decision = 'breach' | 'no-breach';
@@ -34,6 +34,8 @@ export interface NoticePosition {
   /** Expanded uncertainty; never without `k`. */
   readonly uncertainty?: Written | undefined;
   readonly k?: string | undefined;
+  /** What the uncertainty is made of, the largest first; absent where the report keeps none. */
+  readonly budget?: readonly BudgetWords[] | undefined;
   readonly answer?: string | undefined;
   readonly sentence: string;
   readonly readings: readonly NoticeReading[];

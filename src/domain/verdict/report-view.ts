@@ -31,6 +31,7 @@ const position = z.object({
   value: z.optional(written),
   uncertainty: z.optional(written),
   coverageFactor: z.optional(text),
+  budget: z.optional(z.array(z.object({ words: text, share: text }))),
   guardBand: z.optional(written),
   answer: z.optional(text),
   sentence: text,

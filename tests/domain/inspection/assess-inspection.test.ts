@@ -74,6 +74,16 @@ describe('clearance', () => {
     expect(atIntake('4.6', { readings, zeros, remarks }).exact?.text).toBe('0.00174');
   });
 
+  it('says what its U is made of, the largest first', () => {
+    const { budget = [] } = atIntake('4.6', { readings: absolute });
+    const shares = budget.map(({ share }) => Number(share));
+    expect(shares).toEqual([...shares].sort((a, b) => b - a));
+    expect(budget.map(({ words }) => words).join(' ')).toMatch(
+      /^The hand’s repeatability is half of it\. The micrometer’s division/,
+    );
+    expect(budget.every(({ words, share }) => words !== '' && /^\d+$/.test(share))).toBe(true);
+  });
+
   it('out of the advisory window warns and fails nobody', () => {
     const readings = [...bodies, reading('r3', '0.8446')];
     const found = findingOf('4.6', { readings });

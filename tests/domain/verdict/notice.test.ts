@@ -39,6 +39,25 @@ describe('a notice of breach', () => {
     ]);
   });
 
+  it('carries what each breached value’s U is made of, the largest first, in words and percent', () => {
+    for (const { budget } of clause?.positions ?? []) {
+      const shares = (budget ?? []).map(({ share }) => Number(share));
+      expect(shares.length).toBeGreaterThan(1);
+      expect(shares).toEqual([...shares].sort((a, b) => b - a));
+      expect(Math.abs(shares.reduce((sum, share) => sum + share, 0) - 100)).toBeLessThan(2);
+      expect(budget?.[0]?.words).toMatch(/^The micrometer’s (division|calibration) is .+ of it\.$/);
+    }
+  });
+
+  it('is made from a report that was signed before budgets were kept, without one', () => {
+    const old = JSON.parse(reportText(BIG_FEET), (key, value) =>
+      key === 'budget' ? undefined : value,
+    );
+    const made = noticeOf({ report: reportOf(JSON.stringify(old)) });
+    expect(made.breached[0]?.positions[0]?.uncertainty).toEqual(clause?.positions[0]?.uncertainty);
+    expect(text(made)).not.toContain('budget');
+  });
+
   it('names the gauges of these readings only, with their certificates', () => {
     expect(notice.gauges.map(({ code, certificate }) => [code, certificate])).toEqual([
       ['MIC', 'C-mic'],

@@ -1,3 +1,5 @@
+import { Budgets } from '@/components/finding/Budgets';
+import { HoldAdvice } from '@/components/finding/HoldAdvice';
 import { Caution } from '@/components/look/Caution';
 import { displayNumber } from '@/components/look/ReadingValue';
 import { wordOfState } from '@/components/look/status';
@@ -89,6 +91,10 @@ const Result = ({
           k={shown.k}
           {...shown.strip}
         />
+      )}
+      <Budgets results={[result]} />
+      {part.quantity === 'tappet-bore-diameter' && (
+        <HoldAdvice bores={assessment.bores.filter(({ key }) => key === boreName(position))} />
       )}
       <Caution status={status} title={word.charAt(0).toUpperCase() + word.slice(1)}>
         <p>

@@ -1,20 +1,25 @@
+import { Budgets } from '@/components/finding/Budgets';
+import { HoldAdvice } from '@/components/finding/HoldAdvice';
+import { Remedies } from '@/components/finding/Remedies';
 import { FindingRow, FindingTable } from '@/components/look/FindingRow';
 import { StatusWord } from '@/components/look/StatusWord';
 import { markOfState, type Status, wordOfState } from '@/components/look/status';
-import type { BoreResult } from '@/domain/inspection/assess-inspection';
+import type { InspectionAssessment } from '@/domain/inspection/assess-inspection';
 import type { Finding } from '@/domain/inspection/finding';
-import { formatWidth } from '@/domain/quantity/format';
+import { remediesInClass } from '@/domain/inspection/remedies-in-class';
 import type { Clause } from '@/domain/rulebook/clause';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import { shownResult } from '../sheet/shown';
 
 interface ClauseFindingsProps {
   readonly rules: RulesInForce;
-  readonly findings: readonly Finding[];
-  readonly bores: readonly BoreResult[];
+  readonly assessment: InspectionAssessment;
 }
 
 const BREACHING: readonly string[] = ['outside', 'does-not-comply', 'too-close', 'no-statement'];
+
+const ofClearance = ({ requirement }: Clause): boolean =>
+  requirement?.kind === 'limit' && requirement.quantity === 'tappet-clearance';
 
 const passWord = (pass: boolean | null, state: Finding['state']): string =>
   pass === null ? wordOfState(state) : `${wordOfState(state)}: ${pass ? 'pass' : 'fail'}`;
@@ -65,10 +70,8 @@ const Others = ({ finding }: { readonly finding: Finding }) => {
 };
 
 /** Every clause with its statement, its numbers on their strips, the rule's sentence, and the budget. */
-export const ClauseFindings = ({ rules, findings, bores }: ClauseFindingsProps) => {
-  const budget = bores
-    .flatMap(({ sets }) => sets)
-    .find(({ measurement }) => measurement.budget.length > 0);
+export const ClauseFindings = ({ rules, assessment }: ClauseFindingsProps) => {
+  const { findings, bores, facts } = assessment;
   return (
     <div className="grid gap-8 mt-5">
       {findings.map((finding) => {
@@ -93,32 +96,27 @@ export const ClauseFindings = ({ rules, findings, bores }: ClauseFindingsProps) 
               </p>
             ))}
             {finding.perPosition.some((result) => result.value !== undefined) ? (
-              <details open={BREACHING.includes(finding.state)}>
-                <summary>Numbers, each with its uncertainty</summary>
-                <Numbers clause={clause} finding={finding} />
-              </details>
+              <>
+                <details open={BREACHING.includes(finding.state)}>
+                  <summary>Numbers, each with its uncertainty</summary>
+                  <Numbers clause={clause} finding={finding} />
+                </details>
+                <Budgets results={finding.perPosition} />
+                {ofClearance(clause) && <HoldAdvice bores={bores} />}
+                <Remedies
+                  bores={remediesInClass(
+                    clause,
+                    { clauses: rules.clauses, results: findings },
+                    facts,
+                  )}
+                />
+              </>
             ) : (
               <Others finding={finding} />
             )}
           </section>
         );
       })}
-      {budget !== undefined && (
-        <details>
-          <summary>What the uncertainty of a clearance is made of, at {budget.set.key}</summary>
-          <ul>
-            {budget.measurement.budget.map((line) => (
-              <li key={line.name}>
-                {line.sentence}{' '}
-                <span className="note">
-                  {formatWidth('length', line.contribution, 'µin', 1)} µin,{' '}
-                  {Math.round(line.share * 100)} %
-                </span>
-              </li>
-            ))}
-          </ul>
-        </details>
-      )}
     </div>
   );
 };

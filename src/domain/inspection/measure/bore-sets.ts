@@ -67,6 +67,7 @@ const sheetOf = (
     materials: capture.materials,
     repeatability: capture.repeatability,
     window: capture.window,
+    fitRatio: capture.fitRatio,
   };
 };
 

@@ -2,12 +2,7 @@ import type { Gauge } from '../../measurement/gauge';
 import { calibrationOf, resolutionOf } from '../../measurement/gauge-figures';
 import { getMaterial } from '../../measurement/material';
 import type { Repeatability } from '../../measurement/repeatability';
-import {
-  type Combined,
-  combine,
-  rectangular,
-  type UncertaintyComponent,
-} from '../../measurement/uncertainty';
+import { rectangular, type UncertaintyComponent } from '../../measurement/uncertainty';
 import { toNumber } from '../../quantity/rational';
 import type { Length } from '../../tappet/bore-sheet';
 
@@ -41,23 +36,16 @@ export const diameterBudget = (
   },
 ];
 
-export const diameterUncertainty = (
-  size: Length,
-  micrometer: Gauge<'length'>,
-  repeatability?: Repeatability | undefined,
-): Combined => combine(diameterBudget(size, micrometer, repeatability));
-
 /**
  * Of a difference between two readings of one bore (out-of-round, taper): what the gauge is off by
  * falls out, its division and the hand's repeatability stand in both readings.
  */
-export const formUncertainty = (
+export const formBudget = (
   gauge: Gauge<'length'>,
   budget: readonly UncertaintyComponent[],
-): Combined =>
-  combine([
-    resolutionOf(gauge, 'the dial’s division', 2),
-    ...budget
-      .filter((line) => line.name.startsWith('repeatability'))
-      .map((line) => ({ ...line, sensitivity: line.sensitivity * Math.SQRT2 })),
-  ]);
+): readonly UncertaintyComponent[] => [
+  resolutionOf(gauge, 'the dial’s division', 2),
+  ...budget
+    .filter((line) => line.name.startsWith('repeatability'))
+    .map((line) => ({ ...line, sensitivity: line.sensitivity * Math.SQRT2 })),
+];

@@ -1,6 +1,5 @@
 import { largest, mean, type Series, smallest } from '../../measurement/series';
-import type { Combined } from '../../measurement/uncertainty';
-import { combine } from '../../measurement/uncertainty';
+import { combine, type UncertaintyComponent } from '../../measurement/uncertainty';
 import { quantityOf } from '../../quantity/quantity';
 import type { NumberFact } from '../../rulebook/evaluate/facts';
 import type { QuantityName } from '../../rulebook/quantity-catalogue';
@@ -12,7 +11,7 @@ import { type BoreMeasurement, measureBore } from '../../tappet/measure-bore';
 import { placesOf } from '../../tappet/places';
 import { DIAL, MICROMETER } from '../../tappet/sheet-budget';
 import type { BoreSet } from './bore-sets';
-import { diameterUncertainty, formUncertainty } from './measure-lifter';
+import { diameterBudget, formBudget } from './measure-lifter';
 
 export interface SetResult {
   readonly set: BoreSet;
@@ -29,11 +28,16 @@ export const measureSet = (set: BoreSet): SetResult => ({
 /** A number before it has its place. */
 export type Fact = Omit<NumberFact, 'position'>;
 
+const uncertaintyFrom = (budget: readonly UncertaintyComponent[]) => ({
+  ...combine(budget),
+  budget,
+});
+
 const threeFigures = (
   quantity: QuantityName,
   unit: string,
   series: Series,
-  uncertainty: Combined,
+  uncertainty: ReturnType<typeof uncertaintyFrom>,
 ): readonly Fact[] =>
   series.length === 0
     ? []
@@ -61,8 +65,7 @@ const threeFigures = (
 const clearanceFacts = ({ measurement }: SetResult): readonly Fact[] => {
   const found = measurement.clearanceAt20C ?? measurement.clearance;
   if (found === null) return [];
-  const { standardUncertainty, degreesOfFreedom } = measurement;
-  const fact = { quantity: 'tappet-clearance', standardUncertainty, degreesOfFreedom } as const;
+  const fact = { quantity: 'tappet-clearance', ...uncertaintyFrom(measurement.budget) } as const;
   return [
     { ...fact, figure: 'mean', value: found.mean },
     { ...fact, figure: 'smallest', value: found.min },
@@ -71,7 +74,7 @@ const clearanceFacts = ({ measurement }: SetResult): readonly Fact[] => {
 };
 
 const formFacts = ({ set, measurement }: SetResult): readonly Fact[] => {
-  const uncertainty = formUncertainty(set.sheet.gauge ?? DIAL, measurement.budget);
+  const uncertainty = uncertaintyFrom(formBudget(set.sheet.gauge ?? DIAL, measurement.budget));
   const { outOfRound, taper } = measurement;
   const fact = (quantity: QuantityName, value: Length): Fact => ({
     quantity,
@@ -94,7 +97,7 @@ const lifterFacts = ({ set, foot }: SetResult): readonly Fact[] => {
           quantity,
           unit,
           lengths.map((length) => length.value),
-          diameterUncertainty(first, lifterGauge),
+          uncertaintyFrom(diameterBudget(first, lifterGauge)),
         );
   };
   return [
@@ -106,7 +109,7 @@ const lifterFacts = ({ set, foot }: SetResult): readonly Fact[] => {
           {
             quantity: 'foot-less-body',
             value: foot.difference,
-            ...combine(foot.components),
+            ...uncertaintyFrom(foot.components),
           } as const,
         ]),
   ];
@@ -115,11 +118,8 @@ const lifterFacts = ({ set, foot }: SetResult): readonly Fact[] => {
 const boreFacts = ({ set, measurement }: SetResult): readonly Fact[] => {
   const now = diametersOf(set.sheet, placesOf(correctedReadings(set.sheet)));
   if (now?.sizesKnown !== true) return [];
-  const { standardUncertainty, degreesOfFreedom } = measurement;
-  return threeFigures('tappet-bore-diameter', set.sheet.unit, now.bores, {
-    standardUncertainty,
-    degreesOfFreedom,
-  });
+  const uncertainty = uncertaintyFrom(measurement.budget);
+  return threeFigures('tappet-bore-diameter', set.sheet.unit, now.bores, uncertainty);
 };
 
 /** Every number that one set gives, each with its uncertainty. */

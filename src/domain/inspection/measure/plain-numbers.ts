@@ -37,12 +37,19 @@ export const plainNumbers = (
     const series = readings.map(({ row }) => fromStored(row.value, dimension).value);
     const record = gauges.find((gauge) => gauge.id === gaugeId);
     const gauge = record && gaugeOf(record, dimension);
-    const uncertainty = combine(
+    const budget =
       gauge === undefined
         ? []
-        : [resolutionOf(gauge, 'the division'), calibrationOf(gauge, 'the calibration')],
-    );
-    const fact = { quantity, position: positionKey(first.place, per), ...uncertainty };
+        : [
+            resolutionOf(gauge, 'the gauge’s division'),
+            calibrationOf(gauge, 'the gauge’s calibration'),
+          ];
+    const fact = {
+      quantity,
+      position: positionKey(first.place, per),
+      ...combine(budget),
+      budget,
+    };
     return [
       { ...fact, figure: 'mean', value: quantityOf(dimension, mean(series), unit) },
       { ...fact, figure: 'smallest', value: quantityOf(dimension, smallest(series), unit) },
@@ -67,6 +74,17 @@ export const derivedNumbers = (
   const bores = positions.cylinders.flatMap(({ key }) => find('cylinder-bore', key) ?? []);
   const cylinders = positions.cylinders.length;
   if (stroke === undefined || cylinders === 0 || bores.length < cylinders) return [];
-  const { value, standardUncertainty = 0 } = displacement({ bores, stroke, cylinders });
-  return [{ quantity: 'displacement', position: 'engine', value, standardUncertainty }];
+  const {
+    value,
+    standardUncertainty = 0,
+    contributions,
+  } = displacement({ bores, stroke, cylinders });
+  const budget = contributions.map(({ name, uncertainty }) => ({
+    name,
+    words: `how well the ${name} was measured`,
+    standardUncertainty: uncertainty,
+    sensitivity: 1,
+    degreesOfFreedom: null,
+  }));
+  return [{ quantity: 'displacement', position: 'engine', value, standardUncertainty, budget }];
 };

@@ -17,6 +17,8 @@ export interface Capture {
   readonly unit: string;
   /** Width of the permitted zone of the clearance, where a clause gives one. */
   readonly window?: Length | undefined;
+  /** Of that clause. */
+  readonly fitRatio?: string | undefined;
   readonly materials?: BoreSheet['materials'];
   readonly repeatability?: BoreSheet['repeatability'];
 }

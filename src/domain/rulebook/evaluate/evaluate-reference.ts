@@ -1,5 +1,5 @@
 import { mean } from '../../measurement/series';
-import { combine } from '../../measurement/uncertainty';
+import { combine, type UncertaintyComponent } from '../../measurement/uncertainty';
 import { type Quantity, quantityOf } from '../../quantity/quantity';
 import type { PositionResult } from '../clause-result';
 import { writtenWords } from '../describe';
@@ -20,23 +20,25 @@ const meanOf = (first: ReferenceFact, parts: readonly ReferenceFact[]): Quantity
   quantityOf(first.value.dimension, mean(parts.map((part) => part.value.value)), first.value.unit);
 
 /** Of the value less the mean of n parts, all measured independently. */
-const combined = (fact: NumberFact, parts: readonly ReferenceFact[]) =>
-  combine([
-    {
-      name: 'part',
-      words: 'the part',
-      standardUncertainty: fact.standardUncertainty,
-      sensitivity: 1,
-      degreesOfFreedom: fact.degreesOfFreedom ?? null,
-    },
-    ...parts.map((part) => ({
-      name: `reference ${part.part}`,
-      words: `reference part ${part.part}`,
-      standardUncertainty: part.standardUncertainty,
-      sensitivity: 1 / parts.length,
-      degreesOfFreedom: null,
-    })),
-  ]);
+const budgetOf = (
+  fact: NumberFact,
+  parts: readonly ReferenceFact[],
+): readonly UncertaintyComponent[] => [
+  {
+    name: 'part',
+    words: 'the part',
+    standardUncertainty: fact.standardUncertainty,
+    sensitivity: 1,
+    degreesOfFreedom: fact.degreesOfFreedom ?? null,
+  },
+  ...parts.map((part) => ({
+    name: `reference ${part.part}`,
+    words: `reference part ${part.part}`,
+    standardUncertainty: part.standardUncertainty,
+    sensitivity: 1 / parts.length,
+    degreesOfFreedom: null,
+  })),
+];
 
 /** Every position held against the mean of the reference parts. */
 export const evaluateReference = (
@@ -60,9 +62,10 @@ export const evaluateReference = (
     const fact = findNumber(facts, rule.quantity, position.key, rule.figure);
     if (fact === undefined)
       return missingAt(position, wasOutOfReach(facts, rule.quantity, position.key));
+    const budget = budgetOf(fact, parts);
     return heldNumber({
       position,
-      fact: { ...fact, ...combined(fact, parts) },
+      fact: { ...fact, ...combine(budget), budget },
       compared: fact.value,
       decision,
       unit: rule.unit,

@@ -1,3 +1,4 @@
+import type { UncertaintyComponent } from '../../measurement/uncertainty';
 import type { Quantity } from '../../quantity/quantity';
 import type { Figure } from '../limit';
 import type { Per, QuantityName, RuleDimension } from '../quantity-catalogue';
@@ -12,6 +13,8 @@ export interface NumberFact {
   /** In the base of the dimension; 0 for a declared value, which states none. */
   readonly standardUncertainty: number;
   readonly degreesOfFreedom?: number | null | undefined;
+  /** What the standard uncertainty is made of, where that is known. */
+  readonly budget?: readonly UncertaintyComponent[] | undefined;
   /** Why this value cannot support a breach, `the gauge was overdue for calibration`. */
   readonly cannotSupportBreach?: string | undefined;
 }

@@ -1,11 +1,12 @@
 import { assess } from '../../decision/assess';
 import type { Assessment, LimitRequirement as Decision } from '../../decision/requirement';
+import { budgetLines } from '../../measurement/budget';
 import { convert } from '../../quantity/convert';
 import type { Written } from '../../quantity/dimension';
 import { asciiIn, formatWidth } from '../../quantity/format';
 import { decimalsOf } from '../../quantity/number-text';
 import { minus, type Quantity } from '../../quantity/quantity';
-import type { PositionResult, State } from '../clause-result';
+import type { BudgetWords, PositionResult, State } from '../clause-result';
 import { writtenWords } from '../describe';
 import type { Figure } from '../limit';
 import type { RuleDimension } from '../quantity-catalogue';
@@ -76,6 +77,14 @@ const guardOf = (
   return undefined;
 };
 
+const budgetOf = ({ budget = [] }: NumberFact): { readonly budget?: readonly BudgetWords[] } => {
+  const lines = budgetLines(budget).map(({ sentence, share }) => ({
+    words: sentence,
+    share: (share * 100).toFixed(0),
+  }));
+  return lines.length === 0 ? {} : { budget: lines };
+};
+
 /** One number held against one window, by the decision room; the words come from its numbers. */
 export const heldNumber = (held: Held): PositionResult => {
   const { fact, decision, position, unit } = held;
@@ -106,7 +115,13 @@ export const heldNumber = (held: Held): PositionResult => {
     figure: held.figure,
     value,
     exact: { text: shown.text, unit: shown.unit },
-    ...(spread ? { uncertainty, coverageFactor: assessment.coverageFactor.toFixed(2) } : {}),
+    ...(spread
+      ? {
+          uncertainty,
+          coverageFactor: assessment.coverageFactor.toFixed(2),
+          ...budgetOf(fact),
+        }
+      : {}),
     ...(guardBand === undefined ? {} : { guardBand }),
     sentence: `${position.label}: ${figure}${writtenWords(value)}${reach}; ${held.limit}${ending(held, assessment, state)}`,
     rule: assessment.sentence,
