@@ -80,6 +80,7 @@ export const ROUTES: Readonly<Record<string, RouteAccess>> = {
   '/bench/compression': open,
   '/bench/decision': open,
   '/bench/displacement': open,
+  '/bench/sizes': open,
   '/bench/temperature': open,
   '/bench/uncertainty': open,
   '/crib': { access: 'permission', permission: 'gauge.read' },
