@@ -138,6 +138,8 @@ export const measureBore = async (
   await pad.getByRole('button', { name: '1', exact: true }).click();
   await pad.getByRole('button', { name: /^Enter/ }).click();
   await page.getByRole('img', { name: /closing zero 0\.1/ }).waitFor();
+  // Ring 0.8440 in, dial −0.1 to +0.2 less its share of 0.1 of drift, lifter 0.842275 in.
+  await page.getByText(/1\.725 ± /).waitFor();
   await look(inspector, 'bore');
 
   await page.getByRole('button', { name: 'Photograph, set up, more' }).click();

@@ -58,8 +58,8 @@ export const returnPaperwork = async (
   const { page } = official;
   await openPaperwork(official, story);
   expect(await page.locator('main').textContent()).toContain('lifters HB.csv');
-  await page.getByText('A remark beside one item').click();
-  await page.getByLabel('Photograph of the lifters', { exact: true }).fill(remark);
+  await page.getByText('Remark on Photograph of the lifters').click();
+  await page.getByLabel('What is to be put right: Photograph of the lifters').fill(remark);
   await look(official, 'paperwork-return');
   await page.getByRole('button', { name: 'Return it with remarks' }).click();
   await page.waitForURL(/\/office\/paperwork$/);
@@ -129,8 +129,8 @@ export const decideBreach = async (
   await page.locator(`a[href="/office/verdicts/${inspectionId}"]`).click();
   expect(await page.locator('main').textContent()).toContain('finding: fail');
   await look(official, 'decide');
-  await page.getByLabel(/^Breach/).check();
-  await page.getByLabel(/^4\.3 Foot/).check();
+  await page.getByRole('radio', { name: /^Breach/ }).check();
+  await page.getByRole('checkbox', { name: /^4\.3 Foot/ }).check();
   await page.getByLabel(/^Penalty/).selectOption('A|1');
   await page.getByLabel('Reasons').fill(reasons);
   await page.getByRole('button', { name: /^Write down and see the notice/ }).click();

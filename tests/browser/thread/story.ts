@@ -19,6 +19,7 @@ export const WITNESS = 'Fenn Ostrava';
 
 export const DESK = { viewport: { width: 1280, height: 800 } };
 export const PHONE = { viewport: { width: 390, height: 844 }, touch: true };
+export const SMALL = { viewport: { width: 360, height: 740 }, touch: true };
 export const TABLET = { viewport: { width: 1180, height: 820 }, touch: true };
 
 export const newStory = (): Story => {
