@@ -163,8 +163,9 @@ test('from the rulebook to the published verdict and its correction', {
     expect(number).toMatch(/^\d{4}-\d{3}$/);
     const pdfHash = await readMailedNotice(story, number, REASONS);
     const notice = { number, pdfHash, reasons: REASONS };
-    const stranger = await enter({ javaScript: false, viewport: { width: 360, height: 740 } });
+    const stranger = await enter({ ...SMALL, javaScript: false });
     await readPublicPages(stranger, story, notice);
+    await lookAtPublicPages(await enter(SMALL), story, number);
     await competitor.open('/paddock');
     await competitor.page.getByRole('link', { name: number }).waitFor();
     await look(competitor, 'paddock-decided');
