@@ -21,7 +21,14 @@ import { positionKey, type ReadingRow, type RemarkRow, type ZeroRow } from './ca
 import { completenessBy } from './completeness';
 import type { Finding } from './finding';
 import { withRows } from './findings';
-import { answersFrom, gapsFrom, positionsIn, readingsBehind, weaknessOf } from './found-facts';
+import {
+  answersFrom,
+  gapsFrom,
+  positionsIn,
+  readingsBehind,
+  unstatedBecause,
+  weaknessOf,
+} from './found-facts';
 import { boreSetsOf } from './measure/bore-sets';
 import { joinSets } from './measure/join-sets';
 import { factsOfSet, measureSet, type SetResult } from './measure/measure-position';
@@ -124,10 +131,13 @@ export const assessInspection = (record: InspectionRecord): InspectionAssessment
     ...plain,
     ...derivedNumbers(plain, positions),
   ].map((fact): NumberFact => {
-    if (fact.cannotSupportBreach !== undefined) return fact;
     const per = rowsOf(getQuantityEntry(fact.quantity).per);
-    const weakness = weaknessOf(readingsBehind(fact, counting, per), record);
-    return weakness === undefined ? fact : { ...fact, cannotSupportBreach: weakness };
+    const behind = readingsBehind(fact, counting, per);
+    return {
+      ...fact,
+      noStatement: unstatedBecause(behind, gauges),
+      cannotSupportBreach: fact.cannotSupportBreach ?? weaknessOf(behind, record),
+    };
   });
   const facts: Facts = {
     origin: 'found',

@@ -1,3 +1,4 @@
+import { isErrorKnown } from '../measurement/gauge-figures';
 import { fromStored } from '../quantity/stored';
 import type { AnswerFact, GapFact, NumberFact, Positions } from '../rulebook/evaluate/facts';
 import {
@@ -7,7 +8,7 @@ import {
   readingsFor,
 } from '../rulebook/quantity-catalogue';
 import { type BoreLayout, boreName, positionsOf } from '../tappet/layout/bore-layout';
-import { findWeakness, type GaugeRecord } from './capture/gauge-record';
+import { findWeakness, type GaugeRecord, gaugeOf } from './capture/gauge-record';
 import type { JudgedReading } from './capture/readings-that-count';
 import { inTakingOrder, positionKey, type RemarkRow, type ZeroRow } from './capture/rows';
 
@@ -75,16 +76,33 @@ const instrumentsOf = ({ row }: JudgedReading, zeros: readonly ZeroRow[]) => {
   return [{ id: row.gaugeId, size }, ...rings.map((id) => ({ id, size: undefined }))];
 };
 
+const UNREGISTERED = 'the gauge is not in the register';
+
 /** Why readings cannot support a breach: a gauge unknown, out of calibration or out of its range. */
 export const weaknessOf = (readings: readonly JudgedReading[], bay: Bay): string | undefined => {
   for (const reading of readings) {
     const { occurredAt } = reading.row;
     for (const { id, size } of instrumentsOf(reading, bay.zeros)) {
       const record = bay.gauges.find((gauge) => gauge.id === id);
-      if (record === undefined) return 'the gauge is not in the register';
+      if (record === undefined) return UNREGISTERED;
       const weakness = findWeakness(record, { occurredAt, zone: bay.zone, size });
       if (weakness !== undefined) return weakness;
     }
+  }
+  return undefined;
+};
+
+/** Why nothing can be stated from readings: how far a gauge is off is not known at all. */
+export const unstatedBecause = (
+  readings: readonly JudgedReading[],
+  gauges: readonly GaugeRecord[],
+): string | undefined => {
+  for (const { row } of readings) {
+    const record = gauges.find((gauge) => gauge.id === row.gaugeId);
+    if (record === undefined) return UNREGISTERED;
+    const { dimension } = getQuantityEntry(row.quantity);
+    if (!isErrorKnown(gaugeOf(record, dimension), dimension))
+      return 'the gauge’s error is not known';
   }
   return undefined;
 };

@@ -1,4 +1,5 @@
 import { baseNumber } from '../quantity/convert';
+import type { Dimension } from '../quantity/dimension';
 import { getUnit } from '../quantity/find-unit';
 import { fromDecimalText, mul, type Rational, toNumber, zero } from '../quantity/rational';
 import type { Gauge, GaugeKind } from './gauge';
@@ -36,6 +37,15 @@ const DIVISIONS: Readonly<Record<Scaled, Rational>> = {
 /** The division in the base, exact; 0 for what is not read off a scale or is not known. */
 export const divisionOf = ({ division, kind }: Gauge): Rational =>
   division?.value ?? (kind === 'scale' || kind === 'other' ? zero : DIVISIONS[kind]);
+
+/**
+ * Whether anything tells how far a gauge may be off in this dimension: its certificate, its division or, for
+ * lengths, common practice on its kind.
+ */
+export const isErrorKnown = (gauge: Gauge, dimension: Dimension): boolean =>
+  gauge.certificate !== undefined ||
+  gauge.division !== undefined ||
+  (dimension === 'length' && gauge.kind !== 'scale' && gauge.kind !== 'other');
 
 /** From the certificate, else from common practice; a scale or another gauge without one: its division. */
 export const calibrationOf = (

@@ -15,6 +15,8 @@ export interface NumberFact {
   readonly degreesOfFreedom?: number | null | undefined;
   /** What the standard uncertainty is made of, where that is known. */
   readonly budget?: readonly UncertaintyComponent[] | undefined;
+  /** Why nothing can be stated from this value, neither way: `the gauge’s error is not known`. */
+  readonly noStatement?: string | undefined;
   /** Why this value cannot support a breach, `the gauge was overdue for calibration`. */
   readonly cannotSupportBreach?: string | undefined;
 }

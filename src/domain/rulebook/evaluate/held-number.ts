@@ -45,13 +45,14 @@ export interface Held {
 }
 
 const stateOf = (held: Held, assessment: Assessment<RuleDimension>): State => {
-  if (!assessment.fit) return 'no-statement';
+  if (held.fact.noStatement !== undefined || !assessment.fit) return 'no-statement';
   const breach = assessment.complies === false && held.fact.cannotSupportBreach !== undefined;
   return breach ? 'no-statement' : assessment.assessment;
 };
 
 const ending = (held: Held, assessment: Assessment<RuleDimension>, state: State): string => {
   if (state !== 'no-statement') return `: ${WORDS[assessment.assessment]}.`;
+  if (held.fact.noStatement !== undefined) return `: no statement, since ${held.fact.noStatement}.`;
   if (!assessment.fit) return `: ${UNFIT}.`;
   return `: no statement, since ${held.fact.cannotSupportBreach ?? 'the reading cannot support one'}.`;
 };
@@ -111,7 +112,7 @@ export const heldNumber = (held: Held): PositionResult => {
     position: position.key,
     state,
     pass: silent ? null : assessment.complies,
-    fit: assessment.fit,
+    fit: assessment.fit && fact.noStatement === undefined,
     figure: held.figure,
     value,
     exact: { text: shown.text, unit: shown.unit },
