@@ -14,7 +14,7 @@ const { publicUrl } = readProduct();
 const drawOf = ({ page }: Visitor, state: 'announced' | 'made' | 'void', raceClass = CLASS) =>
   page
     .locator(`[data-draw="${state}"]`)
-    .filter({ has: page.getByRole('heading', { name: raceClass, exact: true }) });
+    .filter({ has: page.getByRole('heading', { name: new RegExp(`^${raceClass}`) }) });
 
 /** Local time at the track, as the form writes it, of the next whole minute that is still to come. */
 const nextMinute = (zone: string): { readonly written: string; readonly at: number } => {

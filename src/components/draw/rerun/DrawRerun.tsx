@@ -8,6 +8,8 @@ import { type Stage, stagesOf } from './stages';
 interface DrawRerunProps {
   readonly series: string;
   readonly drawId: string;
+  /** Whether this is the page’s one next step. */
+  readonly next: boolean;
   /** The documents as the page was made with; the run in the browser asks for them anew. */
   readonly published: DrawToVerify;
 }
@@ -19,7 +21,7 @@ type Running =
   | { readonly at: 'run'; readonly stages: readonly Stage[]; readonly shown: number };
 
 /** Runs a draw again in the visitor's own browser, a step at a time. Without script: the steps alone. */
-export const DrawRerun = ({ series, drawId, published }: DrawRerunProps) => {
+export const DrawRerun = ({ series, drawId, next, published }: DrawRerunProps) => {
   const [running, setRunning] = useState<Running>({ at: 'page' });
   const [ready, setReady] = useState(false);
   const last = useRef<HTMLElement | null>(null);
@@ -45,7 +47,7 @@ export const DrawRerun = ({ series, drawId, published }: DrawRerunProps) => {
       {ready && running.at !== 'run' && (
         <p className="actions">
           <button
-            className="btn btn-primary"
+            className={next ? 'btn btn-primary' : 'btn'}
             type="button"
             disabled={running.at === 'asking'}
             onClick={() => void begin()}

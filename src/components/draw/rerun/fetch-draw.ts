@@ -1,24 +1,14 @@
 import { publicDrawAnswer } from '@/contracts/draw/draw';
 import { verifyDrawLines } from '@/domain/draw/verify-draw-lines';
 import { parseVerifierKey } from '@/domain/ledger/note/verifier-key';
-import type { Step } from '@/domain/ledger/verify/step';
 import { readKeys, trustedKeys } from '../../verify/trusted-keys';
-import { type Stage, stagesOf } from './stages';
+import { ofStep, type Stage, stagesOf } from './stages';
 
 const get = async (path: string): Promise<string> => {
   const response = await fetch(path, { cache: 'no-store' });
   if (!response.ok) throw new Error(`${path} answered ${response.status}.`);
   return response.text();
 };
-
-const asStage = (step: Step): Stage => ({
-  key: step.id,
-  title: step.checked,
-  outcome: step.outcome,
-  facts: [{ name: 'Found', value: step.found }],
-  proves: step.proves,
-  doesNotProve: step.doesNotProve,
-});
 
 const WAITING: Stage = {
   key: 'lines-waiting',
@@ -45,5 +35,5 @@ export const fetchStages = async (series: string, drawId: string): Promise<reado
     { ...end, proof: end.proof },
     parsed,
   );
-  return [...stages, ...lines.map(asStage)];
+  return [...stages, ...lines.map((step) => ofStep(step))];
 };

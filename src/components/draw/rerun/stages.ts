@@ -14,7 +14,8 @@ export interface Stage {
   readonly doesNotProve?: string;
 }
 
-const ofStep = (step: Step, more: Stage['facts'] = []): Stage => ({
+/** A checked step as a stage, with more facts. */
+export const ofStep = (step: Step, more: Stage['facts'] = []): Stage => ({
   key: step.id,
   title: step.checked,
   outcome: step.outcome,

@@ -55,8 +55,10 @@ export const firstTyped = (
   ]);
 
 const rowsIn = (typed: Typed): readonly number[] =>
-  Array.from({ length: VALUE_ROWS }, (_, i) => i).filter((i) =>
-    `${typed.get(`value-${i}-name`) ?? ''}${typed.get(`value-${i}-substitute`) ?? ''}`.trim(),
+  Array.from({ length: VALUE_ROWS }, (_, i) => i).filter(
+    (i) =>
+      (typed.get(`value-${i}-name`) ?? '').trim() !== '' ||
+      typed.get(`value-${i}-ifMissing`) === 'substitute',
   );
 
 export const readAnnounceForm = (
@@ -75,7 +77,9 @@ export const readAnnounceForm = (
     values: rowsIn(typed).map((i) => ({
       name: text(`value-${i}-name`),
       ifMissing: text(`value-${i}-ifMissing`),
-      substitute: text(`value-${i}-substitute`),
+      // The field shows only where another value takes the place; what it held before is no part.
+      substitute:
+        text(`value-${i}-ifMissing`) === 'substitute' ? text(`value-${i}-substitute`) : '',
     })),
   });
 };
