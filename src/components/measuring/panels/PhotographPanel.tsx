@@ -52,6 +52,8 @@ export const PhotographPanel = ({
         body: file,
         headers: { 'content-type': expected['type'] ?? file.type },
       });
+      // An answer that nobody reads is cut off when the page is left, as if the sending had failed.
+      await put.arrayBuffer();
       if (!put.ok) throw new Error('The object store did not take it.');
       const kept = await postJson(`${base}/${fileId}`, { act: uuidV7() });
       if (kept['state'] !== 'kept') throw new Error(kept['refusedBecause'] ?? 'It was refused.');

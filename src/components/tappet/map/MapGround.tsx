@@ -47,7 +47,7 @@ const Banks = ({ plan, placed, view, frame, unit }: MapGroundProps) =>
     if (view === 'front-up')
       return (
         <Note key={side} x={isLeft ? 20 : frame.width - 22} y={24} end={!isLeft}>
-          {unit === undefined ? name : `${name}, ${unit}`}
+          {unit ? `${name}, ${unit}` : name}
         </Note>
       );
     const edge = { x: isLeft ? frame.width - 20 : 20, end: isLeft };
