@@ -11,8 +11,8 @@ const FIRST = 138;
 const LATER = 104;
 
 /**
- * Prints a notice on A4, black only. Names print in the Latin alphabet with its European letters; a
- * letter that the faces lack stands as ¤, beside the Latin form that the person gave.
+ * Prints a notice on A4, black only. Names print in Latin, Greek and Cyrillic letters; a name in another
+ * script prints in the Latin form that the person gave, and where none was given its letters stand as ¤.
  */
 export const noticePrinter: NoticePrinter = {
   print: async (input) => {
@@ -34,8 +34,8 @@ export const noticePrinter: NoticePrinter = {
       creationDate: at,
       modificationDate: at,
     });
-    const type = await openTypefaces(document);
-    const pages = paginate(sectionsOf(notice, type.width), { first: FIRST, later: LATER });
+    const type = await openTypefaces(document, JSON.stringify(notice));
+    const pages = paginate(sectionsOf(notice, type), { first: FIRST, later: LATER });
     for (const [place, placements] of pages.entries()) {
       const page = document.addPage([SHEET.width * POINTS, SHEET.height * POINTS]);
       const pen = penOn(page, type);

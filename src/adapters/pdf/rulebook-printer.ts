@@ -113,7 +113,7 @@ export const rulebookPrinter: RulebookPrinter = {
     document.setLanguage('en');
     document.setCreationDate(at);
     document.setModificationDate(at);
-    const type = await openTypefaces(document);
+    const type = await openTypefaces(document, JSON.stringify(input));
     const sections = [
       ...input.rules.clauses.map((clause) => clauseSection(clause, input, type.width)),
       ...penaltySections(input, type.width),

@@ -15,9 +15,10 @@ import type { Section } from './flow';
 import { SHEET } from './pen';
 import { readingSection } from './reading-section';
 import { type Cell, table } from './table';
-import type { Style } from './typeface';
+import type { Style, Typesetter } from './typeface';
 
-type Width = (text: string, style: Style) => number;
+type Width = Typesetter['width'];
+type Setting = Pick<Typesetter, 'width' | 'covers'>;
 
 const LEAD: Style = { face: 'bold', size: 18 };
 const CLAUSE: Style = { face: 'num-bold', size: 14.5 };
@@ -78,10 +79,12 @@ const gauges = (rows: readonly NoticeGauge[]): Section => ({
   ),
 });
 
-const nameOf = ({ name, latinName }: NoticePerson): string =>
-  latinName === undefined || latinName === name ? name : `${name} (${latinName})`;
+const nameOf = ({ name, latinName }: NoticePerson, covers: Typesetter['covers']): string => {
+  if (latinName === undefined || latinName === name) return name;
+  return covers(name) ? `${name} (${latinName})` : latinName;
+};
 
-const people = ({ people: rows, event }: NoticeDocument, width: Width): Section => ({
+const people = ({ people: rows, event }: NoticeDocument, { width, covers }: Setting): Section => ({
   label: ['People'],
   blocks: [
     ...table(
@@ -92,7 +95,7 @@ const people = ({ people: rows, event }: NoticeDocument, width: Width): Section 
       ],
       rows.map((person) => [
         { text: ROLE_WORDS[person.role], style: BOLD },
-        { text: `${nameOf(person)}, ${person.standing}` },
+        { text: `${nameOf(person, covers)}, ${person.standing}` },
         { text: dayAndClockWords(person.at, event.zone) },
       ]),
     )
@@ -119,7 +122,10 @@ const appeal = (notice: NoticeDocument, width: Width): Section => {
 };
 
 /** Every section of the sheet, in the order in which a reader asks. */
-export const sectionsOf = (notice: NoticeDocument, width: Width): readonly Section[] => [
+export const sectionsOf = (
+  notice: NoticeDocument,
+  { width, covers }: Setting,
+): readonly Section[] => [
   decision(notice, width),
   { label: ['Reasons'], blocks: paragraph([plain(notice.reasons)], width) },
   ...notice.breached.flatMap((clause): readonly Section[] => [
@@ -150,7 +156,7 @@ export const sectionsOf = (notice: NoticeDocument, width: Width): readonly Secti
         },
       ]),
   ...(notice.gauges.length === 0 ? [] : [gauges(notice.gauges)]),
-  people(notice, width),
+  people(notice, { width, covers }),
   appeal(notice, width),
   {
     label: ['Please note'],

@@ -33,6 +33,18 @@ const FILES: { readonly [F in Face]: readonly string[] } = {
   'num-bold': ['b612/files/b612-latin-700-normal.woff', ...barlow(600)],
 };
 
+const WIDE_PARTS = ['latin-ext', 'vietnamese', 'cyrillic', 'cyrillic-ext', 'greek', 'greek-ext'];
+const WIDE_WEIGHTS: { readonly [F in Face]: number } = {
+  text: 500,
+  bold: 600,
+  head: 600,
+  num: 500,
+  'num-bold': 600,
+};
+
+const wide = (part: string, weight: number): string =>
+  `noto-sans/files/noto-sans-${part}-${weight}-normal.woff`;
+
 interface Cut {
   readonly outlines: Font;
   readonly embedded: PDFFont;
@@ -63,7 +75,26 @@ const load = (file: string): Promise<Uint8Array> => {
   return known;
 };
 
+/** Parts of the wide face that hold letters of the texts which none of the sheet's own faces has. */
+const findWideParts = async (
+  letters: Iterable<string>,
+  own: readonly Font[],
+): Promise<readonly string[]> => {
+  const lacking = [...letters]
+    .map((letter) => letter.codePointAt(0) ?? 0)
+    .filter((code) => !own.some((outlines) => outlines.hasGlyphForCodePoint(code)));
+  if (lacking.length === 0) return [];
+  const parts: string[] = [];
+  for (const part of WIDE_PARTS) {
+    const outlines = fontkit.create(await load(wide(part, 500)));
+    if (lacking.some((code) => outlines.hasGlyphForCodePoint(code))) parts.push(part);
+  }
+  return parts;
+};
+
 export interface Typesetter {
+  /** Whether every letter can be set; what cannot stands as ¤. */
+  readonly covers: (text: string) => boolean;
   readonly width: (text: string, style: Style) => number;
   /** Draws on a baseline, in the page's own points. */
   readonly draw: (page: PDFPage, text: string, at: Placed) => void;
@@ -77,20 +108,31 @@ export interface Placed {
   readonly ink: Color;
 }
 
-/** Faces embedded into one document, each subset to what is drawn. */
-export const openTypefaces = async (document: PDFDocument): Promise<Typesetter> => {
+/**
+ * Faces embedded into one document, each subset to what is drawn. `texts` holds every letter that may be
+ * drawn: the wide face, with Greek and Cyrillic, is embedded only where one of them asks for it.
+ */
+export const openTypefaces = async (document: PDFDocument, texts: string): Promise<Typesetter> => {
   document.registerFontkit(fontkit);
   const opened = new Map<string, Cut>();
-  for (const file of new Set(Object.values(FILES).flat())) {
+  const open = async (file: string) => {
     const bytes = await load(file);
     const embedded = await document.embedFont(bytes, {
       subset: true,
-      // Figures of one width; no ligatures, so that the text can be searched letter by letter.
-      features: { tnum: true, liga: false },
+      // Figures of one width; no ligatures and no letters taken apart, so that the text can be
+      // searched letter by letter.
+      features: { tnum: true, liga: false, ccmp: false },
     });
     opened.set(file, { outlines: fontkit.create(bytes), embedded });
-  }
-  const cutsOf = (face: Face) => FILES[face].flatMap((file) => opened.get(file) ?? []);
+  };
+  for (const file of new Set(Object.values(FILES).flat())) await open(file);
+  const own = FILES.text.flatMap((file) => opened.get(file)?.outlines ?? []);
+  const parts = await findWideParts(new Set(texts.normalize('NFC')), own);
+  for (const part of parts) for (const weight of [500, 600]) await open(wide(part, weight));
+  const cutsOf = (face: Face) =>
+    [...FILES[face], ...parts.map((part) => wide(part, WIDE_WEIGHTS[face]))].flatMap(
+      (file) => opened.get(file) ?? [],
+    );
   const find = (letter: string, face: Face): Cut | undefined =>
     cutsOf(face).find(({ outlines }) => outlines.hasGlyphForCodePoint(letter.codePointAt(0) ?? 0));
 
@@ -124,6 +166,8 @@ export const openTypefaces = async (document: PDFDocument): Promise<Typesetter> 
   };
 
   return {
+    covers: (text) =>
+      [...text.normalize('NFC')].every((letter) => find(letter, 'text') !== undefined),
     width: (text, { face, size }) =>
       runs(text, face).reduce((sum, run) => sum + run.width * size, 0),
     draw: (page, text, { x, y, style, scale, ink }) => {

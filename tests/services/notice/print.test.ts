@@ -33,12 +33,35 @@ describe('the printed notice', () => {
     );
   });
 
-  it('sets European names, and marks a letter that its faces lack beside the Latin form', async () => {
-    const notice = noticeOf({
-      decidedBy: { name: 'Дарья Řezníková', latinName: 'Darya Řezníková' },
-    });
-    const pdf = readPdf(await noticePrinter.print(sheet({ notice })));
-    expect(pdf.text).toContain('¤¤¤¤¤ Řezníková (Darya Řezníková), series official');
+  it.each([
+    ['Дарья Řezníková', 'Darya Řezníková'],
+    ['Ґалина Їжак', 'Galyna Jizhak'],
+    ['Ὀρέστης Ξανθόπουλος', 'Orestis Xanthopoulos'],
+    ['Nguyễn Thị Ửng', 'Nguyen Thi Ung'],
+  ])('prints %s as it is written, beside the Latin form', async (name, latinName) => {
+    const notice = noticeOf({ decidedBy: { name, latinName } });
+    const pdf = await noticePrinter.print(sheet({ notice }));
+    expect(readPdf(pdf).text.normalize('NFC')).toContain(`${name} (${latinName}), series official`);
+    const again = await noticePrinter.print(sheet({ notice }));
+    expect(Buffer.from(again).equals(Buffer.from(pdf))).toBe(true);
+  });
+
+  it('prints the Latin form of a name in any other script, and the name’s boxes where none was given', async () => {
+    const printed = async (decidedBy: { name: string; latinName?: string }) =>
+      readPdf(await noticePrinter.print(sheet({ notice: noticeOf({ decidedBy }) }))).text;
+    const latin = await printed({ name: '藤原 美雪', latinName: 'Miyuki Fujiwara' });
+    expect(latin).toContain('Miyuki Fujiwara, series official');
+    expect(latin).not.toContain('¤');
+    expect(await printed({ name: '藤原 美雪' })).toContain('¤¤ ¤¤, series official');
+  });
+
+  it('carries the wide faces only where a letter asks for them', async () => {
+    const fonts = async (name: string) => {
+      const pdf = await noticePrinter.print(sheet({ notice: noticeOf({ decidedBy: { name } }) }));
+      return Buffer.from(pdf).toString('latin1').includes('NotoSans');
+    };
+    expect(await fonts('Ilse Törnkvist')).toBe(false);
+    expect(await fonts('Дарья Řezníková')).toBe(true);
   });
 
   it('breaks a word that is wider than its column', async () => {
