@@ -31,16 +31,18 @@ interface Asked {
   readonly body?: unknown;
   readonly params?: Readonly<Record<string, string>>;
   readonly headers?: Readonly<Record<string, string>>;
+  readonly objects?: FakeObjects;
 }
 
 const call = async (route: APIRoute, asked: Asked = {}): Promise<Response> => {
   const { actor = null, body, params = { series: v.seriesId }, headers = {} } = asked;
+  const ports = world.ports(asked.objects === undefined ? {} : { objects: asked.objects });
   const request = new Request('http://127.0.0.1/api/x', {
     method: body === undefined ? 'GET' : 'POST',
     headers: { 'content-type': 'application/json', ...headers },
     ...(body === undefined ? {} : { body: JSON.stringify(body) }),
   });
-  const context = { request, params, locals: { ports: world.ports(), actor } };
+  const context = { request, params, locals: { ports, actor } };
   return (await route(context as unknown as APIContext)) as Response;
 };
 
@@ -105,6 +107,15 @@ describe('verdicts over the API', () => {
     expect(printed.headers.get('content-type')).toBe('application/pdf');
     const bytes = new Uint8Array(await printed.arrayBuffer());
     expect(toHex(sha256(bytes))).toBe(answer.pdf.sha256);
+    const away = new FakeObjects();
+    away.read = () => Promise.reject(new Error('connect ECONNREFUSED'));
+    const down = await call(pdf, { params: { slug: series, number }, objects: away });
+    expect([down.status, down.headers.get('content-type')]).toEqual([
+      503,
+      'application/problem+json',
+    ]);
+    expect(down.headers.get('retry-after')).toBe('60');
+    expect(await down.json()).toMatchObject({ type: '/problems/unavailable' });
     const etag = printed.headers.get('etag') ?? '';
     const again = await call(pdf, {
       params: { slug: series, number },

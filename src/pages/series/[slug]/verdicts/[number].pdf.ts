@@ -1,9 +1,11 @@
 import type { APIRoute } from 'astro';
-import { absent } from '@/domain/failure';
+import { absent, failure } from '@/domain/failure';
 import { problem } from '@/http/problem';
 import { findNotice } from '@/services/public/find-notice';
 
 const MOST_BYTES = 20_000_000;
+const AWAY =
+  'The print cannot be fetched just now. Try again in a minute; the notice itself can be read on its page.';
 
 /** The printed notice, byte for byte as its hash was recorded. */
 export const GET: APIRoute = async ({ params, locals, request }) => {
@@ -22,6 +24,13 @@ export const GET: APIRoute = async ({ params, locals, request }) => {
   if (request.headers.get('if-none-match') === etag) {
     return new Response(null, { status: 304, headers });
   }
-  const bytes = await ports.objects.read(objectKey, MOST_BYTES);
-  return new Response(Uint8Array.from(bytes), { headers });
+  try {
+    const bytes = await ports.objects.read(objectKey, MOST_BYTES);
+    return new Response(Uint8Array.from(bytes), { headers });
+  } catch (error) {
+    console.error(`notice ${number}: ${error instanceof Error ? error.message : String(error)}`);
+    const answer = problem(failure('unavailable', AWAY));
+    answer.headers.set('retry-after', '60');
+    return answer;
+  }
 };
