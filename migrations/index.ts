@@ -9,6 +9,7 @@ import { Verdicts } from './0007-verdicts';
 import { RulesQuestions } from './0008-rules-questions';
 import { Draws } from './0009-draws';
 import { RowsByAct } from './0010-rows-by-act';
+import { Erasure } from './0011-erasure';
 
 /** In order of application. A new migration is added here by hand. */
 export const migrationsList: MigrationObject[] = [
@@ -22,4 +23,5 @@ export const migrationsList: MigrationObject[] = [
   { name: '0008-rules-questions', class: RulesQuestions },
   { name: '0009-draws', class: Draws },
   { name: '0010-rows-by-act', class: RowsByAct },
+  { name: '0011-erasure', class: Erasure },
 ];

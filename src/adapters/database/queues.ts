@@ -4,6 +4,7 @@ export const QUEUES = [
   'make-previews',
   'render-notice',
   'sign-checkpoint',
+  'remove-objects',
   'sweep-uploads',
 ] as const;
 

@@ -19,7 +19,8 @@ export type AppendTable =
   | 'notice_pdf'
   | 'draw'
   | 'draw_end'
-  | 'draw_secret';
+  | 'draw_secret'
+  | 'erasure';
 
 /** A document's exact text, or the SHA-256 of something kept elsewhere, a PDF. */
 export type LineContent = { readonly open: boolean } & (

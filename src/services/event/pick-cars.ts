@@ -33,6 +33,7 @@ const findAccepted = async (
        on d.series_id = p.series_id and d.paperwork_id = p.id and d.decision = 'accepted'
      join record.paperwork_version v
        on v.series_id = p.series_id and v.paperwork_id = p.id and v.number = d.number
+       and v.document is not null
      where p.series_id = ? and (p.id = ? or (p.class_id = ? and p.car_number = ? and p.competitor_id = ?))
      order by (p.id = ?) desc nulls last, v.number desc limit 1`,
     [seriesId, paperworkId, classId, carNumber, competitorId, paperworkId],

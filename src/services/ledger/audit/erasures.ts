@@ -9,8 +9,8 @@ export const erasureDocument = z.strictObject({
   document: z.literal('tagwire/erasure'),
   version: z.literal('1'),
   reason: z.string(),
-  /** Numbers of the lines whose content went, and the roles. */
-  contents: z.array(z.strictObject({ line: z.string(), role: z.string() })),
+  /** Numbers and leaf hashes of the lines whose content went, and the roles. */
+  contents: z.array(z.strictObject({ line: z.string(), leaf: z.string(), role: z.string() })),
   /** SHA-256 of the files that went. */
   files: z.array(z.string()),
 });

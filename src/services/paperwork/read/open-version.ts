@@ -24,6 +24,21 @@ export interface OpenedVersion {
   readonly versions: readonly VersionRow[];
 }
 
+/** Whether the version's content was erased; its hash, its line and its place stay. */
+const isErased = async (
+  em: EntityManager,
+  seriesId: string,
+  paperworkId: string,
+  number: number,
+): Promise<boolean> => {
+  const [row] = await em.execute<{ erased: boolean }[]>(
+    `select document is null as erased from record.paperwork_version
+     where series_id = ? and paperwork_id = ? and number = ?`,
+    [seriesId, paperworkId, number],
+  );
+  return row?.erased === true;
+};
+
 /** A version as it was handed in; a stored one that cannot be read is a defect. */
 export const getVersionDocument = async (
   em: EntityManager,
@@ -48,7 +63,7 @@ export const openRow = async (
 ): Promise<OpenedVersion | undefined> => {
   const versions = await readVersions(em, row.seriesId, row.id);
   const version = versions.find((one) => one.number === number);
-  if (version === undefined) return undefined;
+  if (version === undefined || (await isErased(em, row.seriesId, row.id, number))) return undefined;
   const document = await getVersionDocument(em, row.seriesId, row.id, number);
   const rules = await getRules(em, row.seriesId, Buffer.from(version.rulesHash, 'hex'));
   const results = evaluateRules(rules, declaredFacts(document), {

@@ -1,0 +1,48 @@
+import { LockMode } from '@mikro-orm/postgresql';
+import { type Actor, may } from '@/domain/access/permission';
+import { absent, type Failure, failure, invalid } from '@/domain/failure';
+import { fail, ok, type Result } from '@/domain/result';
+import { Paperwork } from '@/entities/paperwork/paperwork';
+import { performAct } from '../../act/perform-act';
+import { isId } from '../../paperwork/own-paperwork';
+import type { Ports } from '../../ports';
+import { eraseLines, listErasable } from './erase-lines';
+import { findErasureObstacle } from './obstacle';
+
+/** Erases what a paperwork says, for good: every version, its files, the remarks on it. The ledger stays whole. */
+export const eraseContent = async (
+  deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
+  actor: Actor,
+  input: {
+    readonly act: string;
+    readonly seriesId: string;
+    readonly paperworkId: string;
+    /** Published in the ledger: it names no person. */
+    readonly reason: string;
+  },
+): Promise<Result<{ readonly contents: number; readonly files: number }, Failure>> => {
+  const { act: id, seriesId, paperworkId } = input;
+  if (!may(actor, 'series.administer', seriesId) || !isId(paperworkId)) return fail(absent());
+  const where = { seriesId, id: paperworkId, versions: { $gt: 0 } };
+  if ((await deps.db.findOne(Paperwork, where)) === null) return fail(absent());
+  const reason = input.reason.trim();
+  if (reason.length < 10 || reason.length > 500) {
+    const detail = 'Say in 10 to 500 characters why it is erased, without naming anybody.';
+    return fail(invalid([{ pointer: '/reason', detail }]));
+  }
+  return performAct(
+    deps,
+    actor,
+    { id, kind: 'erase-content', seriesId, input: { paperworkId, reason } },
+    async (act) => {
+      await act.em.findOneOrFail(Paperwork, where, { lockMode: LockMode.PESSIMISTIC_WRITE });
+      const obstacle = await findErasureObstacle(act.em, seriesId, paperworkId);
+      if (obstacle !== undefined) return fail(failure('not-in-this-state', obstacle));
+      const contents = await listErasable(act.em, seriesId, paperworkId);
+      if (contents.length === 0)
+        return fail(failure('not-in-this-state', 'This paperwork was erased already.'));
+      const erased = await eraseLines(act, { seriesId, paperworkId, reason, contents });
+      return ok({ contents: erased.contents.length, files: erased.files.length });
+    },
+  );
+};

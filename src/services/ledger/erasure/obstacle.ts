@@ -1,0 +1,27 @@
+import type { EntityManager } from '@mikro-orm/postgresql';
+
+/** Waits for whoever places or lifts a hold in the series, or erases there. Inside a transaction. */
+export const lockHolds = async (em: EntityManager, seriesId: string): Promise<void> => {
+  await em.execute('select 1 from public.series where id = ? for no key update', [seriesId]);
+};
+
+/** Why a paperwork must be kept, in words; nothing if it may be erased. */
+export const findErasureObstacle = async (
+  em: EntityManager,
+  seriesId: string,
+  paperworkId: string,
+): Promise<string | undefined> => {
+  await lockHolds(em, seriesId);
+  const [hold] = await em.execute<{ reason: string }[]>(
+    `select reason from public.hold
+     where series_id = ? and lifted_at is null and subject_id in (?, ?) order by since limit 1`,
+    [seriesId, seriesId, paperworkId],
+  );
+  if (hold !== undefined)
+    return `A hold stands: ${hold.reason} Nothing is erased before it is lifted.`;
+  const [inspection] = await em.execute<{ n: number }[]>(
+    'select 1 as n from public.inspection where series_id = ? and paperwork_id = ? limit 1',
+    [seriesId, paperworkId],
+  );
+  return inspection && 'An inspection rests on this paperwork: it is kept with its report.';
+};

@@ -1,0 +1,52 @@
+import { type Actor, may } from '@/domain/access/permission';
+import { absent, type Failure, invalid } from '@/domain/failure';
+import { fail, ok, type Result } from '@/domain/result';
+import { performAct } from '../../act/perform-act';
+import { isId } from '../../paperwork/own-paperwork';
+import type { Ports } from '../../ports';
+import { lockHolds } from './obstacle';
+
+/** Stops every erasure of a paperwork, or in the whole series, until the hold is lifted. */
+export const placeHold = async (
+  deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
+  actor: Actor,
+  input: {
+    readonly act: string;
+    readonly id: string;
+    readonly seriesId: string;
+    /** The whole series where not given. */
+    readonly paperworkId?: string | undefined;
+    readonly reason: string;
+  },
+): Promise<Result<{ readonly holdId: string }, Failure>> => {
+  const { act, id, seriesId, paperworkId } = input;
+  if (!may(actor, 'series.administer', seriesId) || !isId(id)) return fail(absent());
+  if (paperworkId !== undefined) {
+    const [known] = await deps.db.execute<{ n: number }[]>(
+      'select 1 as n from public.paperwork where series_id = ? and id::text = ?',
+      [seriesId, paperworkId],
+    );
+    if (known === undefined) return fail(absent());
+  }
+  const reason = input.reason.trim();
+  if (reason.length < 10 || reason.length > 500) {
+    const detail = 'Say in 10 to 500 characters why nothing may be erased.';
+    return fail(invalid([{ pointer: '/reason', detail }]));
+  }
+  const [kind, subject] =
+    paperworkId === undefined ? ['series', seriesId] : ['paperwork', paperworkId];
+  return performAct(
+    deps,
+    actor,
+    { id: act, kind: 'place-hold', seriesId, input: { id, subject, reason } },
+    async ({ em, at }) => {
+      await lockHolds(em, seriesId);
+      await em.execute(
+        `insert into public.hold (series_id, id, subject_kind, subject_id, reason, placed_by, since)
+         values (?, ?, ?, ?, ?, ?, ?)`,
+        [seriesId, id, kind, subject, reason, actor.personId, at],
+      );
+      return ok({ holdId: id });
+    },
+  );
+};
