@@ -23,14 +23,17 @@ export const openJobs = async (
   return {
     boss,
     jobs: {
-      send: async (em, queue, data) => {
+      send: async (em, queue, data, notBefore) => {
         const transaction = em.getTransactionContext();
         if (transaction === undefined) throw new Error('A job is sent inside a transaction.');
         const executeSql = async (text: string, values: unknown[]) => {
           const connection = await transaction.client.acquireConnection();
           return connection.query(text, values);
         };
-        const id = await boss.send(queue, data, { db: { executeSql } });
+        const id = await boss.send(queue, data, {
+          db: { executeSql },
+          ...(notBefore === undefined ? {} : { startAfter: notBefore }),
+        });
         // A queue that does not exist answers null and nothing else.
         if (id === null) throw new Error(`There is no queue named ${queue}.`);
       },

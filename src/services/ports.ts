@@ -45,7 +45,8 @@ export interface JobPayloads {
   readonly 'make-previews': { readonly seriesId: string; readonly fileId: string };
   readonly 'render-notice': { readonly seriesId: string; readonly verdictId: string };
   readonly 'sign-checkpoint': { readonly seriesId: string };
-  readonly 'sweep-uploads': Record<string, never>;
+  readonly 'remove-objects': { readonly seriesId: string };
+  readonly 'sweep-uploads': { readonly seriesId: string; readonly fileId: string };
 }
 
 export interface Jobs {
@@ -54,6 +55,8 @@ export interface Jobs {
     em: EntityManager,
     queue: Q,
     data: JobPayloads[Q],
+    /** Not to be worked before; at once where left out. */
+    notBefore?: Date,
   ): Promise<void>;
 }
 

@@ -1,19 +1,23 @@
 import type PgBoss from 'pg-boss';
 import { makePreviews } from '@/services/file/make-previews';
+import { sweepUpload } from '@/services/file/sweep-upload';
 import { signCheckpoint } from '@/services/ledger/checkpoint/sign-checkpoint';
+import { removeObjects } from '@/services/ledger/erasure/remove-objects';
 import { proveForNotice } from '@/services/ledger/proof/prove-for-notice';
 import { sendMail } from '@/services/mail/send-mail';
 import { renderNotice } from '@/services/notice/render-notice';
 import type { JobPayloads, Ports } from '@/services/ports';
 
 type Handlers = {
-  readonly [Q in keyof JobPayloads]?: (ports: Ports, data: JobPayloads[Q]) => Promise<void>;
+  readonly [Q in keyof JobPayloads]: (ports: Ports, data: JobPayloads[Q]) => Promise<void>;
 };
 
 const handlers: Handlers = {
   'send-mail': sendMail,
   'make-previews': makePreviews,
   'sign-checkpoint': signCheckpoint,
+  'sweep-uploads': sweepUpload,
+  'remove-objects': removeObjects,
   'render-notice': (ports, verdict) =>
     renderNotice(ports, verdict, (line) => proveForNotice(ports, verdict.seriesId, line)),
 };

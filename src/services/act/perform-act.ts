@@ -29,7 +29,7 @@ export interface Act {
   readonly em: EntityManager;
   readonly at: Date;
   append(table: AppendTable, rows: readonly Readonly<Record<string, unknown>>[]): void;
-  send<Q extends keyof JobPayloads>(queue: Q, data: JobPayloads[Q]): void;
+  send<Q extends keyof JobPayloads>(queue: Q, data: JobPayloads[Q], notBefore?: Date): void;
   line(line: NewLedgerLine): void;
   /** Stores a rules document by its hash, at once: rows of this act may point to it. */
   keepRules(seriesId: string, document: string): Promise<Uint8Array>;
@@ -91,7 +91,8 @@ export const performAct = async <T>(
         em,
         at: deps.clock.now(),
         append: (table, rows) => void (rows.length > 0 && appends.push([table, rows])),
-        send: (queue, data) => void jobs.push(() => deps.jobs.send(em, queue, data)),
+        send: (queue, data, notBefore) =>
+          void jobs.push(() => deps.jobs.send(em, queue, data, notBefore)),
         line: (line) => void lines.push(line),
         keepRules: async (series, document) => {
           const [row] = await em.execute<{ rules: Buffer }[]>(

@@ -13,6 +13,7 @@ import { KeptFile } from '@/entities/paperwork/file';
 import { performAct } from '../act/perform-act';
 import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
+import { sweptAt } from './sweep-upload';
 
 export interface ExpectedUpload {
   readonly act: string;
@@ -64,7 +65,7 @@ export const expectUpload = async (
     deps,
     actor,
     { id: act, kind: 'expect-upload', seriesId, input: request },
-    async ({ em, at }) => {
+    async ({ em, at, send }) => {
       const paperwork = await findOwnPaperwork(em, actor, paperworkId, true);
       if (paperwork === undefined) return fail(absent());
       if (!isWritable(paperwork.state)) return fail(wrongPlace());
@@ -94,6 +95,7 @@ export const expectUpload = async (
           createdAt: at,
         }),
       );
+      send('sweep-uploads', { seriesId, fileId }, sweptAt(at));
       return ok({ fileId });
     },
   );

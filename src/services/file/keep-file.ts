@@ -1,3 +1,4 @@
+import { LockMode } from '@mikro-orm/postgresql';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
 import { sha256, toHex } from '@/domain/ledger/bytes';
@@ -81,7 +82,11 @@ export const keepFile = async (
       if (paperwork === undefined) return fail(absent());
       if (!isWritable(paperwork.state)) return fail(wrongPlace());
       const row =
-        (await em.findOne(KeptFile, { seriesId, id: fileId, paperworkId })) ??
+        (await em.findOne(
+          KeptFile,
+          { seriesId, id: fileId, paperworkId },
+          { lockMode: LockMode.PESSIMISTIC_WRITE },
+        )) ??
         em.create(KeptFile, {
           seriesId,
           id: fileId,

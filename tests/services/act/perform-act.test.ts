@@ -33,7 +33,7 @@ const act = (asked: ActRequest, name: string) => {
   return performAct(ports, actor, asked, async ({ em, at, send, line }) => {
     const id = ports.random.uuid();
     em.persist(em.create(Car, { id, ownerId: actor.personId, name, createdAt: at }));
-    send('sweep-uploads', {});
+    send('sweep-uploads', { seriesId, fileId: id });
     line({
       seriesId,
       kind: 'cars-selected',
@@ -92,7 +92,7 @@ describe('an act', () => {
     const work = performAct(ports, actor, asked, async ({ em, at, send, line }) => {
       const id = ports.random.uuid();
       em.persist(em.create(Car, { id, ownerId: actor.personId, name: 'broken', createdAt: at }));
-      send('sweep-uploads', {});
+      send('sweep-uploads', { seriesId, fileId: id });
       line({ seriesId: ports.random.uuid(), kind: 'cars-selected', contents: {} });
       return ok(null);
     });

@@ -4,6 +4,7 @@ import { MOST_BYTES, tooLargeWords } from '@/domain/paperwork/file/limits';
 import { fail, ok, type Result } from '@/domain/result';
 import { KeptFile } from '@/entities/paperwork/file';
 import { performAct } from '../../act/perform-act';
+import { sweptAt } from '../../file/sweep-upload';
 import type { Ports } from '../../ports';
 import { findInspectionRow, worksOn } from '../read/find-inspection';
 
@@ -42,7 +43,7 @@ export const expectPhotograph = async (
       seriesId,
       input: { inspectionId, fileId, item, name, type, bytes },
     },
-    async ({ em, at }) => {
+    async ({ em, at, send }) => {
       em.persist(
         em.create(KeptFile, {
           seriesId,
@@ -59,6 +60,7 @@ export const expectPhotograph = async (
           createdAt: at,
         }),
       );
+      send('sweep-uploads', { seriesId, fileId }, sweptAt(at));
       return ok({ fileId });
     },
   );
