@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto';
 import { expect, test } from 'vitest';
 import { journey, type Visitor } from '../support/browser';
 import { mailTo, readProduct } from '../support/product';
+import { eventually } from '../support/wait';
 import {
   addCamCard,
   addPhotographs,
@@ -75,9 +76,11 @@ const checkStored = async ({ page, context }: Visitor, picture: Upload) => {
   expect(await hasPosition(original)).toBe(true);
   const preview = page.getByRole('img', { name: new RegExp(picture.name) });
   const address = new URL((await preview.getAttribute('src')) ?? '', page.url());
-  const served = await context.request.get(address.href);
-  expect(served.status()).toBe(200);
-  expect(await hasMetadata(await served.body())).toBe(false);
+  const served = await eventually('the preview', async () => {
+    const answer = await context.request.get(address.href);
+    return answer.ok() ? answer.body() : undefined;
+  });
+  expect(await hasMetadata(served)).toBe(false);
 };
 
 /** A page that is not this person's is the page that does not exist. */

@@ -2,6 +2,7 @@ import pg from 'pg';
 import { expect } from 'vitest';
 import type { Visitor } from '../../support/browser';
 import { readProduct } from '../../support/product';
+import { eventually } from '../../support/wait';
 import type { Upload } from './files';
 import { INSPECTOR, look, type Story, WITNESS } from './story';
 
@@ -174,6 +175,17 @@ export const signReport = async (inspector: Visitor, inspectionId: string): Prom
   await page.getByRole('button', { name: 'I have seen the findings: sign' }).click();
   await page.getByText(`${WITNESS} has seen the findings and signed`).waitFor();
   expect(await page.getByRole('button', { name: 'Sign the report and close' }).count()).toBe(0);
+  await page.getByText('All of them, in taking order').click();
+  const struck = page.getByRole('row', { name: /struck: written wrong/ });
+  expect(await struck.textContent()).toContain('0.8432');
+  await page.getByText('1 taken', { exact: true }).click();
+  const picture = page.getByRole('img', { name: 'Photograph of 3 exhaust' });
+  await picture.scrollIntoViewIfNeeded();
+  await eventually('the photograph of the bore', async () =>
+    (await picture.evaluate((shown: HTMLImageElement) => shown.naturalWidth)) > 0
+      ? true
+      : undefined,
+  );
   await look(inspector, 'findings');
   await signAgain(inspector);
   await page.getByRole('button', { name: 'Sign the report and close' }).click();
@@ -209,8 +221,10 @@ export const correctReport = async (
   await look(inspector, 'correcting');
   await page.getByRole('button', { name: 'Sign the correction' }).click();
   await page.getByText(/^Revision 2, signed/).waitFor();
-  const words = await page.locator('main').textContent();
-  expect(words).toContain('Revision 1, signed');
-  expect(words).toContain(reason);
+  expect(await page.locator('main').textContent()).toContain(reason);
+  for (const revision of [1, 2]) {
+    await page.getByText(`Findings of revision ${revision}`).click();
+    await page.getByText(new RegExp(`^Revision ${revision}, signed`)).waitFor();
+  }
   await look(inspector, 'corrected');
 };
