@@ -177,7 +177,7 @@ export const signReport = async (inspector: Visitor, inspectionId: string): Prom
   expect(await page.getByRole('button', { name: 'Sign the report and close' }).count()).toBe(0);
   await page.getByText('All of them, in taking order').click();
   const struck = page.getByRole('row', { name: /struck: written wrong/ });
-  expect(await struck.textContent()).toContain('0.8432');
+  expect(await struck.textContent()).toContain('0.8432 in');
   await page.getByText('1 taken', { exact: true }).click();
   const picture = page.getByRole('img', { name: 'Photograph of 3 exhaust' });
   await picture.scrollIntoViewIfNeeded();
