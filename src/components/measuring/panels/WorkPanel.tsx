@@ -120,7 +120,7 @@ export const WorkPanel = (props: WorkPanelProps) => {
   );
   if (part === undefined || scale === undefined)
     return (
-      <div className="work gap-3 justify-start">
+      <div className="work gap-2 justify-start">
         {switcher}
         <ChecksPanel {...props} />
         <Troubles {...props} />
@@ -169,7 +169,7 @@ export const WorkPanel = (props: WorkPanelProps) => {
     }),
   }));
   return (
-    <div className="work gap-3 justify-start">
+    <div className="work gap-2 justify-start">
       {switcher}
       {clause !== undefined && (
         <BoreHeader
