@@ -25,7 +25,7 @@ export const Tally = ({ statuses }: TallyProps) => (
         <li key={status}>
           <Mark status={status} size={22} />
           <span className="num">{count}</span>
-          {statusWord[status]}
+          {status === 'set-aside' ? 'no statement' : statusWord[status]}
         </li>
       ))}
   </ul>
