@@ -99,6 +99,7 @@ export const ROUTES: Readonly<Record<string, RouteAccess>> = {
   '/office/events/new': { access: 'permission', permission: 'event.manage' },
   '/office/paperwork': { access: 'permission', permission: 'paperwork.decide' },
   '/office/paperwork/[id]': { access: 'permission', permission: 'paperwork.decide' },
+  '/office/paperwork/[id]/erase': { access: 'permission', permission: 'series.administer' },
   '/office/people/[slug]': { access: 'permission', permission: 'people.invite' },
   '/office/rulebooks/[class]': { access: 'permission', permission: 'rulebook.write' },
   '/office/rulebooks/[class]/clarify': { access: 'permission', permission: 'rulebook.publish' },

@@ -13,7 +13,11 @@ type Handlers = {
 };
 
 const handlers: Handlers = {
-  'send-mail': sendMail,
+  'send-mail': (ports, mail) =>
+    sendMail(ports, mail, async (seriesId, line) => {
+      const proven = await proveForNotice(ports, seriesId, line);
+      return proven.proof.checkpoint;
+    }),
   'make-previews': makePreviews,
   'sign-checkpoint': signCheckpoint,
   'sweep-uploads': sweepUpload,

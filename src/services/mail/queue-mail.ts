@@ -1,6 +1,7 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import { Mail } from '@/entities/people/mail';
 import type { JobPayloads, Ports } from '../ports';
+import type { MailReceipt } from './receipt';
 
 /** A message in our own few parts; text and HTML are made from it when it is sent. */
 export interface NewMail {
@@ -18,6 +19,8 @@ export interface NewMail {
     readonly type: string;
     readonly objectKey: string;
   }[];
+  /** Adds line, hash and signed head of what the message confirms. */
+  readonly receipt?: MailReceipt;
 }
 
 type Send = <Q extends keyof JobPayloads>(queue: Q, data: JobPayloads[Q]) => void;
@@ -31,6 +34,7 @@ export const queueMail = (
 ): string => {
   const id = deps.random.uuid();
   const { seriesId, personId, address, kind, subject, paragraphs, link, attachments } = mail;
+  const { receipt } = mail;
   em.persist(
     em.create(Mail, {
       id,
@@ -41,7 +45,7 @@ export const queueMail = (
       subject,
       // The same message keeps its Message-ID however often sending is tried.
       messageId: `<${id}@${new URL(deps.site.publicUrl).hostname}>`,
-      content: { paragraphs, link, attachments: attachments ?? [] },
+      content: { paragraphs, link, attachments: attachments ?? [], ...(receipt && { receipt }) },
       state: 'to-send',
       attempts: 0,
       createdAt: act.at,

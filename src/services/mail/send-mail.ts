@@ -1,6 +1,7 @@
 import { Mail } from '@/entities/people/mail';
 import type { Ports } from '../ports';
 import type { NewMail } from './queue-mail';
+import { type FindHead, receiptParagraphs } from './receipt';
 import { renderMail } from './render-mail';
 
 const MOST_ATTACHMENT_BYTES = 8_000_000;
@@ -9,11 +10,12 @@ const MOST_ATTACHMENT_BYTES = 8_000_000;
 export const sendMail = async (
   deps: Pick<Ports, 'db' | 'clock' | 'mailer' | 'objects' | 'site'>,
   { mailId }: { readonly mailId: string },
+  findHead: FindHead = async () => undefined,
 ): Promise<void> => {
   const mail = await deps.db.findOneOrFail(Mail, { id: mailId });
   if (mail.state === 'sent') return;
   mail.attempts += 1;
-  const content = mail.content as unknown as Pick<NewMail, 'paragraphs' | 'link'> & {
+  const content = mail.content as unknown as Pick<NewMail, 'paragraphs' | 'link' | 'receipt'> & {
     readonly attachments: NonNullable<NewMail['attachments']>;
   };
   try {
@@ -22,13 +24,16 @@ export const sendMail = async (
       const bytes = await deps.objects.read(objectKey, MOST_ATTACHMENT_BYTES);
       attachments.push({ name, type, bytes });
     }
+    const receipt =
+      content.receipt && (await receiptParagraphs(deps.db, content.receipt, findHead));
+    const paragraphs = [...content.paragraphs, ...(receipt ?? [])];
     await deps.mailer.send({
       to: mail.address,
       from: deps.site.mailFrom,
       subject: mail.subject,
       messageId: mail.messageId,
       attachments,
-      ...renderMail(deps.site.publicUrl, content),
+      ...renderMail(deps.site.publicUrl, { ...content, paragraphs }),
     });
     mail.state = 'sent';
     mail.sentAt = deps.clock.now();

@@ -107,6 +107,7 @@ export const handInPaperwork = async (
           NOT_AN_APPROVAL,
         ],
         link: { label: 'See what was handed in', path: `/paddock/paperwork/${paperworkId}` },
+        receipt: { seriesId, actId: id, of: 'this paperwork', sha256: receipt.hash },
       });
       act.line({
         seriesId,

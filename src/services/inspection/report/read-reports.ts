@@ -10,6 +10,8 @@ export interface SignedReport {
   readonly signedBy: string;
   readonly signer: string;
   readonly signedAt: string;
+  /** The ledger's line that it was entered under. */
+  readonly line: string;
   /** Canonical JSON. */
   readonly document: string;
 }
@@ -24,8 +26,9 @@ export const readReports = (
     `select r.revision, r.reason, encode(r.hash, 'hex') as hash,
             encode(r.chain_head, 'hex') as "chainHead", r.signed_by as "signedBy", p.name as signer,
             to_char(r.signed_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"') as "signedAt",
-            r.document
+            l.index as line, r.document
      from record.report r join public.person p on p.id = r.signed_by
+     join record.ledger_line l on l.series_id = r.series_id and l.act_id = r.act_id
      where r.series_id = ? and r.inspection_id = ? order by r.revision`,
     [seriesId, inspectionId],
   );

@@ -128,6 +128,8 @@ export interface VersionRow {
   readonly number: number;
   readonly hash: string;
   readonly rulesHash: string;
+  /** The ledger's line that it was entered under. */
+  readonly line: number;
   readonly receivedAt: string;
   readonly decision: 'accepted' | 'returned' | null;
   readonly remarks: readonly ItemRemark[];
@@ -142,18 +144,26 @@ export const readVersions = async (
   paperworkId: string,
 ): Promise<readonly VersionRow[]> => {
   const rows = await em.execute<
-    (Omit<VersionRow, 'remarks'> & { readonly remarks: readonly ItemRemark[] | null })[]
+    (Omit<VersionRow, 'remarks' | 'line'> & {
+      readonly line: string;
+      readonly remarks: readonly ItemRemark[] | null;
+    })[]
   >(
-    `select v.number, encode(v.hash, 'hex') as hash, encode(v.rules_hash, 'hex') as "rulesHash",
+    `select v.number, encode(v.hash, 'hex') as hash, encode(v.rules_hash, 'hex') as "rulesHash", l.index as line,
        ${isoOf('v.received_at')} as "receivedAt", d.decision, d.remarks,
        ${isoOf('d.received_at')} as "decidedAt",
        o.name as "decidedBy"
      from record.paperwork_version v
+     join record.ledger_line l on l.series_id = v.series_id and l.act_id = v.act_id
      left join record.paperwork_decision d on d.series_id = v.series_id
        and d.paperwork_id = v.paperwork_id and d.number = v.number
      left join public.person o on o.id = d.decided_by
      where v.series_id = ? and v.paperwork_id = ? order by v.number desc`,
     [seriesId, paperworkId],
   );
-  return rows.map((row) => ({ ...row, remarks: row.remarks ?? [] }));
+  return rows.map((row) => ({
+    ...row,
+    line: Number(row.line),
+    remarks: row.remarks ?? [],
+  }));
 };
