@@ -82,6 +82,9 @@ export const runRows = (
           lifter: { text: '24', unit: '°C' },
           gauge: { text: '22', unit: '°C' },
         };
+  // Iron: 11.4e-6 a kelvin.
+  const grown =
+    options.bore === undefined ? 0 : Math.round(RING * 11.4e-6 * (Number(options.bore) - 20));
   const readings = bores.flatMap(({ position, bore }) =>
     SPOTS.map((spot): SentRow => {
       const [depth = '', axis = ''] = spot.split(' ');
@@ -98,7 +101,7 @@ export const runRows = (
         method: 'comparative',
         gaugeId: take.gauges.boreGauge,
         zeroRunId: runId,
-        value: { text: dial(bore[spot] - RING), unit: 'thou' },
+        value: { text: dial(bore[spot] + grown - RING), unit: 'thou' },
         ...(temperatures === undefined ? {} : { temperatures }),
       };
     }),
