@@ -1,4 +1,5 @@
-import { mkdtempSync, rmSync } from 'node:fs';
+import { execFile } from 'node:child_process';
+import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, inject, it } from 'vitest';
@@ -256,6 +257,45 @@ describe('erasing a paperwork’s content', () => {
     const asked = { paperworkId, number: 1 };
     expect(nameOf(await openOwnVersion(ports(), competitor, asked))).toBe('absent');
     expect(nameOf(await openPaperworkToCheck(ports(), official, asked))).toBe('absent');
+  });
+});
+
+describe('npm run erasures', () => {
+  it('lists what was erased and finds, where it is gone, nothing to erase again', async () => {
+    const nowhere = 'http://127.0.0.1:1';
+    const env = {
+      PATH: process.env['PATH'],
+      DATABASE_URL: world.database.appUrl,
+      S3_ENDPOINT: nowhere,
+      S3_BUCKET: 'tagwire',
+      S3_ACCESS_KEY_ID: 'none',
+      S3_SECRET_ACCESS_KEY: 'none',
+      PUBLIC_URL: nowhere,
+      PORT: '1',
+      SMTP_URL: 'smtp://127.0.0.1:1',
+      MAIL_FROM: 'Tagwire <tagwire@example.org>',
+      OIDC_ISSUER: nowhere,
+      OIDC_CLIENT_ID: 'none',
+      OIDC_CLIENT_SECRET: 'none',
+      LEDGER_KEY_FILE: 'none',
+      STORAGE_DIR: folder,
+    };
+    const root = join(import.meta.dirname, '../../..');
+    const call = (...words: readonly string[]) =>
+      new Promise<string>((resolve) => {
+        const args = ['--import', 'tsx', join(root, 'scripts/record/erasures.ts'), ...words];
+        execFile(process.execPath, args, { cwd: root, env }, (error, stdout, stderr) =>
+          resolve(error === null ? stdout : `${error.code}: ${stderr}`),
+        );
+      });
+    const list = await call('list');
+    expect(JSON.parse(list)).toEqual(await listErasures(paddock.ports().db));
+    const file = join(folder, 'erasures.json');
+    writeFileSync(file, list);
+    expect(await call('apply', file)).toBe('0 erased again; of 1 nothing is here.\n');
+    writeFileSync(file, list.replace('retention', 'holding'));
+    expect(await call('apply', file)).toMatch(/^1: [\s\S]*Number 1 of the list is no erasure/);
+    expect(await call('apply')).toContain('usage');
   });
 });
 

@@ -11,7 +11,7 @@ export interface SignedReport {
   readonly signer: string;
   readonly signedAt: string;
   /** The ledger's line that it was entered under. */
-  readonly line: string;
+  readonly line: string | null;
   /** Canonical JSON. */
   readonly document: string;
 }
@@ -28,7 +28,7 @@ export const readReports = (
             to_char(r.signed_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"') as "signedAt",
             l.index as line, r.document
      from record.report r join public.person p on p.id = r.signed_by
-     join record.ledger_line l on l.series_id = r.series_id and l.act_id = r.act_id
+     left join record.ledger_line l on l.series_id = r.series_id and l.act_id = r.act_id
      where r.series_id = ? and r.inspection_id = ? order by r.revision`,
     [seriesId, inspectionId],
   );
