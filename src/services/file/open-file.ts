@@ -2,7 +2,7 @@ import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import type { Ports } from '../ports';
-import { MOST_PHOTOGRAPH_BYTES, PREVIEW_WIDTHS } from './make-previews';
+import { MOST_PHOTOGRAPH_BYTES, makePreviews, PREVIEW_WIDTHS } from './make-previews';
 import { findReadableFile } from './own-file';
 
 export interface OpenedFile {
@@ -11,18 +11,19 @@ export interface OpenedFile {
   readonly name: string;
 }
 
-/** A preview of a photograph: a JPEG of this width without position data. Not made yet: try again soon. */
+/** A preview of a photograph: a JPEG of this width without position data. Whoever asks before the job has run waits for it. */
 export const openPreview = async (
-  deps: Pick<Ports, 'db' | 'objects'>,
+  deps: Pick<Ports, 'db' | 'objects' | 'images'>,
   actor: Actor,
   input: { readonly fileId: string; readonly width: number },
 ): Promise<Result<OpenedFile, Failure>> => {
   const file = await findReadableFile(deps.db, actor, input.fileId);
   const width = PREVIEW_WIDTHS.find((one) => one === input.width);
   if (file === undefined || width === undefined || file.state !== 'kept') return fail(absent());
+  const { seriesId, id: fileId } = file;
+  if (!file.previews && file.purpose !== 'sheet') await makePreviews(deps, { seriesId, fileId });
   const key = file.previews?.[String(width)];
-  if (key === undefined)
-    return fail(failure('unavailable', 'The preview is still being made. Try again in a moment.'));
+  if (key === undefined) return fail(failure('unavailable', 'This file has no preview.'));
   const bytes = await deps.objects.read(key, MOST_PHOTOGRAPH_BYTES);
   return ok({ bytes, type: 'image/jpeg', name: `${width}.jpg` });
 };

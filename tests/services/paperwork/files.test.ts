@@ -167,6 +167,14 @@ describe('a photograph', () => {
     for (const answer of again) expect(answer).toEqual({ ok: true, value: confirmed });
   });
 
+  it('shows a preview to whoever asks before the job has run', async () => {
+    const { fileId } = await send({ bytes: await picture(900, 600) });
+    const preview = must(
+      await openPreview(paddock.ports(), paddock.competitor, { fileId, width: 640 }),
+    );
+    expect((await sharp(Buffer.from(preview.bytes)).metadata()).width).toBe(640);
+  });
+
   it('shows previews without the place where it was taken; the original keeps its bytes', async () => {
     const bytes = await sharp(await picture(1200, 800))
       .withExif({
