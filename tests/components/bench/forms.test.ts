@@ -51,9 +51,9 @@ import { faultsByField, typedFrom } from '@/components/bench/typed';
 import { assessRequest } from '@/contracts/bench/assess';
 import { clearanceRequest } from '@/contracts/bench/clearance';
 import { engineRequest } from '@/contracts/bench/engine';
-import { readBody } from '@/contracts/read-body';
 import { temperatureRequest } from '@/contracts/bench/temperature';
 import { uncertaintyRequest } from '@/contracts/bench/uncertainty';
+import { readBody } from '@/contracts/read-body';
 import { invalid } from '@/domain/failure';
 
 const typed = (query: string, groups: readonly FieldGroup[]) =>
