@@ -5,6 +5,7 @@ import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import { Remedies } from '../finding/Remedies';
 import { Mark } from '../look/Mark';
 import { markOfState, wordOfState } from '../look/status';
+import { DeclaredStrips } from './DeclaredStrips';
 
 const WORTH_NAMING: readonly State[] = ['outside', 'does-not-comply', 'too-close'];
 
@@ -55,10 +56,12 @@ export const CheckList = ({ results, rules, facts }: CheckListProps) => (
             {rules.clauses
               .filter(({ number }) => number === result.clause)
               .map((clause) => (
-                <Remedies
-                  key={clause.number}
-                  bores={remediesInClass(clause, { clauses: rules.clauses, results }, facts)}
-                />
+                <div key={clause.number}>
+                  <DeclaredStrips clause={clause} result={result} />
+                  <Remedies
+                    bores={remediesInClass(clause, { clauses: rules.clauses, results }, facts)}
+                  />
+                </div>
               ))}
           </div>
         </li>

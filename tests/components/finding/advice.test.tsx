@@ -48,5 +48,7 @@ describe('advice at a bore', () => {
     );
     expect(shown).toContain('Values as declared, without uncertainty');
     expect(shown.match(/What can be done about this bore/g)).toHaveLength(1);
+    expect(shown).toMatch(/Each value against the limit.*<svg.*reading .*max.*, in 0\.001 in/);
+    expect(shown).toMatch(/class="note">[^<]*lies past the limit/);
   });
 });
