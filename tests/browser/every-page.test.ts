@@ -11,6 +11,7 @@ const PEOPLE: readonly (readonly [prefix: string, person: string | null])[] = [
   ['/barn', 'Oona Brannick'],
   ['/crib', 'Marit Quell'],
   ['/office/series/new', 'Ada Thornmere'],
+  ['/office/record', 'Ada Thornmere'],
   ['/office', 'Ilse Törnkvist'],
   ['/panel', 'Tamsin Orrick'],
   ['/series/[slug]/rulebooks/[class]/ask', 'Wren Halloway'],

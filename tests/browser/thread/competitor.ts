@@ -115,8 +115,8 @@ export const handIn = async (competitor: Visitor, version: number): Promise<stri
   expect(words).toContain('Acceptance is not approval of the engine.');
   await look(competitor, `hand-in-${version}`);
   await page.getByRole('button', { name: `Hand in version ${version}` }).click();
-  await page.getByText(/^Version \d+, SHA-256/).waitFor();
+  await page.getByText(/^Version \d+, ledger line \d+, SHA-256/).waitFor();
   await look(competitor, `handed-in-${version}`);
-  const receipt = await page.getByText(/^Version \d+, SHA-256/).textContent();
+  const receipt = await page.getByText(/^Version \d+, ledger line \d+, SHA-256/).textContent();
   return /[0-9a-f]{64}/.exec(receipt ?? '')?.[0] ?? '';
 };
