@@ -170,7 +170,7 @@ test('from the rulebook to the published verdict and its correction', {
     await readPublicPages(stranger, story, notice);
     await lookAtPublicPages(await enter(SMALL), story, number);
     await competitor.open('/paddock');
-    await competitor.page.getByRole('link', { name: number }).waitFor();
+    await competitor.page.getByRole('link', { name: `notice ${number}` }).waitFor();
     await look(competitor, 'paddock-decided');
 
     await correctReport(inspector, inspectionId, CORRECTION);
