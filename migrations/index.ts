@@ -10,6 +10,9 @@ import { RulesQuestions } from './0008-rules-questions';
 import { Draws } from './0009-draws';
 import { RowsByAct } from './0010-rows-by-act';
 import { Erasure } from './0011-erasure';
+import { StrokesAndRetention } from './0012-strokes-and-retention';
+import { BulletinsRead } from './0013-bulletins-read';
+import { EventDay } from './0018-event-day';
 
 /** In order of application. A new migration is added here by hand. */
 export const migrationsList: MigrationObject[] = [
@@ -24,4 +27,7 @@ export const migrationsList: MigrationObject[] = [
   { name: '0009-draws', class: Draws },
   { name: '0010-rows-by-act', class: RowsByAct },
   { name: '0011-erasure', class: Erasure },
+  { name: '0012-strokes-and-retention', class: StrokesAndRetention },
+  { name: '0013-bulletins-read', class: BulletinsRead },
+  { name: '0018-event-day', class: EventDay },
 ];

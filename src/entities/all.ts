@@ -1,7 +1,9 @@
+import { ColumnChoice } from './event/column-choice';
 import { Entry } from './event/entry';
 import { Event } from './event/event';
 import { GaugeRow } from './event/gauge';
 import { Inspection } from './event/inspection';
+import { Interest } from './event/interest';
 import { NoticeCounter } from './event/notice-counter';
 import { VerdictDraft } from './event/verdict-draft';
 import { Car } from './paperwork/car';
@@ -41,8 +43,10 @@ export const entities = [
   KeptFile,
   Event,
   Entry,
+  ColumnChoice,
   GaugeRow,
   Inspection,
+  Interest,
   VerdictDraft,
   NoticeCounter,
 ];

@@ -26,6 +26,13 @@ export const LINE_KINDS = [
   'appeal-handed-in',
   'appeal-decided',
   'inspection-changed',
+  'clarification-withdrawn',
+  'bulletin-acknowledged',
+  'entries-changed',
+  'results-official',
+  'results-taken-back',
+  'event-cleared',
+  'interest-declared',
 ] as const;
 
 export type LineKind = (typeof LINE_KINDS)[number];

@@ -28,6 +28,13 @@ const WORDS: { readonly [K in LineKind]: string } = {
   'appeal-handed-in': 'An appeal was handed in.',
   'appeal-decided': 'An appeal was decided.',
   'inspection-changed': 'The state of an inspection changed.',
+  'clarification-withdrawn': 'A clarification of a clause was withdrawn.',
+  'bulletin-acknowledged': 'Somebody said to have read a bulletin.',
+  'entries-changed': 'Entries were changed on the day, each with its reason.',
+  'results-official': 'The results of a class became official.',
+  'results-taken-back': 'Results that were official became unofficial again.',
+  'event-cleared': 'The checks of an event without teardown were signed.',
+  'interest-declared': 'An inspector’s interest in a competitor was declared or ended.',
 };
 
 /** Kinds of later versions are shown by their own name. */

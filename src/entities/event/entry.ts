@@ -11,6 +11,9 @@ export const Entry = defineEntity({
     carNumber: p.text(),
     competitorId: p.uuid().nullable(),
     competitorName: p.text(),
+    driver: p.text().default(''),
+    /** Lap times as they were written, in order. */
+    laps: p.json<readonly string[]>().default('[]'),
     engineReference: p.text(),
     paperworkId: p.uuid().nullable(),
     position: p.integer().nullable(),

@@ -22,6 +22,8 @@ export const Inspection = defineEntity({
     stateReason: p.text(),
     correctionReason: p.text(),
     bay: p.text(),
+    /** Where it is taken apart, when that is not the event's own barn. */
+    place: p.text().default(''),
     inspectorId: p.uuid().nullable(),
     openedAt: p.datetime().nullable(),
     closedAt: p.datetime().nullable(),

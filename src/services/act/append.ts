@@ -8,6 +8,8 @@ import type { Random } from '../ports';
 /** Tables of the record; each has an append function of the same name and takes rows in its columns' names. */
 export type AppendTable =
   | 'rule_publication'
+  | 'bulletin_engine'
+  | 'bulletin_acknowledgement'
   | 'paperwork_version'
   | 'paperwork_decision'
   | 'capture_batch'
@@ -20,7 +22,11 @@ export type AppendTable =
   | 'draw'
   | 'draw_end'
   | 'draw_secret'
-  | 'erasure';
+  | 'erasure'
+  | 'entry_change'
+  | 'result_statement'
+  | 'event_check'
+  | 'event_clearance';
 
 /** A document's exact text, or the SHA-256 of something kept elsewhere, a PDF. */
 export type LineContent = { readonly open: boolean } & (
