@@ -31,7 +31,11 @@ export const budgetLines = (components: readonly UncertaintyComponent[]): readon
       const size = contribution(component);
       const share = variance === 0 ? 0 : size ** 2 / variance;
       return {
-        ...component,
+        name: component.name,
+        standardUncertainty: component.standardUncertainty,
+        sensitivity: component.sensitivity,
+        degreesOfFreedom: component.degreesOfFreedom,
+        words: component.words,
         contribution: size,
         share,
         sentence: sentence(component.words, share),

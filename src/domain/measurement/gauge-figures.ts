@@ -53,21 +53,21 @@ export const calibrationOf = (
   words: string,
   sensitivity = 1,
 ): UncertaintyComponent => {
-  const { certificate } = gauge;
-  const common = { name: `calibration: ${gauge.kind}`, sensitivity, words };
+  const { certificate, kind } = gauge;
+  const named = (standardUncertainty: number, degreesOfFreedom: number | null) => ({
+    name: `calibration: ${kind}`,
+    standardUncertainty,
+    sensitivity,
+    degreesOfFreedom,
+    words,
+  });
   if (certificate !== undefined)
-    return {
-      ...common,
-      standardUncertainty: baseNumber(certificate.expandedUncertainty) / certificate.coverageFactor,
-      degreesOfFreedom: certificate.degreesOfFreedom ?? null,
-    };
-  const halfWidth =
-    gauge.kind === 'scale' || gauge.kind === 'other' ? divisionOf(gauge) : HALF_WIDTHS[gauge.kind];
-  return {
-    ...common,
-    standardUncertainty: rectangular(toNumber(halfWidth)),
-    degreesOfFreedom: null,
-  };
+    return named(
+      baseNumber(certificate.expandedUncertainty) / certificate.coverageFactor,
+      certificate.degreesOfFreedom ?? null,
+    );
+  const halfWidth = kind === 'scale' || kind === 'other' ? divisionOf(gauge) : HALF_WIDTHS[kind];
+  return named(rectangular(toNumber(halfWidth)), null);
 };
 
 /** Reading to whole divisions; `readings` is how many independent readings make the result (zero and bore: 2). */

@@ -1,16 +1,14 @@
-import { max, min, type Rational, sub } from '../quantity/rational';
+import { commonDivisor, max, min, type Rational, sub } from '../quantity/rational';
 
 /** At least one value; an empty series is a defect and throws. */
 export type Series = readonly Rational[];
-
-const gcd = (a: bigint, b: bigint): bigint => (b === 0n ? a : gcd(b, a % b));
 
 /** The values as whole numbers over one denominator, so that sums stay cheap and exact. */
 export const overOne = (
   series: Series,
 ): { readonly tops: readonly bigint[]; readonly d: bigint } => {
   let d = 1n;
-  for (const value of series) if (d % value.d !== 0n) d = (d / gcd(d, value.d)) * value.d;
+  for (const value of series) if (d % value.d !== 0n) d = (d / commonDivisor(d, value.d)) * value.d;
   return { tops: series.map((value) => value.n * (d / value.d)), d };
 };
 

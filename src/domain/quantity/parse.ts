@@ -3,7 +3,7 @@ import { type Dimension, dimensionWords, type Written } from './dimension';
 import { dimensionsOf, findUnit, getUnit, unitSymbols } from './find-unit';
 import { readNumber } from './number-text';
 import type { Quantity } from './quantity';
-import { abs, add, compare, fromDecimalText, mul, type Rational, rational } from './rational';
+import { abs, add, compare, fromDecimalText, mul, type Rational } from './rational';
 import { findDegreesAndMinutes } from './text/angle-text';
 import { type ParseFault, refuse, refuseNumber, unknownUnit } from './text/parse-fault';
 import type { Unit } from './unit';
@@ -59,7 +59,7 @@ const taken = <D extends Dimension>(
   const value = inBase(fromDecimalText(plain), unit);
   if (dimension === 'temperature' && value.n < 0n)
     return refuse('impossible', `${text} ${symbol} is below absolute zero.`);
-  if (dimension === 'count' && value.d !== 1n)
+  if (dimension === 'count' && value.n % value.d !== 0n)
     return refuse('impossible', `A count is a whole number, not ${text}.`);
   if (compare(abs(value), dimension === 'length' ? LARGEST_LENGTH : LARGEST) > 0)
     return refuse('impossible', `${text} ${symbol} is too large to have been measured.`);
@@ -77,9 +77,7 @@ export const parseWritten = <D extends Dimension>(
 
 const inBase = (number: Rational, unit: Unit): Rational => {
   const scaled = mul(number, unit.factor);
-  if (unit.offset === undefined) return scaled;
-  const { n, d } = add(scaled, unit.offset);
-  return rational(n, d);
+  return unit.offset === undefined ? scaled : add(scaled, unit.offset);
 };
 
 const unitNamed = <D extends Dimension>(

@@ -12,7 +12,7 @@ export interface Quantity<D extends Dimension = Dimension> extends Written {
   readonly value: exact.Rational;
 }
 
-/** From an exact value in the base, kept in lowest terms. Its text is the exact decimal, or ten places where there is none. */
+/** From an exact value in the base. Its text is the exact decimal, or ten places where there is none. */
 export const quantityOf = <D extends Dimension>(
   dimension: D,
   value: exact.Rational,
@@ -22,7 +22,7 @@ export const quantityOf = <D extends Dimension>(
   const shifted = unit.offset === undefined ? value : exact.sub(value, unit.offset);
   const { factor } = unit;
   const text = decimalText({ n: shifted.n * factor.d, d: shifted.d * factor.n }, 10);
-  return { dimension, text, unit: unit.symbol, value: exact.rational(value.n, value.d) };
+  return { dimension, text, unit: unit.symbol, value };
 };
 
 const refuseMix = (a: Quantity, b: Quantity): void => {

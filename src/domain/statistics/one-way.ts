@@ -1,3 +1,4 @@
+import { commonDivisor } from '../quantity/rational';
 import { commonScale, quotient, scaledQuotient, unitsAt } from './decimal';
 import { fTail } from './incomplete-beta';
 
@@ -38,7 +39,7 @@ export function oneWay(groups: readonly (readonly string[])[]): OneWay {
     squares += units.reduce((a, x) => a + x * x, 0n);
     total += sum;
     const size = BigInt(units.length);
-    const common = (denominator / gcd(denominator, size)) * size;
+    const common = (denominator / commonDivisor(denominator, size)) * size;
     numerator = numerator * (common / denominator) + sum * sum * (common / size);
     denominator = common;
   }
@@ -61,8 +62,4 @@ export function oneWay(groups: readonly (readonly string[])[]): OneWay {
     F,
     p: F === null ? null : fTail(F, dfBetween, dfWithin),
   };
-}
-
-function gcd(a: bigint, b: bigint): bigint {
-  return b === 0n ? a : gcd(b, a % b);
 }

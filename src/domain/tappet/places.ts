@@ -20,16 +20,26 @@ export const placesOf = (readings: readonly Corrected[]): readonly Place[] => {
     if (group === undefined) groups.set(key, { depth, axis, repeats: [value] });
     else group.repeats.push(value);
   }
-  return [...groups.values()].map((group) => ({
-    ...group,
-    value: group.repeats.length === 1 ? (group.repeats[0] as Rational) : mean(group.repeats),
+  return [...groups.values()].map(({ depth, axis, repeats }) => ({
+    depth,
+    axis,
+    repeats,
+    value: repeats.length === 1 ? (repeats[0] as Rational) : mean(repeats),
   }));
 };
 
-export const depthsOf = (places: readonly Place[]): readonly string[] => [
-  ...new Set(places.map((place) => place.depth)),
-];
+interface Placed {
+  readonly depth: string;
+  readonly axis: string;
+}
 
-export const axesOf = (places: readonly Place[]): readonly string[] => [
-  ...new Set(places.map((place) => place.axis)),
-];
+const unlike = (names: readonly string[]): readonly string[] =>
+  names.filter((name, at) => names.indexOf(name) === at);
+
+/** Each depth once, in the order of first reading. */
+export const depthsOf = (places: readonly Placed[]): readonly string[] =>
+  unlike(places.map((place) => place.depth));
+
+/** Each axis once, in the order of first reading. */
+export const axesOf = (places: readonly Placed[]): readonly string[] =>
+  unlike(places.map((place) => place.axis));

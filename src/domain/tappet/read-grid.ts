@@ -28,13 +28,13 @@ export const readGrid = (
       repeats.forEach((text, repeatAt) => {
         const depth = options.depths?.[depthAt] ?? `depth ${depthAt + 1}`;
         const axis = options.axes?.[axisAt] ?? `axis ${axisAt + 1}`;
-        const place = { depth, axis, order: options.order?.[readings.length] };
+        const order = options.order?.[readings.length];
         if (text.trim() === '') {
-          readings.push({ ...place, reading: null });
+          readings.push({ depth, axis, order, reading: null });
           return;
         }
         const read = parseQuantity(text, { dimension: 'length', defaultUnit: unit });
-        if (read.ok) readings.push({ ...place, reading: read.value });
+        if (read.ok) readings.push({ depth, axis, order, reading: read.value });
         else {
           const at = typeof cell === 'string' ? '' : `/${repeatAt}`;
           faults.push({ pointer: `/${depthAt}/${axisAt}${at}`, detail: read.failure.detail });

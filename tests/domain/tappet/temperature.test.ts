@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { getMaterial } from '@/domain/measurement/material';
+import { equal, one, zero } from '@/domain/quantity/rational';
 import { measureBore } from '@/domain/tappet/measure-bore';
 import { degrees, inches } from '../quantity/build';
 import { grid, sheet } from './build';
@@ -48,7 +49,12 @@ describe('clearance at 20 °C (ISO 1)', () => {
       gauge: degrees('20 °C'),
     };
     const found = hot({ temperatures });
-    expect(found.clearanceAt20C).toEqual(found.clearance);
+    for (const figure of ['mean', 'min', 'max'] as const) {
+      expect(found.clearanceAt20C?.[figure].text).toBe(found.clearance?.[figure].text);
+      expect(
+        equal(found.clearanceAt20C?.[figure].value ?? zero, found.clearance?.[figure].value ?? one),
+      ).toBe(true);
+    }
   });
 
   it('a warm ring and a warm micrometer are counted apart', () => {

@@ -1,14 +1,13 @@
 import type { BoreSheet } from '../bore-sheet';
-
-const unique = (values: readonly string[]): readonly string[] => [...new Set(values)];
+import { axesOf, depthsOf } from '../places';
 
 /**
  * What the sheet of one bore lacks, in words. A full sheet has a reading on every axis at every depth,
  * at two depths and on two axes at least, the lifter where its size is needed, and both zeros or none.
  */
 export const missingOf = (sheet: BoreSheet): readonly string[] => {
-  const depths = unique(sheet.bore.map((place) => place.depth));
-  const axes = unique(sheet.bore.map((place) => place.axis));
+  const depths = depthsOf(sheet.bore);
+  const axes = axesOf(sheet.bore);
   const read = new Set(
     sheet.bore.flatMap(({ depth, axis, reading }) =>
       reading === null ? [] : [`${depth}, ${axis}`],
