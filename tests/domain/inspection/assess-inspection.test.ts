@@ -5,7 +5,7 @@ import type { ReadingRow } from '@/domain/inspection/capture/rows';
 import { neededPerBore } from '@/domain/inspection/completeness';
 import { declaredAgainstFound } from '@/domain/inspection/declared-against-found';
 import { positionsIn } from '@/domain/inspection/found-facts';
-import { secondSetsWanted } from '@/domain/inspection/second-set';
+import { secondSetsWanted } from '@/domain/inspection/second-set/wanted';
 import { facts, number } from '../rulebook/build';
 import {
   atIntake,
@@ -44,6 +44,17 @@ describe('clearance', () => {
       value: { text: '0.0017', unit: 'in' },
       exact: { text: '0.0017' },
     });
+  });
+
+  it('averages true repeats at one place of the lifter, so that no place weighs more than another', () => {
+    const readings = [
+      body('r1', '0.8424'),
+      body('r2', '0.8424', { repeat: 2 }),
+      body('r5', '0.8424', { repeat: 3 }),
+      body('r6', '0.8422', { axis: 'across' }),
+      ...absolute.slice(2),
+    ];
+    expect(atIntake('4.6', { readings }).exact?.text).toBe('0.0017');
   });
 
   it('by the comparative method is the reading itself, sign and drift taken out', () => {

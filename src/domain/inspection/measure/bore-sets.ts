@@ -1,6 +1,7 @@
-import type { Quantity } from '../../quantity/quantity';
+import { type Quantity, quantityOf } from '../../quantity/quantity';
 import { fromStored } from '../../quantity/stored';
 import type { BoreSheet, Length, PlaceReading, Temperatures } from '../../tappet/bore-sheet';
+import { placesOf } from '../../tappet/places';
 import type { JudgedReading } from '../capture/readings-that-count';
 import { type LoggedTemperatures, positionKey } from '../capture/rows';
 import { type Capture, findGauge, runsOf, standingRun, zerosOf } from './runs';
@@ -34,6 +35,21 @@ const temperaturesOf = (readings: readonly JudgedReading[]): Temperatures | unde
   };
 };
 
+/** A diameter for each height and axis of a part: repeats at one place are averaged, form is kept. */
+const diametersByPlace = (readings: readonly JudgedReading[], unit: string): readonly Length[] =>
+  placesOf(
+    readings.map((reading) => ({
+      depth: reading.row.depth,
+      axis: reading.row.axis,
+      value: lengthOf(reading).value,
+    })),
+  ).map(({ depth, axis, repeats, value }) => {
+    const only = readings.find(({ row }) => row.depth === depth && row.axis === axis);
+    return only !== undefined && repeats.length === 1
+      ? lengthOf(only)
+      : quantityOf('length', value, unit);
+  });
+
 const sheetOf = (
   capture: Capture,
   bore: readonly JudgedReading[],
@@ -53,7 +69,7 @@ const sheetOf = (
   return {
     unit: capture.unit,
     method: comparative ? 'comparative' : 'absolute',
-    lifter: lifter.map(lengthOf),
+    lifter: diametersByPlace(lifter, capture.unit),
     bore: places,
     zeroSize:
       opening?.zeroedOn === 'ring' && opening.size !== undefined
@@ -99,7 +115,7 @@ export const boreSetsOf = (capture: Capture, key: string): readonly BoreSet[] =>
       set,
       runId: bore[0]?.row.zeroRunId,
       sheet: sheetOf(capture, bore, lifter),
-      foot: feet.map(lengthOf),
+      foot: diametersByPlace(feet, capture.unit),
       used,
       superseded: all.filter((reading) => !bore.includes(reading)),
     });
