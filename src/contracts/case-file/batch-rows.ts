@@ -19,6 +19,10 @@ const batchShape = z.looseObject({
   clockOffsetMs: z.string().check(z.regex(/^-?\d{1,12}$/)),
   /** Why none of the batch counts. */
   received: z.optional(z.string()),
+  /** The server's clock; ISO 8601 in UTC. */
+  receivedAt: z.optional(z.string()),
+  /** Why a row that counts supports no breach, by its id. */
+  marked: z.optional(z.record(z.string(), z.string())),
   rows: z.array(loose),
 });
 

@@ -1,4 +1,5 @@
 import * as z from 'zod/mini';
+import { areStrokes } from '@/domain/inspection/strokes';
 
 const act = z.uuid('The act needs its identifier.');
 const reason = z.string().check(z.maxLength(500, 'Write at most 500 characters.'));
@@ -14,12 +15,19 @@ export const stateRequest = z.strictObject({
   act,
   to: z.enum(['open', 'hold', 'resume', 'refuse', 'stop', 'defer'], 'This cannot be asked for.'),
   reason,
+  place: z.optional(z.string().check(z.maxLength(200, 'At most 200 characters.'))),
+  seals: z.optional(z.string().check(z.maxLength(200, 'At most 200 characters.'))),
+  bag: z.optional(z.string().check(z.maxLength(60, 'At most 60 characters.'))),
 });
 
 export const signRequest = z.strictObject({
   act,
   /** The chain's head as the signer saw it, hexadecimal: what is signed is what was read. */
   head: z.string().check(z.regex(/^[0-9a-f]{64}$/, 'The report’s state is missing.')),
+  /** Evidence beside the signature, never instead of it; kept as drawn. */
+  strokes: z.optional(
+    z.array(z.string()).check(z.refine(areStrokes, 'These are no pen strokes of the pad.')),
+  ),
 });
 
 export const reviseRequest = z.strictObject({

@@ -17,16 +17,28 @@ export type AppendTable =
   | 'reading'
   | 'remark'
   | 'report'
+  | 'signature_strokes'
   | 'verdict'
   | 'notice_pdf'
   | 'draw'
   | 'draw_end'
   | 'draw_secret'
   | 'erasure'
+  | 'engine_transfer'
+  | 'engine_swap'
+  | 'guardian_signature'
+  | 'paperwork_withdrawal'
   | 'entry_change'
   | 'result_statement'
   | 'event_check'
-  | 'event_clearance';
+  | 'event_clearance'
+  | 'gauge_entry'
+  | 'gauge_check'
+  | 'gauge_fault'
+  | 'review_act'
+  | 'held_part'
+  | 'custody_act'
+  | 'seal_act';
 
 /** A document's exact text, or the SHA-256 of something kept elsewhere, a PDF. */
 export type LineContent = { readonly open: boolean } & (

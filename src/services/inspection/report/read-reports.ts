@@ -14,6 +14,8 @@ export interface SignedReport {
   readonly line: string | null;
   /** Canonical JSON. */
   readonly document: string;
+  /** The pen strokes beside the signature: their document; null where there are none, or none left. */
+  readonly strokes: string | null;
 }
 
 /** Every revision of an inspection's report, the first one first. */
@@ -26,9 +28,11 @@ export const readReports = (
     `select r.revision, r.reason, encode(r.hash, 'hex') as hash,
             encode(r.chain_head, 'hex') as "chainHead", r.signed_by as "signedBy", p.name as signer,
             to_char(r.signed_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"') as "signedAt",
-            l.index as line, r.document
+            l.index as line, r.document, k.strokes
      from record.report r join public.person p on p.id = r.signed_by
      left join record.ledger_line l on l.series_id = r.series_id and l.act_id = r.act_id
+     left join record.signature_strokes k on k.series_id = r.series_id
+       and k.inspection_id = r.inspection_id and k.revision = r.revision
      where r.series_id = ? and r.inspection_id = ? order by r.revision`,
     [seriesId, inspectionId],
   );

@@ -1,7 +1,8 @@
 import { LockMode } from '@mikro-orm/core';
 import type { Actor } from '@/domain/access/permission';
-import { absent, type Failure, failure, stale } from '@/domain/failure';
+import { absent, type Failure, failure, invalid, stale } from '@/domain/failure';
 import { nextState } from '@/domain/inspection/state';
+import { areStrokes, strokesDocument } from '@/domain/inspection/strokes';
 import { sha256, toHex, utf8 } from '@/domain/ledger/bytes';
 import { fail, ok, type Result } from '@/domain/result';
 import { Inspection } from '@/entities/event/inspection';
@@ -28,14 +29,20 @@ export interface Signed {
 /**
  * Signs the report as the rows stand and closes the inspection. `head` is the chain's head as the
  * signer saw it: if anything came in since, nothing is signed. A correction becomes the next
- * revision, with its reason; the ones before it stay.
+ * revision, with its reason; the ones before it stay. Pen strokes are kept beside the signature,
+ * which is the fresh authentication with or without them.
  */
 export const signReport = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
   actor: Actor,
-  input: { readonly act: string; readonly inspectionId: string; readonly head: string },
+  input: {
+    readonly act: string;
+    readonly inspectionId: string;
+    readonly head: string;
+    readonly strokes?: readonly string[] | undefined;
+  },
 ): Promise<Result<Signed, Failure>> => {
-  const { act, inspectionId, head } = input;
+  const { act, inspectionId, head, strokes = [] } = input;
   const seen = await findInspectionRow(deps.db, actor, 'inspection.record', inspectionId);
   if (seen === null || !worksOn(actor, seen)) return fail(absent());
   if (!isFresh(actor, deps.clock.now()))
@@ -45,11 +52,17 @@ export const signReport = async (
         `A signature needs a sign-in of the last ${FRESH_MINUTES} minutes. Sign in once more, then sign the report.`,
       ),
     );
+  if (strokes.length > 0 && !areStrokes(strokes)) {
+    const detail =
+      'These are no pen strokes of the pad. Clear it and sign again, or leave it empty.';
+    return fail(invalid([{ pointer: '/strokes', detail }]));
+  }
   const { seriesId } = seen;
+  const drawn = strokes.length > 0 ? { strokes: [...strokes] } : {};
   return performAct(
     deps,
     actor,
-    { id: act, kind: 'sign-report', seriesId, input: { inspectionId, head } },
+    { id: act, kind: 'sign-report', seriesId, input: { inspectionId, head, ...drawn } },
     async ({ em, at, append, line }) => {
       const inspection = await em.findOneOrFail(
         Inspection,
@@ -94,6 +107,11 @@ export const signReport = async (
           signed_at: at.toISOString(),
         },
       ]);
+      const pen = strokes.length === 0 ? undefined : strokesDocument(toHex(hash), strokes);
+      if (pen !== undefined)
+        append('signature_strokes', [
+          { series_id: seriesId, inspection_id: inspectionId, revision: number, strokes: pen },
+        ]);
       inspection.state = 'closed';
       inspection.stateReason = '';
       inspection.correctionReason = '';
@@ -101,7 +119,10 @@ export const signReport = async (
       line({
         seriesId,
         kind: number === 1 ? 'report-signed' : 'report-revised',
-        contents: { report: { text: document, open: false } },
+        contents: {
+          report: { text: document, open: false },
+          ...(pen !== undefined && { strokes: { text: pen, open: false } }),
+        },
         refs: {
           inspection: inspectionId,
           revision: String(number),

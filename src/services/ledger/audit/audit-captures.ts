@@ -17,12 +17,21 @@ interface BatchRow {
   readonly document: string;
   readonly head: string;
   readonly act: string;
+  readonly receivedAt: string;
 }
 
 type Row = Readonly<Record<string, unknown>>;
 
-/** What the server itself adds to a row: not in what the tablet sent, so nothing to hold it against. */
-const OWN = new Set(['received_at', 'standing_reason']);
+/** Texts of before they named these hold no row to them. */
+const UNNAMED = new Set(['received_at', 'standing_reason']);
+
+const findText = (document: string) => {
+  try {
+    return rawBatch(document);
+  } catch {
+    return undefined;
+  }
+};
 
 const plain = (value: unknown): string => {
   if (value === undefined || value === null) return 'null';
@@ -34,12 +43,18 @@ const plain = (value: unknown): string => {
 
 /** The rows as the batch's document gives them, by table and id. */
 const expectedRows = (batch: BatchRow, seriesId: string): ReadonlyMap<string, Row> => {
-  const { by, clockOffsetMs, received, rows } = rawBatch(batch.document);
   const expected = new Map<string, Row>();
+  const text = findText(batch.document);
+  if (text === undefined) return expected;
+  const { by, clockOffsetMs, received, receivedAt, marked = {}, rows } = text;
   appendRows(
     (table, made) => {
       for (const row of made) {
-        expected.set(`${table}/${String(row['id'])}`, { ...hexBytes(row), act_id: batch.act });
+        expected.set(`${table}/${String(row['id'])}`, {
+          ...hexBytes(row),
+          act_id: batch.act,
+          received_at: receivedAt,
+        });
       }
     },
     {
@@ -49,7 +64,7 @@ const expectedRows = (batch: BatchRow, seriesId: string): ReadonlyMap<string, Ro
       takenBy: by,
       clockOffsetMs,
       receivedBecause: received,
-      marks: new Map(),
+      marks: new Map(Object.entries(marked)),
     },
     rows,
   );
@@ -58,10 +73,11 @@ const expectedRows = (batch: BatchRow, seriesId: string): ReadonlyMap<string, Ro
 
 const rowFaults = (key: string, expected: Row, kept: Row): readonly AuditFault[] => {
   const [table = '', id = ''] = key.split('/');
-  const wrong = Object.keys(kept).filter((column) => {
-    if (OWN.has(column) && expected[column] == null) return false;
-    return plain(expected[column]) !== plain(kept[column]);
-  });
+  const wrong = Object.keys(kept).filter(
+    (column) =>
+      plain(expected[column]) !== plain(kept[column]) &&
+      (expected['received_at'] !== undefined || !UNNAMED.has(column)),
+  );
   return wrong.length === 0
     ? []
     : [faultIn(`record.${table}`)(id, `The batch says otherwise of: ${wrong.join(', ')}.`)];
@@ -86,10 +102,17 @@ const chainFaults = (batches: readonly BatchRow[], heads: Map<string, Set<string
       faults.push(inBatch(what, 'It does not follow the one before.'));
     at = Uint8Array.from(chainNextHash(at, sha256(utf8(batch.document))));
     if (batch.head !== toHex(at)) faults.push(inBatch(what, 'Its text does not give its head.'));
-    const { inspection: said, act } = rawBatch(batch.document);
+    heads.get(inspection)?.add(toHex(at));
+    const text = findText(batch.document);
+    if (text === undefined) {
+      faults.push(inBatch(what, 'Its text is none of a batch.'));
+      continue;
+    }
+    const { inspection: said, act, receivedAt } = text;
     if (said !== inspection) faults.push(inBatch(what, 'Its text names another inspection.'));
     if (act !== batch.act) faults.push(inBatch(what, 'Its text names another act.'));
-    heads.get(inspection)?.add(toHex(at));
+    if (receivedAt !== undefined && plain(receivedAt) !== plain(batch.receivedAt))
+      faults.push(inBatch(what, 'Its text says another time of receipt.'));
   }
   return faults;
 };
@@ -102,7 +125,7 @@ export const auditCaptures = async (
 ): Promise<readonly AuditFault[]> => {
   const batches = await em.execute<BatchRow[]>(
     `select inspection_id as inspection, number, encode(previous, 'hex') as previous, document,
-            encode(head, 'hex') as head, act_id as act
+            encode(head, 'hex') as head, act_id as act, to_json(received_at) #>> '{}' as "receivedAt"
      from record.capture_batch where series_id = ? order by inspection_id, number`,
     [seriesId],
   );

@@ -70,7 +70,7 @@ export const auditLedger = async (
       ? []
       : [faultIn('record.checkpoint')(`head ${at + 1} that was brought`, 'It is no longer kept.')],
   );
-  const { contents, acts, files } = await readErasures(db, seriesId, grown.lines);
+  const erasures = await readErasures(db, seriesId, grown.lines);
   return {
     lines: grown.size,
     heads: heads.length,
@@ -78,11 +78,11 @@ export const auditLedger = async (
       ...grown.faults,
       ...dropped,
       ...heads.flatMap((head) => headFaults(head, seriesId, keys, grown)),
-      ...(await auditContents(db, seriesId, grown.lines, contents)),
-      ...(await auditRows(db, seriesId, grown.lines, acts)),
+      ...(await auditContents(db, seriesId, grown.lines, erasures.contents)),
+      ...(await auditRows(db, seriesId, grown.lines, erasures)),
       ...(await auditRules(db, seriesId, grown.lines)),
       ...(await auditCaptures(db, seriesId, grown.lines)),
-      ...(await auditObjects(deps, seriesId, files)),
+      ...(await auditObjects(deps, seriesId, erasures.files)),
     ],
   };
 };

@@ -78,7 +78,11 @@ export const handlePost = async (
   }
   if (what === 'sign')
     return say(
-      await signReport(ports, actor, { ...base, head: text('head') }),
+      await signReport(ports, actor, {
+        ...base,
+        head: text('head'),
+        strokes: text('strokes').split(';').filter(Boolean),
+      }),
       `${page}?signed=yes`,
     );
   if (what === 'correct')
