@@ -2,6 +2,7 @@ import { remediesInClass } from '@/domain/inspection/remedies-in-class';
 import type { ClauseResult, PositionResult, State } from '@/domain/rulebook/clause-result';
 import type { Facts } from '@/domain/rulebook/evaluate/facts';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
+import { Budgets } from '../finding/Budgets';
 import { Remedies } from '../finding/Remedies';
 import { Mark } from '../look/Mark';
 import { markOfState, wordOfState } from '../look/status';
@@ -25,10 +26,11 @@ interface CheckListProps {
 export const CheckList = ({ results, rules, facts }: CheckListProps) => (
   <>
     <details>
-      <summary>Values as declared, without uncertainty</summary>
+      <summary>Where ± U comes from in this check</summary>
       <p>
-        A declared value does not say by which gauge it was measured, so no U can be worked out for
-        it here. What an inspector measures has one, and can fall on the other side of a near limit.
+        A declaration does not say by which gauge a value was measured. For lifters and bores this
+        check takes a micrometer and a dial bore gauge of 0.0001 in as they usually are; other
+        values stand without U. An inspector’s gauges have their own, and what he measures counts.
       </p>
     </details>
     <ul>
@@ -58,6 +60,7 @@ export const CheckList = ({ results, rules, facts }: CheckListProps) => (
               .map((clause) => (
                 <div key={clause.number}>
                   <DeclaredStrips clause={clause} result={result} />
+                  <Budgets results={result.perPosition} />
                   <Remedies
                     bores={remediesInClass(clause, { clauses: rules.clauses, results }, facts)}
                   />

@@ -21,12 +21,25 @@ export const DeclaredStrips = ({ clause, result }: DeclaredStripsProps) => {
     <details className="mt-1">
       <summary>Each value against the limit</summary>
       <ul>
-        {rows.map(({ row, shown: { value, unit, strip } }) => (
+        {rows.map(({ row, shown: { value, unit, strip, uncertainty, k } }) => (
           <li key={row.position} className="flex flex-wrap items-center gap-x-3 py-1">
             <span className="grow">{row.position}</span>
-            <span className="num">{displayNumber(value)}</span> {unit}
+            <span>
+              <span className="num">{displayNumber(value)}</span>
+              {row.uncertainty !== undefined && (
+                <>
+                  {' '}
+                  <span className="num">± {uncertainty}</span> (k = {k})
+                </>
+              )}{' '}
+              {unit}
+            </span>
             <span className="w-44 shrink-0">
-              <GaugeStrip {...strip} uncertainty={undefined} size="table" />
+              <GaugeStrip
+                {...strip}
+                uncertainty={row.uncertainty === undefined ? undefined : strip.uncertainty}
+                size="table"
+              />
             </span>
           </li>
         ))}

@@ -8,6 +8,7 @@ import {
   missingWords,
   stillMissing,
 } from '@/domain/paperwork/still-missing';
+import { withUsualUncertainty } from '@/domain/paperwork/usual-uncertainty';
 import { evaluateRules } from '@/domain/rulebook/evaluate/evaluate-rules';
 import { Caution } from '../look/Caution';
 import { CheckList } from './CheckList';
@@ -35,7 +36,7 @@ const Editor = (props: PaperworkProps) => {
     [settled, form, layout, kept],
   );
   const results = useMemo(
-    () => evaluateRules(rules, facts, { carNumber, engineId }),
+    () => evaluateRules(rules, withUsualUncertainty(facts), { carNumber, engineId }),
     [rules, facts, carNumber, engineId],
   );
   const missing = stillMissing(draft, rules, form, layout, kept);

@@ -11,6 +11,7 @@ import {
   type StillMissing,
   stillMissing,
 } from '@/domain/paperwork/still-missing';
+import { withUsualUncertainty } from '@/domain/paperwork/usual-uncertainty';
 import { fail, ok, type Result } from '@/domain/result';
 import type { ClauseResult } from '@/domain/rulebook/clause-result';
 import { evaluateRules } from '@/domain/rulebook/evaluate/evaluate-rules';
@@ -58,7 +59,7 @@ export const checkRow = async (
     files,
     declared,
     missing: stillMissing(row.draft, standing.rules, form, row.layout, kept),
-    results: evaluateRules(standing.rules, declaredFacts(declared), {
+    results: evaluateRules(standing.rules, withUsualUncertainty(declaredFacts(declared)), {
       carNumber: row.carNumber,
       engineId: row.engineId,
     }),

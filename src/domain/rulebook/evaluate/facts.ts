@@ -13,6 +13,8 @@ export interface NumberFact {
   /** In the base of the dimension; 0 for a declared value, which states none. */
   readonly standardUncertainty: number;
   readonly degreesOfFreedom?: number | null | undefined;
+  /** Whose uncertainty is that of usual gauges, not of a known one: whether it is fit is not asked. */
+  readonly assumedGauge?: boolean | undefined;
   /** What the standard uncertainty is made of, where that is known. */
   readonly budget?: readonly UncertaintyComponent[] | undefined;
   /** Why nothing can be stated from this value, neither way: `the gauge’s error is not known`. */

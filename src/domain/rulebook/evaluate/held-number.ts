@@ -44,8 +44,12 @@ export interface Held {
   readonly limit: string;
 }
 
+/** Asked of a gauge that is known. */
+const isUnfit = ({ fact }: Held, { fit }: Assessment<RuleDimension>): boolean =>
+  !fit && fact.assumedGauge !== true;
+
 const stateOf = (held: Held, assessment: Assessment<RuleDimension>): State => {
-  if (held.fact.noStatement !== undefined || !assessment.fit) return 'no-statement';
+  if (held.fact.noStatement !== undefined || isUnfit(held, assessment)) return 'no-statement';
   const breach = assessment.complies === false && held.fact.cannotSupportBreach !== undefined;
   return breach ? 'no-statement' : assessment.assessment;
 };
@@ -53,7 +57,7 @@ const stateOf = (held: Held, assessment: Assessment<RuleDimension>): State => {
 const ending = (held: Held, assessment: Assessment<RuleDimension>, state: State): string => {
   if (state !== 'no-statement') return `: ${WORDS[assessment.assessment]}.`;
   if (held.fact.noStatement !== undefined) return `: no statement, since ${held.fact.noStatement}.`;
-  if (!assessment.fit) return `: ${UNFIT}.`;
+  if (isUnfit(held, assessment)) return `: ${UNFIT}.`;
   return `: no statement, since ${held.fact.cannotSupportBreach ?? 'the reading cannot support one'}.`;
 };
 
@@ -112,7 +116,7 @@ export const heldNumber = (held: Held): PositionResult => {
     position: position.key,
     state,
     pass: silent ? null : assessment.complies,
-    fit: assessment.fit && fact.noStatement === undefined,
+    fit: fact.assumedGauge === true ? null : assessment.fit && fact.noStatement === undefined,
     figure: held.figure,
     value,
     exact: { text: shown.text, unit: shown.unit },

@@ -4,6 +4,7 @@ import { type Actor, seriesWhere } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
 import { declaredFacts } from '@/domain/paperwork/declared-facts';
 import type { PaperworkDocument } from '@/domain/paperwork/document';
+import { withUsualUncertainty } from '@/domain/paperwork/usual-uncertainty';
 import { fail, ok, type Result } from '@/domain/result';
 import type { ClauseResult } from '@/domain/rulebook/clause-result';
 import { evaluateRules } from '@/domain/rulebook/evaluate/evaluate-rules';
@@ -66,7 +67,7 @@ export const openRow = async (
   if (version === undefined || (await isErased(em, row.seriesId, row.id, number))) return undefined;
   const document = await getVersionDocument(em, row.seriesId, row.id, number);
   const rules = await getRules(em, row.seriesId, Buffer.from(version.rulesHash, 'hex'));
-  const results = evaluateRules(rules, declaredFacts(document), {
+  const results = evaluateRules(rules, withUsualUncertainty(declaredFacts(document)), {
     carNumber: document.carNumber,
     engineId: document.engine.id,
   });
