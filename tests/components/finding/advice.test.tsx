@@ -46,7 +46,9 @@ describe('advice at a bore', () => {
     const shown = renderToStaticMarkup(
       <CheckList results={findings} rules={RULES} facts={facts} />,
     );
-    expect(shown).toContain('Values as declared, without uncertainty');
+    expect(shown).toContain('Where ± U comes from in this check');
+    expect(shown).toContain('What the uncertainty is made of');
+    expect(shown).toMatch(/± 0\.\d\d<\/span> \(k = 1\.96\)/);
     expect(shown.match(/What can be done about this bore/g)).toHaveLength(1);
     expect(shown).toMatch(/Each value against the limit.*<svg.*reading .*max.*, in 0\.001 in/);
     expect(shown).toMatch(/class="note">[^<]*lies past the limit/);
