@@ -62,7 +62,16 @@ export const clarification = z.strictObject({
   question: long,
   answer: long,
   publishedAt: instant,
-  withdrawnAt: z.optional(instant),
+});
+
+export const withdrawal = z.strictObject({
+  id: key,
+  number: whole,
+  season: short,
+  clarification: whole,
+  clause: clauseNumber,
+  reason: long,
+  publishedAt: instant,
 });
 
 export const waiver = z.strictObject({

@@ -18,6 +18,7 @@ const shape = z.strictObject({
   bulletins: z.array(whole),
   clarifications: z.array(clarification),
   waivers: z.array(waiver),
+  withdrawals: z.optional(z.array(whole)),
   sources: z.array(
     z.strictObject({
       clause: clauseNumber,

@@ -2,7 +2,7 @@ import { type Bulletin, findEffectiveAt } from './bulletin';
 import { type Clause, sortClauses } from './clause';
 import { type PlainDocument, toDocument } from './document';
 import type { Edition, PenaltyRow } from './edition';
-import type { Clarification, Waiver } from './ruling';
+import { type Clarification, type Waiver, type Withdrawal, withdrawalsAt } from './ruling';
 
 /** One class's published rules, and the instant for which they are asked. */
 export interface RulesQuestion {
@@ -10,6 +10,7 @@ export interface RulesQuestion {
   readonly bulletins: readonly Bulletin[];
   readonly clarifications: readonly Clarification[];
   readonly waivers: readonly Waiver[];
+  readonly withdrawals?: readonly Withdrawal[];
   /** Starts of the class's events: they put `next-event` bulletins in force. */
   readonly eventStartsAt: readonly string[];
   /** ISO 8601 instant in UTC. For an event, its start; for "today", now. */
@@ -34,6 +35,8 @@ export interface RulesInForce {
   readonly bulletins: readonly number[];
   readonly clarifications: readonly Clarification[];
   readonly waivers: readonly Waiver[];
+  /** Numbers of the withdrawals of clarifications, ascending; absent where nothing was withdrawn. */
+  readonly withdrawals?: readonly number[] | undefined;
   readonly sources: readonly ClauseSource[];
 }
 
@@ -81,6 +84,8 @@ export const findRulesInForce = (question: RulesQuestion): RulesInForce | undefi
   );
   for (const bulletin of bulletins) apply(standing, edition.number, bulletin);
   const clauses = sortClauses([...standing.values()].map((entry) => entry.clause));
+  const withdrawn = withdrawalsAt(question.withdrawals ?? [], edition.season, at);
+  const withdrawals = [...withdrawn.values()].map((row) => row.number).sort((a, b) => a - b);
   const counts = (row: { readonly season: string; readonly clause: string }) =>
     row.season === edition.season && standing.has(row.clause);
   return {
@@ -91,14 +96,12 @@ export const findRulesInForce = (question: RulesQuestion): RulesInForce | undefi
     penalties: edition.penalties,
     bulletins: bulletins.map((bulletin) => bulletin.number),
     clarifications: byNumber(question.clarifications).filter(
-      (row) =>
-        counts(row) &&
-        Date.parse(row.publishedAt) <= at &&
-        (row.withdrawnAt === undefined || at < Date.parse(row.withdrawnAt)),
+      (row) => counts(row) && Date.parse(row.publishedAt) <= at && !withdrawn.has(row.number),
     ),
     waivers: byNumber(question.waivers).filter(
       (row) => counts(row) && Date.parse(row.fromAt) <= at && at < Date.parse(row.untilAt),
     ),
+    ...(withdrawals.length > 0 && { withdrawals }),
     sources: clauses.flatMap((clause) => standing.get(clause.number)?.source ?? []),
   };
 };

@@ -9,9 +9,33 @@ export interface Clarification {
   readonly answer: string;
   /** ISO 8601 instant in UTC; it counts from then on. */
   readonly publishedAt: string;
-  /** From this instant on it counts no more. */
-  readonly withdrawnAt?: string | undefined;
 }
+
+/** Ends a clarification: a numbered act of its own, so that what was published stays readable. */
+export interface Withdrawal {
+  readonly id: string;
+  readonly number: number;
+  readonly season: string;
+  /** The clarification's number and its clause. */
+  readonly clarification: number;
+  readonly clause: string;
+  readonly reason: string;
+  /** ISO 8601 instant in UTC; from then on the clarification counts no more. */
+  readonly publishedAt: string;
+}
+
+/** The withdrawals that count at an instant (epoch milliseconds), by the clarification's number. */
+export const withdrawalsAt = (
+  withdrawals: readonly Withdrawal[],
+  season: string,
+  at: number,
+): ReadonlyMap<number, Withdrawal> =>
+  new Map(
+    withdrawals
+      .filter((row) => row.season === season && Date.parse(row.publishedAt) <= at)
+      .sort((a, b) => b.number - a.number)
+      .map((row) => [row.clarification, row]),
+  );
 
 /** A dated exception from one clause, for one car or one engine. */
 export interface Waiver {

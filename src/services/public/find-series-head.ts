@@ -14,7 +14,7 @@ export interface NextEvent {
 }
 
 export interface BulletinListed {
-  readonly kind: 'edition' | 'bulletin' | 'clarification' | 'waiver';
+  readonly kind: 'edition' | 'bulletin' | 'clarification' | 'withdrawal';
   readonly number: number;
   readonly title: string;
   readonly className: string;
@@ -99,7 +99,7 @@ export const findSeriesHead = async (
   };
 };
 
-/** What changed the rules lately: bulletins and clarifications, the newest first. */
+/** What changed the rules lately: bulletins, clarifications and their withdrawals, the newest first. */
 export const listBulletins = async (
   deps: Pick<Ports, 'db'>,
   seriesId: string,
@@ -110,7 +110,7 @@ export const listBulletins = async (
             coalesce(p.in_force_at, p.published_at) as "inForceAt"
      from record.rule_publication p
      join public.class c on c.series_id = p.series_id and c.id = p.class_id
-     where p.series_id = ? and p.kind in ('bulletin', 'clarification', 'edition')
+     where p.series_id = ? and p.kind in ('bulletin', 'clarification', 'withdrawal', 'edition')
      order by p.published_at desc limit ?`,
     [seriesId, most],
   );

@@ -18,7 +18,7 @@ export interface StandingRules {
 }
 
 interface Row {
-  readonly kind: 'edition' | 'bulletin' | 'clarification' | 'waiver';
+  readonly kind: 'edition' | 'bulletin' | 'clarification' | 'waiver' | 'withdrawal';
   readonly content: unknown;
 }
 
@@ -46,6 +46,7 @@ export const readPublications = async (
     bulletins: of('bulletin').map((content) => shapes.bulletin.parse(content)),
     clarifications: of('clarification').map((content) => shapes.clarification.parse(content)),
     waivers: of('waiver').map((content) => shapes.waiver.parse(content)),
+    withdrawals: of('withdrawal').map((content) => shapes.withdrawal.parse(content)),
     eventStartsAt: starts.map((row) => new Date(row.starts_at).toISOString()),
   };
 };

@@ -10,7 +10,7 @@ import {
   type RulesQuestion,
   rulesDocument,
 } from '@/domain/rulebook/rules-in-force';
-import type { Clarification, Waiver } from '@/domain/rulebook/ruling';
+import type { Clarification, Waiver, Withdrawal } from '@/domain/rulebook/ruling';
 import { clause, clearance } from './build';
 
 const edition: Edition = {
@@ -182,7 +182,15 @@ describe('clarifications and waivers', () => {
     question: 'Which mean?',
     answer: 'Of all readings.',
     publishedAt: '2026-04-01T00:00:00.000Z',
-    withdrawnAt: '2026-05-01T00:00:00.000Z',
+  };
+  const withdrawal: Withdrawal = {
+    id: 'x1',
+    number: 1,
+    season: '2026',
+    clarification: 1,
+    clause: '4.6',
+    reason: 'It was read in two ways.',
+    publishedAt: '2026-05-01T00:00:00.000Z',
   };
   const waiver: Waiver = {
     id: 'w1',
@@ -195,7 +203,7 @@ describe('clarifications and waivers', () => {
     fromAt: '2026-04-01T00:00:00.000Z',
     untilAt: '2026-05-01T00:00:00.000Z',
   };
-  const more = { clarifications: [clarification], waivers: [waiver] };
+  const more = { clarifications: [clarification], waivers: [waiver], withdrawals: [withdrawal] };
 
   it.each([
     ['2026-03-31T23:59:59.999Z', 0],
@@ -216,6 +224,22 @@ describe('clarifications and waivers', () => {
     });
     expect(ask(at, { ...more, bulletins: [withdrawn] })?.waivers).toEqual([]);
     expect(ask(at, { ...more, waivers: [{ ...waiver, season: '2025' }] })?.waivers).toEqual([]);
+  });
+
+  it('end in withdrawals that stand in the document, by number', () => {
+    const at = '2026-05-01T00:00:00.000Z';
+    expect(ask('2026-04-30T23:59:59.999Z', more)).not.toHaveProperty('withdrawals');
+    expect(ask(at, more)?.withdrawals).toEqual([1]);
+    const other = { ...withdrawal, id: 'x2', number: 2, clarification: 2 };
+    const strange = { ...withdrawal, id: 'x3', number: 3, season: '2025' };
+    const rules = ask(at, { ...more, withdrawals: [strange, other, withdrawal] });
+    expect(rules?.withdrawals).toEqual([1, 2]);
+    expect(ask(at, { ...more, withdrawals: [other] })?.clarifications).toEqual([clarification]);
+    const text = (row: Partial<RulesQuestion>) => {
+      const found = ask(at, row);
+      return found && canonicalize(rulesDocument(found));
+    };
+    expect(text({ withdrawals: [withdrawal] })).not.toBe(text({}));
   });
 
   it('are part of the document', () => {

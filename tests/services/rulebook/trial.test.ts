@@ -96,7 +96,7 @@ it('a waiver for a declared engine keeps it legal; a published bulletin tells th
   const [mail, ...more] = await mails();
   expect(more).toEqual([]);
   expect(mail?.subject).toBe('Street Eight: bulletin 1 affects Car 12J, engine VR-2231');
-  expect(mail?.content.paragraphs.at(-1)).toMatch(/^Clause 3\.1, Displacement: /);
+  expect(mail?.content.paragraphs.at(-2)).toMatch(/^Clause 3\.1, Displacement: /);
   expect(await listEngines(paddock.ports(), official, seriesId, classId)).toEqual([
     { engineId, name: 'VR-2231', carNumber: '12J' },
   ]);

@@ -1,18 +1,17 @@
 import { LockMode } from '@mikro-orm/core';
 import { readBulletinContent } from '@/contracts/rulebook/read-rulebook';
 import { type Actor, may } from '@/domain/access/permission';
-import { formatInZone } from '@/domain/deadline/format-in-zone';
 import { absent, type Failure, failure, invalid, stale } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import type { Bulletin } from '@/domain/rulebook/bulletin';
 import { RulebookDraft } from '@/entities/series/rulebook-draft';
-import { Series } from '@/entities/series/series';
 import { performAct } from '../../act/perform-act';
-import { queueMail } from '../../mail/queue-mail';
 import type { Ports } from '../../ports';
 import { appendPublication } from '../ruling/append-publication';
 import { takeNumber } from '../ruling/next-number';
+import { affectedEngines } from './affected-engines';
 import { checkBulletin } from './check-bulletin';
+import { tellCompetitors } from './tell-competitors';
 
 export interface BulletinPublished {
   readonly number: number;
@@ -23,7 +22,8 @@ export interface BulletinPublished {
 
 /**
  * Publishes a bulletin's draft with the next number. Refused while a change does not fit the rules
- * it amends. Owners of accepted engines that it makes illegal are told by e-mail.
+ * it amends. The accepted engines that it makes illegal are kept with it; their owners, and all who
+ * race in the class, are told by e-mail.
  */
 export const publishBulletin = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs' | 'site'>,
@@ -74,6 +74,7 @@ export const publishBulletin = async (
         publishedAt: at.toISOString(),
       };
       draft.publishedAt = at;
+      const engines = affectedEngines(seriesId, draftId, checked);
       const hash = appendPublication(
         act,
         actor,
@@ -81,35 +82,15 @@ export const publishBulletin = async (
         classId,
         { kind: 'bulletin', content },
         { title: content.title, inForceAt: checked.countsFrom ?? null },
+        engines.contents,
       );
-      const { raceClass } = taken;
-      const series = await em.findOneOrFail(Series, { id: seriesId });
-      const from =
-        checked.countsFrom === undefined
-          ? 'from the next event'
-          : `from ${formatInZone(checked.countsFrom, series.zone)}`;
-      for (const engine of checked.affected) {
-        const results = checked.trial?.failed.find((one) => one.id === engine.id)?.results ?? [];
-        for (const { personId, email } of engine.owners) {
-          queueMail(deps, em, act, {
-            seriesId,
-            personId,
-            address: email,
-            kind: 'bulletin-affects-engine',
-            subject: `${raceClass.name}: bulletin ${content.number} affects ${engine.name}`,
-            paragraphs: [
-              `${series.name} published bulletin ${content.number}, ${content.title}, for ${raceClass.name}. It counts ${from}.`,
-              `Reason: ${content.reason}`,
-              `As declared, ${engine.name} would then no longer comply:`,
-              ...results.map((one) => `Clause ${one.clause}, ${one.heading}: ${one.sentence}`),
-            ],
-            link: {
-              label: 'Read the bulletin',
-              path: `/series/${series.slug}/rulebooks/${raceClass.slug}/bulletins/${content.number}`,
-            },
-          });
-        }
-      }
+      act.append('bulletin_engine', engines.rows);
+      await tellCompetitors(deps, act, {
+        seriesId,
+        raceClass: taken.raceClass,
+        bulletin: content,
+        checked,
+      });
       return ok({
         number: content.number,
         hash,

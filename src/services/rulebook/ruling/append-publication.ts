@@ -1,6 +1,7 @@
 import type { Actor } from '@/domain/access/permission';
 import { toHex } from '@/domain/ledger/bytes';
 import type { LineKind } from '@/domain/ledger/line-kind';
+import type { NewLedgerLine } from '../../act/append';
 import type { Act } from '../../act/perform-act';
 import { type Publication, publicationDocument } from '../publication';
 
@@ -9,6 +10,7 @@ const LINE: { readonly [K in Publication['kind']]: LineKind } = {
   bulletin: 'bulletin-published',
   clarification: 'clarification-published',
   waiver: 'waiver-published',
+  withdrawal: 'clarification-withdrawn',
 };
 
 /** Appends what changes a class's rules, with its open ledger line. Returns the document's hash. */
@@ -19,6 +21,8 @@ export const appendPublication = (
   classId: string,
   publication: Publication,
   shown: { readonly title: string; readonly inForceAt: string | null },
+  /** What the line commits to beside the document. */
+  more: NewLedgerLine['contents'] = {},
 ): string => {
   const { kind, content } = publication;
   const { document, hash } = publicationDocument(publication);
@@ -40,7 +44,7 @@ export const appendPublication = (
   line({
     seriesId,
     kind: LINE[kind],
-    contents: { [kind]: { text: document, open: true } },
+    contents: { [kind]: { text: document, open: true }, ...more },
     refs: { [kind]: content.id },
   });
   return toHex(hash);

@@ -1,6 +1,7 @@
 import type { APIRoute } from 'astro';
 import { absent } from '@/domain/failure';
 import { problem } from '@/http/problem';
+import { PUBLICATION_NAMES } from '@/services/rulebook/publication';
 import { findAsked } from '../_asked';
 
 const escapeXml = (text: string): string =>
@@ -11,13 +12,6 @@ const escapeXml = (text: string): string =>
     .replaceAll('"', '&quot;')
     // Characters that XML 1.0 cannot hold.
     .replace(/[^\t\n\r\u0020-\uD7FF\uE000-\uFFFD\u{10000}-\u{10FFFF}]/gu, '');
-
-const NAME = {
-  edition: 'Edition',
-  bulletin: 'Bulletin',
-  clarification: 'Clarification',
-  waiver: 'Waiver',
-} as const;
 
 /** Everything published for the class, newest first (Atom, RFC 4287). */
 export const GET: APIRoute = async ({ locals, params, url }) => {
@@ -30,7 +24,7 @@ export const GET: APIRoute = async ({ locals, params, url }) => {
     return [
       '<entry>',
       `<id>urn:uuid:${one.id}</id>`,
-      `<title>${escapeXml(`${NAME[one.kind]} ${one.number}: ${one.title}`)}</title>`,
+      `<title>${escapeXml(`${PUBLICATION_NAMES[one.kind]} ${one.number}: ${one.title}`)}</title>`,
       `<link href="${escapeXml(path)}"/>`,
       `<updated>${one.publishedAt}</updated>`,
       `<summary>${escapeXml(one.inForceAt === null ? 'Counts from the next event.' : `Counts from ${one.inForceAt}.`)}</summary>`,
