@@ -15,6 +15,7 @@ const ownEntry = {
       vite.build.rollupOptions.input = [
         vite.build.rollupOptions.input ?? [],
         'src/server.ts',
+        'src/adapters/images/heic-worker.mjs',
       ].flat();
     },
   },

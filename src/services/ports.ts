@@ -1,5 +1,6 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import type { Failure } from '@/domain/failure';
+import type { BarnNews } from '@/domain/inspection/barn-news';
 import type { NoteSigner } from '@/domain/ledger/note/signed-note';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import type { NoticeDocument } from '@/domain/verdict/notice';
@@ -20,6 +21,7 @@ export interface Ports {
   readonly keys: LedgerKeys;
   readonly heads: HeadMemory;
   readonly recordState: RecordState;
+  readonly barn: BarnFeed;
   readonly site: Site;
 }
 
@@ -60,6 +62,15 @@ export interface Jobs {
   ): Promise<void>;
 }
 
+/** `missed`: something may have happened unheard. `closing`: nothing more will be told. */
+export type BarnHears = BarnNews | 'missed' | 'closing';
+
+/** Tells every server process what was committed in a series' barn. */
+export interface BarnFeed {
+  /** Follows a series until the returned function is called; throws where nothing can be heard. */
+  subscribe(seriesId: string, hear: (news: BarnHears) => void): Promise<() => void>;
+}
+
 export interface ObjectHead {
   readonly bytes: number;
 }
@@ -77,7 +88,7 @@ export interface Objects {
 }
 
 export interface ImageFacts {
-  readonly type: 'image/jpeg' | 'image/png' | 'image/webp';
+  readonly type: 'image/jpeg' | 'image/png' | 'image/webp' | 'image/heic';
   readonly width: number;
   readonly height: number;
 }
@@ -88,7 +99,7 @@ export interface Preview {
 }
 
 export interface Images {
-  /** Facts of a JPEG, PNG or WebP by its content; nothing for anything else or a damaged one. */
+  /** Facts of a JPEG, PNG, WebP or HEIC by its content; nothing for anything else or a damaged one. */
   findFacts(bytes: Uint8Array): Promise<ImageFacts | undefined>;
   /** JPEG previews without any metadata, one for each width. */
   previews(bytes: Uint8Array, widths: readonly number[]): Promise<readonly Preview[]>;

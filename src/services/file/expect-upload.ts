@@ -2,7 +2,6 @@ import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure, invalid } from '@/domain/failure';
 import {
   type FilePurpose,
-  HEIC_WORDS,
   MOST_BYTES,
   MOST_FILES,
   tooLargeWords,
@@ -13,6 +12,7 @@ import { KeptFile } from '@/entities/paperwork/file';
 import { performAct } from '../act/perform-act';
 import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
+import { needFor } from './own-file';
 import { sweptAt } from './sweep-upload';
 
 export interface ExpectedUpload {
@@ -29,11 +29,9 @@ export interface ExpectedUpload {
 }
 
 /** What can be refused before a byte is sent. */
-const refusalOf = ({ purpose, name, type, bytes }: ExpectedUpload): Failure | undefined => {
+const refusalOf = ({ purpose, bytes }: ExpectedUpload): Failure | undefined => {
   if (bytes < 1) return failure('damaged-file', 'The file is empty.');
   if (bytes > MOST_BYTES[purpose]) return failure('too-large', tooLargeWords(purpose, bytes));
-  const isHeic = /^image\/hei[cf]/.test(type) || /\.hei[cf]$/i.test(name);
-  if (purpose === 'photograph' && isHeic) return failure('unsupported-file', HEIC_WORDS);
   return undefined;
 };
 
@@ -52,7 +50,10 @@ export const expectUpload = async (
   Result<{ readonly fileId: string; readonly url: string; readonly type: string }, Failure>
 > => {
   const { act, fileId, paperworkId, purpose, item, name, bytes } = input;
-  const known = isId(paperworkId) ? await findOwnPaperwork(deps.db, actor, paperworkId) : undefined;
+  const need = needFor(purpose);
+  const known = isId(paperworkId)
+    ? await findOwnPaperwork(deps.db, actor, paperworkId, false, need)
+    : undefined;
   if (known === undefined) return fail(absent());
   const refusal = refusalOf(input);
   if (refusal !== undefined)
@@ -66,7 +67,7 @@ export const expectUpload = async (
     actor,
     { id: act, kind: 'expect-upload', seriesId, input: request },
     async ({ em, at, send }) => {
-      const paperwork = await findOwnPaperwork(em, actor, paperworkId, true);
+      const paperwork = await findOwnPaperwork(em, actor, paperworkId, true, need);
       if (paperwork === undefined) return fail(absent());
       if (!isWritable(paperwork.state)) return fail(wrongPlace());
       const there = await em.count(KeptFile, {

@@ -11,23 +11,18 @@ import { KIND_WORDS, type SniffedKind, sniff } from '@/domain/paperwork/file/sni
 import { fail, ok, type Result } from '@/domain/result';
 import { readSheetRows } from '../paperwork/sheet/read-sheet-rows';
 import type { Ports } from '../ports';
+import type { FileFacts } from './file-facts';
+import { inspectPdf } from './inspect-pdf';
 
-export interface FileFacts {
-  readonly type: string;
-  readonly width: number | null;
-  readonly height: number | null;
-}
-
-const PHOTOGRAPHS: readonly SniffedKind[] = ['jpeg', 'png', 'webp'];
+const PHOTOGRAPHS: readonly SniffedKind[] = ['jpeg', 'png', 'webp', 'heic'];
 
 const inspectPhotograph = async (
   images: Ports['images'],
   bytes: Uint8Array,
 ): Promise<Result<FileFacts, Failure>> => {
   const kind = sniff(bytes);
-  if (kind === 'heic') return fail(failure('unsupported-file', HEIC_WORDS));
   if (!PHOTOGRAPHS.includes(kind)) {
-    const detail = `By its content this is ${KIND_WORDS[kind]}, whatever its name says. Add a JPEG, PNG or WebP photograph.`;
+    const detail = `By its content this is ${KIND_WORDS[kind]}, whatever its name says. Add a JPEG, PNG, WebP or HEIC photograph.`;
     return fail(failure('unsupported-file', detail));
   }
   const pixels = findPixels(bytes, kind);
@@ -36,6 +31,7 @@ const inspectPhotograph = async (
     return fail(failure('too-large', detail));
   }
   const facts = await images.findFacts(bytes);
+  if (facts === undefined && kind === 'heic') return fail(failure('unsupported-file', HEIC_WORDS));
   if (facts === undefined) {
     const detail = `${KIND_WORDS[kind].replace(/^a /, 'This ')} is damaged or was cut short on its way. Take or send it again.`;
     return fail(failure('damaged-file', detail));
@@ -45,7 +41,7 @@ const inspectPhotograph = async (
 
 const inspectSheet = async (bytes: Uint8Array): Promise<Result<FileFacts, Failure>> => {
   const kind = sniff(bytes);
-  if (kind === 'pdf') return ok({ type: 'application/pdf', width: null, height: null });
+  if (kind === 'pdf') return inspectPdf(bytes);
   if (PHOTOGRAPHS.includes(kind)) {
     const detail =
       'This is a picture. Numbers are read from a CSV or XLSX sheet, or typed in here.';

@@ -236,22 +236,22 @@ describe('hostile and broken files are refused with the right words', () => {
     [
       'SVG named .jpg',
       '<svg xmlns="http://www.w3.org/2000/svg" onload="alert(1)"/>',
-      'By its content this is a web page or drawing (HTML, SVG), whatever its name says. Add a JPEG, PNG or WebP photograph.',
+      'By its content this is a web page or drawing (HTML, SVG), whatever its name says. Add a JPEG, PNG, WebP or HEIC photograph.',
     ],
     [
       'HTML named .png',
       '<!doctype html><script>alert(1)</script>',
-      'By its content this is a web page or drawing (HTML, SVG), whatever its name says. Add a JPEG, PNG or WebP photograph.',
+      'By its content this is a web page or drawing (HTML, SVG), whatever its name says. Add a JPEG, PNG, WebP or HEIC photograph.',
     ],
     [
       'GIF',
       'GIF89a\u0001\u0000\u0001\u0000',
-      'By its content this is a GIF picture, whatever its name says. Add a JPEG, PNG or WebP photograph.',
+      'By its content this is a GIF picture, whatever its name says. Add a JPEG, PNG, WebP or HEIC photograph.',
     ],
     [
       'a program',
       'MZ\u0090\u0000 not a picture',
-      'By its content this is no picture, whatever its name says. Add a JPEG, PNG or WebP photograph.',
+      'By its content this is no picture, whatever its name says. Add a JPEG, PNG, WebP or HEIC photograph.',
     ],
   ])('%s', async (_name, text, words) => {
     expect(await because({ bytes: utf8(text), name: 'p.png', type: 'image/png' })).toBe(words);

@@ -23,5 +23,6 @@ export const tooLargeWords = (purpose: FilePurpose, bytes: number): string =>
       : 'Save only the measurement sheet, without pictures.'
   }`;
 
+/** For a HEIC photograph that could not be decoded within the bounds. */
 export const HEIC_WORDS =
-  'HEIC photographs are not read here. On the phone choose “Most compatible” for the camera, or share the photograph as JPEG, then add it again.';
+  'This HEIC photograph could not be read. On the phone choose “Most compatible” for the camera, or share the photograph as JPEG, then add it again.';

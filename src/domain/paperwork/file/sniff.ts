@@ -4,6 +4,8 @@ export type SniffedKind =
   | 'png'
   | 'webp'
   | 'heic'
+  | 'avif'
+  | 'video'
   | 'gif'
   | 'tiff'
   | 'pdf'
@@ -24,6 +26,7 @@ export const sniff = (bytes: Uint8Array): SniffedKind => {
   if (starts(bytes, 0x89, 0x50, 0x4e, 0x47, 0x0d, 0x0a, 0x1a, 0x0a)) return 'png';
   if (ascii(bytes, 0, 4) === 'RIFF' && ascii(bytes, 8, 12) === 'WEBP') return 'webp';
   if (ascii(bytes, 4, 8) === 'ftyp' && HEIC.has(ascii(bytes, 8, 12))) return 'heic';
+  if (ascii(bytes, 4, 8) === 'ftyp') return ascii(bytes, 8, 11) === 'avi' ? 'avif' : 'video';
   if (ascii(bytes, 0, 4) === 'GIF8') return 'gif';
   if (starts(bytes, 0x49, 0x49, 0x2a, 0) || starts(bytes, 0x4d, 0x4d, 0, 0x2a)) return 'tiff';
   if (ascii(bytes, 0, 5) === '%PDF-') return 'pdf';
@@ -39,6 +42,8 @@ export const KIND_WORDS: Readonly<Record<SniffedKind, string>> = {
   png: 'a PNG picture',
   webp: 'a WebP picture',
   heic: 'a HEIC picture',
+  avif: 'an AVIF picture',
+  video: 'a video',
   gif: 'a GIF picture',
   tiff: 'a TIFF picture',
   pdf: 'a PDF document',
