@@ -12,6 +12,7 @@ import { RowsByAct } from './0010-rows-by-act';
 import { Erasure } from './0011-erasure';
 import { StrokesAndRetention } from './0012-strokes-and-retention';
 import { BulletinsRead } from './0013-bulletins-read';
+import { MailAndUploads } from './0016-mail-and-uploads';
 import { EventDay } from './0018-event-day';
 
 /** In order of application. A new migration is added here by hand. */
@@ -29,5 +30,6 @@ export const migrationsList: MigrationObject[] = [
   { name: '0011-erasure', class: Erasure },
   { name: '0012-strokes-and-retention', class: StrokesAndRetention },
   { name: '0013-bulletins-read', class: BulletinsRead },
+  { name: '0016-mail-and-uploads', class: MailAndUploads },
   { name: '0018-event-day', class: EventDay },
 ];

@@ -33,6 +33,7 @@ export const LINE_KINDS = [
   'results-taken-back',
   'event-cleared',
   'interest-declared',
+  'served-otherwise',
 ] as const;
 
 export type LineKind = (typeof LINE_KINDS)[number];

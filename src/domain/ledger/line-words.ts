@@ -35,6 +35,7 @@ const WORDS: { readonly [K in LineKind]: string } = {
   'results-taken-back': 'Results that were official became unofficial again.',
   'event-cleared': 'The checks of an event without teardown were signed.',
   'interest-declared': 'An inspector’s interest in a competitor was declared or ended.',
+  'served-otherwise': 'Somebody whom a message did not reach was served otherwise.',
 };
 
 /** Kinds of later versions are shown by their own name. */

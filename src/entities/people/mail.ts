@@ -1,4 +1,5 @@
 import { defineEntity, type InferEntity } from '@mikro-orm/core';
+import type { MailState } from '@/domain/mail/mail-state';
 
 export const Mail = defineEntity({
   name: 'Mail',
@@ -12,11 +13,15 @@ export const Mail = defineEntity({
     subject: p.text(),
     messageId: p.text(),
     content: p.json<Record<string, unknown>>(),
-    state: p.text().$type<'to-send' | 'sent' | 'failed'>(),
+    state: p.text().$type<MailState>(),
     attempts: p.integer(),
     lastError: p.text().nullable(),
+    /** What the receiving server said last, in its own words. */
+    answer: p.text().nullable(),
     createdAt: p.datetime(),
     sentAt: p.datetime().nullable(),
+    /** When its state changed last. */
+    changedAt: p.datetime().nullable(),
   }),
 });
 

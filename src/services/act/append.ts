@@ -32,6 +32,7 @@ export type AppendTable =
   | 'result_statement'
   | 'event_check'
   | 'event_clearance'
+  | 'served_otherwise'
   | 'gauge_entry'
   | 'gauge_check'
   | 'gauge_fault'
