@@ -14,6 +14,7 @@ import { StrokesAndRetention } from './0012-strokes-and-retention';
 import { BulletinsRead } from './0013-bulletins-read';
 import { MailAndUploads } from './0016-mail-and-uploads';
 import { EventDay } from './0018-event-day';
+import { SetsAndRacks } from './0017-sets-and-racks';
 
 /** In order of application. A new migration is added here by hand. */
 export const migrationsList: MigrationObject[] = [
@@ -33,3 +34,4 @@ export const migrationsList: MigrationObject[] = [
   { name: '0016-mail-and-uploads', class: MailAndUploads },
   { name: '0018-event-day', class: EventDay },
 ];
+  { name: '0017-sets-and-racks', class: SetsAndRacks },

@@ -70,6 +70,8 @@ export const readingRow = z
     zeroRunId: z.optional(id),
     value: writtenValue,
     temperatures: z.optional(temperatures),
+    /** Named for a part of the reference set. */
+    referencePart: z.optional(name.check(z.minLength(1, 'Name the reference part.'))),
   })
   .check((context) => {
     const { quantity, value } = context.value;
@@ -127,6 +129,16 @@ export const remarkRow = z.discriminatedUnion('remark', [
   }),
   z.strictObject({
     ...remark,
+    remark: z.literal('own-reading'),
+    /** What was read, a quantity's name; kept beside the sheet and part of no result. */
+    subject: subject.check(z.minLength(1, 'Say what was read.')),
+    /** As said, with its unit: `0.8423 in`. */
+    value: z.string().check(z.minLength(1, 'A value is missing.'), z.maxLength(60)),
+    /** Whose reading it is. */
+    reason: words.check(z.minLength(1, 'Name whose reading it is.')),
+  }),
+  z.strictObject({
+    ...remark,
     remark: z.literal('photograph'),
     subject,
     /** The kept file's id. */
@@ -138,6 +150,28 @@ export const remarkRow = z.discriminatedUnion('remark', [
     remark: z.literal('temperature'),
     subject: z.enum(['bore', 'lifter', 'setting', 'gauge']),
     value: z.string().check(z.minLength(1), z.maxLength(40)),
+    reason: words,
+  }),
+  z.strictObject({
+    ...remark,
+    remark: z.literal('second-set'),
+    /** The number of the set that stands, or both together. */
+    value: z.string().check(z.regex(/^([1-9]|pooled)$/, 'Which set stands?')),
+    reason: needed,
+  }),
+  z.strictObject({ ...remark, remark: z.literal('lifter-out'), reason: words }),
+  z.strictObject({
+    ...remark,
+    remark: z.literal('lifter-in'),
+    /** The bore that the lifter came out of. */
+    subject: subject.check(z.minLength(1, 'Which lifter?')),
+    reason: words,
+  }),
+  z.strictObject({
+    ...remark,
+    remark: z.literal('lifters-returned'),
+    subject: subject.check(z.minLength(1, 'Name who signs for it.')),
+    value: z.enum(['kept', 'changed'], 'Was the order kept or changed?'),
     reason: words,
   }),
 ]);

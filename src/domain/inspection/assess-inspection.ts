@@ -30,10 +30,14 @@ import {
   weaknessOf,
 } from './found-facts';
 import { boreSetsOf } from './measure/bore-sets';
+import { derivedNumbers } from './measure/derived-numbers';
 import { joinSets } from './measure/join-sets';
-import { factsOfSet, measureSet, type SetResult } from './measure/measure-position';
-import { derivedNumbers, plainNumbers } from './measure/plain-numbers';
+import { measureSet, type SetResult } from './measure/measure-position';
+import { plainNumbers } from './measure/plain-numbers';
+import { referencesFrom } from './measure/reference-parts';
 import type { Capture } from './measure/runs';
+import { choicesFrom, type SetChoice } from './second-set/choice';
+import { type SecondSet, secondSetsOf, standingFacts } from './second-set/second-sets';
 
 /** Everything recorded in the bay, and what it is held against. */
 export interface InspectionRecord {
@@ -58,6 +62,10 @@ export interface BoreResult {
   readonly position: BorePosition;
   /** First set and independent second ones. */
   readonly sets: readonly SetResult[];
+  /** Each second set beside the first, with their agreement. */
+  readonly secondSets: readonly SecondSet[];
+  /** Which of them stands, as a person said; all together where nobody did. */
+  readonly choice?: SetChoice | undefined;
 }
 
 export interface InspectionAssessment {
@@ -120,16 +128,18 @@ export const assessInspection = (record: InspectionRecord): InspectionAssessment
     materials: record.materials,
     repeatability: pooled(counting),
   };
+  const choices = choicesFrom(remarks);
   const bores = positionsOf(layout).map((position): BoreResult => {
     const key = boreName(position);
-    return { key, position, sets: boreSetsOf(capture, key).map(measureSet) };
+    const sets = boreSetsOf(capture, key).map(measureSet);
+    return { key, position, sets, secondSets: secondSetsOf(sets), choice: choices.get(key) };
   });
   const positions = positionsIn(layout);
   const plain = plainNumbers(counting, gauges);
   const numbers = [
-    ...bores.flatMap(({ key, sets }) => joinSets(key, sets.map(factsOfSet))),
+    ...bores.flatMap(({ key, sets, choice }) => joinSets(key, standingFacts(sets, choice))),
     ...plain,
-    ...derivedNumbers(plain, positions),
+    ...derivedNumbers(plain, positions, rules),
   ].map((fact): NumberFact => {
     const per = rowsOf(getQuantityEntry(fact.quantity).per);
     const behind = readingsBehind(fact, counting, per);
@@ -146,7 +156,7 @@ export const assessInspection = (record: InspectionRecord): InspectionAssessment
     answers: answersFrom(remarks),
     evidence: [],
     couldNotBeReached: gapsFrom(remarks),
-    references: [],
+    references: referencesFrom(counting, gauges),
     declared: record.paperwork,
   };
   return {

@@ -48,7 +48,7 @@ export const completenessBy = (
   const byKey = new Map<string, { position: BorePosition; read: Set<QuantityName> }>();
   for (const reading of counting) {
     const position = positionFor(layout, reading);
-    if (position === undefined) continue;
+    if (position === undefined || reading.row.referencePart !== undefined) continue;
     const key = boreName(position);
     const entry = byKey.get(key) ?? { position, read: new Set() };
     byKey.set(key, entry);

@@ -1,10 +1,11 @@
 import type { Clause } from '../rulebook/clause';
 import type { ClauseResult } from '../rulebook/clause-result';
-import { isQuantityName, readingsFor } from '../rulebook/quantity-catalogue';
+import { isQuantityName } from '../rulebook/quantity-catalogue';
 import type { RulesInForce } from '../rulebook/rules-in-force';
 import type { JudgedReading } from './capture/readings-that-count';
 import { inTakingOrder, type RemarkRow } from './capture/rows';
 import type { Finding } from './finding';
+import { standsOn } from './plan/worked-out';
 
 interface Behind {
   readonly rules: Pick<RulesInForce, 'clauses'>;
@@ -27,7 +28,7 @@ export const withRows = (
   return results.map((result): Finding => {
     const clause = rules.clauses.find((row) => row.number === result.clause);
     const subject = clause === undefined ? '' : subjectOf(clause);
-    const quantities = isQuantityName(subject) ? readingsFor(subject) : [];
+    const quantities = isQuantityName(subject) ? standsOn(subject) : [];
     const readings = counting.filter(({ row }) => quantities.includes(row.quantity));
     return {
       ...result,

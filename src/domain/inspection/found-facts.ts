@@ -1,16 +1,12 @@
 import { isErrorKnown } from '../measurement/gauge-figures';
 import { fromStored } from '../quantity/stored';
 import type { AnswerFact, GapFact, NumberFact, Positions } from '../rulebook/evaluate/facts';
-import {
-  getQuantityEntry,
-  isQuantityName,
-  QUANTITY_NAMES,
-  readingsFor,
-} from '../rulebook/quantity-catalogue';
+import { getQuantityEntry, isQuantityName, QUANTITY_NAMES } from '../rulebook/quantity-catalogue';
 import { type BoreLayout, boreName, positionsOf } from '../tappet/layout/bore-layout';
 import { findWeakness, type GaugeRecord, gaugeOf } from './capture/gauge-record';
 import type { JudgedReading } from './capture/readings-that-count';
 import { inTakingOrder, positionKey, type RemarkRow, type ZeroRow } from './capture/rows';
+import { standsOn } from './plan/worked-out';
 
 /** Every bore and cylinder of a position map, as facts and results name them. */
 export const positionsIn = (layout: BoreLayout): Positions => ({
@@ -44,12 +40,13 @@ export const gapsFrom = (remarks: readonly RemarkRow[]): readonly GapFact[] =>
     const position = positionKey(place, 'bore');
     if (subject === '') return [{ position }];
     if (!isQuantityName(subject)) return [{ position, subject }];
-    return QUANTITY_NAMES.filter(
-      (name) => name === subject || readingsFor(name).includes(subject),
-    ).map((name) => ({ position, subject: name }));
+    return QUANTITY_NAMES.filter((name) => standsOn(name).includes(subject)).map((name) => ({
+      position,
+      subject: name,
+    }));
   });
 
-/** The readings that a number stands on. */
+/** The readings that a number stands on: its own, the whole engine's, and those of reference parts. */
 export const readingsBehind = (
   fact: Pick<NumberFact, 'quantity' | 'position'>,
   counting: readonly JudgedReading[],
@@ -57,8 +54,10 @@ export const readingsBehind = (
 ): readonly JudgedReading[] =>
   counting.filter(
     ({ row, place }) =>
-      readingsFor(fact.quantity).includes(row.quantity) &&
-      positionKey(place, per) === fact.position,
+      standsOn(fact.quantity).includes(row.quantity) &&
+      (row.referencePart !== undefined ||
+        positionKey(place, per) === fact.position ||
+        (row.quantity !== fact.quantity && positionKey(place, per) === 'engine')),
   );
 
 interface Bay {

@@ -1,5 +1,5 @@
 import { positionsIn } from '../inspection/found-facts';
-import { derivedNumbers } from '../inspection/measure/plain-numbers';
+import { derivedNumbers } from '../inspection/measure/derived-numbers';
 import { fromStored } from '../quantity/stored';
 import type { AnswerFact, Facts, NumberFact } from '../rulebook/evaluate/facts';
 import { getQuantityEntry, isQuantityName } from '../rulebook/quantity-catalogue';

@@ -2,7 +2,7 @@ import type { SentRow } from '@/contracts/inspection/rows';
 import type { InspectionAssessment } from '@/domain/inspection/assess-inspection';
 import type { JudgedReading } from '@/domain/inspection/capture/readings-that-count';
 import { isStrikeReason, STRIKE_REASONS } from '@/domain/inspection/capture/strike-reasons';
-import { secondSetsWanted } from '@/domain/inspection/second-set';
+import { secondSetsWanted } from '@/domain/inspection/second-set/wanted';
 import { type BorePosition, boreName } from '@/domain/tappet/layout/bore-layout';
 import type { Part } from '../sheet/parts';
 import { cellWords } from '../sheet/parts';

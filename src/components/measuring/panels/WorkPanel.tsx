@@ -9,7 +9,7 @@ import type { SentRow } from '@/contracts/inspection/rows';
 import type { InspectionAssessment } from '@/domain/inspection/assess-inspection';
 import type { JudgedReading } from '@/domain/inspection/capture/readings-that-count';
 import type { RemarkRow } from '@/domain/inspection/capture/rows';
-import { secondSetsWanted } from '@/domain/inspection/second-set';
+import { secondSetsWanted } from '@/domain/inspection/second-set/wanted';
 import type { Clause } from '@/domain/rulebook/clause';
 import { limitWords } from '@/domain/rulebook/describe';
 import { type BorePosition, boreName } from '@/domain/tappet/layout/bore-layout';

@@ -34,6 +34,7 @@ const recorded = (rows: readonly SentRow[], takenBy: string, offsetMs: number): 
             zeroRunId: row.zeroRunId,
             value: row.value,
             temperatures: row.temperatures,
+            ...(row.referencePart === undefined ? {} : { referencePart: row.referencePart }),
           },
         ]
       : [],

@@ -45,6 +45,8 @@ export interface ReadingRow extends Captured {
   readonly zeroRunId?: string | undefined;
   readonly value: Written;
   readonly temperatures?: LoggedTemperatures | undefined;
+  /** The part of the reference set that was read, where it was none of the engine's own. */
+  readonly referencePart?: string | undefined;
 }
 
 /** The zero of a run, before or after it. */
@@ -65,19 +67,30 @@ export type RemarkKind =
   | 'not-reached'
   | 'check'
   | 'witness'
+  | 'own-reading'
   | 'photograph'
-  | 'temperature';
+  | 'temperature'
+  | 'second-set'
+  | 'lifter-out'
+  | 'lifter-in'
+  | 'lifters-returned';
 
 /** What is no number: it strikes or moves a reading, answers a check, or notes something. */
 export interface RemarkRow extends Captured {
   readonly kind: RemarkKind;
   /** The reading that is struck or moved. */
   readonly readingId?: string | undefined;
-  /** Of a move: where the reading belongs. */
+  /** Of a move: where the reading belongs. Of a lifter: the bore it came out of, or went into. */
   readonly place: Place;
-  /** Of a check or a bore out of reach: the subject or quantity. */
+  /**
+   * Of a check or a bore out of reach: the subject or quantity. Of a lifter that went in: the bore it
+   * came out of. Of the lifters' return: who signs for it.
+   */
   readonly subject: string;
-  /** Of a check: `value`, a choice's key, `yes`, `no` and such. */
+  /**
+   * Of a check: `value`, a choice's key, `yes`, `no` and such. Of two sets: the set that stands, or
+   * `pooled`. Of the lifters' return: `kept` or `changed`.
+   */
   readonly answer: { readonly value?: string | undefined };
   readonly reason: string;
 }

@@ -4,6 +4,7 @@ export const STRIKE_REASONS = {
   'sign-lost': 'Sign lost',
   'gauge-slipped': 'Gauge slipped or was knocked',
   'zero-lost': 'Zero lost',
+  'zero-moved': 'Zero moved: the closing zero failed',
   'dirt-or-burr': 'Dirt or a burr in the way',
   'on-an-oil-hole': 'Taken on an oil hole or groove',
   'part-not-settled': 'Part hot, not settled',

@@ -93,7 +93,8 @@ const sheetOf = (
  */
 export const boreSetsOf = (capture: Capture, key: string): readonly BoreSet[] => {
   const here = capture.judged.filter(
-    ({ place, state }) => state === 'counts' && positionKey(place, 'bore') === key,
+    ({ row, place, state }) =>
+      state === 'counts' && row.referencePart === undefined && positionKey(place, 'bore') === key,
   );
   const of = (quantity: string, set: number) =>
     here.filter(({ row }) => row.quantity === quantity && row.set === set);

@@ -1,25 +1,10 @@
-import { assess } from '../../decision/assess';
 import { mean } from '../../measurement/series';
 import { quantityOf } from '../../quantity/quantity';
 import type { NumberFact } from '../../rulebook/evaluate/facts';
+import { agrees } from '../second-set/agreement';
 import type { Fact } from './measure-position';
 
 const DISAGREE = 'two independent sets of readings differ by more than their uncertainty';
-
-/** Whether a second value differs from a first by no more than their joint U. */
-const agrees = (first: Fact, second: Fact): boolean =>
-  assess(
-    {
-      limits: { min: first.value, max: first.value },
-      decisionRule: { kind: 'guarded-rejection', guardFactor: '1' },
-      comparison: { method: 'absolute' },
-      fitRatio: '0',
-    },
-    {
-      value: second.value,
-      standardUncertainty: Math.hypot(first.standardUncertainty, second.standardUncertainty),
-    },
-  ).complies === true;
 
 /**
  * One fact a figure out of all sets: their mean, with the larger uncertainty (independent sets by one

@@ -57,6 +57,7 @@ const readingColumns = (context: BatchContext, row: SentReading) => {
     value_unit: value.unit,
     value_exact: String(value.exact),
     temperatures: row.temperatures ?? {},
+    reference_part: row.referencePart ?? null,
   };
 };
 

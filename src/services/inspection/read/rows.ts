@@ -73,6 +73,7 @@ type ReadingColumns = Row &
     readonly value_text: string;
     readonly value_unit: string;
     readonly temperatures: LoggedTemperatures;
+    readonly reference_part: string | null;
   };
 
 type ZeroColumns = Row &
@@ -111,7 +112,7 @@ export const readRows = async (
   const readings = await em.execute<ReadingColumns[]>(
     from(
       'reading',
-      'quantity, bank, cylinder, valve, place_index, depth, axis, repeat, set_number, method, gauge_id, zero_run_id, value_text, value_unit, temperatures',
+      'quantity, bank, cylinder, valve, place_index, depth, axis, repeat, set_number, method, gauge_id, zero_run_id, value_text, value_unit, temperatures, reference_part',
     ),
     key,
   );
@@ -140,6 +141,7 @@ export const readRows = async (
       ...(row.zero_run_id === null ? {} : { zeroRunId: row.zero_run_id }),
       value: { text: row.value_text, unit: row.value_unit },
       temperatures: row.temperatures,
+      ...(row.reference_part === null ? {} : { referencePart: row.reference_part }),
     })),
     zeros: zeros.map((row) => ({
       ...captured(row),

@@ -1,4 +1,4 @@
-import type { InspectionAssessment } from './assess-inspection';
+import type { InspectionAssessment } from '../assess-inspection';
 
 /**
  * Bores where an independent second set is wanted, the first hidden: a mandatory number that is too
