@@ -13,8 +13,8 @@ import { Erasure } from './0011-erasure';
 import { StrokesAndRetention } from './0012-strokes-and-retention';
 import { BulletinsRead } from './0013-bulletins-read';
 import { MailAndUploads } from './0016-mail-and-uploads';
-import { EventDay } from './0018-event-day';
 import { SetsAndRacks } from './0017-sets-and-racks';
+import { EventDay } from './0018-event-day';
 
 /** In order of application. A new migration is added here by hand. */
 export const migrationsList: MigrationObject[] = [
@@ -32,6 +32,6 @@ export const migrationsList: MigrationObject[] = [
   { name: '0012-strokes-and-retention', class: StrokesAndRetention },
   { name: '0013-bulletins-read', class: BulletinsRead },
   { name: '0016-mail-and-uploads', class: MailAndUploads },
+  { name: '0017-sets-and-racks', class: SetsAndRacks },
   { name: '0018-event-day', class: EventDay },
 ];
-  { name: '0017-sets-and-racks', class: SetsAndRacks },
