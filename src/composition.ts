@@ -1,4 +1,5 @@
 import type { MikroORM } from '@mikro-orm/postgresql';
+import { openBarnFeed } from '@/adapters/database/barn-news';
 import { openDatabase } from '@/adapters/database/orm';
 import { openIdentityProvider } from '@/adapters/identity/oidc';
 import { images } from '@/adapters/images/sharp';
@@ -22,6 +23,8 @@ export interface Composition {
   /** Whether database and object store answer. */
   ready(): Promise<boolean>;
   startWorker(): Promise<void>;
+  /** Ends the answers that stay open, so that a stop need not wait for them. */
+  endStreams(): Promise<void>;
   close(): Promise<void>;
 }
 
@@ -31,6 +34,7 @@ export const compose = async (config: Config): Promise<Composition> => {
   const { boss, jobs } = await openJobs(config.databaseUrl, (error) =>
     console.error(`jobs: ${error.message}`),
   );
+  const barn = openBarnFeed(config.databaseUrl, (error) => console.error(`barn: ${error.message}`));
   const objects = openObjects(config.objects);
   const mailer = openMailer(config.mail.url);
   const identity = openIdentityProvider({
@@ -46,6 +50,7 @@ export const compose = async (config: Config): Promise<Composition> => {
     random: systemRandom,
     jobs,
     objects,
+    uploads: objects.uploads,
     images,
     mailer,
     identity,
@@ -54,6 +59,7 @@ export const compose = async (config: Config): Promise<Composition> => {
     keys,
     heads,
     recordState,
+    barn,
     site: { publicUrl: config.publicUrl, mailFrom: config.mail.from },
   });
   return {
@@ -61,7 +67,9 @@ export const compose = async (config: Config): Promise<Composition> => {
     ports,
     ready: () => orm.isConnected(),
     startWorker: () => startWorker(boss, ports),
+    endStreams: () => barn.close(),
     close: async () => {
+      await barn.close();
       await boss.stop({ graceful: true, wait: true, timeout: 10_000 });
       mailer.close();
       objects.close();

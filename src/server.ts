@@ -70,6 +70,7 @@ const stop = () => {
     );
   });
   server.closeIdleConnections();
+  void app.endStreams();
   setTimeout(() => server.closeAllConnections(), 8_000).unref();
 };
 process.on('SIGTERM', stop);

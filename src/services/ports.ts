@@ -13,6 +13,7 @@ export interface Ports {
   readonly random: Random;
   readonly jobs: Jobs;
   readonly objects: Objects;
+  readonly uploads: UploadsInParts;
   readonly images: Images;
   readonly mailer: Mailer;
   readonly identity: IdentityProvider;
@@ -75,7 +76,29 @@ export interface ObjectHead {
   readonly bytes: number;
 }
 
-/** The object store. Keys are content-addressed once a file counts. */
+/** The object store did not answer, or not in time: nothing is lost, and later it may. */
+export class StoreUnreachable extends Error {}
+
+export interface SentPart {
+  /** From 1. */
+  readonly number: number;
+  /** The store's name for what it got, as it answered. */
+  readonly tag: string;
+}
+
+/** Uploads of one object in several requests; what arrived stays when the connection is lost. */
+export interface UploadsInParts {
+  /** The store's name for a new upload. */
+  begin(key: string, type: string): Promise<string>;
+  /** A URL to which the browser may PUT exactly this part, for a few minutes. */
+  presign(key: string, uploadId: string, part: number, bytes: number): Promise<string>;
+  /** Makes the object of its parts; whether they were all there. Done before, it changes nothing. */
+  join(key: string, uploadId: string, parts: readonly SentPart[]): Promise<boolean>;
+  /** Forgets the parts that were sent. */
+  drop(key: string, uploadId: string): Promise<void>;
+}
+
+/** The object store. Keys are content-addressed once a file counts. All throw `StoreUnreachable`. */
 export interface Objects {
   /** A URL to which the browser may PUT exactly these bytes' length and type, for a few minutes. */
   presignPut(key: string, type: string, bytes: number): Promise<string>;

@@ -15,6 +15,14 @@ const signedIn = { method: 'post', access: 'signed-in' } as const;
 
 export const operations: readonly Operation[] = [
   {
+    method: 'get',
+    access: 'signed-in',
+    path: '/api/barn/{series}/live',
+    summary:
+      'Hear at once what changes in a series’ barn, as server-sent events: `refresh`, `same`, `news`, `beat`.',
+    answerType: 'text/event-stream',
+  },
+  {
     ...signedIn,
     path: '/api/inspections/{id}/captures',
     summary: 'Record readings, zeros and remarks taken in the bay, exactly once.',

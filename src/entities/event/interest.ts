@@ -1,8 +1,5 @@
 import { defineEntity, type InferEntity } from '@mikro-orm/core';
-
-export const INTEREST_KINDS = ['team', 'builder', 'relation', 'other'] as const;
-
-export type InterestKind = (typeof INTEREST_KINDS)[number];
+import type { InterestKind } from '@/domain/access/interest-kind';
 
 /** An interest that was declared: this person inspects neither this competitor nor this car. */
 export const Interest = defineEntity({

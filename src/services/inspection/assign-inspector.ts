@@ -1,19 +1,23 @@
 import { LockMode } from '@mikro-orm/core';
 import { type Actor, may } from '@/domain/access/permission';
-import { absent, type Failure, failure, invalid, stale } from '@/domain/failure';
+import { absent, type Failure, failure, stale } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import { Inspection } from '@/entities/event/inspection';
 import { performAct } from '../act/perform-act';
 import type { Ports } from '../ports';
-import { listInspectors } from './list-inspectors';
+import { changeLine } from './change-line';
 import { findInspectionRow } from './read/find-inspection';
+import { takeSeat } from './take-seat';
 
 export interface InspectionNow {
   readonly state: string;
   readonly version: number;
 }
 
-/** Names the inspector and the bay. Nobody with an interest in the car is taken. */
+/**
+ * Names the inspector and the bay. Nobody with an interest in the car is taken. Who is named is a
+ * line of the ledger; once it is open, it is handed over instead.
+ */
 export const assignInspector = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
   actor: Actor,
@@ -40,7 +44,7 @@ export const assignInspector = async (
       seriesId,
       input: { inspectionId, inspectorId, bay, version },
     },
-    async ({ em }) => {
+    async ({ em, line }) => {
       const inspection = await em.findOneOrFail(
         Inspection,
         { seriesId, id: inspectionId },
@@ -49,23 +53,32 @@ export const assignInspector = async (
       if (inspection.version !== version) return fail(stale());
       if (inspection.state === 'closed')
         return fail(failure('not-in-this-state', 'The report is signed and closed.'));
-      if (inspectorId !== null && inspectorId !== inspection.inspectorId) {
-        const offered = await listInspectors({ db: em }, inspection);
-        const chosen = offered.find((person) => person.id === inspectorId);
-        if (chosen === undefined)
-          return fail(
-            invalid([{ pointer: '/inspectorId', detail: 'Choose an inspector of this series.' }]),
-          );
-        if (chosen.interest !== undefined)
-          return fail(
-            failure(
-              'conflict-of-interest',
-              `${chosen.name} ${chosen.interest} and cannot inspect this car. Choose somebody else.`,
-            ),
-          );
-      }
-      inspection.inspectorId = inspectorId;
+      const before = inspection.inspectorId ?? null;
+      const changes = inspectorId !== before;
+      if (changes && inspection.openedAt && before !== null)
+        return fail(
+          failure(
+            'not-in-this-state',
+            'This inspection has been opened. Hand it over, with the reason.',
+          ),
+        );
       inspection.bay = bay;
+      if (changes) {
+        if (inspectorId === null) inspection.inspectorId = null;
+        else {
+          const seated = await takeSeat(em, inspection, inspectorId);
+          if (!seated.ok) return seated;
+        }
+        line(
+          changeLine(inspection, {
+            change: 'assign',
+            reason: '',
+            by: actor.personId,
+            inspector: inspectorId ?? '',
+            inspectorBefore: before ?? '',
+          }),
+        );
+      }
       await em.flush();
       return ok({ state: inspection.state, version: inspection.version });
     },

@@ -2,13 +2,12 @@ import { LockMode } from '@mikro-orm/core';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, failure } from '@/domain/failure';
 import { type InspectionAct, nextState } from '@/domain/inspection/state';
-import { toHex } from '@/domain/ledger/bytes';
-import { canonicalJson } from '@/domain/ledger/canonical';
 import { fail, ok, type Result } from '@/domain/result';
 import { Inspection } from '@/entities/event/inspection';
 import { performAct } from '../act/perform-act';
 import type { Ports } from '../ports';
 import type { InspectionNow } from './assign-inspector';
+import { changeLine } from './change-line';
 import { interestsIn } from './interest';
 import { findInspectionRow, worksOn } from './read/find-inspection';
 
@@ -26,10 +25,21 @@ export const changeState = async (
     readonly inspectionId: string;
     readonly to: StateAct;
     readonly reason: string;
+    /** Where it goes on or is kept, when that is not the event's own barn. */
+    readonly place?: string | undefined;
+    /** Numbers of seals put on or found, and the state they were found in. */
+    readonly seals?: string | undefined;
+    /** Number of the bag or crate the parts went into or came out of. */
+    readonly bag?: string | undefined;
   },
 ): Promise<Result<InspectionNow, Failure>> => {
   const { act, inspectionId, to } = input;
   const reason = input.reason.trim();
+  const said = {
+    place: input.place?.trim() ?? '',
+    seals: input.seals?.trim() ?? '',
+    bag: input.bag?.trim() ?? '',
+  };
   const seen = await findInspectionRow(deps.db, actor, 'inspection.read', inspectionId);
   if (seen === null) return fail(absent());
   const { seriesId } = seen;
@@ -38,7 +48,7 @@ export const changeState = async (
   return performAct(
     deps,
     actor,
-    { id: act, kind: 'change-inspection', seriesId, input: { inspectionId, to, reason } },
+    { id: act, kind: 'change-inspection', seriesId, input: { inspectionId, to, reason, ...said } },
     async ({ em, at, line }) => {
       const inspection = await em.findOneOrFail(
         Inspection,
@@ -61,28 +71,10 @@ export const changeState = async (
       }
       inspection.state = next.value;
       inspection.stateReason = reason;
-      if (to === 'open') inspection.openedAt = at;
+      if (said.place !== '' || to === 'resume') inspection.place = said.place;
+      if (inspection.state === 'open') inspection.openedAt ??= at;
       await em.flush();
-      line({
-        seriesId,
-        kind: to === 'open' ? 'inspection-opened' : 'inspection-changed',
-        contents: {
-          change: {
-            text: canonicalJson({
-              v: '1',
-              type: 'tagwire/inspection-change',
-              inspection: inspectionId,
-              change: to,
-              state: next.value,
-              reason,
-              by: actor.personId,
-              bay: inspection.bay,
-            }),
-            open: false,
-          },
-        },
-        refs: { inspection: inspectionId, rules: toHex(inspection.rulesHash) },
-      });
+      line(changeLine(inspection, { change: to, reason, by: actor.personId, ...said }));
       return ok({ state: inspection.state, version: inspection.version });
     },
   );

@@ -8,7 +8,9 @@ interface Found {
 
 /**
  * Who has an interest in an inspected car, and which: nobody inspects the car they enter, the engine
- * they own, paperwork they handed in, or a class they run in at the same event. One set-based query.
+ * they own, paperwork they handed in, a class they run in at the same event or have an engine
+ * declared in, nor a car or competitor with whom an interest of theirs was declared. One set-based
+ * query.
  */
 export const interestsIn = async (
   em: EntityManager,
@@ -16,7 +18,7 @@ export const interestsIn = async (
 ): Promise<ReadonlyMap<string, string>> => {
   const rows = await em.execute<Found[]>(
     `with inspected as (
-       select i.series_id, e.event_id, e.class_id, e.competitor_id,
+       select i.series_id, e.event_id, e.class_id, e.competitor_id, e.car_number,
               coalesce(i.paperwork_id, e.paperwork_id) as paperwork_id
        from public.inspection i
        join public.entry e on e.series_id = i.series_id and e.id = i.entry_id
@@ -39,6 +41,22 @@ export const interestsIn = async (
        select e.competitor_id, 'runs in this class at this event', 5 from inspected i
        join public.entry e on e.series_id = i.series_id and e.event_id = i.event_id
          and e.class_id = i.class_id and e.state = 'entered'
+       union all
+       select p.competitor_id, 'has an engine declared in this class', 6 from inspected i
+       join public.paperwork p on p.series_id = i.series_id and p.class_id = i.class_id
+         and p.state <> 'withdrawn' and p.versions > 0
+       union all
+       select n.person_id, case n.kind
+           when 'team' then 'is of this competitor’s team'
+           when 'builder' then 'builds this competitor’s engines'
+           when 'relation' then 'is related to this competitor'
+           else 'has declared an interest' end
+           || case when n.words = '' then '' else ' (' || n.words || ')' end, 0
+       from inspected i
+       join public.interest n on n.series_id = i.series_id and n.ended_at is null
+         and (n.car_number = i.car_number or n.competitor_id = i.competitor_id
+              or n.competitor_id = (select p.competitor_id from public.paperwork p
+                where p.series_id = i.series_id and p.id = i.paperwork_id))
      ) found where person_id is not null order by place desc`,
     [seriesId, id],
   );

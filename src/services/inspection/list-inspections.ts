@@ -16,6 +16,8 @@ export interface InspectionListed {
   readonly stateReason: string;
   readonly correcting: boolean;
   readonly bay: string;
+  /** Where it is taken apart when that is not the event's own barn. */
+  readonly place: string;
   readonly inspectorId: string | null;
   readonly inspector: string | null;
   readonly readings: number;
@@ -34,7 +36,7 @@ export const listInspections = async (
     `select i.id, i.series_id as "seriesId", v.name as event, v.id as "eventId", c.name as "className",
             e.car_number as "carNumber", e.competitor_name as competitor,
             i.picked_because as because, i.picked_words as words, i.state,
-            i.state_reason as "stateReason", i.correction_reason <> '' as correcting, i.bay,
+            i.state_reason as "stateReason", i.correction_reason <> '' as correcting, i.bay, i.place,
             i.inspector_id as "inspectorId", p.name as inspector,
             (select count(*)::int from record.reading r
              where r.series_id = i.series_id and r.inspection_id = i.id) as readings,

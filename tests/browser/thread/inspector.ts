@@ -34,7 +34,7 @@ export const openInspection = async (inspector: Visitor, story: Story): Promise<
   await open('/barn');
   await page
     .getByRole('row', { name: new RegExp(story.className) })
-    .getByRole('link', { name: /^Open/ })
+    .getByRole('link', { name: /^Go to it/ })
     .click();
   await page.getByRole('heading', { name: 'Before the first bolt' }).waitFor();
   const words = await page.locator('main').textContent();

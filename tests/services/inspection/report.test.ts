@@ -154,6 +154,7 @@ describe('after signing', () => {
     expect(JSON.parse(reports[1]?.document ?? '').revision.corrects).toBe(first.hash);
     const history = await readHistory(world.ports(), { seriesId: night.seriesId, id });
     expect(history.map(({ kind, by }) => [kind, by])).toEqual([
+      ['inspection-changed', 'Ilse Törnkvist'],
       ['inspection-opened', 'Oona Brannick'],
       ['report-signed', 'Oona Brannick'],
       ['report-revised', 'Oona Brannick'],

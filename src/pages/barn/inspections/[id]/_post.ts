@@ -2,16 +2,17 @@ import type { Actor } from '@/domain/access/permission';
 import type { Failure } from '@/domain/failure';
 import type { Result } from '@/domain/result';
 import { readForm } from '@/http/form';
-import { assignInspector } from '@/services/inspection/assign-inspector';
 import { recordCaptures } from '@/services/inspection/capture/record-captures';
-import { changeState, type StateAct } from '@/services/inspection/change-state';
 import { reviseReport } from '@/services/inspection/report/revise-report';
 import { signReport } from '@/services/inspection/report/sign-report';
 import type { Ports } from '@/services/ports';
+import { actOn } from './_acts';
 
 interface Posted {
   readonly to?: string;
   readonly problems?: readonly { readonly field?: string; readonly message: string }[];
+  /** What came back is shown again as it was typed. */
+  readonly typed?: ReadonlyMap<string, string>;
 }
 
 const problemsIn = (failure: Failure): Posted => ({
@@ -22,8 +23,6 @@ const problemsIn = (failure: Failure): Posted => ({
     },
   ),
 });
-
-const STATE_ACTS: readonly StateAct[] = ['open', 'hold', 'resume', 'refuse', 'stop', 'defer'];
 
 /** What the forms of an inspection's page ask for; each is one use case. */
 export const handlePost = async (
@@ -39,21 +38,8 @@ export const handlePost = async (
   const say = (result: Result<unknown, Failure>, to = page): Posted =>
     result.ok ? { to } : problemsIn(result.failure);
   const what = text('what');
-  if (what === 'assign')
-    return say(
-      await assignInspector(ports, actor, {
-        ...base,
-        inspectorId: text('inspectorId') === '' ? null : text('inspectorId'),
-        bay: text('bay').slice(0, 20),
-        version: Number(text('version')),
-      }),
-    );
-  const to = STATE_ACTS.find((one) => one === what);
-  if (to !== undefined)
-    return say(
-      await changeState(ports, actor, { ...base, to, reason: text('reason') }),
-      to === 'open' || to === 'resume' ? `${page}/measure` : page,
-    );
+  const done = await actOn(ports, actor, inspectionId, text);
+  if (done !== undefined) return { ...say(done.result, done.to), typed: form };
   if (what === 'witness') {
     const subject = text('witness').slice(0, 120);
     if (subject === '') return { problems: [{ field: 'witness', message: 'Name the witness.' }] };
