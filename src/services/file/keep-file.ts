@@ -10,6 +10,7 @@ import { performAct } from '../act/perform-act';
 import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 import { wrongPlace } from './expect-upload';
+import { holdObject } from './hold-object';
 import { inspectFile } from './inspect-file';
 
 export interface FileToKeep {
@@ -110,6 +111,7 @@ export const keepFile = async (
         return ok<KeptAnswer>({ fileId, state: 'refused', refusedBecause });
       }
       const { type, width, height } = facts.value;
+      await holdObject(deps, em, { hash: toHex(hash), key: objectKey, bytes, type });
       Object.assign(row, { state: 'kept', objectKey, mediaType: type, bytes: bytes.length });
       Object.assign(row, { sha256: Buffer.from(hash), width, height, keptAt: at });
       if (purpose === 'photograph') send('make-previews', { seriesId, fileId });

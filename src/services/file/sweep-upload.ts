@@ -23,6 +23,8 @@ export const sweepUpload = async (
   { seriesId, fileId }: { readonly seriesId: string; readonly fileId: string },
 ): Promise<void> => {
   const file = await deps.db.findOne(KeptFile, { seriesId, id: fileId });
+  // Of an erased file there is no row; what was still sent of it afterwards goes now.
+  if (file === null) await deps.objects.remove(`uploads/${seriesId}/${fileId}`);
   if (file?.state !== 'expected') return;
   // The queue's clock is the database's: it may run a little ahead of this one.
   if (deps.clock.now().getTime() < sweptAt(file.createdAt).getTime() - HOUR) return;

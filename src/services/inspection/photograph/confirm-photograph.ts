@@ -6,6 +6,7 @@ import { MOST_BYTES, tooLargeWords } from '@/domain/paperwork/file/limits';
 import { fail, ok, type Result } from '@/domain/result';
 import { KeptFile } from '@/entities/paperwork/file';
 import { performAct } from '../../act/perform-act';
+import { holdObject } from '../../file/hold-object';
 import { inspectFile } from '../../file/inspect-file';
 import { answered, type KeepDeps, type KeptAnswer } from '../../file/keep-file';
 import { isId } from '../../paperwork/own-paperwork';
@@ -66,6 +67,7 @@ export const confirmPhotograph = async (
         return ok<KeptAnswer>({ fileId, state: 'refused', refusedBecause });
       }
       const { type, width, height } = facts.value;
+      await holdObject(deps, em, { hash: toHex(hash), key: objectKey, bytes, type });
       Object.assign(row, { state: 'kept', objectKey, mediaType: type, bytes: bytes.length });
       Object.assign(row, { sha256: Buffer.from(hash), width, height, keptAt: at });
       send('make-previews', { seriesId, fileId });

@@ -1,18 +1,27 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import { sha256, toHex } from '@/domain/ledger/bytes';
+import { PREVIEW_WIDTHS } from '../../file/make-previews';
 import type { Ports } from '../../ports';
 import { type AuditFault, faultIn } from './fault';
 
 const MOST_BYTES = 100_000_000;
+const AT_ONCE = 8;
+const inObjects = faultIn('objects');
+
+interface Kept {
+  readonly key: string;
+  readonly sha256: string;
+  readonly bytes: string;
+}
 
 /** Files and PDFs whose hash is in the record, by the key that they are kept under. */
 const readKept = (em: EntityManager, seriesId: string) =>
-  em.execute<{ key: string; sha256: string; bytes: string }[]>(
+  em.execute<Kept[]>(
     `select object_key as key, encode(sha256, 'hex') as sha256, bytes from record.notice_pdf
      where series_id = ?
      union
      select object_key, encode(sha256, 'hex'), bytes from public.file
-     where series_id = ? and state = 'kept' and removed_at is null`,
+     where series_id = ? and state = 'kept'`,
     [seriesId, seriesId],
   );
 
@@ -28,29 +37,67 @@ const readNamed = (em: EntityManager, seriesId: string) =>
     [seriesId, seriesId],
   );
 
-/** Every object read and hashed again; every hash that a signed document names has an object. */
-export const auditObjects = async (
+/** Several at once: the store answers each after a while, and most of it is waiting. */
+const faultsOf = async <T>(
+  all: readonly T[],
+  look: (one: T) => Promise<AuditFault | undefined>,
+): Promise<readonly AuditFault[]> => {
+  const faults: AuditFault[] = [];
+  for (let from = 0; from < all.length; from += AT_ONCE)
+    for (const fault of await Promise.all(all.slice(from, from + AT_ONCE).map(look)))
+      if (fault !== undefined) faults.push(fault);
+  return faults;
+};
+
+/** What the ledger says was erased, of which no file of any series holds the same bytes, is gone. */
+const erasedFaults = async (
   { db, objects }: Pick<Ports, 'db' | 'objects'>,
+  erased: ReadonlySet<string>,
+): Promise<readonly AuditFault[]> => {
+  const again = await db.execute<{ sha256: string }[]>(
+    `select distinct encode(sha256, 'hex') as sha256 from public.file
+     where encode(sha256, 'hex') = any(?::text[])`,
+    [`{${[...erased].join()}}`],
+  );
+  const kept = new Set(again.map((one) => one.sha256));
+  const keys = [...erased]
+    .filter((hash) => !kept.has(hash))
+    .flatMap((hash) => [
+      `originals/${hash}`,
+      ...PREVIEW_WIDTHS.map((width) => `previews/${hash}/${width}.jpg`),
+    ]);
+  return faultsOf(keys, async (key) =>
+    (await objects.findHead(key)) === undefined
+      ? undefined
+      : inObjects(key, 'The ledger says that it was erased, and it is still here.'),
+  );
+};
+
+/**
+ * Every object read and hashed again; every hash that a signed document names has an object; nothing is
+ * left of what the ledger says was erased.
+ */
+export const auditObjects = async (
+  deps: Pick<Ports, 'db' | 'objects'>,
   seriesId: string,
   erased: ReadonlySet<string>,
 ): Promise<readonly AuditFault[]> => {
-  const inObjects = faultIn('objects');
+  const { db, objects } = deps;
   const kept = await readKept(db, seriesId);
-  const faults: AuditFault[] = [];
-  for (const { key, sha256: wanted, bytes } of kept) {
-    if (erased.has(wanted)) continue;
+  const read = await faultsOf(kept, async ({ key, sha256: wanted, bytes }) => {
     try {
       const found = await objects.read(key, MOST_BYTES);
-      if (found.length !== Number(bytes) || toHex(sha256(found)) !== wanted)
-        faults.push(inObjects(key, 'The object is another than was recorded.'));
+      return found.length === Number(bytes) && toHex(sha256(found)) === wanted
+        ? undefined
+        : inObjects(key, 'The object is another than was recorded.');
     } catch {
-      faults.push(inObjects(key, 'The object cannot be read.'));
+      return inObjects(key, 'The object cannot be read.');
     }
-  }
+  });
   const present = new Set(kept.map((one) => one.sha256));
-  for (const { sha256: named } of await readNamed(db, seriesId)) {
-    if (!present.has(named) && !erased.has(named))
-      faults.push(inObjects(named, 'A signed document names this file, and it is not kept.'));
-  }
-  return faults;
+  const words = 'A signed document names this file, and it is not kept.';
+  const lost = (await readNamed(db, seriesId)).flatMap(({ sha256: named }) =>
+    present.has(named) || erased.has(named) ? [] : [inObjects(named, words)],
+  );
+  return [...read, ...lost, ...(await erasedFaults(deps, erased))];
 };

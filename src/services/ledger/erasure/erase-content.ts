@@ -36,12 +36,13 @@ export const eraseContent = async (
     { id, kind: 'erase-content', seriesId, input: { paperworkId, reason } },
     async (act) => {
       await act.em.findOneOrFail(Paperwork, where, { lockMode: LockMode.PESSIMISTIC_WRITE });
-      const obstacle = await findErasureObstacle(act.em, seriesId, paperworkId);
+      const subject = { kind: 'paperwork', id: paperworkId } as const;
+      const obstacle = await findErasureObstacle(act.em, seriesId, subject);
       if (obstacle !== undefined) return fail(failure('not-in-this-state', obstacle));
-      const contents = await listErasable(act.em, seriesId, paperworkId);
+      const contents = await listErasable(act.em, seriesId, subject);
       if (contents.length === 0)
         return fail(failure('not-in-this-state', 'This paperwork was erased already.'));
-      const erased = await eraseLines(act, { seriesId, paperworkId, reason, contents });
+      const erased = await eraseLines(act, { seriesId, subject, reason, contents });
       return ok({ contents: erased.contents.length, files: erased.files.length });
     },
   );

@@ -46,7 +46,7 @@ export const openErasure = async (
   return ok({
     row,
     erased: await findErasure(deps, actor, paperworkId),
-    contents: await listErasable(db, seriesId, paperworkId),
+    contents: await listErasable(db, seriesId, { kind: 'paperwork', id: paperworkId }),
     holds,
     inspected: inspections.length > 0,
   });

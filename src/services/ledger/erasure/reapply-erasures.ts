@@ -9,7 +9,7 @@ import { performAct } from '../../act/perform-act';
 import { actIdFor } from '../../notice/act-id';
 import type { Ports } from '../../ports';
 import { type ErasureDocument, erasureDocument } from '../audit/erasures';
-import { eraseLines, listErasable } from './erase-lines';
+import { type ErasureSubject, eraseLines, listErasable } from './erase-lines';
 import type { PublishedErasure } from './list-erasures';
 import { findErasureObstacle } from './obstacle';
 
@@ -23,7 +23,7 @@ export interface Reapplied {
 type Deps = Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'> & Partial<Pick<Ports, 'recordState'>>;
 
 interface Proven {
-  readonly paperworkId: string;
+  readonly subject: ErasureSubject;
   readonly document: ErasureDocument;
 }
 
@@ -38,9 +38,10 @@ const findProven = ({ series, line, salt, document }: PublishedErasure): Proven 
   if (commitment === undefined || salted === undefined) return undefined;
   if (!opens(commitment, salted, sha256(utf8(document)))) return undefined;
   const read = erasureDocument.safeParse(JSON.parse(document));
-  const paperworkId = refs['paperwork'];
-  return read.success && paperworkId !== undefined
-    ? { paperworkId, document: read.data }
+  const kind = refs['inspection'] === undefined ? 'paperwork' : 'inspection';
+  const id = refs[kind];
+  return read.success && id !== undefined
+    ? { subject: { kind, id }, document: read.data }
     : undefined;
 };
 
@@ -49,21 +50,21 @@ const findReturned = async (em: EntityManager, series: string, proven: Proven) =
   const named = new Set(
     proven.document.contents.map((one) => `${one.line} ${one.leaf} ${one.role}`),
   );
-  const here = await listErasable(em, series, proven.paperworkId);
+  const here = await listErasable(em, series, proven.subject);
   return here.filter(({ line, leaf, role }) => named.has(`${line} ${leaf} ${role}`));
 };
 
 const reapply = (deps: Deps, erasure: PublishedErasure, proven: Proven) => {
   const { series: seriesId, line } = erasure;
-  const { paperworkId, document } = proven;
+  const { subject, document } = proven;
   const id = actIdFor('reapply-erasure', toHex(lineLeaf(line)));
   const request = { id, kind: 'reapply-erasure', seriesId, input: { line } };
   return performAct(deps, null, request, async (act) => {
-    const obstacle = await findErasureObstacle(act.em, seriesId, paperworkId);
+    const obstacle = await findErasureObstacle(act.em, seriesId, subject);
     if (obstacle !== undefined) return fail(failure('not-in-this-state', obstacle));
     const contents = await findReturned(act.em, seriesId, proven);
     const files = new Set(document.files);
-    await eraseLines(act, { seriesId, paperworkId, reason: document.reason, contents, files });
+    await eraseLines(act, { seriesId, subject, reason: document.reason, contents, files });
     return ok(null);
   });
 };
