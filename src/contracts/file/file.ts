@@ -1,6 +1,4 @@
 import * as z from 'zod/mini';
-import { quantityName } from '../paperwork/document';
-import { columnMeaning, mapping } from '../paperwork/draft';
 
 const act = z.uuid('Send a UUID of your own making (version 7).');
 
@@ -14,11 +12,29 @@ export const expectUploadRequest = z.strictObject({
   type: z.string().check(z.maxLength(120)),
   bytes: z.int().check(z.gte(1, 'The file is empty.')),
 });
-/** Where the bytes go: one PUT with this type, within minutes. */
+/**
+ * Where the bytes go, within minutes: one PUT with this type; or, where parts are given, one PUT for
+ * each of them in order, whose answers' ETags come back with the confirmation.
+ */
 export const expectUploadResponse = z.strictObject({
   fileId: z.uuid(),
   url: z.string(),
   type: z.string(),
+  parts: z.optional(z.array(z.strictObject({ url: z.string(), bytes: z.int() }))),
+});
+
+export const confirmUploadRequest = z.strictObject({
+  act,
+  parts: z.optional(
+    z
+      .array(
+        z.strictObject({
+          number: z.int().check(z.gte(1)),
+          tag: z.string().check(z.maxLength(200)),
+        }),
+      )
+      .check(z.maxLength(100)),
+  ),
 });
 
 export const fileActRequest = z.strictObject({ act });
@@ -31,30 +47,6 @@ export const keptFile = z.strictObject({
   type: z.optional(z.string()),
   refusedBecause: z.optional(z.string()),
   keptAt: z.optional(z.string()),
-});
-
-export const readSheetRequest = z.strictObject({
-  /** The sheet's subject in the rulebook. */
-  subject: z.string().check(z.maxLength(120)),
-  mapping: z.optional(mapping),
-});
-
-export const readSheetResponse = z.strictObject({
-  columns: z.array(z.strictObject({ at: z.int(), header: z.string(), meaning: columnMeaning })),
-  cells: z.array(
-    z.strictObject({
-      position: z.string(),
-      quantity: quantityName,
-      depth: z.string(),
-      axis: z.string(),
-      typed: z.string(),
-      unit: z.string(),
-      source: z.optional(
-        z.strictObject({ fileId: z.string(), file: z.string(), cell: z.string() }),
-      ),
-    }),
-  ),
-  notes: z.array(z.strictObject({ where: z.string(), detail: z.string() })),
 });
 
 export type KeptFileAnswer = z.infer<typeof keptFile>;

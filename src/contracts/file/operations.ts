@@ -1,11 +1,11 @@
 import type { Operation } from '../operation';
+import { readSheetRequest, readSheetResponse } from '../paperwork/sheet';
 import {
+  confirmUploadRequest,
   expectUploadRequest,
   expectUploadResponse,
   fileActRequest,
   keptFile,
-  readSheetRequest,
-  readSheetResponse,
 } from './file';
 
 export const operations: readonly Operation[] = [
@@ -22,7 +22,7 @@ export const operations: readonly Operation[] = [
     path: '/api/files/{file}/confirm',
     summary: 'Have the bytes that arrived read, sized and hashed; only then the file counts',
     access: 'signed-in',
-    body: fileActRequest,
+    body: confirmUploadRequest,
     answer: keptFile,
   },
   {

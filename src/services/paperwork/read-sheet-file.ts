@@ -2,7 +2,7 @@ import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure } from '@/domain/failure';
 import { MOST_BYTES } from '@/domain/paperwork/file/limits';
 import type { Mapping } from '@/domain/paperwork/sheet/find-columns';
-import { type ReadSheet, readSheet } from '@/domain/paperwork/sheet/read-sheet';
+import { type ReadSheet, readBook } from '@/domain/paperwork/sheet/read-sheet';
 import { fail, ok, type Result } from '@/domain/result';
 import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';
 import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
@@ -46,5 +46,5 @@ export const readSheetFile = async (
   const engine = await deps.db.findOneOrFail(Engine, { id: paperwork.engineId });
   const layout = engine.layout as unknown as BoreLayout;
   const source = { fileId: file.id, name: file.name };
-  return ok(readSheet(rows.value.rows, { form, layout }, source, input.mapping));
+  return ok(readBook(rows.value.grids, { form, layout }, source, input.mapping));
 };

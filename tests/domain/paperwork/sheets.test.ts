@@ -7,7 +7,7 @@ import { toNumber } from '@/domain/quantity/rational';
 import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';
 import { TAPPET_RULE_SET } from '@/domain/rulebook/rule-sets/tappet';
 import { GENERIC_LAYOUTS } from '@/domain/tappet/layout/generic-layouts';
-import { readCsv } from '@/services/paperwork/sheet/read-csv';
+import { readCsv } from '@/services/paperwork/sheet/csv/read-csv';
 import { boreAt, lifterAt, ORDER, SHAPES } from './shapes';
 
 const form = paperworkForm(TAPPET_RULE_SET).sheets.find((sheet) => sheet.sheet === 'lifters')!;
@@ -17,7 +17,7 @@ const FILE = { fileId: '01900000-0000-7000-8000-000000000001', name: 'lifters.cs
 const rowsOf = (bytes: Uint8Array) => {
   const rows = readCsv(bytes);
   if (!rows.ok) throw new Error(rows.failure.detail);
-  return rows.value;
+  return rows.value.rows;
 };
 const read = (text: string, mapping = {}) =>
   readSheet(rowsOf(new TextEncoder().encode(text)), wanted, FILE, mapping);
@@ -171,7 +171,7 @@ describe('bad cells are named and kept', () => {
     const sheet = read(
       'Position,Lifter,Bore,Shoe size\n9 intake,0.8422,0.8440,44\n,0.8422,0.8440,\n3 intake,0.8422,0.8440,\n3I,0.8423,0.8441,\n',
     );
-    expect(sheet.notes).toEqual([
+    expect(sheet.notes.map(({ where, detail }) => ({ where, detail }))).toEqual([
       {
         where: 'Row 2',
         detail:
@@ -191,6 +191,7 @@ describe('bad cells are named and kept', () => {
         detail: '“Shoe size” was not taken. Say below what it holds if it should be.',
       },
     ]);
+    expect(sheet.notes.map(({ row }) => row)).toEqual([1, 2, 4, undefined]);
     expect(sheet.cells).toHaveLength(2);
   });
 

@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { judgeCells } from '@/domain/paperwork/sheet/judge-cells';
-import { readSheet } from '@/domain/paperwork/sheet/read-sheet';
+import { readBook } from '@/domain/paperwork/sheet/read-sheet';
 import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';
 import { TAPPET_RULE_SET } from '@/domain/rulebook/rule-sets/tappet';
 import { GENERIC_LAYOUTS } from '@/domain/tappet/layout/generic-layouts';
@@ -13,7 +13,7 @@ const wanted = { form, layout: GENERIC_LAYOUTS[0]! };
 const read = async (rows: readonly (readonly XlsxCell[])[]) => {
   const found = await readSheetRows(xlsxOf(rows));
   if (!found.ok) throw new Error(found.failure.detail);
-  return readSheet(found.value.rows, wanted, { fileId: 'f', name: 'lifters.xlsx' });
+  return readBook(found.value.grids, wanted, { fileId: 'f', name: 'lifters.xlsx' });
 };
 
 describe('an XLSX sheet', () => {
@@ -51,6 +51,6 @@ describe('an XLSX sheet', () => {
     const other = await readSheetRows(zipOf({ 'a.txt': 'a' }));
     expect(other.ok ? '' : other.failure.detail).toContain('no XLSX sheet');
     const torn = await readSheetRows(zipOf({ 'xl/workbook.xml': '<workbook/>' }));
-    expect(torn.ok ? '' : torn.failure.detail).toContain('cannot be read');
+    expect(torn.ok ? '' : torn.failure.detail).toContain('is damaged');
   });
 });

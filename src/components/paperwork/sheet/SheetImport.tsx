@@ -1,7 +1,7 @@
 import { useMutation } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import type * as z from 'zod/mini';
-import type { readSheetResponse } from '@/contracts/file/file';
+import type { readSheetResponse } from '@/contracts/paperwork/sheet';
 import type { Mapping } from '@/domain/paperwork/sheet/find-columns';
 import type { SheetCell } from '@/domain/paperwork/sheet/sheet-cell';
 import type { SheetForm } from '@/domain/rulebook/form/form';

@@ -22,7 +22,15 @@ export interface SheetColumn {
   readonly at: number;
   /** As it stands in the file, title rows of two or more put together. */
   readonly header: string;
+  /** By which a choice of its meaning is kept: its heading, or its place where it has none. */
+  readonly key: string;
   readonly meaning: ColumnMeaning;
+  /** The person said what it holds. */
+  readonly chosen: boolean;
+  /** Does not show in the spreadsheet. */
+  readonly hidden: boolean;
+  /** The first values that stand in it. */
+  readonly samples: readonly string[];
 }
 
 /** `A`, `B`, … `AA`: a column as spreadsheets name it. */
@@ -33,3 +41,7 @@ export const columnName = (at: number): string => {
 
 /** `D7`; row and column from 0. */
 export const cellName = (row: number, column: number): string => `${columnName(column)}${row + 1}`;
+
+/** A column nobody has explained yet, though something stands in it: the person is asked once. */
+export const isUnexplained = (column: SheetColumn): boolean =>
+  column.meaning.kind === 'not-taken' && !column.chosen && column.samples.length > 0;

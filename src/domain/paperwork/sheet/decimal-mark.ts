@@ -1,11 +1,16 @@
 import type { TextRows } from './find-columns';
 
+/** Longer than any number with its unit. */
+const LONGEST = 40;
+
 const COMMA = /^[+\-−]?\d+,\d+(\s*\D*)?$/;
 const POINT = /^[+\-−]?\d*\.\d+(\s*\D*)?$/;
 
 /** Whether this sheet writes its decimals with a comma: some cell does, and none with a point. */
 export const hasDecimalCommas = (rows: TextRows): boolean => {
-  const cells = rows.flat().map((cell) => cell.trim());
+  const cells = rows.flatMap((row) =>
+    row.filter((cell) => cell.length <= LONGEST).map((cell) => cell.trim()),
+  );
   return cells.some((cell) => COMMA.test(cell)) && !cells.some((cell) => POINT.test(cell));
 };
 
@@ -13,4 +18,4 @@ const EITHER = /^[+\-−]?[1-9]\d{0,2},\d{3}(\s*\D*)?$/;
 
 /** `21,387` alone could be two numbers; on such a sheet it is 21.387. Anything else stays as it was written. */
 export const withPoint = (text: string): string =>
-  EITHER.test(text.trim()) ? text.replace(',', '.') : text;
+  text.length <= LONGEST && EITHER.test(text.trim()) ? text.replace(',', '.') : text;

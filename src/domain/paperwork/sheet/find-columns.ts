@@ -1,6 +1,7 @@
-import type { ColumnMeaning, SheetColumn } from './column-meaning';
+import { type ColumnMeaning, columnName, type SheetColumn } from './column-meaning';
+import { headings } from './headings';
 import { findBore, findCylinder, findValve } from './positions';
-import { readHeader } from './read-header';
+import { isOwnColumn, readHeader } from './read-header';
 import type { WantedSheet } from './sheet-cell';
 
 export type TextRows = readonly (readonly string[])[];
@@ -11,54 +12,33 @@ export interface FoundColumns {
   readonly firstRow: number;
 }
 
-/** Meanings that the person chose, by heading; they go before what the heading seems to say. */
+/** Meanings that the person chose, by the column's key; they go before what the heading seems to say. */
 export type Mapping = Readonly<Record<string, ColumnMeaning>>;
 
 const LOOKED_AT = 40;
+const SAMPLES = 3;
+
+const isByBore = ({ form }: WantedSheet): boolean => form.per === 'bore' || form.per === 'lifter';
 
 const isValueRow = (row: readonly string[], wanted: WantedSheet): boolean => {
-  const { per } = wanted.form;
   const says = (test: (text: string) => unknown) => row.some((cell) => test(cell) !== undefined);
   const hasNumber = row.filter((cell) => /\d/.test(cell)).length > 1;
-  if (per === 'bore' || per === 'lifter')
-    return says((cell) => findBore(cell, wanted.layout)) || (hasNumber && says(findCylinder));
-  return hasNumber && says(findCylinder);
-};
-
-/** A title over several columns stands in the first of them. */
-const filled = (row: readonly string[], width: number): readonly string[] => {
-  let last = '';
-  return Array.from({ length: width }, (_, at) => {
-    last = (row[at] ?? '').trim() || last;
-    return last;
-  });
-};
-
-/** Headings of several rows read downwards; only the last row's blanks stay blank. */
-const headings = (rows: TextRows, width: number): readonly string[] => {
-  const used = rows.filter((row) => row.filter((cell) => cell.trim() !== '').length > 1);
-  const parts = used.map((row, at) => (at < used.length - 1 ? filled(row, width) : row));
-  return Array.from({ length: width }, (_, at) =>
-    parts
-      .map((row) => (row[at] ?? '').trim())
-      .filter((part) => part !== '')
-      .join(' '),
+  return (
+    (isByBore(wanted) && says((cell) => findBore(cell, wanted.layout))) ||
+    (hasNumber && says(findCylinder))
   );
 };
 
-const share = (cells: readonly string[], test: (text: string) => unknown): number => {
-  const written = cells.filter((cell) => cell.trim() !== '');
-  return written.length === 0
-    ? 0
-    : written.filter((cell) => test(cell) !== undefined).length / written.length;
-};
+const share = (cells: readonly string[], test: (text: string) => unknown): number =>
+  cells.length === 0 ? 0 : cells.filter((cell) => test(cell) !== undefined).length / cells.length;
 
 const meaningOf = (
   header: string,
   cells: readonly string[],
   wanted: WantedSheet,
 ): ColumnMeaning => {
-  const byBore = wanted.form.per === 'bore' || wanted.form.per === 'lifter';
+  if (isOwnColumn(header)) return { kind: 'not-taken' };
+  const byBore = isByBore(wanted);
   if (byBore && share(cells, (cell) => findBore(cell, wanted.layout)) > 0.5)
     return { kind: 'position' };
   if (byBore && share(cells, findValve) > 0.5) return { kind: 'valve' };
@@ -84,19 +64,53 @@ const numbered = (columns: readonly SheetColumn[]): readonly SheetColumn[] => {
   });
 };
 
+/** A choice that does not fit this sheet is none: it may come from one the rules have changed since. */
+const chosenFor = (
+  mapping: Mapping,
+  key: string,
+  { form }: WantedSheet,
+): ColumnMeaning | undefined => {
+  const chosen = Object.hasOwn(mapping, key) ? mapping[key] : undefined;
+  const known =
+    chosen?.kind !== 'reading' || form.columns.some(({ quantity }) => quantity === chosen.quantity);
+  return known ? chosen : undefined;
+};
+
+interface Asked {
+  readonly mapping?: Mapping | undefined;
+  readonly hiddenColumns?: readonly number[] | undefined;
+}
+
 /** Finds the headings among title rows and says what each column holds; nothing where no value row is found. */
 export const findColumns = (
   rows: TextRows,
   wanted: WantedSheet,
-  mapping: Mapping = {},
+  { mapping = {}, hiddenColumns = [] }: Asked = {},
 ): FoundColumns | undefined => {
   const firstRow = rows.slice(0, LOOKED_AT).findIndex((row) => isValueRow(row, wanted));
   if (firstRow < 0) return undefined;
-  const width = Math.max(...rows.map((row) => row.length));
+  const width = rows.reduce((most, row) => Math.max(most, row.length), 0);
   const titles = headings(rows.slice(0, firstRow), width);
   const columns = titles.map((header, at): SheetColumn => {
-    const cells = rows.slice(firstRow).map((row) => row[at] ?? '');
-    return { at, header, meaning: mapping[header] ?? meaningOf(header, cells, wanted) };
+    const cells = rows
+      .slice(firstRow)
+      .map((row) => (row[at] ?? '').trim())
+      .filter((cell) => cell !== '');
+    const hidden = hiddenColumns.includes(at);
+    const key = header || `column ${columnName(at)}`;
+    const chosen = chosenFor(mapping, key, wanted);
+    const said = chosen ?? meaningOf(header, cells, wanted);
+    // What does not show in the spreadsheet is not declared by it, unless somebody says so.
+    const unseen = hidden && chosen === undefined && said.kind === 'reading';
+    return {
+      at,
+      header,
+      key,
+      meaning: unseen ? { kind: 'not-taken' } : said,
+      chosen: chosen !== undefined || isOwnColumn(header),
+      hidden,
+      samples: cells.slice(0, SAMPLES).map((cell) => cell.slice(0, 60)),
+    };
   });
   return { columns: numbered(columns), firstRow };
 };

@@ -14,9 +14,12 @@ const VALVES: Readonly<Record<string, Valve>> = {
   ex: 'exhaust',
   exh: 'exhaust',
   exhaust: 'exhaust',
+  einlass: 'intake',
+  auslass: 'exhaust',
 };
 
-const FILLERS = /\b(cylinders?|cyl|bores?|lifters?|tappets?|valves?|no|nr|number|pos|position)\b/g;
+const FILLERS =
+  /\b(cylinders?|cyl|zylinder|zyl|bores?|lifters?|tappets?|valves?|no|nr|number|pos|position)\b/g;
 
 /** `intake`, `I`, `Exh.`: nothing for anything else. */
 export const findValve = (text: string): Valve | undefined =>
@@ -24,7 +27,7 @@ export const findValve = (text: string): Valve | undefined =>
 
 /** A cylinder's number as it stands in a cell: `3`, `Cyl. 3`, `#3`, or `3.0` as spreadsheets write it. */
 export const findCylinder = (text: string): string | undefined =>
-  /^(?:cyl\w*\.?\s*)?#?\s*([1-9]\d?)(?:[.,]0+)?$/i.exec(text.trim())?.[1];
+  /^(?:(?:cyl|zyl)\w*\.?\s*)?#?\s*([1-9]\d?)(?:[.,]0+)?$/i.exec(text.trim())?.[1];
 
 const plain = (text: string): string =>
   text

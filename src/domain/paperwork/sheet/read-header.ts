@@ -61,6 +61,12 @@ const unitIn = (header: string, quantity: QuantityName): string | undefined => {
   return undefined;
 };
 
+/** Heads the column that says what to correct in a file that was given back; it is never read. */
+export const TO_CORRECT = 'To correct (added by Tagwire)';
+
+export const isOwnColumn = (header: string): boolean =>
+  plain(header).startsWith('to correct added by tagwire');
+
 /** What a heading says by itself; a heading that says nothing known is not taken. */
 export const readHeader = (header: string, form: SheetForm): ColumnMeaning => {
   const words = plain(header);

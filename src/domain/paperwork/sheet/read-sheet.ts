@@ -1,19 +1,21 @@
-import { type ColumnMeaning, cellName, columnName, type SheetColumn } from './column-meaning';
+import { type ColumnMeaning, cellName, isUnexplained, type SheetColumn } from './column-meaning';
 import { hasDecimalCommas, withPoint } from './decimal-mark';
 import { findColumns, type Mapping, type TextRows } from './find-columns';
-import { findBore, findCylinder, findValve, rowsFor } from './positions';
+import { nameIn, placeAt, type SheetPlaces } from './place-at';
 import { placeKey, type SheetCell, type WantedSheet } from './sheet-cell';
-
-/** A row or column that could not be used, by its place in the file, and what to do about it. */
-export interface SheetNote {
-  readonly where: string;
-  readonly detail: string;
-}
+import { plainGrid, type SheetGrid, turned } from './sheet-grid';
+import { type SheetNote, unplaced, withoutPlaces } from './sheet-note';
 
 export interface ReadSheet {
   readonly columns: readonly SheetColumn[];
   readonly cells: readonly SheetCell[];
   readonly notes: readonly SheetNote[];
+  /** The row of the headings in the file, from 0; 0 where there is none. */
+  readonly headingRow: number;
+  /** Runs from left to right: what is called a column here is a row of the file. */
+  readonly turned: boolean;
+  /** As the workbook calls it; empty where the file has one sheet. */
+  readonly sheet: string;
 }
 
 /** The file a sheet was read from. */
@@ -23,105 +25,89 @@ export interface SheetFile {
 }
 
 type Reading = Extract<ColumnMeaning, { kind: 'reading' }>;
+type ReadingColumn = SheetColumn & { readonly meaning: Reading };
 
-interface Columns {
-  readonly position?: SheetColumn | undefined;
-  readonly cylinder?: SheetColumn | undefined;
-  readonly valve?: SheetColumn | undefined;
-  readonly readings: readonly (SheetColumn & { readonly meaning: Reading })[];
-}
-
-const isReading = (column: SheetColumn): column is SheetColumn & { readonly meaning: Reading } =>
+const isReading = (column: SheetColumn): column is ReadingColumn =>
   column.meaning.kind === 'reading';
 
-const sorted = (columns: readonly SheetColumn[]): Columns => {
+const placesIn = (columns: readonly SheetColumn[]): SheetPlaces => {
   const of = (kind: ColumnMeaning['kind']) =>
-    columns.find((column) => column.meaning.kind === kind);
-  return {
-    position: of('position'),
-    cylinder: of('cylinder'),
-    valve: of('valve'),
-    readings: columns.filter(isReading),
-  };
+    columns.find((column) => column.meaning.kind === kind)?.at;
+  return { position: of('position'), cylinder: of('cylinder'), valve: of('valve') };
 };
 
-/** The place that a row and a column mean: none where the row does not say, or says one that is not there. */
-const positionAt = (
-  row: readonly string[],
-  columns: Columns,
-  reading: Reading,
-  wanted: WantedSheet,
-): string | undefined => {
-  const { form, layout } = wanted;
-  const byBore = form.per === 'bore' || form.per === 'lifter';
-  const text = (column: SheetColumn | undefined) => (column && row[column.at]) ?? '';
-  const cylinder = findCylinder(text(columns.cylinder));
-  if (!byBore) return rowsFor(form.per, layout).find((place) => place.key === cylinder)?.key;
-  if (columns.position !== undefined) return findBore(text(columns.position), layout);
-  const valve = reading.valve ?? findValve(text(columns.valve));
-  return cylinder === undefined || valve === undefined
-    ? undefined
-    : findBore(`${cylinder} ${valve}`, layout);
-};
+/** The name of a cell, and of the line it stands in, whichever way the sheet runs. */
+const namesFor = (sheet: SheetGrid, isTurned: boolean) => ({
+  cell: (row: number, column: number): string => {
+    const name = isTurned ? cellName(column, row) : cellName(row, column);
+    return sheet.name === '' ? name : `${sheet.name}!${name}`;
+  },
+  row: (at: number): string =>
+    isTurned ? `Column ${cellName(0, at).slice(0, -1)}` : `Row ${at + 1}`,
+  column: (at: number): string =>
+    isTurned ? `Row ${at + 1}` : `Column ${cellName(0, at).slice(0, -1)}`,
+});
 
-const nameOf = (row: readonly string[], { position, cylinder, valve }: Columns): string =>
-  [position, cylinder, valve]
-    .flatMap((column) => (column === undefined ? [] : [(row[column.at] ?? '').trim()]))
-    .filter((part) => part !== '')
-    .join(' ');
+const columnNotes = (
+  columns: readonly SheetColumn[],
+  where: (at: number) => string,
+): readonly SheetNote[] =>
+  columns
+    .filter((column) => column.header !== '' && isUnexplained(column))
+    .map(({ at, header, hidden }) => ({
+      where: where(at),
+      detail: hidden
+        ? `“${header}” is hidden in the spreadsheet and was not taken. Show it there, or say below what it holds.`
+        : `“${header}” was not taken. Say below what it holds if it should be.`,
+    }));
 
-const unplaced = (row: readonly string[], at: number, columns: Columns, per: string): SheetNote => {
-  const name = nameOf(row, columns);
-  const place = per === 'cylinder' ? 'cylinder' : 'bore';
-  const example = per === 'cylinder' ? '“3”' : '“3 intake”';
-  return {
-    where: `Row ${at + 1}`,
-    detail:
-      name === ''
-        ? `It does not say which ${place} it is for. Write it such as ${example}; its values were not taken.`
-        : `“${name}” is no ${place} of this engine. Write it such as ${example}; its values were not taken.`,
-  };
-};
-
-const hasValues = (row: readonly string[], columns: Columns): boolean =>
-  columns.readings.some((column) => /\d/.test(row[column.at] ?? ''));
+const hiddenNote = (rows: readonly number[], name: (at: number) => string): readonly SheetNote[] =>
+  rows.length === 0
+    ? []
+    : [
+        {
+          where: rows.map(name).join(', '),
+          detail:
+            'Hidden in the spreadsheet, perhaps by a filter; not taken. Show all rows and save it once more if they should count.',
+        },
+      ];
 
 /**
- * From rows of text to the cells of a sheet: headings wherever they stand, in whatever order and words,
- * rows by bore (`3 intake`), by cylinder and valve, or by cylinder with the valve in the heading. What
- * is written stays as it is; nothing is dropped without a note.
+ * From one sheet of text to its cells: headings wherever they stand, in whatever order and words, rows
+ * by bore (`3 intake`), by cylinder and valve, or by cylinder with the valve in the heading. What is
+ * written stays as it is; nothing is dropped without a note.
  */
-export const readSheet = (
-  rows: TextRows,
+export const readGrid = (
+  grid: SheetGrid,
   wanted: WantedSheet,
   file: SheetFile,
   mapping: Mapping = {},
+  isTurned = false,
 ): ReadSheet => {
-  const found = findColumns(rows, wanted, mapping);
-  if (found === undefined) {
-    const example = wanted.form.per === 'cylinder' ? '“3”' : '“3 intake”';
-    return {
-      columns: [],
-      cells: [],
-      notes: [
-        {
-          where: 'The whole file',
-          detail: `No row names a place on this engine, such as ${example}. Start from the template.`,
-        },
-      ],
-    };
-  }
-  const columns = sorted(found.columns);
+  const { rows, hiddenColumns } = grid;
+  const names = namesFor(grid, isTurned);
+  const found = findColumns(rows, wanted, { mapping, hiddenColumns });
+  const base = { turned: isTurned, sheet: grid.name };
+  if (found === undefined)
+    return { ...base, columns: [], cells: [], notes: [withoutPlaces(wanted)], headingRow: 0 };
+  const readings = found.columns.filter(isReading);
+  const places = placesIn(found.columns);
   const commas = hasDecimalCommas(rows);
   const cells = new Map<string, SheetCell>();
   const notes: SheetNote[] = [];
+  const hiddenRows: number[] = [];
+  const rowOf = (at: number): { row?: number } => (isTurned ? {} : { row: at });
   for (const [at, row] of rows.entries()) {
-    if (at < found.firstRow || !hasValues(row, columns)) continue;
+    if (at < found.firstRow || !readings.some((one) => /\d/.test(row[one.at] ?? ''))) continue;
+    if (grid.hiddenRows.includes(at)) {
+      hiddenRows.push(at);
+      continue;
+    }
     let placed = false;
     const twice = new Set<string>();
-    for (const column of columns.readings) {
-      const { quantity, unit, depth, axis } = column.meaning;
-      const position = positionAt(row, columns, column.meaning, wanted);
+    for (const column of readings) {
+      const { quantity, unit, depth, axis, valve } = column.meaning;
+      const position = placeAt(row, places, valve, wanted);
       if (position === undefined) continue;
       placed = true;
       const written = (row[column.at] ?? '').trim();
@@ -132,28 +118,88 @@ export const readSheet = (
         twice.add(position);
         continue;
       }
-      const source = { fileId: file.fileId, file: file.name, cell: cellName(at, column.at) };
-      cells.set(key, { ...place, typed: commas ? withPoint(written) : written, unit, source });
+      const source = { fileId: file.fileId, file: file.name, cell: names.cell(at, column.at) };
+      const typed = (commas ? withPoint(written) : written).slice(0, 200);
+      cells.set(key, { ...place, typed, unit, source });
     }
-    if (!placed) notes.push(unplaced(row, at, columns, wanted.form.per));
+    if (!placed)
+      notes.push({ where: names.row(at), ...unplaced(nameIn(row, places), wanted), ...rowOf(at) });
     for (const position of twice) {
       notes.push({
-        where: `Row ${at + 1}`,
+        where: names.row(at),
         detail: `${position} stands here a second time; the first row was taken, this one was not.`,
+        ...rowOf(at),
       });
     }
   }
+  const unsaved = grid.unsaved.filter(
+    ([row, column]) => row >= found.firstRow && readings.some(({ at }) => at === column),
+  );
   return {
+    ...base,
     columns: found.columns,
     cells: [...cells.values()],
-    notes: [...notes, ...unknownColumns(found.columns)],
+    notes: [
+      ...notes,
+      ...unsaved.map(([row, column]) => ({
+        where: `Cell ${names.cell(row, column)}`,
+        detail:
+          'Its formula was saved without a result. Open the file in the spreadsheet, save it there, and add it again.',
+        ...rowOf(row),
+      })),
+      ...hiddenNote(hiddenRows, names.row),
+      ...columnNotes(found.columns, names.column),
+    ],
+    headingRow: isTurned ? 0 : Math.max(0, found.firstRow - 1),
   };
 };
 
-const unknownColumns = (columns: readonly SheetColumn[]): readonly SheetNote[] =>
-  columns
-    .filter(({ meaning, header }) => meaning.kind === 'not-taken' && header !== '')
-    .map(({ at, header }) => ({
-      where: `Column ${columnName(at)}`,
-      detail: `“${header}” was not taken. Say below what it holds if it should be.`,
-    }));
+/** As `readGrid`, of rows alone. */
+export const readSheet = (
+  rows: TextRows,
+  wanted: WantedSheet,
+  file: SheetFile,
+  mapping: Mapping = {},
+): ReadSheet => readBook([plainGrid(rows)], wanted, file, mapping);
+
+/**
+ * The sheet of a file that says most about this engine, whichever way it runs. Others that could have
+ * been meant are named.
+ */
+export const readBook = (
+  grids: readonly SheetGrid[],
+  wanted: WantedSheet,
+  file: SheetFile,
+  mapping: Mapping = {},
+): ReadSheet => {
+  const read = grids
+    .filter(({ hidden }) => !hidden)
+    .map((grid) => {
+      const upright = readGrid(grid, wanted, file, mapping);
+      // A sheet that runs from left to right gives a cell or two upright, by chance.
+      const across =
+        upright.cells.length > 2 ? undefined : readGrid(turned(grid), wanted, file, mapping, true);
+      return across !== undefined && across.cells.length > upright.cells.length ? across : upright;
+    });
+  const [best, ...rest] = read.toSorted((a, b) => b.cells.length - a.cells.length);
+  if (best === undefined)
+    return {
+      columns: [],
+      cells: [],
+      notes: [withoutPlaces(wanted)],
+      headingRow: 0,
+      turned: false,
+      sheet: '',
+    };
+  const others = rest.filter(({ cells }) => cells.length > 0);
+  return {
+    ...best,
+    notes: [
+      ...best.notes,
+      ...others.map(({ sheet, cells }) => ({
+        where: `Sheet “${sheet}”`,
+        detail: `It holds ${cells.length} values of this engine too; they were not taken, those of “${best.sheet}” were. Leave only the sheet that counts in the file if that is wrong.`,
+      })),
+    ],
+  };
+};

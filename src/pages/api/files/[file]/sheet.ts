@@ -1,4 +1,4 @@
-import { readSheetRequest } from '@/contracts/file/file';
+import { readSheetRequest } from '@/contracts/paperwork/sheet';
 import { fail } from '@/domain/result';
 import { signInFirst, write } from '@/http/api';
 import { readSheetFile } from '@/services/paperwork/read-sheet-file';

@@ -2,9 +2,12 @@
 export interface ZipEntry {
   readonly name: string;
   readonly packed: number;
+  /** What the directory says, which may be a lie. */
   readonly unpacked: number;
   /** 0 stored, 8 deflated. */
   readonly method: number;
+  readonly encrypted: boolean;
+  readonly crc: number;
   /** Of its local header. */
   readonly offset: number;
 }
@@ -32,9 +35,22 @@ export const findZipEntries = (bytes: Uint8Array): readonly ZipEntry[] | undefin
       packed: view.getUint32(at + 20, true),
       unpacked: view.getUint32(at + 24, true),
       method: view.getUint16(at + 10, true),
+      encrypted: (view.getUint16(at + 8, true) & 1) === 1,
+      crc: view.getUint32(at + 16, true),
       offset: view.getUint32(at + 42, true),
     });
     at += 46 + nameLength + view.getUint16(at + 30, true) + view.getUint16(at + 32, true);
   }
   return entries;
+};
+
+/** The packed bytes of an entry, behind its local header; nothing where they do not lie in the file. */
+export const findPacked = (bytes: Uint8Array, entry: ZipEntry): Uint8Array | undefined => {
+  const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+  if (entry.offset + 30 > bytes.length) return undefined;
+  const names = view.getUint16(entry.offset + 26, true) + view.getUint16(entry.offset + 28, true);
+  const start = entry.offset + 30 + names;
+  return start + entry.packed > bytes.length
+    ? undefined
+    : bytes.subarray(start, start + entry.packed);
 };
