@@ -12,6 +12,8 @@ import { RowsByAct } from './0010-rows-by-act';
 import { Erasure } from './0011-erasure';
 import { StrokesAndRetention } from './0012-strokes-and-retention';
 import { BulletinsRead } from './0013-bulletins-read';
+import { EnginesBetweenPeople } from './0014-engines-between-people';
+import { RememberedColumns } from './0015-remembered-columns';
 import { MailAndUploads } from './0016-mail-and-uploads';
 import { SetsAndRacks } from './0017-sets-and-racks';
 import { EventDay } from './0018-event-day';
@@ -33,5 +35,7 @@ export const migrationsList: MigrationObject[] = [
   { name: '0013-bulletins-read', class: BulletinsRead },
   { name: '0016-mail-and-uploads', class: MailAndUploads },
   { name: '0017-sets-and-racks', class: SetsAndRacks },
+  { name: '0014-engines-between-people', class: EnginesBetweenPeople },
+  { name: '0015-remembered-columns', class: RememberedColumns },
   { name: '0018-event-day', class: EventDay },
 ];

@@ -6,10 +6,15 @@ import { Inspection } from './event/inspection';
 import { Interest } from './event/interest';
 import { NoticeCounter } from './event/notice-counter';
 import { VerdictDraft } from './event/verdict-draft';
+import { BuilderGrant } from './paperwork/builder-grant';
 import { Car } from './paperwork/car';
 import { Engine } from './paperwork/engine';
+import { EngineOffer } from './paperwork/engine-offer';
 import { KeptFile } from './paperwork/file';
 import { Paperwork } from './paperwork/paperwork';
+import { SheetColumns } from './paperwork/sheet-columns';
+import { GuardianRequest } from './people/guardian-request';
+import { Guardianship } from './people/guardianship';
 import { Identity } from './people/identity';
 import { Invitation } from './people/invitation';
 import { Mail } from './people/mail';
@@ -33,12 +38,16 @@ export const entities = [
   Membership,
   Invitation,
   Mail,
+  Guardianship,
+  GuardianRequest,
   Season,
   RaceClass,
   RulebookDraft,
   RulesQuestion,
   Car,
   Engine,
+  EngineOffer,
+  BuilderGrant,
   Paperwork,
   KeptFile,
   Event,

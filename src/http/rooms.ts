@@ -13,6 +13,7 @@ const ROOM: { readonly [R in Role]: readonly RoomKey[] } = {
 /** The rooms that stand open to this person in any series. */
 export const roomsOf = (actor: Actor): readonly RoomKey[] => {
   const open = new Set(actor.standings.flatMap((standing) => ROOM[standing.role]));
+  if (actor.helping !== undefined) open.add('paddock');
   if (actor.siteAdmin) open.add('office');
   return [...open];
 };

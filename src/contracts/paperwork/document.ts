@@ -60,6 +60,7 @@ const shape = z.strictObject({
   photographs: z.array(file),
   files: z.array(file),
   note: z.string(),
+  replies: z.optional(z.array(z.strictObject({ item: line, text: z.string() }))),
 });
 
 /** Paperwork as handed in, back from its stored document (parsed JSON). */

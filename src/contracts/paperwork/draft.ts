@@ -46,4 +46,14 @@ export const paperworkDraft = z.strictObject({
     .check(z.maxLength(20)),
   mapping,
   note: z.string().check(z.maxLength(2_000, 'At most 2,000 characters.')),
+  replies: z.optional(
+    z
+      .array(
+        z.strictObject({
+          item: line,
+          text: z.string().check(z.maxLength(1_000, 'At most 1,000 characters.')),
+        }),
+      )
+      .check(z.maxLength(100)),
+  ),
 });

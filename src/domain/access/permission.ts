@@ -1,3 +1,5 @@
+import type { Helping } from './helping';
+
 /** What a person may be to a series. A person may hold several. */
 export type Role =
   | 'competitor'
@@ -29,6 +31,7 @@ export type Permission =
   | 'inspection.assign'
   | 'inspection.record'
   | 'inspection.read'
+  | 'custody.record'
   | 'gauge.read'
   | 'gauge.manage'
   | 'verdict.decide'
@@ -47,6 +50,7 @@ const HOLDERS: { readonly [P in Permission]: readonly Role[] } = {
   'inspection.assign': ['official', 'chief-inspector'],
   'inspection.record': ['inspector', 'chief-inspector'],
   'inspection.read': ['inspector', 'chief-inspector', 'official', 'panel'],
+  'custody.record': ['inspector', 'chief-inspector', 'official'],
   'gauge.read': ['inspector', 'chief-inspector', 'official', 'panel'],
   'gauge.manage': ['chief-inspector'],
   'verdict.decide': ['official'],
@@ -67,6 +71,8 @@ export interface Actor {
   readonly authenticatedAt: string;
   readonly siteAdmin: boolean;
   readonly standings: readonly Standing[];
+  /** Whom the actor may help, and with what: builders and guardians. */
+  readonly helping?: readonly Helping[];
 }
 
 export const rolesIn = (actor: Actor, seriesId: string): readonly Role[] =>

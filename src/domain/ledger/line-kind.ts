@@ -33,6 +33,16 @@ export const LINE_KINDS = [
   'results-taken-back',
   'event-cleared',
   'interest-declared',
+  'gauge-entered',
+  'gauge-checked',
+  'gauge-found-bad',
+  'verdict-review',
+  'part-tagged',
+  'custody-recorded',
+  'seal-recorded',
+  'paperwork-withdrawn',
+  'engine-transferred',
+  'engine-swapped',
   'served-otherwise',
 ] as const;
 

@@ -35,6 +35,16 @@ const WORDS: { readonly [K in LineKind]: string } = {
   'results-taken-back': 'Results that were official became unofficial again.',
   'event-cleared': 'The checks of an event without teardown were signed.',
   'interest-declared': 'An inspector’s interest in a competitor was declared or ended.',
+  'paperwork-withdrawn': 'The competitor took paperwork back.',
+  'engine-transferred': 'An engine changed hands: sold, lent or returned.',
+  'engine-swapped': 'A car changed its engine at an event.',
+  'gauge-entered': 'A gauge was entered in the register, or its figures changed.',
+  'gauge-checked': 'A gauge was checked.',
+  'gauge-found-bad': 'A gauge was found bad and withdrawn.',
+  'verdict-review': 'A review of a verdict was opened, made public or ended.',
+  'part-tagged': 'A part was taken into custody under a tag.',
+  'custody-recorded': 'A held part was handed over, opened, closed or returned.',
+  'seal-recorded': 'An engine’s seal was applied, found or removed.',
   'served-otherwise': 'Somebody whom a message did not reach was served otherwise.',
 };
 

@@ -12,6 +12,9 @@ export interface PaperworkDifference {
   readonly now?: string | undefined;
 }
 
+/** What differences are looked for in. */
+export type Compared = Pick<PaperworkDocument, 'answers' | 'sheets' | 'photographs' | 'files'>;
+
 type Said = ReadonlyMap<
   string,
   Omit<PaperworkDifference, 'before' | 'now'> & { readonly words: string }
@@ -28,7 +31,7 @@ const placeOf = ({ position, quantity, depth, axis }: DeclaredReading): string =
   return [`${position},`, label, depth, axis].filter((part) => part !== '').join(' ');
 };
 
-const said = (paper: PaperworkDocument): Said =>
+const said = (paper: Compared): Said =>
   new Map([
     ...paper.answers.map((answer) => {
       const { subject: item, position } = answer;
@@ -54,8 +57,8 @@ const said = (paper: PaperworkDocument): Said =>
 
 /** What changed from one version to the next, in the order of the newer one; what is gone comes last. */
 export const paperworkDifferences = (
-  before: PaperworkDocument,
-  now: PaperworkDocument,
+  before: Compared,
+  now: Compared,
 ): readonly PaperworkDifference[] => {
   const old = said(before);
   const fresh = said(now);

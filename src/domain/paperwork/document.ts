@@ -1,6 +1,7 @@
 import type { Written } from '../quantity/dimension';
 import type { QuantityName } from '../rulebook/quantity-catalogue';
 import type { BoreLayout } from '../tappet/layout/bore-layout';
+import type { ItemRemark } from './state';
 
 /** Who and what is declared: stands in every version of the paperwork as it was on that day. */
 export interface DeclaredEngine {
@@ -79,4 +80,6 @@ export interface PaperworkDocument {
   readonly files: readonly DeclaredFile[];
   /** What the competitor wants the officials to know. */
   readonly note: string;
+  /** What the competitor answered to remarks that were not followed; absent where there were none. */
+  readonly replies?: readonly ItemRemark[] | undefined;
 }

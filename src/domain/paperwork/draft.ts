@@ -1,5 +1,6 @@
 import type { Mapping } from './sheet/find-columns';
 import type { SheetCell } from './sheet/sheet-cell';
+import type { ItemRemark } from './state';
 
 /** One answer as it was typed; a choice's key, `yes` / `no`, text, or a number that may be none yet. */
 export interface DraftAnswer {
@@ -23,6 +24,8 @@ export interface PaperworkDraft {
   /** What somebody said about headings that explain nothing, for the next file. */
   readonly mapping: Mapping;
   readonly note: string;
+  /** Answers to remarks that were not followed, by item. */
+  readonly replies?: readonly ItemRemark[] | undefined;
 }
 
 export const EMPTY_DRAFT: PaperworkDraft = { answers: [], sheets: [], mapping: {}, note: '' };
@@ -55,4 +58,13 @@ export const withCells = (
 ): PaperworkDraft => ({
   ...draft,
   sheets: [...draft.sheets.filter((sheet) => sheet.subject !== subject), { subject, cells }],
+});
+
+/** With this reply to the remark on an item; an empty one is taken out. */
+export const withReply = (draft: PaperworkDraft, reply: ItemRemark): PaperworkDraft => ({
+  ...draft,
+  replies: [
+    ...(draft.replies ?? []).filter(({ item }) => item !== reply.item),
+    ...(reply.text.trim() === '' ? [] : [reply]),
+  ],
 });

@@ -25,4 +25,8 @@ export const missingFaults = (missing: StillMissing): readonly Fault[] => [
     pointer: `/sheets/${step(cellWords(cell))}`,
     detail: detail ?? 'This cannot be read.',
   })),
+  ...missing.remarks.map(({ item, text }) => ({
+    pointer: `/replies/${step(item)}`,
+    detail: `Nothing was changed after the remark “${text}”. Change it, or answer the remark.`,
+  })),
 ];

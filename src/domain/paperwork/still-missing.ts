@@ -5,6 +5,7 @@ import { answerFault, type PaperworkFile } from './declare';
 import { cellsOf, findTyped, type PaperworkDraft } from './draft';
 import { type JudgedCell, judgeCells } from './sheet/judge-cells';
 import { rowsFor } from './sheet/positions';
+import type { ItemRemark } from './state';
 
 /** What stands between a draft and handing it in. */
 export interface StillMissing {
@@ -14,6 +15,8 @@ export interface StillMissing {
   readonly sheets: readonly { readonly form: SheetForm; readonly values: number }[];
   /** Cells that are no number, or in question. */
   readonly cells: readonly JudgedCell[];
+  /** Remarks of the version that came back, neither followed nor answered. */
+  readonly remarks: readonly ItemRemark[];
 }
 
 const answered = (draft: PaperworkDraft, question: Question): boolean => {
@@ -53,6 +56,7 @@ export const stillMissing = (
   form: PaperworkForm,
   layout: BoreLayout,
   files: readonly Pick<PaperworkFile, 'item' | 'purpose'>[],
+  remarks: readonly ItemRemark[] = [],
 ): StillMissing => ({
   questions: form.questions.filter(
     (question) => question.force === 'mandatory' && !answered(draft, question),
@@ -71,10 +75,11 @@ export const stillMissing = (
   cells: draft.sheets.flatMap((sheet) =>
     judgeCells(sheet.cells).filter((cell) => cell.state !== 'ok'),
   ),
+  remarks,
 });
 
 export const isComplete = (missing: StillMissing): boolean =>
-  [missing.questions, missing.photographs, missing.sheets, missing.cells].every(
+  [missing.questions, missing.photographs, missing.sheets, missing.cells, missing.remarks].every(
     (list) => list.length === 0,
   );
 
@@ -93,7 +98,9 @@ export const missingWords = (missing: StillMissing): string => {
     absentParts.length === 0
       ? []
       : [`${absentParts.join(', ').replace(/, ([^,]*)$/, ' and $1')} missing`];
-  return [...absent, ...counted(missing.cells.length, 'cell to correct', 'cells to correct')].join(
-    ', ',
-  );
+  return [
+    ...absent,
+    ...counted(missing.cells.length, 'cell to correct', 'cells to correct'),
+    ...counted(missing.remarks.length, 'remark to answer', 'remarks to answer'),
+  ].join(', ');
 };

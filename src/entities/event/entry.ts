@@ -16,6 +16,8 @@ export const Entry = defineEntity({
     laps: p.json<readonly string[]>().default('[]'),
     engineReference: p.text(),
     paperworkId: p.uuid().nullable(),
+    /** Set by an engine swap; picks after it go by this engine's paperwork alone. */
+    engineId: p.uuid().nullable(),
     position: p.integer().nullable(),
     state: p.text().$type<'entered' | 'withdrawn'>(),
     version: p.integer().version(),

@@ -11,6 +11,9 @@ export const Engine = defineEntity({
     blockCasting: p.text(),
     headCastings: p.text(),
     serial: p.text(),
+    /** Whom it is lent to, and until when; back with the owner from then on. */
+    holderId: p.uuid().nullable(),
+    heldUntil: p.datetime().nullable(),
     version: p.integer().version(),
     createdAt: p.datetime(),
   }),

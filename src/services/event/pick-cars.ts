@@ -24,7 +24,7 @@ interface Accepted {
 /** The last version of an entry's paperwork that was accepted, with its position map. */
 const findAccepted = async (
   em: EntityManager,
-  { seriesId, classId, carNumber, competitorId, paperworkId }: Entry,
+  { seriesId, classId, carNumber, competitorId, paperworkId, engineId = null }: Entry,
 ): Promise<Accepted | undefined> => {
   const [row] = await em.execute<Accepted[]>(
     `select p.id, v.number, v.document::jsonb #> '{engine,layout}' as layout
@@ -34,9 +34,10 @@ const findAccepted = async (
      join record.paperwork_version v
        on v.series_id = p.series_id and v.paperwork_id = p.id and v.number = d.number
        and v.document is not null
-     where p.series_id = ? and (p.id = ? or (p.class_id = ? and p.car_number = ? and p.competitor_id = ?))
+     where p.series_id = ? and p.state <> 'withdrawn'
+       and (?::uuid is null or p.engine_id = ?) and (p.id = ? or (p.class_id = ? and p.car_number = ? and p.competitor_id = ?))
      order by (p.id = ?) desc nulls last, v.number desc limit 1`,
-    [seriesId, paperworkId, classId, carNumber, competitorId, paperworkId],
+    [seriesId, engineId, engineId, paperworkId, classId, carNumber, competitorId, paperworkId],
   );
   return row;
 };

@@ -12,6 +12,7 @@ import type { Ports } from '../ports';
 import { wrongPlace } from './expect-upload';
 import { holdObject } from './hold-object';
 import { inspectFile } from './inspect-file';
+import { needFor } from './own-file';
 
 export interface FileToKeep {
   readonly act: string;
@@ -59,7 +60,10 @@ export const keepFile = async (
 ): Promise<Result<KeptAnswer, Failure>> => {
   const { act, fileId, paperworkId, purpose, item, name, declaredType, declaredBytes } = input;
   const { bytes } = input;
-  const known = isId(paperworkId) ? await findOwnPaperwork(deps.db, actor, paperworkId) : undefined;
+  const need = needFor(purpose);
+  const known = isId(paperworkId)
+    ? await findOwnPaperwork(deps.db, actor, paperworkId, false, need)
+    : undefined;
   if (known === undefined) return fail(absent());
   const { seriesId } = known;
   const hash = sha256(bytes);
@@ -79,7 +83,7 @@ export const keepFile = async (
     actor,
     { id: act, kind: 'keep-file', seriesId, input: request },
     async ({ em, at, send }) => {
-      const paperwork = await findOwnPaperwork(em, actor, paperworkId, true);
+      const paperwork = await findOwnPaperwork(em, actor, paperworkId, true, need);
       if (paperwork === undefined) return fail(absent());
       if (!isWritable(paperwork.state)) return fail(wrongPlace());
       const row =

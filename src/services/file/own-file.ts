@@ -1,37 +1,43 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import { LockMode } from '@mikro-orm/postgresql';
+import { type Need, openings } from '@/domain/access/paperwork-access';
 import { type Actor, may, seriesWhere } from '@/domain/access/permission';
 import { KeptFile } from '@/entities/paperwork/file';
-import { Paperwork } from '@/entities/paperwork/paperwork';
-import { isId } from '../paperwork/own-paperwork';
+import type { Paperwork } from '@/entities/paperwork/paperwork';
+import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
+
+/** What one must be let to do, to add or take out such a file. */
+export const needFor = (purpose: KeptFile['purpose']): Need =>
+  purpose === 'sheet' ? 'sheets' : 'answers';
 
 export interface FileInPaperwork {
   readonly file: KeptFile;
   readonly paperwork: Paperwork;
 }
 
-/** A file of the actor's own paperwork; nothing for anybody else's. */
+/**
+ * A file of paperwork that is the actor's own or open to them; nothing for anybody else's. To look at it
+ * (no lock) is one right, to change it another, by what the file is.
+ */
 export const findOwnFile = async (
   em: EntityManager,
   actor: Actor,
   fileId: string,
   lock = false,
 ): Promise<FileInPaperwork | undefined> => {
-  const open = seriesWhere(actor, 'paperwork.hand-in');
-  if (!isId(fileId) || open.length === 0) return undefined;
+  if (!isId(fileId)) return undefined;
+  const series = openings(actor, 'see').flatMap(({ seriesIds }) => seriesIds);
+  if (series.length === 0) return undefined;
   const options = lock ? { lockMode: LockMode.PESSIMISTIC_WRITE } : {};
   const file = await em.findOne(
     KeptFile,
-    { id: fileId, seriesId: { $in: [...open] }, paperworkId: { $ne: null } },
+    { id: fileId, seriesId: { $in: series }, paperworkId: { $ne: null } },
     options,
   );
-  if (file === null || file.paperworkId === null) return undefined;
-  const paperwork = await em.findOne(Paperwork, {
-    seriesId: file.seriesId,
-    id: file.paperworkId ?? '',
-    competitorId: actor.personId,
-  });
-  return paperwork === null ? undefined : { file, paperwork };
+  if (!file?.paperworkId) return undefined;
+  const need = lock ? needFor(file.purpose) : 'see';
+  const paperwork = await findOwnPaperwork(em, actor, file.paperworkId, false, need);
+  return paperwork === undefined ? undefined : { file, paperwork };
 };
 
 /**

@@ -1,10 +1,14 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import { type Actor, seriesWhere } from '@/domain/access/permission';
+import type { Need } from '@/domain/access/paperwork-access';
+import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure } from '@/domain/failure';
 import { toHex } from '@/domain/ledger/bytes';
 import { declare } from '@/domain/paperwork/declare';
 import { type Declared, declaredFacts } from '@/domain/paperwork/declared-facts';
+import type { PaperworkDocument } from '@/domain/paperwork/document';
+import { openRemarks } from '@/domain/paperwork/open-remarks';
 import { cellWords } from '@/domain/paperwork/sheet/judge-cells';
+import type { ItemRemark } from '@/domain/paperwork/state';
 import {
   isComplete,
   missingWords,
@@ -19,15 +23,22 @@ import type { PaperworkForm } from '@/domain/rulebook/form/form';
 import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';
 import type { Ports } from '../ports';
 import { findRules, type StandingRules } from '../rulebook/find-rules';
-import { isId } from './own-paperwork';
+import { isId, openTo } from './own-paperwork';
 import {
   declaredFile,
   isKept,
   type PaperworkRow,
   readFiles,
   readPaperwork,
+  readVersions,
   type StoredFile,
 } from './read/read-row';
+import { getVersionDocument } from './read/version-document';
+
+export interface Returned {
+  readonly document: PaperworkDocument;
+  readonly remarks: readonly ItemRemark[];
+}
 
 export interface CheckedPaperwork {
   readonly standing: StandingRules;
@@ -36,10 +47,22 @@ export interface CheckedPaperwork {
   readonly declared: Declared;
   readonly missing: StillMissing;
   readonly results: readonly ClauseResult[];
+  /** The version that came back, with what was remarked on it. */
+  readonly returned: Returned | undefined;
 }
 
 export const noRules = (): Failure =>
   failure('not-in-this-state', 'No rulebook of this class is in force: there is nothing to check.');
+
+const findReturned = async (
+  em: EntityManager,
+  { state, seriesId, id, versions }: PaperworkRow,
+): Promise<Returned | undefined> => {
+  if (state !== 'returned') return undefined;
+  const document = await getVersionDocument(em, seriesId, id, versions);
+  const [last] = await readVersions(em, seriesId, id);
+  return { document, remarks: last?.remarks ?? [] };
+};
 
 /** The stored draft against the rules in force at an instant. */
 export const checkRow = async (
@@ -53,12 +76,18 @@ export const checkRow = async (
   const kept = files.filter(isKept).map(declaredFile);
   const form = paperworkForm(standing.rules);
   const declared = declare(row.draft, form, row.layout, kept);
+  const returned = await findReturned(em, row);
+  const open =
+    returned === undefined
+      ? []
+      : openRemarks(returned.remarks, returned.document, { ...row.draft, ...declared });
   return {
     standing,
     form,
     files,
     declared,
-    missing: stillMissing(row.draft, standing.rules, form, row.layout, kept),
+    missing: stillMissing(row.draft, standing.rules, form, row.layout, kept, open),
+    returned,
     results: evaluateRules(standing.rules, withUsualUncertainty(declaredFacts(declared)), {
       carNumber: row.carNumber,
       engineId: row.engineId,
@@ -66,16 +95,16 @@ export const checkRow = async (
   };
 };
 
-/** The actor's own paperwork by id. */
+/** Paperwork by id that is the actor's own or open to them for what is needed. */
 export const findOwnRow = async (
   em: EntityManager,
   actor: Actor,
   id: string,
+  need: Need = 'see',
 ): Promise<PaperworkRow | undefined> => {
-  const open = seriesWhere(actor, 'paperwork.hand-in');
-  if (!isId(id) || open.length === 0) return undefined;
-  const where = 'p.id = ? and p.competitor_id = ? and p.series_id = any(?::uuid[])';
-  const [row] = await readPaperwork(em, where, [id, actor.personId, `{${open.join(',')}}`]);
+  if (!isId(id)) return undefined;
+  const open = openTo(actor, need);
+  const [row] = await readPaperwork(em, `p.id = ? and ${open.sql}`, [id, ...open.parameters]);
   return row;
 };
 

@@ -64,7 +64,10 @@ export const decidePaperwork = async (
         paperworkId,
       ]);
       if (row === undefined) return fail(absent());
-      Object.assign(paperwork, { state: decision, updatedAt: at, updatedBy: actor.personId });
+      // Answers belonged to the remarks before.
+      const { replies: _replies, ...draft } = paperwork.draft;
+      const decided = { state: decision, draft, updatedAt: at, updatedBy: actor.personId };
+      Object.assign(paperwork, decided);
       act.append('paperwork_decision', [
         {
           series_id: seriesId,

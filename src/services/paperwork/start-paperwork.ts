@@ -1,31 +1,62 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import { type Actor, may } from '@/domain/access/permission';
+import { openings, rightsOn } from '@/domain/access/paperwork-access';
+import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure, invalid } from '@/domain/failure';
 import { EMPTY_DRAFT, type PaperworkDraft, withAnswer } from '@/domain/paperwork/draft';
 import { fail, ok, type Result } from '@/domain/result';
+import type { PaperworkForm } from '@/domain/rulebook/form/form';
+import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';
 import { Engine } from '@/entities/paperwork/engine';
 import { Paperwork } from '@/entities/paperwork/paperwork';
 import { RaceClass } from '@/entities/series/race-class';
 import { type ActDeps, performAct } from '../act/perform-act';
+import { holderOf } from '../engine/engine-holder';
 import { findRules } from '../rulebook/find-rules';
 
-/** What the owner last wrote about this engine, in whatever series; the block's number if nothing. */
+/** What is known of an engine, by what a rulebook calls it. */
+const FACTS = [
+  [/block.*casting/, 'blockCasting'],
+  [/head.*casting/, 'headCastings'],
+  [/serial/, 'serial'],
+  [/seal/, 'seals'],
+] as const;
+
+/** Seal numbers that a race-night swap put on record last, as one would write them down. */
+const sealsOn = async (em: EntityManager, engineId: string): Promise<string> => {
+  const [last] = await em.execute<{ seal: string }[]>(
+    `select seal from record.engine_swap where to_engine_id = ? order by received_at desc limit 1`,
+    [engineId],
+  );
+  return last?.seal ?? '';
+};
+
+/**
+ * What the competitor last wrote about this engine, in whatever series; otherwise what is known of it:
+ * castings, serial and seal, where the rules ask for them.
+ */
 const filledIn = async (
   em: EntityManager,
   engine: Engine,
   competitorId: string,
+  form: PaperworkForm,
 ): Promise<PaperworkDraft> => {
   const [last] = await em.execute<{ draft: PaperworkDraft }[]>(
     `select draft from public.paperwork
      where engine_id = ? and competitor_id = ? order by updated_at desc, version desc limit 1`,
     [engine.id, competitorId],
   );
-  if (last !== undefined) return { ...last.draft, note: '' };
-  return withAnswer(EMPTY_DRAFT, {
-    subject: 'block-casting-number',
-    position: 'engine',
-    typed: engine.blockCasting,
-  });
+  if (last !== undefined) {
+    const { replies: _replies, ...draft } = last.draft;
+    return { ...draft, note: '' };
+  }
+  const facts = { ...engine, seals: await sealsOn(em, engine.id) };
+  return form.questions.reduce((draft, { kind, subject, per }) => {
+    const fact = FACTS.find(([named]) => kind === 'text' && named.test(subject))?.[1];
+    const position = per === 'car' ? 'car' : 'engine';
+    return fact === undefined
+      ? draft
+      : withAnswer(draft, { subject, position, typed: facts[fact] });
+  }, EMPTY_DRAFT);
 };
 
 /** Begins the paperwork of one of the actor's engines for a class, with what is known of it filled in. */
@@ -43,7 +74,8 @@ export const startPaperwork = async (
   },
 ): Promise<Result<{ readonly paperworkId: string }, Failure>> => {
   const { act, id, seriesId, classId, engineId } = input;
-  if (!may(actor, 'paperwork.hand-in', seriesId)) return fail(absent());
+  if (!openings(actor, 'answers').some(({ seriesIds }) => seriesIds.includes(seriesId)))
+    return fail(absent());
   const carNumber = input.carNumber.trim().toUpperCase();
   if (!/^[0-9A-Z]{1,6}$/.test(carNumber)) {
     const detail = 'A car number is 1 to 6 digits and capital letters, such as 12J.';
@@ -56,9 +88,13 @@ export const startPaperwork = async (
     { id: act, kind: 'start-paperwork', seriesId, input: request },
     async ({ em, at }) => {
       const raceClass = await em.findOne(RaceClass, { seriesId, id: classId });
-      const engine = await em.findOne(Engine, { id: engineId, ownerId: actor.personId });
+      const engine = await em.findOne(Engine, { id: engineId });
       if (raceClass === null || engine === null) return fail(absent());
-      if ((await findRules(em, seriesId, classId, at)) === undefined) {
+      const competitorId = holderOf(engine, at);
+      if (!rightsOn(actor, { competitorId, seriesId, engineId }).includes('answers'))
+        return fail(absent());
+      const standing = await findRules(em, seriesId, classId, at);
+      if (standing === undefined) {
         const detail = `${raceClass.name} has no rulebook in force yet: there is nothing to declare against.`;
         return fail(failure('not-in-this-state', detail));
       }
@@ -67,20 +103,20 @@ export const startPaperwork = async (
         classId,
         engineId,
         carNumber,
-        competitorId: actor.personId,
+        competitorId,
         state: { $in: ['draft', 'handed-in', 'returned'] },
       });
       if (open > 0) {
         const detail = `Paperwork of ${engine.reference} for car ${carNumber} in ${raceClass.name} is open already. Go on with that one.`;
         return fail(failure('not-in-this-state', detail));
       }
-      const draft = await filledIn(em, engine, actor.personId);
+      const draft = await filledIn(em, engine, competitorId, paperworkForm(standing.rules));
       em.persist(
         em.create(Paperwork, {
           seriesId,
           id,
           classId,
-          competitorId: actor.personId,
+          competitorId,
           engineId,
           carNumber,
           state: 'draft',

@@ -1,11 +1,11 @@
-import { type Failure, failure, invalid } from '@/domain/failure';
+import { type Failure, failure } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import { Invitation } from '@/entities/people/invitation';
 import { Membership } from '@/entities/people/membership';
-import { Person } from '@/entities/people/person';
 import type { Ports } from '../ports';
 import { endSession, startSession } from '../session/start-session';
 import { tokenHash } from '../session/token';
+import { personOfLink } from './person-of-link';
 
 /**
  * Takes up an invitation. Holding the link proves the address, so the person is signed in by it; a
@@ -27,25 +27,10 @@ export const acceptInvitation = async (
     const invitation = await em.findOne(Invitation, open);
     const spent = failure('link-spent', 'This invitation was taken up already or is too old.');
     if (invitation === null) return fail(spent);
-    let person = await em.findOne(Person, { email: invitation.email });
-    const name = input.name.trim();
-    if (person === null && (name === '' || name.length > 120)) {
-      return fail(
-        invalid([{ pointer: '/name', detail: 'Give your name, as it shall be printed.' }]),
-      );
-    }
+    const found = await personOfLink(deps, em, { email: invitation.email, name: input.name });
+    if (!found.ok) return found;
+    const person = found.value;
     if ((await em.nativeUpdate(Invitation, open, { acceptedAt: now })) !== 1) return fail(spent);
-    if (person === null) {
-      person = em.create(Person, {
-        id: deps.random.uuid(),
-        name,
-        email: invitation.email,
-        siteAdmin: false,
-        createdAt: now,
-      });
-      em.persist(person);
-      await em.flush();
-    }
     await em.nativeUpdate(Invitation, { tokenHash: hash }, { acceptedBy: person.id });
     const { seriesId, role } = invitation;
     const held = await em.findOne(Membership, {

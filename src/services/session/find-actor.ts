@@ -1,4 +1,5 @@
 import type { Actor, Role } from '@/domain/access/permission';
+import { findHelping } from '../people/find-helping';
 import type { Ports } from '../ports';
 import { tokenHash } from './token';
 
@@ -11,7 +12,7 @@ interface Row {
   readonly standings: readonly { readonly seriesId: string; readonly role: Role }[] | null;
 }
 
-/** Who holds this session token, with what standing; nobody if it has ended. One read. */
+/** Who holds this session token, with what standing; nobody if it has ended. */
 export const findActor = async (
   deps: Pick<Ports, 'db' | 'clock'>,
   token: string,
@@ -26,6 +27,7 @@ export const findActor = async (
     [tokenHash(token), deps.clock.now()],
   );
   if (row === undefined) return null;
+  const helping = await findHelping(deps.db, row.person_id, deps.clock.now());
   return {
     personId: row.person_id,
     name: row.name,
@@ -33,5 +35,6 @@ export const findActor = async (
     authenticatedAt: new Date(row.authenticated_at).toISOString(),
     siteAdmin: row.site_admin,
     standings: row.standings ?? [],
+    ...(helping.length > 0 && { helping }),
   };
 };

@@ -7,6 +7,7 @@ import type { NoticeDocument } from '@/domain/verdict/notice';
 import { type ReportView, readReport } from '@/domain/verdict/report-view';
 import type { Ports } from '../ports';
 import { getRules } from '../rulebook/find-rules';
+import { verdictsOpenTo } from './verdicts-open-to';
 
 export interface OwnVerdictListed {
   readonly number: string;
@@ -32,8 +33,9 @@ interface Row {
   readonly printed: boolean;
 }
 
-const readOwn = (deps: Pick<Ports, 'db'>, actor: Actor, number: string | null) =>
-  deps.db.execute<Row[]>(
+const readOwn = (deps: Pick<Ports, 'db'>, actor: Actor, number: string | null) => {
+  const open = verdictsOpenTo(actor);
+  return deps.db.execute<Row[]>(
     `select v.series_id as "seriesId", s.name as series, v.notice, r.document,
             encode(v.rules_hash, 'hex') as rules, n.verdict_id is not null as printed
      from record.verdict v
@@ -42,10 +44,11 @@ const readOwn = (deps: Pick<Ports, 'db'>, actor: Actor, number: string | null) =
      join record.report r on r.series_id = v.series_id and r.inspection_id = v.inspection_id
        and r.revision = v.report_revision
      left join record.notice_pdf n on n.series_id = v.series_id and n.verdict_id = v.id
-     where e.competitor_id = ? and (?::text is null or v.number = ?)
+     where ${open.sql} and (?::text is null or v.number = ?)
      order by v.published_at desc limit 200`,
-    [actor.personId, number, number],
+    [...open.parameters, number, number],
   );
+};
 
 const listed = (row: Row, now: Date): OwnVerdictListed => {
   const notice = JSON.parse(row.notice) as NoticeDocument;

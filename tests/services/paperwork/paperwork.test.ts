@@ -12,6 +12,7 @@ import { openPaperworkToCheck } from '@/services/paperwork/read/open-paperwork-t
 import { openOwnVersion } from '@/services/paperwork/read/open-version';
 import { saveDraft } from '@/services/paperwork/save-draft';
 import { startPaperwork } from '@/services/paperwork/start-paperwork';
+import { withdrawPaperwork } from '@/services/paperwork/withdraw-paperwork';
 import {
   fullDraft,
   handedIn,
@@ -249,6 +250,70 @@ describe('handing in', () => {
 });
 
 describe('deciding', () => {
+  it('a remark can be answered instead of followed, and the answer goes to the official with the version', async () => {
+    const { paperworkId, version } = await handedIn(paddock, '47');
+    const remarks = [{ item: 'bore-bushed', text: 'Are you sure?' }];
+    must(await decide(paddock.official, paperworkId, 'returned', remarks));
+    const asked = { act: paddock.uuid(), paperworkId, version: version + 1 };
+    expect(await handInPaperwork(paddock.ports(), paddock.competitor, asked)).toMatchObject({
+      failure: { name: 'invalid' },
+    });
+    const replies = [{ item: 'bore-bushed', text: 'Yes: measured twice.' }];
+    const saved = await save(paddock, paperworkId, version + 1, { ...fullDraft(), replies });
+    await handIn(paddock, paperworkId, saved);
+    const check = await openPaperworkToCheck(paddock.ports(), paddock.official, { paperworkId });
+    expect(must(check).document.replies).toEqual(replies);
+    // Returned once more, the answer is gone: it belonged to the remark before.
+    must(await decide(paddock.official, paperworkId, 'returned', remarks, 2));
+    const again = must(await openPaperwork(paddock.ports(), paddock.competitor, paperworkId));
+    expect(again.row.draft.replies).toBeUndefined();
+    expect(again.checked.missing.remarks).toEqual(remarks);
+  });
+
+  it('two officials at once: one decides, the other is told so', async () => {
+    const { paperworkId } = await handedIn(paddock, '48');
+    const both = await Promise.all([
+      decide(paddock.official, paperworkId, 'accepted'),
+      decide(paddock.second, paperworkId, 'returned', [{ item: 'general', text: 'No.' }]),
+    ]);
+    expect(both.filter(({ ok }) => ok)).toHaveLength(1);
+    expect(both.find(({ ok }) => !ok)).toMatchObject({ failure: { name: 'not-in-this-state' } });
+  });
+
+  it('withdrawn by the competitor, it is kept, declares nothing, and can be begun anew', async () => {
+    const { paperworkId, version } = await handedIn(paddock, '49');
+    const input = { act: paddock.uuid(), paperworkId, version, reason: 'Another engine runs.' };
+    const withdraw = (actor: Actor, change = {}) =>
+      withdrawPaperwork(paddock.ports(), actor, { ...input, ...change });
+    expect(await withdraw(paddock.rival)).toMatchObject({ failure: { name: 'absent' } });
+    expect(await withdraw(paddock.competitor, { act: paddock.uuid(), version: 1 })).toMatchObject({
+      failure: { name: 'stale' },
+    });
+    must(await withdraw(paddock.competitor));
+    expect(must(await withdraw(paddock.competitor))).toBeNull();
+    expect(
+      await rows(
+        'select state_before, reason from record.paperwork_withdrawal where paperwork_id = ?',
+        [paperworkId],
+      ),
+    ).toEqual([{ state_before: 'handed-in', reason: 'Another engine runs.' }]);
+    const [line] = await rows<{ n: number }>(
+      `select count(*)::int as n from record.ledger_line
+       where kind = 'paperwork-withdrawn' and line::jsonb #>> '{refs,paperwork}' = ?`,
+      [paperworkId],
+    );
+    expect(line?.n).toBe(1);
+    expect(await decide(paddock.official, paperworkId, 'accepted')).toMatchObject({
+      failure: { name: 'not-in-this-state' },
+    });
+    const opened = await openOwnVersion(paddock.ports(), paddock.competitor, {
+      paperworkId,
+      number: 1,
+    });
+    expect(must(opened).document.carNumber).toBe('49');
+    expect(await start(paddock, '49')).not.toBe(paperworkId);
+  });
+
   it('returned with remarks, put right and handed in again, version 1 stays as it was', async () => {
     const { paperworkId, version } = await handedIn(paddock, '40');
     const [before] = await rows<{ document: string }>(
@@ -265,6 +330,12 @@ describe('deciding', () => {
       version + 1,
       fullDraft({ '1 intake bore': '0.8439' }),
     );
+    // The remark was on the photograph: another number alone does not meet it.
+    const tooSoon = { act: paddock.uuid(), paperworkId, version: saved };
+    expect(await handInPaperwork(paddock.ports(), paddock.competitor, tooSoon)).toMatchObject({
+      failure: { faults: [{ pointer: '/replies/lifters-racked' }] },
+    });
+    await keepPhotograph(paddock, paperworkId, await picture(640, 480));
     await handIn(paddock, paperworkId, saved);
 
     const [after] = await rows<{ document: string }>(

@@ -1,10 +1,19 @@
-import { type Actor, seriesWhere } from '@/domain/access/permission';
+import { openings } from '@/domain/access/paperwork-access';
+import type { Actor } from '@/domain/access/permission';
 import type { PaperworkState } from '@/domain/paperwork/state';
 import type { Ports } from '../../ports';
+import { verdictsOpenTo } from '../../verdict/verdicts-open-to';
+import { openTo } from '../own-paperwork';
 import { isoOf } from './read-row';
 
 export interface OwnPaperworkRow {
   readonly id: string;
+  readonly competitorId: string;
+  /** Whose it is: the actor's own, or a customer's. */
+  readonly competitorName: string;
+  readonly seriesId: string;
+  readonly engineId: string;
+  readonly classId: string;
   readonly seriesName: string;
   readonly className: string;
   readonly seasonName: string;
@@ -21,14 +30,15 @@ export interface OwnPaperworkRow {
   readonly dueEvent: string | null;
 }
 
-/** All paperwork of the actor's own, what needs doing first. */
+/** All paperwork of the actor's own and what others open to them, what needs doing first. */
 export const listOwnPaperwork = async (
   deps: Pick<Ports, 'db' | 'clock'>,
   actor: Actor,
 ): Promise<readonly OwnPaperworkRow[]> => {
-  const open = seriesWhere(actor, 'paperwork.hand-in');
+  const open = openTo(actor, 'see');
   return deps.db.execute<OwnPaperworkRow[]>(
-    `select p.id, s.name as "seriesName", c.name as "className", n.name as "seasonName",
+    `select p.id, p.competitor_id as "competitorId", o.name as "competitorName",
+       p.series_id as "seriesId", p.engine_id as "engineId", p.class_id as "classId", s.name as "seriesName", c.name as "className", n.name as "seasonName",
        p.car_number as "carNumber", e.reference, p.state, p.versions, s.zone,
        ${isoOf('p.updated_at')} as "updatedAt",
        coalesce(jsonb_array_length(d.remarks), 0) as remarks,
@@ -38,6 +48,7 @@ export const listOwnPaperwork = async (
      join public.class c on c.series_id = p.series_id and c.id = p.class_id
      join public.season n on n.series_id = c.series_id and n.id = c.season_id
      join public.engine e on e.id = p.engine_id
+     join public.person o on o.id = p.competitor_id
      left join record.paperwork_decision d on d.series_id = p.series_id
        and d.paperwork_id = p.id and d.number = p.versions
      left join lateral (
@@ -45,16 +56,20 @@ export const listOwnPaperwork = async (
        where v.series_id = p.series_id and v.season_id = c.season_id and v.starts_at > ?
        order by v.starts_at limit 1
      ) x on true
-     where p.competitor_id = ? and p.series_id = any(?::uuid[])
+     where ${open.sql}
      order by array_position(array['returned', 'draft', 'handed-in', 'accepted', 'withdrawn'], p.state),
        p.updated_at desc`,
-    [deps.clock.now(), actor.personId, `{${open.join(',')}}`],
+    [deps.clock.now(), ...open.parameters],
   );
 };
 
 export interface OwnVerdictRow {
   readonly number: string;
   readonly seriesSlug: string;
+  readonly competitorId: string;
+  /** Nothing where no accepted paperwork stood behind the inspection. */
+  readonly engineId: string | null;
+  readonly eventId: string;
   readonly carNumber: string;
   readonly eventName: string;
   readonly decision: 'breach' | 'no-breach';
@@ -67,18 +82,23 @@ export interface OwnVerdictRow {
 export const listOwnVerdicts = async (
   deps: Pick<Ports, 'db'>,
   actor: Actor,
-): Promise<readonly OwnVerdictRow[]> =>
-  deps.db.execute<OwnVerdictRow[]>(
-    `select v.number, s.slug as "seriesSlug", n.car_number as "carNumber", x.name as "eventName",
+): Promise<readonly OwnVerdictRow[]> => {
+  const open = verdictsOpenTo(actor);
+  return deps.db.execute<OwnVerdictRow[]>(
+    `select v.number, s.slug as "seriesSlug", e.competitor_id as "competitorId",
+       p.engine_id as "engineId", e.event_id as "eventId", e.car_number as "carNumber", x.name as "eventName",
        v.decision, ${isoOf('v.published_at')} as "publishedAt",
        ${isoOf('v.provisional_until')} as "provisionalUntil", x.zone
      from record.verdict v
-     join public.entry n on n.series_id = v.series_id and n.id = v.entry_id
-     join public.event x on x.series_id = n.series_id and x.id = n.event_id
+     join public.entry e on e.series_id = v.series_id and e.id = v.entry_id
+     join public.event x on x.series_id = e.series_id and x.id = e.event_id
      join public.series s on s.id = v.series_id
-     where n.competitor_id = ? order by v.published_at desc limit 20`,
-    [actor.personId],
+     left join public.inspection i on i.series_id = v.series_id and i.id = v.inspection_id
+     left join public.paperwork p on p.series_id = i.series_id and p.id = i.paperwork_id
+     where ${open.sql} order by v.published_at desc limit 20`,
+    [...open.parameters],
   );
+};
 
 export interface OpenClass {
   readonly seriesId: string;
@@ -93,7 +113,7 @@ export const listOpenClasses = async (
   deps: Pick<Ports, 'db'>,
   actor: Actor,
 ): Promise<readonly OpenClass[]> => {
-  const open = seriesWhere(actor, 'paperwork.hand-in');
+  const open = [...new Set(openings(actor, 'answers').flatMap(({ seriesIds }) => seriesIds))];
   return deps.db.execute<OpenClass[]>(
     `select c.series_id as "seriesId", s.name as "seriesName", c.id as "classId",
        c.name as "className", n.name as "seasonName"

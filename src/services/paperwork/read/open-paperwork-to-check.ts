@@ -4,7 +4,8 @@ import { absent, type Failure } from '@/domain/failure';
 import type { PaperworkDocument } from '@/domain/paperwork/document';
 import { fail, ok, type Result } from '@/domain/result';
 import type { Ports } from '../../ports';
-import { findDecidableRow, getVersionDocument, type OpenedVersion, openRow } from './open-version';
+import { findDecidableRow, type OpenedVersion, openRow } from './open-version';
+import { getVersionDocument } from './version-document';
 
 /** A file whose bytes were handed in before, with another engine. */
 export interface SeenBefore {

@@ -1,5 +1,4 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import { readPaperworkDocument } from '@/contracts/paperwork/document';
 import { type Actor, seriesWhere } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
 import { declaredFacts } from '@/domain/paperwork/declared-facts';
@@ -14,6 +13,7 @@ import { getRules } from '../../rulebook/find-rules';
 import { findOwnRow } from '../check-paperwork';
 import { isId } from '../own-paperwork';
 import { type PaperworkRow, readPaperwork, readVersions, type VersionRow } from './read-row';
+import { getVersionDocument } from './version-document';
 
 export interface OpenedVersion {
   readonly row: PaperworkRow;
@@ -38,23 +38,6 @@ const isErased = async (
     [seriesId, paperworkId, number],
   );
   return row?.erased === true;
-};
-
-/** A version as it was handed in; a stored one that cannot be read is a defect. */
-export const getVersionDocument = async (
-  em: EntityManager,
-  seriesId: string,
-  paperworkId: string,
-  number: number,
-): Promise<PaperworkDocument> => {
-  const [stored] = await em.execute<{ document: unknown }[]>(
-    `select document::jsonb as document from record.paperwork_version
-     where series_id = ? and paperwork_id = ? and number = ?`,
-    [seriesId, paperworkId, number],
-  );
-  const read = readPaperworkDocument(stored?.document);
-  if (!read.ok) throw new Error(`Version ${number} of ${paperworkId}: ${read.failure.detail}`);
-  return read.value;
 };
 
 export const openRow = async (
