@@ -92,7 +92,7 @@ export interface UploadsInParts {
   begin(key: string, type: string): Promise<string>;
   /** A URL to which the browser may PUT exactly this part, for a few minutes. */
   presign(key: string, uploadId: string, part: number, bytes: number): Promise<string>;
-  /** Makes the object of its parts; whether they were all there. Done before, it changes nothing. */
+  /** Makes the object of its parts; false where they are not all there. */
   join(key: string, uploadId: string, parts: readonly SentPart[]): Promise<boolean>;
   /** Forgets the parts that were sent. */
   drop(key: string, uploadId: string): Promise<void>;

@@ -1,4 +1,4 @@
-import type { Mailer, Objects, OutgoingMail } from '@/services/ports';
+import type { Mailer, Objects, OutgoingMail, UploadsInParts } from '@/services/ports';
 
 /** An object store in memory, with the same refusals as the real one. */
 export class FakeObjects implements Objects {
@@ -26,6 +26,24 @@ export class FakeObjects implements Objects {
     this.stored.delete(key);
     return Promise.resolve();
   }
+
+  /** Parts that were put, by upload and number. */
+  readonly parts = new Map<string, Uint8Array>();
+  readonly uploads: UploadsInParts = {
+    begin: (key) => Promise.resolve(`upload-of-${key}`),
+    presign: (_, uploadId, part, bytes) =>
+      Promise.resolve(`memory://${uploadId}?part=${part}&bytes=${bytes}`),
+    join: async (key, uploadId, parts) => {
+      const found = parts.map(({ number }) => this.parts.get(`${uploadId} ${number}`));
+      if (found.includes(undefined)) return this.stored.has(key);
+      await this.write(key, Buffer.concat(found as Uint8Array[]), 'application/octet-stream');
+      return true;
+    },
+    drop: async (_, uploadId) => {
+      for (const name of [...this.parts.keys()])
+        if (name.startsWith(`${uploadId} `)) this.parts.delete(name);
+    },
+  };
 }
 
 /** Keeps what would have been sent. */

@@ -34,7 +34,7 @@ export const openPaddock = async (world: World): Promise<Paddock> => {
   const competitor = await addActor(world, 'Ada Lindqvist', [{ seriesId, role: 'competitor' }]);
   const rival = await addActor(world, 'Teo Marsh', [{ seriesId, role: 'competitor' }]);
   const objects = new FakeObjects();
-  const ports = () => world.ports({ objects, images });
+  const ports = () => world.ports({ objects, uploads: objects.uploads, images });
   const uuid = () => ports().random.uuid();
   const engineId = uuid();
   must(

@@ -4,8 +4,14 @@ import { type FilePurpose, MOST_BYTES, tooLargeWords } from '@/domain/paperwork/
 import { fail, ok, type Result } from '@/domain/result';
 import type { KeptFile } from '@/entities/paperwork/file';
 import { performAct } from '../act/perform-act';
+import type { ObjectHead, Ports, SentPart } from '../ports';
 import { answered, type KeepDeps, type KeptAnswer, keepFile } from './keep-file';
 import { findOwnFile } from './own-file';
+import { takeTurns } from './take-turns';
+import { withStore } from './with-store';
+
+// Each holds a whole file in memory.
+const inTurn = takeTurns(3);
 
 /** Refuses without reading what is larger than any file may be. */
 const refuseUnread = (
@@ -29,42 +35,63 @@ const refuseUnread = (
   );
 };
 
+/** What arrived; of a file that went in parts, they are made one object first. Nothing where not all is there. */
+const findArrived = async (
+  { objects, uploads }: Pick<Ports, 'objects' | 'uploads'>,
+  { uploadId, uploadKey }: KeptFile,
+  parts: readonly SentPart[],
+): Promise<ObjectHead | undefined> => {
+  const there = await objects.findHead(uploadKey);
+  if (there !== undefined || !uploadId || parts.length === 0) return there;
+  return (await uploads.join(uploadKey, uploadId, parts)) ? objects.findHead(uploadKey) : undefined;
+};
+
+const notArrived = ({ name }: KeptFile): Failure =>
+  failure('not-in-this-state', `Not all of ${name} has arrived yet. Send it again.`);
+
 /**
  * After the bytes were sent: the server reads them back from the store and decides by them alone. Sent
- * again, it gives the same answer; before anything arrived it says so, and may be asked again.
+ * again, it gives the same answer; before everything arrived it says so, and may be asked again.
  */
 export const confirmUpload = async (
-  deps: KeepDeps,
+  deps: KeepDeps & Pick<Ports, 'uploads'>,
   actor: Actor,
-  input: { readonly act: string; readonly fileId: string },
+  input: {
+    readonly act: string;
+    readonly fileId: string;
+    /** What the store answered to each part, where the file went in parts. */
+    readonly parts?: readonly SentPart[] | undefined;
+  },
 ): Promise<Result<KeptAnswer, Failure>> => {
   const found = await findOwnFile(deps.db, actor, input.fileId);
   if (found === undefined) return fail(absent());
-  const { file } = found;
+  const { file, paperwork } = found;
   const before = answered(file);
   if (before !== undefined) return ok(before);
+  const { id: fileId, uploadKey, item, name, declaredType, declaredBytes } = file;
   const purpose = file.purpose as FilePurpose;
-  const head = await deps.objects.findHead(file.uploadKey);
-  if (head === undefined) {
-    const detail = `Nothing of ${file.name} has arrived yet. Send it again.`;
-    return fail(failure('not-in-this-state', detail));
-  }
   const most = MOST_BYTES[purpose];
-  const kept =
-    head.bytes > most
-      ? await refuseUnread(deps, actor, input.act, file, tooLargeWords(purpose, head.bytes))
-      : await keepFile(deps, actor, {
-          act: input.act,
-          fileId: file.id,
-          paperworkId: found.paperwork.id,
-          purpose,
-          item: file.item,
-          name: file.name,
-          declaredType: file.declaredType,
-          declaredBytes: file.declaredBytes,
-          bytes: await deps.objects.read(file.uploadKey, most),
-        });
-  // The original stands under its hash by now; what was sent is scratch.
-  if (kept.ok) await deps.objects.remove(file.uploadKey);
-  return kept;
+  return withStore(async () => {
+    const head = await findArrived(deps, file, input.parts ?? []);
+    if (head === undefined) return fail(notArrived(file));
+    const kept =
+      head.bytes > most
+        ? await refuseUnread(deps, actor, input.act, file, tooLargeWords(purpose, head.bytes))
+        : await inTurn(async () =>
+            keepFile(deps, actor, {
+              act: input.act,
+              fileId,
+              paperworkId: paperwork.id,
+              purpose,
+              item,
+              name,
+              declaredType,
+              declaredBytes,
+              bytes: await deps.objects.read(uploadKey, most),
+            }),
+          );
+    // The original stands under its hash by now; what was sent is scratch.
+    if (kept.ok) await deps.objects.remove(uploadKey);
+    return kept;
+  });
 };

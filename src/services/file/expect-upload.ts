@@ -12,8 +12,10 @@ import { KeptFile } from '@/entities/paperwork/file';
 import { performAct } from '../act/perform-act';
 import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
+import { addressUpload, type UploadAddress } from './address-upload';
 import { needFor } from './own-file';
 import { sweptAt } from './sweep-upload';
+import { withStore } from './with-store';
 
 export interface ExpectedUpload {
   readonly act: string;
@@ -39,16 +41,14 @@ export const wrongPlace = (): Failure =>
   failure('not-in-this-state', 'This paperwork is handed in; files are added to a draft.');
 
 /**
- * Announces a file and answers where its bytes go: one PUT within minutes. It counts only after
- * `confirmUpload` has read it back.
+ * Announces a file and answers where its bytes go, within minutes; asked again, it gives new addresses
+ * for the same upload. It counts only after `confirmUpload` has read it back.
  */
 export const expectUpload = async (
-  deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs' | 'objects'>,
+  deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs' | 'objects' | 'uploads'>,
   actor: Actor,
   input: ExpectedUpload,
-): Promise<
-  Result<{ readonly fileId: string; readonly url: string; readonly type: string }, Failure>
-> => {
+): Promise<Result<UploadAddress, Failure>> => {
   const { act, fileId, paperworkId, purpose, item, name, bytes } = input;
   const need = needFor(purpose);
   const known = isId(paperworkId)
@@ -101,5 +101,6 @@ export const expectUpload = async (
     },
   );
   if (!expected.ok) return expected;
-  return ok({ fileId, url: await deps.objects.presignPut(uploadKey, type, bytes), type });
+  const file = await deps.db.findOneOrFail(KeptFile, { seriesId, id: fileId });
+  return withStore(async () => ok(await addressUpload(deps, file)));
 };

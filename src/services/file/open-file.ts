@@ -4,6 +4,7 @@ import { fail, ok, type Result } from '@/domain/result';
 import type { Ports } from '../ports';
 import { MOST_PHOTOGRAPH_BYTES, makePreviews, PREVIEW_WIDTHS } from './make-previews';
 import { findReadableFile } from './own-file';
+import { withStore } from './with-store';
 
 export interface OpenedFile {
   readonly bytes: Uint8Array;
@@ -21,11 +22,13 @@ export const openPreview = async (
   const width = PREVIEW_WIDTHS.find((one) => one === input.width);
   if (file === undefined || width === undefined || file.state !== 'kept') return fail(absent());
   const { seriesId, id: fileId } = file;
-  if (!file.previews && file.purpose !== 'sheet') await makePreviews(deps, { seriesId, fileId });
-  const key = file.previews?.[String(width)];
-  if (key === undefined) return fail(failure('unavailable', 'This file has no preview.'));
-  const bytes = await deps.objects.read(key, MOST_PHOTOGRAPH_BYTES);
-  return ok({ bytes, type: 'image/jpeg', name: `${width}.jpg` });
+  return withStore(async () => {
+    if (!file.previews && file.purpose !== 'sheet') await makePreviews(deps, { seriesId, fileId });
+    const key = file.previews?.[String(width)];
+    if (key === undefined) return fail(failure('unavailable', 'This file has no preview.'));
+    const bytes = await deps.objects.read(key, MOST_PHOTOGRAPH_BYTES);
+    return ok({ bytes, type: 'image/jpeg', name: `${width}.jpg` });
+  });
 };
 
 /** The file byte for byte, as it was sent; it may hold position data, so it goes to the parties only. */
@@ -35,7 +38,10 @@ export const openOriginal = async (
   input: { readonly fileId: string },
 ): Promise<Result<OpenedFile, Failure>> => {
   const file = await findReadableFile(deps.db, actor, input.fileId);
-  if (file === undefined || !file.objectKey || !file.mediaType) return fail(absent());
-  const bytes = await deps.objects.read(file.objectKey, MOST_PHOTOGRAPH_BYTES);
-  return ok({ bytes, type: file.mediaType, name: file.name });
+  const { objectKey, mediaType, name } = file ?? {};
+  if (!objectKey || !mediaType || !name) return fail(absent());
+  return withStore(async () => {
+    const bytes = await deps.objects.read(objectKey, MOST_PHOTOGRAPH_BYTES);
+    return ok({ bytes, type: mediaType, name });
+  });
 };

@@ -5,6 +5,20 @@ export const MOST_BYTES: Readonly<Record<FilePurpose, number>> = {
   sheet: 2_000_000,
 };
 
+/** What an object store takes as a part, the last one excepted. */
+export const PART_BYTES = 5 * 1024 * 1024;
+
+/** A file up to this size goes in one request; a larger one in parts, so that a lost connection costs one. */
+export const MOST_AT_ONCE = 8 * 1024 * 1024;
+
+/** Bytes of each part, in order; empty where the file goes in one request. */
+export const partSizes = (bytes: number): readonly number[] =>
+  bytes <= MOST_AT_ONCE
+    ? []
+    : Array.from({ length: Math.ceil(bytes / PART_BYTES) }, (_, at) =>
+        Math.min(PART_BYTES, bytes - at * PART_BYTES),
+      );
+
 /** In one paperwork, those taken out again not counted. */
 export const MOST_FILES = 40;
 

@@ -1,10 +1,10 @@
-import { fileActRequest } from '@/contracts/file/file';
+import { confirmUploadRequest } from '@/contracts/file/file';
 import { fail } from '@/domain/result';
 import { signInFirst, write } from '@/http/api';
 import { confirmUpload } from '@/services/file/confirm-upload';
 
-export const POST = write(fileActRequest, async ({ ports, actor, body, params }) =>
+export const POST = write(confirmUploadRequest, async ({ ports, actor, body, params }) =>
   actor === null
     ? fail(signInFirst())
-    : confirmUpload(ports, actor, { act: body.act, fileId: params['file'] ?? '' }),
+    : confirmUpload(ports, actor, { ...body, fileId: params['file'] ?? '' }),
 );
