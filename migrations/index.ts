@@ -17,6 +17,8 @@ import { RememberedColumns } from './0015-remembered-columns';
 import { MailAndUploads } from './0016-mail-and-uploads';
 import { SetsAndRacks } from './0017-sets-and-racks';
 import { EventDay } from './0018-event-day';
+import { GaugesAndCustody } from './0019-gauges-and-custody';
+import { OwnReadings } from './0022-own-readings';
 
 /** In order of application. A new migration is added here by hand. */
 export const migrationsList: MigrationObject[] = [
@@ -33,9 +35,11 @@ export const migrationsList: MigrationObject[] = [
   { name: '0011-erasure', class: Erasure },
   { name: '0012-strokes-and-retention', class: StrokesAndRetention },
   { name: '0013-bulletins-read', class: BulletinsRead },
-  { name: '0016-mail-and-uploads', class: MailAndUploads },
-  { name: '0017-sets-and-racks', class: SetsAndRacks },
   { name: '0014-engines-between-people', class: EnginesBetweenPeople },
   { name: '0015-remembered-columns', class: RememberedColumns },
+  { name: '0016-mail-and-uploads', class: MailAndUploads },
+  { name: '0017-sets-and-racks', class: SetsAndRacks },
   { name: '0018-event-day', class: EventDay },
+  { name: '0019-gauges-and-custody', class: GaugesAndCustody },
+  { name: '0022-own-readings', class: OwnReadings },
 ];

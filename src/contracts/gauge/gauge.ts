@@ -42,6 +42,8 @@ export const gaugeDescription = z
         degreesOfFreedom: z.optional(decimal),
       }),
     ),
+    /** The kept file of the certificate. */
+    certificateFile: z.optional(z.uuid('This is no file.')),
     calibratedOn: z.optional(day),
     dueOn: z.optional(day),
   })

@@ -38,6 +38,7 @@ const held = {
   comparison,
   fitRatio: z.optional(z.string().check(z.maxLength(20))),
   maximumUncertainty: z.optional(written),
+  ringCheck: z.optional(written),
 };
 
 /** A limit on a measured or derived quantity: `min`, `max` or both, or a nominal with its tolerance. */

@@ -26,8 +26,8 @@ import {
   gapsFrom,
   positionsIn,
   readingsBehind,
+  standingOf,
   unstatedBecause,
-  weaknessOf,
 } from './found-facts';
 import { boreSetsOf } from './measure/bore-sets';
 import { derivedNumbers } from './measure/derived-numbers';
@@ -143,10 +143,13 @@ export const assessInspection = (record: InspectionRecord): InspectionAssessment
   ].map((fact): NumberFact => {
     const per = rowsOf(getQuantityEntry(fact.quantity).per);
     const behind = readingsBehind(fact, counting, per);
+    const { cannotSupportBreach, lift, checked } = standingOf(behind, record);
     return {
       ...fact,
       noStatement: unstatedBecause(behind, gauges),
-      cannotSupportBreach: fact.cannotSupportBreach ?? weaknessOf(behind, record),
+      cannotSupportBreach: fact.cannotSupportBreach ?? cannotSupportBreach,
+      liftedBy: fact.cannotSupportBreach === undefined ? lift : undefined,
+      checked: checked.map(({ words }) => words),
     };
   });
   const facts: Facts = {

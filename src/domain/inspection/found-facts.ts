@@ -1,11 +1,13 @@
 import { isErrorKnown } from '../measurement/gauge-figures';
+import { compareQuantities } from '../quantity/quantity';
 import { fromStored } from '../quantity/stored';
 import type { AnswerFact, GapFact, NumberFact, Positions } from '../rulebook/evaluate/facts';
 import { getQuantityEntry, isQuantityName, QUANTITY_NAMES } from '../rulebook/quantity-catalogue';
 import { type BoreLayout, boreName, positionsOf } from '../tappet/layout/bore-layout';
-import { findWeakness, type GaugeRecord, gaugeOf } from './capture/gauge-record';
+import { findWeakness, type GaugeRecord, gaugeOf, type Weakness } from './capture/gauge-record';
 import type { JudgedReading } from './capture/readings-that-count';
 import { inTakingOrder, positionKey, type RemarkRow, type ZeroRow } from './capture/rows';
+import { type CheckedOnRing, checksOfTheNight, worstOf } from './gauge/ring-check';
 import { standsOn } from './plan/worked-out';
 
 /** Every bore and cylinder of a position map, as facts and results name them. */
@@ -77,18 +79,40 @@ const instrumentsOf = ({ row }: JudgedReading, zeros: readonly ZeroRow[]) => {
 
 const UNREGISTERED = 'the gauge is not in the register';
 
-/** Why readings cannot support a breach: a gauge unknown, out of calibration or out of its range. */
-export const weaknessOf = (readings: readonly JudgedReading[], bay: Bay): string | undefined => {
+/** What stands against a breach on these readings, and the ring checks that may make up for it. */
+export interface Standing {
+  readonly cannotSupportBreach?: string | undefined;
+  /** Only where an overdue calibration is all that stands against it, each time with a check. */
+  readonly lift?: CheckedOnRing | undefined;
+  /** Gauges of these readings that were checked on a ring that night. */
+  readonly checked: readonly CheckedOnRing[];
+}
+
+const larger = (a: CheckedOnRing | undefined, b: CheckedOnRing): CheckedOnRing =>
+  a !== undefined && compareQuantities(a.off, b.off) >= 0 ? a : b;
+
+/** By the gauges behind readings: one unknown, out of calibration, found bad or out of its range. */
+export const standingOf = (readings: readonly JudgedReading[], bay: Bay): Standing => {
+  const checked = new Map<string, CheckedOnRing>();
+  let weakness: Weakness | undefined;
+  let lift: CheckedOnRing | undefined;
   for (const reading of readings) {
     const { occurredAt } = reading.row;
     for (const { id, size } of instrumentsOf(reading, bay.zeros)) {
       const record = bay.gauges.find((gauge) => gauge.id === id);
-      if (record === undefined) return UNREGISTERED;
-      const weakness = findWeakness(record, { occurredAt, zone: bay.zone, size });
-      if (weakness !== undefined) return weakness;
+      if (record === undefined) return { cannotSupportBreach: UNREGISTERED, checked: [] };
+      const found = findWeakness(record, { occurredAt, zone: bay.zone, size });
+      const night = checksOfTheNight(record.ringChecks ?? [], occurredAt);
+      const worst = worstOf(record.code, night, bay.zone);
+      if (worst !== undefined) checked.set(record.id, worst);
+      if (found === undefined) continue;
+      if (!found.overdue || worst === undefined)
+        return { cannotSupportBreach: found.words, checked: [...checked.values()] };
+      weakness ??= found;
+      lift = larger(lift, worst);
     }
   }
-  return undefined;
+  return { cannotSupportBreach: weakness?.words, lift, checked: [...checked.values()] };
 };
 
 /** Why nothing can be stated from readings: how far a gauge is off is not known at all. */

@@ -44,6 +44,8 @@ export interface PositionResult {
   readonly budget?: readonly BudgetWords[] | undefined;
   /** Width of the guard band where the rule has one. */
   readonly guardBand?: Written | undefined;
+  /** Checks of the gauge on a ring that night, each in words. */
+  readonly checked?: readonly string[] | undefined;
   /** A choice or yes / no as declared or found. */
   readonly answer?: string | undefined;
   readonly sentence: string;

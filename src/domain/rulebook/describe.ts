@@ -75,6 +75,11 @@ const heldWords = (held: HeldAgainst): readonly string[] => [
   ...(held.maximumUncertainty === undefined
     ? []
     : [`U at most ${writtenWords(held.maximumUncertainty)}`]),
+  ...(held.ringCheck === undefined
+    ? []
+    : [
+        `a gauge past its due day counts when checked on the ring that night to within ${writtenWords(held.ringCheck)}`,
+      ]),
 ];
 
 const limitParts = (limit: LimitRequirement): readonly string[] => [

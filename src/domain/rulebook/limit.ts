@@ -43,6 +43,11 @@ export interface HeldAgainst {
   /** The smallest allowed window ÷ 2U as decimal text. */
   readonly fitRatio?: string | undefined;
   readonly maximumUncertainty?: Written | undefined;
+  /**
+   * A gauge past its due day counts all the same where it was checked on the series' ring that night
+   * and was off by no more than this. Left out: no check makes up for a calibration.
+   */
+  readonly ringCheck?: Written | undefined;
 }
 
 /** All positions, or a stated number of them. */

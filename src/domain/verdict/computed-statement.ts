@@ -1,9 +1,18 @@
+import type { State } from '../rulebook/clause-result';
 import type { ComputedStatement } from './notice';
 
 export interface StatedFinding {
   readonly clause: string;
   readonly advisory: boolean;
   readonly pass: boolean | null;
+  /** What stands at each position, where that is known. */
+  readonly perPosition?:
+    | readonly {
+        readonly state: State;
+        readonly pass: boolean | null;
+        readonly sentence: string;
+      }[]
+    | undefined;
 }
 
 /**

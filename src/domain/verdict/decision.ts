@@ -57,6 +57,21 @@ export const isAgainstStatement = (
       (clause) => findings.find((finding) => finding.clause === clause)?.pass !== false,
     ));
 
+/**
+ * Why no breach can be decided on a clause, whatever the reasons: nothing speaks for one but readings
+ * that make no statement, by a gauge that is not fit or cannot support a breach. In the report's words.
+ */
+export const findUnsupported = (
+  clause: string,
+  findings: readonly StatedFinding[],
+): string | undefined => {
+  const finding = findings.find((one) => one.clause === clause);
+  const positions = finding?.perPosition ?? [];
+  const speaksForOne = positions.some(({ pass, state }) => pass === false || state === 'too-close');
+  if (finding === undefined || finding.pass === false || speaksForOne) return undefined;
+  return positions.find(({ state }) => state === 'no-statement')?.sentence;
+};
+
 const blank = (text: string): boolean => text.trim() === '';
 
 const breachFaults = (
@@ -76,6 +91,17 @@ const breachFaults = (
       pointer: '/clauses',
       detail: `The signed report has no finding on a mandatory clause ${clause}; no breach can be decided on it.`,
     })),
+    ...draft.clauses.flatMap((clause) => {
+      const because = findUnsupported(clause, findings);
+      return because === undefined
+        ? []
+        : [
+            {
+              pointer: '/clauses',
+              detail: `No breach of clause ${clause} can be decided on these readings. ${because}`,
+            },
+          ];
+    }),
     ...(row === undefined
       ? [{ pointer: '/penalty', detail: 'Choose a penalty from the schedule of this class.' }]
       : []),

@@ -3,9 +3,11 @@ import type { GaugeRecord } from '@/domain/inspection/capture/gauge-record';
 import type { Written } from '@/domain/quantity/dimension';
 
 /** What the register keeps of a gauge beside its code; a setting ring also has its size. */
-export interface GaugeFigures extends Omit<GaugeRecord, 'id' | 'code' | 'checkedOnRing'> {
+export interface GaugeFigures extends Omit<GaugeRecord, 'id' | 'code' | 'ringChecks' | 'faults'> {
   readonly name: string;
   readonly size?: Written | undefined;
+  /** The kept file of its certificate. */
+  readonly certificateFile?: string | undefined;
 }
 
 export const GaugeRow = defineEntity({

@@ -18,6 +18,13 @@ export interface PublishedNotice {
   readonly final: boolean;
   readonly replacedBy: string | null;
   readonly replaces: string | null;
+  /** A later revision of its report that nobody has decided on yet. */
+  readonly correctedAt: string | null;
+  /** Only where an official made the review of this verdict public. */
+  readonly review: {
+    readonly state: 'open' | 'stands' | 'decide-again';
+    readonly at: string;
+  } | null;
 }
 
 interface Row {
@@ -28,7 +35,12 @@ interface Row {
   readonly key: string | null;
   readonly later: string | null;
   readonly earlier: string | null;
+  readonly corrected: string | null;
+  readonly review: PublishedNotice['review'];
 }
+
+const iso = (column: string): string =>
+  `to_char(${column} at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"')`;
 
 /** Nothing for a number that was not published in this series. */
 export const findNotice = async (
@@ -43,7 +55,19 @@ export const findNotice = async (
              order by l.report_revision desc limit 1) as later,
             (select l.number from record.verdict l where l.series_id = v.series_id
                and l.inspection_id = v.inspection_id and l.report_revision < v.report_revision
-             order by l.report_revision desc limit 1) as earlier
+             order by l.report_revision desc limit 1) as earlier,
+            (select ${iso('max(r.signed_at)')} from record.report r where r.series_id = v.series_id
+               and r.inspection_id = v.inspection_id and r.revision > v.report_revision
+               and not exists (select from record.verdict l where l.series_id = r.series_id
+                 and l.inspection_id = r.inspection_id and l.report_revision = r.revision)
+            ) as corrected,
+            (select jsonb_build_object('state', coalesce(d.kind, 'open'),
+                      'at', ${iso('coalesce(d.acted_at, a.acted_at)')})
+             from record.review_act a
+             left join record.review_act d on d.series_id = a.series_id and d.review_id = a.review_id
+               and d.kind in ('stands', 'decide-again')
+             where a.series_id = v.series_id and a.verdict_id = v.id and a.kind = 'made-public'
+             order by (d.id is not null), a.acted_at desc limit 1) as review
      from record.verdict v
      join public.series s on s.id = v.series_id
      left join record.notice_pdf n on n.series_id = v.series_id and n.verdict_id = v.id
@@ -66,5 +90,7 @@ export const findNotice = async (
     final: Date.parse(notice.provisionalUntil) < deps.clock.now().getTime(),
     replacedBy: row.later,
     replaces: row.earlier,
+    correctedAt: row.corrected,
+    review: row.review,
   };
 };

@@ -7,6 +7,7 @@ import { computedStatement } from '@/domain/verdict/computed-statement';
 import { type DecisionDraft, decidableClauses } from '@/domain/verdict/decision';
 import type { ComputedStatement } from '@/domain/verdict/notice';
 import { VerdictDraft } from '@/entities/event/verdict-draft';
+import { type PartKept, readPartsOf } from '../custody/read-parts';
 import type { Ports } from '../ports';
 import { type DecisionCase, decidingBy, findCase } from './find-case';
 
@@ -17,6 +18,8 @@ export interface DecisionSheet {
   readonly decidable: readonly string[];
   /** The schedule, each row with the step that this competitor's earlier breaches lead to. */
   readonly penalties: readonly (PenaltyRow & { readonly nextStep: number })[];
+  /** Parts held from this engine, each with its chain: a gap warns, and blocks nothing. */
+  readonly heldParts: readonly PartKept[];
   readonly draft: { readonly version: number; readonly content: DecisionDraft } | null;
 }
 
@@ -67,6 +70,7 @@ export const readForDecision = async (
       ...row,
       nextStep: Math.min(penaltyFor(row, earlier, season).step, row.penalties.length),
     })),
+    heldParts: await readPartsOf(deps.db, seriesId, inspectionId),
     draft: draft && {
       version: draft.version,
       content: draft.content as unknown as DecisionDraft,

@@ -51,6 +51,29 @@ describe('a decision', () => {
     expect(faults(BREACH, [finding('4.1', true)])).toContain('/clauses');
   });
 
+  it('of breach cannot rest on readings that make no statement, whatever its reasons', () => {
+    const sentence = '1 intake: no statement, since gauge CAL-01 was overdue for calibration.';
+    const silent = { state: 'no-statement', pass: null, sentence } as const;
+    const within = { state: 'within', pass: true, sentence: 'within' } as const;
+    const near = { state: 'too-close', pass: true, sentence: 'too close to call' } as const;
+    const outside = { state: 'outside', pass: false, sentence: 'outside' } as const;
+    const on = (
+      ...perPosition: readonly (typeof silent | typeof within | typeof near | typeof outside)[]
+    ) =>
+      decisionFaults({ ...BREACH, againstComputedBecause: 'We saw it.' }, STREET_EIGHT, [
+        {
+          ...finding('4.3', perPosition.some(({ pass }) => pass === false) ? false : null),
+          perPosition,
+        },
+      ]).map(({ detail }) => detail);
+    const refused = [`No breach of clause 4.3 can be decided on these readings. ${sentence}`];
+    expect(on(silent)).toEqual(refused);
+    expect(on(within, silent)).toEqual(refused);
+    expect(on(within)).toEqual([]);
+    expect(on(near, silent)).toEqual([]);
+    expect(on(outside, silent)).toEqual([]);
+  });
+
   it('that is not what the findings say needs its reason, also on a single clause', () => {
     expect(isAgainstStatement(BREACH, failing)).toBe(false);
     expect(isAgainstStatement(NO_BREACH, failing)).toBe(true);

@@ -10,6 +10,13 @@ import type { Dimension, Written } from '../../quantity/dimension';
 import { findUnit } from '../../quantity/find-unit';
 import type { Quantity } from '../../quantity/quantity';
 import { fromStored } from '../../quantity/stored';
+import type { RingCheck } from '../gauge/ring-check';
+
+/** Instants in UTC. A gauge with no good check before is bad from the beginning: no `goodUntil`. */
+export interface GaugeFault {
+  readonly goodUntil?: string | undefined;
+  readonly foundAt: string;
+}
 
 /** A gauge of the register as plain data; numbers as text. Dates are ISO 8601 (`2026-03-02`). */
 export interface GaugeRecord {
@@ -29,8 +36,10 @@ export interface GaugeRecord {
     | undefined;
   readonly calibratedOn?: string | undefined;
   readonly dueOn?: string | undefined;
-  /** Checked on the series' ring this night, where the class lets that count. */
-  readonly checkedOnRing?: boolean | undefined;
+  /** Checks on the series' rings at the event. */
+  readonly ringChecks?: readonly RingCheck[] | undefined;
+  /** Found bad: nothing that it read between the two instants can support a breach. */
+  readonly faults?: readonly GaugeFault[] | undefined;
   /** Taken out of use: what it read is kept and supports no breach. */
   readonly withdrawn?: boolean | undefined;
 }
@@ -76,6 +85,19 @@ const dayIn = (zone: string, at: string): string => {
   return [year, month, day].map((part) => String(part).padStart(2, '0')).join('-');
 };
 
+/** Why a reading cannot support a breach. `overdue`: a check on the ring may make up for it. */
+export interface Weakness {
+  readonly words: string;
+  readonly overdue: boolean;
+}
+
+const wasBad = ({ faults = [] }: GaugeRecord, at: string): boolean =>
+  faults.some(
+    ({ goodUntil, foundAt }) =>
+      Date.parse(at) <= Date.parse(foundAt) &&
+      (goodUntil === undefined || Date.parse(at) > Date.parse(goodUntil)),
+  );
+
 /** Why a reading with this gauge cannot support a breach; nothing when it can. */
 export const findWeakness = (
   record: GaugeRecord,
@@ -84,15 +106,23 @@ export const findWeakness = (
     readonly zone: string;
     readonly size?: Quantity | undefined;
   },
-): string | undefined => {
+): Weakness | undefined => {
   const { size } = reading;
+  const hard = (words: string): Weakness => ({ words, overdue: false });
   if (size !== undefined && !reaches(gaugeOf(record, size.dimension), size))
-    return `${size.text} ${size.unit} is out of the range of gauge ${record.code}`;
-  if (record.withdrawn === true) return `gauge ${record.code} is withdrawn`;
-  if (record.checkedOnRing === true) return undefined;
+    return hard(`${size.text} ${size.unit} is out of the range of gauge ${record.code}`);
+  if (wasBad(record, reading.occurredAt))
+    return hard(`gauge ${record.code} was found bad, and read this after its last good check`);
+  // What was found bad is judged by the instants of its fault; without one, nothing it read is firm.
+  const after = (record.faults ?? []).every(
+    ({ foundAt }) => Date.parse(reading.occurredAt) > Date.parse(foundAt),
+  );
+  if (record.withdrawn === true && after) return hard(`gauge ${record.code} is withdrawn`);
   const state = calibrationState(
     gaugeOf(record, 'length'),
     dayIn(reading.zone, reading.occurredAt),
   );
-  return state === 'in-calibration' ? undefined : `gauge ${record.code} ${CALIBRATION[state]}`;
+  return state === 'in-calibration'
+    ? undefined
+    : { words: `gauge ${record.code} ${CALIBRATION[state]}`, overdue: state === 'overdue' };
 };

@@ -36,6 +36,7 @@ export const evaluateLimit = (
       fact,
       compared: comparedValue(limit, fact.value),
       decision,
+      ringCheck: limit.ringCheck,
       unit: limit.unit,
       figure: limit.figure,
       advisory,

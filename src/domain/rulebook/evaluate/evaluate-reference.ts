@@ -68,6 +68,7 @@ export const evaluateReference = (
       fact: { ...fact, ...combine(budget), budget },
       compared: fact.value,
       decision,
+      ringCheck: rule.ringCheck,
       unit: rule.unit,
       figure: rule.figure,
       advisory,

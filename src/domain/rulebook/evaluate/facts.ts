@@ -21,6 +21,10 @@ export interface NumberFact {
   readonly noStatement?: string | undefined;
   /** Why this value cannot support a breach, `the gauge was overdue for calibration`. */
   readonly cannotSupportBreach?: string | undefined;
+  /** A check that makes up for it where the clause allows as much as it was off. */
+  readonly liftedBy?: { readonly off: Quantity<'length'>; readonly words: string } | undefined;
+  /** Checks of the gauge that night, in words: `gauge DB-07 checked on the ring SR-03 at 21:10 …`. */
+  readonly checked?: readonly string[] | undefined;
 }
 
 /** A choice's key, `yes` / `no`, or text, at one position. */

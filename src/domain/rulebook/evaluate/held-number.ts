@@ -5,11 +5,12 @@ import { convert } from '../../quantity/convert';
 import type { Written } from '../../quantity/dimension';
 import { asciiIn, formatWidth } from '../../quantity/format';
 import { decimalsOf } from '../../quantity/number-text';
-import { minus, type Quantity } from '../../quantity/quantity';
+import { compareQuantities, minus, type Quantity } from '../../quantity/quantity';
 import type { BudgetWords, PositionResult, State } from '../clause-result';
 import { writtenWords } from '../describe';
 import type { Figure } from '../limit';
 import type { RuleDimension } from '../quantity-catalogue';
+import { getWritten } from './decision-of';
 import type { NumberFact, Position } from './facts';
 
 const WORDS = {
@@ -38,11 +39,23 @@ export interface Held {
   /** As the rule rounds it, where it does. */
   readonly compared: Quantity<RuleDimension>;
   readonly decision: Decision<RuleDimension>;
+  /** By how much a gauge past its due day may be off on the ring and still count. */
+  readonly ringCheck?: Written | undefined;
   readonly unit: string;
   readonly figure?: Figure | undefined;
   readonly advisory: boolean;
   readonly limit: string;
 }
+
+/** Why this number cannot support a breach under this clause; nothing where a ring check makes up for it. */
+const weaknessOf = ({ fact, ringCheck }: Held): string | undefined => {
+  const { cannotSupportBreach, liftedBy } = fact;
+  if (cannotSupportBreach === undefined || liftedBy === undefined || ringCheck === undefined)
+    return cannotSupportBreach;
+  return compareQuantities(liftedBy.off, getWritten(ringCheck, 'length')) <= 0
+    ? undefined
+    : `${cannotSupportBreach}; ${liftedBy.words}, ${writtenWords(ringCheck)} is allowed`;
+};
 
 /** Asked of a gauge that is known. */
 const isUnfit = ({ fact }: Held, { fit }: Assessment<RuleDimension>): boolean =>
@@ -50,7 +63,7 @@ const isUnfit = ({ fact }: Held, { fit }: Assessment<RuleDimension>): boolean =>
 
 const stateOf = (held: Held, assessment: Assessment<RuleDimension>): State => {
   if (held.fact.noStatement !== undefined || isUnfit(held, assessment)) return 'no-statement';
-  const breach = assessment.complies === false && held.fact.cannotSupportBreach !== undefined;
+  const breach = assessment.complies === false && weaknessOf(held) !== undefined;
   return breach ? 'no-statement' : assessment.assessment;
 };
 
@@ -58,7 +71,7 @@ const ending = (held: Held, assessment: Assessment<RuleDimension>, state: State)
   if (state !== 'no-statement') return `: ${WORDS[assessment.assessment]}.`;
   if (held.fact.noStatement !== undefined) return `: no statement, since ${held.fact.noStatement}.`;
   if (isUnfit(held, assessment)) return `: ${UNFIT}.`;
-  return `: no statement, since ${held.fact.cannotSupportBreach ?? 'the reading cannot support one'}.`;
+  return `: no statement, since ${weaknessOf(held) ?? 'the reading cannot support one'}.`;
 };
 
 /** The acceptance window less the limits, on the side that has one. */
@@ -128,6 +141,7 @@ export const heldNumber = (held: Held): PositionResult => {
         }
       : {}),
     ...(guardBand === undefined ? {} : { guardBand }),
+    ...((fact.checked ?? []).length === 0 ? {} : { checked: fact.checked }),
     sentence: `${position.label}: ${figure}${writtenWords(value)}${reach}; ${held.limit}${ending(held, assessment, state)}`,
     rule: assessment.sentence,
   };

@@ -112,7 +112,7 @@ export const marksOf = async (
         ? fromStored(row.value, 'length')
         : undefined;
     const weakness = findWeakness(gauge, { occurredAt: row.occurredAt, zone, size });
-    if (weakness !== undefined) marks.set(row.id, weakness);
+    if (weakness !== undefined) marks.set(row.id, weakness.words);
   }
   return marks;
 };

@@ -11,6 +11,7 @@ import { GaugeRow } from '@/entities/event/gauge';
 import type { Inspection } from '@/entities/event/inspection';
 import { Person } from '@/entities/people/person';
 import { RaceClass } from '@/entities/series/race-class';
+import { readStandings } from '../../gauge/gauge-standing';
 import { getRules } from '../../rulebook/find-rules';
 import { type RecordedRows, readRows } from './rows';
 
@@ -83,6 +84,7 @@ export const getInspectionFile = async (
   const { inspectorId } = inspection;
   const inspector = inspectorId ? await em.findOneOrFail(Person, { id: inspectorId }) : null;
   const gauges = await em.find(GaugeRow, { seriesId }, { orderBy: { code: 'asc' } });
+  const standings = await readStandings(em, seriesId, inspection.eventId);
   return {
     inspection,
     entry,
@@ -90,7 +92,7 @@ export const getInspectionFile = async (
     className: raceClass.name,
     inspector: inspector?.name ?? null,
     rules: await getRules(em, seriesId, inspection.rulesHash),
-    gauges: gauges.map(registered),
+    gauges: gauges.map((row) => ({ ...registered(row), ...standings.get(row.id) })),
     rows: await readRows(em, seriesId, id),
     paperwork: await findPaperwork(em, inspection),
     chain: await readChain(em, seriesId, id),

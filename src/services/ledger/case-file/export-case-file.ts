@@ -17,12 +17,18 @@ interface Asked {
   readonly inspectionId: string;
 }
 
-/** Numbers of the lines on one inspection: its states and reports, verdicts on it, their PDFs. */
+/** Numbers of the lines on one inspection: states, reports, custody, verdicts and their reviews, PDFs. */
 const findIndices = async ({ db }: Deps, { seriesId, inspectionId }: Asked) => {
   const own = await db.execute<{ index: string }[]>(
     `select index from record.ledger_line
      where series_id = ? and line::jsonb #>> '{refs,inspection}' = ?
        and kind in ('inspection-opened', 'inspection-changed', 'report-signed', 'report-revised')`,
+    [seriesId, inspectionId],
+  );
+  const around = await db.execute<{ index: string }[]>(
+    `select index from record.ledger_line
+     where series_id = ? and line::jsonb #>> '{refs,inspection}' = ?
+       and kind in ('part-tagged', 'custody-recorded', 'seal-recorded', 'gauge-checked', 'verdict-review')`,
     [seriesId, inspectionId],
   );
   const verdicts = await db.execute<{ id: string; act_id: string }[]>(
@@ -34,7 +40,7 @@ const findIndices = async ({ db }: Deps, { seriesId, inspectionId }: Asked) => {
     'select index from record.ledger_line where series_id = ? and act_id = any(?::uuid[])',
     [seriesId, `{${acts.join()}}`],
   );
-  return [...own, ...decided].map(({ index }) => Number(index)).sort((a, b) => a - b);
+  return [...own, ...around, ...decided].map(({ index }) => Number(index)).sort((a, b) => a - b);
 };
 
 const readContents = async ({ db }: Deps, seriesId: string, indices: readonly number[]) => {

@@ -1,0 +1,17 @@
+import { type Actor, seriesWhere } from '@/domain/access/permission';
+import { absent, type Failure } from '@/domain/failure';
+import { fail, ok, type Result } from '@/domain/result';
+import { isId } from '../paperwork/own-paperwork';
+import type { Ports } from '../ports';
+import { type PartKept, readPart } from './read-parts';
+
+/** One held part's whole history, for whoever may read inspections of its series. */
+export const findPart = async (
+  deps: Pick<Ports, 'db'>,
+  actor: Actor,
+  id: string,
+): Promise<Result<PartKept, Failure>> => {
+  if (!isId(id)) return fail(absent());
+  const part = await readPart(deps.db, seriesWhere(actor, 'inspection.read'), id);
+  return part === undefined ? fail(absent()) : ok(part);
+};
