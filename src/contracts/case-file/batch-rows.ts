@@ -19,6 +19,8 @@ const batchShape = z.looseObject({
   clockOffsetMs: z.string().check(z.regex(/^-?\d{1,12}$/)),
   /** Why none of the batch counts. */
   received: z.optional(z.string()),
+  /** Why single rows do not count, by their ids. */
+  receivedRows: z.optional(z.record(z.string(), z.string())),
   /** The server's clock; ISO 8601 in UTC. */
   receivedAt: z.optional(z.string()),
   /** Why a row that counts supports no breach, by its id. */
@@ -48,13 +50,28 @@ export const rawBatch = (document: string) => {
   };
 };
 
+/** Why rows of a batch do not count, by their ids; of old texts one reason holds for all. */
+export const notCountedIn = ({
+  received,
+  receivedRows = {},
+  rows,
+}: Pick<ReturnType<typeof rawBatch>, 'received' | 'receivedRows' | 'rows'>): ReadonlyMap<
+  string,
+  string
+> =>
+  received === undefined
+    ? new Map(Object.entries(receivedRows))
+    : new Map(rows.map((row) => [row.id, received]));
+
 const rowsOf = (document: string): RawRows => {
-  const { rows, ...batch } = rawBatch(document);
+  const batch = rawBatch(document);
+  const { rows } = batch;
+  const notCounted = notCountedIn(batch);
   const common = (row: SentRow) => ({
     id: row.id,
     takenBy: batch.by,
     occurredAt: new Date(Date.parse(row.occurredAt) + batch.clockOffsetMs).toISOString(),
-    standing: batch.received === undefined ? ('accepted' as const) : ('received' as const),
+    standing: notCounted.has(row.id) ? ('received' as const) : ('accepted' as const),
   });
   const readings: ReadingRow[] = [];
   const zeros: ZeroRow[] = [];

@@ -7,6 +7,8 @@ import type { GaugeRecord } from './capture/gauge-record';
 import type { RemarkRow, ZeroRow } from './capture/rows';
 import type { Revision } from './finding';
 import type { SetResult } from './measure/measure-position';
+import { rackOf, signedReturnOf } from './rack/rack';
+import type { SecondSet } from './second-set/second-sets';
 
 /** Who stood by, and whether they signed. */
 export interface Witness {
@@ -86,6 +88,15 @@ export const plainSet = ({ set, measurement, foot }: SetResult) => ({
   superseded: set.superseded.map(({ row }) => row.id),
 });
 
+const plainSecondSet = ({ set, firstBy, secondBy, alone, agreements }: SecondSet) => ({
+  set,
+  firstBy,
+  secondBy,
+  // By one person alone it is a re-zeroed repeat, not a second opinion.
+  taken: alone ? 'repeat-by-the-same-inspector' : 'by-another-inspector',
+  agreements,
+});
+
 /**
  * The report that is signed: rules, map, every row with what became of it, gauges with certificates,
  * results, findings. Plain data without numbers, to be canonicalised (RFC 8785) and hashed.
@@ -93,21 +104,28 @@ export const plainSet = ({ set, measurement, foot }: SetResult) => ({
 export const reportDocument = (
   parts: ReportParts,
   assessment: InspectionAssessment,
-): PlainDocument =>
-  toDocument({
+): PlainDocument => {
+  const lifters = rackOf(parts.layout, parts.remarks);
+  return toDocument({
     document: 'tagwire/report',
     version: '1',
     ...parts,
     domainVersion: assessment.domainVersion,
     readings: assessment.judged,
-    bores: assessment.bores.map(({ key, position, sets }) => ({
+    bores: assessment.bores.map(({ key, position, sets, secondSets, choice }) => ({
       key,
       position,
       sets: sets.map(plainSet),
+      ...(secondSets.length > 0 && { secondSets: secondSets.map(plainSecondSet) }),
+      ...(choice && { stands: String(choice.stands), standsBecause: choice.reason }),
     })),
     completeness: assessment.completeness,
     redo: assessment.redo,
+    ...(lifters.some(({ state }) => state !== 'in-engine') && {
+      lifters: { rack: lifters, signedFor: signedReturnOf(parts.remarks) },
+    }),
     findings: assessment.findings,
     caution:
       'Findings support a decision by the series’ officials; they are no certification that an engine is safe.',
   });
+};

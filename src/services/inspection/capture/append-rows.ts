@@ -11,8 +11,8 @@ export interface BatchContext {
   readonly batch: number;
   readonly takenBy: string;
   readonly clockOffsetMs: number;
-  /** Why none of the rows counts; nothing when they are accepted. */
-  readonly receivedBecause: string | undefined;
+  /** Why rows do not count, by their ids; all others are accepted. */
+  readonly notCounted: ReadonlyMap<string, string>;
   /** Why a row that counts supports no breach, by its id. */
   readonly marks: ReadonlyMap<string, string>;
 }
@@ -28,8 +28,8 @@ const common = (context: BatchContext, row: SentRow) => ({
   taken_by: context.takenBy,
   occurred_at: row.occurredAt,
   clock_offset_ms: context.clockOffsetMs,
-  standing: context.receivedBecause === undefined ? 'accepted' : 'received',
-  standing_reason: context.receivedBecause ?? context.marks.get(row.id) ?? null,
+  standing: context.notCounted.has(row.id) ? 'received' : 'accepted',
+  standing_reason: context.notCounted.get(row.id) ?? context.marks.get(row.id) ?? null,
 });
 
 const placed = ({ place }: SentReading | SentRemark) => ({

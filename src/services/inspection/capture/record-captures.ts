@@ -2,7 +2,6 @@ import { LockMode } from '@mikro-orm/core';
 import type { CapturesAnswer, CapturesRequest } from '@/contracts/inspection/captures';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, invalid } from '@/domain/failure';
-import { acceptsReadings, STATE_WORDS } from '@/domain/inspection/state';
 import { sha256, toHex, utf8 } from '@/domain/ledger/bytes';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { chainNextHash } from '@/domain/ledger/chain';
@@ -13,24 +12,12 @@ import { Inspection } from '@/entities/event/inspection';
 import { performAct } from '../../act/perform-act';
 import type { Ports } from '../../ports';
 import { interestsIn } from '../interest';
-import { findInspectionRow, worksOn } from '../read/find-inspection';
+import { findInspectionRow } from '../read/find-inspection';
 import { readChain } from '../read/inspection-file';
+import { readRows } from '../read/rows';
 import { appendRows } from './append-rows';
 import { marksOf, rowFaults } from './check-rows';
-
-/** Why rows are kept and do not count. Nothing: they are accepted. */
-const receivedBecause = (
-  actor: Actor,
-  inspection: Inspection,
-  interest: string | undefined,
-): string | undefined => {
-  if (interest !== undefined) return `${actor.name} ${interest}.`;
-  if (!worksOn(actor, inspection)) return `${actor.name} was not the inspector named for this car.`;
-  if (acceptsReadings(inspection.state) || inspection.correctionReason !== '') return undefined;
-  return inspection.state === 'closed'
-    ? 'This arrived after the report was signed.'
-    : `The inspection was ${STATE_WORDS[inspection.state]} when this arrived.`;
-};
+import { rowsNotCounted } from './row-standing';
 
 /**
  * Records what a tablet took, exactly once: one batch, the next link of the inspection's chain.
@@ -65,7 +52,8 @@ export const recordCaptures = async (
       if (faults.length > 0) return fail(invalid(faults));
       const { zone } = await em.findOneOrFail(Event, { seriesId, id: inspection.eventId });
       const interest = (await interestsIn(em, inspection)).get(actor.personId);
-      const because = receivedBecause(actor, inspection, interest);
+      const recorded = () => readRows(em, seriesId, inspectionId);
+      const notCounted = await rowsNotCounted({ actor, inspection, interest, recorded }, rows);
       const marks = await marksOf(em, { seriesId, zone }, rows);
       const chain = await readChain(em, seriesId, inspectionId);
       const document = canonicalJson(
@@ -77,7 +65,7 @@ export const recordCaptures = async (
           by: actor.personId,
           clockOffsetMs,
           receivedAt: at.toISOString(),
-          received: because,
+          ...(notCounted.size > 0 && { receivedRows: Object.fromEntries(notCounted) }),
           ...(marks.size > 0 && { marked: Object.fromEntries(marks) }),
           rows,
           tablet,
@@ -103,7 +91,7 @@ export const recordCaptures = async (
           batch,
           takenBy: actor.personId,
           clockOffsetMs,
-          receivedBecause: because,
+          notCounted,
           marks,
         },
         rows,
@@ -112,7 +100,7 @@ export const recordCaptures = async (
         batch,
         head: toHex(head),
         receivedAt: at.toISOString(),
-        received: because === undefined ? [] : rows.map((row) => ({ id: row.id, reason: because })),
+        received: [...notCounted].map(([id, reason]) => ({ id, reason })),
         marked: [...marks].map(([id, reason]) => ({ id, reason })),
       });
     },

@@ -1,5 +1,5 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import { rawBatch } from '@/contracts/case-file/batch-rows';
+import { notCountedIn, rawBatch } from '@/contracts/case-file/batch-rows';
 import { sha256, toHex, utf8 } from '@/domain/ledger/bytes';
 import { chainNextHash, chainStart } from '@/domain/ledger/chain';
 import type { Line } from '@/domain/ledger/line';
@@ -46,7 +46,7 @@ const expectedRows = (batch: BatchRow, seriesId: string): ReadonlyMap<string, Ro
   const expected = new Map<string, Row>();
   const text = findText(batch.document);
   if (text === undefined) return expected;
-  const { by, clockOffsetMs, received, receivedAt, marked = {}, rows } = text;
+  const { by, clockOffsetMs, receivedAt, marked = {}, rows } = text;
   appendRows(
     (table, made) => {
       for (const row of made) {
@@ -63,7 +63,7 @@ const expectedRows = (batch: BatchRow, seriesId: string): ReadonlyMap<string, Ro
       batch: batch.number,
       takenBy: by,
       clockOffsetMs,
-      receivedBecause: received,
+      notCounted: notCountedIn(text),
       marks: new Map(Object.entries(marked)),
     },
     rows,
