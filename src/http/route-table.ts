@@ -71,6 +71,7 @@ export const ROUTES: Readonly<Record<string, RouteAccess>> = {
   '/api/rulebooks/schema.json': open,
   '/api/verdicts/[series]/[number]': open,
   '/api/verdicts/[series]/draft': { access: 'permission', permission: 'verdict.decide' },
+  '/api/swaps': { access: 'own' },
   '/api/verdicts/[series]/publish': { access: 'permission', permission: 'verdict.decide' },
   '/barn': { access: 'permission', permission: 'inspection.read' },
   '/barn/interests': { access: 'permission', permission: 'inspection.read' },

@@ -13,7 +13,7 @@ import { performAct } from '../act/perform-act';
 import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 import { addressUpload, type UploadAddress } from './address-upload';
-import { needFor } from './own-file';
+import { needFor, takesFile } from './own-file';
 import { sweptAt } from './sweep-upload';
 import { withStore } from './with-store';
 
@@ -69,7 +69,7 @@ export const expectUpload = async (
     async ({ em, at, send }) => {
       const paperwork = await findOwnPaperwork(em, actor, paperworkId, true, need);
       if (paperwork === undefined) return fail(absent());
-      if (!isWritable(paperwork.state)) return fail(wrongPlace());
+      if (!(await takesFile(em, paperwork, fileId))) return fail(wrongPlace());
       const there = await em.count(KeptFile, {
         seriesId,
         paperworkId,

@@ -12,7 +12,7 @@ import type { Ports } from '../ports';
 import { wrongPlace } from './expect-upload';
 import { holdObject } from './hold-object';
 import { inspectFile } from './inspect-file';
-import { needFor } from './own-file';
+import { needFor, takesFile } from './own-file';
 
 export interface FileToKeep {
   readonly act: string;
@@ -85,7 +85,7 @@ export const keepFile = async (
     async ({ em, at, send }) => {
       const paperwork = await findOwnPaperwork(em, actor, paperworkId, true, need);
       if (paperwork === undefined) return fail(absent());
-      if (!isWritable(paperwork.state)) return fail(wrongPlace());
+      if (!(await takesFile(em, paperwork, fileId))) return fail(wrongPlace());
       const row =
         (await em.findOne(
           KeptFile,

@@ -2,9 +2,25 @@ import type { EntityManager } from '@mikro-orm/postgresql';
 import { LockMode } from '@mikro-orm/postgresql';
 import { type Need, openings } from '@/domain/access/paperwork-access';
 import { type Actor, may, seriesWhere } from '@/domain/access/permission';
+import { isWritable } from '@/domain/paperwork/state';
 import { KeptFile } from '@/entities/paperwork/file';
 import type { Paperwork } from '@/entities/paperwork/paperwork';
 import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
+
+const isOfSwap = async (em: EntityManager, seriesId: string, fileId: string): Promise<boolean> => {
+  const [row] = await em.execute<{ n: number }[]>(
+    'select 1 as n from record.engine_swap where series_id = ? and photograph_id = ? limit 1',
+    [seriesId, fileId],
+  );
+  return row !== undefined;
+};
+
+/** Whether a file may still come to this paperwork: to a draft, or the photograph of an engine swap. */
+export const takesFile = async (
+  em: EntityManager,
+  { seriesId, state }: Paperwork,
+  fileId: string,
+): Promise<boolean> => isWritable(state) || isOfSwap(em, seriesId, fileId);
 
 /** What one must be let to do, to add or take out such a file. */
 export const needFor = (purpose: KeptFile['purpose']): Need =>
@@ -60,11 +76,11 @@ export const findReadableFile = async (
   const file = await em.findOne(KeptFile, { id: fileId, seriesId: { $in: open } });
   if (file === null) return undefined;
   if (!file.paperworkId) return may(actor, 'inspection.read', file.seriesId) ? file : undefined;
-  // A draft is its owner's alone: officials see what some version that was handed in holds.
+  // A draft is its owner's alone: officials see what some version that was handed in holds, and swaps.
   const [held] = await em.execute<{ n: number }[]>(
     `select 1 as n from record.paperwork_version
      where series_id = ? and paperwork_id = ? and position(? in document) > 0 limit 1`,
     [file.seriesId, file.paperworkId, file.id],
   );
-  return held === undefined ? undefined : file;
+  return held !== undefined || (await isOfSwap(em, file.seriesId, file.id)) ? file : undefined;
 };

@@ -1,10 +1,7 @@
-import type { EntityManager } from '@mikro-orm/postgresql';
 import { openings, rightsOn } from '@/domain/access/paperwork-access';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure, invalid } from '@/domain/failure';
-import { EMPTY_DRAFT, type PaperworkDraft, withAnswer } from '@/domain/paperwork/draft';
 import { fail, ok, type Result } from '@/domain/result';
-import type { PaperworkForm } from '@/domain/rulebook/form/form';
 import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';
 import { Engine } from '@/entities/paperwork/engine';
 import { Paperwork } from '@/entities/paperwork/paperwork';
@@ -12,52 +9,7 @@ import { RaceClass } from '@/entities/series/race-class';
 import { type ActDeps, performAct } from '../act/perform-act';
 import { holderOf } from '../engine/engine-holder';
 import { findRules } from '../rulebook/find-rules';
-
-/** What is known of an engine, by what a rulebook calls it. */
-const FACTS = [
-  [/block.*casting/, 'blockCasting'],
-  [/head.*casting/, 'headCastings'],
-  [/serial/, 'serial'],
-  [/seal/, 'seals'],
-] as const;
-
-/** Seal numbers that a race-night swap put on record last, as one would write them down. */
-const sealsOn = async (em: EntityManager, engineId: string): Promise<string> => {
-  const [last] = await em.execute<{ seal: string }[]>(
-    `select seal from record.engine_swap where to_engine_id = ? order by received_at desc limit 1`,
-    [engineId],
-  );
-  return last?.seal ?? '';
-};
-
-/**
- * What the competitor last wrote about this engine, in whatever series; otherwise what is known of it:
- * castings, serial and seal, where the rules ask for them.
- */
-const filledIn = async (
-  em: EntityManager,
-  engine: Engine,
-  competitorId: string,
-  form: PaperworkForm,
-): Promise<PaperworkDraft> => {
-  const [last] = await em.execute<{ draft: PaperworkDraft }[]>(
-    `select draft from public.paperwork
-     where engine_id = ? and competitor_id = ? order by updated_at desc, version desc limit 1`,
-    [engine.id, competitorId],
-  );
-  if (last !== undefined) {
-    const { replies: _replies, ...draft } = last.draft;
-    return { ...draft, note: '' };
-  }
-  const facts = { ...engine, seals: await sealsOn(em, engine.id) };
-  return form.questions.reduce((draft, { kind, subject, per }) => {
-    const fact = FACTS.find(([named]) => kind === 'text' && named.test(subject))?.[1];
-    const position = per === 'car' ? 'car' : 'engine';
-    return fact === undefined
-      ? draft
-      : withAnswer(draft, { subject, position, typed: facts[fact] });
-  }, EMPTY_DRAFT);
-};
+import { filledIn } from './filled-in';
 
 /** Begins the paperwork of one of the actor's engines for a class, with what is known of it filled in. */
 export const startPaperwork = async (

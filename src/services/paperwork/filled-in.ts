@@ -1,0 +1,50 @@
+import type { EntityManager } from '@mikro-orm/postgresql';
+import { EMPTY_DRAFT, type PaperworkDraft, withAnswer } from '@/domain/paperwork/draft';
+import type { PaperworkForm } from '@/domain/rulebook/form/form';
+import type { Engine } from '@/entities/paperwork/engine';
+
+/** What is known of an engine, by what a rulebook calls it. */
+const FACTS = [
+  [/block.*casting/, 'blockCasting'],
+  [/head.*casting/, 'headCastings'],
+  [/serial/, 'serial'],
+  [/seal/, 'seals'],
+] as const;
+
+/** Seal numbers that a race-night swap put on record last, as one would write them down. */
+const sealsOn = async (em: EntityManager, engineId: string): Promise<string> => {
+  const [last] = await em.execute<{ seal: string }[]>(
+    `select seal from record.engine_swap where to_engine_id = ? order by received_at desc limit 1`,
+    [engineId],
+  );
+  return last?.seal ?? '';
+};
+
+/**
+ * What the competitor last wrote about this engine, in whatever series; otherwise what is known of it:
+ * castings, serial and seal, where the rules ask for them.
+ */
+export const filledIn = async (
+  em: EntityManager,
+  engine: Engine,
+  competitorId: string,
+  form: PaperworkForm,
+): Promise<PaperworkDraft> => {
+  const [last] = await em.execute<{ draft: PaperworkDraft }[]>(
+    `select draft from public.paperwork
+     where engine_id = ? and competitor_id = ? order by updated_at desc, version desc limit 1`,
+    [engine.id, competitorId],
+  );
+  if (last !== undefined) {
+    const { replies: _replies, ...draft } = last.draft;
+    return { ...draft, note: '' };
+  }
+  const facts = { ...engine, seals: await sealsOn(em, engine.id) };
+  return form.questions.reduce((draft, { kind, subject, per }) => {
+    const fact = FACTS.find(([named]) => kind === 'text' && named.test(subject))?.[1];
+    const position = per === 'car' ? 'car' : 'engine';
+    return fact === undefined
+      ? draft
+      : withAnswer(draft, { subject, position, typed: facts[fact] });
+  }, EMPTY_DRAFT);
+};
