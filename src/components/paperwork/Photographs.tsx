@@ -1,7 +1,9 @@
 import type { ItemRemark } from '@/domain/paperwork/state';
 import type { Shot } from '@/domain/rulebook/form/form';
 import { FilePick } from './files/FilePick';
-import { FileRow, SendingRow } from './files/FileRow';
+import { FileRow } from './files/FileRow';
+import { SendingRow } from './files/SendingRow';
+import { SendingSummary } from './files/SendingSummary';
 import type { Files } from './files/use-files';
 import { RemarksOn } from './RemarksOn';
 
@@ -9,6 +11,7 @@ const PICTURES = {
   'image/jpeg': ['.jpg', '.jpeg'],
   'image/png': ['.png'],
   'image/webp': ['.webp'],
+  'image/heic': ['.heic', '.heif'],
 } as const;
 
 interface PhotographsProps {
@@ -30,6 +33,7 @@ export const Photographs = ({ shots, files, remarks }: PhotographsProps) => {
           {count} of {shots.length}
         </span>
       </div>
+      <SendingSummary files={files} />
       {shots.map((shot) => {
         const own = files.files.filter((file) => file.item === shot.subject);
         const sending = files.sending.filter((one) => one.item === shot.subject);
@@ -43,7 +47,8 @@ export const Photographs = ({ shots, files, remarks }: PhotographsProps) => {
               accept={PICTURES}
               label={keptFor(shot) ? 'Add another' : 'Photograph'}
               what={shot.heading}
-              onFiles={(list) => files.add(list, 'photograph', shot.subject)}
+              camera
+              onFiles={(list) => void files.add(list, 'photograph', shot.subject)}
             >
               <div className="min-w-0 flex-1 basis-36">
                 <strong>{shot.heading}</strong>{' '}

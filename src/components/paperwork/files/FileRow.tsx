@@ -1,6 +1,5 @@
 import { clockTime } from '../api';
 import type { ShownFile } from '../paperwork-props';
-import type { Files, Sending } from './use-files';
 
 /** One file that is kept or refused. */
 export const FileRow = ({
@@ -27,7 +26,7 @@ export const FileRow = ({
         <span className="field-error">{file.refusedBecause}</span>
       ) : (
         <span className="text-ink-2">
-          {file.keptAt === null ? 'announced, not arrived' : `kept ${clockTime(file.keptAt)}`}
+          {file.keptAt === null ? 'announced, not arrived' : `Sent ${clockTime(file.keptAt)}`}
         </span>
       )}
     </div>
@@ -36,38 +35,3 @@ export const FileRow = ({
     </button>
   </div>
 );
-
-/** One file on its way. */
-export const SendingRow = ({ one, files }: { readonly one: Sending; readonly files: Files }) => {
-  const percent = Math.round(one.share * 100);
-  return (
-    <div className="py-2">
-      <div className="break-words">{one.file.name}</div>
-      {one.failed === undefined ? (
-        <>
-          <div className="text-ink-2">
-            {percent < 100 ? `being sent, ${percent} %` : 'sent, being read back'}
-          </div>
-          <progress
-            className="progress"
-            max={100}
-            value={percent}
-            aria-label={`Sending ${one.file.name}`}
-          />
-        </>
-      ) : (
-        <div className="actions">
-          <span className="field-error min-w-0 flex-1" role="alert">
-            {one.failed}
-          </span>
-          <button type="button" className="btn" onClick={() => files.retry(one)}>
-            Send again
-          </button>
-          <button type="button" className="btn-link" onClick={() => files.drop(one.fileId)}>
-            Leave it
-          </button>
-        </div>
-      )}
-    </div>
-  );
-};
