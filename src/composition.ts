@@ -9,6 +9,8 @@ import { openLedgerKeys } from '@/adapters/ledger/keys';
 import { openMailer } from '@/adapters/mail/smtp';
 import { openObjects } from '@/adapters/objects/s3';
 import { noticePrinter } from '@/adapters/pdf/notice-printer';
+import { nonCompliancePrinter } from '@/adapters/pdf/part/non-compliance-printer';
+import { tagPrinter } from '@/adapters/pdf/part/tag-printer';
 import { rulebookPrinter } from '@/adapters/pdf/rulebook-printer';
 import { systemClock, systemRandom } from '@/adapters/system/system';
 import { type Config, readConfig } from '@/config';
@@ -56,6 +58,8 @@ export const compose = async (config: Config): Promise<Composition> => {
     identity,
     notices: noticePrinter,
     rulebooks: rulebookPrinter,
+    tags: tagPrinter,
+    nonCompliances: nonCompliancePrinter,
     keys,
     heads,
     recordState,

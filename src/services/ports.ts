@@ -1,8 +1,10 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import type { Failure } from '@/domain/failure';
 import type { BarnNews } from '@/domain/inspection/barn-news';
+import type { HeldPart } from '@/domain/inspection/custody/tag';
 import type { NoteSigner } from '@/domain/ledger/note/signed-note';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
+import type { NonCompliance } from '@/domain/verdict/non-compliance';
 import type { NoticeDocument } from '@/domain/verdict/notice';
 
 /** What the use cases need of the world. Each one names its own share: `Pick<Ports, 'db' | 'clock'>`. */
@@ -19,6 +21,8 @@ export interface Ports {
   readonly identity: IdentityProvider;
   readonly notices: NoticePrinter;
   readonly rulebooks: RulebookPrinter;
+  readonly tags: TagPrinter;
+  readonly nonCompliances: NonCompliancePrinter;
   readonly keys: LedgerKeys;
   readonly heads: HeadMemory;
   readonly recordState: RecordState;
@@ -203,6 +207,32 @@ export interface RulebookToPrint {
 export interface RulebookPrinter {
   /** The same rules at the same instant give the same bytes. */
   print(input: RulebookToPrint): Promise<Uint8Array>;
+}
+
+export interface TagToPrint {
+  readonly part: HeldPart;
+  readonly series: string;
+  readonly zone: string;
+  /** What the code carries. */
+  readonly code: string;
+  /** A label of 100 × 62 mm, or A4 with two of them: one for the part, one for the bag. */
+  readonly paper: 'label' | 'a4';
+}
+
+export interface TagPrinter {
+  /** The same part gives the same bytes. */
+  print(input: TagToPrint): Promise<Uint8Array>;
+}
+
+export interface NonComplianceToPrint {
+  readonly sheet: NonCompliance;
+  /** Where the report stands; printed as a QR code. */
+  readonly url: string;
+}
+
+export interface NonCompliancePrinter {
+  /** The same report gives the same bytes. */
+  print(input: NonComplianceToPrint): Promise<Uint8Array>;
 }
 
 /** The keys that sign the ledgers' heads; they are never in the database. */

@@ -57,6 +57,8 @@ export const openWorld = async (fixed: Partial<Ports> = {}): Promise<World> => {
       identity: missing('the identity provider') as Ports['identity'],
       notices: missing('the notice printer') as Ports['notices'],
       rulebooks: missing('the rulebook printer') as Ports['rulebooks'],
+      tags: missing('the tag printer') as Ports['tags'],
+      nonCompliances: missing('the printer of non-compliance') as Ports['nonCompliances'],
       keys: missing('the ledger’s keys') as Ports['keys'],
       barn: missing('the barn’s feed') as Ports['barn'],
       heads: missing('the memory of signed heads') as Ports['heads'],

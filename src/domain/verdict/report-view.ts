@@ -33,6 +33,7 @@ const position = z.object({
   coverageFactor: z.optional(text),
   budget: z.optional(z.array(z.object({ words: text, share: text }))),
   guardBand: z.optional(written),
+  checked: z.optional(z.array(text)),
   answer: z.optional(text),
   sentence: text,
   rule: z.optional(text),
