@@ -25,6 +25,8 @@ export interface VisitorOptions {
   readonly javaScript?: boolean;
   readonly touch?: boolean;
   readonly reducedMotion?: 'reduce' | 'no-preference';
+  /** Everything goes through this HTTP proxy. */
+  readonly proxy?: string;
 }
 
 /** One person at a browser of their own, with cookies and storage of their own. */
@@ -69,6 +71,8 @@ async function openVisitor(options: VisitorOptions) {
     hasTouch: options.touch ?? false,
     reducedMotion: options.reducedMotion ?? 'reduce',
     acceptDownloads: true,
+    // Without the bypass a browser goes to its own machine past every proxy.
+    ...(options.proxy && { proxy: { server: options.proxy, bypass: '<-loopback>' } }),
     timeout: 60_000,
   });
   context.setDefaultTimeout(30_000);
