@@ -138,6 +138,15 @@ end $fn$`);
   }
 
   private digests(): void {
+    // An audit reads what somebody may have altered into no JSON at all.
+    this.addSql(`
+create function append.json_of(p_text text) returns jsonb
+language plpgsql immutable set search_path = pg_catalog, pg_temp as $fn$
+begin
+  return p_text::jsonb;
+exception when others then
+  return null;
+end $fn$`);
     // One table's rows of many acts at once, each act's as the digest takes them.
     this.addSql(`
 create function append.act_rows(p_table text, p_columns text[], p_acts uuid[])

@@ -1,4 +1,3 @@
-import { execFile } from 'node:child_process';
 import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
@@ -97,44 +96,6 @@ const auditOf = async (appUrl: string, store: typeof first) => {
     await orm.close();
   }
 };
-
-describe('npm run audit', () => {
-  it('reads the whole installation from the environment and names what it finds', async () => {
-    const head = join(folder, 'receipt.note');
-    writeFileSync(head, receipt);
-    const nowhere = 'http://127.0.0.1:1';
-    const env = {
-      PATH: process.env['PATH'],
-      DATABASE_URL: world.database.appUrl,
-      S3_ENDPOINT: first.endpoint,
-      S3_BUCKET: 'tagwire',
-      S3_ACCESS_KEY_ID: objectStoreKeys.accessKeyId,
-      S3_SECRET_ACCESS_KEY: objectStoreKeys.secretAccessKey,
-      PUBLIC_URL: nowhere,
-      PORT: '1',
-      SMTP_URL: 'smtp://127.0.0.1:1',
-      MAIL_FROM: 'Tagwire <tagwire@example.org>',
-      OIDC_ISSUER: nowhere,
-      OIDC_CLIENT_ID: 'none',
-      OIDC_CLIENT_SECRET: 'none',
-      LEDGER_KEY_FILE: head,
-      STORAGE_DIR: folder,
-    };
-    const root = join(import.meta.dirname, '../../..');
-    const audit = (file: string) =>
-      new Promise<string>((resolve) => {
-        const args = ['--import', 'tsx', join(root, 'scripts/record/audit.ts'), file];
-        execFile(process.execPath, args, { cwd: root, env }, (error, stdout) =>
-          resolve(`${error === null ? 0 : error.code} ${stdout}`),
-        );
-      });
-    // The one fault: this world's report was appended without a line of its own.
-    const output = await audit(head);
-    expect(output).toMatch(/^1 .*: \d+ lines, \d+ signed heads, 1 faults\n\s+record\.report: /);
-    writeFileSync(head, receipt.replace(/\n(\d+)\n/, '\n9$1\n'));
-    expect(await audit(head)).toMatch(/head 1 that was brought/);
-  });
-});
 
 describe('a backup', () => {
   it('restored on an empty machine gives the same lines, heads, rows and objects', async () => {

@@ -1,5 +1,4 @@
-import { execFile } from 'node:child_process';
-import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, inject, it } from 'vitest';
@@ -37,6 +36,7 @@ import { must } from '../rulebook/build';
 const NOTE = 'Springs came from the blue van behind shed nine';
 const VALUE = '0.84231';
 const REMARK = 'The rack by the window is not legible';
+const KEPT_REMARK = 'The third lifter lies under the glare';
 const REASON = 'The season’s retention time has passed.';
 
 let world: RecordWorld;
@@ -44,6 +44,8 @@ let paddock: Paddock;
 let folder: string;
 let paperworkId: string;
 let other: string;
+/** Never erased: for what is refused. */
+let untouched: string;
 let head: string;
 const emptied: string[] = [];
 
@@ -73,15 +75,20 @@ beforeAll(async () => {
   paddock = await openPaddock(world);
   paperworkId = await written('12J', 301);
   other = await written('7', 302);
-  must(
-    await decidePaperwork(paddock.ports(), paddock.official, {
-      act: paddock.uuid(),
-      paperworkId,
-      number: 1,
-      decision: 'returned',
-      remarks: [{ item: 'general', text: REMARK }],
-    }),
-  );
+  untouched = await written('9', 303);
+  for (const [id, text] of [
+    [paperworkId, REMARK],
+    [untouched, KEPT_REMARK],
+  ] as const)
+    must(
+      await decidePaperwork(paddock.ports(), paddock.official, {
+        act: paddock.uuid(),
+        paperworkId: id,
+        number: 1,
+        decision: 'returned',
+        remarks: [{ item: 'general', text }],
+      }),
+    );
   head = await signNow(paddock.ports(), paddock.seriesId);
   await makeBackup({
     ownerUrl: world.database.ownerUrl,
@@ -119,7 +126,7 @@ const tablesWith = async (url: string, words: string): Promise<readonly string[]
   }
 };
 
-const erase = (actor = paddock.official, act = paddock.uuid(), id = paperworkId) =>
+const erase = (id: string, actor = paddock.official, act = paddock.uuid()) =>
   eraseContent(paddock.ports(), actor, {
     act,
     seriesId: paddock.seriesId,
@@ -133,24 +140,25 @@ const audit = (heads: readonly string[] = [head]) =>
 const nameOf = (result: Parameters<typeof failureOf>[0]) => failureOf(result).name;
 
 const mine = `${NOTE}, car 12J`;
+const kept = `${NOTE}, car 9`;
 
-describe('erasing a paperwork’s content', () => {
+describe('an erasure that must not be', () => {
   it('is refused to strangers and competitors as if it were not there, and without a reason', async () => {
     for (const actor of [paddock.stranger, paddock.competitor, paddock.rival])
-      expect(nameOf(await erase(actor))).toBe('absent');
+      expect(nameOf(await erase(untouched, actor))).toBe('absent');
     const without = {
       act: paddock.uuid(),
       seriesId: paddock.seriesId,
-      paperworkId,
+      paperworkId: untouched,
       reason: ' no ',
     };
     expect(nameOf(await eraseContent(paddock.ports(), paddock.official, without))).toBe('invalid');
-    expect(await tablesWith(world.database.superuserUrl, mine)).toEqual([
+    expect(await tablesWith(world.database.superuserUrl, kept)).toEqual([
       'public.paperwork',
       'record.ledger_content',
       'record.paperwork_version',
     ]);
-    expect(await tablesWith(world.database.superuserUrl, REMARK)).toEqual([
+    expect(await tablesWith(world.database.superuserUrl, KEPT_REMARK)).toEqual([
       'public.mail',
       'record.ledger_content',
       'record.paperwork_decision',
@@ -159,7 +167,7 @@ describe('erasing a paperwork’s content', () => {
 
   it('waits while a hold stands on the paperwork or the series', async () => {
     const { seriesId } = paddock;
-    for (const held of [paperworkId, undefined]) {
+    for (const held of [untouched, undefined]) {
       const id = paddock.uuid();
       const hold = {
         act: paddock.uuid(),
@@ -170,21 +178,22 @@ describe('erasing a paperwork’s content', () => {
       };
       expect(nameOf(await placeHold(paddock.ports(), paddock.stranger, hold))).toBe('absent');
       must(await placeHold(paddock.ports(), paddock.official, hold));
-      const refused = await erase();
+      const refused = await erase(untouched);
       expect(refused).toMatchObject({ ok: false, failure: { name: 'not-in-this-state' } });
       const lift = { act: paddock.uuid(), seriesId, holdId: id };
       expect(nameOf(await liftHold(paddock.ports(), paddock.rival, lift))).toBe('absent');
       must(await liftHold(paddock.ports(), paddock.official, lift));
     }
-    expect(await tablesWith(world.database.superuserUrl, mine)).not.toEqual([]);
+    expect(await tablesWith(world.database.superuserUrl, kept)).not.toEqual([]);
   });
 
   it('cannot be done past the services: not without an act, a line that says so, or under a hold', async () => {
     const { db } = paddock.ports();
     const [row] = await db.execute<{ index: string; act: string }[]>(
       `select index, act_id as act from record.ledger_line
-       where series_id = ? and kind = 'paperwork-handed-in' order by index limit 1`,
-      [paddock.seriesId],
+       where series_id = ? and kind = 'paperwork-handed-in'
+         and line::jsonb #>> '{refs,paperwork}' = ?`,
+      [paddock.seriesId, untouched],
     );
     const attempt = (prepare: readonly string[]) =>
       db.fork().transactional(async (em) => {
@@ -198,44 +207,54 @@ describe('erasing a paperwork’s content', () => {
         for (const sql of prepare) await em.execute(sql);
         const erasure = { series_id: paddock.seriesId, line_index: row?.index, role: 'paperwork' };
         await em.execute('select append.erasure(?::jsonb)', [
-          JSON.stringify([{ ...erasure, paperwork_id: paperworkId, act_id: act }]),
+          JSON.stringify([{ ...erasure, paperwork_id: untouched, act_id: act }]),
         ]);
       });
     await expect(attempt([])).rejects.toThrow(/no line of act/);
     const hold = `insert into public.hold (series_id, id, subject_kind, subject_id, reason, placed_by, since)
-      values ('${paddock.seriesId}', gen_random_uuid(), 'paperwork', '${paperworkId}', 'x', '${paddock.official.personId}', now())`;
+      values ('${paddock.seriesId}', gen_random_uuid(), 'paperwork', '${untouched}', 'x', '${paddock.official.personId}', now())`;
     await expect(attempt([hold])).rejects.toThrow(/a hold stands/);
     const foreign = [
       {
         series_id: paddock.seriesId,
         line_index: row?.index,
         role: 'paperwork',
-        paperwork_id: paperworkId,
+        paperwork_id: untouched,
         act_id: row?.act,
       },
     ];
     await expect(
       db.fork().execute('select append.erasure(?::jsonb)', [JSON.stringify(foreign)]),
     ).rejects.toThrow(/was not claimed/);
-    expect(await tablesWith(world.database.superuserUrl, mine)).toContain('record.ledger_content');
+    expect(await tablesWith(world.database.superuserUrl, kept)).toContain('record.ledger_content');
+  });
+});
+
+describe('once a paperwork’s content was erased', () => {
+  let before: number;
+  let stored: number;
+  let first: unknown;
+  const act = '01980000-0000-7000-8000-00000000e7a5';
+
+  beforeAll(async () => {
+    before = (await audit()).lines;
+    stored = paddock.objects.stored.size;
+    first = must(await erase(paperworkId, paddock.official, act));
+    await removeObjects(paddock.ports(), { seriesId: paddock.seriesId });
   });
 
-  it('takes it out of every table and the object store, once, and the ledger verifies', async () => {
-    const before = (await audit()).lines;
-    const stored = [...paddock.objects.stored.keys()];
-    const act = paddock.uuid();
-    const first = must(await erase(paddock.official, act));
+  it('it was erased once: asked again, the answer is the first one', async () => {
     expect(first).toEqual({ contents: 2, files: 1 });
-    expect(must(await erase(paddock.official, act))).toEqual(first);
-    expect(nameOf(await erase())).toBe('not-in-this-state');
-    await removeObjects(paddock.ports(), { seriesId: paddock.seriesId });
+    expect(must(await erase(paperworkId, paddock.official, act))).toEqual(first);
+    expect(nameOf(await erase(paperworkId))).toBe('not-in-this-state');
+  });
 
+  it('it is in no table and not in the object store, and the ledger verifies', async () => {
     expect(await tablesWith(world.database.superuserUrl, mine)).toEqual([]);
     expect(await tablesWith(world.database.superuserUrl, REMARK)).toEqual([]);
     // The other car's paperwork says the same value and keeps it; of the shared picture, too, one copy stays.
     expect(await tablesWith(world.database.superuserUrl, `${NOTE}, car 7`)).not.toEqual([]);
-    expect(stored).toHaveLength(3);
-    expect(paddock.objects.stored.size).toBe(2);
+    expect(paddock.objects.stored.size).toBe(stored - 1);
 
     const after = await audit();
     expect(after.faults).toEqual([]);
@@ -244,7 +263,7 @@ describe('erasing a paperwork’s content', () => {
     expect((await audit()).faults).toEqual([]);
   });
 
-  it('leaves a page that says when and why, to the owner and the officials alone', async () => {
+  it('there is a page left that says when and why, to the owner and the officials alone', async () => {
     const { ports, competitor, official, rival, stranger } = paddock;
     for (const actor of [competitor, official])
       expect(await findErasure(ports(), actor, paperworkId)).toMatchObject({
@@ -258,49 +277,8 @@ describe('erasing a paperwork’s content', () => {
     expect(nameOf(await openOwnVersion(ports(), competitor, asked))).toBe('absent');
     expect(nameOf(await openPaperworkToCheck(ports(), official, asked))).toBe('absent');
   });
-});
 
-describe('npm run erasures', () => {
-  it('lists what was erased and finds, where it is gone, nothing to erase again', async () => {
-    const nowhere = 'http://127.0.0.1:1';
-    const env = {
-      PATH: process.env['PATH'],
-      DATABASE_URL: world.database.appUrl,
-      S3_ENDPOINT: nowhere,
-      S3_BUCKET: 'tagwire',
-      S3_ACCESS_KEY_ID: 'none',
-      S3_SECRET_ACCESS_KEY: 'none',
-      PUBLIC_URL: nowhere,
-      PORT: '1',
-      SMTP_URL: 'smtp://127.0.0.1:1',
-      MAIL_FROM: 'Tagwire <tagwire@example.org>',
-      OIDC_ISSUER: nowhere,
-      OIDC_CLIENT_ID: 'none',
-      OIDC_CLIENT_SECRET: 'none',
-      LEDGER_KEY_FILE: 'none',
-      STORAGE_DIR: folder,
-    };
-    const root = join(import.meta.dirname, '../../..');
-    const call = (...words: readonly string[]) =>
-      new Promise<string>((resolve) => {
-        const args = ['--import', 'tsx', join(root, 'scripts/record/erasures.ts'), ...words];
-        execFile(process.execPath, args, { cwd: root, env }, (error, stdout, stderr) =>
-          resolve(error === null ? stdout : `${error.code}: ${stderr}`),
-        );
-      });
-    const list = await call('list');
-    expect(JSON.parse(list)).toEqual(await listErasures(paddock.ports().db));
-    const file = join(folder, 'erasures.json');
-    writeFileSync(file, list);
-    expect(await call('apply', file)).toBe('0 erased again; of 1 nothing is here.\n');
-    writeFileSync(file, list.replace('retention', 'holding'));
-    expect(await call('apply', file)).toMatch(/^1: [\s\S]*Number 1 of the list is no erasure/);
-    expect(await call('apply')).toContain('usage');
-  });
-});
-
-describe('after the restore of an older copy', () => {
-  it('is erased again from the list of erasures, once, and the restored ledger verifies', async () => {
+  it('it is erased again from the list after an older copy was restored, once, and the copy verifies', async () => {
     const list = await listErasures(paddock.ports().db, paddock.seriesId);
     expect(list).toHaveLength(1);
     const cluster = inject('cluster');
@@ -317,7 +295,7 @@ describe('after the restore of an older copy', () => {
     });
     const restored = withDatabase(cluster.superuserUrl, name);
     expect(await tablesWith(restored, mine)).not.toEqual([]);
-    expect(objects.stored.size).toBe(3);
+    expect(objects.stored.size).toBe(stored);
 
     const orm = await openDatabase(withDatabase(cluster.appUrl, name), 2);
     try {

@@ -17,6 +17,13 @@ interface LineRow {
   readonly act: string | null;
 }
 
+interface ContentRow {
+  readonly index: string;
+  readonly role: string;
+  readonly salt: string | null;
+  readonly content: string | null;
+}
+
 export interface AuditedLines {
   readonly faults: readonly AuditFault[];
   readonly size: number;
@@ -97,10 +104,21 @@ export const auditLines = async (
   );
   if (Number(head?.size) !== frontier.size) {
     const words = `The head says ${head?.size ?? 'nothing'}, there are ${frontier.size} lines.`;
-    faults.push(faultIn('record.ledger_head')('size', words));
+    faults.push(faultIn('record.ledger_head or record.ledger_line')('size', words));
   }
   faults.push(...(await nodeFaults(em, seriesId, nodes)));
   return { faults, size: frontier.size, lines, roots };
+};
+
+/** What lines commit to by a hash alone: a notice's PDF, by the line's number; hexadecimal SHA-256. */
+const readFileHashes = async (em: EntityManager, seriesId: string) => {
+  const rows = await em.execute<{ index: string; sha256: string }[]>(
+    `select l.index, encode(p.sha256, 'hex') as sha256 from record.notice_pdf p
+     join record.ledger_line l on l.series_id = p.series_id and l.act_id = p.act_id
+     where p.series_id = ?`,
+    [seriesId],
+  );
+  return new Map(rows.map(({ index, sha256: hash }) => [index, hash]));
 };
 
 /** Each kept content against its line's commitment, and each commitment against what is kept. */
@@ -111,30 +129,41 @@ export const auditContents = async (
   erased: ReadonlySet<string>,
 ): Promise<readonly AuditFault[]> => {
   const inContent = faultIn('record.ledger_content');
-  const rows = await em.execute<
-    { index: string; role: string; salt: string | null; content: string | null }[]
-  >(
-    `select line_index as index, role, encode(salt, 'hex') as salt, content
-     from record.ledger_content where series_id = ?`,
-    [seriesId],
-  );
+  const files = await readFileHashes(em, seriesId);
   const faults: AuditFault[] = [];
   const kept = new Set<string>();
-  for (const { index, role, salt, content } of rows) {
-    const what = `line ${index}, ${role}`;
-    kept.add(what);
-    const commitment = lines
-      .get(Number(index))
-      ?.commitments.find((one) => one.role === role)?.commitment;
-    const expected = findHex(commitment ?? '', 32);
-    if (expected === undefined) faults.push(inContent(what, 'No line commits to this.'));
-    else if (erased.has(what)) continue;
-    else if (salt === null) faults.push(inContent(what, 'Erased, and no line says so.'));
-    else if (content !== null) {
-      const bytes = findHex(salt, 32) ?? new Uint8Array();
-      const holds = opens(expected, bytes, sha256(utf8(content)));
-      if (!holds) faults.push(inContent(what, 'The line commits to another text or salt.'));
+  const wrongIn = (row: ContentRow): string | undefined => {
+    const { index, role, salt, content } = row;
+    const committed = lines.get(Number(index))?.commitments.find((one) => one.role === role);
+    const expected = findHex(committed?.commitment ?? '', 32);
+    if (expected === undefined) return 'No line commits to this.';
+    if (erased.has(`line ${index}, ${role}`))
+      return salt === null && content === null
+        ? undefined
+        : 'The ledger says that it was erased, and it is still here.';
+    if (salt === null) return 'Erased, and no line says so.';
+    const file = role === 'pdf' ? findHex(files.get(index) ?? '', 32) : undefined;
+    const hash = content === null ? file : sha256(utf8(content));
+    if (hash === undefined) return 'Its text is gone, and no line says so.';
+    return opens(expected, findHex(salt, 32) ?? new Uint8Array(), hash)
+      ? undefined
+      : 'The line commits to another text or salt.';
+  };
+  for (let at: readonly [string, string] = ['-9223372036854775808', '']; ; ) {
+    const rows = await em.execute<ContentRow[]>(
+      `select line_index as index, role, encode(salt, 'hex') as salt, content
+       from record.ledger_content
+       where series_id = ? and (line_index, role) > (?::bigint, ?)
+       order by line_index, role limit ${BLOCK}`,
+      [seriesId, ...at],
+    );
+    for (const row of rows) {
+      at = [row.index, row.role];
+      kept.add(`line ${row.index}, ${row.role}`);
+      const wrong = wrongIn(row);
+      if (wrong !== undefined) faults.push(inContent(`line ${row.index}, ${row.role}`, wrong));
     }
+    if (rows.length < BLOCK) break;
   }
   for (const [index, { commitments }] of lines) {
     for (const { role } of commitments) {

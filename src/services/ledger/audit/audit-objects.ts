@@ -28,12 +28,12 @@ const readKept = (em: EntityManager, seriesId: string) =>
 /** Hashes that signed documents name, each of which must still have its file. */
 const readNamed = (em: EntityManager, seriesId: string) =>
   em.execute<{ sha256: string }[]>(
-    `select p ->> 'sha256' as sha256 from record.report r,
-       jsonb_array_elements(r.document::jsonb -> 'photographs') p where r.series_id = ?
+    `select jsonb_path_query(append.json_of(document), '$.photographs[*].sha256') #>> '{}' as sha256
+     from record.report where series_id = ?
      union
-     select p ->> 'sha256' from record.paperwork_version v,
-       jsonb_array_elements((v.document::jsonb -> 'photographs') || (v.document::jsonb -> 'files')) p
-     where v.series_id = ?`,
+     select jsonb_path_query(append.json_of(document), p::jsonpath) #>> '{}'
+     from record.paperwork_version, unnest(array['$.photographs[*].sha256', '$.files[*].sha256']) p
+     where series_id = ?`,
     [seriesId, seriesId],
   );
 

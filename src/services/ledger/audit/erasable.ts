@@ -11,7 +11,7 @@ const ERASABLE = [
     table: 'paperwork_decision',
     role: 'decision',
     kept: "nullif(t.remarks, '[]')",
-    said: "nullif(c.content::jsonb -> 'remarks', '[]')",
+    said: "nullif(append.json_of(c.content) -> 'remarks', '[]')",
   },
   { table: 'signature_strokes', role: 'strokes', kept: 't.strokes', said: 'c.content' },
 ] as const;
