@@ -1,7 +1,6 @@
 import { EMPTY_DRAFT, type PaperworkDraft, withAnswer, withCells } from '@/domain/paperwork/draft';
-import { rowsFor } from '@/domain/paperwork/sheet/positions';
 import { readSheet } from '@/domain/paperwork/sheet/read-sheet';
-import { csvText, templateRows } from '@/domain/paperwork/sheet/template';
+import { sheetTemplate } from '@/domain/paperwork/sheet/template';
 import type { Question, SheetForm } from '@/domain/rulebook/form/form';
 import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
@@ -11,6 +10,7 @@ import { keepFile } from '@/services/file/keep-file';
 import { decidePaperwork } from '@/services/paperwork/decide-paperwork';
 import { handInPaperwork } from '@/services/paperwork/hand-in-paperwork';
 import { saveDraft } from '@/services/paperwork/save-draft';
+import { PLAIN_FORM, writeCsv } from '@/services/paperwork/sheet/csv/write-csv';
 import { startPaperwork } from '@/services/paperwork/start-paperwork';
 import { micrometer, SPOTS, type TrueBore } from './engine';
 import { type DemoCompetitor, OFFICIAL } from './people';
@@ -61,13 +61,13 @@ const cellFor = (demo: DemoPaperwork, form: SheetForm, key: string, quantity: st
 };
 
 const sheetRows = (demo: DemoPaperwork, form: SheetForm): readonly (readonly string[])[] => {
-  const [header = [], ...rows] = templateRows({ form, layout: demo.layout });
-  const places = rowsFor(form.per, demo.layout);
+  const about = { carNumber: '', reference: '', className: '', paperworkId: '' };
+  const { heading, places } = sheetTemplate({ form, layout: demo.layout }, about, 'inch');
   return [
-    header,
-    ...rows.map((row, at) => [
-      row[0] ?? '',
-      ...form.columns.map(({ quantity }) => cellFor(demo, form, places[at]?.key ?? '', quantity)),
+    heading,
+    ...places.map((place) => [
+      place,
+      ...form.columns.map(({ quantity }) => cellFor(demo, form, place, quantity)),
     ]),
   ];
 };
@@ -152,7 +152,7 @@ export const writePaperwork = async (stage: Stage, demo: DemoPaperwork): Promise
     // The unfinished one has a slip of the key in it.
     if (half && rows[3] !== undefined && rows[3].length > 1) rows[3][1] = '0.84.41';
     const name = `${sheet.subject}.csv`;
-    const fileId = await keep('sheet', sheet.subject, name, Buffer.from(csvText(rows)));
+    const fileId = await keep('sheet', sheet.subject, name, writeCsv(rows, PLAIN_FORM));
     const read = readSheet(rows, { form: sheet, layout }, { fileId, name });
     draft = withCells(draft, sheet.subject, read.cells);
   }

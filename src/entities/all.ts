@@ -49,6 +49,7 @@ export const entities = [
   EngineOffer,
   BuilderGrant,
   Paperwork,
+  SheetColumns,
   KeptFile,
   Event,
   Entry,

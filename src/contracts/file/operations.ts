@@ -1,5 +1,10 @@
 import type { Operation } from '../operation';
-import { readSheetRequest, readSheetResponse } from '../paperwork/sheet';
+import {
+  readSheetRequest,
+  readSheetResponse,
+  rememberColumnsRequest,
+  rememberColumnsResponse,
+} from '../paperwork/sheet';
 import {
   confirmUploadRequest,
   expectUploadRequest,
@@ -39,6 +44,20 @@ export const operations: readonly Operation[] = [
     access: 'signed-in',
     body: readSheetRequest,
     answer: readSheetResponse,
+  },
+  {
+    method: 'post',
+    path: '/api/files/{file}/columns',
+    summary: 'Keep what the columns of a sheet hold, for the next file with the same headings',
+    access: 'signed-in',
+    body: rememberColumnsRequest,
+    answer: rememberColumnsResponse,
+  },
+  {
+    method: 'get',
+    path: '/api/files/{file}/corrections',
+    summary: 'The sheet as it was sent, with a column that says what to correct in each row',
+    access: 'signed-in',
   },
   {
     method: 'get',

@@ -44,7 +44,7 @@ export const operations: readonly Operation[] = [
   {
     method: 'get',
     path: '/api/paperwork/{paperwork}/template/{sheet}',
-    summary: 'A measurement sheet to fill in, as CSV',
+    summary: 'A measurement sheet to fill in, as CSV or XLSX',
     access: 'signed-in',
   },
 ];

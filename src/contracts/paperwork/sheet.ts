@@ -45,3 +45,10 @@ export const readSheetResponse = z.strictObject({
 });
 
 export type ReadSheetAnswer = z.infer<typeof readSheetResponse>;
+
+export const rememberColumnsRequest = z.strictObject({
+  act: z.uuid('Send a UUID of your own making (version 7).'),
+  subject,
+  mapping,
+});
+export const rememberColumnsResponse = z.strictObject({ remembered: z.int() });

@@ -1,7 +1,9 @@
 import type { APIContext, APIRoute } from 'astro';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Actor } from '@/domain/access/permission';
+import { POST as columns } from '@/pages/api/files/[file]/columns';
 import { POST as confirm } from '@/pages/api/files/[file]/confirm';
+import { GET as corrections } from '@/pages/api/files/[file]/corrections';
 import { GET as original } from '@/pages/api/files/[file]/original';
 import { GET as preview } from '@/pages/api/files/[file]/preview/[width]';
 import { POST as remove } from '@/pages/api/files/[file]/remove';
@@ -96,6 +98,8 @@ const routes = (): readonly (readonly [string, APIRoute, Asked])[] => {
     ['confirm', confirm, { params: file, body: { act } }],
     ['remove', remove, { params: file, body: { act } }],
     ['sheet', sheet, { params: file, body: { subject: 'lifter-sheet' } }],
+    ['columns', columns, { params: file, body: { act, subject: 'lifter-sheet', mapping: {} } }],
+    ['corrections', corrections, { params: file, query: '?subject=lifter-sheet' }],
     ['preview', preview, { params: { ...file, width: '160' } }],
     ['original', original, { params: file }],
     [
@@ -215,11 +219,17 @@ describe('bytes', () => {
   it('a template is a CSV for this engine, in the person’s units', async () => {
     const params = { paperwork: paperworkId, sheet: 'lifter-sheet' };
     const metric = await call(template, { params, query: '?units=metric' });
-    expect(metric.headers.get('content-disposition')).toBe(
-      'attachment; filename="lifters-metric.csv"',
+    expect(metric.headers.get('content-disposition')).toMatch(
+      /^attachment; filename="lifters-12J-metric.csv"/,
     );
     const text = await metric.text();
-    expect(text.split('\r\n')[0]).toContain('Lifter body diameter (mm)');
-    expect(text.trim().split('\r\n')).toHaveLength(17);
+    expect(text).toContain('Lifter body diameter (mm)');
+    const workbook = await call(template, { params, query: '?as=xlsx' });
+    expect(workbook.headers.get('content-type')).toContain('spreadsheetml');
+    expect(
+      Buffer.from(await workbook.arrayBuffer())
+        .subarray(0, 2)
+        .toString(),
+    ).toBe('PK');
   });
 });

@@ -2,7 +2,6 @@ import { describe, expect, test } from 'vitest';
 import { judgeCells } from '@/domain/paperwork/sheet/judge-cells';
 import { readSheet } from '@/domain/paperwork/sheet/read-sheet';
 import type { WantedSheet } from '@/domain/paperwork/sheet/sheet-cell';
-import { csvText, templateRows } from '@/domain/paperwork/sheet/template';
 import { toNumber } from '@/domain/quantity/rational';
 import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';
 import { TAPPET_RULE_SET } from '@/domain/rulebook/rule-sets/tappet';
@@ -229,26 +228,5 @@ describe('files that are no sheets', () => {
   ])('%s is refused', (_name, text, name) => {
     const result = readCsv(new TextEncoder().encode(text));
     expect(result.ok ? '' : result.failure.name).toBe(name);
-  });
-});
-
-describe('the template', () => {
-  test('has a row for every bore of this engine and reads back as it is', () => {
-    const rows = templateRows(wanted, 'metric');
-    expect(rows).toHaveLength(17);
-    expect(rows[0]).toEqual([
-      'Position',
-      'Lifter body diameter (mm)',
-      'Lifter foot diameter (mm)',
-      'Tappet bore diameter (mm)',
-    ]);
-    const filledIn = rows.map((row, i) => (i === 0 ? row : [row[0]!, '21.394', '21.40', '21.438']));
-    const sheet = readSheet(rowsOf(new TextEncoder().encode(csvText(filledIn))), wanted, FILE);
-    expect(sheet.notes).toEqual([]);
-    expect(sheet.cells).toHaveLength(48);
-    expect(new Set(sheet.cells.map((cell) => `${cell.quantity} ${cell.unit}`))).toEqual(
-      new Set(['lifter-body-diameter mm', 'foot-diameter mm', 'tappet-bore-diameter mm']),
-    );
-    expect(judgeCells(sheet.cells).every((cell) => cell.state === 'ok')).toBe(true);
   });
 });

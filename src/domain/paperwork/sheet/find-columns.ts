@@ -29,6 +29,16 @@ const isValueRow = (row: readonly string[], wanted: WantedSheet): boolean => {
   );
 };
 
+/** Where nothing is filled in yet, a cylinder's number stands alone below the headings. */
+const firstValueRow = (rows: TextRows, wanted: WantedSheet): number => {
+  const filled = rows.findIndex((row) => isValueRow(row, wanted));
+  if (filled >= 0) return filled;
+  const heading = rows.findIndex((row) => row.filter((cell) => cell.trim() !== '').length > 1);
+  return heading < 0
+    ? -1
+    : rows.findIndex((row, at) => at > heading && findCylinder(row[0] ?? '') !== undefined);
+};
+
 const share = (cells: readonly string[], test: (text: string) => unknown): number =>
   cells.length === 0 ? 0 : cells.filter((cell) => test(cell) !== undefined).length / cells.length;
 
@@ -87,7 +97,7 @@ export const findColumns = (
   wanted: WantedSheet,
   { mapping = {}, hiddenColumns = [] }: Asked = {},
 ): FoundColumns | undefined => {
-  const firstRow = rows.slice(0, LOOKED_AT).findIndex((row) => isValueRow(row, wanted));
+  const firstRow = firstValueRow(rows.slice(0, LOOKED_AT), wanted);
   if (firstRow < 0) return undefined;
   const width = rows.reduce((most, row) => Math.max(most, row.length), 0);
   const titles = headings(rows.slice(0, firstRow), width);

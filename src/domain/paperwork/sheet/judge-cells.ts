@@ -12,8 +12,10 @@ export interface JudgedCell {
   readonly cell: SheetCell;
   readonly state: 'ok' | 'faulty' | 'questioned';
   readonly quantity?: Quantity<RuleDimension> | undefined;
-  /** What is wrong, with the place and what to do, in one or two sentences. */
+  /** What is wrong, with the place, in one or two sentences. */
   readonly detail?: string | undefined;
+  /** What to do about it, in one sentence. */
+  readonly remedy?: string | undefined;
 }
 
 const SHORT: Readonly<Record<string, string>> = {
@@ -35,15 +37,39 @@ const read = (cell: SheetCell) =>
     defaultUnit: cell.unit,
   });
 
-const faulty = (cell: SheetCell, fault: { name: string; detail: string }): JudgedCell => ({
-  cell,
-  state: 'faulty',
-  detail:
-    // “0.84O1” is a number with a slip in it, not one in the unit O1.
-    fault.name === 'not-a-number' || /\d\D+\d$/.test(cell.typed.replace(/[.,]/g, ''))
-      ? `${cellWords(cell)}: “${cell.typed}” is no number. Kept as written.`
-      : `${cellWords(cell)}: ${fault.detail} Kept as written.`,
-});
+/** As spreadsheets write the day they made of `8.44` or `3/4`. */
+const DATE =
+  /^(\d{4}-\d{2}-\d{2}|(?:0?[1-9]|[12]\d|3[01])[./-](?:0?[1-9]|[12]\d|3[01])[./-](?:\d{4}|\d{2}))$/;
+
+const NO_NUMBER: Readonly<Record<'date' | 'error' | 'other', readonly [string, string]>> = {
+  date: [
+    'is a date',
+    'The spreadsheet made a date of what was typed: type the number here, or set the cell to “text” there.',
+  ],
+  error: [
+    'is no number',
+    'The formula in this cell failed: type the number here, or correct it in the file.',
+  ],
+  other: ['is no number', 'Write one number with one decimal mark, such as 0.8441.'],
+};
+
+const faulty = (cell: SheetCell, fault: { name: string; detail: string }): JudgedCell => {
+  const typed = cell.typed.trim();
+  const kind = DATE.test(typed) ? 'date' : typed.startsWith('#') ? 'error' : 'other';
+  // “0.84O1” is a number with a slip in it, not one in the unit O1.
+  const isNone =
+    fault.name === 'not-a-number' ||
+    kind !== 'other' ||
+    /\d\D+\d$/.test(typed.replace(/[.,]/g, ''));
+  const [words, remedy] = NO_NUMBER[kind];
+  const detail = `${cellWords(cell)}: ${isNone ? `“${cell.typed}” ${words}.` : fault.detail} Kept as written.`;
+  return {
+    cell,
+    state: 'faulty',
+    detail,
+    remedy: isNone ? remedy : 'Correct it here or in the file.',
+  };
+};
 
 /** With the decimals it was written with. */
 const shown = (quantity: Quantity): string =>
@@ -75,6 +101,7 @@ export const judgeCells = (cells: readonly SheetCell[]): readonly JudgedCell[] =
           state: 'questioned',
           quantity: parsed.value,
           detail: `${cellWords(cell)}: ${detail}`,
+          remedy: 'Correct it, or say that it is so.',
         };
   });
 };

@@ -3,28 +3,64 @@ import { getQuantityEntry } from '../../rulebook/quantity-catalogue';
 import { rowsFor } from './positions';
 import type { WantedSheet } from './sheet-cell';
 
-const IN_MILLIMETRES: Readonly<Record<string, string>> = { in: 'mm', 'in²': 'mm²', 'in³': 'cc' };
+const IN_MILLIMETRES: Readonly<Record<string, string>> = {
+  in: 'mm',
+  'in²': 'mm²',
+  'in³': 'cc',
+  lb: 'kg',
+  lbf: 'N',
+};
 
-/** Rows of text to fill in: a heading with units, and a row for every place on this engine. */
-export const templateRows = (
+export type UnitSystem = 'inch' | 'metric';
+
+/** Whose sheet it is, so that a printed or mailed one can be told from others. */
+export interface TemplateFor {
+  readonly carNumber: string;
+  readonly reference: string;
+  readonly className: string;
+  readonly paperworkId: string;
+}
+
+export interface SheetTemplate {
+  /** Lines above the table, each in one cell. */
+  readonly notes: readonly string[];
+  readonly heading: readonly string[];
+  /** The place of each row. */
+  readonly places: readonly string[];
+}
+
+/** A sheet to fill in: a heading with units, and a row for every place on this engine. */
+export const sheetTemplate = (
   { form, layout }: WantedSheet,
-  system: 'inch' | 'metric' = 'inch',
-): readonly (readonly string[])[] => {
+  about: TemplateFor,
+  system: UnitSystem,
+): SheetTemplate => {
   const headings = form.columns.map(({ quantity, label, unit }) => {
     const chosen = system === 'metric' ? (IN_MILLIMETRES[unit] ?? unit) : unit;
     const { symbol } = getUnit(getQuantityEntry(quantity).dimension, chosen);
     return symbol === '1' ? label : `${label} (${symbol})`;
   });
   const first = form.per === 'cylinder' ? 'Cylinder' : 'Position';
-  return [
-    [first, ...headings],
-    ...rowsFor(form.per, layout).map((place) => [place.key, ...headings.map(() => '')]),
-  ];
+  return {
+    notes: [
+      `${form.title}. Car number: ${about.carNumber}. Engine: ${about.reference}. Class: ${about.className}.`,
+      `Paperwork: ${about.paperworkId}`,
+      'Leave empty what was not measured. Units stand in the heading; a unit written in a cell goes before it.',
+      'Several readings at one place: copy the column and say where in its heading, “above across” or “below along”.',
+    ],
+    heading: [first, ...headings],
+    places: rowsFor(form.per, layout).map((place) => place.key),
+  };
 };
 
-const quoted = (cell: string): string =>
-  /[",\r\n]/.test(cell) ? `"${cell.replaceAll('"', '""')}"` : cell;
-
-/** RFC 4180, with the mark by which spreadsheets recognise UTF-8. */
-export const csvText = (rows: readonly (readonly string[])[]): string =>
-  `\uFEFF${rows.map((row) => row.map(quoted).join(',')).join('\r\n')}\r\n`;
+/** Rows of text, the notes first. */
+export const templateRows = ({
+  notes,
+  heading,
+  places,
+}: SheetTemplate): readonly (readonly string[])[] => [
+  ...notes.map((note) => [note]),
+  [],
+  heading,
+  ...places.map((place) => [place, ...heading.slice(1).map(() => '')]),
+];

@@ -1,3 +1,5 @@
+import { fromWindows1252 } from './csv/windows-1252';
+
 /** UTF-8 or UTF-16 by their marks, UTF-8 without one, else the code page that spreadsheets of the West write. */
 export const readText = (bytes: Uint8Array): string => {
   const [a, b, c] = bytes;
@@ -7,6 +9,6 @@ export const readText = (bytes: Uint8Array): string => {
   try {
     return new TextDecoder('utf-8', { fatal: true }).decode(marked ? bytes.subarray(3) : bytes);
   } catch {
-    return new TextDecoder('windows-1252').decode(bytes);
+    return fromWindows1252(bytes);
   }
 };

@@ -36,6 +36,17 @@ const looksUnmarked = (bytes: Uint8Array): boolean => {
   return Math.max(even, odd) > head.length / 4 && Math.min(even, odd) < head.length / 50;
 };
 
+/** More delimiters in one line than columns and a long cell could need: not worth splitting. */
+const hasEndlessLine = (text: string, delimiter: string): boolean => {
+  let count = 0;
+  for (const char of text) {
+    if (char === '\n' || char === '\r') count = 0;
+    else if (char === delimiter) count += 1;
+    if (count > MOST_COLUMNS + MOST_CELL) return true;
+  }
+  return false;
+};
+
 const refuse = (detail: string): { ok: false; failure: Failure } =>
   fail(failure('damaged-file', detail));
 
@@ -60,6 +71,7 @@ export const readCsv = (
   if (looksBinary(text) || looksLikeMarkup(text))
     return fail(failure('unsupported-file', UNREADABLE));
   const { delimiter, body } = delimiterOf(text);
+  if (hasEndlessLine(body, delimiter)) return refuse(WORDS.columns);
   // Thrown from within the package's loop: it is the only way to stop it at a bound.
   const count = (row: string[]): string[] => {
     spent.rows += 1;

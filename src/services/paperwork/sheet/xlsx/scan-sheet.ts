@@ -13,12 +13,16 @@ export interface ScannedCell {
   readonly style: string | undefined;
   /** `<v>…</v>` or `<is>…</is>` as it stands; empty where a formula's result was not saved. */
   readonly content: string;
+  /** Behind the cell. */
+  readonly to: number;
 }
 
 export interface ScannedRow {
   readonly number: number;
   readonly hidden: boolean;
-  /** Behind the row's opening tag, and at its closing one; both behind the tag where the row is empty. */
+  /** Of the row's opening tag. */
+  readonly tag: number;
+  /** Behind the row's opening tag, and at its closing one. */
   readonly from: number;
   readonly to: number;
   readonly cells: readonly ScannedCell[];
@@ -43,6 +47,7 @@ const tooLarge = (name: string): Failure =>
 interface Open {
   number: number;
   hidden: boolean;
+  tag: number;
   from: number;
   cells: ScannedCell[];
 }
@@ -65,7 +70,7 @@ export const scanSheet = (
   const openRow = (tag: Tag): void => {
     const number = Number(attributeOf(xml, tag, 'r') ?? nextRow + 1) - 1;
     const hidden = /^(1|true)$/.test(attributeOf(xml, tag, 'hidden') ?? '');
-    row = { number, hidden, from: tag.to, cells: [] };
+    row = { number, hidden, tag: tag.from, from: tag.to, cells: [] };
     nextRow = number + 1;
     nextColumn = 0;
   };
@@ -93,12 +98,12 @@ export const scanSheet = (
     nextColumn = column + 1;
     cell = { tag, column, content: '', formula: false };
   };
-  const closeCell = (): void => {
+  const closeCell = (to: number): void => {
     if (row === undefined || cell === undefined) return;
     const { tag, column, content, formula } = cell;
     const type = attributeOf(xml, tag, 't') ?? 'n';
     const style = attributeOf(xml, tag, 's');
-    if (content !== '' || formula) row.cells.push({ column, type, style, content });
+    if (content !== '' || formula) row.cells.push({ column, type, style, content, to });
     cell = undefined;
   };
   const hide = (tag: Tag): void => {
@@ -120,7 +125,7 @@ export const scanSheet = (
     }
     if (tag.name === 'c') {
       if (kind !== 'close') openCell(tag);
-      if (kind !== 'open') closeCell();
+      if (kind !== 'open') closeCell(tag.to);
     } else if (cell !== undefined && (tag.name === 'v' || tag.name === 'is')) {
       if (kind === 'open') contentFrom = tag.from;
       if (kind === 'close' && contentFrom >= 0) cell.content = xml.slice(contentFrom, tag.to);
