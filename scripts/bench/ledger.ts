@@ -3,7 +3,9 @@ import { rmSync } from 'node:fs';
 import { join } from 'node:path';
 import type { Client } from 'pg';
 import { migrate } from '@/adapters/database/migrate';
+import { openDatabase } from '@/adapters/database/orm';
 import { toHex, utf8 } from '@/domain/ledger/bytes';
+import { canonicalJson } from '@/domain/ledger/canonical';
 import { openCheckpoint, originOf, signCheckpoint } from '@/domain/ledger/checkpoint';
 import { commit } from '@/domain/ledger/commitment';
 import { lineLeaf, lineText } from '@/domain/ledger/line';
@@ -19,6 +21,9 @@ import { appendLeaf, EMPTY, foldSubtrees, type NodeAt, rootOf } from '@/domain/l
 import { checkLine } from '@/domain/ledger/verify/check-line';
 import { conclude } from '@/domain/ledger/verify/step';
 import { verifyConsistency, verifyInclusion } from '@/domain/ledger/verify-proof';
+import type { RowsDocument } from '@/services/act/with-rows';
+import { auditLedger } from '@/services/ledger/audit/audit-ledger';
+import type { Objects } from '@/services/ports';
 import { startCluster } from '../postgres/cluster.mjs';
 import { connect } from '../postgres/roles.mjs';
 import { ensurePostgres } from '../set-up/packages.mjs';
@@ -27,7 +32,8 @@ import { newTemporaryFolder } from '../set-up/temporary.mjs';
 
 /**
  * Appends lines to a ledger on a throw-away PostgreSQL, beside plain inserts of the same rows, then
- * verifies all of it. Usage: npx tsx scripts/bench/ledger.ts [lines, default 100000]
+ * verifies and audits all of it. A line is written as an act writes it: claimed, answered, with the
+ * digest of its rows. Usage: npx tsx scripts/bench/ledger.ts [lines, default 100000]
  */
 const total = Number(process.argv[2] ?? 100_000);
 const BATCH = 100;
@@ -46,32 +52,76 @@ const say = (text: string): void => console.log(text);
 
 const series = randomUUID();
 
-const newLine = (seriesId: string, index: number): string =>
+interface Content {
+  readonly role: string;
+  readonly salt: Uint8Array;
+  readonly content: string;
+}
+
+const lineOf = (
+  seriesId: string,
+  index: number,
+  act: string,
+  contents: readonly Content[],
+): string =>
   lineText({
     series: seriesId,
     index,
     kind: 'report-signed',
     at: new Date().toISOString(),
-    act: randomUUID(),
-    commitments: { report: toHex(commit(randomBytes(32), utf8(`report ${index}`))) },
+    act,
+    commitments: Object.fromEntries(
+      contents.map(({ role, salt, content }) => [role, toHex(commit(salt, utf8(content)))]),
+    ),
   });
 
+const newContent = (role: string, content: string): Content => ({
+  role,
+  salt: randomBytes(32),
+  content,
+});
+
+const newLine = (seriesId: string, index: number): string =>
+  lineOf(seriesId, index, randomUUID(), [newContent('report', `report ${index}`)]);
+
 const append = async (client: Client, seriesId: string): Promise<void> => {
+  const act = randomUUID();
+  await client.query('select append.claim_act($1, $2, null, $3, $4)', [
+    act,
+    seriesId,
+    'bench',
+    randomBytes(32),
+  ]);
+  await client.query('select append.answer_act($1, $2)', [act, '{"value":null}']);
+  const digest = await client.query<{ rows: object }>(
+    'select append.act_digest($1, $2, null) as rows',
+    [act, ['act']],
+  );
+  const rows = canonicalJson({
+    document: 'tagwire/act-rows',
+    version: '1',
+    ...digest.rows[0]?.rows,
+    open: ['report'],
+  });
   const next = await client.query<{ index: string }>('select append.next_line($1) as index', [
     seriesId,
   ]);
   const index = Number(next.rows[0]?.index);
-  const line = newLine(seriesId, index);
-  const contents = [
-    { role: 'report', open: true, salt: `\\x${'00'.repeat(32)}`, content: `report ${index}` },
-  ];
+  const contents = [newContent('report', `report ${index}`), newContent('rows', rows)];
   await client.query('select append.ledger_line($1, $2, $3, $4, $5, $6::jsonb)', [
     seriesId,
     index,
     'report-signed',
-    line,
-    randomUUID(),
-    JSON.stringify(contents),
+    lineOf(seriesId, index, act, contents),
+    act,
+    JSON.stringify(
+      contents.map(({ role, salt, content }) => ({
+        role,
+        open: role === 'report',
+        salt: `\\x${toHex(salt)}`,
+        content,
+      })),
+    ),
   ]);
 };
 
@@ -257,6 +307,48 @@ const verifying = async (app: Client): Promise<void> => {
   say(`a line with its signed head: ${bytes} bytes, verified in ${signed.ms.toFixed(1)} ms`);
 };
 
+const noObjects: Objects = {
+  presignPut: () => Promise.reject(new Error('There are no objects here.')),
+  findHead: () => Promise.resolve(undefined),
+  read: () => Promise.reject(new Error('There are no objects here.')),
+  write: () => Promise.resolve(),
+  remove: () => Promise.resolve(),
+};
+
+/** The whole audit, and beside it what its digests of rows cost when each line asks for its own. */
+const auditing = async (app: Client, appUrl: string): Promise<void> => {
+  const orm = await openDatabase(appUrl, 2);
+  try {
+    const asked = { seriesId: series, heads: [], keys: [] };
+    const audit = await timed(() => auditLedger({ db: orm.em.fork(), objects: noObjects }, asked));
+    demand(audit.value.faults.length === 0, audit.value.faults[0]?.words ?? 'the audit');
+    demand(audit.value.lines === total, 'the number of lines audited');
+    say(`audited whole        ${total.toLocaleString('en')} lines, ${perSecond(total, audit.ms)}`);
+    const some = Math.min(20_000, total);
+    const { rows } = await app.query<{ act: string; content: string }>(
+      `select l.act_id as act, c.content from record.ledger_line l
+       join record.ledger_content c on c.series_id = l.series_id and c.line_index = l.index
+       where l.series_id = $1 and c.role = 'rows' order by l.index limit $2`,
+      [series, some],
+    );
+    const single = await timed(async () => {
+      for (const { act, content } of rows) {
+        const { columns, digest } = JSON.parse(content) as RowsDocument;
+        const now = await app.query<{ digest: string }>(
+          "select append.act_digest($1, $2, $3) ->> 'digest' as digest",
+          [act, Object.keys(columns), JSON.stringify(columns)],
+        );
+        demand(now.rows[0]?.digest === digest, 'the digest of an act’s rows');
+      }
+    });
+    say(
+      `for comparison, the digests alone by a query a line: ${some.toLocaleString('en')} lines, ${perSecond(some, single.ms)}`,
+    );
+  } finally {
+    await orm.close();
+  }
+};
+
 await ensurePostgres();
 const home = await newTemporaryFolder('tagwire-bench-');
 const { database } = await rememberedPorts(join(home, 'ports.json'), ['database']);
@@ -268,6 +360,7 @@ try {
   await inMemory();
   await appending(app, owner);
   await verifying(app);
+  await auditing(app, cluster.appUrl);
   await Promise.all([app.end(), owner.end()]);
 } finally {
   await cluster.stop();
