@@ -45,6 +45,9 @@ export async function demoParameters(client: pg.Client): Promise<ReadonlyMap<str
     '[sheet]': 'lifter-sheet',
     '[series]': seriesId,
     '[event]': event,
+    '[entry]': await one("select id from public.entry where event_id = $1 and car_number = '12J'", [
+      event,
+    ]),
     '[class]': raceClass,
     '[draft]': await one('select id from public.rulebook_draft where class_id = $1', [raceClass]),
     '[gauge]': await one("select id from public.gauge where code = 'MIC-014'"),

@@ -1,5 +1,6 @@
 import * as z from 'zod/mini';
 import { isZone } from '@/domain/deadline/zone';
+import { findLapSeconds } from '@/domain/event/lap-time';
 
 const act = z.uuid('The act needs its identifier.');
 const id = z.uuid('This is no identifier.');
@@ -51,12 +52,40 @@ export const entryRow = z.strictObject({
   competitorEmail: z.optional(z.string().check(z.maxLength(254))),
   engineReference: z.string().check(z.maxLength(40, 'At most 40 characters.')),
   position: z.nullable(z.int().check(z.gte(1, 'Positions count from 1.'), z.lte(999))),
+  driver: z.optional(z.string().check(z.maxLength(120, 'At most 120 characters.'))),
+  /** Lap times as they were written, in order; they replace those kept before. */
+  laps: z.optional(
+    z
+      .array(
+        z.string().check(
+          z.maxLength(20),
+          z.refine((text) => findLapSeconds(text) !== undefined, 'This is no lap time.'),
+        ),
+      )
+      .check(z.maxLength(500, 'At most 500 laps.')),
+  ),
 });
 
 export const entriesRequest = z.strictObject({
   act,
   entries: z.array(entryRow).check(z.minLength(1, 'No entry was sent.'), z.maxLength(500)),
+  /** Where the cars come late: why. Each is then written as a late entry. */
+  lateReason: z.optional(z.string().check(z.maxLength(300, 'At most 300 characters.'))),
+  /** Under which columns the fields were found, to be offered the next time. */
+  columns: z.optional(z.record(z.string(), z.string().check(z.maxLength(120)))),
 });
+
+export const ENTRY_CHANGES = ['scratched', 'restored', 'class', 'engine', 'driver'] as const;
+
+export const entryChangeRequest = z.strictObject({
+  act,
+  kind: z.enum(ENTRY_CHANGES, 'Choose what changes.'),
+  /** The class's id, the engine, the driver; empty where a car is scratched or restored. */
+  becomes: z.string().check(z.maxLength(120, 'At most 120 characters.')),
+  reason: z.string().check(z.maxLength(300, 'At most 300 characters.')),
+});
+
+export type EntryChange = z.output<typeof entryChangeRequest>;
 
 export const positionsRequest = z.strictObject({
   act,
@@ -71,7 +100,13 @@ export const positionsRequest = z.strictObject({
     .check(z.minLength(1, 'Nothing was sent.'), z.maxLength(500)),
 });
 
-export const PICK_REASONS = ['position', 'protested', 'nominated', 'drawn'] as const;
+export const PICK_REASONS = [
+  'position',
+  'protested',
+  'nominated',
+  'drawn',
+  'failed-check',
+] as const;
 
 export const picksRequest = z.strictObject({
   act,

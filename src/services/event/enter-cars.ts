@@ -1,53 +1,31 @@
-import type { EntityManager } from '@mikro-orm/postgresql';
+import { LockMode } from '@mikro-orm/core';
 import type { EntryRow } from '@/contracts/event/event';
 import { type Actor, may } from '@/domain/access/permission';
-import { absent, type Failure, type Fault, invalid } from '@/domain/failure';
+import { absent, type Failure, invalid } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
+import { ColumnChoice } from '@/entities/event/column-choice';
 import { Entry } from '@/entities/event/entry';
 import { Event } from '@/entities/event/event';
-import { RaceClass } from '@/entities/series/race-class';
 import { performAct } from '../act/perform-act';
 import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
+import { type EntryChanged, keepChanges } from './changes/keep-changes';
+import { type Planned, planEntries } from './plan-entries';
+import { officialClasses, refuseOfficial, resultsStateOf } from './results/official-classes';
 
-interface Declared {
-  readonly id: string;
-  readonly class_id: string;
-  readonly car_number: string;
-  readonly competitor_id: string;
-  readonly name: string;
-  readonly email: string;
+export interface CarsToEnter {
+  readonly seriesId: string;
+  readonly eventId: string;
+  readonly entries: readonly EntryRow[];
 }
 
-const plain = (text: string): string => text.trim().toLowerCase();
-
-/** Paperwork and people by which a car's competitor is known: by e-mail, else by its paperwork. */
-const knownBy = async (em: EntityManager, seriesId: string) => {
-  const paperwork = await em.execute<Declared[]>(
-    `select p.id, p.class_id, p.car_number, p.competitor_id, c.name, c.email
-     from public.paperwork p join public.person c on c.id = p.competitor_id
-     where p.series_id = ? and p.state <> 'withdrawn'`,
-    [seriesId],
-  );
-  const people = await em.execute<{ id: string; email: string }[]>(
-    `select distinct p.id, p.email from public.person p
-     join public.membership m on m.person_id = p.id and m.ended_at is null where m.series_id = ?`,
-    [seriesId],
-  );
-  return (row: EntryRow) => {
-    const byMail = people.find((person) => person.email === plain(row.competitorEmail ?? ''));
-    const papers = paperwork.filter(
-      (paper) => paper.class_id === row.classId && paper.car_number === row.carNumber,
-    );
-    const paper = papers.find(
-      (one) => one.competitor_id === byMail?.id || plain(one.name) === plain(row.competitorName),
-    );
-    return {
-      competitorId: byMail?.id ?? paper?.competitor_id ?? null,
-      paperworkId: paper?.id ?? null,
-      unknownMail: plain(row.competitorEmail ?? '') !== '' && byMail === undefined,
-    };
-  };
+const change = (entry: Entry, { row, competitorId, paperworkId }: Planned): void => {
+  entry.engineReference = row.engineReference.trim() || entry.engineReference;
+  entry.position = row.position ?? entry.position;
+  entry.driver = row.driver?.trim() ?? entry.driver;
+  if (row.laps !== undefined) entry.laps = [...row.laps];
+  entry.competitorId ??= competitorId;
+  entry.paperworkId ??= paperworkId;
 };
 
 /**
@@ -57,41 +35,46 @@ const knownBy = async (em: EntityManager, seriesId: string) => {
 export const enterCars = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
   actor: Actor,
-  input: {
+  input: CarsToEnter & {
     readonly act: string;
-    readonly seriesId: string;
-    readonly eventId: string;
-    readonly entries: readonly EntryRow[];
+    readonly lateReason?: string | undefined;
+    readonly columns?: Readonly<Record<string, string>> | undefined;
   },
 ): Promise<Result<{ readonly count: number }, Failure>> => {
-  const { act, seriesId, eventId, entries } = input;
+  const { act, seriesId, eventId, entries, columns } = input;
+  const lateReason = input.lateReason?.trim() ?? '';
   if (!may(actor, 'event.manage', seriesId) || !isId(eventId)) return fail(absent());
   return performAct(
     deps,
     actor,
-    { id: act, kind: 'enter-cars', seriesId, input: { eventId, entries } },
-    async ({ em }) => {
-      const event = await em.findOne(Event, { seriesId, id: eventId });
+    {
+      id: act,
+      kind: 'enter-cars',
+      seriesId,
+      input: { eventId, entries, lateReason, columns: columns ?? {} },
+    },
+    async ({ em, at, append, line }) => {
+      // The event's row is the queue in which all that changes its entries stands.
+      const event = await em.findOne(
+        Event,
+        { seriesId, id: eventId },
+        { lockMode: LockMode.PESSIMISTIC_WRITE },
+      );
       if (event === null) return fail(absent());
-      const classes = await em.find(RaceClass, { seriesId, seasonId: event.seasonId });
-      const standing = await em.find(Entry, { seriesId, eventId });
-      const known = await knownBy(em, seriesId);
-      const faults: Fault[] = [];
-      for (const [at, row] of entries.entries()) {
-        const say = (field: string, detail: string) =>
-          faults.push({ pointer: `/entries/${at}/${field}`, detail });
-        const { competitorId, paperworkId, unknownMail } = known(row);
-        if (!classes.some((one) => one.id === row.classId))
-          say('classId', 'This class is not in the event’s season.');
-        if (unknownMail) say('competitorEmail', 'Nobody in this series has this e-mail address.');
-        const same = (one: { readonly classId: string; readonly carNumber: string }) =>
-          one.classId === row.classId && one.carNumber === row.carNumber;
-        if (entries.slice(0, at).some(same))
-          say('carNumber', `Car ${row.carNumber} stands in this class twice.`);
-        const entry = standing.find(same);
-        if (entry !== undefined && plain(entry.competitorName) !== plain(row.competitorName))
-          say('competitorName', `Car ${row.carNumber} is entered by ${entry.competitorName}.`);
-        if (entry === undefined) {
+      const { planned, faults } = await planEntries(em, event, entries);
+      if (faults.length > 0) return fail(invalid(faults));
+      const touched = planned.filter(({ does }) => does !== 'same');
+      const official = await officialClasses(em, { seriesId, eventId });
+      const refused = refuseOfficial(
+        official,
+        touched.map(({ row }) => row.classId),
+      );
+      if (refused !== undefined) return refused;
+      const late: EntryChanged[] = [];
+      for (const one of touched) {
+        const { row, entry, competitorId, paperworkId } = one;
+        if (entry !== undefined) change(entry, one);
+        else {
           em.persist(
             em.create(Entry, {
               seriesId,
@@ -101,6 +84,8 @@ export const enterCars = async (
               carNumber: row.carNumber,
               competitorId,
               competitorName: row.competitorName.trim(),
+              driver: row.driver?.trim() ?? '',
+              laps: row.laps ?? [],
               engineReference: row.engineReference.trim(),
               paperworkId,
               position: row.position,
@@ -108,16 +93,25 @@ export const enterCars = async (
               version: 1,
             }),
           );
-        } else {
-          entry.engineReference = row.engineReference.trim() || entry.engineReference;
-          entry.position = row.position ?? entry.position;
-          entry.competitorId ??= competitorId;
-          entry.paperworkId ??= paperworkId;
+          if (lateReason !== '')
+            late.push({
+              id: deps.random.uuid(),
+              entryId: row.id,
+              kind: 'late-entry',
+              was: '',
+              becomes: `Car ${row.carNumber}`,
+              reason: lateReason,
+            });
         }
       }
-      if (faults.length > 0) return fail(invalid(faults));
-      if (entries.some((row) => row.position !== null) && event.resultsState === 'none')
-        event.resultsState = 'unofficial';
+      if (columns !== undefined) {
+        const chosen = { columns, updatedBy: actor.personId, updatedAt: at };
+        await em.upsert(ColumnChoice, { seriesId, purpose: 'entries', ...chosen });
+      }
+      await em.flush();
+      const all = await em.find(Entry, { seriesId, eventId });
+      event.resultsState = resultsStateOf(all, official);
+      keepChanges({ append, line }, { seriesId, eventId, by: actor.personId }, late);
       return ok({ count: entries.length });
     },
   );

@@ -1,4 +1,5 @@
 import { type Actor, may, seriesWhere } from '@/domain/access/permission';
+import { fastestLap } from '@/domain/event/lap-time';
 import { absent, type Failure } from '@/domain/failure';
 import type { InspectionState } from '@/domain/inspection/state';
 import { fail, ok, type Result } from '@/domain/result';
@@ -47,7 +48,10 @@ export interface EntryListed {
   readonly carNumber: string;
   readonly competitor: string;
   readonly linked: boolean;
+  readonly driver: string;
   readonly engine: string;
+  /** As it was written; of many the fastest. */
+  readonly fastestLap: string | undefined;
   readonly position: number | null;
   readonly state: 'entered' | 'withdrawn';
   readonly paperwork: string | null;
@@ -84,10 +88,12 @@ export const findEvent = async (
     { seriesId, seasonId },
     { orderBy: { name: 'asc' } },
   );
-  const entries = await deps.db.execute<EntryListed[]>(
+  const rows = await deps.db.execute<
+    (Omit<EntryListed, 'fastestLap'> & { readonly laps: readonly string[] })[]
+  >(
     `select e.id, e.class_id as "classId", c.name as "className", e.car_number as "carNumber",
             e.competitor_name as competitor, e.competitor_id is not null as linked,
-            e.engine_reference as engine, e.position, e.state, p.state as paperwork,
+            e.driver, e.laps, e.engine_reference as engine, e.position, e.state, p.state as paperwork,
             i.id as "inspectionId", i.state as "inspectionState", i.picked_because as "pickedBecause"
      from public.entry e
      join public.class c on c.series_id = e.series_id and c.id = e.class_id
@@ -101,6 +107,6 @@ export const findEvent = async (
     event,
     series: { id: named.id, name: named.name, slug: named.slug },
     classes: classes.map(({ id, name, slug }) => ({ id, name, slug })),
-    entries,
+    entries: rows.map(({ laps, ...row }) => ({ ...row, fastestLap: fastestLap(laps) })),
   });
 };

@@ -1,61 +1,17 @@
-import type { EntityManager } from '@mikro-orm/postgresql';
+import { LockMode } from '@mikro-orm/core';
 import type { Pick as CarPick } from '@/contracts/event/event';
 import { type Actor, may } from '@/domain/access/permission';
-import { absent, type Failure, type Fault, failure, invalid } from '@/domain/failure';
-import { toHex } from '@/domain/ledger/bytes';
-import { canonicalJson } from '@/domain/ledger/canonical';
+import { absent, type Failure } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
-import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
-import { GENERIC_LAYOUTS } from '@/domain/tappet/layout/generic-layouts';
-import { Entry } from '@/entities/event/entry';
 import { Event } from '@/entities/event/event';
-import { Inspection } from '@/entities/event/inspection';
 import { performAct } from '../act/perform-act';
 import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
-import { findRules } from '../rulebook/find-rules';
-
-interface Accepted {
-  readonly id: string;
-  readonly number: number;
-  readonly layout: BoreLayout | null;
-}
-
-/** The last version of an entry's paperwork that was accepted, with its position map. */
-const findAccepted = async (
-  em: EntityManager,
-  { seriesId, classId, carNumber, competitorId, paperworkId, engineId = null }: Entry,
-): Promise<Accepted | undefined> => {
-  const [row] = await em.execute<Accepted[]>(
-    `select p.id, v.number, v.document::jsonb #> '{engine,layout}' as layout
-     from public.paperwork p
-     join record.paperwork_decision d
-       on d.series_id = p.series_id and d.paperwork_id = p.id and d.decision = 'accepted'
-     join record.paperwork_version v
-       on v.series_id = p.series_id and v.paperwork_id = p.id and v.number = d.number
-       and v.document is not null
-     where p.series_id = ? and p.state <> 'withdrawn'
-       and (?::uuid is null or p.engine_id = ?) and (p.id = ? or (p.class_id = ? and p.car_number = ? and p.competitor_id = ?))
-     order by (p.id = ?) desc nulls last, v.number desc limit 1`,
-    [seriesId, engineId, engineId, paperworkId, classId, carNumber, competitorId, paperworkId],
-  );
-  return row;
-};
-
-/** Stored documents hold no numbers: cylinders come back as text. */
-const numbered = (layout: BoreLayout): BoreLayout => ({
-  ...layout,
-  banks: layout.banks.map((bank) => ({
-    ...bank,
-    cylinders: bank.cylinders.map(Number),
-    bores: bank.bores.map((bore) => ({ ...bore, cylinder: Number(bore.cylinder) })),
-  })),
-});
+import { openInspections } from './open-inspections';
 
 /**
- * Picks cars for inspection: by finishing position, protested, nominated with a reason, or drawn.
- * Each gets its inspection, with the rules in force at the event's start and the accepted
- * paperwork pinned to it. One ledger line for all.
+ * Picks cars for inspection: by finishing position, protested, nominated with a reason, or drawn. Two
+ * officials at once stand in one queue: the second is told what the first picked.
  */
 export const pickCars = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
@@ -73,89 +29,15 @@ export const pickCars = async (
     deps,
     actor,
     { id: act, kind: 'pick-cars', seriesId, input: { eventId, picks } },
-    async ({ em, at, keepRules, line }) => {
-      const event = await em.findOne(Event, { seriesId, id: eventId });
+    async (within) => {
+      const event = await within.em.findOne(
+        Event,
+        { seriesId, id: eventId },
+        { lockMode: LockMode.PESSIMISTIC_WRITE },
+      );
       if (event === null) return fail(absent());
-      const faults: Fault[] = [];
-      const rulesOf = new Map<string, Uint8Array>();
-      const open: Record<string, string>[] = [];
-      for (const [place, pick] of picks.entries()) {
-        const say = (detail: string) => faults.push({ pointer: `/picks/${place}/entryId`, detail });
-        const entry = await em.findOne(Entry, { seriesId, eventId, id: pick.entryId });
-        if (entry === null) return fail(absent());
-        const { carNumber, classId } = entry;
-        if (entry.state === 'withdrawn') say(`Car ${carNumber} is withdrawn.`);
-        if ((await em.count(Inspection, { seriesId, entryId: entry.id })) > 0)
-          say(`Car ${carNumber} is picked already.`);
-        if (!rulesOf.has(classId)) {
-          const found = await findRules(em, seriesId, classId, event.startsAt);
-          if (found === undefined)
-            return fail(
-              failure(
-                'not-in-this-state',
-                `No rulebook of car ${carNumber}’s class is in force at the event’s start. Publish an edition first.`,
-              ),
-            );
-          rulesOf.set(classId, await keepRules(seriesId, found.document));
-        }
-        const rulesHash = rulesOf.get(classId) ?? new Uint8Array();
-        const accepted = await findAccepted(em, entry);
-        if (accepted !== undefined) entry.paperworkId ??= accepted.id;
-        const generic =
-          GENERIC_LAYOUTS.find((layout) => layout.name === pick.layout) ?? GENERIC_LAYOUTS[0];
-        const layout = accepted?.layout ? numbered(accepted.layout) : generic;
-        if (layout === undefined) throw new Error('There is no position map at all.');
-        em.persist(
-          em.create(Inspection, {
-            seriesId,
-            id: pick.inspectionId,
-            eventId,
-            entryId: entry.id,
-            paperworkId: accepted?.id ?? null,
-            paperworkNumber: accepted?.number ?? null,
-            pickedBecause: pick.because,
-            pickedWords: pick.words.trim(),
-            pickedBy: actor.personId,
-            pickedAt: at,
-            rulesHash: Buffer.from(rulesHash),
-            layout,
-            state: 'to-do',
-            stateReason: '',
-            correctionReason: '',
-            bay: '',
-            inspectorId: null,
-            openedAt: null,
-            closedAt: null,
-            version: 1,
-          }),
-        );
-        open.push({
-          inspection: pick.inspectionId,
-          car: carNumber,
-          because: pick.because,
-          rules: toHex(rulesHash),
-        });
-      }
-      if (faults.length > 0) return fail(invalid(faults));
-      const reasons = picks.map(({ inspectionId, words }) => ({ inspection: inspectionId, words }));
-      const type = { v: '1', event: eventId } as const;
-      line({
-        seriesId,
-        kind: 'cars-selected',
-        contents: {
-          picks: {
-            text: canonicalJson({ ...type, type: 'tagwire/picks', picks: open }),
-            open: true,
-          },
-          // Why a car was nominated may name people: for the parties only.
-          reasons: {
-            text: canonicalJson({ ...type, type: 'tagwire/pick-reasons', reasons }),
-            open: false,
-          },
-        },
-        refs: { event: eventId },
-      });
-      return ok({ inspections: picks.map((pick) => pick.inspectionId) });
+      const opened = await openInspections(within, event, actor.personId, picks);
+      return opened.ok ? ok({ inspections: opened.value }) : opened;
     },
   );
 };

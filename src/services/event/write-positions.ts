@@ -1,3 +1,4 @@
+import { LockMode } from '@mikro-orm/core';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, type Fault, invalid } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
@@ -6,6 +7,8 @@ import { Event } from '@/entities/event/event';
 import { performAct } from '../act/perform-act';
 import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
+import { type EntryChanged, keepChanges } from './changes/keep-changes';
+import { officialClasses, refuseOfficial, resultsStateOf } from './results/official-classes';
 
 export interface WrittenPosition {
   readonly entryId: string;
@@ -13,7 +16,10 @@ export interface WrittenPosition {
   readonly state: 'entered' | 'withdrawn';
 }
 
-/** Writes finishing positions. Two cars of a class cannot share one; results stay unofficial. */
+/**
+ * Writes finishing positions. Two cars of a class cannot share one; results stay unofficial, and
+ * official ones are not touched.
+ */
 export const writePositions = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
   actor: Actor,
@@ -30,14 +36,32 @@ export const writePositions = async (
     deps,
     actor,
     { id: act, kind: 'write-positions', seriesId, input: { eventId, positions } },
-    async ({ em }) => {
-      const event = await em.findOne(Event, { seriesId, id: eventId });
+    async ({ em, append, line }) => {
+      const event = await em.findOne(
+        Event,
+        { seriesId, id: eventId },
+        { lockMode: LockMode.PESSIMISTIC_WRITE },
+      );
       if (event === null) return fail(absent());
       const entries = await em.find(Entry, { seriesId, eventId });
+      const official = await officialClasses(em, { seriesId, eventId });
       const faults: Fault[] = [];
+      const changes: EntryChanged[] = [];
       for (const [at, row] of positions.entries()) {
         const entry = entries.find((one) => one.id === row.entryId);
         if (entry === undefined) return fail(absent());
+        const moves = entry.position !== row.position || entry.state !== row.state;
+        const refused = moves ? refuseOfficial(official, [entry.classId]) : undefined;
+        if (refused !== undefined) return refused;
+        if (entry.state !== row.state)
+          changes.push({
+            id: deps.random.uuid(),
+            entryId: entry.id,
+            kind: row.state === 'withdrawn' ? 'scratched' : 'restored',
+            was: '',
+            becomes: '',
+            reason: 'Marked with the positions.',
+          });
         entry.position = row.position;
         entry.state = row.state;
         const other = entries.find(
@@ -55,7 +79,8 @@ export const writePositions = async (
           });
       }
       if (faults.length > 0) return fail(invalid(faults));
-      if (entries.some((entry) => entry.position !== null)) event.resultsState = 'unofficial';
+      event.resultsState = resultsStateOf(entries, official);
+      keepChanges({ append, line }, { seriesId, eventId, by: actor.personId }, changes);
       return ok({ count: positions.length });
     },
   );

@@ -3,11 +3,10 @@ import { toHex } from '@/domain/ledger/bytes';
 import { enterCars } from '@/services/event/enter-cars';
 import { findEvent } from '@/services/event/find-event';
 import { pickCars } from '@/services/event/pick-cars';
-import { readEntriesFile } from '@/services/event/read-entries-file';
 import { writePositions } from '@/services/event/write-positions';
 import { findRules } from '@/services/rulebook/find-rules';
 import { failureOf, get, openRaceNight, type RaceNight } from '../../support/bay';
-import { openWorld, type World } from '../../support/world';
+import { addActor, openWorld, type World } from '../../support/world';
 
 let world: World;
 let night: RaceNight;
@@ -35,41 +34,6 @@ const enter = (entries: ReturnType<typeof row>[], actor = night.official) =>
     entries,
   });
 const sheet = async () => get(await findEvent(world.ports(), night.official, night.eventId));
-
-describe('a file of entries', () => {
-  const classes = () => [{ id: night.classId, name: 'Street Stock', slug: 'street-stock' }];
-  const read = (text: string) => readEntriesFile(text, { classes: classes(), newId: uuid });
-
-  it('names each fault by its line and takes every other line', () => {
-    const file = read(
-      [
-        'Car number;Class;Competitor;Engine;Position',
-        '12j;Street Stock;Tamsin Overley;VR-2231;1',
-        '7;Late Night;Joss Farrow;;2',
-        '',
-        '12J;street-stock;Somebody Else;;x',
-        '"8";"Street Stock";"Overley, T.";;',
-      ].join('\r\n'),
-    );
-    expect(file.rows.map(({ carNumber, line, position }) => [carNumber, line, position])).toEqual([
-      ['12J', 2, 1],
-      ['8', 6, null],
-    ]);
-    expect(file.faults.map(({ line }) => line)).toEqual([3, 5, 5]);
-    expect(file.faults[0]?.detail).toContain('"Late Night" is no class');
-  });
-
-  it.each([
-    ['', 1],
-    ['Number,Name\n1,A', 1],
-    ['Car,Class,Competitor\n', 2],
-    ['Car,Class,Competitor\n1,"Street Stock,A', 2],
-  ])('that cannot be read says where: %j', (text, line) => {
-    const file = read(text);
-    expect(file.rows).toEqual([]);
-    expect(file.faults[0]?.line).toBe(line);
-  });
-});
 
 describe('entries', () => {
   it('are added, changed by class and number, and refused whole when one conflicts', async () => {
@@ -151,8 +115,8 @@ describe('picks', () => {
   });
 
   it('take no car twice, and keep a nomination’s words from the public', async () => {
-    expect(failureOf(await pick('8', 'position')).faults?.[0]?.detail).toBe(
-      'Car 8 is picked already.',
+    expect(failureOf(await pick('8', 'position')).faults?.[0]?.detail).toMatch(
+      /^Car 8 is picked already: by finishing position, by Ilse Törnkvist, /,
     );
     get(await pick('12J', 'nominated', 'Unusual noise, reported by a rival'));
     const open = await world
@@ -161,5 +125,31 @@ describe('picks', () => {
         `select count(*) as n from record.ledger_content where open and content like '%rival%'`,
       );
     expect(open[0]?.n).toBe('0');
+  });
+
+  it('by two officials at once: one picks, the other is told what the first did', async () => {
+    get(await enter([row('31')]));
+    const second = await addActor(world, 'Second Official', [
+      { seriesId: night.seriesId, role: 'official' },
+    ]);
+    const { entries } = await sheet();
+    const entryId = entries.find((entry) => entry.carNumber === '31')?.id ?? '';
+    const answers = await Promise.all(
+      [night.official, second].flatMap((actor) =>
+        Array.from({ length: 3 }, () =>
+          pickCars(world.ports(), actor, {
+            act: uuid(),
+            seriesId: night.seriesId,
+            eventId: night.eventId,
+            picks: [{ inspectionId: uuid(), entryId, because: 'nominated', words: 'Asked twice' }],
+          }),
+        ),
+      ),
+    );
+    expect(answers.filter(({ ok }) => ok)).toHaveLength(1);
+    for (const answer of answers.filter(({ ok }) => !ok))
+      expect(failureOf(answer).faults?.[0]?.detail).toMatch(
+        /^Car 31 is picked already: nominated, by (Ilse Törnkvist|Second Official), /,
+      );
   });
 });
