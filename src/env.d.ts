@@ -5,5 +5,7 @@ declare namespace App {
     readonly requestId: string;
     readonly actor: import('@/domain/access/permission').Actor | null;
     readonly ports: import('@/services/ports').Ports;
+    /** Set by a public page: the tag under which it is kept once it is rendered. */
+    keepAs?: string;
   }
 }

@@ -3,6 +3,7 @@ import type { APIContext, MiddlewareHandler } from 'astro';
 import { composition } from '@/composition';
 import type { Actor } from '@/domain/access/permission';
 import { failure } from '@/domain/failure';
+import { keepPage } from '@/http/kept-pages';
 import { crossSite } from '@/http/origin';
 import { problem } from '@/http/problem';
 import { ROUTES } from '@/http/route-table';
@@ -32,9 +33,11 @@ const wire: MiddlewareHandler = async (context, next) => {
     ports,
     actor: token === undefined ? null : await findActor(ports, token),
   });
-  const response = needsSignIn(context.routePattern, context.locals.actor)
+  const rendered = needsSignIn(context.routePattern, context.locals.actor)
     ? signInFor(context)
     : await next();
+  const { keepAs } = context.locals;
+  const response = keepAs === undefined ? rendered : await keepPage(keepAs, rendered);
   secure(response.headers, app.config.objects.publicEndpoint);
   response.headers.set('x-request-id', context.locals.requestId);
   if (context.locals.actor !== null && !response.headers.has('cache-control')) {

@@ -198,14 +198,14 @@ export interface RulebookToPrint {
   readonly hash: string;
   readonly series: string;
   readonly zone: string;
-  /** The instant for which the rules were asked; ISO 8601 in UTC. */
-  readonly at: string;
-  /** Where the same rules are read; printed as a QR code. */
+  /** The instant from which they stand unchanged; ISO 8601 in UTC. */
+  readonly since: string;
+  /** Where these very rules are read; printed as a QR code. */
   readonly url: string;
 }
 
 export interface RulebookPrinter {
-  /** The same rules at the same instant give the same bytes. */
+  /** The same rules give the same bytes. */
   print(input: RulebookToPrint): Promise<Uint8Array>;
 }
 

@@ -77,11 +77,11 @@ const editionWords = ({ rules }: RulebookToPrint): string =>
   `Edition ${rules.edition}${rules.bulletins.length === 0 ? '' : `, with bulletins ${rules.bulletins.join(', ')}`}`;
 
 const drawHead = (pen: Pen, input: RulebookToPrint, first: boolean): void => {
-  const { rules, series, at, zone } = input;
+  const { rules, series, since, zone } = input;
   if (first) {
     pen.text(SHEET.left, 64, `${rules.className} rulebook`, TITLE);
     pen.text(SHEET.left, 90, `${series}, season ${rules.season}. ${editionWords(input)}`, TEXT);
-    pen.text(SHEET.left, 110, `As of ${formatInZone(at, zone)}`, TEXT);
+    pen.text(SHEET.left, 110, `In force since ${formatInZone(since, zone)}`, TEXT);
   } else {
     const words = `${rules.className} rulebook, season ${rules.season}, continued`;
     pen.text(SHEET.left, 78, words, TEXT);
@@ -99,10 +99,10 @@ const drawFoot = (pen: Pen, { hash, url }: RulebookToPrint, number: number, of: 
   drawQr(pen, url, 656, 988, 88);
 };
 
-/** Prints the rules in force on A4, black only; the same rules and instant give the same bytes. */
+/** Prints the rules in force on A4, black only; the same rules give the same bytes. */
 export const rulebookPrinter: RulebookPrinter = {
   print: async (input) => {
-    const at = new Date(input.at);
+    const at = new Date(input.since);
     const document = await PDFDocument.create({ updateMetadata: false });
     document.setTitle(`${input.rules.className} rulebook, season ${input.rules.season}`, {
       showInWindowTitleBar: true,

@@ -24,6 +24,22 @@ export interface Withdrawal {
   readonly publishedAt: string;
 }
 
+/** Clarifications of a clause that no longer count at an instant (epoch milliseconds), with what ended them. */
+export const withdrawnAt = (
+  published: {
+    readonly clarifications: readonly Clarification[];
+    readonly withdrawals?: readonly Withdrawal[];
+  },
+  season: string,
+  at: number,
+): readonly { readonly clarification: Clarification; readonly withdrawal: Withdrawal }[] => {
+  const ended = withdrawalsAt(published.withdrawals ?? [], season, at);
+  return published.clarifications.flatMap((clarification) => {
+    const withdrawal = ended.get(clarification.number);
+    return withdrawal === undefined ? [] : [{ clarification, withdrawal }];
+  });
+};
+
 /** The withdrawals that count at an instant (epoch milliseconds), by the clarification's number. */
 export const withdrawalsAt = (
   withdrawals: readonly Withdrawal[],

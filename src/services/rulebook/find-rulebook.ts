@@ -1,8 +1,10 @@
 import { type Actor, seriesWhere } from '@/domain/access/permission';
 import { toHex } from '@/domain/ledger/bytes';
-import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
+import { findEffectiveAt } from '@/domain/rulebook/bulletin';
+import type { RulesInForce, RulesQuestion } from '@/domain/rulebook/rules-in-force';
+import type { Clarification, Withdrawal } from '@/domain/rulebook/ruling';
 import type { Ports } from '../ports';
-import { findRules } from './find-rules';
+import { readPublications, standingRules } from './find-rules';
 import type { Publication } from './publication';
 
 export interface ClassNamed {
@@ -38,6 +40,8 @@ export interface RulebookState extends ClassNamed {
   readonly inForce: { readonly rules: RulesInForce; readonly hash: string } | undefined;
   readonly drafts: readonly DraftListed[];
   readonly publications: readonly PublicationListed[];
+  readonly clarifications: readonly Clarification[];
+  readonly withdrawals: readonly Withdrawal[];
   readonly openQuestions: number;
 }
 
@@ -85,6 +89,17 @@ export const listPublications = async (
   }));
 };
 
+/** With the instant from which a bulletin that waited for its event counts, once the event is known. */
+export const withKnownInstants = (
+  publications: readonly PublicationListed[],
+  { bulletins, eventStartsAt }: Pick<RulesQuestion, 'bulletins' | 'eventStartsAt'>,
+): readonly PublicationListed[] =>
+  publications.map((one) => {
+    const bulletin = bulletins.find((row) => row.id === one.id);
+    const from = bulletin && findEffectiveAt(bulletin, eventStartsAt);
+    return from === undefined ? one : { ...one, inForceAt: new Date(from).toISOString() };
+  });
+
 /** How a class's rulebook stands, for those who write it. */
 export const findRulebook = async (
   deps: Pick<Ports, 'db' | 'clock'>,
@@ -106,7 +121,8 @@ export const findRulebook = async (
      where series_id = ? and class_id = ? and state = 'open'`,
     [seriesId, classId],
   );
-  const standing = await findRules(deps.db, seriesId, classId, deps.clock.now());
+  const published = await readPublications(deps.db, seriesId, classId);
+  const standing = standingRules(published, deps.clock.now());
   return {
     ...named,
     inForce: standing && { rules: standing.rules, hash: toHex(standing.hash) },
@@ -114,7 +130,9 @@ export const findRulebook = async (
       ...row,
       updatedAt: new Date(updated_at).toISOString(),
     })),
-    publications: await listPublications(deps, seriesId, classId),
+    publications: withKnownInstants(await listPublications(deps, seriesId, classId), published),
+    clarifications: published.clarifications,
+    withdrawals: published.withdrawals ?? [],
     openQuestions: open?.n ?? 0,
   };
 };

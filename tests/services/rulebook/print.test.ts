@@ -41,7 +41,7 @@ it('prints every clause with its limit, the hash and page of pages, the same byt
     hash: '0123456789abcdef'.repeat(4),
     series: 'Corran Valley Saturday Series',
     zone: 'America/Chicago',
-    at,
+    since: at,
     url: 'http://127.0.0.1:1/series/corran-valley/rulebooks/street-eight',
   };
   const bytes = await rulebookPrinter.print(input);
@@ -54,7 +54,7 @@ it('prints every clause with its limit, the hash and page of pages, the same byt
     input.hash.slice(0, 32),
     `1 of ${pages}`,
     `${pages} of ${pages}`,
-    'Saturday 11 July 2026, 15:00 local time (UTC−5)',
+    'In force since Saturday 11 July 2026, 15:00 local time (UTC−5)',
   ]) {
     expect(words).toContain(part);
   }

@@ -11,6 +11,7 @@ import type { Valve } from '@/domain/tappet/layout/bore-layout';
 
 interface Row {
   readonly id: string;
+  readonly inspection_id: string;
   readonly taken_by: string;
   readonly occurred_at: Date;
   readonly clock_offset_ms: number;
@@ -56,8 +57,11 @@ const placeOf = ({ bank, cylinder, valve, place_index }: AtPlace): Place => ({
   ...(place_index === null ? {} : { index: place_index }),
 });
 
+const of = <R extends Row>(rows: readonly R[], inspectionId: string): readonly R[] =>
+  rows.filter((row) => row.inspection_id === inspectionId);
+
 const COMMON =
-  'id, taken_by, occurred_at, clock_offset_ms, standing, standing_reason, batch' as const;
+  'id, inspection_id, taken_by, occurred_at, clock_offset_ms, standing, standing_reason, batch' as const;
 
 type ReadingColumns = Row &
   Note &
@@ -99,16 +103,23 @@ type RemarkColumns = Row &
     readonly reason: string;
   };
 
-/** Reads the rows back as the domain assesses them; struck ones and those only received included. */
+/** The rows of one inspection as the domain assesses them; struck ones and those only received included. */
 export const readRows = async (
   em: EntityManager,
   seriesId: string,
   inspectionId: string,
-): Promise<RecordedRows> => {
+): Promise<RecordedRows> => (await readRowsOf(em, seriesId, [inspectionId]))(inspectionId);
+
+/** The same of several inspections, read together: their rows by the inspection's id. */
+export const readRowsOf = async (
+  em: EntityManager,
+  seriesId: string,
+  inspectionIds: readonly string[],
+): Promise<(inspectionId: string) => RecordedRows> => {
   const from = (table: string, columns: string) =>
     `select ${COMMON}, ${columns} from record.${table}
-     where series_id = ? and inspection_id = ? order by batch, occurred_at, id`;
-  const key = [seriesId, inspectionId];
+     where series_id = ? and inspection_id = any(?::uuid[]) order by batch, occurred_at, id`;
+  const key = [seriesId, `{${inspectionIds.join(',')}}`];
   const readings = await em.execute<ReadingColumns[]>(
     from(
       'reading',
@@ -127,8 +138,8 @@ export const readRows = async (
     from('remark', 'kind, reading_id, bank, cylinder, valve, place_index, subject, answer, reason'),
     key,
   );
-  return {
-    readings: readings.map((row) => ({
+  return (inspectionId) => ({
+    readings: of(readings, inspectionId).map((row) => ({
       ...captured(row),
       quantity: row.quantity,
       place: placeOf(row),
@@ -143,7 +154,7 @@ export const readRows = async (
       temperatures: row.temperatures,
       ...(row.reference_part === null ? {} : { referencePart: row.reference_part }),
     })),
-    zeros: zeros.map((row) => ({
+    zeros: of(zeros, inspectionId).map((row) => ({
       ...captured(row),
       runId: row.run_id,
       kind: row.kind,
@@ -155,7 +166,7 @@ export const readRows = async (
         : { size: { text: row.size_text, unit: row.size_unit } }),
       reading: { text: row.reading_text, unit: row.reading_unit },
     })),
-    remarks: remarks.map((row) => ({
+    remarks: of(remarks, inspectionId).map((row) => ({
       ...captured(row),
       kind: row.kind,
       ...(row.reading_id === null ? {} : { readingId: row.reading_id }),
@@ -164,5 +175,5 @@ export const readRows = async (
       answer: row.answer,
       reason: row.reason,
     })),
-  };
+  });
 };

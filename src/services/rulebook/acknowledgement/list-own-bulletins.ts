@@ -51,7 +51,10 @@ export const listOwnBulletins = async (
        where n.series_id = any(?::uuid[]) and n.competitor_id = ? and n.state = 'entered'
      )
      select b.id, b.series_id as "seriesId", b.number, b.title, c.name as "className",
-       s.name as "seriesName", s.zone, encode(b.hash, 'hex') as hash, b.in_force_at as "inForceAt",
+       s.name as "seriesName", s.zone, encode(b.hash, 'hex') as hash, 
+       coalesce(b.in_force_at, (select min(e.starts_at) from public.event e
+        where e.series_id = c.series_id and e.season_id = c.season_id
+          and e.starts_at >= b.published_at)) as "inForceAt",
        format('/series/%s/rulebooks/%s/bulletins/%s', s.slug, c.slug, b.number) as path,
        (select min(a.acknowledged_at) from record.bulletin_acknowledgement a
         where a.series_id = b.series_id and a.bulletin_id = b.id and a.person_id = ?) as "acknowledgedAt",

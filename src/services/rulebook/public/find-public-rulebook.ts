@@ -1,7 +1,7 @@
 import type { RulesQuestion } from '@/domain/rulebook/rules-in-force';
 import type { Ports } from '../../ports';
 import type { ClassNamed } from '../find-rulebook';
-import { listPublications, type PublicationListed } from '../find-rulebook';
+import { listPublications, type PublicationListed, withKnownInstants } from '../find-rulebook';
 import { readPublications, type StandingRules, standingRules } from '../find-rules';
 
 export interface PublicRulebook extends ClassNamed {
@@ -64,7 +64,10 @@ export const findPublicRulebook = async (
     at,
     standing: standingRules(published, at),
     published,
-    publications: await listPublications(deps, named.seriesId, named.classId),
+    publications: withKnownInstants(
+      await listPublications(deps, named.seriesId, named.classId),
+      published,
+    ),
     seasons: rows.map((row) => ({ slug: row.seasonSlug, name: row.seasonName })),
   };
 };

@@ -50,6 +50,12 @@ export const findAsked = async (
   };
 };
 
+/** The query under which these very rules are read for good: the season, and since when they stand. */
+export const lastingQuery = ({ standing, seasonSlug }: PublicRulebook): string =>
+  standing === undefined
+    ? ''
+    : `?${new URLSearchParams({ season: seasonSlug, on: standing.since })}`;
+
 export const navOf = (slug: string, here: 'rulebooks' | 'board') => [
   { name: 'Notice board', href: `/series/${slug}`, current: here === 'board' },
   { name: 'Rulebooks', href: `/series/${slug}/rulebooks`, current: here === 'rulebooks' },
