@@ -7,6 +7,7 @@ const oldestPostgres = 15;
 const postgresHome = '/usr/lib/postgresql';
 const clusterDefaults = '/etc/postgresql-common/createcluster.conf';
 const chromium = '/usr/bin/chromium';
+const office = '/usr/bin/soffice';
 
 const aptEnvironment = () => ({
   ...process.env,
@@ -100,4 +101,19 @@ export async function ensureChromium() {
   if (chosen !== undefined && chosen !== '') return chosen;
   if (!existsSync(chromium)) await install('chromium', 'Chromium, for the browser tests,');
   return chromium;
+}
+
+/**
+ * Installs LibreOffice Calc when it is missing; that takes minutes, so it is said.
+ *
+ * @param {(line: string) => void} say
+ * @returns {Promise<string>} its path
+ */
+export async function ensureOffice(say) {
+  const chosen = process.env['OFFICE_PATH'];
+  if (chosen !== undefined && chosen !== '') return chosen;
+  if (existsSync(office)) return office;
+  say('  LibreOffice Calc is missing: it is installed now (some 500 MB).');
+  await install('libreoffice-calc', 'LibreOffice Calc, which makes the sheets,');
+  return office;
 }
