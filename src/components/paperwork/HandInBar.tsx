@@ -1,5 +1,4 @@
 import { useEffect, useState } from 'react';
-import { NOT_AN_APPROVAL } from '@/domain/paperwork/state';
 import { SavedLine } from '../look/SavedLine';
 import { clockTime, deviceWord } from './api';
 import type { Saved } from './draft/use-draft';
@@ -12,13 +11,13 @@ interface HandInBarProps {
   readonly ready: boolean;
 }
 
-/** Always in view: what is missing, where the work stands, and the one next step. */
+/** Always in view, in one row on a phone: what is missing, where the work stands, and the one next step. */
 export const HandInBar = ({ paperworkId, saved, missing, ready }: HandInBarProps) => {
   // The device and its clock are known in the browser only.
   const [device, setDevice] = useState<string>();
   useEffect(() => setDevice(deviceWord()), []);
   return (
-    <div className="foot-bar -mx-4 md:-mx-10">
+    <div className="foot-bar foot-bar-low -mx-4 md:-mx-10">
       {ready && saved.state === 'sent' ? (
         <a
           className="btn btn-primary btn-compact"
@@ -31,23 +30,24 @@ export const HandInBar = ({ paperworkId, saved, missing, ready }: HandInBarProps
           Hand in
         </button>
       )}
-      <p className="min-w-0 flex-1 basis-48">
+      <div className="foot-words">
         {missing !== '' && (
-          <>
-            <strong>Not yet:</strong> {missing}.{' '}
-          </>
+          <p>
+            <strong>Not yet:</strong> {missing}.
+          </p>
         )}
         {missing === '' && saved.state !== 'sent' && <strong>Being saved. </strong>}
-        <span className="text-ink-2">{NOT_AN_APPROVAL}</span>
-      </p>
-      {device !== undefined && (
-        <SavedLine
-          state={saved.state}
-          at={clockTime(saved.at)}
-          device={device}
-          {...(saved.words === undefined || saved.state === 'sent' ? {} : { unsent: saved.words })}
-        />
-      )}
+        {device !== undefined && (
+          <SavedLine
+            state={saved.state}
+            at={clockTime(saved.at)}
+            device={device}
+            {...(saved.words === undefined || saved.state === 'sent'
+              ? {}
+              : { unsent: saved.words })}
+          />
+        )}
+      </div>
     </div>
   );
 };

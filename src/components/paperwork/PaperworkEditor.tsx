@@ -1,7 +1,11 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { useDeferredValue, useEffect, useMemo, useState } from 'react';
+import type { Need } from '@/domain/access/paperwork-access';
 import { declare, type PaperworkFile } from '@/domain/paperwork/declare';
 import { declaredFacts } from '@/domain/paperwork/declared-facts';
+import { withReply } from '@/domain/paperwork/draft';
+import { openRemarks } from '@/domain/paperwork/open-remarks';
+import { NOT_AN_APPROVAL } from '@/domain/paperwork/state';
 import {
   isAskedByName,
   isComplete,
@@ -10,8 +14,8 @@ import {
 } from '@/domain/paperwork/still-missing';
 import { withUsualUncertainty } from '@/domain/paperwork/usual-uncertainty';
 import { evaluateRules } from '@/domain/rulebook/evaluate/evaluate-rules';
-import { Caution } from '../look/Caution';
 import { CheckList } from './CheckList';
+import { ChooseFields } from './draft/ChooseFields';
 import { useDraft } from './draft/use-draft';
 import { useFiles } from './files/use-files';
 import { HandInBar } from './HandInBar';
@@ -19,10 +23,12 @@ import { Photographs } from './Photographs';
 import type { PaperworkProps } from './paperwork-props';
 import { Questions } from './Questions';
 import { RemarksOn } from './RemarksOn';
+import { type Replies, RepliesContext } from './replies';
 import { BuildSheet } from './sheet/BuildSheet';
 
 const Editor = (props: PaperworkProps) => {
-  const { paperworkId, rules, form, layout, remarks, carNumber, engineId } = props;
+  const { paperworkId, rules, form, layout, remarks, returned, rights, carNumber, engineId } =
+    props;
   const writing = useDraft(props);
   const { draft, change } = writing;
   const files = useFiles(paperworkId, props.files);
@@ -39,79 +45,105 @@ const Editor = (props: PaperworkProps) => {
     () => evaluateRules(rules, withUsualUncertainty(facts), { carNumber, engineId }),
     [rules, facts, carNumber, engineId],
   );
-  const missing = stillMissing(draft, rules, form, layout, kept);
+  const open = useMemo(
+    () =>
+      returned === undefined
+        ? []
+        : openRemarks(remarks, returned, { ...settled, ...declare(settled, form, layout, kept) }),
+    [remarks, returned, settled, form, layout, kept],
+  );
+  const missing = stillMissing(draft, rules, form, layout, kept, open);
+  const replies = useMemo<Replies>(
+    () => ({
+      given: draft.replies ?? [],
+      open: open.map(({ item }) => item),
+      onReply: (reply) => change((before) => withReply(before, reply)),
+    }),
+    [draft.replies, open, change],
+  );
+  const writes = (right: Need) => rights.includes(right);
   const underWay = files.sending.filter((one) => one.failed === undefined).length;
   const [ready, setReady] = useState(false);
   useEffect(() => setReady(true), []);
   return (
-    <div className="stack-lg" data-ready={ready ? 'yes' : 'no'}>
-      {writing.older !== undefined && (
-        <Caution title="This device holds entries that were never sent" status="too-close">
-          <p>A newer draft came from another device meanwhile. Choose which one goes on.</p>
-          <p className="actions">
-            <button type="button" className="btn" onClick={writing.takeOlder}>
-              Use what is on this device
-            </button>
-            <button type="button" className="btn" onClick={writing.dropOlder}>
-              Go on with the newer one
-            </button>
-          </p>
-        </Caution>
-      )}
-      {writing.conflict && (
-        <Caution title="Changed on another device" status="too-close">
+    <RepliesContext value={replies}>
+      <div className="stack-lg" data-ready={ready ? 'yes' : 'no'}>
+        {writing.overtaken !== undefined && (
+          <ChooseFields two={writing.overtaken} form={form} onSettle={writing.settle} />
+        )}
+        {writing.joined && writing.overtaken === undefined && (
+          <p>What another device wrote meanwhile is in here too.</p>
+        )}
+        {(!writes('answers') || !writes('sheets')) && (
           <p>
-            Your entries are kept on this device.{' '}
-            <a href={`/paddock/paperwork/${paperworkId}`}>Open the newer draft</a>, then choose.
+            {writes('sheets')
+              ? 'You write the measurement sheets here; the rest is for the competitor.'
+              : 'The measurement sheets are for the competitor; you write the rest.'}
           </p>
-        </Caution>
-      )}
-      <RemarksOn remarks={remarks} item="general" />
-      <Questions questions={form.questions} draft={draft} remarks={remarks} onChange={change} />
-      {form.photographs.length > 0 && (
-        <Photographs shots={form.photographs} files={files} remarks={remarks} />
-      )}
-      {form.sheets.map((sheet) => (
-        <BuildSheet
-          key={sheet.subject}
+        )}
+        <fieldset className="contents" disabled={!writes('answers')}>
+          <div className="stack-lg">
+            <RemarksOn remarks={remarks} item="general" />
+            <Questions
+              questions={form.questions}
+              draft={draft}
+              remarks={remarks}
+              onChange={change}
+            />
+            {form.photographs.length > 0 && (
+              <Photographs shots={form.photographs} files={files} remarks={remarks} />
+            )}
+          </div>
+        </fieldset>
+        <fieldset className="contents" disabled={!writes('sheets')}>
+          <div className="stack-lg">
+            {form.sheets.map((sheet) => (
+              <BuildSheet
+                key={sheet.subject}
+                paperworkId={paperworkId}
+                form={sheet}
+                required={isAskedByName(rules, sheet)}
+                layout={layout}
+                draft={draft}
+                files={files}
+                results={results}
+                remarks={remarks}
+                onChange={change}
+              />
+            ))}
+          </div>
+        </fieldset>
+        <fieldset className="contents" disabled={!writes('answers')}>
+          <section aria-labelledby="note">
+            <h2 id="note">For the officials</h2>
+            <div className="field">
+              <label htmlFor="note-text">Anything they should know</label>
+              <textarea
+                id="note-text"
+                maxLength={2000}
+                value={draft.note}
+                onChange={(event) => change((before) => ({ ...before, note: event.target.value }))}
+              />
+            </div>
+          </section>
+        </fieldset>
+        <section aria-labelledby="check">
+          <div className="section-head ruled">
+            <h2 id="check">Check against the rules</h2>
+          </div>
+          <CheckList results={results} rules={rules} facts={facts} />
+          <p className="mt-3">{NOT_AN_APPROVAL}</p>
+        </section>
+        <HandInBar
           paperworkId={paperworkId}
-          form={sheet}
-          required={isAskedByName(rules, sheet)}
-          layout={layout}
-          draft={draft}
-          files={files}
-          results={results}
-          remarks={remarks}
-          onChange={change}
+          saved={writing.saved}
+          missing={[missingWords(missing), underWay > 0 ? `${underWay} being sent` : '']
+            .filter((part) => part !== '')
+            .join(', ')}
+          ready={isComplete(missing) && underWay === 0}
         />
-      ))}
-      <section aria-labelledby="note">
-        <h2 id="note">For the officials</h2>
-        <div className="field">
-          <label htmlFor="note-text">Anything they should know</label>
-          <textarea
-            id="note-text"
-            maxLength={2000}
-            value={draft.note}
-            onChange={(event) => change((before) => ({ ...before, note: event.target.value }))}
-          />
-        </div>
-      </section>
-      <section aria-labelledby="check">
-        <div className="section-head ruled">
-          <h2 id="check">Check against the rules</h2>
-        </div>
-        <CheckList results={results} rules={rules} facts={facts} />
-      </section>
-      <HandInBar
-        paperworkId={paperworkId}
-        saved={writing.saved}
-        missing={[missingWords(missing), underWay > 0 ? `${underWay} being sent` : '']
-          .filter((part) => part !== '')
-          .join(', ')}
-        ready={isComplete(missing) && underWay === 0}
-      />
-    </div>
+      </div>
+    </RepliesContext>
   );
 };
 

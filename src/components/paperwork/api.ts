@@ -27,6 +27,15 @@ export const post = async <T>(path: string, body: unknown): Promise<T> => {
   throw new Refusal(type.split('/').at(-1) ?? '', detail, response.status);
 };
 
+/** Reads JSON; throws like `post`. */
+export const get = async <T>(path: string): Promise<T> => {
+  const response = await fetch(path, { headers: { accept: 'application/json' } });
+  const answer: unknown = await response.json().catch(() => ({}));
+  if (response.ok) return answer as T;
+  const { type = '', detail = 'The server could not do this. Try again.' } = answer as Problem;
+  throw new Refusal(type.split('/').at(-1) ?? '', detail, response.status);
+};
+
 /** UUID version 7 (RFC 9562), so that acts sort by time. */
 export const newId = (): string => {
   const bytes = crypto.getRandomValues(new Uint8Array(16));

@@ -1,3 +1,5 @@
+import type { Need } from '@/domain/access/paperwork-access';
+import type { PaperworkDocument } from '@/domain/paperwork/document';
 import type { PaperworkDraft } from '@/domain/paperwork/draft';
 import type { ItemRemark } from '@/domain/paperwork/state';
 import type { PaperworkForm } from '@/domain/rulebook/form/form';
@@ -35,4 +37,8 @@ export interface PaperworkProps {
   readonly files: readonly ShownFile[];
   /** Remarks on the version that was returned. */
   readonly remarks: readonly ItemRemark[];
+  /** That version, to know which remarks were followed. */
+  readonly returned?: PaperworkDocument | undefined;
+  /** What this person may write and do. */
+  readonly rights: readonly Need[];
 }

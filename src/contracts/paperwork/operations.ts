@@ -5,6 +5,7 @@ import {
   decideResponse,
   handInRequest,
   handInResponse,
+  openDraftResponse,
   saveDraftRequest,
   saveDraftResponse,
 } from './paperwork';
@@ -17,6 +18,13 @@ export const operations: readonly Operation[] = [
     access: 'signed-in',
     body: saveDraftRequest,
     answer: saveDraftResponse,
+  },
+  {
+    method: 'get',
+    path: '/api/paperwork/{paperwork}/draft',
+    summary: 'The draft as the server has it, for a device that was overtaken by another',
+    access: 'signed-in',
+    answer: openDraftResponse,
   },
   {
     method: 'get',

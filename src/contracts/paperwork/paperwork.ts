@@ -7,6 +7,12 @@ const version = z.int().check(z.gte(1));
 export const saveDraftRequest = z.strictObject({ act, version, draft: paperworkDraft });
 export const saveDraftResponse = z.strictObject({ version, savedAt: z.string() });
 
+export const openDraftResponse = z.strictObject({
+  version,
+  draft: paperworkDraft,
+  savedAt: z.string(),
+});
+
 export const handInRequest = z.strictObject({ act, version });
 export const handInResponse = z.strictObject({
   number: z.int(),
@@ -62,3 +68,4 @@ export const checkResponse = z.strictObject({
 export type SaveDraftResponse = z.infer<typeof saveDraftResponse>;
 export type HandInResponse = z.infer<typeof handInResponse>;
 export type CheckResponse = z.infer<typeof checkResponse>;
+export type OpenDraftResponse = z.infer<typeof openDraftResponse>;

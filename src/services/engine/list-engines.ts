@@ -1,21 +1,7 @@
 import type { Actor } from '@/domain/access/permission';
-import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
+import type { OwnEngine } from '@/domain/paddock/engine-record';
 import { isoOf } from '../paperwork/read/read-row';
 import type { Ports } from '../ports';
-
-export interface OwnEngine {
-  readonly id: string;
-  readonly reference: string;
-  readonly layout: BoreLayout;
-  readonly blockCasting: string;
-  readonly headCastings: string;
-  readonly serial: string;
-  readonly isOwn: boolean;
-  readonly owner: string;
-  /** Who has it on loan, and until when: somebody else, or the actor. */
-  readonly lentTo: string | null;
-  readonly heldUntil: string | null;
-}
 
 /** The actor's own engines, lent out or not, and those lent to them, by name. */
 export const listEngines = async (

@@ -8,6 +8,8 @@ export interface PersonListed {
   readonly name: string;
   readonly email: string;
   readonly roles: readonly Role[];
+  /** Who signs for them; nothing for those of age. */
+  readonly guardian: string | null;
 }
 
 export interface InvitationListed {
@@ -30,10 +32,12 @@ export const listPeople = async (
   if (!may(actor, 'people.invite', seriesId)) return fail(absent());
   const people = await deps.db.execute<PersonListed[]>(
     `select p.id as "personId", p.name, p.email,
-            array_agg(m.role order by m.role) as roles
+            array_agg(m.role order by m.role) as roles, w.guardian_name as guardian
      from public.membership m join public.person p on p.id = m.person_id
+     left join public.guardianship w on w.series_id = m.series_id and w.minor_id = p.id
+       and w.ended_at is null
      where m.series_id = ? and m.ended_at is null
-     group by p.id order by p.name`,
+     group by p.id, w.guardian_name order by p.name`,
     [seriesId],
   );
   const invited = await deps.db.execute<{ email: string; role: Role; expires_at: Date }[]>(

@@ -86,7 +86,7 @@ describe('a competitor under age', () => {
     });
     const token = await tokenMailedTo(world, GUARDIAN);
     const seen = must(await findGuardianRequest(paddock.ports(), token));
-    expect([seen.guardian, seen.row.id, seen.row.version]).toEqual([
+    expect([seen.guardianName, seen.row.id, seen.row.version]).toEqual([
       'Maud Lindqvist',
       paperworkId,
       2,

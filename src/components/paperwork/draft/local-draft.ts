@@ -7,6 +7,8 @@ export interface LocalDraft {
   readonly draft: PaperworkDraft;
   /** The server's version it was written on. */
   readonly version: number;
+  /** The server's draft at that version; drafts kept by older pages have none. */
+  readonly base?: PaperworkDraft | undefined;
   /** Whether the server has acknowledged it. */
   readonly sent: boolean;
   readonly at: string;

@@ -1,27 +1,8 @@
 import { type Actor, seriesWhere } from '@/domain/access/permission';
+import type { SwapListed } from '@/domain/paddock/paddock-rows';
 import { openTo } from '../../paperwork/own-paperwork';
 import { isoOf } from '../../paperwork/read/read-row';
 import type { Ports } from '../../ports';
-
-export interface SwapListed {
-  readonly id: string;
-  readonly eventName: string;
-  readonly carNumber: string;
-  readonly competitorName: string;
-  readonly from: string;
-  readonly to: string;
-  readonly seal: string;
-  readonly paperworkId: string;
-  /** `not-in-yet` until its bytes are here; `another` where they are not those that were announced. */
-  readonly photograph: 'kept' | 'not-in-yet' | 'another';
-  readonly photographId: string;
-  readonly paperwork: string;
-  /** Whether the rest has been handed in. */
-  readonly handedIn: boolean;
-  readonly dueAt: string;
-  readonly swappedAt: string;
-  readonly zone: string;
-}
 
 const SELECT = `
 select w.id, v.name as "eventName", w.car_number as "carNumber", o.name as "competitorName",

@@ -1,34 +1,10 @@
 import { openings } from '@/domain/access/paperwork-access';
 import type { Actor } from '@/domain/access/permission';
-import type { PaperworkState } from '@/domain/paperwork/state';
+import type { OwnPaperworkRow, OwnVerdictRow } from '@/domain/paddock/paddock-rows';
 import type { Ports } from '../../ports';
 import { verdictsOpenTo } from '../../verdict/verdicts-open-to';
 import { openTo } from '../own-paperwork';
 import { isoOf } from './read-row';
-
-export interface OwnPaperworkRow {
-  readonly id: string;
-  readonly competitorId: string;
-  /** Whose it is: the actor's own, or a customer's. */
-  readonly competitorName: string;
-  readonly seriesId: string;
-  readonly engineId: string;
-  readonly classId: string;
-  readonly seriesName: string;
-  readonly className: string;
-  readonly seasonName: string;
-  readonly carNumber: string;
-  readonly reference: string;
-  readonly state: PaperworkState;
-  readonly versions: number;
-  readonly updatedAt: string;
-  readonly zone: string;
-  /** Remarks on the version last decided. */
-  readonly remarks: number;
-  /** The next event of the season that has not begun; nothing while none is set. */
-  readonly dueAt: string | null;
-  readonly dueEvent: string | null;
-}
 
 /** All paperwork of the actor's own and what others open to them, what needs doing first. */
 export const listOwnPaperwork = async (
@@ -62,21 +38,6 @@ export const listOwnPaperwork = async (
     [deps.clock.now(), ...open.parameters],
   );
 };
-
-export interface OwnVerdictRow {
-  readonly number: string;
-  readonly seriesSlug: string;
-  readonly competitorId: string;
-  /** Nothing where no accepted paperwork stood behind the inspection. */
-  readonly engineId: string | null;
-  readonly eventId: string;
-  readonly carNumber: string;
-  readonly eventName: string;
-  readonly decision: 'breach' | 'no-breach';
-  readonly publishedAt: string;
-  readonly provisionalUntil: string;
-  readonly zone: string;
-}
 
 /** Verdicts published on the actor's own entries, newest first. */
 export const listOwnVerdicts = async (

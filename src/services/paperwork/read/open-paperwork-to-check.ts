@@ -4,8 +4,9 @@ import { absent, type Failure } from '@/domain/failure';
 import type { PaperworkDocument } from '@/domain/paperwork/document';
 import { fail, ok, type Result } from '@/domain/result';
 import type { Ports } from '../../ports';
+import { findBefore } from './find-before';
 import { findDecidableRow, type OpenedVersion, openRow } from './open-version';
-import { getVersionDocument } from './version-document';
+import type { PaperworkRow } from './read-row';
 
 /** A file whose bytes were handed in before, with another engine. */
 export interface SeenBefore {
@@ -15,11 +16,21 @@ export interface SeenBefore {
   readonly reference: string;
 }
 
+export interface GuardianSigned {
+  readonly guardian: string;
+  readonly method: 'fresh-sign-in' | 'e-mailed-link';
+}
+
 export interface PaperworkToCheck extends OpenedVersion {
   /** The version before this one, of this paperwork or else of this engine in the series. */
   readonly previous: PaperworkDocument | undefined;
-  readonly previousNumber: number | undefined;
+  /** `version 1`, or where it stands. */
+  readonly previousWords: string | undefined;
+  /** Other cars that this engine is declared for in the series, whoever declared it. */
+  readonly carsOfEngine: readonly string[];
   readonly seenBefore: readonly SeenBefore[];
+  /** Who signed this version for a competitor under age. */
+  readonly signature: GuardianSigned | undefined;
 }
 
 const findSeenBefore = (
@@ -39,6 +50,33 @@ const findSeenBefore = (
     [seriesId, paperworkId, engineId],
   );
 
+const findSignature = async (
+  em: EntityManager,
+  { seriesId, id }: PaperworkRow,
+  number: number,
+): Promise<GuardianSigned | undefined> => {
+  const [row] = await em.execute<GuardianSigned[]>(
+    `select p.name as guardian, g.method from record.guardian_signature g
+     join public.person p on p.id = g.guardian_id
+     where g.series_id = ? and g.paperwork_id = ? and g.number = ?`,
+    [seriesId, id, number],
+  );
+  return row;
+};
+
+const findOtherCars = async (
+  em: EntityManager,
+  { seriesId, id, engineId }: PaperworkRow,
+): Promise<readonly string[]> => {
+  const rows = await em.execute<{ car: string }[]>(
+    `select distinct car_number as car from public.paperwork
+     where series_id = ? and engine_id = ? and id <> ? and versions > 0 and state <> 'withdrawn'
+     order by car_number`,
+    [seriesId, engineId, id],
+  );
+  return rows.map(({ car }) => car);
+};
+
 /** The version that waits, or one asked for by number, beside the one before it. */
 export const openPaperworkToCheck = async (
   deps: Pick<Ports, 'db'>,
@@ -51,14 +89,13 @@ export const openPaperworkToCheck = async (
   const opened = await openRow(deps.db, row, number);
   if (opened === undefined) return fail(absent());
   const { seriesId, id, engineId } = row;
-  const previousNumber = number > 1 ? number - 1 : undefined;
+  const before = await findBefore(deps.db, row, number - 1);
   return ok({
     ...opened,
-    previousNumber,
-    previous:
-      previousNumber === undefined
-        ? undefined
-        : await getVersionDocument(deps.db, seriesId, id, previousNumber),
+    previousWords: before?.words,
+    previous: before?.document,
+    carsOfEngine: await findOtherCars(deps.db, row),
+    signature: await findSignature(deps.db, row, number),
     seenBefore: await findSeenBefore(deps.db, seriesId, id, engineId),
   });
 };

@@ -54,7 +54,7 @@ const guardianActor = (
 });
 
 export interface GuardianAsked extends OpenedPaperwork {
-  readonly guardian: string;
+  readonly guardianName: string;
 }
 
 /** The paperwork that a guardian is asked to sign, for whoever holds the link. */
@@ -67,7 +67,7 @@ export const findGuardianRequest = async (
   const { guardianName: name, id } = asked.guardianship;
   const reader = guardianActor(asked, { id, name }, deps.clock.now());
   const opened = await openPaperwork(deps, reader, asked.request.paperworkId);
-  return opened.ok ? ok({ ...opened.value, guardian: name }) : opened;
+  return opened.ok ? ok({ ...opened.value, guardianName: name }) : opened;
 };
 
 /** Signs and hands in by the link that was sent to the guardian's address; it works once. */
