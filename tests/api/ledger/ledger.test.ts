@@ -105,7 +105,7 @@ describe('the ledger over HTTP, checked with the verifier of a stranger', () => 
     }
     const first = await json<Proof>(`${SLUG}/inclusion?index=0&size=${sizeOf(older)}`);
     expect(first.checkpoint).toBe(older);
-    expect(checkLine(first, key).kind).toBe('key-published');
+    expect(checkLine(first, key).kind).toBe('cars-selected');
   });
 
   it('serves lines in order with what everybody may see, and nothing else of what they commit to', async () => {

@@ -188,9 +188,52 @@ export const signReport = async (inspector: Visitor, inspectionId: string): Prom
   );
   await look(inspector, 'findings');
   await signAgain(inspector);
+  await drawStrokes(inspector);
   await page.getByRole('button', { name: 'Sign the report and close' }).click();
   await page.getByText(/^Revision 1, signed/).waitFor();
+  await page
+    .getByRole('img', { name: `Pen strokes of ${INSPECTOR}, beside the signature` })
+    .waitFor();
   await look(inspector, 'signed');
+};
+
+/** Draws on the pad, clears it, and draws two strokes again. */
+const drawStrokes = async (inspector: Visitor): Promise<void> => {
+  const { page } = inspector;
+  const pad = page.getByRole('img', { name: /^Signature pad/ });
+  await pad.scrollIntoViewIfNeeded();
+  const box = await pad.boundingBox();
+  if (box === null) throw new Error('There is no pad to sign on.');
+  const stroke = async (points: readonly (readonly [number, number])[]) => {
+    for (const [at, [x, y]] of points.entries()) {
+      await page.mouse.move(box.x + box.width * x, box.y + box.height * y);
+      if (at === 0) await page.mouse.down();
+    }
+    await page.mouse.up();
+  };
+  await stroke([
+    [0.2, 0.2],
+    [0.8, 0.2],
+  ]);
+  await page.getByRole('img', { name: 'Signature pad, 1 stroke drawn' }).waitFor();
+  await page.getByRole('button', { name: 'Clear the pad' }).click();
+  await page.getByRole('img', { name: 'Signature pad, empty' }).waitFor();
+  await stroke([
+    [0.1, 0.7],
+    [0.15, 0.3],
+    [0.2, 0.7],
+    [0.25, 0.3],
+    [0.3, 0.7],
+    [0.4, 0.5],
+  ]);
+  await stroke([
+    [0.5, 0.6],
+    [0.55, 0.4],
+    [0.6, 0.6],
+    [0.75, 0.55],
+  ]);
+  await page.getByRole('img', { name: 'Signature pad, 2 strokes drawn' }).waitFor();
+  await look(inspector, 'strokes');
 };
 
 const signAgain = async ({ page }: Visitor): Promise<void> => {
