@@ -30,7 +30,14 @@ const reading = z.strictObject({
   depth: line,
   axis: line,
   value: written,
-  source: z.optional(z.strictObject({ fileId: z.uuid(), file: z.string(), cell: line })),
+  source: z.optional(
+    z.strictObject({
+      fileId: z.uuid(),
+      file: z.string(),
+      cell: line,
+      held: z.optional(z.string()),
+    }),
+  ),
 });
 
 const shape = z.strictObject({

@@ -1,4 +1,6 @@
 import * as z from 'zod/mini';
+import { findUnit } from '@/domain/quantity/find-unit';
+import { getQuantityEntry, type QuantityName } from '@/domain/rulebook/quantity-catalogue';
 import { quantityName } from './document';
 
 const line = z.string().check(z.maxLength(200, 'At most 200 characters.'));
@@ -11,27 +13,43 @@ const place = {
   axis: line,
 };
 
-const cell = z.strictObject({
-  ...place,
-  typed,
-  unit: line,
-  source: z.optional(z.strictObject({ fileId: z.uuid(), file: line, cell: line })),
-  confirmed: z.optional(z.boolean()),
+const source = z.strictObject({
+  fileId: z.uuid(),
+  file: line,
+  cell: line,
+  held: z.optional(typed),
 });
+
+/** A unit that is none of the quantity's would make nonsense of the number. */
+const fits = ({ quantity, unit }: { quantity: QuantityName; unit: string }): boolean =>
+  findUnit(getQuantityEntry(quantity).dimension, unit) !== undefined;
+const UNFIT = { error: 'This is no unit of the quantity.', path: ['unit'] };
+
+const cell = z
+  .strictObject({
+    ...place,
+    typed,
+    unit: line,
+    source: z.optional(source),
+    confirmed: z.optional(z.boolean()),
+  })
+  .check(z.refine(fits, UNFIT));
 
 export const columnMeaning = z.discriminatedUnion('kind', [
   z.strictObject({ kind: z.literal('position') }),
   z.strictObject({ kind: z.literal('cylinder') }),
   z.strictObject({ kind: z.literal('valve') }),
   z.strictObject({ kind: z.literal('not-taken') }),
-  z.strictObject({
-    kind: z.literal('reading'),
-    quantity: quantityName,
-    unit: line,
-    depth: line,
-    axis: line,
-    valve: z.optional(z.enum(['intake', 'exhaust'])),
-  }),
+  z
+    .strictObject({
+      kind: z.literal('reading'),
+      quantity: quantityName,
+      unit: line,
+      depth: line,
+      axis: line,
+      valve: z.optional(z.enum(['intake', 'exhaust'])),
+    })
+    .check(z.refine(fits, UNFIT)),
 ]);
 
 export const mapping = z.record(line, columnMeaning);

@@ -25,6 +25,8 @@ export interface CellSource {
   readonly fileId: string;
   readonly file: string;
   readonly cell: string;
+  /** What stands in the cell, where the person corrected it by hand. */
+  readonly held?: string | undefined;
 }
 
 /** One number of a measurement sheet. */

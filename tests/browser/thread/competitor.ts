@@ -80,7 +80,7 @@ export const addPhotographs = async (
 export const addSheet = async (competitor: Visitor, sheet: Upload): Promise<void> => {
   const { page } = competitor;
   await choose(competitor, /^Add a sheet ?: Lifter sheet/, [sheet]);
-  await page.getByRole('button', { name: 'Take these 48 values over' }).click();
+  await page.getByRole('button', { name: 'Confirm these 48 values' }).click();
   const bad = page.getByText('5 intake, lifter: “0.84.41” is no number. Kept as written.');
   await bad.waitFor();
   expect(await page.locator('main').textContent()).toContain(`${sheet.name}, cell B`);
@@ -89,7 +89,7 @@ export const addSheet = async (competitor: Visitor, sheet: Upload): Promise<void
     .getByRole('region', { name: 'Lifter sheet, one row per bore' })
     .getByText('Type or see all values')
     .click();
-  const table = page.getByRole('table', { name: 'Lifter sheet, one row per bore' });
+  const table = page.getByRole('grid', { name: 'Lifter sheet, one row per bore', exact: true });
   expect(await table.getByRole('row').count()).toBe(17);
   await page.getByRole('button', { name: 'Correct 5 intake, lifter' }).click();
   await page.getByLabel('5 intake, lifter, in in').fill('0.8424');
@@ -100,7 +100,7 @@ export const addSheet = async (competitor: Visitor, sheet: Upload): Promise<void
 export const addCamCard = async (competitor: Visitor, card: Upload): Promise<void> => {
   const { page } = competitor;
   await choose(competitor, /^Add a sheet ?: Cam card/, [card]);
-  await page.getByRole('button', { name: 'Take these 16 values over' }).click();
+  await page.getByRole('button', { name: 'Confirm these 16 values' }).click();
 };
 
 /** Reads the check against every clause, and hands in. Gives the hash on the receipt. */

@@ -13,11 +13,13 @@ import { FilePick } from '../files/FilePick';
 import { FileRow } from '../files/FileRow';
 import { SendingRow } from '../files/SendingRow';
 import type { Files } from '../files/use-files';
+import type { ShownFile } from '../paperwork-props';
 import { RemarksOn } from '../RemarksOn';
 import { CellsToCorrect } from './CellsToCorrect';
+import { ValuesGrid } from './grid/ValuesGrid';
+import { SheetImport } from './import/SheetImport';
 import { boreStates } from './marks';
-import { SheetImport } from './SheetImport';
-import { ValuesTable } from './ValuesTable';
+import { TemplateLinks } from './TemplateLinks';
 
 const SHEETS = {
   'text/csv': ['.csv', '.txt'],
@@ -54,15 +56,16 @@ export const BuildSheet = (props: BuildSheetProps) => {
   const own = files.files.filter((file) => file.item === form.subject);
   const sending = files.sending.filter((one) => one.item === form.subject);
   const readable = own.filter((file) => file.state === 'kept' && file.type !== 'application/pdf');
-  const [shown, setShown] = useState<readonly string[]>([]);
+  // Confirmed files that are looked at once more.
+  const [again, setAgain] = useState<readonly string[]>([]);
   const take = (cells: readonly SheetCell[]) =>
     onChange((before) =>
       withCells(before, form.subject, merged(cellsOf(before, form.subject), cells)),
     );
   const byBore = form.per === 'bore' || form.per === 'lifter';
-  const fresh = readable.filter(
-    (file) => !judged.some(({ cell }) => cell.source?.fileId === file.fileId),
-  );
+  const fromFile = (file: ShownFile): number =>
+    judged.filter(({ cell }) => cell.source?.fileId === file.fileId).length;
+  const fresh = readable.filter((file) => fromFile(file) === 0);
   return (
     <section aria-labelledby={`sheet-${form.subject}`} id={`sheet-section-${form.subject}`}>
       <div className="section-head ruled">
@@ -82,39 +85,41 @@ export const BuildSheet = (props: BuildSheetProps) => {
       >
         <p className="min-w-0 flex-1 basis-36 py-2 text-ink-2">
           CSV or XLSX as you have it.{' '}
-          {form.columns.length > 0 && (
-            <>
-              To start from:{' '}
-              <a href={`/api/paperwork/${paperworkId}/template/${form.subject}`}>
-                template in inches
-              </a>
-              ,{' '}
-              <a href={`/api/paperwork/${paperworkId}/template/${form.subject}?units=metric`}>
-                in millimetres
-              </a>
-              .
-            </>
-          )}
+          {form.columns.length > 0 && <TemplateLinks paperworkId={paperworkId} form={form} />}
         </p>
       </FilePick>
       {own.map((file) => (
-        <FileRow key={file.fileId} file={file} onRemove={() => void files.remove(file.fileId)} />
+        <div key={file.fileId}>
+          <FileRow file={file} onRemove={() => void files.remove(file.fileId)} />
+          {readable.includes(file) && !fresh.includes(file) && !again.includes(file.fileId) && (
+            <p className="pb-2">
+              {fromFile(file)} of its values count.{' '}
+              <button
+                type="button"
+                className="btn-link"
+                onClick={() => setAgain([...again, file.fileId])}
+              >
+                Read {file.name} again
+              </button>
+            </p>
+          )}
+        </div>
       ))}
       {sending.map((one) => (
         <SendingRow key={one.fileId} one={one} files={files} />
       ))}
       {form.columns.length > 0 &&
         readable
-          .filter((file) => fresh.includes(file) || shown.includes(file.fileId))
+          .filter((file) => fresh.includes(file) || again.includes(file.fileId))
           .map((file) => (
             <SheetImport
               key={file.fileId}
               file={file}
               form={form}
-              mapping={draft.mapping}
-              onMapping={(mapping) => onChange((before) => ({ ...before, mapping }))}
-              onTake={(cells) => {
-                setShown([...shown, file.fileId]);
+              layout={layout}
+              held={cellsOf(draft, form.subject)}
+              onConfirm={(cells) => {
+                setAgain(again.filter((fileId) => fileId !== file.fileId));
                 take(cells);
               }}
             />
@@ -133,10 +138,11 @@ export const BuildSheet = (props: BuildSheetProps) => {
           <summary className="min-h-12 cursor-pointer font-semibold">
             Type or see all values
           </summary>
-          <ValuesTable
+          <ValuesGrid
             form={form}
             layout={layout}
             judged={judged}
+            label={form.title}
             onChange={(cell) => take([cell])}
           />
         </details>

@@ -1,6 +1,11 @@
 import { useState } from 'react';
 import { cellWords, type JudgedCell } from '@/domain/paperwork/sheet/judge-cells';
-import { placeKey, type SheetCell } from '@/domain/paperwork/sheet/sheet-cell';
+import {
+  placeKey,
+  retyped,
+  type SheetCell,
+  sourceWords,
+} from '@/domain/paperwork/sheet/sheet-cell';
 import { Mark } from '../../look/Mark';
 
 interface CellsToCorrectProps {
@@ -27,7 +32,7 @@ const Editor = ({
       className="actions w-full pb-2"
       onSubmit={(event) => {
         event.preventDefault();
-        done({ ...judged.cell, typed, confirmed: undefined });
+        done(retyped(judged.cell, typed));
       }}
     >
       <input
@@ -69,11 +74,11 @@ export const CellsToCorrect = ({ cells, onChange }: CellsToCorrectProps) => {
           <li className="flex flex-wrap items-center gap-3 border-b border-hair py-2" key={key}>
             <Mark status="unreadable" />
             <span className="min-w-0 flex-1 basis-36">
-              {judged.detail}
+              {judged.detail} {judged.remedy}
               {source !== undefined && (
                 <span className="text-ink-2">
                   {' '}
-                  {source.file}, cell {source.cell}.
+                  In {sourceWords(source)} (cell {source.cell}).
                 </span>
               )}
             </span>

@@ -32,3 +32,18 @@ export const placeKey = (place: CellPlace): string =>
   [place.position, place.quantity, place.depth, place.axis].join('|');
 
 export const samePlace = (a: CellPlace, b: CellPlace): boolean => placeKey(a) === placeKey(b);
+
+/** The cell as somebody typed it anew: what a file held there stays to be seen, and they stand by nothing yet. */
+export const retyped = (cell: SheetCell, typed: string): SheetCell => {
+  const { source, confirmed: _confirmed, ...rest } = cell;
+  if (source === undefined) return { ...rest, typed };
+  const { held = cell.typed, ...place } = source;
+  return { ...rest, typed, source: typed === held ? place : { ...place, held } };
+};
+
+/** `row 7, column D of lifters.csv`; a workbook of several sheets names the one. */
+export const sourceWords = ({ file, cell }: CellSource): string => {
+  const [, sheet, column = '', row = ''] = /^(?:(.*)!)?([A-Z]+)(\d+)$/.exec(cell) ?? [];
+  const place = `row ${row}, column ${column}`;
+  return sheet === undefined ? `${place} of ${file}` : `${place} of “${sheet}” in ${file}`;
+};

@@ -1,0 +1,124 @@
+import type { ReadSheetAnswer } from '@/contracts/paperwork/sheet';
+import {
+  type ColumnMeaning,
+  columnName,
+  isUnexplained,
+} from '@/domain/paperwork/sheet/column-meaning';
+import type { SheetForm } from '@/domain/rulebook/form/form';
+import {
+  type MeaningOption,
+  meaningFor,
+  meaningOptions,
+  optionOf,
+  SPOTS,
+  spotOf,
+  unitsOf,
+  withSpot,
+  withUnit,
+} from './meanings';
+
+interface ColumnsHeldProps {
+  readonly sheet: Pick<ReadSheetAnswer, 'columns' | 'turned'>;
+  readonly form: SheetForm;
+  readonly onChoose: (key: string, meaning: ColumnMeaning) => void;
+}
+
+interface ChoiceProps {
+  readonly label: string;
+  readonly value: string;
+  readonly options: readonly MeaningOption[];
+  readonly onChange: (value: string) => void;
+}
+
+const Choice = ({ label, value, options, onChange }: ChoiceProps) => (
+  <select
+    className="input"
+    aria-label={label}
+    value={value}
+    onChange={(event) => onChange(event.target.value)}
+  >
+    {options.map((option) => (
+      <option key={option.value} value={option.value}>
+        {option.words}
+      </option>
+    ))}
+  </select>
+);
+
+/** What each column of the file holds: found by its heading, or said once by the person and remembered. */
+export const ColumnsHeld = ({ sheet, form, onChoose }: ColumnsHeldProps) => {
+  const { columns, turned } = sheet;
+  const open = columns.filter(isUnexplained);
+  const options = meaningOptions(form);
+  const line = turned ? 'Row' : 'Column';
+  const nameOf = (at: number) => (turned ? String(at + 1) : columnName(at));
+  return (
+    <details className="my-3" open={open.length > 0}>
+      <summary className="min-h-12 cursor-pointer font-semibold">
+        What the {turned ? 'rows' : 'columns'} hold:{' '}
+        {open.length === 0 ? 'all known' : `${open.length} to say`}
+      </summary>
+      <p>What you say is remembered: the next sheet of yours with these headings reads itself.</p>
+      <table className="table-stack">
+        <thead>
+          <tr>
+            <th scope="col">{line}</th>
+            <th scope="col">First values</th>
+            <th scope="col">Holds</th>
+            <th scope="col">Unit</th>
+            <th scope="col">Where</th>
+          </tr>
+        </thead>
+        <tbody>
+          {columns
+            .filter(({ samples }) => samples.length > 0)
+            .map((column) => {
+              const { at, key, header, meaning, samples } = column;
+              const name = header === '' ? `${line} ${nameOf(at)}` : header;
+              const reading = meaning.kind === 'reading' ? meaning : undefined;
+              return (
+                <tr key={key} className={isUnexplained(column) ? 'row-close' : undefined}>
+                  <th scope="row" data-label={`${line} ${nameOf(at)}`}>
+                    {name}
+                  </th>
+                  <td data-label="First values">{samples.join(' · ')}</td>
+                  <td data-label="Holds">
+                    <Choice
+                      label={`${name} holds`}
+                      value={optionOf(meaning)}
+                      options={options}
+                      onChange={(value) => onChoose(key, meaningFor(value, form))}
+                    />
+                  </td>
+                  <td data-label="Unit">
+                    {reading && (
+                      <Choice
+                        label={`Unit of ${name}`}
+                        value={reading.unit}
+                        options={unitsOf(reading).map((unit) => ({ value: unit, words: unit }))}
+                        onChange={(unit) => onChoose(key, withUnit(reading, unit))}
+                      />
+                    )}
+                  </td>
+                  <td data-label="Where">
+                    {reading && (
+                      <Choice
+                        label={`Where ${name} was measured`}
+                        value={
+                          SPOTS.some(({ value }) => value === spotOf(reading))
+                            ? spotOf(reading)
+                            : ''
+                        }
+                        options={SPOTS}
+                        onChange={(spot) => onChoose(key, withSpot(reading, spot))}
+                      />
+                    )}
+                  </td>
+                </tr>
+              );
+            })}
+        </tbody>
+      </table>
+    </details>
+  );
+};
