@@ -6,6 +6,7 @@ import { findRules } from '@/services/rulebook/find-rules';
 import { type Oddities, trueEngine } from './engine';
 import { COMPETITORS, type DemoCompetitor, EVERYBODY, INSPECTOR, SECOND_INSPECTOR } from './people';
 import { openStage, type Stage } from './stage';
+import { writeChecks, writeCustody } from './write-custody';
 import { writeEvents, writeGauges } from './write-events';
 import { type DemoInspection, writeInspection } from './write-inspections';
 import { type PaperworkEnd, writePaperwork } from './write-paperwork';
@@ -98,6 +99,8 @@ export const seed = async (app: Composition) => {
   const engines = await writeAllPaperwork(stage, seriesId, classes);
   const picked = await writeEvents(stage, seriesId, classes);
   const inspectionOf = new Map<string, string>();
+  const first = picked.find(({ competitor }) => competitor.carNumber === '12J');
+  if (first !== undefined) await writeChecks(stage, seriesId, gauges, first.inspectionId);
   for (const { competitor, inspectionId } of picked) {
     const { carNumber, person } = competitor;
     inspectionOf.set(carNumber, inspectionId);
@@ -115,6 +118,7 @@ export const seed = async (app: Composition) => {
       witness: person.name,
     });
   }
+  if (first !== undefined) await writeCustody(stage, first.inspectionId);
   stage.clock.set(new Date(stage.lastEvent.getTime() + 15 * 3_600_000));
   await writeVerdict(stage, seriesId, inspectionOf.get('408') ?? '', {
     decision: 'no-breach',

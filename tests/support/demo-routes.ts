@@ -51,6 +51,8 @@ export async function demoParameters(client: pg.Client): Promise<ReadonlyMap<str
     '[class]': raceClass,
     '[draft]': await one('select id from public.rulebook_draft where class_id = $1', [raceClass]),
     '[gauge]': await one("select id from public.gauge where code = 'MIC-014'"),
+    '[part]': await one('select id from record.held_part where inspection_id = $1', [inspection]),
+    '/crib/[series]/[gauge]/faults/[fault]': await one('select id from record.gauge_fault'),
     '[slug]': 'corran-valley',
     '[number]': '1',
   };

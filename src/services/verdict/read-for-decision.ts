@@ -20,6 +20,8 @@ export interface DecisionSheet {
   readonly penalties: readonly (PenaltyRow & { readonly nextStep: number })[];
   /** Parts held from this engine, each with its chain: a gap warns, and blocks nothing. */
   readonly heldParts: readonly PartKept[];
+  /** Published on an earlier revision of the report than the one that is decided on now. */
+  readonly earlierNotice: string | null;
   readonly draft: { readonly version: number; readonly content: DecisionDraft } | null;
 }
 
@@ -47,6 +49,15 @@ const previousSeason = async (deps: Pick<Ports, 'db'>, { head }: DecisionCase) =
   return row?.name;
 };
 
+const findEarlierNotice = async (deps: Pick<Ports, 'db'>, { head, report }: DecisionCase) => {
+  const [row] = await deps.db.execute<{ number: string }[]>(
+    `select number from record.verdict where series_id = ? and inspection_id = ?
+       and report_revision < ? order by report_revision desc limit 1`,
+    [head.seriesId, head.inspectionId, report?.revision ?? 0],
+  );
+  return row?.number ?? null;
+};
+
 /** Findings beside the clauses as they were in force, with what has been written down so far. */
 export const readForDecision = async (
   deps: Pick<Ports, 'db'>,
@@ -71,6 +82,7 @@ export const readForDecision = async (
       nextStep: Math.min(penaltyFor(row, earlier, season).step, row.penalties.length),
     })),
     heldParts: await readPartsOf(deps.db, seriesId, inspectionId),
+    earlierNotice: await findEarlierNotice(deps, found),
     draft: draft && {
       version: draft.version,
       content: draft.content as unknown as DecisionDraft,

@@ -1,8 +1,7 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import type { RemarkRow } from '@/domain/inspection/capture/rows';
-import { inTakingOrder } from '@/domain/inspection/capture/rows';
 import type { Revision } from '@/domain/inspection/finding';
-import { reportDocument, type Witness } from '@/domain/inspection/report';
+import { reportDocument } from '@/domain/inspection/report';
+import { witnessFrom } from '@/domain/inspection/witness/witness-from';
 import { toHex } from '@/domain/ledger/bytes';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { toDocument } from '@/domain/rulebook/document';
@@ -10,19 +9,8 @@ import { assessFile } from '../read/assess-file';
 import { compareWithTablet } from '../read/compare-with-tablet';
 import type { InspectionFile } from '../read/inspection-file';
 
-/** The last witness counts; nobody who stood by is told as such. */
-export const witnessOf = (remarks: readonly RemarkRow[]): Witness => {
-  const last = inTakingOrder(remarks).findLast(
-    (row) => row.kind === 'witness' && row.standing === 'accepted',
-  );
-  if (last === undefined) return { name: '', role: '', outcome: 'absent' };
-  return {
-    name: last.subject,
-    role: 'competitor’s representative',
-    outcome: last.answer.value === 'signed' ? 'signed' : 'refused',
-    ...(last.reason === '' ? {} : { remark: last.reason }),
-  };
-};
+/** What a report says of its witness. */
+export const witnessOf = witnessFrom;
 
 const photographsOf = async (em: EntityManager, { inspection, rows }: InspectionFile) => {
   const pictures = rows.remarks.filter((row) => row.kind === 'photograph');
