@@ -53,7 +53,7 @@ const begin = async ({ page, open }: Visitor): Promise<string> => {
     .getAttribute('value');
   await page.getByLabel('Class', { exact: true }).selectOption(wanted ?? '');
   await page.getByLabel('Car number').fill('88');
-  await page.getByLabel('A new engine').check();
+  await page.locator('input[name="engine"][value="new"]').check();
   await page.getByLabel('Your name for it').fill(`Link ${Date.now().toString(36)}`);
   await page.getByLabel('Block casting number').fill('41-7730');
   await page.getByRole('button', { name: 'Begin the paperwork' }).click();
@@ -83,9 +83,10 @@ test(
         const [chooser] = await Promise.all([
           page.waitForEvent('filechooser'),
           page
-            .getByRole('button', { name: /^(Photograph|Add another) ?:/ })
-            .first()
-            .click(),
+          .locator('button')
+          .and(page.getByRole('button', { name: /^(Photograph|Add another)/ }))
+          .first()
+          .click(),
         ]);
         await chooser.setFiles([...pictures]);
         await firstDrop;

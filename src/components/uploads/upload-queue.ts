@@ -50,6 +50,8 @@ export const openUploadQueue = (
   let stopped = false;
   let timer = 0;
   let delay = SHORTEST_MS;
+  /** Whether the last sending got an answer. */
+  let reached = true;
 
   const tell = () => !stopped && hearer.changed([...queued.values()]);
   const set = (id: string, change: Partial<QueuedUpload>) => {
@@ -110,8 +112,9 @@ export const openUploadQueue = (
       set(id, { share }),
     );
     if (!queued.has(id) || outcome.kind === 'stopped') return;
+    reached = outcome.kind === 'answered' || outcome.kind === 'refused';
+    if (reached) delay = SHORTEST_MS;
     if (outcome.kind === 'answered') {
-      delay = SHORTEST_MS;
       if (!stopped) hearer.answered(one.upload, outcome.answer, bytes);
       return forget(id);
     }
@@ -137,11 +140,13 @@ export const openUploadQueue = (
         lock === null ? later() : send(id, stop.signal),
       );
     } catch {
+      reached = false;
       set(id, { phase: 'no-signal' });
       later();
     } finally {
       running.delete(id);
-      work(true);
+      // Where one got through, those that waited for a signal do, too.
+      work(!reached);
     }
   };
 
