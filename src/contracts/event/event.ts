@@ -100,6 +100,9 @@ export const positionsRequest = z.strictObject({
     .check(z.minLength(1, 'Nothing was sent.'), z.maxLength(500)),
 });
 
+/** `drawn` comes from a draw and `failed-check` from a check; by hand a car is nominated with a reason. */
+export const HAND_PICK_REASONS = ['position', 'protested', 'nominated'] as const;
+
 export const PICK_REASONS = [
   'position',
   'protested',
@@ -116,7 +119,7 @@ export const picksRequest = z.strictObject({
         .strictObject({
           inspectionId: id,
           entryId: id,
-          because: z.enum(PICK_REASONS, 'Say why the car is picked.'),
+          because: z.enum(HAND_PICK_REASONS, 'Say why the car is picked.'),
           words: z.string().check(z.maxLength(300, 'At most 300 characters.')),
           /** Name of a position map, where there is no accepted paperwork to take it from. */
           layout: z.optional(z.string().check(z.maxLength(80))),
@@ -137,4 +140,6 @@ export const picksRequest = z.strictObject({
 export type EventRequest = z.output<typeof eventRequest>;
 export type EntryRow = z.output<typeof entryRow>;
 export type PickReason = (typeof PICK_REASONS)[number];
-export type Pick = z.output<typeof picksRequest>['picks'][number];
+export type Pick = Omit<z.output<typeof picksRequest>['picks'][number], 'because'> & {
+  readonly because: PickReason;
+};

@@ -1,5 +1,6 @@
 import * as z from 'zod/mini';
 import type { Operation } from '../operation';
+import { checkAnswer, checkRequest, checksShown } from './check';
 import { entriesRequest, eventRequest, picksRequest, positionsRequest } from './event';
 
 const signedIn = { method: 'post', access: 'signed-in' } as const;
@@ -33,5 +34,20 @@ export const operations: readonly Operation[] = [
     summary: 'Pick cars for inspection; the rules in force at the event’s start are pinned.',
     body: picksRequest,
     answer: z.strictObject({ inspections: z.array(z.string()) }),
+  },
+  {
+    ...signedIn,
+    path: '/api/events/{series}/{event}/checks',
+    summary:
+      'Keep one check of one car without teardown, judged by the rules in force; a failed one opens an inspection.',
+    body: checkRequest,
+    answer: checkAnswer,
+  },
+  {
+    method: 'get',
+    access: 'signed-in',
+    path: '/api/events/{series}/{event}/checks',
+    summary: 'The checks of an event without teardown as they stand.',
+    answer: checksShown,
   },
 ];

@@ -1,4 +1,5 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
+import type { Entry } from '@/entities/event/entry';
 import type { Inspection } from '@/entities/event/inspection';
 
 interface Found {
@@ -12,17 +13,19 @@ interface Found {
  * declared in, nor a car or competitor with whom an interest of theirs was declared. One set-based
  * query.
  */
-export const interestsIn = async (
+const interests = async (
   em: EntityManager,
-  { seriesId, id }: Pick<Inspection, 'seriesId' | 'id'>,
+  seriesId: string,
+  which: 'i' | 'e',
+  id: string,
 ): Promise<ReadonlyMap<string, string>> => {
   const rows = await em.execute<Found[]>(
     `with inspected as (
-       select i.series_id, e.event_id, e.class_id, e.competitor_id, e.car_number,
+       select e.series_id, e.event_id, e.class_id, e.competitor_id, e.car_number,
               coalesce(i.paperwork_id, e.paperwork_id) as paperwork_id
-       from public.inspection i
-       join public.entry e on e.series_id = i.series_id and e.id = i.entry_id
-       where i.series_id = ? and i.id = ?
+       from public.entry e
+       left join public.inspection i on i.series_id = e.series_id and i.entry_id = e.id
+       where e.series_id = ? and ${which}.id = ?
      )
      select person_id, why from (
        select competitor_id as person_id, 'enters this car' as why, 1 as place from inspected
@@ -62,3 +65,15 @@ export const interestsIn = async (
   );
   return new Map(rows.map((row) => [row.person_id, row.why]));
 };
+
+/** Of an inspection's car. */
+export const interestsIn = (
+  em: EntityManager,
+  { seriesId, id }: Pick<Inspection, 'seriesId' | 'id'>,
+): Promise<ReadonlyMap<string, string>> => interests(em, seriesId, 'i', id);
+
+/** Of an entered car, whether it is inspected or not. */
+export const interestsInEntry = (
+  em: EntityManager,
+  { seriesId, id }: Pick<Entry, 'seriesId' | 'id'>,
+): Promise<ReadonlyMap<string, string>> => interests(em, seriesId, 'e', id);

@@ -15,6 +15,7 @@ export interface PublicEntry {
 }
 
 export interface PublicEvent {
+  readonly id: string;
   readonly number: number;
   readonly slug: string;
   readonly name: string;
@@ -31,7 +32,7 @@ export const findPublicEvent = async (
   input: { readonly seriesId: string; readonly event: string },
 ): Promise<PublicEvent | undefined> => {
   const [event] = await deps.db.execute<
-    (Omit<PublicEvent, 'entries'> & { id: string; startsAt: Date })[]
+    (Omit<PublicEvent, 'entries' | 'startsAt'> & { startsAt: Date })[]
   >(
     `select id, number, slug, name, track, zone, starts_at as "startsAt", results_state as results
      from public.event where series_id = ? and slug = ?`,
@@ -56,6 +57,5 @@ export const findPublicEvent = async (
      order by c.name, e.position nulls last, length(e.car_number), e.car_number`,
     [input.seriesId, event.id],
   );
-  const { id: _, ...named } = event;
-  return { ...named, startsAt: new Date(event.startsAt).toISOString(), entries };
+  return { ...event, startsAt: new Date(event.startsAt).toISOString(), entries };
 };

@@ -1,0 +1,167 @@
+import { LockMode } from '@mikro-orm/core';
+import type { EntityManager } from '@mikro-orm/postgresql';
+import type { CheckAnswer, CheckRequest } from '@/contracts/event/check';
+import { type Actor, may } from '@/domain/access/permission';
+import { absent, type Failure, failure, invalid } from '@/domain/failure';
+import { judgeLineCheck } from '@/domain/inspection/line-check/judge-line-check';
+import { lineChecksOf } from '@/domain/inspection/line-check/line-checks';
+import type { Written } from '@/domain/quantity/dimension';
+import { parseWritten } from '@/domain/quantity/parse';
+import { toStored } from '@/domain/quantity/stored';
+import { fail, ok, type Result } from '@/domain/result';
+import { getQuantityEntry } from '@/domain/rulebook/quantity-catalogue';
+import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
+import { Entry } from '@/entities/event/entry';
+import { Event } from '@/entities/event/event';
+import { GaugeRow } from '@/entities/event/gauge';
+import { Inspection } from '@/entities/event/inspection';
+import { performAct } from '../../act/perform-act';
+import { readStandings } from '../../gauge/gauge-standing';
+import { interestsInEntry } from '../../inspection/interest';
+import { registered } from '../../inspection/read/inspection-file';
+import { isId } from '../../paperwork/own-paperwork';
+import type { Ports } from '../../ports';
+import { openInspections } from '../open-inspections';
+import { rulesByClass } from './read-checks';
+
+const refuse = (pointer: string, detail: string) => fail(invalid([{ pointer, detail }]));
+
+const gaugesOf = async (em: EntityManager, { seriesId, id }: Event) => {
+  const rows = await em.find(GaugeRow, { seriesId });
+  const standings = await readStandings(em, seriesId, id);
+  return rows.map((row) => ({ ...registered(row), ...standings.get(row.id) }));
+};
+
+interface Read {
+  readonly answer: string;
+  readonly value: (Written & { readonly exact: bigint }) | undefined;
+}
+
+/** The answer or the value, as the clause asks for it. */
+const readAnswer = (
+  rules: RulesInForce,
+  input: Pick<CheckRequest, 'clause' | 'answer' | 'value' | 'gaugeId'>,
+): Result<Read, Failure> => {
+  const check = lineChecksOf(rules).find(({ clause }) => clause === input.clause);
+  if (check === undefined)
+    return refuse('/clause', `Clause ${input.clause} cannot be checked without teardown.`);
+  if (check.ask.kind === 'answer') {
+    const known = check.ask.answers.some(({ value }) => value === input.answer);
+    return known
+      ? ok({ answer: input.answer ?? '', value: undefined })
+      : refuse('/answer', 'Tap one of the answers.');
+  }
+  const rule = rules.clauses.find(({ number }) => number === input.clause)?.requirement;
+  if (rule?.kind !== 'limit' || input.value === undefined)
+    return refuse('/value', 'Enter what the gauge shows.');
+  const parsed = parseWritten(input.value, getQuantityEntry(rule.quantity).dimension);
+  if (!parsed.ok) return refuse('/value', parsed.failure.detail);
+  return ok({ answer: '', value: toStored(parsed.value) });
+};
+
+/**
+ * Keeps one check of one car without teardown, judged by the rules in force. A mandatory clause that is
+ * not kept opens an inspection in the same act: nobody is excluded by a check at the line.
+ */
+export const recordCheck = async (
+  deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
+  actor: Actor,
+  input: CheckRequest & { readonly seriesId: string; readonly eventId: string },
+): Promise<Result<CheckAnswer, Failure>> => {
+  const { act, seriesId, eventId, ...asked } = input;
+  if (!may(actor, 'inspection.record', seriesId) || !isId(eventId)) return fail(absent());
+  return performAct<CheckAnswer>(
+    deps,
+    actor,
+    { id: act, kind: 'record-check', seriesId, input: { eventId, ...asked } },
+    async (within) => {
+      const { em, at, append, keepRules } = within;
+      const event = await em.findOne(
+        Event,
+        { seriesId, id: eventId },
+        { lockMode: LockMode.PESSIMISTIC_WRITE },
+      );
+      const entry = event && (await em.findOne(Entry, { seriesId, eventId, id: asked.entryId }));
+      if (event === null || entry === null) return fail(absent());
+      if (entry.state === 'withdrawn')
+        return fail(failure('not-in-this-state', `Car ${entry.carNumber} is scratched.`));
+      const interest = (await interestsInEntry(em, entry)).get(actor.personId);
+      if (interest !== undefined)
+        return fail(
+          failure(
+            'conflict-of-interest',
+            `${actor.name} ${interest}. Somebody else checks car ${entry.carNumber}.`,
+          ),
+        );
+      const found = (await rulesByClass(em, event, [entry.classId])).get(entry.classId);
+      if (found === undefined)
+        return fail(
+          failure(
+            'not-in-this-state',
+            'No rulebook of this class is in force at the event’s start.',
+          ),
+        );
+      const rulesHash = await keepRules(seriesId, found.document);
+      const row = {
+        series_id: seriesId,
+        id: asked.id,
+        event_id: eventId,
+        entry_id: entry.id,
+        clause: asked.clause,
+        rules_hash: rulesHash,
+        taken_by: actor.personId,
+        taken_at: at.toISOString(),
+      };
+      const before = await em.findOne(Inspection, { seriesId, entryId: entry.id });
+      if (asked.takeBack !== undefined) {
+        const reason = asked.takeBack.trim();
+        if (reason === '') return refuse('/takeBack', 'Write why it is taken back.');
+        append('event_check', [{ ...row, answer: '', state: 'taken-back', sentence: '', reason }]);
+        return ok({ state: 'taken-back', sentence: '', inspection: before?.id ?? null });
+      }
+      const read = readAnswer(found.rules, asked);
+      if (!read.ok) return read;
+      const { answer, value } = read.value;
+      const gauges = await gaugesOf(em, event);
+      if (value !== undefined && !gauges.some(({ id }) => id === asked.gaugeId))
+        return refuse('/gaugeId', 'Choose the scale or gauge it was read on.');
+      const judged = judgeLineCheck(
+        found.rules,
+        {
+          ...asked,
+          takenBy: actor.personId,
+          takenAt: at.toISOString(),
+          carNumber: entry.carNumber,
+          answer: value === undefined ? answer : undefined,
+          value,
+        },
+        { zone: event.zone, gauges },
+      );
+      append('event_check', [
+        {
+          ...row,
+          answer,
+          ...(value === undefined
+            ? {}
+            : {
+                value_text: value.text,
+                value_unit: value.unit,
+                value_exact: String(value.exact),
+                gauge_id: asked.gaugeId,
+              }),
+          state: judged.state,
+          sentence: judged.sentence,
+          reason: '',
+        },
+      ]);
+      const { state, sentence } = judged;
+      if (judged.pass !== false || before !== null)
+        return ok({ state, sentence, inspection: before?.id ?? null });
+      const inspectionId = deps.random.uuid();
+      const words = `Clause ${asked.clause}. ${sentence}`.slice(0, 300);
+      const pick = { inspectionId, entryId: entry.id, because: 'failed-check', words } as const;
+      const opened = await openInspections(within, event, actor.personId, [pick]);
+      return opened.ok ? ok({ state, sentence, inspection: inspectionId }) : opened;
+    },
+  );
+};
