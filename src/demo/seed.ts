@@ -7,6 +7,7 @@ import { type Oddities, trueEngine } from './engine';
 import { COMPETITORS, type DemoCompetitor, EVERYBODY, INSPECTOR, SECOND_INSPECTOR } from './people';
 import { openStage, type Stage } from './stage';
 import { writeChecks, writeCustody } from './write-custody';
+import { writeBuilders } from './write-builders';
 import { writeEvents, writeGauges } from './write-events';
 import { type DemoInspection, writeInspection } from './write-inspections';
 import { type PaperworkEnd, writePaperwork } from './write-paperwork';
@@ -97,6 +98,7 @@ export const seed = async (app: Composition) => {
   const classes = await writeRulebooks(stage, seriesId);
   const gauges = await writeGauges(stage, seriesId);
   const engines = await writeAllPaperwork(stage, seriesId, classes);
+  await writeBuilders(stage);
   const picked = await writeEvents(stage, seriesId, classes);
   const inspectionOf = new Map<string, string>();
   const first = picked.find(({ competitor }) => competitor.carNumber === '12J');

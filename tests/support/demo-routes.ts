@@ -27,6 +27,9 @@ export async function demoParameters(client: pg.Client): Promise<ReadonlyMap<str
   const all: Record<string, string> = {
     '/api/paperwork/[paperwork]': paperwork,
     '/paddock/paperwork/[id]': paperwork,
+    '/paddock/engines/[id]': await one('select engine_id from public.paperwork where id = $1', [
+      paperwork,
+    ]),
     '/office/paperwork/[id]': paperwork,
     '/barn/inspections/[id]': inspection,
     '/api/inspections/[id]': inspection,

@@ -6,7 +6,6 @@ import {
   MOST_FILES,
   tooLargeWords,
 } from '@/domain/paperwork/file/limits';
-import { isWritable } from '@/domain/paperwork/state';
 import { fail, ok, type Result } from '@/domain/result';
 import { KeptFile } from '@/entities/paperwork/file';
 import { performAct } from '../act/perform-act';

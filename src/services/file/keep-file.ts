@@ -3,7 +3,6 @@ import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
 import { sha256, toHex } from '@/domain/ledger/bytes';
 import type { FilePurpose } from '@/domain/paperwork/file/limits';
-import { isWritable } from '@/domain/paperwork/state';
 import { fail, ok, type Result } from '@/domain/result';
 import { KeptFile } from '@/entities/paperwork/file';
 import { performAct } from '../act/perform-act';
