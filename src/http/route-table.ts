@@ -46,6 +46,14 @@ export const ROUTES: Readonly<Record<string, RouteAccess>> = {
   '/api/files/[file]/remove': { access: 'own' },
   '/api/files/[file]/sheet': { access: 'own' },
   '/api/gauges/[series]': { access: 'permission', permission: 'gauge.manage' },
+  '/api/gauges/[series]/[gauge]/certificates': {
+    access: 'permission',
+    permission: 'gauge.manage',
+  },
+  '/api/gauges/[series]/[gauge]/certificates/[file]': {
+    access: 'permission',
+    permission: 'gauge.manage',
+  },
   '/api/inspections/[id]/assignment': { access: 'permission', permission: 'inspection.assign' },
   '/api/inspections/[id]/captures': { access: 'permission', permission: 'inspection.record' },
   '/api/inspections/[id]/case-file': { access: 'permission', permission: 'case-file.read' },

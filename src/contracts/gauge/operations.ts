@@ -1,4 +1,6 @@
+import { expectUploadResponse, fileActRequest, keptFile } from '../file/file';
 import type { Operation } from '../operation';
+import { expectCertificateRequest } from './certificate';
 import { gaugeAnswer, gaugeRequest } from './gauge';
 
 export const operations: readonly Operation[] = [
@@ -9,5 +11,22 @@ export const operations: readonly Operation[] = [
     access: 'signed-in',
     body: gaugeRequest,
     answer: gaugeAnswer,
+  },
+  {
+    method: 'post',
+    path: '/api/gauges/{series}/{gauge}/certificates',
+    summary:
+      'Announce the file of a gauge’s certificate; its bytes go straight to the object store.',
+    access: 'signed-in',
+    body: expectCertificateRequest,
+    answer: expectUploadResponse,
+  },
+  {
+    method: 'post',
+    path: '/api/gauges/{series}/{gauge}/certificates/{file}',
+    summary: 'Have the certificate read back and hashed, so that the register can name it.',
+    access: 'signed-in',
+    body: fileActRequest,
+    answer: keptFile,
   },
 ];

@@ -22,6 +22,7 @@ export const fieldsOf = (
       to: typedOf(gauge?.range?.to),
       size: typedOf(gauge?.size),
       largerReads: gauge?.largerReads ?? '',
+      certificateFile: gauge?.certificateFile ?? '',
       number: gauge?.certificate?.number ?? '',
       uncertainty: typedOf(gauge?.certificate?.expandedUncertainty),
       coverageFactor: gauge?.certificate?.coverageFactor ?? '2',
@@ -69,6 +70,7 @@ export const gaugeFromForm = (typed: ReadonlyMap<string, string>): unknown => {
             },
           }
         : {}),
+      ...some('certificateFile', text('certificateFile')),
       ...some('calibratedOn', text('calibratedOn')),
       ...some('dueOn', text('dueOn')),
     },

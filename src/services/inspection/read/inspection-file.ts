@@ -19,6 +19,7 @@ import { type RecordedRows, readRows } from './rows';
 export interface RegisteredGauge extends GaugeRecord {
   readonly name: string;
   readonly size?: Written | undefined;
+  readonly certificateFile?: string | undefined;
 }
 
 /** Everything about one inspection that an inspector, a signer or a panel looks at. */
