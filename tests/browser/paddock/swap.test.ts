@@ -1,0 +1,121 @@
+import { randomUUID } from 'node:crypto';
+import pg from 'pg';
+import sharp from 'sharp';
+import { expect, test } from 'vitest';
+import { journey } from '../../support/browser';
+import { readProduct } from '../../support/product';
+import { eventually } from '../../support/wait';
+import { look, OFFICIAL, PHONE } from '../thread/story';
+import { newHand } from './hand';
+import { openClass, send } from './weekly-class';
+
+const MINUTES = 60_000;
+const SECONDS = { tap: 2, key: 0.4, photograph: 20 };
+
+test(
+  'a race-night engine swap from a phone: car, engine, seal, one photograph; officials see it at once',
+  async () => {
+    const client = new pg.Client({ connectionString: readProduct().superuserUrl });
+    await client.connect();
+    const one = async (sql: string, values: unknown[] = []) =>
+      Object.values((await client.query<Record<string, string>>(sql, values)).rows[0] ?? {})[0] ??
+      '';
+    try {
+      await journey('engine swap', async ({ enter }) => {
+        const stamp = Date.now().toString(36);
+        const official = await enter();
+        await official.signInAs(OFFICIAL);
+        const classId = await openClass(official, `Swap Eight ${stamp}`);
+        const seriesId = await one("select id from public.series where slug = 'corran-valley'");
+        const eventId = randomUUID();
+        await send(official, `/api/events/${seriesId}`, {
+          act: randomUUID(),
+          id: eventId,
+          seasonId: await one('select season_id from public.class where id = $1', [classId]),
+          slug: `swap-${stamp}`,
+          name: `Swap night ${stamp}`,
+          track: 'Quarrel Fen Oval',
+          zone: 'America/Chicago',
+          startsAt: new Date(Date.now() - 3_600_000).toISOString(),
+          endsAt: new Date(Date.now() + 3 * 3_600_000).toISOString(),
+          protestMinutes: 30,
+        });
+        const entryId = randomUUID();
+        const { email } = readProduct().people.find(({ name }) => name === 'Ysolde Kerrigan') ?? {
+          email: '',
+        };
+        await send(official, `/api/events/${seriesId}/${eventId}/entries`, {
+          act: randomUUID(),
+          entries: [
+            {
+              id: entryId,
+              classId,
+              carNumber: '61',
+              competitorName: 'Ysolde Kerrigan',
+              competitorEmail: email,
+              engineReference: 'YK-6',
+              position: null,
+            },
+          ],
+        });
+
+        const competitor = await enter(PHONE);
+        await competitor.signInAs('Ysolde Kerrigan');
+        const { page } = competitor;
+        await competitor.open('/paddock');
+        const hand = newHand();
+        await hand.tap(page.getByRole('link', { name: 'Swap an engine at the track' }));
+        await page.locator('[data-ready="yes"]').waitFor();
+        await hand.tap(page.getByLabel('One that is not here yet'));
+        await hand.type(page.getByLabel('Your name for it'), 'SPARE-2');
+        await hand.type(page.getByLabel('Seal number'), '0418');
+        const buffer = await sharp({
+          create: { width: 1600, height: 1200, channels: 3, background: '#5a6a72' },
+        })
+          .jpeg()
+          .toBuffer();
+        await hand.photograph(page, page.getByLabel('Photograph: the seal and the car number'), {
+          name: 'seal.jpg',
+          mimeType: 'image/jpeg',
+          buffer,
+        });
+        await look(competitor, 'swap');
+        await hand.tap(page.getByRole('button', { name: 'Swap the engine of car 61' }));
+        await page.getByText('The officials see it now.').waitFor();
+
+        await official.open('/office/paperwork');
+        const row = official.page.getByRole('row', { name: /SPARE-2/ });
+        await row.waitFor();
+        expect(await row.textContent()).toContain('0418');
+        await page.getByText('The photograph is with them.').waitFor();
+        await look(competitor, 'swapped');
+        await official.page.reload();
+        await row.getByRole('link', { name: /See it/ }).waitFor();
+        await look(official, 'swaps-to-check');
+        expect(
+          await eventually('the entry', () =>
+            one('select engine_reference from public.entry where id = $1', [entryId]),
+          ),
+        ).toBe('SPARE-2');
+
+        const [taps, keys] = [hand.taps(), hand.keys()];
+        const seconds =
+          taps * SECONDS.tap + keys * SECONDS.key + hand.photographs() * SECONDS.photograph;
+        console.info(
+          `Engine swap: ${taps} taps, ${keys} keys, ${hand.photographs()} photograph; by ${JSON.stringify(SECONDS)} s about ${Math.round(seconds)} s.`,
+        );
+        expect(taps).toBeLessThanOrEqual(10);
+        expect(keys).toBeLessThanOrEqual(20);
+        expect(seconds).toBeLessThan(90);
+
+        await page.getByRole('link', { name: 'Go on with the rest' }).tap();
+        await page.getByText(/of 8 answered/).waitFor();
+        // What the swap said is filled in.
+        expect(await page.locator('main').textContent()).toContain('0418');
+      });
+    } finally {
+      await client.end();
+    }
+  },
+  5 * MINUTES,
+);
