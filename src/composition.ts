@@ -38,7 +38,7 @@ export const compose = async (config: Config): Promise<Composition> => {
   );
   const barn = openBarnFeed(config.databaseUrl, (error) => console.error(`barn: ${error.message}`));
   const objects = openObjects(config.objects);
-  const mailer = openMailer(config.mail.url);
+  const mailer = openMailer(config.mail.url, config.mail.bounces);
   const identity = openIdentityProvider({
     ...config.identity,
     redirectUri: `${config.publicUrl}/sign-in/return`,

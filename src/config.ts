@@ -16,6 +16,8 @@ const schema = z.object({
   S3_SECRET_ACCESS_KEY: z.string().min(1),
   SMTP_URL: url,
   MAIL_FROM: z.string().min(3),
+  MAIL_BOUNCES: z.email().optional(),
+  MAIL_BOUNCE_KEY: z.string().min(24).optional(),
   OIDC_ISSUER: url,
   OIDC_CLIENT_ID: z.string().min(1),
   OIDC_CLIENT_SECRET: z.string().min(1),
@@ -56,7 +58,12 @@ export const readConfig = (environment: NodeJS.ProcessEnv = process.env) => {
       accessKeyId: e.S3_ACCESS_KEY_ID,
       secretAccessKey: e.S3_SECRET_ACCESS_KEY,
     },
-    mail: { url: e.SMTP_URL, from: e.MAIL_FROM },
+    mail: {
+      url: e.SMTP_URL,
+      from: e.MAIL_FROM,
+      bounces: e.MAIL_BOUNCES,
+      bounceKey: e.MAIL_BOUNCE_KEY,
+    },
     identity: {
       issuer: e.OIDC_ISSUER,
       clientId: e.OIDC_CLIENT_ID,

@@ -4,6 +4,7 @@ import compression from 'compression';
 import sirv from 'sirv';
 import { composition } from '@/composition';
 import { limitBody } from '@/http/limit-body';
+import { passOneClick } from '@/http/one-click';
 import { secureHeaders } from '@/http/secure-headers';
 
 type Handler = (request: IncomingMessage, response: ServerResponse, next?: () => void) => void;
@@ -33,6 +34,7 @@ const server = createServer((request, response) => {
     delete request.headers['x-forwarded-proto'];
     delete request.headers['x-forwarded-port'];
   }
+  passOneClick(request);
   const path = request.url?.split('?', 1)[0] ?? '/';
   if (path === '/healthz') {
     void app.ready().then(

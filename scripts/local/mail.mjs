@@ -30,6 +30,12 @@ import { answer, css, escapeHtml, host, listen, page } from './listen.mjs';
 
 const largest = 26_214_400;
 
+/** @type {Readonly<Record<string, { code: number, words: string }>>} */
+const refusals = {
+  'no-such-mailbox': { code: 550, words: '5.1.1 There is no such mailbox here' },
+  'full-mailbox': { code: 452, words: '4.2.2 The mailbox is full' },
+};
+
 /** @param {string} text */
 const linksIn = (text) => text.match(/https?:\/\/[^\s<>"')\]]+/g) ?? [];
 
@@ -89,7 +95,8 @@ const shown = (mail) =>
 
 /**
  * Takes every message that is sent to it and delivers none: each is kept as an `.eml` file, listed in
- * `index.json`, and shown on a page.
+ * `index.json`, and shown on a page. Whatever stands behind the @, `no-such-mailbox` is refused for good
+ * and `full-mailbox` for now.
  *
  * - `GET /messages.json[?to=address]`: `CaughtMail[]`, oldest first
  * - `GET /messages/<id>`, `/messages/<id>.eml`, `/messages/<id>/attachments/<number>`
@@ -126,6 +133,11 @@ export async function startMailCatcher({ smtpPort, pagePort, folder }) {
     disabledCommands: ['AUTH', 'STARTTLS'],
     disableReverseLookup: true,
     size: largest,
+    // Mailboxes to try refusals with.
+    onRcptTo: ({ address }, _session, done) => {
+      const refusal = refusals[address.split('@')[0]?.toLowerCase() ?? ''];
+      done(refusal && Object.assign(new Error(refusal.words), { responseCode: refusal.code }));
+    },
     onData: (stream, session, done) => {
       /** @type {Buffer[]} */
       const chunks = [];

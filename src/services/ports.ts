@@ -166,6 +166,8 @@ export interface OutgoingMail {
   readonly text: string;
   readonly html: string;
   readonly messageId: string;
+  /** Further header fields. */
+  readonly headers: Readonly<Record<string, string>>;
   readonly attachments: readonly {
     readonly name: string;
     readonly type: string;
@@ -173,8 +175,12 @@ export interface OutgoingMail {
   }[];
 }
 
+/** The receiving server refused this message for good; the message says how, in its words. */
+export class MailRefused extends Error {}
+
 export interface Mailer {
-  send(mail: OutgoingMail): Promise<void>;
+  /** What the server answered. @throws MailRefused where another try would change nothing */
+  send(mail: OutgoingMail): Promise<string>;
 }
 
 export interface NoticeToPrint {

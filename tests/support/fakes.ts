@@ -49,9 +49,13 @@ export class FakeObjects implements Objects {
 /** Keeps what would have been sent. */
 export class SpyMailer implements Mailer {
   readonly sent: OutgoingMail[] = [];
+  /** What the next sendings meet instead, one each. */
+  readonly troubles: Error[] = [];
 
-  send(mail: OutgoingMail): Promise<void> {
+  send(mail: OutgoingMail): Promise<string> {
+    const trouble = this.troubles.shift();
+    if (trouble !== undefined) return Promise.reject(trouble);
     this.sent.push(mail);
-    return Promise.resolve();
+    return Promise.resolve('250 2.0.0 taken');
   }
 }

@@ -11,7 +11,9 @@ export interface NewMail {
   readonly kind: string;
   readonly subject: string;
   readonly paragraphs: readonly string[];
-  /** The one thing to do next. */
+  /** What to do next, in one sentence; where nothing is to be done, that is said. */
+  readonly next?: string;
+  /** Straight to where it is done. */
   readonly link: { readonly label: string; readonly path: string };
   /** Kept objects to attach. */
   readonly attachments?: readonly {
@@ -34,7 +36,7 @@ export const queueMail = (
 ): string => {
   const id = deps.random.uuid();
   const { seriesId, personId, address, kind, subject, paragraphs, link, attachments } = mail;
-  const { receipt } = mail;
+  const { receipt, next } = mail;
   em.persist(
     em.create(Mail, {
       id,
@@ -45,7 +47,13 @@ export const queueMail = (
       subject,
       // The same message keeps its Message-ID however often sending is tried.
       messageId: `<${id}@${new URL(deps.site.publicUrl).hostname}>`,
-      content: { paragraphs, link, attachments: attachments ?? [], ...(receipt && { receipt }) },
+      content: {
+        paragraphs,
+        link,
+        attachments: attachments ?? [],
+        ...(next && { next }),
+        ...(receipt && { receipt }),
+      },
       state: 'to-send',
       attempts: 0,
       createdAt: act.at,

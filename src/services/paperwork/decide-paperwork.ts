@@ -91,11 +91,18 @@ export const decidePaperwork = async (
         paragraphs: [
           `Version ${number} of the paperwork of engine ${row.reference} for car ${row.carNumber} in ${row.className} was ${decision === 'accepted' ? 'accepted' : 'returned with remarks'}.`,
           ...remarks.map(({ text }) => text),
-          decision === 'accepted'
-            ? NOT_AN_APPROVAL
-            : 'Put it right and hand it in again; what you wrote is still there, and the version before is kept.',
+          ...(decision === 'accepted'
+            ? [NOT_AN_APPROVAL]
+            : ['What you wrote is still there, and the version before is kept.']),
         ],
-        link: { label: 'See it', path: `/paddock/paperwork/${paperworkId}` },
+        next:
+          decision === 'accepted'
+            ? 'nothing to do. Change the engine, and its paperwork is handed in again.'
+            : 'put it right and hand it in again.',
+        link: {
+          label: decision === 'accepted' ? 'See it' : 'Put it right',
+          path: `/paddock/paperwork/${paperworkId}`,
+        },
       });
       act.line({
         seriesId,

@@ -16,6 +16,7 @@ import { maySign, type SignedBy } from './may-sign';
 import { findOwnPaperwork, isId } from './own-paperwork';
 import { paperworkDocument } from './paperwork-document';
 import type { PaperworkRow } from './read/read-row';
+import { tellOfficials } from './tell-officials';
 
 export interface Receipt {
   readonly number: number;
@@ -49,9 +50,10 @@ const sendReceipt = (
       `The paperwork of engine ${row.reference} for car ${row.carNumber} in ${row.className}, ${row.seriesName}, was handed in as version ${number} on ${receivedAt}.`,
       ...(signedFor ? [`It was signed for ${row.competitorName}, who is under age.`] : []),
       `Its SHA-256 is ${hash}. It was checked against the rules with the SHA-256 ${rulesHash}.`,
-      'The officials will accept it or return it with remarks. This version is kept whatever follows.',
+      'This version is kept whatever follows.',
       NOT_AN_APPROVAL,
     ],
+    next: 'nothing to do now. The officials accept it or return it with remarks; you get a message.',
     link: { label: 'See what was handed in', path: `/paddock/paperwork/${row.id}` },
     receipt: { seriesId, actId, of: 'this paperwork', sha256: hash },
   });
@@ -136,6 +138,7 @@ export const handInPaperwork = async (
         const own = { personId: actor.personId, address: guardian.guardianEmail };
         sendReceipt(deps, act, row, receipt, own, true);
       }
+      await tellOfficials(deps, act, row, number);
       act.line({
         seriesId,
         kind: 'paperwork-handed-in',

@@ -16,7 +16,12 @@ let world: World;
 let v: VerdictWorld;
 const objects = new FakeObjects();
 const sent: OutgoingMail[] = [];
-const mailer = { send: async (mail: OutgoingMail) => void sent.push(mail) };
+const mailer = {
+  send: async (mail: OutgoingMail) => {
+    sent.push(mail);
+    return '250 taken';
+  },
+};
 
 beforeAll(async () => {
   world = await openWorld({ notices: noticePrinter, objects, mailer });

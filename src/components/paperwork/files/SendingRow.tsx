@@ -60,7 +60,7 @@ export const SendingRow = ({ one, files }: { readonly one: Sending; readonly fil
         Send again<span className="visually-hidden"> {one.name}</span>
       </button>
     )}
-    {one.phase !== 'sending' && (
+    {(one.phase === 'paused' || one.phase === 'sign-in' || one.phase === 'refused') && (
       <button type="button" className="btn-link" onClick={() => files.drop(one.fileId)}>
         Leave it<span className="visually-hidden">: {one.name}</span>
       </button>

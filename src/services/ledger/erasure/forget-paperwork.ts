@@ -8,6 +8,7 @@ interface FileRow {
 }
 
 const PADDOCK = '/paddock/paperwork/';
+const OFFICE = '/office/paperwork/';
 
 /** Takes the files' rows away; what no other row names is to be removed, and its hash is given. */
 const forgetFiles = async (
@@ -64,8 +65,9 @@ export const forgetPaperwork = async (
   await em.execute(
     `update public.mail set subject = 'Erased', last_error = null, content = jsonb_set(
        jsonb_set(content, '{attachments}', '[]'), '{paragraphs}', '["The content of this message was erased."]')
-     where series_id = ? and left(content #>> '{link,path}', ?) = ?`,
-    [seriesId, PADDOCK.length + paperworkId.length, PADDOCK + paperworkId],
+     where series_id = ? and (starts_with(content #>> '{link,path}', ?)
+       or starts_with(content #>> '{link,path}', ?))`,
+    [seriesId, PADDOCK + paperworkId, OFFICE + paperworkId],
   );
   return forgetFiles(act, seriesId, paperworkId, only);
 };
