@@ -1,7 +1,7 @@
-import { createHash } from 'node:crypto';
+import { createHash, randomUUID } from 'node:crypto';
 import { expect, test } from 'vitest';
 import { journey, type Visitor } from '../support/browser';
-import { runPrintedScript } from '../support/draw';
+import { runPrintedScript, verifyPublicDraw } from '../support/draw';
 import { readProduct } from '../support/product';
 import { eventually } from '../support/wait';
 
@@ -26,6 +26,27 @@ const nextMinute = (zone: string): { readonly written: string; readonly at: numb
     timeStyle: 'short',
   }).format(at);
   return { written: parts.replace(' ', 'T'), at };
+};
+
+/** Counts taps and clicks in this browser from now on, over every page it opens. */
+const countTaps = async ({ page, context }: Visitor): Promise<() => Promise<number>> => {
+  let count = 0;
+  await context.exposeBinding('tapped', () => {
+    count += 1;
+  });
+  const listen = () =>
+    document.addEventListener(
+      'click',
+      (event) => {
+        // A label's click is told again to its field.
+        if (event.isTrusted && event.detail > 0)
+          (window as unknown as { tapped: () => void }).tapped();
+      },
+      true,
+    );
+  await context.addInitScript(listen);
+  await page.evaluate(listen);
+  return async () => count;
 };
 
 const toClass = async ({ page, open }: Visitor, event: RegExp, raceClass = CLASS) => {
@@ -97,7 +118,10 @@ test('a draw at a hand-scored track: announced, made once, checked by a stranger
     await official.signInAs(OFFICIAL);
     await toClass(official, /Quarrel Fen Opener/);
     const session = nextMinute('America/Chicago');
+    const taps = await countTaps(official);
+    const began = performance.now();
     await announce(official, session.written);
+    const announcing = { taps: await taps(), seconds: (performance.now() - began) / 1000 };
 
     const visitor = await enter({ viewport: { width: 1280, height: 900 } });
     const draw = '/series/corran-valley/events/round-1/draw';
@@ -121,6 +145,7 @@ test('a draw at a hand-scored track: announced, made once, checked by a stranger
       120_000,
     );
     expect(Date.now()).toBeGreaterThanOrEqual(session.at);
+    const [before, again] = [await taps(), performance.now()];
     await page.getByRole('link', { name: 'Enter the values' }).click();
     const numbers = page.getByLabel('Numbers');
     official.expectRefusal({ url: /\/values$/, status: 422 });
@@ -140,6 +165,13 @@ test('a draw at a hand-scored track: announced, made once, checked by a stranger
     await page.getByRole('button', { name: 'Make the draw now' }).click();
     const cars = page.getByRole('list', { name: 'Cars in the order drawn' });
     await cars.waitFor();
+    const making = { taps: (await taps()) - before, seconds: (performance.now() - again) / 1000 };
+    // One wrong value and its correction are among them.
+    console.info(
+      `A draw at a hand-scored track: announced with ${announcing.taps} taps, made with ${making.taps}; by this machine ${announcing.seconds.toFixed(1)} s and ${making.seconds.toFixed(1)} s.`,
+    );
+    expect(announcing.taps).toBeLessThanOrEqual(4);
+    expect(making.taps).toBeLessThanOrEqual(6);
     await official.expectAccessible();
     await official.expectNoSidewaysScroll();
     await official.shot('draw-390-made');
@@ -188,6 +220,11 @@ test('a draw at a hand-scored track: announced, made once, checked by a stranger
     const drawn = script.says.replace('same: ', '').split(', ');
     for (const car of drawn)
       expect(await result.locator('.sheet-closed').textContent()).toContain(car);
+    const drawId = /draws\/[^/]+\/([^/]+)/.exec(href ?? '')?.[1] ?? '';
+    const verified = verifyPublicDraw(publicUrl, 'corran-valley', drawId);
+    expect(verified.code, verified.says).toBe(0);
+    expect(verified.says.split('\n').at(-1)).toBe(`verified: ${drawn.join(', ')}`);
+    expect(verifyPublicDraw(publicUrl, 'corran-valley', randomUUID()).code).toBe(1);
   });
 });
 

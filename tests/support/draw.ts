@@ -27,3 +27,19 @@ export const runPrintedScript = (
     rmSync(folder, { recursive: true, force: true });
   }
 };
+
+/** Runs the verifier that asks the public site for everything, in a process of its own. */
+export const verifyPublicDraw = (
+  site: string,
+  series: string,
+  draw: string,
+): { readonly says: string; readonly code: number } => {
+  const script = join(import.meta.dirname, 'verify-draw.mjs');
+  try {
+    const says = execFileSync(process.execPath, [script, site, series, draw], { encoding: 'utf8' });
+    return { says: says.trim(), code: 0 };
+  } catch (error) {
+    const { stdout, stderr, status } = error as { stdout: string; stderr: string; status: number };
+    return { says: `${stdout}${stderr}`.trim(), code: status };
+  }
+};
