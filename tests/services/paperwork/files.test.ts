@@ -428,28 +428,51 @@ describe('files and versions', () => {
     expect(version.document.photographs.map((file) => file.fileId)).toEqual([fileId]);
   });
 
-  it('the same picture handed in for another engine is pointed out to the official', async () => {
+  it('the same file handed in for another engine is pointed out to the official, and to nobody else', async () => {
     const first = await handedIn(paddock, '4');
     const other = await openPaddock(world);
     // The other engine races in the same series.
-    const mixed: Paddock = {
+    const theirs: Paddock = {
       ...other,
       seriesId: paddock.seriesId,
       classId: paddock.classId,
       objects: paddock.objects,
+      ports: paddock.ports,
+      competitor: {
+        ...other.competitor,
+        standings: [{ seriesId: paddock.seriesId, role: 'competitor' as const }],
+      },
     };
-    const rival = {
-      ...other.competitor,
-      standings: [{ seriesId: paddock.seriesId, role: 'competitor' as const }],
-    };
-    const theirs: Paddock = { ...mixed, competitor: rival };
-    const second = await handedIn(theirs, '5');
-    const opened = must(
-      await openPaperworkToCheck(paddock.ports(), paddock.official, {
-        paperworkId: second.paperworkId,
-      }),
+    const look = async (paperworkId: string, number = 1) =>
+      must(await openPaperworkToCheck(paddock.ports(), paddock.official, { paperworkId, number }))
+        .seenBefore;
+    const before = await look(first.paperworkId);
+    const second = await start(theirs, '5');
+    const sent = await keepPhotograph(theirs, second, await picture());
+    // What stands in a draft is its owner's alone, also from the official.
+    expect(await look(first.paperworkId)).toEqual(before);
+    await handIn(theirs, second, await save(theirs, second, 1, fullDraft()));
+    const seen = await look(second);
+    expect(seen.filter(({ carNumber }) => carNumber === '4')).toEqual([
+      {
+        fileId: sent.fileId,
+        name: 'lifters.jpg',
+        paperworkId: first.paperworkId,
+        carNumber: '4',
+        reference: 'VR-2231',
+      },
+    ]);
+    expect((await look(first.paperworkId)).map(({ paperworkId }) => paperworkId)).toContain(second);
+    // Neither the answer to the upload nor what the competitor may open says so.
+    const own = must(
+      await openOwnVersion(theirs.ports(), theirs.competitor, { paperworkId: second, number: 1 }),
     );
-    expect(opened.seenBefore.map(({ carNumber }) => carNumber)).toContain('4');
-    expect(first.paperworkId).not.toBe(second.paperworkId);
+    for (const told of [sent, own]) {
+      expect(JSON.stringify(told)).not.toContain(first.paperworkId);
+      expect(JSON.stringify(told)).not.toMatch(/seen|another engine|also/i);
+    }
+    expect(
+      await openPaperworkToCheck(theirs.ports(), theirs.competitor, { paperworkId: second }),
+    ).toMatchObject({ failure: { name: 'absent' } });
   });
 });

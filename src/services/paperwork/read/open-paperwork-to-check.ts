@@ -5,16 +5,9 @@ import type { PaperworkDocument } from '@/domain/paperwork/document';
 import { fail, ok, type Result } from '@/domain/result';
 import type { Ports } from '../../ports';
 import { findBefore } from './find-before';
+import { findSeenBefore, type SeenBefore } from './find-seen-before';
 import { findDecidableRow, type OpenedVersion, openRow } from './open-version';
 import type { PaperworkRow } from './read-row';
-
-/** A file whose bytes were handed in before, with another engine. */
-export interface SeenBefore {
-  readonly fileId: string;
-  readonly item: string;
-  readonly carNumber: string;
-  readonly reference: string;
-}
 
 export interface GuardianSigned {
   readonly guardian: string;
@@ -32,23 +25,6 @@ export interface PaperworkToCheck extends OpenedVersion {
   /** Who signed this version for a competitor under age. */
   readonly signature: GuardianSigned | undefined;
 }
-
-const findSeenBefore = (
-  em: EntityManager,
-  seriesId: string,
-  paperworkId: string,
-  engineId: string,
-): Promise<SeenBefore[]> =>
-  em.execute<SeenBefore[]>(
-    `select distinct f.id as "fileId", f.item, p.car_number as "carNumber", e.reference
-     from public.file f
-     join public.file g on g.series_id = f.series_id and g.sha256 = f.sha256 and g.id <> f.id
-     join public.paperwork p on p.series_id = g.series_id and p.id = g.paperwork_id
-     join public.engine e on e.id = p.engine_id
-     where f.series_id = ? and f.paperwork_id = ? and f.removed_at is null
-       and p.engine_id <> ? and p.versions > 0`,
-    [seriesId, paperworkId, engineId],
-  );
 
 const findSignature = async (
   em: EntityManager,
@@ -88,7 +64,6 @@ export const openPaperworkToCheck = async (
   const number = input.number ?? row.versions;
   const opened = await openRow(deps.db, row, number);
   if (opened === undefined) return fail(absent());
-  const { seriesId, id, engineId } = row;
   const before = await findBefore(deps.db, row, number - 1);
   return ok({
     ...opened,
@@ -96,6 +71,6 @@ export const openPaperworkToCheck = async (
     previous: before?.document,
     carsOfEngine: await findOtherCars(deps.db, row),
     signature: await findSignature(deps.db, row, number),
-    seenBefore: await findSeenBefore(deps.db, seriesId, id, engineId),
+    seenBefore: await findSeenBefore(deps.db, row, number),
   });
 };
