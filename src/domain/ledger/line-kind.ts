@@ -44,6 +44,7 @@ export const LINE_KINDS = [
   'engine-transferred',
   'engine-swapped',
   'served-otherwise',
+  'check-recorded',
 ] as const;
 
 export type LineKind = (typeof LINE_KINDS)[number];

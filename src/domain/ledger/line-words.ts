@@ -46,6 +46,7 @@ const WORDS: { readonly [K in LineKind]: string } = {
   'custody-recorded': 'A held part was handed over, opened, closed or returned.',
   'seal-recorded': 'An engine’s seal was applied, found or removed.',
   'served-otherwise': 'Somebody whom a message did not reach was served otherwise.',
+  'check-recorded': 'A car was checked without teardown, or a check was taken back.',
 };
 
 /** Kinds of later versions are shown by their own name. */

@@ -8,6 +8,7 @@ import { recordCheck } from '@/services/event/check/record-check';
 import { signChecks } from '@/services/event/check/sign-checks';
 import { enterCars } from '@/services/event/enter-cars';
 import { saveGauge } from '@/services/gauge/save-gauge';
+import { auditLedger } from '@/services/ledger/audit/audit-ledger';
 import { openDraft } from '@/services/rulebook/open-draft';
 import { publishEdition } from '@/services/rulebook/publish-edition';
 import { addClass } from '@/services/series/add-class';
@@ -263,5 +264,14 @@ describe('one page and one signature', () => {
       .db.execute<{ document: string }[]>('select document from record.event_clearance');
     expect(row?.document).toContain('2801');
     expect(row?.document).toContain('Oona Brannick');
+  });
+
+  it('leaves the record whole: every row is what its line commits to', async () => {
+    const { faults } = await auditLedger(world.ports(), {
+      seriesId: night.seriesId,
+      heads: [],
+      keys: [],
+    });
+    expect(faults).toEqual([]);
   });
 });

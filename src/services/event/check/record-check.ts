@@ -4,13 +4,7 @@ import type { CheckAnswer, CheckRequest } from '@/contracts/event/check';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, failure, invalid } from '@/domain/failure';
 import { judgeLineCheck } from '@/domain/inspection/line-check/judge-line-check';
-import { lineChecksOf } from '@/domain/inspection/line-check/line-checks';
-import type { Written } from '@/domain/quantity/dimension';
-import { parseWritten } from '@/domain/quantity/parse';
-import { toStored } from '@/domain/quantity/stored';
 import { fail, ok, type Result } from '@/domain/result';
-import { getQuantityEntry } from '@/domain/rulebook/quantity-catalogue';
-import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import { Entry } from '@/entities/event/entry';
 import { Event } from '@/entities/event/event';
 import { GaugeRow } from '@/entities/event/gauge';
@@ -22,6 +16,8 @@ import { registered } from '../../inspection/read/inspection-file';
 import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { openInspections } from '../open-inspections';
+import { keepCheck } from './keep-check';
+import { readAnswer } from './read-answer';
 import { rulesByClass } from './read-checks';
 
 const refuse = (pointer: string, detail: string) => fail(invalid([{ pointer, detail }]));
@@ -30,33 +26,6 @@ const gaugesOf = async (em: EntityManager, { seriesId, id }: Event) => {
   const rows = await em.find(GaugeRow, { seriesId });
   const standings = await readStandings(em, seriesId, id);
   return rows.map((row) => ({ ...registered(row), ...standings.get(row.id) }));
-};
-
-interface Read {
-  readonly answer: string;
-  readonly value: (Written & { readonly exact: bigint }) | undefined;
-}
-
-/** The answer or the value, as the clause asks for it. */
-const readAnswer = (
-  rules: RulesInForce,
-  input: Pick<CheckRequest, 'clause' | 'answer' | 'value' | 'gaugeId'>,
-): Result<Read, Failure> => {
-  const check = lineChecksOf(rules).find(({ clause }) => clause === input.clause);
-  if (check === undefined)
-    return refuse('/clause', `Clause ${input.clause} cannot be checked without teardown.`);
-  if (check.ask.kind === 'answer') {
-    const known = check.ask.answers.some(({ value }) => value === input.answer);
-    return known
-      ? ok({ answer: input.answer ?? '', value: undefined })
-      : refuse('/answer', 'Tap one of the answers.');
-  }
-  const rule = rules.clauses.find(({ number }) => number === input.clause)?.requirement;
-  if (rule?.kind !== 'limit' || input.value === undefined)
-    return refuse('/value', 'Enter what the gauge shows.');
-  const parsed = parseWritten(input.value, getQuantityEntry(rule.quantity).dimension);
-  if (!parsed.ok) return refuse('/value', parsed.failure.detail);
-  return ok({ answer: '', value: toStored(parsed.value) });
 };
 
 /**
@@ -75,7 +44,7 @@ export const recordCheck = async (
     actor,
     { id: act, kind: 'record-check', seriesId, input: { eventId, ...asked } },
     async (within) => {
-      const { em, at, append, keepRules } = within;
+      const { em, at, keepRules } = within;
       const event = await em.findOne(
         Event,
         { seriesId, id: eventId },
@@ -112,11 +81,13 @@ export const recordCheck = async (
         taken_by: actor.personId,
         taken_at: at.toISOString(),
       };
+      const keep = (more: Readonly<Record<string, string | undefined>>) =>
+        keepCheck(within, { ...row, ...more });
       const before = await em.findOne(Inspection, { seriesId, entryId: entry.id });
       if (asked.takeBack !== undefined) {
         const reason = asked.takeBack.trim();
         if (reason === '') return refuse('/takeBack', 'Write why it is taken back.');
-        append('event_check', [{ ...row, answer: '', state: 'taken-back', sentence: '', reason }]);
+        keep({ answer: '', state: 'taken-back', sentence: '', reason });
         return ok({ state: 'taken-back', sentence: '', inspection: before?.id ?? null });
       }
       const read = readAnswer(found.rules, asked);
@@ -137,23 +108,13 @@ export const recordCheck = async (
         },
         { zone: event.zone, gauges },
       );
-      append('event_check', [
-        {
-          ...row,
-          answer,
-          ...(value === undefined
-            ? {}
-            : {
-                value_text: value.text,
-                value_unit: value.unit,
-                value_exact: String(value.exact),
-                gauge_id: asked.gaugeId,
-              }),
-          state: judged.state,
-          sentence: judged.sentence,
-          reason: '',
-        },
-      ]);
+      const onGauge = value && {
+        value_text: value.text,
+        value_unit: value.unit,
+        value_exact: String(value.exact),
+        gauge_id: asked.gaugeId,
+      };
+      keep({ answer, ...onGauge, state: judged.state, sentence: judged.sentence, reason: '' });
       const { state, sentence } = judged;
       if (judged.pass !== false || before !== null)
         return ok({ state, sentence, inspection: before?.id ?? null });
