@@ -53,6 +53,7 @@ export interface JobPayloads {
   readonly 'render-notice': { readonly seriesId: string; readonly verdictId: string };
   readonly 'sign-checkpoint': { readonly seriesId: string };
   readonly 'remove-objects': { readonly seriesId: string };
+  readonly 'remind-due': Readonly<Record<string, never>>;
   readonly 'sweep-uploads': { readonly seriesId: string; readonly fileId: string };
 }
 

@@ -6,6 +6,7 @@ import { removeObjects } from '@/services/ledger/erasure/remove-objects';
 import { proveForNotice } from '@/services/ledger/proof/prove-for-notice';
 import { sendMail } from '@/services/mail/send-mail';
 import { renderNotice } from '@/services/notice/render-notice';
+import { remindDue } from '@/services/paperwork/remind-due';
 import type { JobPayloads, Ports } from '@/services/ports';
 
 type Handlers = {
@@ -21,16 +22,24 @@ const handlers: Handlers = {
   'make-previews': makePreviews,
   'sign-checkpoint': signCheckpoint,
   'sweep-uploads': sweepUpload,
+  'remind-due': remindDue,
   'remove-objects': removeObjects,
   'render-notice': (ports, verdict) =>
     renderNotice(ports, verdict, (line) => proveForNotice(ports, verdict.seriesId, line)),
 };
 
+/** Done once an hour, however many processes work. */
+const HOURLY = new Set(['remind-due']);
+
 /** Works the queues in this process: one job of a kind at a time; a failed one is tried again later. */
 export const startWorker = async (boss: PgBoss, ports: () => Ports): Promise<void> => {
+  const nextHour = (queue: string) =>
+    boss.send(queue, {}, { singletonKey: queue, singletonSeconds: 3_600, singletonNextSlot: true });
   for (const [queue, handle] of Object.entries(handlers)) {
     await boss.work(queue, { batchSize: 1, pollingIntervalSeconds: 0.5 }, async (jobs) => {
       for (const job of jobs) await handle(ports(), job.data as never);
+      if (HOURLY.has(queue)) await nextHour(queue);
     });
+    if (HOURLY.has(queue)) await nextHour(queue);
   }
 };

@@ -6,6 +6,7 @@ export const QUEUES = [
   'sign-checkpoint',
   'remove-objects',
   'sweep-uploads',
+  'remind-due',
 ] as const;
 
 export type QueueName = (typeof QUEUES)[number];
