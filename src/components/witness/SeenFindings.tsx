@@ -39,17 +39,22 @@ export const SeenFindings = ({
                 <strong>{finding.heading}</strong>
               </p>
               {finding.limit !== undefined && <p>{finding.limit}</p>}
-              {shown !== undefined && result !== undefined && (
+              {shown !== undefined && result?.value !== undefined && (
                 <>
                   <p>
                     {result.position}:{' '}
                     <ReadingValue
                       large
-                      value={shown.value}
-                      unit={shown.unit}
-                      {...(shown.uncertainty === '' || shown.k === ''
+                      value={result.value.text}
+                      unit={result.value.unit}
+                      {...(result.uncertainty === undefined || result.coverageFactor === undefined
                         ? {}
-                        : { uncertainty: { value: shown.uncertainty, k: shown.k } })}
+                        : {
+                            uncertainty: {
+                              value: result.uncertainty.text,
+                              k: result.coverageFactor,
+                            },
+                          })}
                     />
                   </p>
                   <GaugeStrip {...shown.strip} size="measuring" />

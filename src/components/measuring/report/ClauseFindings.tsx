@@ -90,6 +90,13 @@ export const ClauseFindings = ({ rules, assessment }: ClauseFindingsProps) => {
             </div>
             <p>{finding.sentence}</p>
             {rule !== undefined && <p className="note">{rule}</p>}
+            {[...new Set(finding.perPosition.flatMap(({ checked = [] }) => checked))].map(
+              (words) => (
+                <p key={words} className="note">
+                  {words.charAt(0).toUpperCase() + words.slice(1)}.
+                </p>
+              ),
+            )}
             {finding.cautions.map((caution) => (
               <p key={caution} className="note">
                 {caution}
