@@ -7,7 +7,7 @@ import { expect } from 'vitest';
 import { readProduct } from './product';
 import { type Expected, watch } from './watch';
 
-const flags = [
+export const flags: readonly string[] = [
   '--headless',
   '--no-sandbox',
   '--disable-gpu',
@@ -64,7 +64,7 @@ async function openVisitor(options: VisitorOptions) {
   const folder = mkdtempSync(join(tmpdir(), 'tagwire-browser-'));
   const context = await chromium.launchPersistentContext(folder, {
     executablePath: process.env['CHROMIUM_PATH'] ?? '/usr/bin/chromium',
-    args: flags,
+    args: [...flags],
     headless: true,
     viewport: options.viewport ?? { width: 1280, height: 800 },
     javaScriptEnabled: options.javaScript ?? true,

@@ -1,232 +1,123 @@
-import { useCallback, useDeferredValue, useEffect, useMemo, useRef, useState } from 'react';
+import { useCallback, useRef, useState } from 'react';
 import { SavedLine } from '@/components/look/SavedLine';
 import { Keypad } from '@/components/tappet/Keypad';
-import type { PadKey } from '@/components/tappet/keys';
 import { MeasuringLayout, TurningBoreMap } from '@/components/tappet/MeasuringLayout';
 import { Tally } from '@/components/tappet/Tally';
 import type { SentRow } from '@/contracts/inspection/rows';
-import { assessInspection, type InspectionAssessment } from '@/domain/inspection/assess-inspection';
-import { boreName, positionsOf } from '@/domain/tappet/layout/bore-layout';
-import { type PadPanel, PanelBeside } from './panels/PanelBeside';
+import type { InspectionAssessment } from '@/domain/inspection/assess-inspection';
+import { boreName } from '@/domain/tappet/layout/bore-layout';
+import type { Bay, Hands } from './bay';
+import { beginSecond, endSecond } from './go-second';
+import { PadActs } from './panels/pad/PadActs';
+import { type PadPanel, PanelBeside } from './panels/pad/PanelBeside';
+import { RackPanel } from './panels/pad/RackPanel';
 import { RunPanel } from './panels/RunPanel';
-import { WorkPanel } from './panels/WorkPanel';
-import { uuidV7 } from './queue/uuid-v7';
+import { WorkPanel } from './panels/work/WorkPanel';
 import { assessSheet } from './sheet/assess-sheet';
-import { boreStates } from './sheet/bore-states';
-import { partsOf } from './sheet/parts';
-import { questionOf } from './sheet/question';
-import { closingRow, openingRow, readingRow } from './sheet/rows';
-import { gaugeFor, isComparative, scaleFor } from './sheet/set-up';
+import { boreStates, checkStates, rackStates } from './sheet/bore-states';
+import type { Step } from './sheet/flow/steps';
+import { impliedOf } from './sheet/keys/typed-base';
 import type { Sheet } from './sheet/sheet';
-import { boresIn, nextStep, scopeOf } from './sheet/steps';
-import { takenAt } from './sheet/taken';
-import { NOTHING, press, type Typed, typedNumber } from './sheet/typing';
+import { useBay } from './use-bay';
 import { useCapture } from './use-capture';
+import { useEntry } from './use-entry';
 import { usePlace } from './use-place';
+
+/** What Enter does now, under its word. */
+const hintOf = (step: Step | undefined): string | undefined => {
+  switch (step?.kind) {
+    case 'bore':
+      return `on to ${boreName(step.to)}`;
+    case 'part':
+      return `on to ${step.part.label.toLowerCase()}, ${boreName(step.to)}`;
+    case 'opening':
+      return 'opening zero';
+    case 'closing':
+      return 'closing zero';
+    case 'closed':
+      return 'zero seen';
+    default:
+      return undefined;
+  }
+};
+
+const statesOf = (bay: Bay) => {
+  const { part, positions, checks, assessment, outOfReach, rack, cursor } = bay;
+  if (part !== undefined) return boreStates({ ...bay, part });
+  return cursor.part === 'rack'
+    ? rackStates(rack)
+    : checkStates(positions, checks, assessment, outOfReach);
+};
+
+const factsOf = ({ sheet, gauge }: Bay) => [
+  { name: 'Engine', value: sheet.engine },
+  { name: 'Bay', value: sheet.bay || '–' },
+  { name: 'Inspector', value: sheet.inspector, minor: true },
+  ...(gauge === undefined
+    ? []
+    : [
+        {
+          name: `${gauge.name} ${gauge.code}`,
+          value: gauge.dueOn === undefined ? 'No calibration' : `Calibrated to ${gauge.dueOn}`,
+        },
+      ]),
+];
 
 /** The measuring screen: every key goes here, every act to the device first. */
 export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
-  const { cursor, setUp, isRead, go, setUpAs } = usePlace(sheet, 'lifter-body-diameter');
+  const { cursor, setUp, isRead, go, goAndKeep, setUpAs } = usePlace(sheet, 'lifter-body-diameter');
   const latest = useRef<InspectionAssessment>(undefined);
   const capture = useCapture(sheet, () => assessSheet.told(latest.current));
-  const [typed, setTyped] = useState<Typed>(NOTHING);
-  const [asked, setAsked] = useState<string>();
   const [panel, setPanel] = useState<PadPanel>();
-  const [problem, setProblem] = useState<string>();
-  const [turn, settle] = useState(0);
-  const busy = useRef(false);
-  const waiting = useRef<PadKey[]>([]);
-  const typing = useRef(NOTHING);
-  const type = useCallback((to: Typed) => {
-    typing.current = to;
-    setTyped(to);
-  }, []);
+  const [trouble, setTrouble] = useState<string>();
+  const bay = useBay(sheet, cursor, setUp, capture.rows);
+  // Half of a bore's readings would be assessed: the server's own word is enough then.
+  latest.current = bay?.blind === true || sheet.second !== undefined ? undefined : bay?.assessment;
 
-  const positions = useMemo(() => positionsOf(sheet.layout), [sheet.layout]);
-  const parts = useMemo(() => partsOf(sheet.rules, setUp.form), [sheet.rules, setUp.form]);
-  const position = positions.find((one) => boreName(one) === cursor.bore) ?? positions[0];
-  const part = parts.find((one) => one.quantity === cursor.part);
-  const rows = useDeferredValue(capture.rows);
-  const assessment = useMemo(
-    () => assessInspection(assessSheet.record(sheet, rows)),
-    [sheet, rows],
-  );
-  latest.current = assessment;
-  const { judged } = useMemo(() => assessSheet.judge(capture.rows), [capture.rows]);
-  const outOfReach = useMemo(() => assessSheet.outOfReach(capture.rows), [capture.rows]);
-
-  const standing =
-    part === undefined || position === undefined
-      ? undefined
-      : { part, cursor, setUp, positions, position, judged, zeros: capture.rows.zeros, outOfReach };
-  const step = standing === undefined ? undefined : nextStep(standing);
-  const gauge = part && gaugeFor(setUp, part.quantity, sheet.gauges);
-  const scale = part && scaleFor(setUp, part.quantity, gauge);
-  const value = scale && typedNumber(typed, scale.decimals);
-
+  const { record: keep } = capture;
   const record = useCallback(
     async (sent: readonly SentRow[]) => {
       try {
-        await capture.record(sent);
-        setProblem(undefined);
+        await keep(sent);
+        setTrouble(undefined);
         return true;
       } catch {
-        setProblem(
-          'This device did not keep it: its storage is closed or full. Nothing typed is lost; try Enter again, or write it down.',
-        );
+        setTrouble('This device did not keep it: its storage is closed or full. Try once more.');
         return false;
       }
     },
-    [capture.record],
+    [keep],
   );
+  const hands: Hands = { go, setUpAs, record };
+  const entry = useEntry(bay, hands);
+  if (bay === undefined) return <p>This engine’s position map has no bores.</p>;
 
-  const enter = async () => {
-    const entered = typing.current;
-    const value = scale && typedNumber(entered, scale.decimals);
-    if (standing === undefined || step === undefined || position === undefined || !part) return;
-    if (value === undefined) {
-      if (step.kind === 'bore') go({ bore: boreName(step.to), cell: undefined, set: 1 });
-      return;
-    }
-    if (gauge === undefined || scale === undefined) {
-      setProblem('Choose the gauge under “Set up” first.');
-      return;
-    }
-    if (step.kind === 'bore' || step.kind === 'done') {
-      setProblem('This set is complete. Enter alone goes on; tap a cell to read it again.');
-      return;
-    }
-    const comparative = isComparative(setUp, part.quantity);
-    const question = questionOf({ value, unit: scale.unit, comparative, quantity: part.quantity });
-    if (question !== undefined && asked !== value) {
-      setAsked(value);
-      setProblem(question);
-      return;
-    }
-    // Digits of the next number may come while this one is being kept.
-    type(NOTHING);
-    setAsked(undefined);
-    const kept = async (sent: readonly SentRow[]) => {
-      const done = await record(sent);
-      if (!done) type(entered);
-      return done;
-    };
-    const base = { gauge, setUp, gauges: sheet.gauges, value: { text: value, unit: scale.unit } };
-    if (step.kind === 'opening') {
-      const run = { id: uuidV7(), scope: scopeOf(setUp, position) };
-      if (await kept([openingRow({ ...base, runId: run.id })])) go({ run, zero: undefined });
-    } else if (step.kind === 'closing') {
-      const runId = cursor.run?.id ?? '';
-      if (await kept([closingRow({ ...base, runId })])) go({ run: undefined, zero: undefined });
-    } else if (step.kind === 'cell') {
-      const taken = takenAt(judged, part, position, cursor.set).get(step.cell);
-      const row = readingRow({
-        ...base,
-        part,
-        position,
-        cell: step.cell,
-        repeat: (taken?.row.repeat ?? 0) + 1,
-        set: cursor.set,
-        runId: comparative ? cursor.run?.id : undefined,
-      });
-      if (!(await kept([row]))) return;
-      const single = part.depths.length * part.axes.length === 1;
-      const after =
-        single && taken === undefined
-          ? nextStep({
-              ...standing,
-              cursor: { ...cursor, cell: undefined },
-              judged: [...judged, assessSheet.counting(row)],
-            })
-          : undefined;
-      go({
-        cell: undefined,
-        ...(after?.kind === 'bore' ? { bore: boreName(after.to), set: 1 } : {}),
-        ...(after?.kind === 'closing' ? { zero: 'closing' } : {}),
-      });
-    }
-  };
-
-  const latestEnter = useRef(enter);
-  latestEnter.current = enter;
-  // Keys that come while a reading is being kept wait until the screen has moved on to the next cell:
-  // no number is entered twice, and none runs into the next.
-  const take = useCallback(
-    (key: PadKey) => {
-      if (busy.current) {
-        waiting.current.push(key);
-        return;
-      }
-      if (key !== 'enter') {
-        type(press(typing.current, key));
-        return;
-      }
-      busy.current = true;
-      void latestEnter.current().finally(() => settle((turn) => turn + 1));
-    },
-    [type],
-  );
-  useEffect(() => {
-    if (turn === 0) return;
-    busy.current = false;
-    while (waiting.current.length > 0 && !busy.current) {
-      const [key] = waiting.current.splice(0, 1);
-      if (key !== undefined) take(key);
-    }
-  }, [turn, take]);
-
-  if (position === undefined) return <p>This engine’s position map has no bores.</p>;
+  const { part, scale, base, step } = bay;
+  const states = statesOf(bay);
+  const listens = capture.ready && isRead && panel === undefined;
   const select = (bore: string) => {
-    go({ bore, cell: undefined, set: 1, zero: undefined });
-    type(NOTHING);
-    setProblem(undefined);
+    go({ bore, cell: undefined, set: 1, zero: undefined, closed: undefined });
+    entry.clear();
   };
-  // Without a run that is open, the one by which this bore was read.
-  const seenRun =
-    part && [...takenAt(judged, part, position, cursor.set).values()].at(-1)?.row.zeroRunId;
-  const states = boreStates({
-    positions,
-    parts,
-    part,
-    assessment,
-    judged,
-    rules: sheet.rules,
-    outOfReach,
-  });
-  const stops =
-    cursor.run === undefined
-      ? boresIn(scopeOf(setUp, position), positions)
-      : boresIn(cursor.run.scope, positions);
-  const hint =
-    step?.kind === 'bore'
-      ? `on to ${boreName(step.to)}`
-      : step?.kind === 'opening'
-        ? 'opening zero'
-        : step?.kind === 'closing'
-          ? 'closing zero'
-          : undefined;
+  const both = async () => {
+    if (!(await endSecond(sheet.second !== undefined, goAndKeep)))
+      setTrouble('Both sets are shown when there is signal again.');
+  };
+  const hint = hintOf(step);
   const unsent =
     capture.waiting > 0
       ? `${capture.waiting} ${capture.waiting === 1 ? 'entry' : 'entries'} not sent yet`
       : undefined;
+  const implied =
+    base === undefined
+      ? `${scale?.decimals ?? 0} ${scale?.decimals === 1 ? 'decimal' : 'decimals'} implied`
+      : `${impliedOf(base)}‥ implied, or all digits`;
+  const keypad = part !== undefined && panel === undefined;
   return (
     <MeasuringLayout
       carNumber={sheet.carNumber}
       hand={setUp.hand}
-      facts={[
-        { name: 'Engine', value: sheet.engine },
-        { name: 'Bay', value: sheet.bay || '–' },
-        { name: 'Inspector', value: sheet.inspector, minor: true },
-        ...(gauge === undefined
-          ? []
-          : [
-              {
-                name: `${gauge.name} ${gauge.code}`,
-                value:
-                  gauge.dueOn === undefined ? 'No calibration' : `Calibrated to ${gauge.dueOn}`,
-              },
-            ]),
-      ]}
+      facts={factsOf(bay)}
       saved={
         <SavedLine
           state={capture.saved.state}
@@ -245,75 +136,54 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
         />
       }
       tally={<Tally statuses={Object.values(states.bores).map((one) => one.status)} />}
-      run={
-        <RunPanel
-          setUp={setUp}
-          gauges={sheet.gauges}
-          comparative={part !== undefined && isComparative(setUp, part.quantity)}
-          stops={stops}
-          current={cursor.bore}
-          zeros={capture.rows.zeros}
-          runId={cursor.run?.id ?? seenRun}
-          open={cursor.run !== undefined}
-          scale={scale}
-          onClosing={() => go({ zero: 'closing' })}
-        />
-      }
+      run={<RunPanel bay={bay} onClosing={() => go({ zero: 'closing' })} />}
       work={
         <WorkPanel
-          sheet={sheet}
-          parts={parts}
-          part={part}
-          position={position}
-          cursor={cursor}
-          step={step}
-          scale={scale}
-          value={value}
-          typing={typed.digits !== ''}
-          judged={judged}
-          remarks={capture.rows.remarks}
-          assessment={assessment}
-          problem={problem}
+          bay={bay}
+          hands={hands}
+          typed={entry.typed}
+          problem={entry.problem ?? trouble}
           capture={capture}
-          go={go}
-          record={record}
+          listens={listens}
+          onRedo={(runId) => void entry.redo(runId)}
+          onBoth={() => void both()}
         />
       }
       pad={
-        panel === undefined && part !== undefined ? (
+        keypad ? (
           <Keypad
-            onKey={take}
+            onKey={entry.take}
             unit={scale?.shown ?? ''}
-            unitNote={`${scale?.decimals ?? 0} ${scale?.decimals === 1 ? 'decimal' : 'decimals'} implied`}
+            unitNote={implied}
             {...(hint === undefined ? {} : { enterHint: hint })}
-            listens={capture.ready && isRead}
+            listens={listens}
             acts={
-              <>
-                <button className="btn btn-danger" type="button" onClick={() => setPanel('strike')}>
-                  Strike last reading
-                </button>
-                <button className="btn" type="button" onClick={() => setPanel('more')}>
-                  Photograph, set up, more
-                </button>
-              </>
+              <PadActs
+                bay={bay}
+                capture={capture}
+                onStrike={() => setPanel('strike')}
+                onMore={() => setPanel('more')}
+                onProblem={setTrouble}
+              />
             }
+          />
+        ) : panel === undefined && cursor.part === 'rack' ? (
+          <RackPanel
+            key={cursor.bore}
+            bay={bay}
+            hands={hands}
+            listens={listens}
+            onMore={() => setPanel('more')}
           />
         ) : (
           <PanelBeside
             panel={panel ?? 'more'}
-            sheet={sheet}
-            setUp={setUp}
-            setUpAs={setUpAs}
-            part={part}
-            position={position}
-            positions={positions}
-            cursor={cursor}
-            judged={judged}
-            assessment={assessment}
-            record={record}
-            go={go}
+            bay={bay}
+            hands={hands}
             open={setPanel}
-            closable={part !== undefined}
+            onSecond={() => void beginSecond(cursor.bore, part?.key, goAndKeep)}
+            onRedo={(runId) => void entry.redo(runId)}
+            closable={part !== undefined || cursor.part === 'rack'}
           />
         )
       }

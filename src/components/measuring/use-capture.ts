@@ -2,19 +2,24 @@ import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import type { CapturesRequest } from '@/contracts/inspection/captures';
 import type { SentRow } from '@/contracts/inspection/rows';
 import { wallTimeAt } from '@/domain/deadline/zone';
+import type { Place } from '@/domain/inspection/capture/rows';
 import {
   changeActs,
   forgetActs,
   type KeptAct,
+  type KeptPicture,
   keepAct,
   readActs,
   readWaiting,
 } from './queue/device-store';
+import { keepPicture, readPictures, renewPicture } from './queue/picture-store';
 import { postCaptures } from './queue/post-captures';
 import { runSender } from './queue/run-sender';
+import { sendPicture } from './queue/send-picture';
 import type { SendOutcome } from './queue/send-waiting';
 import { uuidV7 } from './queue/uuid-v7';
 import { joinRows, type SheetRows } from './sheet/recorded';
+import { photographRow } from './sheet/rows';
 import type { Sheet } from './sheet/sheet';
 
 export interface Capture {
@@ -27,8 +32,17 @@ export interface Capture {
   readonly saved: { readonly state: 'device' | 'sent' | 'failed'; readonly at: string };
   /** Resolves once the rows are written through to the device; rejects when they are not. */
   readonly record: (rows: readonly SentRow[]) => Promise<void>;
+  /** Keeps a photograph of a place the same way; it goes when there is signal. */
+  readonly photograph: (
+    file: PictureFile,
+    at: { readonly place: Place; readonly item: string; readonly subject: string },
+  ) => Promise<void>;
+  /** Pictures that this device still holds. */
+  readonly pictures: readonly KeptPicture[];
   readonly sendAgain: (seq: number) => Promise<void>;
 }
+
+export type PictureFile = Pick<File, 'name' | 'type' | 'arrayBuffer'>;
 
 /** Server's clock less this device's, from the answer that brought the page. */
 const measuredOffset = (servedAt: string): number => {
@@ -46,6 +60,7 @@ const clock = (zone: string, at: number): string => {
 export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']): Capture => {
   const { inspectionId, personId, zone } = sheet;
   const [acts, setActs] = useState<readonly KeptAct[]>([]);
+  const [pictures, setPictures] = useState<readonly KeptPicture[]>([]);
   const [ready, setReady] = useState(false);
   const [outcome, setOutcome] = useState<SendOutcome>();
   const [changedAt, setChangedAt] = useState(() => Date.now());
@@ -55,7 +70,10 @@ export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']
   const latestTablet = useRef(tablet);
   latestTablet.current = tablet;
 
-  const reread = useCallback(async () => setActs(await readActs(inspectionId)), [inspectionId]);
+  const reread = useCallback(async () => {
+    setActs(await readActs(inspectionId));
+    setPictures(await readPictures(inspectionId));
+  }, [inspectionId]);
 
   useEffect(() => {
     const known = new Set(
@@ -66,7 +84,7 @@ export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']
       const done = kept.filter(
         (act) => act.state === 'sent' && act.rows.every((row) => known.has(row.id)),
       );
-      await forgetActs(done.flatMap(({ seq }) => (seq === undefined ? [] : [seq])));
+      await forgetActs(done);
       await reread();
       setReady(true);
     };
@@ -76,6 +94,7 @@ export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']
         readWaiting,
         changeActs,
         post: postCaptures,
+        sendPicture,
         newSending: (id) => ({
           act: uuidV7(),
           clockOffsetMs: offset,
@@ -91,10 +110,10 @@ export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']
     return () => sender.current?.stop();
   }, [inspectionId, offset, reread, sheet.rows]);
 
-  const record = useCallback(
-    async (rows: readonly SentRow[]) => {
+  const keep = useCallback(
+    async (write: () => Promise<void>) => {
       try {
-        await keepAct({ inspectionId, rows, keptAt: Date.now() });
+        await write();
       } catch (error) {
         setFailedAt(Date.now());
         throw error;
@@ -104,11 +123,48 @@ export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']
       await reread();
       sender.current?.now();
     },
-    [inspectionId, reread],
+    [reread],
+  );
+
+  const record = useCallback(
+    (rows: readonly SentRow[]) => keep(() => keepAct({ inspectionId, rows, keptAt: Date.now() })),
+    [inspectionId, keep],
+  );
+
+  const photograph = useCallback(
+    (
+      file: PictureFile,
+      at: { readonly place: Place; readonly item: string; readonly subject: string },
+    ) =>
+      keep(async () => {
+        const fileId = uuidV7();
+        const { name, type } = file;
+        const bytes = await file.arrayBuffer();
+        await keepPicture(
+          {
+            fileId,
+            inspectionId,
+            name,
+            type,
+            bytes,
+            item: at.item,
+            announceAct: uuidV7(),
+            confirmAct: uuidV7(),
+          },
+          {
+            inspectionId,
+            rows: [photographRow(at.place, at.subject, fileId)],
+            keptAt: Date.now(),
+          },
+        );
+      }),
+    [inspectionId, keep],
   );
 
   const sendAgain = useCallback(
     async (seq: number) => {
+      const ids = { fileId: uuidV7(), announceAct: uuidV7(), confirmAct: uuidV7() };
+      await renewPicture(seq, ids);
       await changeActs([seq], (act) => ({
         ...act,
         state: 'waiting',
@@ -141,6 +197,8 @@ export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']
     outcome,
     saved: { state, at: clock(zone, failedAt ?? changedAt) },
     record,
+    photograph,
+    pictures,
     sendAgain,
   };
 };

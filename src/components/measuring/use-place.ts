@@ -14,17 +14,31 @@ export const usePlace = (sheet: Sheet, firstPart: string) => {
   const { inspectionId } = sheet;
   const [first] = positionsOf(sheet.layout);
   const [place, setPlace] = useState<Kept>(() => ({
-    cursor: { bore: first === undefined ? '' : boreName(first), part: firstPart, set: 1 },
+    cursor: {
+      bore: sheet.second ?? (first === undefined ? '' : boreName(first)),
+      part: firstPart,
+      set: sheet.second === undefined ? 1 : 2,
+    },
     setUp: usualSetUp(sheet.gauges, sheet.servedAt.slice(0, 10)),
   }));
   const [isRead, setIsRead] = useState(false);
 
   useEffect(() => {
     readPlace<Kept>(inspectionId)
-      .then((kept) => kept !== undefined && setPlace(kept))
+      .then((kept) => {
+        if (kept === undefined) return;
+        const { second } = sheet;
+        const elsewhere =
+          second !== undefined && (kept.cursor.bore !== second || kept.cursor.set < 2);
+        setPlace((usual) => ({
+          cursor: elsewhere ? { ...usual.cursor, part: kept.cursor.part } : kept.cursor,
+          // What a newer version chooses besides has its usual answer.
+          setUp: { ...usual.setUp, ...kept.setUp },
+        }));
+      })
       .catch(() => undefined)
       .finally(() => setIsRead(true));
-  }, [inspectionId]);
+  }, [inspectionId, sheet]);
 
   useEffect(() => {
     if (isRead) keepPlace(inspectionId, place).catch(() => undefined);
@@ -40,5 +54,13 @@ export const usePlace = (sheet: Sheet, firstPart: string) => {
       setPlace(({ cursor, setUp }) => ({ cursor, setUp: { ...setUp, ...to } })),
     [],
   );
-  return { cursor: place.cursor, setUp: place.setUp, isRead, go, setUpAs };
+  /** Goes there, resolved once this device has it: for leaving the page. */
+  const goAndKeep = useCallback(
+    (to: Partial<Cursor>) => {
+      go(to);
+      return keepPlace(inspectionId, { ...place, cursor: { ...place.cursor, ...to } });
+    },
+    [go, inspectionId, place],
+  );
+  return { goAndKeep, cursor: place.cursor, setUp: place.setUp, isRead, go, setUpAs };
 };

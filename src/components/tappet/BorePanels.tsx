@@ -26,6 +26,8 @@ interface BoreHeaderProps {
   /** "min 0.0013 in, max 0.0019 in". */
   readonly limits: string;
   readonly advisory: boolean;
+  /** Why it is read here, where that says more: "near a limit: the full sheet is asked". */
+  readonly why?: string;
 }
 
 /** Which bore, under which clause, against which limits. */
@@ -48,7 +50,8 @@ export const BoreHeader = (props: BoreHeaderProps) => (
           </>
         ) : (
           <>
-            <strong>Mandatory:</strong> <span className="note">a breach can disqualify</span>
+            <strong>Mandatory:</strong>{' '}
+            <span className="note">{props.why ?? 'a breach can disqualify'}</span>
           </>
         )}
       </p>

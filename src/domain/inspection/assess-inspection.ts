@@ -35,6 +35,7 @@ import { joinSets } from './measure/join-sets';
 import { measureSet, type SetResult } from './measure/measure-position';
 import { plainNumbers } from './measure/plain-numbers';
 import { referencesFrom } from './measure/reference-parts';
+import { type RunOutcome, runOutcomes } from './measure/run-outcome';
 import type { Capture } from './measure/runs';
 import { choicesFrom, type SetChoice } from './second-set/choice';
 import { type SecondSet, secondSetsOf, standingFacts } from './second-set/second-sets';
@@ -75,6 +76,8 @@ export interface InspectionAssessment {
   readonly completeness: Completeness;
   /** Bores whose closing zero failed: to be measured again. */
   readonly redo: readonly BorePosition[];
+  /** Every zero run that was closed. */
+  readonly runs: readonly RunOutcome[];
   readonly judged: readonly JudgedReading[];
   readonly facts: Facts;
 }
@@ -170,6 +173,7 @@ export const assessInspection = (record: InspectionRecord): InspectionAssessment
     redo: bores
       .filter(({ sets }) => sets.some(({ measurement }) => measurement.redo))
       .map(({ position }) => position),
+    runs: runOutcomes(capture),
     judged,
     facts,
   };

@@ -86,6 +86,15 @@ const check = async (inspector: Visitor, story: Story): Promise<void> => {
   await look(inspector, 'checks');
 };
 
+/** Every place in full, whatever the plan asks. */
+const readInFull = async ({ page }: Visitor): Promise<void> => {
+  await page.getByRole('button', { name: 'More' }).click();
+  await page.getByRole('button', { name: /^Set up/ }).click();
+  await page.getByLabel('How much').selectOption('full');
+  await page.getByRole('button', { name: 'Back' }).click();
+  await page.getByRole('button', { name: 'Back' }).click();
+};
+
 /** One bore in full: checks, lifter, an oversize foot, the bore against the ring between two zeros. */
 export const measureBore = async (
   inspector: Visitor,
@@ -97,6 +106,7 @@ export const measureBore = async (
   await check(inspector, story);
 
   await part(inspector, 'Lifter');
+  await readInFull(inspector);
   await enter(inspector, '8423', { cell: 'Body, upper, Along', shown: '0.8423' });
   await enter(inspector, '8432', { cell: 'Body, upper, Across', shown: '0.8432' });
   await page.getByRole('button', { name: 'Strike last reading' }).click();
@@ -139,15 +149,14 @@ export const measureBore = async (
   await pad.getByRole('button', { name: '1', exact: true }).click();
   await pad.getByRole('button', { name: /^Enter/ }).click();
   await page.getByRole('img', { name: /closing zero 0\.1/ }).waitFor();
+  await page.getByText('The zero held').waitFor();
+  await pad.getByRole('button', { name: 'Enter zero seen' }).click();
   // Ring 0.8440 in, dial −0.1 to +0.2 less its share of 0.1 of drift, lifter 0.842275 in.
   await page.getByText(/1\.725 ± /).waitFor();
   await look(inspector, 'bore');
 
-  await page.getByRole('button', { name: 'Photograph, set up, more' }).click();
-  await page.getByRole('button', { name: 'Photograph this bore' }).click();
-  await look(inspector, 'bore-photograph');
-  await page.getByLabel('Photograph of 3 exhaust').setInputFiles(picture);
-  await page.getByRole('button', { name: 'Photograph, set up, more' }).waitFor();
+  await page.getByLabel(/^Photograph/).setInputFiles(picture);
+  await page.getByText('3 exhaust: 1').waitFor();
   await saved(inspector);
 };
 

@@ -1,6 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import type { KeptAct } from '@/components/measuring/queue/device-store';
-import { type PostAnswer, sendWaiting } from '@/components/measuring/queue/send-waiting';
+import {
+  type PictureAnswer,
+  type PostAnswer,
+  sendWaiting,
+} from '@/components/measuring/queue/send-waiting';
 import { uuidV7 } from '@/components/measuring/queue/uuid-v7';
 import { checkRow } from '@/components/measuring/sheet/rows';
 import type { CapturesRequest } from '@/contracts/inspection/captures';
@@ -11,6 +15,7 @@ const WHOLE = { bank: '', cylinder: '', valve: '' } as const;
 const bay = (
   count: number,
   answer: (body: CapturesRequest, nth: number) => PostAnswer | 'lost',
+  bring: (pictureId: string) => PictureAnswer = () => ({ kind: 'kept' }),
 ) => {
   const acts: KeptAct[] = Array.from({ length: count }, (_, i) => ({
     seq: i + 1,
@@ -28,6 +33,7 @@ const bay = (
       changeActs: async (seqs, change) => {
         for (const seq of seqs) acts[seq - 1] = change(acts[seq - 1] as KeptAct);
       },
+      sendPicture: async (pictureId) => bring(pictureId),
       newSending: () => {
         made += 1;
         return { act: `sending-${made}`, clockOffsetMs: made * 1000 };
@@ -109,5 +115,52 @@ describe('ids made on the device', () => {
       expect(id).toMatch(/^[0-9a-f]{8}-[0-9a-f]{4}-7[0-9a-f]{3}-[89ab][0-9a-f]{3}-[0-9a-f]{12}$/);
     expect([...ids].sort()).toEqual(ids);
     expect(new Set(ids).size).toBe(4);
+  });
+});
+
+describe('photographs that wait on the device', () => {
+  const withPictures = (bring: (pictureId: string) => PictureAnswer) => {
+    const brought: string[] = [];
+    const made = bay(
+      4,
+      () => kept,
+      (id) => {
+        brought.push(id);
+        return bring(id);
+      },
+    );
+    for (const [at, act] of made.acts.entries())
+      made.acts[at] = { ...act, inspectionId: 'a', ...(at < 2 ? { pictureId: `p${at + 1}` } : {}) };
+    return { ...made, brought };
+  };
+
+  it('go after the numbers and in their own order, each row once its picture is there', async () => {
+    const { send, posts, values, brought, server } = withPictures(() => ({ kind: 'kept' }));
+    expect(await send()).toBe('all-sent');
+    expect(posts.map(values)).toEqual([['3', '4'], ['1'], ['2']]);
+    expect(brought).toEqual(['p1', 'p2']);
+    expect(server().sort()).toEqual(['1', '2', '3', '4']);
+  });
+
+  it('without signal wait for it; no row goes without its picture', async () => {
+    let signal = false;
+    const { send, server, acts } = withPictures(() => ({
+      kind: signal ? 'kept' : 'unreachable',
+    }));
+    expect(await send()).toBe('unreachable');
+    expect(server()).toEqual(['3', '4']);
+    expect(acts.filter(({ state }) => state === 'waiting')).toHaveLength(2);
+    signal = true;
+    expect(await send()).toBe('all-sent');
+    expect(server()).toEqual(['3', '4', '1', '2']);
+  });
+
+  it('that are refused stay with the words, and hold up no other', async () => {
+    const { send, server, acts } = withPictures((id) =>
+      id === 'p1' ? { kind: 'refused', detail: 'This is no picture.' } : { kind: 'kept' },
+    );
+    expect(await send()).toBe('all-sent');
+    expect(acts[0]).toMatchObject({ state: 'refused', problem: 'This is no picture.' });
+    expect(server()).toEqual(['3', '4', '2']);
   });
 });

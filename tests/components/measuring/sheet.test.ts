@@ -1,18 +1,19 @@
 import { describe, expect, it } from 'vitest';
 import { assessSheet } from '@/components/measuring/sheet/assess-sheet';
+import { askedBy } from '@/components/measuring/sheet/flow/asked';
+import { nextStep, type Standing } from '@/components/measuring/sheet/flow/steps';
+import { questionOf } from '@/components/measuring/sheet/keys/question';
+import { aloud, NOTHING, press, typedNumber } from '@/components/measuring/sheet/keys/typing';
 import { partsOf } from '@/components/measuring/sheet/parts';
-import { questionOf } from '@/components/measuring/sheet/question';
 import { readingRow } from '@/components/measuring/sheet/rows';
 import { type SetUp, scaleFor, usualSetUp } from '@/components/measuring/sheet/set-up';
 import type { SheetGauge } from '@/components/measuring/sheet/sheet';
-import { nextStep, type Standing } from '@/components/measuring/sheet/steps';
-import { aloud, NOTHING, press, typedNumber } from '@/components/measuring/sheet/typing';
 import type { PadKey } from '@/components/tappet/keys';
 import { TAPPET_RULE_SET } from '@/domain/rulebook/rule-sets/tappet';
 import { boreName, positionsOf } from '@/domain/tappet/layout/bore-layout';
 import { GENERIC_LAYOUTS } from '@/domain/tappet/layout/generic-layouts';
 
-const type = (keys: string, decimals: number) =>
+const type = (keys: string, decimals: number, base?: string) =>
   typedNumber(
     [...keys].reduce(
       (typed, key) =>
@@ -23,6 +24,7 @@ const type = (keys: string, decimals: number) =>
       NOTHING,
     ),
     decimals,
+    base,
   );
 
 describe('typing', () => {
@@ -43,6 +45,19 @@ describe('typing', () => {
     ['.', 4, undefined],
   ])('%s with %i decimals implied is %s', (keys, decimals, text) => {
     expect(type(keys, decimals)).toBe(text);
+  });
+
+  it.each([
+    ['23', '0.8423'],
+    ['3', '0.8423'],
+    ['8423', '0.8423'],
+    ['.8431', '0.8431'],
+    // Three digits may be four with one dropped: nothing is completed.
+    ['842', '0.0842'],
+    ['-23', '-0.0023'],
+    ['', undefined],
+  ])('%s of a known size of 0.8420 is %s', (keys, text) => {
+    expect(type(keys, 4, '0.8420')).toBe(text);
   });
 
   it('is read back with its sign', () => {
@@ -69,7 +84,7 @@ const gauges = [
   gauge({ code: 'DB-07', kind: 'dial-bore-gauge', largerReads: 'plus' }),
   gauge({ code: 'SR-03', kind: 'setting-ring', size: { text: '0.8440', unit: 'in' } }),
 ];
-const setUp = usualSetUp(gauges, '2026-07-11');
+const setUp: SetUp = { ...usualSetUp(gauges, '2026-07-11'), form: 'full' };
 
 describe('the usual set-up', () => {
   it('takes gauges in calibration, and the unit that they resolve', () => {
@@ -121,19 +136,21 @@ describe('what comes next', () => {
   if (layout === undefined) throw new Error('no layout');
   const positions = positionsOf(layout);
   const walk = (chosen: SetUp) => {
-    const part = partsOf(TAPPET_RULE_SET, chosen.form).find(
+    const parts = partsOf(TAPPET_RULE_SET, chosen.form).filter(
       (one) => one.quantity === 'tappet-bore-diameter',
     );
+    const [part] = parts;
     const [first] = positions;
     if (part === undefined || first === undefined) throw new Error('nothing to read');
     let standing: Standing = {
       part,
+      parts,
+      asked: askedBy(chosen, []),
       cursor: { bore: boreName(first), part: part.quantity, set: 1 },
       setUp: chosen,
       positions,
       position: first,
       judged: [],
-      zeros: [],
       outOfReach: new Set(['1 intake']),
     };
     const path: string[] = [];

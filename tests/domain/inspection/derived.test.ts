@@ -104,7 +104,7 @@ describe('reference parts', () => {
           n: 3,
           plus: { text: '0.005', unit: 'in' },
           minus: { text: '0.005', unit: 'in' },
-          decisionRule: { kind: 'simple-acceptance' },
+          decisionRule: { kind: 'guarded-rejection', guardFactor: '1' },
           comparison: { method: 'absolute' },
         },
       },

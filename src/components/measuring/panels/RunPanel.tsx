@@ -2,24 +2,11 @@ import { RunLine } from '@/components/tappet/RunLine';
 import type { ZeroRow } from '@/domain/inspection/capture/rows';
 import { convert } from '@/domain/quantity/convert';
 import { fromStored } from '@/domain/quantity/stored';
-import { type BorePosition, boreName } from '@/domain/tappet/layout/bore-layout';
-import type { Scale, SetUp } from '../sheet/set-up';
-import type { SheetGauge } from '../sheet/sheet';
-
-interface RunPanelProps {
-  readonly setUp: SetUp;
-  readonly gauges: readonly SheetGauge[];
-  /** Whether what is read now is read from a zero. */
-  readonly comparative: boolean;
-  readonly stops: readonly BorePosition[];
-  readonly current: string;
-  readonly zeros: readonly ZeroRow[];
-  readonly runId: string | undefined;
-  /** Whether that run still waits for its closing zero on this device. */
-  readonly open: boolean;
-  readonly scale: Scale | undefined;
-  readonly onClosing: () => void;
-}
+import { boreName } from '@/domain/tappet/layout/bore-layout';
+import type { Bay } from '../bay';
+import { boresIn, scopeOf } from '../sheet/flow/steps';
+import { takenAt } from '../sheet/flow/taken';
+import { isComparative } from '../sheet/set-up';
 
 const asRead = (zero: ZeroRow | undefined, unit: string): string | undefined =>
   zero &&
@@ -28,28 +15,39 @@ const asRead = (zero: ZeroRow | undefined, unit: string): string | undefined =>
     : convert(fromStored(zero.reading, 'length'), unit).text);
 
 /** The zero run that is open, or a sentence where no zero is used. */
-export const RunPanel = (props: RunPanelProps) => {
-  const { setUp, gauges, comparative, stops, current, zeros, runId, scale, onClosing } = props;
-  if (!comparative || scale === undefined)
+export const RunPanel = ({
+  bay,
+  onClosing,
+}: {
+  readonly bay: Bay;
+  readonly onClosing: () => void;
+}) => {
+  const { sheet, setUp, cursor, position, positions, part, scale, rows, judged } = bay;
+  if (part === undefined || scale === undefined || !isComparative(setUp, part.quantity))
     return (
       <div className="run">
         <p className="note col-span-full">
-          Read as it stands on the gauge; no zero run. Check the gauge’s own zero before the first
-          part.
+          {part === undefined
+            ? 'Checks and the rack need no zero.'
+            : 'Read as it stands on the gauge; no zero run. Check the gauge’s own zero before the first part.'}
         </p>
       </div>
     );
-  const ring = gauges.find((gauge) => gauge.id === setUp.ringId);
-  const [first] = stops;
+  const ring = sheet.gauges.find((gauge) => gauge.id === setUp.ringId);
   const onRing = setUp.zeroedOn === 'ring' && ring?.size !== undefined;
+  const scope = cursor.run?.scope ?? scopeOf(setUp, position, cursor.set);
+  const stops = boresIn(scope, positions);
+  // Without a run that is open, the one that was closed just now, or by which this bore was read.
+  const seen = [...takenAt(judged, part, position, cursor.set).values()].at(-1)?.row.zeroRunId;
+  const runId = cursor.run?.id ?? cursor.closed ?? seen;
   const find = (kind: ZeroRow['kind']) =>
     runId === undefined
       ? undefined
-      : zeros.find((zero) => zero.runId === runId && zero.kind === kind);
+      : rows.zeros.findLast((zero) => zero.runId === runId && zero.kind === kind);
   return (
     <div className="run">
       <div className="run-name">
-        <p>{onRing ? `Zero for bank ${first?.bank ?? ''}` : `Zero for ${current}`}</p>
+        <p>{scope.startsWith('bank') ? `Zero for ${scope}` : `Zero for ${boreName(position)}`}</p>
         <p className="note">
           {onRing
             ? `Ring ${ring.code}, ${ring.size?.text} ${ring.size?.unit}`
@@ -59,14 +57,14 @@ export const RunPanel = (props: RunPanelProps) => {
       <RunLine
         opening={asRead(find('opening'), scale.unit)}
         closing={asRead(find('closing'), scale.unit)}
-        current={current}
-        stops={stops.map((position) => ({
-          key: boreName(position),
-          cylinder: String(position.cylinder),
-          valve: position.valve,
+        current={cursor.bore}
+        stops={stops.map((one) => ({
+          key: boreName(one),
+          cylinder: String(one.cylinder),
+          valve: one.valve,
         }))}
       />
-      <button className="btn" type="button" disabled={!props.open} onClick={onClosing}>
+      <button className="btn" type="button" disabled={cursor.run === undefined} onClick={onClosing}>
         Take the closing zero
       </button>
     </div>

@@ -18,12 +18,28 @@ export interface KeptAct {
   readonly problem?: string | undefined;
   /** Instant by the device's clock. */
   readonly keptAt: number;
+  /** The picture that its rows name: it goes to the server before them. */
+  readonly pictureId?: string | undefined;
+}
+
+/** A photograph on its way; every try sends it under the same ids. Bytes, as some stores lose blobs. */
+export interface KeptPicture {
+  readonly fileId: string;
+  readonly inspectionId: string;
+  readonly name: string;
+  readonly type: string;
+  readonly bytes: ArrayBuffer;
+  /** What it shows: the bore's name. */
+  readonly item: string;
+  readonly announceAct: string;
+  readonly confirmAct: string;
 }
 
 interface Schema extends DBSchema {
   acts: { key: number; value: KeptAct; indexes: { 'by-inspection': string } };
   /** Where the inspector stands on each inspection's sheet, and how it is set up. */
   places: { key: string; value: { readonly inspectionId: string; readonly place: unknown } };
+  pictures: { key: string; value: KeptPicture; indexes: { 'by-inspection': string } };
 }
 
 const NAME = 'tagwire-bay';
@@ -31,11 +47,21 @@ const NAME = 'tagwire-bay';
 let open: Promise<IDBPDatabase<Schema>> | undefined;
 
 const connect = (): Promise<IDBPDatabase<Schema>> => {
-  open ??= openDB<Schema>(NAME, 1, {
-    upgrade: (db) => {
+  open ??= openDB<Schema>(NAME, 2, {
+    upgrade: (db, from) => {
+      if (from < 2) {
+        const pictures = db.createObjectStore('pictures', { keyPath: 'fileId' });
+        pictures.createIndex('by-inspection', 'inspectionId');
+      }
+      if (from >= 1) return;
       const acts = db.createObjectStore('acts', { keyPath: 'seq', autoIncrement: true });
       acts.createIndex('by-inspection', 'inspectionId');
       db.createObjectStore('places', { keyPath: 'inspectionId' });
+    },
+    // A page of an older version in another tab would hold up the new one for good.
+    blocking: (_current, _next, event) => {
+      (event.target as IDBDatabase).close();
+      open = undefined;
     },
     // Some browsers drop the connection without a word: the next use opens it anew.
     terminated: () => {
@@ -49,7 +75,7 @@ const connect = (): Promise<IDBPDatabase<Schema>> => {
 };
 
 /** Runs on the store; once more on a new connection when the first was lost. */
-const withStore = async <T>(run: (db: IDBPDatabase<Schema>) => Promise<T>): Promise<T> => {
+export const withStore = async <T>(run: (db: IDBPDatabase<Schema>) => Promise<T>): Promise<T> => {
   try {
     return await run(await connect());
   } catch {
@@ -58,7 +84,7 @@ const withStore = async <T>(run: (db: IDBPDatabase<Schema>) => Promise<T>): Prom
   }
 };
 
-const strict = { durability: 'strict' } as const;
+export const strict = { durability: 'strict' } as const;
 
 /** Keeps an act; resolves when it is written through to the device. */
 export const keepAct = (act: Omit<KeptAct, 'seq' | 'state'>): Promise<void> =>
@@ -89,11 +115,14 @@ export const changeActs = (
     await write.done;
   });
 
-/** Lets go of sent acts whose rows the server has shown to have. */
-export const forgetActs = (seqs: readonly number[]): Promise<void> =>
+/** Lets go of sent acts whose rows the server has shown to have, and of their pictures. */
+export const forgetActs = (acts: readonly KeptAct[]): Promise<void> =>
   withStore(async (db) => {
-    const write = db.transaction('acts', 'readwrite');
-    for (const seq of seqs) await write.store.delete(seq);
+    const write = db.transaction(['acts', 'pictures'], 'readwrite');
+    for (const { seq, pictureId } of acts) {
+      if (seq !== undefined) await write.objectStore('acts').delete(seq);
+      if (pictureId !== undefined) await write.objectStore('pictures').delete(pictureId);
+    }
     await write.done;
   });
 

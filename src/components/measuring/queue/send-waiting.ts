@@ -9,6 +9,8 @@ export interface SendDeps {
     change: (act: KeptAct) => KeptAct,
   ) => Promise<void>;
   readonly post: (inspectionId: string, body: CapturesRequest) => Promise<PostAnswer>;
+  /** Brings a picture to the server; asked again, it brings the same one and nothing twice. */
+  readonly sendPicture: (pictureId: string) => Promise<PictureAnswer>;
   /** A new act id, the clock's offset, and what this device makes of its rows. */
   readonly newSending: (inspectionId: string) => Sending;
 }
@@ -21,6 +23,10 @@ export type PostAnswer =
   /** No answer, or none that says what became of it. */
   | { readonly kind: 'unreachable' };
 
+export type PictureAnswer =
+  | { readonly kind: 'kept' | 'sign-in' | 'unreachable' }
+  | { readonly kind: 'refused'; readonly detail: string };
+
 export type SendOutcome = 'all-sent' | 'sign-in' | 'unreachable';
 
 const MOST_ROWS = 60;
@@ -28,10 +34,16 @@ const MOST_ROWS = 60;
 const seqsOf = (acts: readonly KeptAct[]): readonly number[] =>
   acts.flatMap(({ seq }) => (seq === undefined ? [] : [seq]));
 
-/** The next acts that go together: those of a sending already begun, else the oldest of one inspection. */
-const nextActs = (waiting: readonly KeptAct[], alone: ReadonlySet<number>): readonly KeptAct[] => {
+/**
+ * The next acts that go together: those of a sending already begun, else the oldest of one inspection.
+ * Numbers go before pictures, so that no reading waits behind megabytes; each kind keeps its order.
+ */
+const nextActs = (kept: readonly KeptAct[], alone: ReadonlySet<number>): readonly KeptAct[] => {
+  const numbers = kept.filter((act) => act.pictureId === undefined);
+  const waiting = numbers.length > 0 ? numbers : kept;
   const [first] = waiting;
   if (first === undefined) return [];
+  if (first.pictureId !== undefined) return [first];
   if (first.sending !== undefined)
     return waiting.filter((act) => act.sending?.act === first.sending?.act);
   if (first.seq !== undefined && alone.has(first.seq)) return [first];
@@ -59,6 +71,15 @@ export const sendWaiting = async (deps: SendDeps): Promise<SendOutcome> => {
     const acts = nextActs(waiting, alone);
     const [first] = acts;
     if (first === undefined) return 'all-sent';
+    if (first.pictureId !== undefined) {
+      const brought = await deps.sendPicture(first.pictureId);
+      if (brought.kind === 'sign-in' || brought.kind === 'unreachable') return brought.kind;
+      if (brought.kind === 'refused') {
+        const problem = brought.detail;
+        await deps.changeActs(seqsOf(acts), (act) => ({ ...act, state: 'refused', problem }));
+        continue;
+      }
+    }
     const sending = first.sending ?? deps.newSending(first.inspectionId);
     const seqs = seqsOf(acts);
     if (first.sending === undefined) await deps.changeActs(seqs, (act) => ({ ...act, sending }));

@@ -31,8 +31,6 @@ const told = (assessment: InspectionAssessment | undefined): CapturesRequest['ta
     states: Object.fromEntries(assessment.findings.map(({ clause, state }) => [clause, state])),
   };
 
-const judge = (rows: SheetRows) => ({ judged: judgeReadings(rows.readings, rows.remarks) });
-
 /** A reading just entered, before it has gone round. */
 const counting = (row: SentReading): JudgedReading => ({
   row: {
@@ -45,6 +43,14 @@ const counting = (row: SentReading): JudgedReading => ({
   state: 'counts',
 });
 
+/** The rows with one reading more, before it has gone round. */
+const withReading = (rows: SheetRows, row: SentReading): SheetRows => ({
+  ...rows,
+  readings: [...rows.readings, counting(row).row],
+});
+
+const judge = (rows: SheetRows) => ({ judged: judgeReadings(rows.readings, rows.remarks) });
+
 const outOfReach = (rows: SheetRows): ReadonlySet<string> =>
   new Set(
     rows.remarks
@@ -52,4 +58,4 @@ const outOfReach = (rows: SheetRows): ReadonlySet<string> =>
       .map((row) => positionKey(row.place, 'bore')),
   );
 
-export const assessSheet = { record, told, judge, counting, outOfReach } as const;
+export const assessSheet = { record, told, judge, counting, withReading, outOfReach } as const;

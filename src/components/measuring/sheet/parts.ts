@@ -1,57 +1,40 @@
-import type { Clause } from '@/domain/rulebook/clause';
 import {
-  getQuantityEntry,
-  type QuantityName,
-  readingsFor,
-} from '@/domain/rulebook/quantity-catalogue';
+  axesOf,
+  type CellPlace,
+  depthsOf,
+  type Extent,
+  type Named,
+  placesFor,
+} from '@/domain/inspection/plan/places';
+import { askedFor, insteadOf } from '@/domain/inspection/plan/worked-out';
+import type { Clause } from '@/domain/rulebook/clause';
+import { getQuantityEntry, type QuantityName } from '@/domain/rulebook/quantity-catalogue';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 
-/** How much is read at each place: one reading to screen, or a full sheet. */
-export type Form = 'screening' | 'full' | 'third-axis';
+/** How much is read at each place: as the plan asks, or the same everywhere. */
+export type Form = 'plan' | 'screening' | 'full' | 'third-axis';
 
 export const FORM_WORDS: Readonly<Record<Form, string>> = {
+  plan: 'As the rules ask: screening first',
   screening: 'Screening: one reading a place',
   full: 'Full: two depths, two axes',
   'third-axis': 'Full, with a third axis',
 };
 
-export interface CellPlace {
-  readonly depth: string;
-  readonly axis: string;
-}
-
-/** One kind of number read per bore, cylinder or engine. */
+/** One kind of number read per bore, cylinder or engine, or of parts of a reference set. */
 export interface Part {
+  /** A quantity's name; that of a reference set has a mark before it. */
+  readonly key: string;
   readonly quantity: QuantityName;
   readonly label: string;
   readonly per: 'bore' | 'cylinder' | 'engine' | 'car';
-  readonly depths: readonly { readonly key: string; readonly label: string }[];
-  readonly axes: readonly { readonly key: string; readonly label: string }[];
+  readonly depths: readonly Named[];
+  readonly axes: readonly Named[];
   /** The clause that it is read for; an advisory one where no mandatory one asks. */
   readonly clause?: Clause | undefined;
+  /** Parts of a reference set, one a row. */
+  readonly reference?: boolean | undefined;
 }
-
-const AXES = [
-  { key: 'along', label: 'Along' },
-  { key: 'across', label: 'Across' },
-  { key: 'third', label: 'Third axis' },
-] as const;
-
-const DEPTHS: Partial<Record<QuantityName, readonly { key: string; label: string }[]>> = {
-  'lifter-body-diameter': [
-    { key: 'upper', label: 'Body, upper' },
-    { key: 'lower', label: 'Body, lower' },
-  ],
-  'foot-diameter': [{ key: 'foot', label: 'Foot' }],
-  'tappet-bore-diameter': [
-    { key: 'above', label: 'Above the gallery' },
-    { key: 'below', label: 'Below the gallery' },
-  ],
-  'cylinder-bore': [
-    { key: 'top', label: 'Top of the bore' },
-    { key: 'bottom', label: 'Bottom of the bore' },
-  ],
-};
 
 const SHORT: Partial<Record<QuantityName, string>> = {
   'lifter-body-diameter': 'Lifter',
@@ -59,9 +42,14 @@ const SHORT: Partial<Record<QuantityName, string>> = {
   'tappet-bore-diameter': 'Bore',
 };
 
-/** What is read so that a quantity can be worked out, displacement from its bores and stroke included. */
-const readFor = (name: QuantityName): readonly QuantityName[] =>
-  name === 'displacement' ? ['cylinder-bore', 'stroke'] : readingsFor(name);
+const labelOf = (quantity: QuantityName): string =>
+  SHORT[quantity] ?? getQuantityEntry(quantity).label;
+
+/** What may be read for a quantity, the other way to it included. */
+const readFor = (name: QuantityName): readonly QuantityName[] => [
+  ...askedFor(name),
+  ...insteadOf(name),
+];
 
 const perOf = (quantity: QuantityName): Part['per'] => {
   const { per } = getQuantityEntry(quantity);
@@ -69,9 +57,10 @@ const perOf = (quantity: QuantityName): Part['per'] => {
 };
 
 const clausesFor = (rules: Pick<RulesInForce, 'clauses'>, quantity: QuantityName) =>
-  rules.clauses.filter(
-    ({ requirement }) =>
-      requirement?.kind === 'limit' && readFor(requirement.quantity).includes(quantity),
+  rules.clauses.filter(({ requirement }) =>
+    requirement?.kind === 'limit'
+      ? readFor(requirement.quantity).includes(quantity)
+      : requirement?.kind === 'reference-average' && requirement.quantity === quantity,
   );
 
 /** The clause shown while a quantity is read: its own first, then a mandatory one, then advice. */
@@ -79,55 +68,71 @@ const clauseFor = (rules: Pick<RulesInForce, 'clauses'>, quantity: QuantityName)
   const asking = clausesFor(rules, quantity);
   return (
     asking.find(
-      ({ requirement }) => requirement?.kind === 'limit' && requirement.quantity === quantity,
+      ({ requirement }) =>
+        requirement !== undefined && 'quantity' in requirement && requirement.quantity === quantity,
     ) ??
     asking.find(({ force }) => force === 'mandatory') ??
     asking[0]
   );
 };
 
+/** A clause about the mean of reference parts has them read first: at least as many as it counts. */
+const referencePartsOf = (clause: Clause): readonly Part[] => {
+  const rule = clause.requirement;
+  if (rule?.kind !== 'reference-average') return [];
+  const rows = Array.from({ length: Math.max(rule.n, 1) + 2 }, (_, i) => ({
+    key: `R${i + 1}`,
+    label: `Reference part R${i + 1}${i < rule.n ? '' : ', if there is one'}`,
+  }));
+  return [
+    {
+      key: `reference ${rule.quantity}`,
+      quantity: rule.quantity,
+      label: `Reference: ${labelOf(rule.quantity).toLowerCase()}`,
+      per: 'engine',
+      depths: rows,
+      axes: [{ key: '', label: 'Value' }],
+      clause,
+      reference: true,
+    },
+  ];
+};
+
 /** The parts of the sheet that these rules ask for, in the rulebook's order; lifter before bore. */
 export const partsOf = (rules: Pick<RulesInForce, 'clauses'>, form: Form): readonly Part[] => {
-  const asked = rules.clauses.flatMap(({ requirement }) =>
-    requirement?.kind === 'limit' ? readFor(requirement.quantity) : [],
-  );
+  const asked = rules.clauses.flatMap(({ requirement }) => {
+    if (requirement?.kind === 'limit') return readFor(requirement.quantity);
+    return requirement?.kind === 'reference-average' ? [requirement.quantity] : [];
+  });
   const order: readonly QuantityName[] = [
     'lifter-body-diameter',
     'foot-diameter',
     'tappet-bore-diameter',
   ];
   const quantities = [...order.filter((name) => asked.includes(name)), ...asked];
-  return [...new Set(quantities)].map((quantity): Part => {
-    const depths = DEPTHS[quantity] ?? [{ key: '', label: 'Reading' }];
-    const round = quantity.endsWith('diameter') || quantity === 'cylinder-bore';
-    const axes = round
-      ? AXES.slice(0, form === 'third-axis' && quantity === 'tappet-bore-diameter' ? 3 : 2)
-      : [{ key: '', label: 'Value' }];
-    const one = form === 'screening';
-    return {
-      quantity,
-      label: SHORT[quantity] ?? getQuantityEntry(quantity).label,
-      per: perOf(quantity),
-      depths: one ? depths.slice(0, 1) : depths,
-      axes: one ? axes.slice(0, 1) : axes,
-      clause: clauseFor(rules, quantity),
-    };
-  });
+  return [
+    ...[...new Set(quantities)].map(
+      (quantity): Part => ({
+        key: quantity,
+        quantity,
+        label: labelOf(quantity),
+        per: perOf(quantity),
+        depths: depthsOf(quantity),
+        axes: axesOf(quantity).filter(({ key }) => form === 'third-axis' || key !== 'third'),
+        clause: clauseFor(rules, quantity),
+      }),
+    ),
+    ...rules.clauses.flatMap(referencePartsOf),
+  ];
 };
 
-/** The checks without numbers, each asked once for the engine or once a bore. */
-export const checksOf = (rules: Pick<RulesInForce, 'clauses'>): readonly Clause[] =>
-  rules.clauses.filter(
-    ({ requirement, force }) =>
-      force !== 'text' &&
-      (requirement?.kind === 'choice' ||
-        requirement?.kind === 'yes-no' ||
-        requirement?.kind === 'plug-gauge' ||
-        requirement?.kind === 'matches-paperwork'),
-  );
-
-export const cellsOf = (part: Part): readonly CellPlace[] =>
-  part.depths.flatMap(({ key: depth }) => part.axes.map(({ key: axis }) => ({ depth, axis })));
+/** The cells of an extent; of a reference set those that its clause counts. */
+export const cellsFor = (part: Part, extent: Extent): readonly CellPlace[] => {
+  if (part.reference !== true) return placesFor(part.quantity, extent);
+  const rule = part.clause?.requirement;
+  const count = rule?.kind === 'reference-average' ? rule.n : part.depths.length;
+  return part.depths.slice(0, count).map(({ key: depth }) => ({ depth, axis: '' }));
+};
 
 export const cellKey = ({ depth, axis }: CellPlace): string => `${depth}/${axis}`;
 

@@ -1,5 +1,5 @@
 import type { SentReading, SentRemark, SentZero } from '@/contracts/inspection/rows';
-import type { Place } from '@/domain/inspection/capture/rows';
+import { type Place, WHOLE_ENGINE } from '@/domain/inspection/capture/rows';
 import type { StrikeReason } from '@/domain/inspection/capture/strike-reasons';
 import type { Written } from '@/domain/quantity/dimension';
 import type { BorePosition } from '@/domain/tappet/layout/bore-layout';
@@ -60,7 +60,7 @@ export const readingRow = (
     ...made(),
     quantity: part.quantity,
     place: placeOf(position, part.per),
-    depth,
+    depth: part.reference === true ? '' : depth,
     axis,
     repeat: from.repeat,
     set: from.set,
@@ -69,6 +69,7 @@ export const readingRow = (
     ...(from.runId === undefined ? {} : { zeroRunId: from.runId }),
     value: from.value,
     ...(hasTemperatures ? { temperatures: setUp.temperatures } : {}),
+    ...(part.reference === true ? { referencePart: depth } : {}),
   };
 };
 
@@ -96,6 +97,49 @@ export const notReachedRow = (place: Place, reason: string): SentRemark => ({
   place,
   remark: 'not-reached',
   subject: '',
+  reason,
+});
+
+/** The lifter of a bore comes out. */
+export const lifterOutRow = (place: Place): SentRemark => ({
+  kind: 'remark',
+  ...made(),
+  place,
+  remark: 'lifter-out',
+  reason: '',
+});
+
+/** The lifter named by the bore it came out of goes into one. */
+export const lifterInRow = (place: Place, lifter: string): SentRemark => ({
+  kind: 'remark',
+  ...made(),
+  place,
+  remark: 'lifter-in',
+  subject: lifter,
+  reason: '',
+});
+
+export const liftersReturnedRow = (
+  signedBy: string,
+  value: 'kept' | 'changed',
+  reason: string,
+): SentRemark => ({
+  kind: 'remark',
+  ...made(),
+  place: WHOLE_ENGINE,
+  remark: 'lifters-returned',
+  subject: signedBy,
+  value,
+  reason,
+});
+
+/** Which of several sets of a bore stands, with the reason. */
+export const standsRow = (place: Place, value: string, reason: string): SentRemark => ({
+  kind: 'remark',
+  ...made(),
+  place,
+  remark: 'second-set',
+  value,
   reason,
 });
 

@@ -19,8 +19,14 @@ export interface SetUp {
   readonly micrometerId: string;
   readonly boreGaugeId: string;
   readonly ringId: string;
-  /** What reads everything else. */
+  /** What reads everything else, unless a gauge was chosen for it. */
   readonly otherGaugeId: string;
+  /** A gauge chosen for one quantity, by its name. */
+  readonly gaugeIds: Readonly<Record<string, string>>;
+  /** Places that are read in full though the plan asks one reading: `tappet-bore-diameter 5 intake`. */
+  readonly fullAt: readonly string[];
+  /** Whether advisory clauses are read for too. */
+  readonly advice: boolean;
   readonly temperatures: LoggedTemperatures;
   readonly hand: 'right' | 'left';
 }
@@ -53,13 +59,16 @@ export const usualSetUp = (gauges: readonly SheetGauge[], today: string): SetUp 
   const ringId = firstOf(gauges, ['setting-ring'], today);
   const boreGaugeId = firstOf(gauges, ['dial-bore-gauge', 'telescoping-gauge'], today, LIFTER);
   return {
-    form: 'full',
+    form: 'plan',
     method: boreGaugeId === '' ? 'absolute' : 'comparative',
     zeroedOn: ringId === '' ? 'lifter' : 'ring',
     micrometerId: firstOf(gauges, ['micrometer', 'caliper'], today, LIFTER),
     boreGaugeId,
     ringId,
     otherGaugeId: firstOf(gauges, ['other', 'micrometer', 'caliper'], today, CYLINDER),
+    gaugeIds: {},
+    fullAt: [],
+    advice: false,
     temperatures: {},
     hand: 'right',
   };
@@ -70,19 +79,51 @@ const isBore = (quantity: QuantityName) => quantity === 'tappet-bore-diameter';
 export const isComparative = (setUp: SetUp, quantity: QuantityName): boolean =>
   isBore(quantity) && setUp.method === 'comparative';
 
+/** Sizes about which a quantity is usually found; a gauge that reaches them is taken first. Common practice. */
+const USUAL: Partial<Record<QuantityName, string>> = {
+  'cylinder-bore': '4',
+  stroke: '3.5',
+  'valve-lift': '0.45',
+  'lobe-lift': '0.3',
+  'valve-head-diameter': '2',
+  'deck-clearance': '0.02',
+  'gasket-bore': '4.1',
+  'gasket-thickness': '0.04',
+};
+
+/** Gauges that can read a quantity at all, by their kind and the unit of their division. */
+export const gaugesFor = (
+  quantity: QuantityName,
+  gauges: readonly SheetGauge[],
+): readonly SheetGauge[] => {
+  const { dimension } = getQuantityEntry(quantity);
+  return gauges.filter(({ kind, division }) => {
+    if (kind === 'setting-ring' || kind === 'plug-gauge') return false;
+    if (dimension === 'mass') return kind === 'scale';
+    if (kind === 'scale') return false;
+    return division === undefined || parseWritten(division, dimension).ok || kind === 'other';
+  });
+};
+
+/** The gauge that reads a quantity: the one chosen for it, else the usual one that reaches it. */
 export const gaugeFor = (
   setUp: SetUp,
   quantity: QuantityName,
   gauges: readonly SheetGauge[],
 ): SheetGauge | undefined => {
-  const { dimension } = getQuantityEntry(quantity);
-  const id = isBore(quantity)
-    ? setUp.boreGaugeId
-    : quantity === 'lifter-body-diameter' || quantity === 'foot-diameter'
-      ? setUp.micrometerId
-      : setUp.otherGaugeId;
-  const chosen = gauges.find((gauge) => gauge.id === id);
-  return dimension === 'mass' ? (gauges.find((gauge) => gauge.kind === 'scale') ?? chosen) : chosen;
+  const find = (id: string | undefined) => gauges.find((gauge) => gauge.id === id);
+  const chosen = find(setUp.gaugeIds[quantity]);
+  if (chosen !== undefined) return chosen;
+  if (isBore(quantity)) return find(setUp.boreGaugeId);
+  if (quantity === 'lifter-body-diameter' || quantity === 'foot-diameter')
+    return find(setUp.micrometerId);
+  const able = gaugesFor(quantity, gauges).filter(({ withdrawn }) => withdrawn !== true);
+  const usual = USUAL[quantity];
+  const size = usual && fromStored({ text: usual, unit: 'in' }, 'length');
+  const other = able.find(({ id }) => id === setUp.otherGaugeId);
+  const fits = (gauge: SheetGauge | undefined) =>
+    gauge !== undefined && (!size || reaches(gaugeOf(gauge, 'length'), size));
+  return fits(other) ? other : (able.find(fits) ?? other ?? able[0]);
 };
 
 /** Unit and decimals in which a quantity is typed: what the gauge's division resolves. */

@@ -30,6 +30,8 @@ export interface Sheet {
   readonly gauges: readonly SheetGauge[];
   readonly rows: SheetRows;
   readonly paperwork: PaperworkDocument | null;
+  /** A bore whose first set this page was made without: an independent second one is taken here. */
+  readonly second?: string | undefined;
   /** The server's clock when it made the page; the device measures its own against it. */
   readonly servedAt: string;
 }
@@ -37,7 +39,7 @@ export interface Sheet {
 /** Where the inspector stands. Kept on the device, so that a reload opens at the same bore. */
 export interface Cursor {
   readonly bore: string;
-  /** A part's quantity, or the checks. */
+  /** A part's key, `checks`, or `rack`. */
   readonly part: string;
   /** The cell chosen by hand; else the first empty one. */
   readonly cell?: string | undefined;
@@ -47,6 +49,8 @@ export interface Cursor {
   readonly run?: { readonly id: string; readonly scope: string } | undefined;
   /** A zero is to be read next. */
   readonly zero?: 'opening' | 'closing' | undefined;
+  /** The run that was closed just now, until what came of it has been seen. */
+  readonly closed?: string | undefined;
 }
 
 export const placeOf = (position: BorePosition, per: Part['per']): Place => {

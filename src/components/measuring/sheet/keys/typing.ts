@@ -21,12 +21,22 @@ export const press = (typed: Typed, key: Exclude<PadKey, 'enter'>): Typed => {
   return digits.length >= MOST ? typed : { digits: digits + key, negative };
 };
 
+/** Digits that are completed from a size; three would hide a digit that was dropped. */
+const COMPLETED = 2;
+
 /**
  * The number that was meant: decimals are implied by what the gauge resolves, `17` of tenths is 1.7;
- * a typed point says otherwise, and keeps at least those decimals. Nothing while no digit is typed.
+ * a typed point says otherwise, and keeps at least those decimals. Of a size that is known, one or two
+ * digits are its last: `23` of 0.8420 is 0.8423. Nothing while no digit is typed.
  */
-export const typedNumber = ({ digits, negative }: Typed, decimals: number): string | undefined => {
+export const typedNumber = (
+  { digits, negative }: Typed,
+  decimals: number,
+  base?: string,
+): string | undefined => {
   if (!/\d/.test(digits)) return undefined;
+  if (base !== undefined && !negative && /^\d+$/.test(digits) && digits.length <= COMPLETED)
+    return base.slice(0, base.length - digits.length) + digits;
   const [whole = '', part] = digits.split('.');
   const text =
     part === undefined

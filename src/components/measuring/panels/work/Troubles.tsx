@@ -1,6 +1,6 @@
 import { Caution } from '@/components/look/Caution';
 import type { SentRow } from '@/contracts/inspection/rows';
-import type { Capture } from '../use-capture';
+import type { Capture } from '../../use-capture';
 
 interface TroublesProps {
   readonly problem: string | undefined;

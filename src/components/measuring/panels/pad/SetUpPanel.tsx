@@ -1,14 +1,16 @@
 import { useState } from 'react';
 import type { LoggedTemperatures } from '@/domain/inspection/capture/rows';
 import { parseQuantity } from '@/domain/quantity/parse';
-import { FORM_WORDS, type Form } from '../sheet/parts';
-import type { SetUp } from '../sheet/set-up';
-import type { Sheet, SheetGauge } from '../sheet/sheet';
+import { FORM_WORDS, type Form, type Part } from '../../sheet/parts';
+import { gaugeFor, gaugesFor, type SetUp } from '../../sheet/set-up';
+import type { Sheet, SheetGauge } from '../../sheet/sheet';
 
 interface SetUpPanelProps {
   readonly sheet: Sheet;
   readonly setUp: SetUp;
   readonly setUpAs: (to: Partial<SetUp>) => void;
+  /** What is read now: its gauge is chosen first. */
+  readonly part: Part | undefined;
 }
 
 interface ChooseProps {
@@ -80,7 +82,7 @@ const Temperature = ({
 };
 
 /** How the sheet is taken: kept on this device, and written into every row that it touches. */
-export const SetUpPanel = ({ sheet, setUp, setUpAs }: SetUpPanelProps) => {
+export const SetUpPanel = ({ sheet, setUp, setUpAs, part }: SetUpPanelProps) => {
   const today = sheet.servedAt.slice(0, 10);
   const of = (kinds: readonly string[]) =>
     sheet.gauges
@@ -90,14 +92,37 @@ export const SetUpPanel = ({ sheet, setUp, setUpAs }: SetUpPanelProps) => {
     const { [key]: _old, ...others } = setUp.temperatures;
     setUpAs({ temperatures: value === undefined ? others : { ...others, [key]: value } });
   };
+  const usual = ['lifter-body-diameter', 'foot-diameter', 'tappet-bore-diameter'];
+  const own = part !== undefined && !usual.includes(part.quantity) ? part.quantity : undefined;
   return (
     <div>
+      {own !== undefined && (
+        <Choose
+          id="own-gauge"
+          label={`${part?.label ?? ''} with`}
+          value={gaugeFor(setUp, own, sheet.gauges)?.id ?? ''}
+          options={gaugesFor(own, sheet.gauges).map(
+            (gauge) => [gauge.id, gaugeWords(gauge, today)] as const,
+          )}
+          onChoose={(id) => setUpAs({ gaugeIds: { ...setUp.gaugeIds, [own]: id } })}
+        />
+      )}
       <Choose
         id="form"
         label="How much"
         value={setUp.form}
         options={Object.entries(FORM_WORDS)}
         onChoose={(form) => setUpAs({ form: form as Form })}
+      />
+      <Choose
+        id="advice"
+        label="Advisory clauses"
+        value={setUp.advice ? 'yes' : 'no'}
+        options={[
+          ['no', 'Left to who wants them'],
+          ['yes', 'Read for them too'],
+        ]}
+        onChoose={(advice) => setUpAs({ advice: advice === 'yes' })}
       />
       <Choose
         id="method"

@@ -1,0 +1,45 @@
+import type { Cursor } from './sheet/sheet';
+
+const WAIT_MS = 4000;
+
+const isThere = async (address: string): Promise<boolean> => {
+  try {
+    const answer = await fetch(address, { method: 'HEAD', signal: AbortSignal.timeout(WAIT_MS) });
+    return answer.ok && !answer.redirected;
+  } catch {
+    return false;
+  }
+};
+
+/**
+ * Begins an independent second set at a bore: on a page that was made without the first one, so that not
+ * even its source holds it; without signal on this page, which hides it.
+ */
+export const beginSecond = async (
+  bore: string,
+  part: string | undefined,
+  goAndKeep: (to: Partial<Cursor>) => Promise<void>,
+): Promise<void> => {
+  await goAndKeep({
+    bore,
+    set: 2,
+    cell: undefined,
+    run: undefined,
+    zero: undefined,
+    closed: undefined,
+    ...(part === undefined ? {} : { part }),
+  });
+  const address = `${window.location.pathname}?second=${encodeURIComponent(bore)}`;
+  if (await isThere(address)) window.location.assign(address);
+};
+
+/** Ends it: both sets are seen again. Says whether there was signal for it where the page lacks the first. */
+export const endSecond = async (
+  isBlindPage: boolean,
+  goAndKeep: (to: Partial<Cursor>) => Promise<void>,
+): Promise<boolean> => {
+  if (isBlindPage && !(await isThere(window.location.pathname))) return false;
+  await goAndKeep({ set: 1, cell: undefined, run: undefined, zero: undefined, closed: undefined });
+  if (isBlindPage) window.location.assign(window.location.pathname);
+  return true;
+};

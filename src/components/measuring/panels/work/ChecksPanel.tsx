@@ -1,0 +1,197 @@
+import { useEffect, useRef, useState } from 'react';
+import { padKeyOf, padMayTake } from '@/components/tappet/keys';
+import type { CheckAsk } from '@/domain/inspection/plan/check-asks';
+import type { Clause } from '@/domain/rulebook/clause';
+import { findAnswer } from '@/domain/rulebook/evaluate/facts';
+import { type BorePosition, boreName } from '@/domain/tappet/layout/bore-layout';
+import type { Bay, Hands } from '../../bay';
+import { checkRow } from '../../sheet/rows';
+import { placeOf } from '../../sheet/sheet';
+
+type Check = NonNullable<Clause['requirement']>;
+interface Answer {
+  readonly value: string;
+  readonly label: string;
+}
+
+const answersOf = (check: Check, declared: string | undefined): readonly Answer[] => {
+  switch (check.kind) {
+    case 'choice':
+      return check.options;
+    case 'yes-no':
+      return [
+        { value: 'yes', label: 'Yes' },
+        { value: 'no', label: 'No' },
+      ];
+    case 'plug-gauge':
+      return [
+        { value: 'goes', label: 'Goes' },
+        { value: 'does-not-go', label: 'Does not go' },
+      ];
+    default:
+      return declared === undefined ? [] : [{ value: declared, label: `As declared: ${declared}` }];
+  }
+};
+
+const questionOf = (check: Check): string => {
+  if (check.kind === 'plug-gauge')
+    return `${check.gauge === 'go' ? 'Go' : 'No-go'} gauge ${check.size.text} ${check.size.unit}, ${check.where}. Offer it by hand, never force it.`;
+  return 'question' in check ? check.question : '';
+};
+
+const Text = ({
+  given,
+  onGive,
+}: {
+  readonly given: string;
+  readonly onGive: (text: string) => void;
+}) => {
+  const [text, setText] = useState(given);
+  return (
+    <form
+      className="actions"
+      onSubmit={(event) => {
+        event.preventDefault();
+        if (text.trim() !== '') onGive(text.trim());
+      }}
+    >
+      <input
+        className="input flex-1"
+        aria-label="As found"
+        value={text}
+        maxLength={200}
+        onChange={(event) => setText(event.target.value)}
+      />
+      <button className="btn" type="submit">
+        Keep
+      </button>
+    </form>
+  );
+};
+
+/** The check that comes first here: of this bore, then of the engine, then of the next bore. */
+const nextCheck = ({ checks, position }: Bay, bore: string): CheckAsk | undefined => {
+  const open = checks.filter(({ answer }) => answer === undefined);
+  return (
+    open.find((one) => one.position === bore) ??
+    open.find((one) => one.position === 'engine' || one.position === 'car') ??
+    open.find((one) => one.position === String(position.cylinder)) ??
+    open[0]
+  );
+};
+
+const positionFor = ({ positions, position }: Bay, key: string): BorePosition =>
+  positions.find((one) => boreName(one) === key) ??
+  positions.find((one) => String(one.cylinder) === key) ??
+  position;
+
+/** The checks without numbers: for this bore, and once for the whole engine. Keys 1, 2, 3 answer. */
+export const ChecksPanel = ({
+  bay,
+  hands,
+  listens,
+}: {
+  readonly bay: Bay;
+  readonly hands: Hands;
+  readonly listens: boolean;
+}) => {
+  const { sheet, position, checks, assessment } = bay;
+  const bore = boreName(position);
+  const here = checks.filter(
+    (one) =>
+      [bore, 'engine', 'car'].includes(one.position) || one.position === String(position.cylinder),
+  );
+  const current = nextCheck(bay, bore);
+  const declaredOf = ({ subject, position: at }: CheckAsk) =>
+    assessment.facts.declared && findAnswer(assessment.facts.declared, subject, at);
+  const busy = useRef(false);
+  const give = async ({ clause, subject, position: at }: CheckAsk, value: string) => {
+    const check = clause.requirement;
+    if (check === undefined || !('per' in check)) return false;
+    const per = check.per === 'lifter' ? 'bore' : check.per;
+    const there = positionFor(bay, at);
+    return hands.record([checkRow(placeOf(there, per), subject, value)]);
+  };
+  /** A key answers the check that comes first, and goes on to where the next one is. */
+  const answer = async (ask: CheckAsk, value: string) => {
+    busy.current = true;
+    if (!(await give(ask, value))) {
+      busy.current = false;
+      return;
+    }
+    const rest = checks.filter((one) => one !== current && one.answer === undefined);
+    const more = rest.some((one) => one.position === bore || one.position === 'engine');
+    const [next] = rest;
+    if (!more && next !== undefined) hands.go({ bore: boreName(positionFor(bay, next.position)) });
+  };
+  // A key that is pressed before the answer is seen would answer the same check again.
+  useEffect(() => {
+    if (current !== undefined) busy.current = false;
+  }, [current]);
+
+  useEffect(() => {
+    if (!listens || current?.clause.requirement === undefined) return;
+    const answers = answersOf(current.clause.requirement, declaredOf(current));
+    const onKeyDown = (event: KeyboardEvent) => {
+      const key = padKeyOf(event);
+      const chosen = answers[Number(key) - 1];
+      if (key === undefined || chosen === undefined || event.repeat || busy.current) return;
+      if (event.defaultPrevented || !padMayTake(event.target, key)) return;
+      event.preventDefault();
+      void answer(current, chosen.value);
+    };
+    window.addEventListener('keydown', onKeyDown);
+    return () => window.removeEventListener('keydown', onKeyDown);
+  });
+
+  return (
+    <div className="grid gap-5">
+      <h2>Checks at {bore}, and for the engine</h2>
+      {here.map((ask) => {
+        const check = ask.clause.requirement;
+        if (check === undefined) return null;
+        const answers = answersOf(check, declaredOf(ask));
+        const isCurrent = ask === current;
+        return (
+          <fieldset
+            key={`${ask.clause.number} ${ask.position}`}
+            className={isCurrent ? 'check-now' : undefined}
+          >
+            <legend>
+              <span className="finding-clause">{ask.clause.number}</span> {questionOf(check)}{' '}
+              <span className="note">
+                {ask.position === bore
+                  ? bore
+                  : ask.position === 'engine' || ask.position === 'car'
+                    ? 'whole engine'
+                    : `cylinder ${ask.position}`}
+              </span>
+            </legend>
+            <div className="actions">
+              {answers.map(({ value, label }, at) => (
+                <button
+                  key={value}
+                  type="button"
+                  className={ask.answer === value ? 'btn btn-primary btn-compact' : 'btn'}
+                  aria-pressed={ask.answer === value}
+                  onClick={() => void give(ask, value)}
+                >
+                  {label}
+                  {isCurrent && <small aria-hidden="true">key {at + 1}</small>}
+                </button>
+              ))}
+            </div>
+            {check.kind === 'matches-paperwork' && (
+              <Text
+                key={ask.answer ?? ''}
+                given={ask.answer ?? ''}
+                onGive={(text) => void give(ask, text)}
+              />
+            )}
+          </fieldset>
+        );
+      })}
+      {here.length === 0 && <p>The rules of {sheet.rules.className} ask no check here.</p>}
+    </div>
+  );
+};
