@@ -19,6 +19,7 @@ import { ChooseFields } from './draft/ChooseFields';
 import { useDraft } from './draft/use-draft';
 import { useFiles } from './files/use-files';
 import { HandInBar } from './HandInBar';
+import { LastFoundList } from './LastFoundList';
 import { Photographs } from './Photographs';
 import type { PaperworkProps } from './paperwork-props';
 import { Questions } from './Questions';
@@ -132,6 +133,7 @@ const Editor = (props: PaperworkProps) => {
             <h2 id="check">Check against the rules</h2>
           </div>
           <CheckList results={results} rules={rules} facts={facts} />
+          {props.lastFound && <LastFoundList last={props.lastFound} facts={facts} />}
           <p className="mt-3">{NOT_AN_APPROVAL}</p>
         </section>
         <HandInBar

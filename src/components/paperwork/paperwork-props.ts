@@ -1,6 +1,7 @@
 import type { Need } from '@/domain/access/paperwork-access';
 import type { PaperworkDocument } from '@/domain/paperwork/document';
 import type { PaperworkDraft } from '@/domain/paperwork/draft';
+import type { LastFound } from '@/domain/paperwork/last-found';
 import type { ItemRemark } from '@/domain/paperwork/state';
 import type { PaperworkForm } from '@/domain/rulebook/form/form';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
@@ -39,6 +40,8 @@ export interface PaperworkProps {
   readonly remarks: readonly ItemRemark[];
   /** That version, to know which remarks were followed. */
   readonly returned?: PaperworkDocument | undefined;
+  /** What the last teardown of this engine found, where there was one. */
+  readonly lastFound?: LastFound | undefined;
   /** What this person may write and do. */
   readonly rights: readonly Need[];
 }

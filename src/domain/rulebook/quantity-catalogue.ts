@@ -53,6 +53,14 @@ export const QUANTITIES = {
     source: 'lifter-sheet',
     from: 'mean foot diameter less mean body diameter of the same lifter',
   },
+  'lifter-height': {
+    label: 'Lifter height',
+    dimension: 'length',
+    unit: 'in',
+    per: 'lifter',
+    source: 'lifter-sheet',
+    from: 'height gauge or micrometer reading from the foot to the top of the body',
+  },
   'tappet-bore-diameter': {
     label: 'Tappet bore diameter',
     dimension: 'length',

@@ -6,6 +6,7 @@ import { findValve } from './positions';
 
 /** Words by which people head a column; the first quantity whose words occur is meant. */
 const WORDS: readonly (readonly [QuantityName, RegExp])[] = [
+  ['lifter-height', /\b(height|tall|length)\b/],
   ['foot-diameter', /\b(foot|feet|face)\b/],
   [
     'tappet-bore-diameter',
