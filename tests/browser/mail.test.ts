@@ -4,13 +4,11 @@ import { expect, test } from 'vitest';
 import { journey, type Visitor } from '../support/browser';
 import { readProduct } from '../support/product';
 
-const SIZES = [
-  { width: 390, height: 844 },
-  { width: 1280, height: 900 },
-];
+const PHONE = { width: 390, height: 844 };
+const DESK = { width: 1280, height: 900 };
 
 const look = async (visitor: Visitor, name: string): Promise<void> => {
-  for (const size of SIZES) {
+  for (const size of [PHONE, DESK]) {
     await visitor.page.setViewportSize(size);
     await visitor.shot(`mail-${name}-${size.width}`);
     await visitor.expectNoSidewaysScroll();
@@ -42,7 +40,7 @@ test('an official sees what went to whom, and serves a notice otherwise that did
   const subject = `Notice ${Date.now().toString(36)}`;
   await refusedNotice(subject);
   await journey('messages of a series', async ({ enter }) => {
-    const official = await enter({ viewport: SIZES[1] });
+    const official = await enter({ viewport: DESK });
     const { page, open } = official;
     await official.signInAs('Ilse Törnkvist');
     await open('/office/mail/corran-valley');
@@ -80,12 +78,12 @@ test('a person chooses which optional messages come, signed in or by the link in
     ),
   );
   await journey('optional messages', async ({ enter }) => {
-    const reader = await enter({ viewport: SIZES[0], javaScript: false });
+    const reader = await enter({ viewport: PHONE, javaScript: false });
     await reader.open(`/mail/off/${token}`);
     await reader.page.getByRole('button', { name: 'Turn these off' }).click();
     await reader.page.getByText('“Due soon” is turned off.').waitFor();
 
-    const competitor = await enter({ viewport: SIZES[1] });
+    const competitor = await enter({ viewport: DESK });
     const { page, open } = competitor;
     await competitor.signInAs('Wren Halloway');
     await open('/paddock/mail');
