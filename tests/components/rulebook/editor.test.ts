@@ -1,9 +1,13 @@
 import { describe, expect, it } from 'vitest';
-import { draftState, reduceDraft } from '@/components/rulebook/editor/draft-state';
-import { findChoices, joined } from '@/components/rulebook/editor/join-drafts';
-import { numberBeside, numberUnder, renumber } from '@/components/rulebook/editor/numbering';
-import { editionFrom, editionParts } from '@/components/rulebook/editor/parts';
-import { unsaidNumbers } from '@/components/rulebook/editor/unsaid-numbers';
+import { unsaidNumbers } from '@/components/rulebook/editor/clause/unsaid-numbers';
+import { draftState, reduceDraft } from '@/components/rulebook/editor/edition/draft-state';
+import {
+  numberBeside,
+  numberUnder,
+  renumber,
+} from '@/components/rulebook/editor/edition/numbering';
+import { findChoices, joined } from '@/components/rulebook/editor/saving/join-drafts';
+import { editionFrom, editionParts } from '@/components/rulebook/editor/saving/parts';
 import type { Clause } from '@/domain/rulebook/clause';
 import { ENGINE_RULE_SET } from '@/domain/rulebook/rule-sets/engine';
 import { TAPPET_RULE_SET } from '@/domain/rulebook/rule-sets/tappet';

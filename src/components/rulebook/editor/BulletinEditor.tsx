@@ -4,15 +4,15 @@ import { findBulletinFaults } from '@/domain/rulebook/ambiguity/bulletin-faults'
 import type { ClauseChange } from '@/domain/rulebook/bulletin';
 import type { Clause } from '@/domain/rulebook/clause';
 import type { PenaltyRow } from '@/domain/rulebook/edition';
-import { BulletinHead } from './BulletinHead';
-import { ChangeItem } from './ChangeItem';
-import { ConflictChoice } from './ConflictChoice';
-import { DraftSaved } from './DraftSaved';
-import { FaultList, type PlacedFault } from './FaultList';
+import { BulletinHead } from './bulletin/BulletinHead';
+import { ChangeItem } from './bulletin/ChangeItem';
+import { NewChange } from './bulletin/NewChange';
+import { FaultList, type PlacedFault } from './clause/FaultList';
 import { focusField } from './fields/faults';
-import { NewChange } from './NewChange';
-import { type BulletinContent, bulletinFrom, bulletinParts, type Titled } from './parts';
-import { useAutosave } from './use-autosave';
+import { ConflictChoice } from './saving/ConflictChoice';
+import { DraftSaved } from './saving/DraftSaved';
+import { type BulletinContent, bulletinFrom, bulletinParts, type Titled } from './saving/parts';
+import { useAutosave } from './saving/use-autosave';
 
 interface BulletinEditorProps {
   readonly draft: Titled<BulletinContent> & {

@@ -1,17 +1,16 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { useCallback, useDeferredValue, useEffect, useMemo, useReducer, useState } from 'react';
 import { findAmbiguities } from '@/domain/rulebook/ambiguity/find-ambiguities';
-import { ClauseForm } from './ClauseForm';
-import { ClauseRow } from './ClauseRow';
-import { ConflictChoice } from './ConflictChoice';
-import { DraftSaved } from './DraftSaved';
-import { draftState, PENALTIES, reduceDraft } from './draft-state';
-import { FaultList, type PlacedFault } from './FaultList';
+import { FaultList, type PlacedFault } from './clause/FaultList';
+import { ClauseList } from './edition/ClauseList';
+import { draftState, PENALTIES, reduceDraft } from './edition/draft-state';
+import { PenaltySection } from './edition/PenaltySection';
+import { byRow, faultsOf, placeFaults } from './edition/place-faults';
 import { focusField } from './fields/faults';
-import type { Row } from './numbering';
-import { PenaltyForm } from './PenaltyForm';
-import { type EditionContent, editionFrom, editionParts, type Titled } from './parts';
-import { useAutosave } from './use-autosave';
+import { ConflictChoice } from './saving/ConflictChoice';
+import { DraftSaved } from './saving/DraftSaved';
+import { type EditionContent, editionFrom, editionParts, type Titled } from './saving/parts';
+import { useAutosave } from './saving/use-autosave';
 
 interface DraftEditorProps {
   readonly draft: Titled<EditionContent> & {
@@ -22,30 +21,10 @@ interface DraftEditorProps {
   readonly publishHref: string;
 }
 
-const NO_FAULTS: readonly PlacedFault[] = [];
-
-const place = (rows: readonly Row[], faults: ReturnType<typeof findAmbiguities>) =>
-  faults.map(({ pointer, detail }): PlacedFault => {
-    const [, kind, index = ''] = pointer.split('/');
-    if (kind === 'penalties') return { key: PENALTIES, place: 'Penalties', pointer, detail };
-    const row = rows[Number(index)];
-    const within = pointer.split('/').slice(3).join('/');
-    return index === '' || row === undefined
-      ? { key: undefined, place: '', pointer, detail }
-      : { key: row.key, place: row.clause.number, pointer: `/${within}`, detail };
-  });
-
-const grouped = (faults: readonly PlacedFault[]) => {
-  const byKey = new Map<string | undefined, PlacedFault[]>();
-  for (const fault of faults) byKey.set(fault.key, [...(byKey.get(fault.key) ?? []), fault]);
-  return byKey;
-};
-
 const Editor = ({ draft, publishHref }: DraftEditorProps) => {
   const [state, act] = useReducer(reduceDraft, draft, draftState);
-  const [find, setFind] = useState('');
   const [goTo, setGoTo] = useState<string>();
-  const { title, rows, penalties, open, removed } = state;
+  const { title, rows, penalties } = state;
 
   const written = useMemo(() => {
     const content: EditionContent = { clauses: rows.map((row) => row.clause), penalties };
@@ -57,49 +36,38 @@ const Editor = ({ draft, publishHref }: DraftEditorProps) => {
     written,
   );
 
-  const later = useDeferredValue(state);
-  const faults = useMemo(() => {
-    const clauses = later.rows.map((row) => row.clause);
-    return place(later.rows, findAmbiguities(clauses, later.penalties));
-  }, [later.rows, later.penalties]);
-  const byKey = useMemo(() => grouped(faults), [faults]);
+  // What is ambiguous may be said a moment after the key was seen.
+  const later = useDeferredValue(written.content);
+  const laterRows = useDeferredValue(rows);
+  const faults = useMemo(
+    () => placeFaults(laterRows, findAmbiguities(later.clauses, later.penalties)),
+    [laterRows, later],
+  );
+  const placed = useMemo(() => byRow(faults), [faults]);
+  const rowNames = useMemo(() => penalties.map((row) => row.row), [penalties]);
 
   useEffect(() => {
     if (goTo === undefined) return;
     focusField(goTo);
     setGoTo(undefined);
   }, [goTo]);
-
   const openRow = useCallback((key: string) => {
     act({ do: 'open', key });
     setGoTo('/heading');
   }, []);
-  const go = (fault: PlacedFault) => {
+  const go = useCallback((fault: PlacedFault) => {
     act({ do: 'open', key: fault.key });
-    setFind('');
     setGoTo(fault.pointer);
-  };
-
-  const wanted = find.trim().toLowerCase();
-  const shown =
-    wanted === ''
-      ? rows
-      : rows.filter(
-          ({ key, clause }) =>
-            key === open ||
-            `${clause.number} ${clause.heading} ${clause.words}`.toLowerCase().includes(wanted),
-        );
-  const rowNames = useMemo(() => penalties.map((row) => row.row), [penalties]);
+  }, []);
 
   if (saving.state.kind === 'newer') {
     const { newer } = saving.state;
-    const theirs = newer as unknown as Titled<EditionContent>;
     return (
       <ConflictChoice
         by={newer.updatedBy}
         base={editionParts(saving.base as Titled<EditionContent>)}
         mine={editionParts(written)}
-        theirs={editionParts(theirs)}
+        theirs={editionParts(newer as unknown as Titled<EditionContent>)}
         onDecided={(parts) => {
           saving.goOnFrom(newer);
           act({ do: 'take', draft: editionFrom(parts) });
@@ -130,112 +98,14 @@ const Editor = ({ draft, publishHref }: DraftEditorProps) => {
             onChange={(event) => act({ do: 'title', title: event.target.value })}
           />
         </div>
-        <div className="field">
-          <label htmlFor="draft-find">Find in {rows.length} clauses</label>
-          <input
-            id="draft-find"
-            type="search"
-            value={find}
-            onChange={(event) => setFind(event.target.value)}
-          />
-        </div>
-        {removed && (
-          <p className="actions" role="status">
-            <span>Clause {removed.clause.number} was removed.</span>
-            <button type="button" className="btn" onClick={() => act({ do: 'put-back' })}>
-              Put it back
-            </button>
-          </p>
-        )}
-        <ol className="clause-list">
-          {shown.map((row) => {
-            const here = byKey.get(row.key) ?? NO_FAULTS;
-            if (row.key !== open) {
-              return (
-                <li key={row.key}>
-                  <ClauseRow row={row} faults={here.length} onOpen={openRow} />
-                </li>
-              );
-            }
-            const { key, clause } = row;
-            return (
-              <li key={key} className="clause-open">
-                <h3>
-                  <span className="num">{clause.number}</span> {clause.heading}
-                </h3>
-                <ClauseForm
-                  clause={clause}
-                  faults={here}
-                  penaltyRows={rowNames}
-                  onChange={(next) => act({ do: 'change', key, clause: next })}
-                  onRenumber={(number) => act({ do: 'renumber', key, number })}
-                />
-                <p className="actions">
-                  <button
-                    type="button"
-                    className="btn"
-                    onClick={() => act({ do: 'open', key: undefined })}
-                  >
-                    Close clause {clause.number}
-                  </button>
-                  <button
-                    type="button"
-                    className="btn"
-                    onClick={() => act({ do: 'add', where: 'beside', key })}
-                  >
-                    Add a clause at this level
-                  </button>
-                  <button
-                    type="button"
-                    className="btn"
-                    onClick={() => act({ do: 'add', where: 'under', key })}
-                  >
-                    Add a clause below {clause.number}
-                  </button>
-                  <button type="button" className="btn" onClick={() => act({ do: 'remove', key })}>
-                    Remove clause {clause.number}
-                  </button>
-                </p>
-              </li>
-            );
-          })}
-        </ol>
-        <p className="actions">
-          <button type="button" className="btn" onClick={() => act({ do: 'add', where: 'end' })}>
-            Add a clause
-          </button>
-        </p>
-        <section className="penalty-schedule">
-          <div className="section-head ruled">
-            <h2>Penalty schedule</h2>
-            <button
-              type="button"
-              className="btn"
-              aria-expanded={open === PENALTIES}
-              onClick={() => act({ do: 'open', key: open === PENALTIES ? undefined : PENALTIES })}
-            >
-              {open === PENALTIES ? 'Close' : 'Edit the schedule'}
-            </button>
-          </div>
-          {open === PENALTIES ? (
-            <PenaltyForm
-              penalties={penalties}
-              faults={byKey.get(PENALTIES) ?? NO_FAULTS}
-              onChange={(next) => act({ do: 'penalties', penalties: next })}
-            />
-          ) : (
-            <dl className="pairs">
-              {penalties.map((row) => (
-                <div className="contents" key={row.row}>
-                  <dt>Row {row.row}</dt>
-                  <dd>
-                    {row.breach}: {row.penalties.join('; then ')}
-                  </dd>
-                </div>
-              ))}
-            </dl>
-          )}
-        </section>
+        <ClauseList
+          state={state}
+          faults={placed}
+          penaltyRows={rowNames}
+          act={act}
+          onOpen={openRow}
+        />
+        <PenaltySection state={state} faults={faultsOf(placed, PENALTIES)} act={act} />
       </div>
     </div>
   );

@@ -21,20 +21,22 @@ const wordsOf = ({ clause }: Row): string => {
 
 /** A clause that nobody is editing: one line to read and to open. */
 export const ClauseRow = memo(({ row, faults, onOpen }: ClauseRowProps) => (
-  <button
-    type="button"
-    className={`clause-row depth-${depthOf(row.clause.number)}`}
-    onClick={() => onOpen(row.key)}
-  >
-    <span className="num">{row.clause.number}</span>
-    <span className="grow">
-      <span className="clause-row-heading">{row.clause.heading || 'No heading yet'}</span>
-      <span className="note">{wordsOf(row)}</span>
-    </span>
-    {faults > 0 && (
-      <span className="clause-row-faults">
-        <Mark status="unreadable" title="Still ambiguous" /> {faults}
+  <li>
+    <button
+      type="button"
+      className={`clause-row depth-${depthOf(row.clause.number)}`}
+      onClick={() => onOpen(row.key)}
+    >
+      <span className="num">{row.clause.number}</span>
+      <span className="grow">
+        <span className="clause-row-heading">{row.clause.heading || 'No heading yet'}</span>
+        <span className="note">{wordsOf(row)}</span>
       </span>
-    )}
-  </button>
+      {faults > 0 && (
+        <span className="clause-row-faults">
+          <Mark status="unreadable" title="Still ambiguous" /> {faults}
+        </span>
+      )}
+    </button>
+  </li>
 ));

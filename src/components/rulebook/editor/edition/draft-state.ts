@@ -1,7 +1,7 @@
 import type { Clause } from '@/domain/rulebook/clause';
 import type { PenaltyRow } from '@/domain/rulebook/edition';
+import type { EditionContent, Titled } from '../saving/parts';
 import { numberBeside, numberUnder, type Row, renumber, sortRows } from './numbering';
-import type { EditionContent, Titled } from './parts';
 
 export const PENALTIES = 'penalties';
 

@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import type { ClauseChange } from '@/domain/rulebook/bulletin';
 import type { Clause } from '@/domain/rulebook/clause';
-import { numberBeside } from './numbering';
+import { numberBeside } from '../edition/numbering';
 
 interface NewChangeProps {
   readonly clauses: readonly Clause[];

@@ -1,8 +1,8 @@
 import type { ClauseChange } from '@/domain/rulebook/bulletin';
 import type { Clause } from '@/domain/rulebook/clause';
 import { requirementWords } from '@/domain/rulebook/describe';
-import { ClauseForm } from './ClauseForm';
-import type { PlacedFault } from './FaultList';
+import { ClauseForm } from '../clause/ClauseForm';
+import type { PlacedFault } from '../clause/FaultList';
 
 const VERB = {
   add: 'New clause',

@@ -2,12 +2,12 @@ import { useRef } from 'react';
 import type { Fault } from '@/domain/failure';
 import { type Clause, type Force, isClauseNumber } from '@/domain/rulebook/clause';
 import type { Requirement } from '@/domain/rulebook/requirement';
-import { FaultsHere, Group } from './fields/faults';
-import { RowsField } from './fields/RowsField';
-import { SelectField } from './fields/SelectField';
-import { ReadField, TextField } from './fields/TextField';
-import { isKind, KIND_WORDS, newRequirement } from './requirement/new-requirement';
-import { RequirementForm } from './requirement/RequirementForm';
+import { FaultsHere, Group } from '../fields/faults';
+import { RowsField } from '../fields/RowsField';
+import { SelectField } from '../fields/SelectField';
+import { ReadField, TextField } from '../fields/TextField';
+import { isKind, KIND_WORDS, newRequirement } from '../requirement/new-requirement';
+import { RequirementForm } from '../requirement/RequirementForm';
 import { unsaidNumbers } from './unsaid-numbers';
 
 const FORCES = [

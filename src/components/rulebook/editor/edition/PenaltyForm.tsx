@@ -1,9 +1,9 @@
 import type { Fault } from '@/domain/failure';
 import type { PenaltyRow } from '@/domain/rulebook/edition';
-import { FaultsHere, Group } from './fields/faults';
-import { RowsField } from './fields/RowsField';
-import { CheckField } from './fields/SelectField';
-import { TextField } from './fields/TextField';
+import { FaultsHere, Group } from '../fields/faults';
+import { RowsField } from '../fields/RowsField';
+import { CheckField } from '../fields/SelectField';
+import { TextField } from '../fields/TextField';
 
 interface PenaltyFormProps {
   readonly penalties: readonly PenaltyRow[];

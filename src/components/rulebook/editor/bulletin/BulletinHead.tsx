@@ -1,10 +1,10 @@
 import { momentText, readMoment } from '@/contracts/rulebook/moment';
 import type { Effective } from '@/domain/rulebook/bulletin';
-import type { PlacedFault } from './FaultList';
-import { FaultsHere } from './fields/faults';
-import { SelectField } from './fields/SelectField';
-import { ReadField, TextField } from './fields/TextField';
-import type { BulletinContent } from './parts';
+import type { PlacedFault } from '../clause/FaultList';
+import { FaultsHere } from '../fields/faults';
+import { SelectField } from '../fields/SelectField';
+import { ReadField, TextField } from '../fields/TextField';
+import type { BulletinContent } from '../saving/parts';
 
 const WHEN = [
   { value: 'next-event', label: 'From the start of the next event' },

@@ -1,3 +1,5 @@
+import { memo } from 'react';
+
 export interface PlacedFault {
   /** Of the row that the fault is in; absent where it is in none. */
   readonly key: string | undefined;
@@ -16,7 +18,7 @@ interface FaultListProps {
 }
 
 /** What keeps the draft from being published; each line leads to its field. */
-export const FaultList = ({ faults, sound, onGo }: FaultListProps) => (
+export const FaultList = memo(({ faults, sound, onGo }: FaultListProps) => (
   <section className="fault-list" aria-label="Ambiguous">
     <h2>{faults.length === 0 ? 'Nothing is ambiguous' : `Still ambiguous: ${faults.length}`}</h2>
     {faults.length === 0 && <p className="note">{sound}</p>}
@@ -30,4 +32,4 @@ export const FaultList = ({ faults, sound, onGo }: FaultListProps) => (
       ))}
     </ul>
   </section>
-);
+));
