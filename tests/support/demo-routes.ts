@@ -34,6 +34,7 @@ export async function demoParameters(client: pg.Client): Promise<ReadonlyMap<str
     '/barn/inspections/[id]': inspection,
     '/api/inspections/[id]': inspection,
     '/office/verdicts/[inspection]': inspection,
+    '/office/strokes/[inspection]': inspection,
     '/api/files/[file]': await one(
       "select id from public.file where paperwork_id = $1 and purpose = 'photograph'",
       [paperwork],
