@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { assessInspection } from '@/domain/inspection/assess-inspection';
 import type { QuantityName } from '@/domain/rulebook/quantity-catalogue';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
-import { exhaust, intake, RULES, reading, record } from './build';
+import { exhaust, GAUGES, intake, RULES, reading, record } from './build';
 
 const cylinder = { bank: 'block', cylinder: '1', valve: '' } as const;
 const engine = { bank: '', cylinder: '', valve: '' } as const;
@@ -112,11 +112,13 @@ describe('reference parts', () => {
   } as unknown as RulesInForce;
   const head = (text: string, more: object) =>
     ({ ...read('valve-head-diameter', text), ...more }) as ReturnType<typeof read>;
+  // The micrometer of these tests ends at 1 in.
+  const WIDE = GAUGES.map((gauge) => ({ ...gauge, range: undefined }));
   const references = ['2.020', '2.022', '2.021'].map((text, i) =>
     head(text, { referencePart: `R${i + 1}` }),
   );
   const stateAt = (readings: ReturnType<typeof read>[], position: string) =>
-    assessInspection(record({ rules, readings })).findings[0]?.perPosition.find(
+    assessInspection(record({ rules, readings, gauges: WIDE })).findings[0]?.perPosition.find(
       (one) => one.position === position,
     );
 
@@ -128,6 +130,8 @@ describe('reference parts', () => {
     // Mean 2.021: 2.024 lies 0.003 over, 2.030 lies 0.009 over.
     expect(stateAt([...references, ...parts], '1 intake')?.state).toBe('within');
     expect(stateAt([...references, ...parts], '1 exhaust')?.state).toBe('outside');
+    const weak = assessInspection(record({ rules, readings: [...references, ...parts] }));
+    expect(weak.findings[0]?.perPosition[1]?.sentence).toContain('out of the range of gauge MIC');
   });
 
   it('are no part of the engine: they count for no bore', () => {
