@@ -2,6 +2,7 @@ import canonicalize from 'canonicalize';
 import { describe, expect, it } from 'vitest';
 import * as z from 'zod/mini';
 import { bulletin, edition, rulebookFile } from '@/contracts/rulebook/edition';
+import { readMoment } from '@/contracts/rulebook/moment';
 import {
   readPublishable,
   readRulebookContent,
@@ -186,5 +187,31 @@ describe('what is stored', () => {
     expect(
       edition.safeParse({ ...published, inForceAt: '2026-03-01T06:00:00.000-06:00' }).success,
     ).toBe(false);
+  });
+});
+
+describe('a moment as a person writes it', () => {
+  it.each([
+    ['2026-07-01', '2026-07-01T05:00:00.000Z'],
+    ['2026-07-01T18:00', '2026-07-01T23:00:00.000Z'],
+    ['2026-06-30T23:59:59', '2026-07-01T04:59:59.000Z'],
+    // Twice that night: the later one, unless the instant itself is written.
+    ['2026-11-01T01:30:00', '2026-11-01T07:30:00.000Z'],
+    ['2026-11-01T06:30:00.000Z', '2026-11-01T06:30:00.000Z'],
+    ['2026-03-08T02:30', '2026-03-08T08:30:00.000Z'],
+  ])('%s', (written, utc) => {
+    expect(readMoment(written, 'America/Chicago')?.toISOString()).toBe(utc);
+  });
+
+  it.each([
+    '2026-02-30',
+    '2026-07-01T24:00',
+    '2026-07-01T18:60',
+    '2026-07-01T18:00:60',
+    '2026-13-01T00:00:00.000Z',
+    '1 July',
+    '',
+  ])('"%s" is none', (written) => {
+    expect(readMoment(written, 'America/Chicago')).toBeUndefined();
   });
 });

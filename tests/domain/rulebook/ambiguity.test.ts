@@ -121,6 +121,12 @@ const requirements: readonly [string, Requirement, string, RegExp][] = [
   ],
   ['a fitness number of zero', clearance({ fitRatio: '0' }), '/fitRatio', /above zero/],
   [
+    'a check on the ring that allows nothing',
+    clearance({ ringCheck: inches('0.0000') }),
+    '/ringCheck',
+    /more than zero/,
+  ],
+  [
     'an uncertainty of zero',
     clearance({ maximumUncertainty: inches('0') }),
     '/maximumUncertainty',

@@ -51,6 +51,7 @@ export const heldFaults = (held: HeldAgainst & Measurand, pointer: string): read
     `${pointer}/maximumUncertainty`,
     'The largest allowed uncertainty',
   );
+  const ring = read(held.ringCheck, 'length', `${pointer}/ringCheck`, 'The check on the ring');
   const decimals = held.comparison.method === 'rounded' ? held.comparison.decimals : 0;
   return [
     ...(rule === undefined ? [] : [at(`${pointer}/decisionRule`, rule)]),
@@ -69,6 +70,12 @@ export const heldFaults = (held: HeldAgainst & Measurand, pointer: string): read
       isNegative(largest.value) || isZero(largest.value),
       `${pointer}/maximumUncertainty`,
       'The largest allowed uncertainty is more than zero.',
+    ),
+    ...ring.faults,
+    ...when(
+      isNegative(ring.value) || isZero(ring.value),
+      `${pointer}/ringCheck`,
+      'What the gauge may be off on the ring is more than zero; leave it empty where nothing makes up for a calibration.',
     ),
   ];
 };

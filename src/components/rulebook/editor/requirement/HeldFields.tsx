@@ -116,6 +116,15 @@ export const HeldFields = <H extends HeldAgainst & Measurand>({
         value={value.maximumUncertainty}
         onChange={(maximumUncertainty) => onChange({ ...value, maximumUncertainty })}
       />
+      <WrittenField
+        at="/requirement/ringCheck"
+        label="A gauge past its due day counts when it read the ring that night to within"
+        hint="Empty: it never counts for a breach"
+        dimension="length"
+        unit="in"
+        value={value.ringCheck}
+        onChange={(ringCheck) => onChange({ ...value, ringCheck })}
+      />
     </>
   );
 };
