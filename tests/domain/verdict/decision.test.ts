@@ -9,6 +9,7 @@ import {
   penaltyWords,
 } from '@/domain/verdict/decision';
 import { findMinor, moneyWords } from '@/domain/verdict/money';
+import { suggestedDecision } from '@/domain/verdict/suggested-decision';
 import { BREACH, NO_BREACH, STREET_EIGHT } from '../../support/verdict-case';
 
 const finding = (clause: string, pass: boolean | null, advisory = false) => ({
@@ -35,6 +36,37 @@ describe('the computed statement', () => {
   it('takes no notice of advisory findings', () => {
     expect(computedStatement([finding('4.6', false, true)])).toBe('none');
     expect(computedStatement([finding('4.6', false, true), finding('4.1', true)])).toBe('pass');
+  });
+});
+
+describe('a new decision', () => {
+  const steps = STREET_EIGHT.penalties.map(({ row }, at) => ({ row, nextStep: at + 2 }));
+  const suggested = (...findings: ReturnType<typeof finding>[]) =>
+    suggestedDecision(STREET_EIGHT, findings, steps);
+
+  it('is filled in with the failing clauses and the next step of the row that they name', () => {
+    expect(suggested(finding('4.1', true), finding('4.3', false))).toEqual({
+      decision: 'breach',
+      clauses: ['4.3'],
+      penalty: { row: 'A', step: 2 },
+    });
+  });
+
+  it('says no breach where all is kept, and nothing where nothing was stated', () => {
+    expect(suggested(finding('4.1', true))).toMatchObject({ decision: 'no-breach', clauses: [] });
+    expect(suggested(finding('4.1', null))).toEqual({ clauses: [], penalty: null });
+    expect(suggested(finding('4.6', false, true))).toEqual({ clauses: [], penalty: null });
+  });
+
+  it('leaves the penalty to choose where no failing clause names its row', () => {
+    const rules = {
+      ...STREET_EIGHT,
+      clauses: STREET_EIGHT.clauses.map(({ penaltyRow: _, ...clause }) => clause),
+    };
+    expect(suggestedDecision(rules, [finding('4.3', false)], steps)).toMatchObject({
+      clauses: ['4.3'],
+      penalty: null,
+    });
   });
 });
 

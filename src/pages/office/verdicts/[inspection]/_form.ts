@@ -1,8 +1,6 @@
-import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
-import type { StatedFinding } from '@/domain/verdict/computed-statement';
-import { type DecisionDraft, penaltyRowsFor } from '@/domain/verdict/decision';
+import type { DecisionDraft } from '@/domain/verdict/decision';
 import { findMinor, moneyText } from '@/domain/verdict/money';
-import type { ComputedStatement } from '@/domain/verdict/notice';
+import { suggestedDecision } from '@/domain/verdict/suggested-decision';
 
 /** The decision form's fields as typed. */
 export interface TypedDecision {
@@ -24,33 +22,14 @@ const EMPTY: TypedDecision = {
   against: '',
 };
 
-/**
- * What the form of a new decision is filled in with: a failing finding's clauses, and the next step of
- * the row that the first of them names. Otherwise nothing is chosen; the person decides either way.
- */
-export const suggestion = (sheet: {
-  readonly computed: ComputedStatement;
-  readonly decidable: readonly string[];
-  readonly findings: readonly StatedFinding[];
-  readonly rules: Pick<RulesInForce, 'clauses' | 'penalties'>;
-  readonly penalties: readonly { readonly row: string; readonly nextStep: number }[];
-}): TypedDecision => {
-  if (sheet.computed === 'none') return EMPTY;
-  if (sheet.computed === 'pass') return { ...EMPTY, decision: 'no-breach' };
-  const clauses = sheet.decidable.filter((number) =>
-    sheet.findings.some(({ clause, pass }) => clause === number && pass === false),
-  );
-  const rows = penaltyRowsFor(sheet.rules, clauses);
-  const next = sheet.penalties.find(({ row }) => row === rows[0]?.row);
-  // Where no clause names its row, which one it is remains to be chosen.
-  const named = sheet.rules.clauses.some(
-    ({ number, penaltyRow }) => clauses.includes(number) && penaltyRow === next?.row,
-  );
+/** What the findings say, filled in for the person to change or to write down. */
+export const suggestion = (...said: Parameters<typeof suggestedDecision>): TypedDecision => {
+  const { decision = '', clauses, penalty } = suggestedDecision(...said);
   return {
     ...EMPTY,
-    decision: 'breach',
+    decision,
     clauses,
-    penalty: next === undefined || !named ? '' : `${next.row}|${next.nextStep}`,
+    penalty: penalty === null ? '' : `${penalty.row}|${penalty.step}`,
   };
 };
 
