@@ -77,6 +77,8 @@ test('a file is mapped and entered, all cars are checked, one page is signed, re
   await journey('event day', async ({ enter }) => {
     const stamp = Date.now().toString(36);
     const [className, eventName] = [`Scale Class ${stamp}`, `Scale Night ${stamp}`];
+    // A name that no file of the series had before.
+    const car = `Startnr ${stamp}`;
     const official = await enter();
     const { page } = official;
     await official.signInAs(OFFICIAL);
@@ -88,7 +90,7 @@ test('a file is mapped and entered, all cars are checked, one page is signed, re
       name: 'feature.csv',
       mimeType: 'text/csv',
       buffer: Buffer.from(
-        `\uFEFFFeature;;;;;\r\n${['Startnr;Fahrer;Wertung;Rang;Lap 1;Lap 2', ...lines].join('\r\n')}`,
+        `\uFEFFFeature;;;;;\r\n${[`${car};Fahrer;Wertung;Rang;Lap 1;Lap 2`, ...lines].join('\r\n')}`,
       ),
     });
     await official.open(`${event}/import`);
@@ -108,7 +110,7 @@ test('a file is mapped and entered, all cars are checked, one page is signed, re
     await official.expectAccessible();
     await official.expectNoSidewaysScroll();
     await official.shot('event-1280-mapping');
-    await page.getByLabel('Car number (needed)').selectOption({ label: 'Startnr' });
+    await page.getByLabel('Car number (needed)').selectOption({ label: car });
     await page.getByLabel('Competitor (needed)').selectOption({ label: 'Fahrer' });
     await page.getByLabel('Class', { exact: true }).selectOption({ label: 'Wertung' });
     await page.getByLabel('Position').selectOption({ label: 'Rang' });
@@ -126,7 +128,7 @@ test('a file is mapped and entered, all cars are checked, one page is signed, re
     ];
     await page.getByLabel('A CSV file').setInputFiles(file(good));
     await page.getByRole('button', { name: 'Look through it first' }).click();
-    await page.getByLabel('Car number (needed)').selectOption({ label: 'Startnr' });
+    await page.getByLabel('Car number (needed)').selectOption({ label: car });
     await page.getByLabel('Competitor (needed)').selectOption({ label: 'Fahrer' });
     await page.getByLabel('Class', { exact: true }).selectOption({ label: 'Wertung' });
     await page.getByLabel('Position').selectOption({ label: 'Rang' });
@@ -138,7 +140,7 @@ test('a file is mapped and entered, all cars are checked, one page is signed, re
     await official.open(`${event}/import`);
     await page.getByLabel('A CSV file').setInputFiles(file(good));
     await page.getByRole('button', { name: 'Look through it first' }).click();
-    expect(await page.getByLabel('Car number (needed)').inputValue()).toBe('startnr');
+    expect(await page.getByLabel('Car number (needed)').inputValue()).toBe(car.toLowerCase());
     expect(await page.getByText('entered already: as it is').count()).toBe(4);
 
     // On the day: one car is scratched, with the reason.
@@ -172,7 +174,7 @@ test('a file is mapped and entered, all cars are checked, one page is signed, re
       await tablet.page.getByRole('listitem').filter({ has: input }).getByText(says).waitFor();
     };
     await weigh('007', '2800', 'Passed');
-    await chief.page.getByText('2800 lb').waitFor();
+    await chief.page.getByText('2800 lb, SC-').waitFor();
     await weigh('12J', '2791', 'Not passed');
     await tablet.page.getByRole('link', { name: 'Car 12J: inspection' }).waitFor();
     await tablet.expectAccessible();

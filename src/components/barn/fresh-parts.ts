@@ -1,7 +1,9 @@
 import { followBarn, type LiveState } from './live';
 
 /** Typed in, chosen or opened by the person at this tablet, and so not to be pulled away. */
-const inUse = (part: Element): boolean =>
+const inUse = (part: HTMLElement): boolean =>
+  // What came back with problems is to be read and mended first.
+  part.dataset['kept'] !== undefined ||
   part.contains(document.activeElement) ||
   [...part.querySelectorAll<HTMLInputElement>('input, textarea')].some((field) =>
     ['checkbox', 'radio'].includes(field.type)
@@ -50,7 +52,7 @@ const clock = (): string => {
  */
 export const keepFresh = (
   line: HTMLElement,
-  seriesIds: readonly string[],
+  series: readonly { readonly id: string; readonly since: string | undefined }[],
   about: (news: { readonly inspection?: string; readonly event?: string }) => boolean,
 ): void => {
   const words = line.querySelector<HTMLElement>('[data-live-words]');
@@ -83,9 +85,10 @@ export const keepFresh = (
       reading = false;
     }
   };
-  for (const seriesId of seriesIds)
+  for (const { id, since } of series)
     stops.push(
-      followBarn(seriesId, {
+      followBarn(id, {
+        since,
         onNews: (news) => void (about(news) && readAnew()),
         onRefresh: () => void readAnew(),
         onState: (state) => {

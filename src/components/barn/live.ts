@@ -11,6 +11,8 @@ export interface Stream {
 }
 
 export interface Follower {
+  /** How far the series had come when the page was made: nothing is read anew where that is still so. */
+  readonly since?: string | undefined;
   /** One act of another tablet, or of this one. */
   readonly onNews: (news: BarnNews) => void;
   /** Something may have been missed, or it is time to ask: read anew. */
@@ -45,12 +47,13 @@ const inBrowser: Means = {
  */
 export const followBarn = (
   seriesId: string,
-  { onNews, onRefresh, onState = () => undefined }: Follower,
+  { since, onNews, onRefresh, onState = () => undefined }: Follower,
   means: Means = inBrowser,
 ): (() => void) => {
   let stream: Stream | undefined;
   let stopped = false;
   let state: LiveState = 'connecting';
+  let read = since;
   let endSilence = () => {};
   let endAsking = () => {};
   let endAgain = () => {};
@@ -79,6 +82,7 @@ export const followBarn = (
     stream = undefined;
     endSilence();
     if (stopped) return;
+    read = undefined;
     become('asking');
     ask();
     endAgain();
@@ -86,7 +90,9 @@ export const followBarn = (
   };
   const connect = () => {
     if (stopped) return;
-    const opened = means.open(`/api/barn/${seriesId}/live`);
+    // The browser says by itself how far it had come when a stream is interrupted; a new one is told.
+    const from = read === undefined ? '' : `?since=${encodeURIComponent(read)}`;
+    const opened = means.open(`/api/barn/${seriesId}/live${from}`);
     stream = opened;
     opened.addEventListener('same', heard);
     opened.addEventListener('beat', heard);

@@ -20,6 +20,9 @@ export const operations: readonly Operation[] = [
     path: '/api/barn/{series}/live',
     summary:
       'Hear at once what changes in a series’ barn, as server-sent events: `refresh`, `same`, `news`, `beat`.',
+    query: [
+      { name: 'since', words: 'The last id that was heard, where no Last-Event-ID is sent.' },
+    ],
     answerType: 'text/event-stream',
   },
   {

@@ -22,11 +22,22 @@ afterAll(async () => {
 });
 
 const ask = async (
-  more: { actor?: Actor | null; last?: string; barn?: Ports['barn']; series?: string } = {},
+  more: {
+    actor?: Actor | null;
+    last?: string;
+    since?: string;
+    barn?: Ports['barn'];
+    series?: string;
+  } = {},
 ): Promise<Response> => {
   const headers = more.last === undefined ? {} : { 'last-event-id': more.last };
   const context = {
-    request: new Request('http://127.0.0.1/api/barn/x/live', { headers }),
+    request: new Request(
+      `http://127.0.0.1/api/barn/x/live${more.since === undefined ? '' : `?since=${more.since}`}`,
+      {
+        headers,
+      },
+    ),
     params: { series: more.series ?? night.seriesId },
     locals: {
       ports: world.ports({ barn: more.barn ?? barn }),
@@ -108,6 +119,9 @@ describe('the barn’s stream', () => {
     const late = reader(await ask({ last: hello?.id ?? '' }));
     expect((await late.next())?.event).toBe('refresh');
     await late.leave();
+    const made = reader(await ask({ since: news?.id ?? '' }));
+    expect((await made.next())?.event).toBe('same');
+    await made.leave();
     const current = reader(await ask({ last: news?.id ?? '' }));
     expect((await current.next())?.event).toBe('same');
     await current.leave();

@@ -39,7 +39,7 @@ export const CheckRow = ({ car, ask, checked, records, send }: CheckRowProps) =>
   };
   const [status, word] = checked === undefined ? [undefined, ''] : STATUS[checked.state];
   return (
-    <li>
+    <li className="flex-wrap">
       <CarPlate number={car.carNumber} />
       {records && ask.kind === 'answer' && (
         <fieldset className="actions">
@@ -81,7 +81,7 @@ export const CheckRow = ({ car, ask, checked, records, send }: CheckRowProps) =>
           </button>
         </form>
       )}
-      <span className="grow" aria-live="polite">
+      <span className="grow basis-80" aria-live="polite">
         {checked !== undefined && status !== undefined && (
           <>
             <StatusWord

@@ -16,3 +16,13 @@ export const readMark = async (deps: Pick<Ports, 'db'>, seriesId: string): Promi
   if (row === undefined) throw new Error('A count gave no row.');
   return row.mark;
 };
+
+/** How far each of several series has come; read before what a page shows. */
+export const readMarks = async (
+  deps: Pick<Ports, 'db'>,
+  seriesIds: readonly string[],
+): Promise<readonly { readonly id: string; readonly mark: string }[]> => {
+  const marks: { id: string; mark: string }[] = [];
+  for (const id of seriesIds) marks.push({ id, mark: await readMark(deps, id) });
+  return marks;
+};

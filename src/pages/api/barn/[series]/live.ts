@@ -26,7 +26,8 @@ export const GET = read(async ({ ports, actor, params, context }) => {
     return fail(failure('unavailable', 'Too many listen here now; the page asks by itself.'));
   }
   open += 1;
-  const before = context.request.headers.get('last-event-id');
+  const { headers, url } = context.request;
+  const before = headers.get('last-event-id') ?? new URL(url).searchParams.get('since');
   const begin = ({ say, end }: OpenStream) => {
     say({ event: before === mark ? 'same' : 'refresh', id: mark, data: {} });
     hear = (news) => {
