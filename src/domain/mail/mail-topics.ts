@@ -1,31 +1,36 @@
+import type { Role } from '../access/permission';
+
 /** Messages that a person may do without, as they are chosen from. */
 export interface MailTopic {
   readonly id: string;
   readonly title: string;
   readonly explanation: string;
   readonly kinds: readonly string[];
+  /** Whom such messages go to. */
+  readonly to: readonly Role[];
 }
 
 export const MAIL_TOPICS: readonly MailTopic[] = [
   {
     id: 'paperwork-to-check',
     title: 'Paperwork to check',
-    explanation:
-      'To officials: somebody handed paperwork in. The list in the race office shows it as well.',
+    explanation: 'Somebody handed paperwork in. The list in the race office shows it as well.',
     kinds: ['paperwork-to-check'],
+    to: ['official'],
   },
   {
     id: 'rules-questions',
     title: 'Rules questions',
-    explanation:
-      'To officials: somebody asked about a clause. The list in the race office shows it as well.',
+    explanation: 'Somebody asked about a clause. The list in the race office shows it as well.',
     kinds: ['rules-question'],
+    to: ['official'],
   },
   {
     id: 'due-soon',
     title: 'Due soon',
     explanation: 'Something of yours is due within a day. The paddock shows it as well.',
     kinds: ['due-soon'],
+    to: ['competitor'],
   },
 ];
 

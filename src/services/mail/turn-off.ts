@@ -21,13 +21,17 @@ const topicsOff = async (db: Ports['db'], personId: string): Promise<ReadonlySet
   return new Set(rows.map(({ topic }) => topic));
 };
 
+/** Those that can come to this person at all. */
+const topicsFor = ({ standings }: Actor) =>
+  MAIL_TOPICS.filter(({ to }) => standings.some(({ role }) => to.includes(role)));
+
 /** The optional messages, and which of them this person gets. */
 export const listTopics = async (
   { db }: Pick<Ports, 'db'>,
   actor: Actor,
 ): Promise<readonly TopicShown[]> => {
   const off = await topicsOff(db, actor.personId);
-  return MAIL_TOPICS.map(({ id, title, explanation }) => ({
+  return topicsFor(actor).map(({ id, title, explanation }) => ({
     id,
     title,
     explanation,
@@ -42,13 +46,17 @@ export const chooseTopics = async (
   input: { readonly act: string; readonly on: readonly string[] },
 ): Promise<Result<{ readonly off: readonly string[] }, Failure>> => {
   const { act: id, on } = input;
-  const off = MAIL_TOPICS.map((topic) => topic.id).filter((topic) => !on.includes(topic));
+  const own = topicsFor(actor).map((topic) => topic.id);
+  const off = own.filter((topic) => !on.includes(topic));
   return performAct(
     deps,
     actor,
     { id, kind: 'choose-mail', seriesId: null, input: { off } },
     async ({ em, at }) => {
-      await em.execute('delete from public.mail_turned_off where person_id = ?', [actor.personId]);
+      await em.execute(
+        'delete from public.mail_turned_off where person_id = ? and topic = any(?::text[])',
+        [actor.personId, `{${own.join()}}`],
+      );
       for (const topic of off)
         await em.execute(
           'insert into public.mail_turned_off (person_id, topic, since) values (?, ?, ?)',
