@@ -100,7 +100,7 @@ test(
       await builder.page.getByRole('link', { name: 'Engine' }).count();
 
       await competitor.open('/paddock/builders');
-      await page.getByRole('button', { name: 'End it now: Quill Ferrant' }).click();
+      await page.getByRole('button', { name: /^End it now.*Quill Ferrant/ }).click();
       await page.waitForLoadState('networkidle');
       builder.expectRefusal({ url: new RegExp(path), status: 404 });
       await builder.open(path);
@@ -207,7 +207,7 @@ test(
         .waitFor();
       await look(official, 'paperwork-signed-for');
       await official.open('/office/people/corran-valley');
-      await official.page.getByRole('button', { name: 'End this for Junia Ashgrove' }).click();
+      await official.page.getByRole('button', { name: /^End this.*Junia Ashgrove/ }).click();
       await official.page.waitForLoadState('networkidle');
     });
   },
@@ -265,7 +265,8 @@ test(
       await desk.open(path);
       await ready(desk);
       await phone.context.setOffline(true);
-      phone.expectRefusal({ url: /\/draft$/, status: 409 });
+      phone.expectRefusal({ url: /\/draft$/, status: 412 });
+      phone.expectRefusal({ url: /\/draft$/, status: 'offline' });
       await phone.page.getByLabel('Anything they should know').fill('From the phone.');
       await desk.page.getByLabel('Anything they should know').fill('From the desk.');
       await desk.page

@@ -66,6 +66,7 @@ test(
         const hand = newHand();
         await hand.tap(page.getByRole('link', { name: 'Swap an engine at the track' }));
         await page.locator('[data-ready="yes"]').waitFor();
+        await hand.tap(page.getByLabel(new RegExp(`Swap night ${stamp}`)));
         await hand.tap(page.getByLabel('One that is not here yet'));
         await hand.type(page.getByLabel('Your name for it'), 'SPARE-2');
         await hand.type(page.getByLabel('Seal number'), '0418');

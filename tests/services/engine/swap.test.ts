@@ -56,6 +56,7 @@ beforeAll(async () => {
   const entries = [
     { id: uuid(), carNumber: '12J', competitorName: 'Ada Lindqvist' },
     { id: uuid(), carNumber: '9', competitorName: 'Teo Marsh' },
+    { id: uuid(), carNumber: '10', competitorName: 'Nell Varga' },
   ].map((row) => ({ ...row, classId, competitorEmail: '', engineReference: '', position: null }));
   must(await enterCars(ports(), official, { act: uuid(), seriesId, eventId, entries } as never));
 });
@@ -153,6 +154,20 @@ describe('a race-night engine swap', () => {
     );
     // Three officials and the competitor.
     expect(mails).toEqual([{ n: 4 }]);
+  });
+
+  it('goes into a car for which nothing was declared before', async () => {
+    const { ports, stranger } = paddock;
+    await rows('update public.entry set competitor_id = ? where car_number = ?', [
+      stranger.personId,
+      '10',
+    ]);
+    const asked = await swap({ entryId: await entryOf('10') });
+    expect(must(await swapEngine(ports(), stranger, asked)).paperworkId).toBe(asked.paperworkId);
+    const [kept] = await rows('select from_engine_id from record.engine_swap where id = ?', [
+      asked.id,
+    ]);
+    expect(kept).toEqual({ from_engine_id: null });
   });
 
   it('is refused into the same engine, and under a name that is taken', async () => {

@@ -41,7 +41,9 @@ export const swapEngine = async (
     async (act) => {
       const { em, at } = act;
       const entry = await em.findOneOrFail(Entry, { seriesId, id: entryId });
-      const before = await em.findOne(Paperwork, { seriesId, id: entry.paperworkId ?? '' });
+      const before = entry.paperworkId
+        ? await em.findOne(Paperwork, { seriesId, id: entry.paperworkId })
+        : null;
       const fromId = entry.engineId ?? before?.engineId ?? null;
       const from = fromId === null ? null : await em.findOne(Engine, { id: fromId });
       const taken = await takeEngine(em, { asked: asked.engine, competitorId, from, at });
