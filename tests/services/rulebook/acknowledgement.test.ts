@@ -1,7 +1,9 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { openDatabase } from '@/adapters/database/orm';
 import type { Actor } from '@/domain/access/permission';
 import { createEvent } from '@/services/event/create-event';
 import { enterCars } from '@/services/event/enter-cars';
+import { auditLedger } from '@/services/ledger/audit/audit-ledger';
 import { decidePaperwork } from '@/services/paperwork/decide-paperwork';
 import { acknowledgeBulletin } from '@/services/rulebook/acknowledgement/acknowledge-bulletin';
 import { findBulletinReach } from '@/services/rulebook/acknowledgement/find-bulletin-reach';
@@ -264,4 +266,35 @@ describe('sign-on', () => {
     must(await publish(world, paddock, bulletinOf(clauseOf('4.1'), { kind: 'safety' }, 'Now')));
     expect((await signOn()).bulletins.map((one) => one.number)).toEqual([1, 3]);
   });
+});
+
+it('what was acknowledged, and which engines were made illegal, cannot be changed unseen', async () => {
+  const superuser = await openDatabase(world.database.superuserUrl, 2);
+  const audited = async (sql: string): Promise<readonly string[]> => {
+    const em = superuser.em.fork();
+    await em.begin();
+    try {
+      await em.execute(sql);
+      const asked = { seriesId: paddock.seriesId, heads: [], keys: [] };
+      const { faults } = await auditLedger({ db: em, objects: paddock.objects }, asked);
+      return faults.map((fault) => fault.where);
+    } finally {
+      await em.rollback();
+    }
+  };
+  const untouched = await audited('select 1');
+  expect(untouched.filter((where) => where.includes('bulletin'))).toEqual([]);
+  for (const [table, change] of [
+    ['bulletin_acknowledgement', `name = 'Somebody else'`],
+    ['bulletin_acknowledgement', `acknowledged_at = acknowledged_at + interval '1 second'`],
+    ['bulletin_engine', `results = '[]'`],
+    ['bulletin_engine', `car_number = '1'`],
+  ]) {
+    const found = await audited(`update record.${table} set ${change}`);
+    expect([table, found.some((where) => where.includes(`record.${table}`))]).toEqual([
+      table,
+      true,
+    ]);
+  }
+  await superuser.close();
 });
