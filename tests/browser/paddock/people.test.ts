@@ -100,7 +100,10 @@ test(
       await builder.page.getByRole('link', { name: 'Engine' }).count();
 
       await competitor.open('/paddock/builders');
-      await page.getByRole('button', { name: /^End it now.*Quill Ferrant/ }).click();
+      await page
+        .getByRole('row', { name: new RegExp(engine) })
+        .getByRole('button')
+        .click();
       await page.waitForLoadState('networkidle');
       builder.expectRefusal({ url: new RegExp(path), status: 404 });
       await builder.open(path);
