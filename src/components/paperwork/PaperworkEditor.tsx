@@ -88,6 +88,7 @@ const Editor = (props: PaperworkProps) => {
             <Questions
               questions={form.questions}
               draft={draft}
+              layout={layout}
               remarks={remarks}
               onChange={change}
             />

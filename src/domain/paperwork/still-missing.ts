@@ -1,8 +1,9 @@
 import type { PaperworkForm, Question, SheetForm, Shot } from '../rulebook/form/form';
 import type { RulesInForce } from '../rulebook/rules-in-force';
 import type { BoreLayout } from '../tappet/layout/bore-layout';
-import { answerFault, type PaperworkFile } from './declare';
-import { cellsOf, findTyped, type PaperworkDraft } from './draft';
+import { isAnswered } from './answers';
+import type { PaperworkFile } from './declare';
+import { cellsOf, type PaperworkDraft } from './draft';
 import { type JudgedCell, judgeCells } from './sheet/judge-cells';
 import { rowsFor } from './sheet/positions';
 import type { ItemRemark } from './state';
@@ -19,12 +20,6 @@ export interface StillMissing {
   readonly remarks: readonly ItemRemark[];
 }
 
-const answered = (draft: PaperworkDraft, question: Question): boolean => {
-  const whole = question.per === 'car' ? 'car' : 'engine';
-  const answer = findTyped(draft, question.subject, whole);
-  return answer !== undefined && answerFault(question, answer) === undefined;
-};
-
 /** Whether a mandatory clause asks for this sheet; others are worth giving and hold nobody up. */
 export const isAskedByName = (
   rules: Pick<RulesInForce, 'clauses'>,
@@ -35,16 +30,34 @@ export const isAskedByName = (
       force === 'mandatory' && requirement?.kind === 'sheet' && requirement.subject === subject,
   );
 
-/** Places of the sheet without a number; a sheet without columns is wanted as a file. */
-export const emptyValues = (draft: PaperworkDraft, form: SheetForm, layout: BoreLayout): number => {
-  const cells = cellsOf(draft, form.subject).filter((cell) => cell.typed.trim() !== '');
-  const has = (position: string, quantity: string) =>
-    cells.some((cell) => cell.position === position && cell.quantity === quantity);
-  return rowsFor(form.per, layout).reduce(
-    (sum, { key }) => sum + form.columns.filter(({ quantity }) => !has(key, quantity)).length,
-    0,
+/** A place whose row is not full, and the quantities that it lacks. */
+export interface IncompletePlace {
+  readonly position: string;
+  readonly lacks: readonly string[];
+}
+
+/** Place by place, what the sheet does not say yet. */
+export const incompletePlaces = (
+  draft: PaperworkDraft,
+  form: SheetForm,
+  layout: BoreLayout,
+): readonly IncompletePlace[] => {
+  const given = new Set(
+    cellsOf(draft, form.subject)
+      .filter((cell) => cell.typed.trim() !== '')
+      .map(({ position, quantity }) => `${position}|${quantity}`),
   );
+  return rowsFor(form.per, layout).flatMap(({ key }) => {
+    const lacks = form.columns
+      .filter(({ quantity }) => !given.has(`${key}|${quantity}`))
+      .map(({ label }) => label.toLowerCase());
+    return lacks.length === 0 ? [] : [{ position: key, lacks }];
+  });
 };
+
+/** Places of the sheet without a number; a sheet without columns is wanted as a file. */
+export const emptyValues = (draft: PaperworkDraft, form: SheetForm, layout: BoreLayout): number =>
+  incompletePlaces(draft, form, layout).reduce((sum, { lacks }) => sum + lacks.length, 0);
 
 /**
  * Answers to mandatory clauses, photographs, sheets that a clause asks for by name, and no cell that is
@@ -59,7 +72,7 @@ export const stillMissing = (
   remarks: readonly ItemRemark[] = [],
 ): StillMissing => ({
   questions: form.questions.filter(
-    (question) => question.force === 'mandatory' && !answered(draft, question),
+    (question) => question.force === 'mandatory' && !isAnswered(draft, question, layout),
   ),
   photographs: form.photographs.filter(
     (shot) => !files.some((file) => file.purpose === 'photograph' && file.item === shot.subject),

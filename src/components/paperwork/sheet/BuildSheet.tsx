@@ -16,6 +16,7 @@ import type { Files } from '../files/use-files';
 import type { ShownFile } from '../paperwork-props';
 import { RemarksOn } from '../RemarksOn';
 import { CellsToCorrect } from './CellsToCorrect';
+import { Completeness } from './Completeness';
 import { ValuesGrid } from './grid/ValuesGrid';
 import { SheetImport } from './import/SheetImport';
 import { boreStates } from './marks';
@@ -133,6 +134,7 @@ export const BuildSheet = (props: BuildSheetProps) => {
         />
       )}
       <CellsToCorrect cells={wrong} onChange={(cell) => take([cell])} />
+      {judged.length > 0 && <Completeness form={form} layout={layout} draft={draft} />}
       {form.columns.length > 0 && (
         <details className="py-3">
           <summary className="min-h-12 cursor-pointer font-semibold">

@@ -23,20 +23,24 @@ const BEYOND_UNCERTAINTY: HeldAgainst = {
 
 const alike = (text: string): string => text.trim().replace(/\s+/g, ' ').toLowerCase();
 
+/** An answer for the whole engine serves every place that has none of its own. */
+const answerAt = (facts: Facts, subject: string, { key }: Position): string | undefined =>
+  findAnswer(facts, subject, key) ?? findAnswer(facts, subject, 'engine');
+
 const answerMatches = (
   subject: string,
   facts: Facts,
   position: Position,
   advisory: boolean,
 ): PositionResult => {
-  const found = findAnswer(facts, subject, position.key);
+  const found = answerAt(facts, subject, position);
   if (found === undefined) return missingAt(position, wasOutOfReach(facts, subject, position.key));
   const base = { position: position.key, fit: null, answer: found };
   const words = `${position.label}: “${found}”`;
   if (facts.origin === 'declared')
     return { ...base, state: 'complies', pass: true, sentence: `${words} is declared.` };
   const declared =
-    facts.declared === undefined ? undefined : findAnswer(facts.declared, subject, position.key);
+    facts.declared === undefined ? undefined : answerAt(facts.declared, subject, position);
   if (declared === undefined)
     return {
       ...base,
@@ -59,7 +63,9 @@ const numberMatches = (
   position: Position,
   advisory: boolean,
 ): PositionResult => {
-  const fact = findNumber(facts, quantity, position.key, undefined);
+  const fact =
+    findNumber(facts, quantity, position.key, undefined) ??
+    (facts.origin === 'declared' ? findNumber(facts, quantity, 'engine', undefined) : undefined);
   if (fact === undefined) return missingAt(position, wasOutOfReach(facts, quantity, position.key));
   const words = `${position.label}: ${writtenWords(fact.value)}`;
   if (facts.origin === 'declared')
@@ -71,7 +77,9 @@ const numberMatches = (
       sentence: `${words} is declared.`,
     };
   const declared =
-    facts.declared && findNumber(facts.declared, quantity, position.key, fact.figure);
+    facts.declared &&
+    (findNumber(facts.declared, quantity, position.key, fact.figure) ??
+      findNumber(facts.declared, quantity, 'engine', fact.figure));
   if (declared === undefined)
     return {
       position: position.key,
