@@ -189,7 +189,7 @@ test('a file is mapped and entered, all cars are checked, one page is signed, re
     await tablet.page.getByLabel('Read on').selectOption({ label: `SC-${stamp}, Platform scale` });
     await weigh('8', '2834', 'Passed');
     await tablet.page.getByRole('link', { name: 'One page, one signature' }).click();
-    await tablet.page.getByRole('button', { name: 'Sign for 3 cars' }).click();
+    await tablet.page.getByRole('button', { name: 'Sign for 3 cars', exact: true }).click();
     await tablet.page.getByText(`Signed by ${INSPECTOR}`).waitFor();
     await tablet.expectAccessible();
     await tablet.expectNoSidewaysScroll();

@@ -5,19 +5,21 @@ import type {
   ChecksShown,
   LineCheckShown,
 } from '@/contracts/event/check';
+import { clockWords } from '@/domain/verdict/instant-words';
 import { CarPlate } from '../../look/CarPlate';
 import { StatusWord } from '../../look/StatusWord';
-import { clockTime } from '../../paperwork/api';
 
 interface CheckRowProps {
   readonly car: ChecksShown['cars'][number];
   readonly ask: LineCheckShown['ask'];
   readonly checked: CheckedShown | undefined;
   readonly records: boolean;
+  /** The event's: times are read off the track's clocks. */
+  readonly zone: string;
   /** Gives what there is to say about it, where there is anything. */
   readonly send: (
     said: Pick<CheckRequest, 'answer' | 'value' | 'takeBack'>,
-  ) => Promise<string | undefined>;
+  ) => Promise<{ readonly refused: boolean; readonly words: string } | undefined>;
 }
 
 const STATUS = {
@@ -27,11 +29,11 @@ const STATUS = {
 } as const;
 
 /** One car and one check: a tap, or a value and Enter. */
-export const CheckRow = ({ car, ask, checked, records, send }: CheckRowProps) => {
+export const CheckRow = ({ car, ask, checked, records, zone, send }: CheckRowProps) => {
   const [text, setText] = useState('');
   const [reason, setReason] = useState('');
   const [busy, setBusy] = useState(false);
-  const [words, setWords] = useState<string>();
+  const [words, setWords] = useState<Awaited<ReturnType<CheckRowProps['send']>>>();
   const say = async (said: Parameters<typeof send>[0]) => {
     setBusy(true);
     setWords(await send(said));
@@ -87,13 +89,15 @@ export const CheckRow = ({ car, ask, checked, records, send }: CheckRowProps) =>
             <StatusWord
               status={status}
               word={word}
-              detail={`${checked.value === null ? '' : `${checked.value.text} ${checked.value.unit}, ${checked.gauge ?? ''}. `}${clockTime(checked.at)}, ${checked.by}`}
+              detail={`${checked.value === null ? '' : `${checked.value.text} ${checked.value.unit}, ${checked.gauge ?? ''}. `}${clockWords(checked.at, zone)}, ${checked.by}`}
             />
             {checked.state !== 'within' && <span className="note">{checked.sentence}</span>}
           </>
         )}
         {checked === undefined && <span className="note">Not checked yet</span>}
-        {words !== undefined && <span className="field-error"> {words}</span>}
+        {words !== undefined && (
+          <span className={words.refused ? 'field-error' : 'note'}> {words.words}</span>
+        )}
       </span>
       {car.inspectionId !== null && (
         <a href={`/barn/inspections/${car.inspectionId}`}>

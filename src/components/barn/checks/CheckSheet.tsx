@@ -68,7 +68,7 @@ const Sheet = ({ shown: first }: CheckSheetProps) => {
   const send = async (
     entryId: string,
     said: Pick<CheckRequest, 'answer' | 'value' | 'takeBack'>,
-  ): Promise<string | undefined> => {
+  ): ReturnType<Parameters<typeof CheckRow>[0]['send']> => {
     if (check === undefined) return undefined;
     try {
       const answer = await post<CheckAnswer>(path, {
@@ -81,12 +81,14 @@ const Sheet = ({ shown: first }: CheckSheetProps) => {
       });
       void readAnew();
       return answer.state === 'outside' && answer.inspection !== null
-        ? 'Its inspection is open.'
+        ? { refused: false, words: 'Its inspection is open.' }
         : undefined;
     } catch (error) {
-      return error instanceof Refusal
-        ? error.detail
-        : 'Not sent: the server was not reached. Tap it again.';
+      const words =
+        error instanceof Refusal
+          ? error.detail
+          : 'Not sent: the server was not reached. Tap it again.';
+      return { refused: true, words };
     }
   };
 
@@ -152,6 +154,7 @@ const Sheet = ({ shown: first }: CheckSheetProps) => {
                   (one) => one.entryId === car.entryId && one.clause === check.clause,
                 )}
                 records={shown.records}
+                zone={shown.zone}
                 send={(said) => send(car.entryId, said)}
               />
             ))}
