@@ -15,17 +15,21 @@ const NEVER_CONFIRMED =
 export const sweptAt = (announcedAt: Date): Date => new Date(announcedAt.getTime() + DAY);
 
 /**
- * Refuses an announced file that was never confirmed within a day, and removes what was sent of it. A
- * file that counts by then, or was refused, is left as it is; done once, however often the job comes back.
+ * Refuses an announced file that was never confirmed within a day, and removes what was sent of it. Of a
+ * file that counts by then, or was refused, only what was sent once more is removed; done once, however
+ * often the job comes back.
  */
 export const sweepUpload = async (
-  deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs' | 'objects'>,
+  deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs' | 'objects' | 'uploads'>,
   { seriesId, fileId }: { readonly seriesId: string; readonly fileId: string },
 ): Promise<void> => {
   const file = await deps.db.findOne(KeptFile, { seriesId, id: fileId });
   // Of an erased file there is no row; what was still sent of it afterwards goes now.
   if (file === null) await deps.objects.remove(`uploads/${seriesId}/${fileId}`);
-  if (file?.state !== 'expected') return;
+  if (file === null) return;
+  // Put there once more after it had been read: nothing names it.
+  if (file.state !== 'expected' && file.uploadKey !== '') await deps.objects.remove(file.uploadKey);
+  if (file.state !== 'expected') return;
   // The queue's clock is the database's: it may run a little ahead of this one.
   if (deps.clock.now().getTime() < sweptAt(file.createdAt).getTime() - HOUR) return;
   const id = actIdFor('sweep-upload', fileId);
@@ -40,6 +44,7 @@ export const sweepUpload = async (
       Object.assign(row, { state: 'refused', refusedBecause: NEVER_CONFIRMED });
       // Under the row's lock, so that no confirmation can be reading it.
       await deps.objects.remove(row.uploadKey);
+      if (row.uploadId) await deps.uploads.drop(row.uploadKey, row.uploadId);
       return ok({ refused: true });
     },
   );

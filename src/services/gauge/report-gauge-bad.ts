@@ -131,6 +131,10 @@ export const reportGaugeBad = async (
                 ? 'No verdict relied on it.'
                 : `A review is open for ${numbers.length === 1 ? 'notice' : 'notices'} ${numbers.join(', ')}. Nothing was changed: an official says of each whether it stands or is to be decided again.`,
             ],
+            next:
+              numbers.length === 0
+                ? 'nothing to do: no verdict relied on it.'
+                : 'look at each notice and say whether it stands.',
             link: {
               label: 'See what relied on it',
               path: `/crib/${seriesId}/${gaugeId}/faults/${id}`,

@@ -41,6 +41,7 @@ export const noticeMail = (
       'The notice is attached. It decides on the rules of a class and certifies no engine as safe.',
       ...(receipt === undefined ? [] : receiptWords(receipt)),
     ],
+    next: 'read the notice. Whoever does not accept it appeals in writing before that time.',
     link: {
       label: 'Read the notice',
       path: `/series/${notice.series.slug}/verdicts/${notice.number}`,

@@ -84,6 +84,7 @@ export const withdrawPaperwork = async (
             `The paperwork of engine ${row.reference} for car ${row.carNumber} in ${row.className} was withdrawn on ${at.toISOString()}.`,
             'What was handed in before is kept. The engine is no longer declared by it.',
           ],
+          next: 'nothing to do. To race the engine again, hand its paperwork in anew.',
           link: { label: 'See it', path: `/paddock/paperwork/${paperworkId}` },
         });
       }

@@ -67,6 +67,7 @@ export const invitePerson = async (
             `${actor.name} invites you to take part in ${series.name} as ${ROLE_WORDS[role]}.`,
             `The invitation is open for ${INVITATION_DAYS} days.`,
           ],
+          next: 'look at the invitation and take it up, if you want to.',
           link: { label: 'See the invitation', path: `/invitations/${token}` },
         },
       );

@@ -53,6 +53,7 @@ export const requestSignInLink = async (
             `Dear ${person.name},`,
             `open this link within ${LINK_MINUTES} minutes and confirm there. It works once. If you did not ask for it, do nothing.`,
           ],
+          next: 'open the link and confirm there.',
           link: { label: 'Sign in', path: `/sign-in/link/${token}` },
         },
       );

@@ -117,4 +117,31 @@ describe('an upload that was confirmed', () => {
     expect([row.state, row.refusedBecause]).toEqual(['kept', null]);
     expect(paddock.objects.stored.has(row.objectKey ?? '')).toBe(true);
   });
+
+  it('what was put there once more after the file counted is removed, and the file stays', async () => {
+    const { fileId, key } = await announce();
+    must(await confirm(fileId));
+    await paddock.objects.write(key, await picture(), 'image/jpeg');
+    world.clock.advance(24 * HOUR);
+    await sweep(fileId);
+    expect([(await rowOf(fileId)).state, paddock.objects.stored.has(key)]).toEqual(['kept', false]);
+  });
+
+  it('parts of a large one are forgotten', async () => {
+    const { ports, competitor, uuid, objects, seriesId } = paddock;
+    const fileId = uuid();
+    const announced = { act: uuid(), fileId, paperworkId, purpose: 'photograph' } as const;
+    const file = {
+      item: 'lifters-racked',
+      name: 'rack.jpg',
+      type: 'image/jpeg',
+      bytes: 20_000_000,
+    };
+    must(await expectUpload(ports(), competitor, { ...announced, ...file }));
+    const { uploadId } = await rowOf(fileId);
+    objects.parts.set(`${uploadId} 1`, new Uint8Array(10));
+    world.clock.advance(24 * HOUR);
+    await sweepUpload(ports(), { seriesId, fileId });
+    expect([(await rowOf(fileId)).state, objects.parts.size]).toEqual(['refused', 0]);
+  });
 });

@@ -32,6 +32,9 @@ export const swapMails = async (
         `At ${eventName}, ${className}, engine ${swap.to} went into car ${carNumber}${swap.from === '' ? '' : ` in place of ${swap.from}`}. Seal ${swap.seal}.`,
         `The rest of its paperwork is due by ${swap.dueAt}.`,
       ],
+      next: official
+        ? 'look at the swap; the rest of the paperwork comes to be checked.'
+        : 'hand the rest of its paperwork in by that day.',
       link: official
         ? { label: 'See the engines swapped', path: '/office/paperwork' }
         : { label: 'Go on with the paperwork', path: '/paddock' },

@@ -93,6 +93,7 @@ export const acceptEngineOffer = async (
             : `${name} accepted the loan on ${at.toISOString()}; it ends on ${untilAt?.toISOString().slice(0, 10)}.`,
           'What you handed in of it stays yours. New paperwork of it is not open to you.',
         ],
+        next: 'nothing to do.',
         link: { label: 'Your paddock', path: '/paddock' },
       });
       return ok({ engineId: engine.id });

@@ -95,6 +95,7 @@ export const offerEngine = async (
           'Its seals and what was accepted of it come with it. Build sheets and cam cards do not.',
           `The offer is open for ${OFFER_DAYS} days.`,
         ],
+        next: 'read the offer, then accept it, or let it lapse.',
         link: { label: 'See the offer', path: `/invitations/engine/${token}` },
       });
       return ok({ offerId });

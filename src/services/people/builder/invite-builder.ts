@@ -103,6 +103,7 @@ export const inviteBuilder = async (
           `${rights.map((right) => RIGHT_WORDS[right]).join('. ')}.`,
           `Other engines and other customers stay separate. The invitation is open for ${INVITATION_DAYS} days.`,
         ],
+        next: 'look at the invitation and accept it, if you want to.',
         link: { label: 'See the invitation', path: `/invitations/builder/${token}` },
       });
       return ok({ grantId });

@@ -68,6 +68,7 @@ export const askGuardian = async (
           `${row.competitorName} is under age and has prepared the engine paperwork of ${row.reference} for car ${row.carNumber} in ${row.className}, ${row.seriesName}.`,
           `Read it and hand it in with your signature. The link works for ${REQUEST_DAYS} days, once.`,
         ],
+        next: 'read the paperwork and sign it, or tell the competitor what is wrong.',
         link: { label: 'Read and sign', path: `/invitations/guardian/${token}` },
       });
       return ok({ sentTo: guardian.guardianName });

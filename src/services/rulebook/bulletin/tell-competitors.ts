@@ -69,7 +69,14 @@ export const tellCompetitors = async (
     paperworkId: string | null,
   ) => {
     const link = { label: 'Read the bulletin', path };
-    const mailId = queueMail(deps, em, act, { seriesId, personId, address: email, link, ...mail });
+    const mailId = queueMail(deps, em, act, {
+      seriesId,
+      personId,
+      address: email,
+      next: 'read the bulletin, and say that you have.',
+      link,
+      ...mail,
+    });
     told.push([mailId, personId, paperworkId]);
   };
   const results = (engine: AcceptedEngine): FailedCase['results'] =>

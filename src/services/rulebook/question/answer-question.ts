@@ -83,6 +83,7 @@ export const answerQuestion = async (
             ? 'This answer is to you alone and changes no rule.'
             : `It is published as clarification ${number} and holds for everybody.`,
         ],
+        next: 'nothing to do, unless your engine is affected: then change its paperwork.',
         link: {
           label: `Read clause ${clause}`,
           path: `/series/${series.slug}/rulebooks/${raceClass.slug}/clauses/${clause}`,

@@ -76,6 +76,7 @@ export const askQuestion = async (
             kind: 'rules-question',
             subject: `${standing.rules.className}: a question about clause ${clause}`,
             paragraphs: [`${actor.name} asks about clause ${clause}:`, question],
+            next: 'answer it: to the asker alone, or as a clarification for everybody.',
             link: {
               label: 'Answer it',
               path: `/office/rulebooks/${classId}/questions/${id}`,
