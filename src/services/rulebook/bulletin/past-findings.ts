@@ -1,12 +1,14 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import { readPaperworkDocument } from '@/contracts/paperwork/document';
 import { assessInspection } from '@/domain/inspection/assess-inspection';
+import type { GaugeRecord } from '@/domain/inspection/capture/gauge-record';
 import { toHex } from '@/domain/ledger/bytes';
 import { declaredFacts } from '@/domain/paperwork/declared-facts';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import type { PastCase } from '@/domain/rulebook/trial/try-rules';
 import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
 import { GaugeRow } from '@/entities/event/gauge';
+import { readStandings } from '../../gauge/gauge-standing';
 import { registered } from '../../inspection/read/inspection-file';
 import { readRowsOf } from '../../inspection/read/rows';
 import { getRules } from '../find-rules';
@@ -16,6 +18,7 @@ const TOGETHER = 100;
 
 interface Row {
   readonly id: string;
+  readonly event_id: string;
   readonly car_number: string;
   readonly event_number: number;
   readonly zone: string;
@@ -24,6 +27,24 @@ interface Row {
   readonly document: unknown;
 }
 
+/** The register as it stood at each event: its gauges, checked on the ring there or found bad since. */
+const gaugesByEvent = async (
+  em: EntityManager,
+  seriesId: string,
+  eventIds: ReadonlySet<string>,
+): Promise<ReadonlyMap<string, readonly GaugeRecord[]>> => {
+  const rows = await em.find(GaugeRow, { seriesId });
+  const found = new Map<string, readonly GaugeRecord[]>();
+  for (const eventId of eventIds) {
+    const standings = await readStandings(em, seriesId, eventId);
+    found.set(
+      eventId,
+      rows.map((row) => ({ ...registered(row), ...standings.get(row.id) })),
+    );
+  }
+  return found;
+};
+
 /** What was found in every closed inspection of these classes, as facts for a trial of rules; the newest first. */
 export const readPastFindings = async (
   em: EntityManager,
@@ -31,7 +52,7 @@ export const readPastFindings = async (
   classIds: readonly string[],
 ): Promise<readonly PastCase[]> => {
   const inspections = await em.execute<Row[]>(
-    `select i.id, n.car_number, e.number as event_number, e.zone, i.layout, i.rules_hash,
+    `select i.id, i.event_id, n.car_number, e.number as event_number, e.zone, i.layout, i.rules_hash,
        v.document::jsonb as document
      from public.inspection i
      join public.entry n on n.series_id = i.series_id and n.id = i.entry_id
@@ -42,7 +63,7 @@ export const readPastFindings = async (
      order by i.closed_at desc, i.id`,
     [seriesId, `{${classIds.join(',')}}`],
   );
-  const gauges = (await em.find(GaugeRow, { seriesId })).map(registered);
+  const gauges = await gaugesByEvent(em, seriesId, new Set(inspections.map((row) => row.event_id)));
   const rules = new Map<string, RulesInForce>();
   for (const { rules_hash } of inspections) {
     const hash = toHex(rules_hash);
@@ -67,7 +88,7 @@ export const readPastFindings = async (
         layout: row.layout,
         zone: row.zone,
         ...rowsOf(row.id),
-        gauges,
+        gauges: gauges.get(row.event_id) ?? [],
         paperwork: paperwork && declaredFacts(paperwork),
       });
       cases.push({
