@@ -83,7 +83,8 @@ const caseFile = async (inspectionId: string) => {
   const key = formatVerifierKey(world.keys.signer(night.seriesId).key);
   const outcomes = checkCaseFile(file, [key]).map(({ outcome }) => outcome);
   const contents = file.lines.flatMap((line) => line.contents);
-  return { outcomes, strokes: contents.find(({ role }) => role === 'strokes') };
+  const find = (wanted: string) => contents.find(({ role }) => role === wanted);
+  return { outcomes, strokes: find('strokes'), signature: find('signature') };
 };
 
 describe('pen strokes beside a signature', () => {
@@ -93,9 +94,15 @@ describe('pen strokes beside a signature', () => {
     const document = (await strokesOf(id)) ?? '';
     expect(JSON.parse(document)).toMatchObject({ document: 'tagwire/strokes', report: hash });
     expect(readStrokes(document)).toEqual(STROKES);
-    const { outcomes, strokes } = await caseFile(id);
+    const { outcomes, strokes, signature } = await caseFile(id);
     expect(new Set(outcomes)).toEqual(new Set(['passed']));
     expect(strokes?.document).toBe(document);
+    expect(JSON.parse(signature?.document ?? '')).toMatchObject({
+      document: 'tagwire/signature',
+      report: hash,
+      signer: night.inspector.personId,
+      authenticatedAt: world.clock.now().toISOString(),
+    });
     expect(await faults()).toEqual([]);
   });
 

@@ -10,6 +10,8 @@ export interface SignedReport {
   readonly signedBy: string;
   readonly signer: string;
   readonly signedAt: string;
+  /** When the signer last signed in before it; ISO 8601 in UTC. */
+  readonly authenticatedAt: string | null;
   /** The ledger's line that it was entered under. */
   readonly line: string | null;
   /** Canonical JSON. */
@@ -28,7 +30,7 @@ export const readReports = (
     `select r.revision, r.reason, encode(r.hash, 'hex') as hash,
             encode(r.chain_head, 'hex') as "chainHead", r.signed_by as "signedBy", p.name as signer,
             to_char(r.signed_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"') as "signedAt",
-            l.index as line, r.document, k.strokes
+            r.signature ->> 'authenticatedAt' as "authenticatedAt", l.index as line, r.document, k.strokes
      from record.report r join public.person p on p.id = r.signed_by
      left join record.ledger_line l on l.series_id = r.series_id and l.act_id = r.act_id
      left join record.signature_strokes k on k.series_id = r.series_id

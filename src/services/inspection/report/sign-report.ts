@@ -13,6 +13,7 @@ import { findInspectionRow, worksOn } from '../read/find-inspection';
 import { getInspectionFile } from '../read/inspection-file';
 import { buildReport } from './build-report';
 import { readReports } from './read-reports';
+import { signatureDocument } from './signature-document';
 
 /** How long an authentication counts as fresh: a signature is one, over the report's hash. */
 export const FRESH_MINUTES = 15;
@@ -121,6 +122,7 @@ export const signReport = async (
         kind: number === 1 ? 'report-signed' : 'report-revised',
         contents: {
           report: { text: document, open: false },
+          signature: { text: signatureDocument(actor, hash, at), open: false },
           ...(pen !== undefined && { strokes: { text: pen, open: false } }),
         },
         refs: {
