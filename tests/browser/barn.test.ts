@@ -135,6 +135,7 @@ test('two tablets on one list and one inspection, a conflict refused, an engine 
       .click();
     await tablet.page.getByRole('button', { name: 'Open the inspection' }).click();
     await tablet.page.waitForURL(/\/measure$/);
+    await tablet.page.getByRole('region', { name: 'Keypad' }).waitFor();
     await chief.page.getByText('Open', { exact: false }).first().waitFor();
     await chief.page.locator('[data-part="history"]').getByText('Opened').waitFor();
     await sendCheck(tablet, id, 'tappet-type', 'flat');
@@ -169,6 +170,7 @@ test('two tablets on one list and one inspection, a conflict refused, an engine 
     await tablet.page.getByLabel('In words', { exact: true }).fill('Opened before the owner');
     await tablet.page.getByRole('button', { name: 'Take it up again' }).click();
     await tablet.page.waitForURL(/\/measure$/);
+    await tablet.page.getByRole('region', { name: 'Keypad' }).waitFor();
     await tablet.open(path);
     const history = tablet.page.locator('[data-part="history"]');
     expect(await history.getByRole('listitem').allTextContents()).toEqual([
@@ -187,8 +189,8 @@ test('two tablets on one list and one inspection, a conflict refused, an engine 
     await tablet.shot('barn-820-monday');
 
     // Handed over by who has it; the list of a third tablet without a stream asks by itself.
-    await second.page.route('**/live', (route) => route.fulfill({ status: 503, body: '' }));
-    second.expectRefusal({ url: /\/live$/, status: 503 });
+    await second.page.route('**/live*', (route) => route.fulfill({ status: 503, body: '' }));
+    second.expectRefusal({ url: /\/live/, status: 503 });
     await second.open('/barn');
     await second.page.getByText('Not live: asking every 10 s').waitFor();
     await tablet.page.getByText('Hand it over to another inspector').click();
