@@ -36,6 +36,14 @@ const belongsToSecond = (row: SentRow, readings: readonly ReadingRow[], by: stri
   return struck !== undefined && isSecond(struck) && struck.takenBy === by;
 };
 
+/** Nothing is measured any more, and the report is still to be signed. */
+const awaitsSignature = (state: Inspection['state']): boolean =>
+  state === 'stopped' || state === 'refused';
+
+/** What the competitor's side says at the end, whichever way a teardown ended. */
+const isWitnessWord = (row: SentRow): boolean =>
+  row.kind === 'remark' && (row.remark === 'witness' || row.remark === 'own-reading');
+
 /**
  * Why rows are kept and do not count, by their ids; a row that is missing here is accepted. The named
  * inspector and a chief record everything. Another inspector without an interest takes an independent
@@ -47,8 +55,13 @@ export const rowsNotCounted = async (
 ): Promise<ReadonlyMap<string, string>> => {
   const { actor, inspection } = standing;
   const because = forAll(standing);
-  if (because !== undefined) return new Map(rows.map((row) => [row.id, because]));
   const named = worksOn(actor, inspection);
+  if (because !== undefined) {
+    const heard = named && standing.interest === undefined && awaitsSignature(inspection.state);
+    return new Map(
+      rows.filter((row) => !(heard && isWitnessWord(row))).map((row) => [row.id, because]),
+    );
+  }
   const sent = rows.flatMap((row) => (row.kind === 'reading' ? [row] : []));
   if (named && !sent.some(isSecond)) return new Map();
   const recorded = await standing.recorded();
