@@ -1,5 +1,5 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import { EMPTY_DRAFT, type PaperworkDraft, withAnswer } from '@/domain/paperwork/draft';
+import { EMPTY_DRAFT, findTyped, type PaperworkDraft, withAnswer } from '@/domain/paperwork/draft';
 import type { PaperworkForm } from '@/domain/rulebook/form/form';
 import type { Engine } from '@/entities/paperwork/engine';
 
@@ -29,22 +29,25 @@ export const filledIn = async (
   engine: Engine,
   competitorId: string,
   form: PaperworkForm,
+  seal?: string,
 ): Promise<PaperworkDraft> => {
   const [last] = await em.execute<{ draft: PaperworkDraft }[]>(
     `select draft from public.paperwork
      where engine_id = ? and competitor_id = ? order by updated_at desc, version desc limit 1`,
     [engine.id, competitorId],
   );
-  if (last !== undefined) {
-    const { replies: _replies, ...draft } = last.draft;
-    return { ...draft, note: '' };
-  }
-  const facts = { ...engine, seals: await sealsOn(em, engine.id) };
-  return form.questions.reduce((draft, { kind, subject, per }) => {
-    const fact = FACTS.find(([named]) => kind === 'text' && named.test(subject))?.[1];
-    const position = per === 'car' ? 'car' : 'engine';
-    return fact === undefined
-      ? draft
-      : withAnswer(draft, { subject, position, typed: facts[fact] });
-  }, EMPTY_DRAFT);
+  const { replies: _replies, ...before } = last?.draft ?? EMPTY_DRAFT;
+  const facts = { ...engine, seals: seal ?? (await sealsOn(em, engine.id)) };
+  return form.questions.reduce(
+    (draft: PaperworkDraft, { kind, subject, per }) => {
+      const fact = FACTS.find(([named]) => kind === 'text' && named.test(subject))?.[1];
+      const position = per === 'car' ? 'car' : 'engine';
+      // A seal given just now replaces one that was written down before.
+      const known = findTyped(draft, subject, position) !== undefined;
+      return fact === undefined || (known && !(fact === 'seals' && seal !== undefined))
+        ? draft
+        : withAnswer(draft, { subject, position, typed: facts[fact] });
+    },
+    { ...before, note: '' },
+  );
 };

@@ -63,6 +63,7 @@ export const swapEngine = async (
         key: { seriesId, classId, carNumber, competitorId, engineId: engine.id },
         engine,
         rules: standing.rules,
+        seal,
         by: actor.personId,
         at,
       });

@@ -17,6 +17,7 @@ interface Asked {
   };
   readonly engine: Engine;
   readonly rules: RulesInForce;
+  readonly seal: string;
   readonly by: string;
   readonly at: Date;
 }
@@ -26,12 +27,12 @@ const BEST: readonly PaperworkState[] = ['accepted', 'handed-in', 'returned', 'd
 /** What declares this engine in this car already, the accepted one first; else a new draft with what is known. */
 export const swappedPaperwork = async (
   em: EntityManager,
-  { id, key, engine, rules, by, at }: Asked,
+  { id, key, engine, rules, seal, by, at }: Asked,
 ): Promise<{ readonly paperworkId: string }> => {
   const known = await em.find(Paperwork, { ...key, state: { $ne: 'withdrawn' } });
   const [best] = known.sort((a, b) => BEST.indexOf(a.state) - BEST.indexOf(b.state));
   if (best !== undefined) return { paperworkId: best.id };
-  const draft = await filledIn(em, engine, key.competitorId, paperworkForm(rules));
+  const draft = await filledIn(em, engine, key.competitorId, paperworkForm(rules), seal);
   em.persist(
     em.create(Paperwork, {
       id,
