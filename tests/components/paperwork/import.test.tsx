@@ -33,6 +33,8 @@ const sheet = readSheet(
   { fileId: '01900000-0000-7000-8000-000000000001', name: 'lifters.csv' },
 );
 
+const columns = sheet.columns.map((column) => ({ ...column, samples: [...column.samples] }));
+
 describe('what a column can hold', () => {
   it('every choice says again what it was chosen as', () => {
     for (const { value } of meaningOptions(form)) {
@@ -56,7 +58,9 @@ describe('what a column can hold', () => {
 
 describe('a file before it counts', () => {
   it('shows each column with its first values and what it holds; the unknown one is asked', () => {
-    const html = renderToStaticMarkup(<ColumnsHeld sheet={sheet} form={form} onChoose={nothing} />);
+    const html = renderToStaticMarkup(
+      <ColumnsHeld sheet={{ columns, turned: false }} form={form} onChoose={nothing} />,
+    );
     expect(html).toContain('1 to say');
     expect(html).toContain('<details class="my-3" open="">');
     expect(html).toContain('1 · 2 · 3');

@@ -10,6 +10,7 @@ import { failureWords } from '../../files/send-file';
 import type { ShownFile } from '../../paperwork-props';
 import { ColumnsHeld } from './ColumnsHeld';
 import { ImportPreview } from './ImportPreview';
+import { useKeptEdits } from './kept-edits';
 
 interface SheetImportProps {
   readonly file: ShownFile;
@@ -22,7 +23,7 @@ interface SheetImportProps {
 
 /** A file on its way into the form: what its columns hold, what it says, and nothing counts until it is confirmed. */
 export const SheetImport = ({ file, form, layout, held, onConfirm }: SheetImportProps) => {
-  const [edited, setEdited] = useState<ReadonlyMap<string, SheetCell>>(new Map());
+  const { edits, change, forget } = useKeptEdits(file.fileId);
   const { subject } = form;
   const reading = useMutation({
     networkMode: 'always',
@@ -45,11 +46,9 @@ export const SheetImport = ({ file, form, layout, held, onConfirm }: SheetImport
     </p>
   );
   if (sheet === undefined) return refused || <p role="status">Reading {file.name} …</p>;
-  const cells = sheet.cells.map((cell) => edited.get(placeKey(cell)) ?? cell);
-  const change = (cell: SheetCell) =>
-    setEdited((before) => new Map([...before, [placeKey(cell), cell]]));
+  const cells = sheet.cells.map((cell) => edits.get(placeKey(cell)) ?? cell);
   // A value typed where the file has none is the person's own.
-  const added = [...edited.values()].filter(
+  const added = [...edits.values()].filter(
     (cell) => !sheet.cells.some((one) => placeKey(one) === placeKey(cell)),
   );
   const from = sheet.sheet === '' ? file.name : `Sheet “${sheet.sheet}” of ${file.name}`;
@@ -87,7 +86,10 @@ export const SheetImport = ({ file, form, layout, held, onConfirm }: SheetImport
           form={form}
           layout={layout}
           onChange={change}
-          onConfirm={() => onConfirm([...cells, ...added].filter(({ typed }) => typed !== ''))}
+          onConfirm={() => {
+            forget();
+            onConfirm([...cells, ...added].filter(({ typed }) => typed !== ''));
+          }}
         />
       )}
     </section>
