@@ -189,7 +189,9 @@ test('two tablets on one list and one inspection, a conflict refused, an engine 
     await tablet.shot('barn-820-monday');
 
     // Handed over by who has it; the list of a third tablet without a stream asks by itself.
-    await second.page.route(/\/api\/barn\/[^/]+\/live/, (route) => route.fulfill({ status: 503, body: '' }));
+    await second.page.route(/\/api\/barn\/[^/]+\/live/, (route) =>
+      route.fulfill({ status: 503, body: '' }),
+    );
     second.expectRefusal({ url: /\/api\/barn\/.*\/live/, status: 503 });
     await second.open('/barn');
     await second.page.getByText('Not live: asking every 10 s').waitFor();
