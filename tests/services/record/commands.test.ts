@@ -188,7 +188,7 @@ describe('the record’s commands, each as a process of its own', () => {
         `usage: npm run ${script === 'erasures' ? '--silent ' : ''}${script}`,
       );
     }
-  });
+  }, 120_000);
 
   it('audit, back up, restore on an empty machine with identical hashes, and audit there', async () => {
     const good = await call(first, 'audit', early, '--key', key);
