@@ -61,9 +61,11 @@ export const findCheckSetting = async (
   );
   const now = deps.clock.now().getTime();
   const events = await db.find(Event, { seriesId }, { orderBy: { startsAt: 'desc' }, limit: 30 });
-  const tonight = events.find(
-    ({ startsAt, endsAt }) => startsAt.getTime() - WEEK < now && now < endsAt.getTime() + WEEK,
-  );
+  const away = (event: Event): number =>
+    Math.max(event.startsAt.getTime() - now, now - event.endsAt.getTime(), 0);
+  const [tonight] = [...events]
+    .filter((event) => away(event) < WEEK)
+    .sort((a, b) => away(a) - away(b));
   const eventId = inspection?.eventId ?? tonight?.id ?? null;
   const zone =
     events.find(({ id }) => id === eventId)?.zone ??
