@@ -1,4 +1,4 @@
-import { PDFDocument } from 'pdf-lib';
+import { PDFDocument, type PDFEmbeddedPage, type PDFPage } from 'pdf-lib';
 import { formatInZone } from '@/domain/deadline/format-in-zone';
 import type { Clause } from '@/domain/rulebook/clause';
 import { requirementWords } from '@/domain/rulebook/describe';
@@ -7,7 +7,7 @@ import { type Block, BOLD, gap, HEAD, NUM, paragraph, type Span, TEXT } from './
 import { paginate, type Section } from './flow';
 import { drawQr } from './frame';
 import { type Pen, POINTS, penOn, SHEET } from './pen';
-import { openTypefaces, type Style } from './typeface';
+import { openTypefaces, type Style, type Typesetter } from './typeface';
 
 const TITLE: Style = { face: 'bold', size: 29 };
 type Width = (text: string, style: Style) => number;
@@ -89,14 +89,33 @@ const drawHead = (pen: Pen, input: RulebookToPrint, first: boolean): void => {
   pen.line(SHEET.left, first ? 127 : 103, SHEET.right, first ? 127 : 103, 2);
 };
 
-const drawFoot = (pen: Pen, { hash, url }: RulebookToPrint, number: number, of: number): void => {
+const CODE = { left: 656, top: 988, size: 88 };
+
+/** The code is drawn once and shown on every page: its hundreds of squares would be most of the file. */
+const embedCode = async (
+  document: PDFDocument,
+  type: Typesetter,
+  url: string,
+): Promise<PDFEmbeddedPage> => {
+  const sheet = await PDFDocument.create({ updateMetadata: false });
+  const page = sheet.addPage([CODE.size * POINTS, CODE.size * POINTS]);
+  drawQr(penOn(page, type), url, 0, 0, CODE.size);
+  return document.embedPage(page);
+};
+
+const showCode = (page: PDFPage, code: PDFEmbeddedPage): void =>
+  page.drawPage(code, {
+    x: CODE.left * POINTS,
+    y: page.getHeight() - (CODE.top + CODE.size) * POINTS,
+  });
+
+const drawFoot = (pen: Pen, { hash }: RulebookToPrint, number: number, of: number): void => {
   pen.line(SHEET.left, 975, SHEET.right, 975, 2);
   pen.text(SHEET.left, 1001, 'Rules in force', HEAD);
   pen.text(SHEET.content, 1001, hash.slice(0, 32), NUM);
   pen.text(SHEET.content, 1023, hash.slice(32), NUM);
   pen.text(SHEET.left, 1049, 'Page', HEAD);
   pen.text(SHEET.content, 1049, `${number} of ${of}`, BOLD);
-  drawQr(pen, url, 656, 988, 88);
 };
 
 /** Prints the rules in force on A4, black only; the same rules give the same bytes. */
@@ -118,6 +137,7 @@ export const rulebookPrinter: RulebookPrinter = {
       ...input.rules.clauses.map((clause) => clauseSection(clause, input, type.width)),
       ...penaltySections(input, type.width),
     ];
+    const code = await embedCode(document, type, input.url);
     const pages = paginate(sections, { first: 128, later: 104 });
     for (const [place, placements] of pages.entries()) {
       const page = document.addPage([SHEET.width * POINTS, SHEET.height * POINTS]);
@@ -125,6 +145,7 @@ export const rulebookPrinter: RulebookPrinter = {
       drawHead(pen, input, place === 0);
       for (const placement of placements) placement.draw(pen);
       drawFoot(pen, input, place + 1, pages.length);
+      showCode(page, code);
     }
     return document.save({ useObjectStreams: false });
   },
