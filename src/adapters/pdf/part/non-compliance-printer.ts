@@ -58,7 +58,7 @@ const clauseSections = (
     },
     ...(measurand === ''
       ? []
-      : [{ label: ['Quantity', 'and datum'], blocks: paragraph([plain(`${measurand}.`)], width) }]),
+      : [{ label: ['Quantity, datum'], blocks: paragraph([plain(`${measurand}.`)], width) }]),
     readingSection(clause, width),
     ...(at.readings.length === 0
       ? []
@@ -79,7 +79,7 @@ const clauseSections = (
 
 const sectionsOf = (sheet: NonCompliance, width: Width): readonly Section[] => [
   {
-    label: ['Not complied', 'with'],
+    label: ['Not complied with'],
     blocks: paragraph(
       [
         bold(sheet.clauses.map(({ clause }) => `${clause.number} ${clause.heading}`).join('; ')),
@@ -90,7 +90,7 @@ const sectionsOf = (sheet: NonCompliance, width: Width): readonly Section[] => [
   },
   ...sheet.clauses.flatMap((at) => clauseSections(at, sheet, width)),
   {
-    label: ['Gauges and', 'certificates'],
+    label: ['Gauges'],
     blocks: sheet.gauges.flatMap(({ code, kind, certificate, calibratedOn, dueOn }) =>
       paragraph(
         [
