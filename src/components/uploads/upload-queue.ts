@@ -1,7 +1,7 @@
 import { uuidV7 } from '../measuring/queue/uuid-v7';
 import { postJson, putBytes } from './network';
 import { type SendDeps, sendUpload } from './send-upload';
-import { isStale, pathOf, renewed, type Upload, type UploadAnswer } from './upload';
+import { arrivedShare, isStale, pathOf, renewed, type Upload, type UploadAnswer } from './upload';
 import { changeUpload, forgetUpload, keepUpload, readBytes, readUploads } from './upload-store';
 
 /** Where an upload stands, as it is shown. */
@@ -173,7 +173,7 @@ export const openUploadQueue = (
         queued.set(upload.id, {
           upload,
           phase: upload.paused ? 'paused' : 'waiting',
-          share: 0,
+          share: arrivedShare(upload),
           kept: true,
         });
       tell();

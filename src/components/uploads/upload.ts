@@ -1,3 +1,5 @@
+import { partSizes } from '@/domain/paperwork/file/limits';
+
 /** A file on its way to the server, as it is kept on the device until the server has confirmed it. */
 export interface Upload {
   /** Client-made UUIDv7: the file's id on the server. */
@@ -63,6 +65,14 @@ export const renewed = (upload: Upload, newId: () => string): Upload => ({
   announcedAt: undefined,
   tags: [],
 });
+
+/** How much of it arrived before, 0 to 1. */
+export const arrivedShare = ({ bytes, tags }: Upload): number => {
+  const sizes = partSizes(bytes);
+  const parts = sizes.length === 0 ? [bytes] : sizes;
+  const arrived = parts.reduce((sum, size, at) => sum + (tags[at] ? size : 0), 0);
+  return bytes === 0 ? 0 : arrived / bytes;
+};
 
 export const pathOf = (path: string, upload: Pick<Upload, 'id'>): string =>
   path.replace('{id}', upload.id);

@@ -6,6 +6,8 @@ export interface OfficeWork {
   readonly paperworkToCheck: number;
   readonly reportsToDecide: number;
   readonly inspectionsOpen: number;
+  /** Messages that were refused, given up or came back, and nobody was served otherwise. */
+  readonly mailsNotReached: number;
   /** The next event that has not ended yet. */
   readonly nextEvent: {
     readonly slug: string;
@@ -32,6 +34,10 @@ export const readOffice = async (
          )) as "reportsToDecide",
        (select count(*)::int from public.inspection i
          where i.series_id = s.id and i.state not in ('closed', 'refused')) as "inspectionsOpen",
+       (select count(*)::int from public.mail m
+         where m.series_id = s.id and m.state in ('refused', 'given-up', 'bounced') and not exists (
+           select 1 from record.served_otherwise o where o.series_id = m.series_id and o.mail_id = m.id
+         )) as "mailsNotReached",
        (select jsonb_build_object('slug', e.slug, 'name', e.name, 'startsAt', e.starts_at)
          from public.event e where e.series_id = s.id and e.ends_at > ?
          order by e.starts_at limit 1) as "nextEvent"

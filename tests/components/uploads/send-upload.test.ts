@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { type PostAnswer, type SendDeps, sendUpload } from '@/components/uploads/send-upload';
-import { isStale, renewed, type Upload } from '@/components/uploads/upload';
+import { arrivedShare, isStale, renewed, type Upload } from '@/components/uploads/upload';
 
 const upload: Upload = {
   id: 'file-1',
@@ -163,6 +163,13 @@ describe('what goes wrong', () => {
     );
     expect(outcome).toEqual({ kind: 'stopped' });
     expect(device().tags).toEqual(['tag of store:1', '', '']);
+  });
+
+  it('says how much of it had arrived, by the parts that did', () => {
+    const large = { ...upload, bytes: 12_000_000 };
+    expect(arrivedShare(large)).toBe(0);
+    expect(arrivedShare({ ...large, tags: ['a', '', ''] })).toBeCloseTo(5_242_880 / 12_000_000);
+    expect(arrivedShare({ ...upload, tags: ['a'] })).toBe(1);
   });
 
   it('announced longer ago than the server waits, it is announced anew under another id', () => {
