@@ -110,6 +110,17 @@ describe('columns that somebody explained once', () => {
     expect(rows.map((row) => row.person_id)).toEqual([paddock.competitor.personId]);
   });
 
+  it('are known again in the file that was given back with its errors', async () => {
+    const file = await keep('Place,OD,ID,Who\n3 intake,21.39,0.84.40,JM\n');
+    const asked = { fileId: file, subject };
+    const given = must(await annotateSheet(paddock.ports(), paddock.competitor, asked));
+    const again = await keep(Buffer.from(given.bytes).toString().replace('0.84.40', '0.8440'));
+    expect(await typed(again)).toEqual([
+      'lifter-body-diameter 21.39',
+      'tappet-bore-diameter 0.8440',
+    ]);
+  });
+
   it('a choice for a column that the file lacks is not kept', async () => {
     const file = await keep('Place,A,B\n3 intake,0.8422,0.8440\n');
     const kept = await remember(file, { ...MAPPING, A: reading('lifter-body-diameter') });

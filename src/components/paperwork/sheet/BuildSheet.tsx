@@ -125,7 +125,7 @@ export const BuildSheet = (props: BuildSheetProps) => {
               }}
             />
           ))}
-      {form.columns.length > 0 && byBore && (
+      {form.columns.length > 0 && byBore && (judged.length > 0 || fresh.length === 0) && (
         <BoreMap
           layout={layout}
           view="mini"

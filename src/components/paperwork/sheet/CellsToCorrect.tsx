@@ -62,36 +62,49 @@ const Editor = ({
   );
 };
 
+/** As many as are read one by one; of a whole column in the wrong unit nobody reads more. */
+const AT_ONCE = 6;
+
 /** Each cell that is no number or hardly meant, with the place, the words and the way to put it right. */
 export const CellsToCorrect = ({ cells, onChange }: CellsToCorrectProps) => {
   const [open, setOpen] = useState<string>();
-  return (
-    <ul>
-      {cells.map((judged) => {
-        const key = placeKey(judged.cell);
-        const { source } = judged.cell;
-        return (
-          <li className="flex flex-wrap items-center gap-3 border-b border-hair py-2" key={key}>
-            <Mark status="unreadable" />
-            <span className="min-w-0 flex-1 basis-36">
-              {judged.detail} {judged.remedy}
-              {source !== undefined && (
-                <span className="text-ink-2">
-                  {' '}
-                  In {sourceWords(source)} (cell {source.cell}).
-                </span>
-              )}
+  const item = (judged: JudgedCell) => {
+    const key = placeKey(judged.cell);
+    const { source } = judged.cell;
+    return (
+      <li className="flex flex-wrap items-center gap-3 border-b border-hair py-2" key={key}>
+        <Mark status="unreadable" />
+        <span className="min-w-0 flex-1 basis-36">
+          {judged.detail} {judged.remedy}
+          {source !== undefined && (
+            <span className="text-ink-2">
+              {' '}
+              In {sourceWords(source)} (cell {source.cell}).
             </span>
-            {open === key ? (
-              <Editor judged={judged} onChange={onChange} onClose={() => setOpen(undefined)} />
-            ) : (
-              <button type="button" className="btn ml-auto" onClick={() => setOpen(key)}>
-                Correct<span className="visually-hidden"> {cellWords(judged.cell)}</span>
-              </button>
-            )}
-          </li>
-        );
-      })}
-    </ul>
+          )}
+        </span>
+        {open === key ? (
+          <Editor judged={judged} onChange={onChange} onClose={() => setOpen(undefined)} />
+        ) : (
+          <button type="button" className="btn ml-auto" onClick={() => setOpen(key)}>
+            Correct<span className="visually-hidden"> {cellWords(judged.cell)}</span>
+          </button>
+        )}
+      </li>
+    );
+  };
+  const rest = cells.slice(AT_ONCE);
+  return (
+    <>
+      <ul>{cells.slice(0, AT_ONCE).map(item)}</ul>
+      {rest.length > 0 && (
+        <details>
+          <summary className="min-h-12 cursor-pointer font-semibold">
+            {rest.length} more to correct
+          </summary>
+          <ul>{rest.map(item)}</ul>
+        </details>
+      )}
+    </>
   );
 };

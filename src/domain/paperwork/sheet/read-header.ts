@@ -48,7 +48,7 @@ const named = <T>(list: readonly (readonly [T, RegExp])[], words: string): T | u
   list.find(([, pattern]) => pattern.test(words))?.[0];
 
 /** A unit in brackets, after a comma, or as the last word: `Bore (mm)`, `Lifter, in`, `Foot in.` */
-const unitIn = (header: string, quantity: QuantityName): string | undefined => {
+export const unitIn = (header: string, quantity: QuantityName): string | undefined => {
   const { dimension } = getQuantityEntry(quantity);
   const candidates = [
     ...[...header.matchAll(/[([{]([^)\]}]+)[)\]}]/g)].map((match) => match[1] ?? ''),

@@ -4,6 +4,7 @@ import {
   columnName,
   isUnexplained,
 } from '@/domain/paperwork/sheet/column-meaning';
+import { isOwnColumn } from '@/domain/paperwork/sheet/read-header';
 import type { SheetForm } from '@/domain/rulebook/form/form';
 import {
   type MeaningOption,
@@ -71,7 +72,7 @@ export const ColumnsHeld = ({ sheet, form, onChoose }: ColumnsHeldProps) => {
         </thead>
         <tbody>
           {columns
-            .filter(({ samples }) => samples.length > 0)
+            .filter(({ samples, header }) => samples.length > 0 && !isOwnColumn(header))
             .map((column) => {
               const { at, key, header, meaning, samples } = column;
               const name = header === '' ? `${line} ${nameOf(at)}` : header;
@@ -87,10 +88,10 @@ export const ColumnsHeld = ({ sheet, form, onChoose }: ColumnsHeldProps) => {
                       label={`${name} holds`}
                       value={optionOf(meaning)}
                       options={options}
-                      onChange={(value) => onChoose(key, meaningFor(value, form))}
+                      onChange={(value) => onChoose(key, meaningFor(value, form, header))}
                     />
                   </td>
-                  <td data-label="Unit">
+                  <td data-label={reading && 'Unit'}>
                     {reading && (
                       <Choice
                         label={`Unit of ${name}`}
@@ -100,7 +101,7 @@ export const ColumnsHeld = ({ sheet, form, onChoose }: ColumnsHeldProps) => {
                       />
                     )}
                   </td>
-                  <td data-label="Where">
+                  <td data-label={reading && 'Where'}>
                     {reading && (
                       <Choice
                         label={`Where ${name} was measured`}

@@ -49,6 +49,10 @@ export const ImportPreview = (props: ImportPreviewProps) => {
   const good = judged.length - wrong.length;
   const changes = replaced(cells, held);
   const byBore = form.per === 'bore' || form.per === 'lifter';
+  // Bore by bore, as far as the file goes: what it has no column for is missing elsewhere.
+  const columns = form.columns.filter(({ quantity }) =>
+    cells.some((cell) => cell.quantity === quantity),
+  );
   const toCorrect = wrong.length > 0 || sheet.notes.some(({ row }) => row !== undefined);
   return (
     <>
@@ -56,7 +60,7 @@ export const ImportPreview = (props: ImportPreviewProps) => {
         <BoreMap
           layout={layout}
           view="mini"
-          bores={boreStates(boreMarks(layout, form, judged, []))}
+          bores={boreStates(boreMarks(layout, { ...form, columns }, judged, []))}
           label={`${file.name} before it counts, front at the left`}
           onSelect={(position) => grid.current?.goTo(position)}
         />

@@ -1,4 +1,5 @@
 import type { ColumnMeaning } from '@/domain/paperwork/sheet/column-meaning';
+import { unitIn } from '@/domain/paperwork/sheet/read-header';
 import { unitSymbols } from '@/domain/quantity/find-unit';
 import type { SheetForm } from '@/domain/rulebook/form/form';
 import { getQuantityEntry, isQuantityName } from '@/domain/rulebook/quantity-catalogue';
@@ -67,13 +68,13 @@ export const withSpot = (meaning: Reading, spot: string): ColumnMeaning => {
 export const unitsOf = ({ quantity }: Reading): readonly string[] =>
   unitSymbols(getQuantityEntry(quantity).dimension);
 
-/** What the choice means; a reading is in the unit the rules use, until another is chosen. */
-export const meaningFor = (option: string, form: SheetForm): ColumnMeaning => {
+/** What the choice means; a reading is in the unit that its heading names, else in the rules’ own. */
+export const meaningFor = (option: string, form: SheetForm, header = ''): ColumnMeaning => {
   const [kind, quantity = '', valve] = option.split(' ');
   if (kind === 'position' || kind === 'cylinder' || kind === 'valve') return { kind };
   if (kind !== 'reading' || !isQuantityName(quantity)) return { kind: 'not-taken' };
   const column = form.columns.find((one) => one.quantity === quantity);
-  const unit = column?.unit ?? getQuantityEntry(quantity).unit;
+  const unit = unitIn(header, quantity) ?? column?.unit ?? getQuantityEntry(quantity).unit;
   const meaning = { kind, quantity, unit, depth: '', axis: '' } as const;
   return valve === 'intake' || valve === 'exhaust' ? { ...meaning, valve } : meaning;
 };

@@ -5,6 +5,7 @@ import { canonicalJson } from '@/domain/ledger/canonical';
 import { MOST_BYTES } from '@/domain/paperwork/file/limits';
 import type { SheetColumn } from '@/domain/paperwork/sheet/column-meaning';
 import type { Mapping } from '@/domain/paperwork/sheet/find-columns';
+import { isOwnColumn } from '@/domain/paperwork/sheet/read-header';
 import { type ReadSheet, readBook } from '@/domain/paperwork/sheet/read-sheet';
 import type { WantedSheet } from '@/domain/paperwork/sheet/sheet-cell';
 import { fail, ok, type Result } from '@/domain/result';
@@ -63,10 +64,21 @@ const findSheet = async (
 /** By which a choice of columns is kept: what kind of sheet it is, and the set of its headings. */
 export const columnsKey = (
   { form }: WantedSheet,
-  columns: readonly Pick<SheetColumn, 'key'>[],
+  columns: readonly Pick<SheetColumn, 'key' | 'header'>[],
 ): { readonly sheet: string; readonly headings: string } => ({
   sheet: `${form.sheet} ${form.per}`,
-  headings: toHex(sha256(utf8(canonicalJson([...new Set(columns.map(({ key }) => key))].sort())))),
+  headings: toHex(
+    sha256(
+      utf8(
+        canonicalJson(
+          // The column that we add to a file is none of the person's own.
+          [
+            ...new Set(columns.flatMap(({ key, header }) => (isOwnColumn(header) ? [] : key))),
+          ].sort(),
+        ),
+      ),
+    ),
+  ),
 });
 
 /**
