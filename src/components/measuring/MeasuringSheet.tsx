@@ -30,6 +30,8 @@ const hintOf = (step: Step | undefined): string | undefined => {
       return `on to ${boreName(step.to)}`;
     case 'part':
       return `on to ${step.part.label.toLowerCase()}, ${boreName(step.to)}`;
+    case 'checks':
+      return 'on to the checks';
     case 'opening':
       return 'opening zero';
     case 'closing':
@@ -117,6 +119,7 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
     <MeasuringLayout
       carNumber={sheet.carNumber}
       hand={setUp.hand}
+      ready={capture.ready && isRead}
       facts={factsOf(bay)}
       saved={
         <SavedLine

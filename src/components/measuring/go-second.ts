@@ -5,6 +5,8 @@ const WAIT_MS = 4000;
 const isThere = async (address: string): Promise<boolean> => {
   try {
     const answer = await fetch(address, { method: 'HEAD', signal: AbortSignal.timeout(WAIT_MS) });
+    // An answer that nobody reads is cut off when the page is left.
+    await answer.arrayBuffer();
     return answer.ok && !answer.redirected;
   } catch {
     return false;

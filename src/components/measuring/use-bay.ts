@@ -7,7 +7,7 @@ import { boreName, positionsOf } from '@/domain/tappet/layout/bore-layout';
 import type { Bay } from './bay';
 import { assessSheet } from './sheet/assess-sheet';
 import { askedBy, partsAsked } from './sheet/flow/asked';
-import { nextStep } from './sheet/flow/steps';
+import { nextStep, type Step } from './sheet/flow/steps';
 import { isComplete } from './sheet/flow/taken';
 import { hideFirst } from './sheet/hide-first';
 import { baseFor } from './sheet/keys/typed-base';
@@ -54,7 +54,7 @@ export const useBay = (
   const byPlan = askedBy(setUp, plan);
   const asked: Bay['asked'] = blind ? askedBy({ ...setUp, form: 'full' }, plan) : byPlan;
   const led = partsAsked(setUp, plan, parts);
-  const step =
+  const reached =
     part &&
     nextStep({
       part,
@@ -67,6 +67,9 @@ export const useBay = (
       outOfReach,
       asked,
     });
+  const unanswered = checks.some(({ answer }) => answer === undefined);
+  const step: Step | undefined =
+    reached?.kind === 'done' && unanswered ? { kind: 'checks' } : reached;
   const gauge = part && gaugeFor(setUp, part.quantity, sheet.gauges);
   const scale = part && scaleFor(setUp, part.quantity, gauge);
   const base = part && scale && baseFor(sheet.rules, part.quantity, scale);

@@ -38,6 +38,7 @@ const onward = (step: Step): Parameters<Hands['go']>[0] | undefined => {
   if (step.kind === 'bore') return { bore: boreName(step.to), cell: undefined, set: 1 };
   if (step.kind === 'part')
     return { part: step.part.key, bore: boreName(step.to), cell: undefined, set: 1 };
+  if (step.kind === 'checks') return { part: 'checks', cell: undefined, set: 1 };
   return undefined;
 };
 

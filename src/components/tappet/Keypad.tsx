@@ -20,6 +20,13 @@ const digits = ['7', '8', '9', '4', '5', '6', '1', '2', '3'] as const;
 // A tap must not take the focus: Enter on the keyboard would then press the tapped key again.
 const keepFocus = (event: PointerEvent) => event.preventDefault();
 
+/** What was tapped, not reached by keys, gives the keys back: the next Enter belongs to the number. */
+const giveBack = (event: MouseEvent) => {
+  const { activeElement } = document;
+  if (event.detail > 0 && activeElement instanceof HTMLElement && activeElement.matches('button'))
+    activeElement.blur();
+};
+
 /** The number pad. It holds no number: every key goes to `onKey`, the keyboard's too. */
 export const Keypad = (props: KeypadProps) => {
   const { onKey, unit, unitNote = 'unit fixed for this sheet', enterHint, acts } = props;
@@ -34,7 +41,11 @@ export const Keypad = (props: KeypadProps) => {
       if (!event.repeat || key === 'erase') onKey(key);
     };
     window.addEventListener('keydown', onKeyDown);
-    return () => window.removeEventListener('keydown', onKeyDown);
+    window.addEventListener('click', giveBack);
+    return () => {
+      window.removeEventListener('keydown', onKeyDown);
+      window.removeEventListener('click', giveBack);
+    };
   }, [listens, onKey]);
 
   const press = (key: PadKey) => ({

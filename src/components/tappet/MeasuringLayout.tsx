@@ -19,11 +19,17 @@ interface MeasuringLayoutProps {
   readonly pad: ReactNode;
   /** Left-handed: the pad moves to the left, the map to the right. */
   readonly hand?: 'right' | 'left';
+  /** Whether keys are taken: what the device holds has been read. */
+  readonly ready?: boolean;
 }
 
 /** The measuring screen: map, work and pad side by side, or the map above them when held upright. */
 export const MeasuringLayout = (props: MeasuringLayoutProps) => (
-  <div className="measuring" data-hand={props.hand ?? 'right'}>
+  <div
+    className="measuring"
+    data-hand={props.hand ?? 'right'}
+    data-ready={props.ready ? 'yes' : 'no'}
+  >
     <header className="bar measuring-bar">
       <CarPlate number={props.carNumber} size="bar" />
       {props.facts.map((fact) => (

@@ -1,16 +1,13 @@
 import { parseWritten } from '../../quantity/parse';
-import { abs, compare, mul, rational, sub } from '../../quantity/rational';
+import { abs, compare, sub } from '../../quantity/rational';
 import type { Clause } from '../../rulebook/clause';
 import type { PositionResult } from '../../rulebook/clause-result';
 import { decisionOf } from '../../rulebook/evaluate/decision-of';
 import { getQuantityEntry } from '../../rulebook/quantity-catalogue';
 
-/** Expanded uncertainties between a value and its limit below which one reading is not enough. Common practice. */
-const WIDTHS = rational(2n);
-
 /**
- * Whether a screened value needs its full sheet: it is not clearly within, or lies less than twice its U
- * from a limit.
+ * Whether a screened value needs its full sheet: it is not within, or its U reaches a limit. Common
+ * practice: what is clear in one reading is not made clearer by more.
  */
 export const isNearLimit = ({ requirement }: Clause, result: PositionResult): boolean => {
   if (['too-close', 'outside', 'does-not-comply'].includes(result.state)) return true;
@@ -19,9 +16,9 @@ export const isNearLimit = ({ requirement }: Clause, result: PositionResult): bo
   const value = result.exact && parseWritten(result.exact, dimension);
   const uncertainty = result.uncertainty && parseWritten(result.uncertainty, dimension);
   if (value?.ok !== true || uncertainty?.ok !== true) return false;
-  const room = mul(uncertainty.value.value, WIDTHS);
+  const room = uncertainty.value.value;
   const { min, max } = decisionOf(requirement).limits;
   return [min, max].some(
-    (limit) => limit !== undefined && compare(abs(sub(value.value.value, limit.value)), room) < 0,
+    (limit) => limit !== undefined && compare(abs(sub(value.value.value, limit.value)), room) <= 0,
   );
 };

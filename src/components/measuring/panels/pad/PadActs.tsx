@@ -52,6 +52,8 @@ export const PadActs = ({ bay, capture, onStrike, onMore, onProblem }: PadActsPr
             const file = event.target.files?.[0];
             if (file !== undefined) void keep(file);
             event.target.value = '';
+            // The keys belong to the number again.
+            event.target.blur();
           }}
         />
       </label>

@@ -15,6 +15,8 @@ export type Step =
   | { readonly kind: 'part'; readonly part: Part; readonly to: BorePosition }
   /** A second set is complete: both are seen side by side. */
   | { readonly kind: 'both' }
+  /** Every number is there; checks are not answered yet. */
+  | { readonly kind: 'checks' }
   | { readonly kind: 'done' };
 
 export interface Standing {
