@@ -138,7 +138,11 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
           onSelect={select}
         />
       }
-      tally={<Tally statuses={Object.values(states.bores).map((one) => one.status)} />}
+      tally={
+        cursor.part === 'rack' ? null : (
+          <Tally statuses={Object.values(states.bores).map((one) => one.status)} />
+        )
+      }
       run={<RunPanel bay={bay} onClosing={() => go({ zero: 'closing' })} />}
       work={
         <WorkPanel
