@@ -15,6 +15,7 @@ import { performAct } from '../act/perform-act';
 import type { Ports } from '../ports';
 import { findDrawState } from './find-history';
 import { findPool } from './find-pool';
+import { whoBefore } from './who-before';
 
 const followed = (state: DrawState): string =>
   state.at === 'void' ? toHex(sha256(canonicalBytes(state.ended))) : '';
@@ -55,7 +56,10 @@ export const announceDraw = async (
       const subject = { seriesId, eventId, classId };
       const state = await findDrawState(em, subject);
       const notNow = NOT_NOW[state.at];
-      if (notNow !== undefined) return fail(failure('not-in-this-state', notNow));
+      if (notNow !== undefined)
+        return fail(
+          failure('not-in-this-state', `${notNow} ${await whoBefore(em, event, classId)}`),
+        );
       const { pool, hash } = await findPool(em, subject);
       if (pool.length === 0) return fault('/classId', 'No car is entered in this class.');
       if (hash !== request.poolHash)

@@ -8,6 +8,7 @@ import { Event } from '@/entities/event/event';
 import type { Act } from '../act/perform-act';
 import { isId } from '../paperwork/own-paperwork';
 import { type DrawRow, findDrawRow, findDrawState } from './find-history';
+import { whoBefore } from './who-before';
 
 export interface OpenDraw {
   readonly row: DrawRow;
@@ -23,16 +24,20 @@ export const takeOpenDraw = async (
   const named = isId(drawId) ? await findDrawRow(em, seriesId, drawId) : undefined;
   if (named === undefined) return fail(absent());
   const { eventId, classId } = named;
-  await em.findOne(
+  const event = await em.findOneOrFail(
     Event,
     { seriesId, id: eventId },
     { lockMode: LockMode.PESSIMISTIC_WRITE, refresh: true },
   );
   const row = await findDrawRow(em, seriesId, drawId);
-  if (row?.end === 'made')
-    return fail(failure('not-in-this-state', 'This draw was made. It is made once and stands.'));
-  if (row?.end === 'void')
-    return fail(failure('not-in-this-state', 'This draw was declared void and cannot be made.'));
+  if (row?.end) {
+    const words =
+      row.end === 'made'
+        ? 'This draw was made. It is made once and stands.'
+        : 'This draw was declared void and cannot be made.';
+    const who = await whoBefore(em, event, classId);
+    return fail(failure('not-in-this-state', `${words} ${who}`));
+  }
   const state = await findDrawState(em, { seriesId, eventId, classId });
   if (row === undefined || state.at !== 'committed' || state.commitment.draw !== drawId)
     throw new Error(`Draw ${drawId} has no end, yet is not the open one of its class.`);

@@ -266,6 +266,9 @@ describe('a draw from beginning to end', () => {
     expect([one.ok, other.ok].filter(Boolean)).toHaveLength(1);
     const refused = one.ok ? other : one;
     expect(failureOf(refused).detail).toContain('It is made once');
+    expect(failureOf(refused).detail).toContain(
+      `It was made by ${one.ok ? night.official.name : second.name}, `,
+    );
     if (one.ok) expect(get(await make(drawId, { act }))).toEqual(one.value);
     expect(failureOf(await make(drawId)).name).toBe('not-in-this-state');
     expect((await linesOf(drawId)).map(({ kind }) => kind)).toEqual([
@@ -379,6 +382,8 @@ describe('announcing', () => {
       [one, other].map((asked) => announceDraw(ports(), night.official, asked)),
     );
     expect(both.filter(({ ok }) => ok)).toHaveLength(1);
+    for (const refused of both.filter(({ ok }) => !ok))
+      expect(failureOf(refused).detail).toContain(`It was announced by ${night.official.name}, `);
     const done = both[0]?.ok ? one : other;
     const again = get(await announceDraw(ports(), night.official, done));
     expect(again.id).toBe(done.id);
