@@ -83,7 +83,7 @@ export const addSheet = async (competitor: Visitor, sheet: Upload): Promise<void
   await page.getByRole('button', { name: 'Confirm these 48 values' }).click();
   const bad = page.getByText('5 intake, lifter: “0.84.41” is no number. Kept as written.');
   await bad.waitFor();
-  expect(await page.locator('main').textContent()).toContain(`${sheet.name}, cell B`);
+  expect(await page.locator('main').textContent()).toContain(`column B of ${sheet.name}`);
   await look(competitor, 'sheet-bad-cell');
   await page
     .getByRole('region', { name: 'Lifter sheet, one row per bore' })

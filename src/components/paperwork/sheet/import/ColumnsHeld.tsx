@@ -24,6 +24,9 @@ interface ColumnsHeldProps {
   readonly onChoose: (key: string, meaning: ColumnMeaning) => void;
 }
 
+/** A choice of its own: what is chosen already cannot be chosen again. */
+const UNSAID: MeaningOption = { value: '', words: 'say what it holds' };
+
 interface ChoiceProps {
   readonly label: string;
   readonly value: string;
@@ -76,9 +79,10 @@ export const ColumnsHeld = ({ sheet, form, onChoose }: ColumnsHeldProps) => {
             .map((column) => {
               const { at, key, header, meaning, samples } = column;
               const name = header === '' ? `${line} ${nameOf(at)}` : header;
+              const unexplained = isUnexplained(column);
               const reading = meaning.kind === 'reading' ? meaning : undefined;
               return (
-                <tr key={key} className={isUnexplained(column) ? 'row-close' : undefined}>
+                <tr key={key} className={unexplained ? 'row-close' : undefined}>
                   <th scope="row" data-label={`${line} ${nameOf(at)}`}>
                     {name}
                   </th>
@@ -86,8 +90,8 @@ export const ColumnsHeld = ({ sheet, form, onChoose }: ColumnsHeldProps) => {
                   <td data-label="Holds">
                     <Choice
                       label={`${name} holds`}
-                      value={optionOf(meaning)}
-                      options={options}
+                      value={unexplained ? '' : optionOf(meaning)}
+                      options={unexplained ? [UNSAID, ...options] : options}
                       onChange={(value) => onChoose(key, meaningFor(value, form, header))}
                     />
                   </td>
