@@ -32,7 +32,7 @@ export const invite = async (official: Visitor, story: Story): Promise<void> => 
   const { page, open } = official;
   await open('/office');
   await page.getByRole('link', { name: 'People' }).first().click();
-  await page.getByLabel('E-mail address').fill(story.newcomer.email);
+  await page.getByLabel('E-mail address', { exact: true }).fill(story.newcomer.email);
   await page.getByLabel('As', { exact: true }).selectOption({ label: 'competitor' });
   await page.getByRole('button', { name: 'Send the invitation' }).click();
   await page.getByText(`${story.newcomer.email}, competitor`).waitFor();
