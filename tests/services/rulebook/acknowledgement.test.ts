@@ -137,11 +137,11 @@ describe('a bulletin that makes an engine illegal', () => {
     await paddock
       .ports()
       .db.execute(
-        `update public.mail set state = 'failed', last_error = 'no such mailbox' where kind = 'bulletin-affects-engine'`,
+        `update public.mail set state = 'bounced', answer = '550 no such mailbox' where kind = 'bulletin-affects-engine'`,
       );
     expect((await reach(1))?.engines[0]?.owners[0]).toMatchObject({
-      mail: 'failed',
-      error: 'no such mailbox',
+      mail: 'bounced',
+      error: '550 no such mailbox',
     });
   });
 

@@ -1,12 +1,13 @@
 import { type Actor, may } from '@/domain/access/permission';
+import type { MailState } from '@/domain/mail/mail-state';
 import type { Ports } from '../../ports';
 
 export interface ReachedPerson {
   readonly personId: string;
   readonly name: string;
   /** Of the message that told them; nothing where there was none. */
-  readonly mail: 'to-send' | 'sent' | 'failed' | null;
-  /** Why it did not go out. */
+  readonly mail: MailState | null;
+  /** What the receiving server said, or why it did not go out. */
   readonly error: string | null;
   readonly sentAt: string | null;
   /** When, and by whose word; nothing while not. */
@@ -70,7 +71,7 @@ export const findBulletinReach = async (
     })[]
   >(
     `select t.paperwork_id as "paperworkId", p.id as "personId", p.name, m.state as mail,
-       m.last_error as error, m.sent_at as "sentAt",
+       coalesce(m.answer, m.last_error) as error, m.sent_at as "sentAt",
        (select min(a.acknowledged_at) from record.bulletin_acknowledgement a
         where a.series_id = t.series_id and a.bulletin_id = t.bulletin_id and a.person_id = p.id)
          as "acknowledgedAt"
