@@ -8,7 +8,12 @@ import {
   splitIntoCodes,
 } from '@/domain/inspection/witness/readings-codes';
 import { witnessFrom } from '@/domain/inspection/witness/witness-from';
-import { isQuantityName, readingsFor } from '@/domain/rulebook/quantity-catalogue';
+import {
+  getQuantityEntry,
+  isQuantityName,
+  type QuantityName,
+  readingsFor,
+} from '@/domain/rulebook/quantity-catalogue';
 import { positionsOf } from '@/domain/tappet/layout/bore-layout';
 import { CarPlate } from '../look/CarPlate';
 import { SavedLine } from '../look/SavedLine';
@@ -53,7 +58,10 @@ export const WitnessSheet = ({ sheet, head, open, checks }: WitnessSheetProps) =
         ? [...readingsFor(requirement.quantity)]
         : [],
     );
-    return [...new Set(asked.filter(isQuantityName))];
+    // What is read at a bore comes first: it is what a competitor's own gauge is mostly put on.
+    const atBore = (name: QuantityName) =>
+      getQuantityEntry(name).source === 'lifter-sheet' ? 0 : 1;
+    return [...new Set(asked.filter(isQuantityName))].sort((a, b) => atBore(a) - atBore(b));
   }, [sheet.rules]);
   const own = inTakingOrder(rows.remarks).filter(({ kind }) => kind === 'own-reading');
   const witness = witnessFrom(rows.remarks);

@@ -54,6 +54,7 @@ test('a gauge is withdrawn: the look-back lists what relied on it, and changes n
     expect(await words(chief)).toContain('C-7760');
     await look(chief, 'gauge-history');
     await chief.page.getByRole('link', { name: 'Found bad' }).click();
+    chief.expectRefusal({ url: /\/bad$/, status: 422 });
     await chief.page.getByRole('button', { name: /^Withdraw gauge IM-02/ }).click();
     await chief.page.getByRole('alert').waitFor();
     await chief.page.getByLabel('What was found, and how').fill('Its rod is bent; it reads large.');
@@ -85,13 +86,13 @@ test('a gauge is withdrawn: the look-back lists what relied on it, and changes n
     expect(await shown()).not.toMatch(/review/);
     const review = official.page.getByRole('article', { name: `Notice ${sound}` });
     await review.getByRole('button', { name: /under review/ }).click();
-    await official.page.waitForLoadState();
+    await review.getByText(/, public$/).waitFor();
     expect(await shown()).toContain('This verdict is under review');
     await review
       .getByLabel(/^Why it stands/)
       .fill('The stroke was read with a second gauge as well.');
     await review.getByRole('button', { name: 'The verdict stands' }).click();
-    await official.page.waitForLoadState();
+    await review.getByText(/^“The stroke was read/).waitFor();
     const said = await shown();
     expect(said).toContain('It stands');
     expect(said).not.toContain('second gauge');
@@ -133,6 +134,7 @@ test('a held part: its tag, a hand-over, an opening, the return, and a gap that 
     await page.getByLabel('Where it sits').fill('oil pan');
     await page.getByRole('button', { name: 'Record the seal' }).click();
     await page.getByText('Seal 30551 was found at oil pan, where none is on record.').waitFor();
+    inspector.expectRefusal({ url: /\/custody$/, status: 422 });
     await page.getByText('Take a part into custody').click();
     await page.getByRole('button', { name: 'Give it a tag' }).click();
     await page.getByRole('alert').waitFor();
@@ -159,8 +161,10 @@ test('a held part: its tag, a hand-over, an opening, the return, and a gap that 
       await page.getByLabel(kind, { exact: true }).check();
       for (const [label, text] of Object.entries(fields))
         await page.getByLabel(label, { exact: true }).fill(text);
+      const acts = page.getByRole('list', { name: /^What happened/ }).getByRole('listitem');
+      const before = await acts.count();
       await page.getByRole('button', { name: 'Record it' }).click();
-      await page.waitForLoadState();
+      await acts.nth(before).waitFor();
     };
     const GIVER = 'Who gives it, opens it or closes it';
     await record('Handed over', {

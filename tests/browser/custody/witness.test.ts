@@ -49,7 +49,7 @@ test.each([
       const { page, context } = visitor;
       await page.getByRole('list', { name: 'Findings' }).waitFor();
       const said = await words(visitor);
-      expect(said).toContain('0.0062');
+      expect(said).toContain('0.0063 in');
       expect(said).toMatch(/outside: fail/);
       await context.setOffline(true);
       const codes = await readCodes(visitor);
@@ -118,6 +118,7 @@ test('without signal: an own reading is written down and a refusal recorded; the
     await page.getByText('Have your own reading written down').click();
     await page.getByRole('button', { name: 'Write it down' }).click();
     await page.getByRole('alert').waitFor();
+    await page.getByLabel('What', { exact: true }).selectOption('lifter-body-diameter');
     await page.getByLabel('Where', { exact: true }).selectOption('1 intake');
     await page.getByLabel(/^Read, in/).fill('0,8419');
     await page.getByRole('button', { name: 'Write it down' }).click();
@@ -138,6 +139,7 @@ test('without signal: an own reading is written down and a refusal recorded; the
     await page.getByText('has seen the findings and refused to sign').waitFor();
     expect(await words(visitor)).toContain('The block was hot.');
     await page.getByRole('link', { name: 'Readings to take along' }).click();
+    await page.getByRole('heading', { name: 'Readings behind the mandatory clauses' }).waitFor();
     expect(await words(visitor)).toMatch(/own readings[\s\S]*0\.8419 in, by/i);
   });
   const own = await query<{ subject: string; value: string; reason: string }>(
