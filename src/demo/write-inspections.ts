@@ -33,6 +33,12 @@ export interface DemoInspection {
 
 const ROWS_AT_ONCE = 150;
 
+/** A hand on the pad that writes nobody's name. */
+const SCRIBBLE = [
+  '120,210 150,110 185,90 205,130 180,205 150,225 170,190 240,150 270,205 300,150 325,205 360,160',
+  '400,200 430,150 460,205 490,150 520,205 560,160 640,190 720,170',
+];
+
 /** One teardown, as an inspector works through it. */
 export const writeInspection = async (stage: Stage, demo: DemoInspection): Promise<void> => {
   const { inspectionId, inspector, layout, engine } = demo;
@@ -113,6 +119,11 @@ export const writeInspection = async (stage: Stage, demo: DemoInspection): Promi
   stage.clock.pass(120);
   done(
     'sign the report',
-    await signReport(stage.ports(), acting(), { act: stage.uuid(), inspectionId, head }),
+    await signReport(stage.ports(), acting(), {
+      act: stage.uuid(),
+      inspectionId,
+      head,
+      strokes: SCRIBBLE,
+    }),
   );
 };
