@@ -13,6 +13,8 @@ export interface WeekendFacts {
   readonly waived: readonly string[];
   /** Whether the rules are others than those it was handed in under. */
   readonly rulesChanged: boolean;
+  /** The notice of the last breach found on this engine, and whether its paperwork was changed since. */
+  readonly breach?: { readonly notice: string; readonly answered: boolean } | undefined;
 }
 
 export type WeekendAnswer = 'nothing-against' | 'waits' | 'not-yet' | 'against';
@@ -44,7 +46,7 @@ const STATE: Readonly<
  * what is declared and decided; only an inspection says what is in the engine.
  */
 export const weekendOf = (facts: WeekendFacts): Weekend => {
-  const { state, remarks, breaches, warnings, waived, rulesChanged } = facts;
+  const { state, remarks, breaches, warnings, waived, rulesChanged, breach } = facts;
   if (state === 'withdrawn')
     return {
       answer: 'not-yet',
@@ -56,6 +58,11 @@ export const weekendOf = (facts: WeekendFacts): Weekend => {
   const handed = state === 'handed-in' || state === 'accepted';
   const against = handed && breaches.length > 0;
   const reasons = [
+    ...(breach === undefined
+      ? []
+      : [
+          `A breach was found on this engine: notice ${breach.notice}${breach.answered ? ', before this paperwork' : ''}.`,
+        ]),
     ...(state === 'draft' ? ['It is not handed in.'] : []),
     ...(state === 'returned' ? [`It came back with ${counted(remarks, 'remark')}.`] : []),
     ...(breaches.length > 0 ? [`What is declared does not meet ${clauses(breaches)}.`] : []),
@@ -71,6 +78,8 @@ export const weekendOf = (facts: WeekendFacts): Weekend => {
       : []),
     ...(waived.length > 0 ? [`Waived: ${clauses(waived)}.`] : []),
   ];
+  if (handed && breach?.answered === false)
+    return { answer: 'against', word: 'Breach found', reasons, step: 'See what was declared' };
   return against
     ? { answer: 'against', word: 'Not as declared', reasons, step: 'See which clause' }
     : { ...base, reasons };

@@ -41,6 +41,18 @@ describe('am I legal this weekend', () => {
       'nothing-against',
       ['Advice only: clause 4.6 warns.', 'Waived: clause 4.2.'],
     ],
+    [
+      'accepted before a breach was found',
+      { breach: { notice: '2026-002', answered: false } },
+      'against',
+      ['A breach was found on this engine: notice 2026-002.'],
+    ],
+    [
+      'accepted anew after a breach was found',
+      { breach: { notice: '2026-002', answered: true } },
+      'nothing-against',
+      ['A breach was found on this engine: notice 2026-002, before this paperwork.'],
+    ],
     ['withdrawn', { state: 'withdrawn' }, 'not-yet', ['It declares nothing.']],
   ] as const)('%s', (_name, change, answer, reasons) => {
     const { answer: said, reasons: why } = weekendOf(facts(change as Partial<WeekendFacts>));

@@ -9,7 +9,7 @@ import { evaluateRules } from '@/domain/rulebook/evaluate/evaluate-rules';
 import type { Ports } from '../../ports';
 import { readPublications, type StandingRules, standingRules } from '../../rulebook/find-rules';
 import { checkRow } from '../check-paperwork';
-import { listOwnPaperwork } from './list-own-paperwork';
+import { listOwnPaperwork, listOwnVerdicts } from './list-own-paperwork';
 import { readPaperwork, readVersions } from './read-row';
 import { getVersionDocument } from './version-document';
 
@@ -58,6 +58,16 @@ export const readWeekend = async (
 ): Promise<readonly WeekendRow[]> => {
   const now = deps.clock.now();
   const findStanding = standingOnce(deps.db);
+  // The newest first: what was decided last on an engine is what stands.
+  const verdicts = await listOwnVerdicts(deps, actor);
+  const breachOn = ({ engineId, competitorId, updatedAt }: OwnPaperworkRow) => {
+    const last = verdicts.find(
+      (one) => one.engineId === engineId && one.competitorId === competitorId,
+    );
+    return last?.decision === 'breach'
+      ? { notice: last.number, answered: updatedAt > last.publishedAt }
+      : undefined;
+  };
   const rows: WeekendRow[] = [];
   for (const row of await listOwnPaperwork(deps, actor)) {
     const at = row.dueAt === null ? now : new Date(row.dueAt);
@@ -74,6 +84,7 @@ export const readWeekend = async (
       ),
       waived,
       rulesChanged,
+      breach: breachOn(row),
     };
     rows.push({ ...row, ...weekendOf(facts), waived });
   }
