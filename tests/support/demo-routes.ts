@@ -39,6 +39,10 @@ export async function demoParameters(client: pg.Client): Promise<ReadonlyMap<str
       "select id from public.file where paperwork_id = $1 and purpose = 'photograph'",
       [paperwork],
     ),
+    '/api/sheets/[file]': await one(
+      "select id from public.file where paperwork_id = $1 and purpose = 'sheet' and item = 'lifter-sheet'",
+      [paperwork],
+    ),
     '/series/[slug]/rulebooks/[class]': 'street-eight',
     '/series/[slug]/events/[event]': 'round-1',
     '/series/[slug]/verdicts/[number]': notice,

@@ -55,7 +55,7 @@ export const operations: readonly Operation[] = [
   },
   {
     method: 'get',
-    path: '/api/files/{file}/corrections',
+    path: '/api/sheets/{file}/corrections',
     summary: 'The sheet as it was sent, with a column that says what to correct in each row',
     access: 'signed-in',
   },

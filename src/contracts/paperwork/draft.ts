@@ -1,6 +1,10 @@
 import * as z from 'zod/mini';
 import { findUnit } from '@/domain/quantity/find-unit';
-import { getQuantityEntry, type QuantityName } from '@/domain/rulebook/quantity-catalogue';
+import {
+  getQuantityEntry,
+  isQuantityName,
+  type QuantityName,
+} from '@/domain/rulebook/quantity-catalogue';
 import { quantityName } from './document';
 
 const line = z.string().check(z.maxLength(200, 'At most 200 characters.'));
@@ -20,9 +24,9 @@ const source = z.strictObject({
   held: z.optional(typed),
 });
 
-/** A unit that is none of the quantity's would make nonsense of the number. */
+/** A unit that is none of the quantity's would make nonsense of the number. A quantity that is none is refused by itself. */
 const fits = ({ quantity, unit }: { quantity: QuantityName; unit: string }): boolean =>
-  findUnit(getQuantityEntry(quantity).dimension, unit) !== undefined;
+  !isQuantityName(quantity) || findUnit(getQuantityEntry(quantity).dimension, unit) !== undefined;
 const UNFIT = { error: 'This is no unit of the quantity.', path: ['unit'] };
 
 const cell = z

@@ -3,7 +3,6 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Actor } from '@/domain/access/permission';
 import { POST as columns } from '@/pages/api/files/[file]/columns';
 import { POST as confirm } from '@/pages/api/files/[file]/confirm';
-import { GET as corrections } from '@/pages/api/files/[file]/corrections';
 import { GET as original } from '@/pages/api/files/[file]/original';
 import { GET as preview } from '@/pages/api/files/[file]/preview/[width]';
 import { POST as remove } from '@/pages/api/files/[file]/remove';
@@ -14,6 +13,7 @@ import { POST as draft } from '@/pages/api/paperwork/[paperwork]/draft';
 import { POST as files } from '@/pages/api/paperwork/[paperwork]/files';
 import { POST as handInRoute } from '@/pages/api/paperwork/[paperwork]/hand-in';
 import { GET as template } from '@/pages/api/paperwork/[paperwork]/template/[sheet]';
+import { GET as corrections } from '@/pages/api/sheets/[file]/corrections';
 import { makePreviews } from '@/services/file/make-previews';
 import {
   fullDraft,
@@ -99,7 +99,7 @@ const routes = (): readonly (readonly [string, APIRoute, Asked])[] => {
     ['remove', remove, { params: file, body: { act } }],
     ['sheet', sheet, { params: file, body: { subject: 'lifter-sheet' } }],
     ['columns', columns, { params: file, body: { act, subject: 'lifter-sheet', mapping: {} } }],
-    ['corrections', corrections, { params: file, query: '?subject=lifter-sheet' }],
+    ['corrections', corrections, { params: file }],
     ['preview', preview, { params: { ...file, width: '160' } }],
     ['original', original, { params: file }],
     [

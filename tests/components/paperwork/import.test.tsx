@@ -100,7 +100,7 @@ describe('a file before it counts', () => {
     expect(text).toContain('Confirm these 4 values');
     expect(text).toContain('3 count once you confirm; 1 cell stays to be corrected');
     expect(text).toContain('4 values in the form will be replaced');
-    expect(html).toContain('/api/files/f1/corrections?subject=lifter-sheet');
+    expect(html).toContain('/api/sheets/f1/corrections');
   });
 });
 

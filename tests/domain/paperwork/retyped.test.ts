@@ -35,8 +35,8 @@ describe('a cell that is typed anew', () => {
 });
 
 describe('a draft that comes in', () => {
-  const issues = (unit: string) => {
-    const sheets = [{ subject: 'lifter-sheet', cells: [{ ...cell, unit }] }];
+  const issues = (unit: string, quantity: string = cell.quantity) => {
+    const sheets = [{ subject: 'lifter-sheet', cells: [{ ...cell, unit, quantity }] }];
     return paperworkDraft
       .safeParse({ ...EMPTY_DRAFT, sheets })
       .error?.issues.map(({ path }) => path);
@@ -46,5 +46,6 @@ describe('a draft that comes in', () => {
     expect(issues('in')).toBeUndefined();
     expect(issues('g')).toEqual([['sheets', 0, 'cells', 0, 'unit']]);
     expect(issues('constructor')).toEqual([['sheets', 0, 'cells', 0, 'unit']]);
+    expect(issues('in', 'shoe-size')).toEqual([['sheets', 0, 'cells', 0, 'quantity']]);
   });
 });

@@ -99,7 +99,7 @@ describe('columns that somebody explained once', () => {
     for (const other of [paddock.rival, paddock.official]) {
       expect(await read(file, other)).toMatchObject({ failure: { name: 'absent' } });
       expect(await remember(file, MAPPING, other)).toMatchObject({ failure: { name: 'absent' } });
-      const asked = { fileId: file, subject };
+      const asked = { fileId: file };
       expect(await annotateSheet(paddock.ports(), other, asked)).toMatchObject({
         failure: { name: 'absent' },
       });
@@ -112,7 +112,7 @@ describe('columns that somebody explained once', () => {
 
   it('are known again in the file that was given back with its errors', async () => {
     const file = await keep('Place,OD,ID,Who\n3 intake,21.39,0.84.40,JM\n');
-    const asked = { fileId: file, subject };
+    const asked = { fileId: file };
     const given = must(await annotateSheet(paddock.ports(), paddock.competitor, asked));
     const again = await keep(Buffer.from(given.bytes).toString().replace('0.84.40', '0.8440'));
     expect(await typed(again)).toEqual([
@@ -138,9 +138,7 @@ describe('columns that somebody explained once', () => {
 describe('files that are given out', () => {
   it('the sheet with its errors beside each row, read by what is remembered', async () => {
     const file = await keep('Place,OD,ID,Who\n3 intake,21.39,0.84.40,JM\n', 'mine.csv');
-    const given = must(
-      await annotateSheet(paddock.ports(), paddock.competitor, { fileId: file, subject }),
-    );
+    const given = must(await annotateSheet(paddock.ports(), paddock.competitor, { fileId: file }));
     expect([given.name, given.type]).toEqual(['mine to correct.csv', 'text/csv']);
     expect(Buffer.from(given.bytes).toString()).toContain('C2: 3 intake, bore: “0.84.40”');
   });

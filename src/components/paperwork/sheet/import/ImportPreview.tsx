@@ -77,10 +77,7 @@ export const ImportPreview = (props: ImportPreviewProps) => {
       {toCorrect && (
         <p className="py-2">
           Put it right here, or in your own program:{' '}
-          <a
-            href={`/api/files/${file.fileId}/corrections?subject=${encodeURIComponent(form.subject)}`}
-            download
-          >
+          <a href={`/api/sheets/${file.fileId}/corrections`} download>
             {file.name} with a column that says what to correct
           </a>
           , then add that file.

@@ -17,7 +17,7 @@ const nameOf = (name: string, type: string): string =>
 export const annotateSheet = async (
   deps: SheetDeps,
   actor: Actor,
-  input: { readonly fileId: string; readonly subject: string },
+  input: { readonly fileId: string },
 ): Promise<Result<OpenedFile, Failure>> => {
   const opened = await openSheetFile(deps, actor, input);
   if (!opened.ok) return opened;

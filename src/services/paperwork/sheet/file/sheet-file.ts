@@ -36,7 +36,7 @@ export interface SheetOfFile {
 const findSheet = async (
   deps: SheetDeps,
   actor: Actor,
-  input: { readonly fileId: string; readonly subject: string },
+  input: { readonly fileId: string; readonly subject?: string | undefined },
 ): Promise<Result<Pick<SheetOfFile, 'file' | 'seriesId' | 'wanted'>, Failure>> => {
   const found = await findOwnFile(deps.db, actor, input.fileId);
   if (found === undefined) return fail(absent());
@@ -49,9 +49,10 @@ const findSheet = async (
     return fail(failure('unsupported-file', detail));
   }
   const { seriesId, classId, engineId } = paperwork;
+  const { subject = file.item } = input;
   const standing = await findRules(deps.db, seriesId, classId, deps.clock.now());
   if (standing === undefined) return fail(noRules());
-  const form = paperworkForm(standing.rules).sheets.find((one) => one.subject === input.subject);
+  const form = paperworkForm(standing.rules).sheets.find((one) => one.subject === subject);
   if (form === undefined || form.columns.length === 0) {
     const detail = 'The rules in force ask for no numbers on this sheet.';
     return fail(failure('not-in-this-state', detail));
@@ -90,7 +91,8 @@ export const openSheetFile = async (
   actor: Actor,
   input: {
     readonly fileId: string;
-    readonly subject: string;
+    /** The sheet's subject in the rulebook; what the file was added for where absent. */
+    readonly subject?: string | undefined;
     readonly mapping?: Mapping | undefined;
   },
 ): Promise<Result<SheetOfFile, Failure>> => {
