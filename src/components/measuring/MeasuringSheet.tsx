@@ -90,16 +90,20 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
     },
     [keep],
   );
-  const hands: Hands = { go, setUpAs, record };
-  const entry = useEntry(bay, hands);
+  const entry = useEntry(bay, { go, setUpAs, record });
+  const { take } = entry;
+  const goAfterKeys = useCallback<Hands['go']>((to) => take(() => go(to)), [take, go]);
+  const hands: Hands = { go: goAfterKeys, setUpAs, record };
   if (bay === undefined) return <p>This engine’s position map has no bores.</p>;
 
   const { part, scale, base, step } = bay;
   const states = statesOf(bay);
   const listens = capture.ready && isRead && panel === undefined;
   const select = (bore: string) => {
-    go({ bore, cell: undefined, set: 1, zero: undefined, closed: undefined });
-    entry.clear();
+    take(() => {
+      go({ bore, cell: undefined, set: 1, zero: undefined, closed: undefined });
+      entry.clear();
+    });
   };
   const both = async () => {
     if (!(await endSecond(sheet.second !== undefined, goAndKeep)))
@@ -143,7 +147,7 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
           <Tally statuses={Object.values(states.bores).map((one) => one.status)} />
         )
       }
-      run={<RunPanel bay={bay} onClosing={() => go({ zero: 'closing' })} />}
+      run={<RunPanel bay={bay} onClosing={() => hands.go({ zero: 'closing' })} />}
       work={
         <WorkPanel
           bay={bay}
@@ -159,7 +163,7 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
       pad={
         keypad ? (
           <Keypad
-            onKey={entry.take}
+            onKey={take}
             unit={scale?.shown ?? ''}
             unitNote={implied}
             {...(hint === undefined ? {} : { enterHint: hint })}

@@ -54,7 +54,7 @@ export const useEntry = (bay: Bay | undefined, hands: Hands) => {
   const [problem, setProblem] = useState<string>();
   const [turn, settle] = useState(0);
   const busy = useRef(false);
-  const waiting = useRef<PadKey[]>([]);
+  const waiting = useRef<(PadKey | (() => void))[]>([]);
   const typing = useRef(NOTHING);
   const type = useCallback((to: Typed) => {
     typing.current = to;
@@ -165,9 +165,16 @@ export const useEntry = (bay: Bay | undefined, hands: Hands) => {
   const latestEnter = useRef(enter);
   latestEnter.current = enter;
   const take = useCallback(
-    (key: PadKey) => {
+    (key: PadKey | (() => void)) => {
       if (busy.current) {
         waiting.current.push(key);
+        return;
+      }
+      // A tap that leads elsewhere comes after the keys before it: no reading lands where it was not read.
+      if (typeof key === 'function') {
+        busy.current = true;
+        key();
+        settle((turn) => turn + 1);
         return;
       }
       if (key !== 'enter') {
