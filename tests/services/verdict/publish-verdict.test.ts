@@ -318,7 +318,19 @@ describe('a decision', () => {
     const inspection = await v.addInspection('63');
     await v.sign(inspection, BIG_FEET);
     const first = await v.decide(inspection, BREACH);
+    const at = (number: string) => findNotice(world.ports(), { slug: 'corran-valley', number });
+    if (!first.ok) throw new Error('not published');
+    const asked = { seriesId: v.seriesId, inspectionId: inspection };
+    const earlier = async () => {
+      const sheet = await readForDecision(world.ports(), v.official, asked);
+      return sheet.ok ? sheet.value.earlierNotice : undefined;
+    };
+    expect([(await at(first.value.number))?.correctedAt, await earlier()]).toEqual([null, null]);
     await v.sign(inspection, {});
+    expect([(await at(first.value.number))?.correctedAt, await earlier()]).toEqual([
+      '2026-07-12T03:48:00.000Z',
+      first.value.number,
+    ]);
     const saved = await v.save(inspection, { ...NO_BREACH, reportRevision: 2 }, 2);
     if (!saved.ok) throw new Error(saved.failure.detail);
     const second = await publishVerdict(world.ports(), v.official, {
@@ -327,9 +339,11 @@ describe('a decision', () => {
       inspectionId: inspection,
       version: saved.value.version,
     });
-    if (!first.ok || !second.ok) throw new Error('not published');
-    const at = (number: string) => findNotice(world.ports(), { slug: 'corran-valley', number });
-    expect(await at(first.value.number)).toMatchObject({ replacedBy: second.value.number });
+    if (!second.ok) throw new Error('not published');
+    expect(await at(first.value.number)).toMatchObject({
+      replacedBy: second.value.number,
+      correctedAt: null,
+    });
     expect(await at(second.value.number)).toMatchObject({ replaces: first.value.number });
     const board = await listNotices(world.ports(), { seriesId: v.seriesId, find: '63' });
     expect(board.notices.map(({ number, replacedBy }) => [number, replacedBy])).toEqual([
