@@ -83,10 +83,10 @@ test(
         const [chooser] = await Promise.all([
           page.waitForEvent('filechooser'),
           page
-          .locator('button')
-          .and(page.getByRole('button', { name: /^(Photograph|Add another)/ }))
-          .first()
-          .click(),
+            .locator('button')
+            .and(page.getByRole('button', { name: /^(Photograph|Add another)/ }))
+            .first()
+            .click(),
         ]);
         await chooser.setFiles([...pictures]);
         await firstDrop;
