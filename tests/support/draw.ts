@@ -36,7 +36,10 @@ export const verifyPublicDraw = (
 ): { readonly says: string; readonly code: number } => {
   const script = join(import.meta.dirname, 'verify-draw.mjs');
   try {
-    const says = execFileSync(process.execPath, [script, site, series, draw], { encoding: 'utf8' });
+    const says = execFileSync(process.execPath, [script, site, series, draw], {
+      encoding: 'utf8',
+      stdio: 'pipe',
+    });
     return { says: says.trim(), code: 0 };
   } catch (error) {
     const { stdout, stderr, status } = error as { stdout: string; stderr: string; status: number };
