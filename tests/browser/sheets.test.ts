@@ -1,6 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
-import type { Page } from 'playwright-core';
+import type { Locator, Page } from 'playwright-core';
 import { expect, test } from 'vitest';
 import { readSheetRows } from '@/services/paperwork/sheet/read-sheet-rows';
 import { writeZip } from '@/services/paperwork/sheet/xlsx/write-zip';
@@ -42,11 +42,19 @@ const preview = (page: Page, name: string) =>
 
 const section = (page: Page) => page.getByRole('region', { name: TITLE, exact: true });
 
-const saved = (page: Page) =>
-  page
+/** Confirms, and waits until the server has the draft with these values. */
+const confirm = async (page: Page, open: Locator, name: string): Promise<void> => {
+  const button = open.getByRole('button', { name });
+  await button.waitFor();
+  await Promise.all([
+    page.waitForResponse((response) => response.url().endsWith('/draft') && response.ok()),
+    button.click(),
+  ]);
+  await page
     .getByRole('status')
     .getByText(/^Sent \d\d:\d\d/)
     .waitFor();
+};
 
 test(
   'a German sheet: its columns are explained once, a bad cell is put right, and it is confirmed',
@@ -108,10 +116,9 @@ test(
       await page.keyboard.press('Escape');
 
       expect(await section(page).textContent()).toContain('none of them counts yet');
-      await open.getByRole('button', { name: 'Confirm these 32 values' }).click();
+      await confirm(page, open, 'Confirm these 32 values');
       await open.waitFor({ state: 'detached' });
       await section(page).getByText('32 of its values count.').waitFor();
-      await saved(page);
       await page.reload();
       await page.locator('[data-ready="yes"]').waitFor();
       await section(page).getByText('Type or see all values').click();
@@ -173,9 +180,8 @@ test(
       await again.getByRole('button', { name: 'Confirm these 32 values' }).waitFor();
       expect(await again.textContent()).not.toContain('DIV');
       expect(await again.textContent()).toContain('all known');
-      await again.getByRole('button', { name: 'Confirm these 32 values' }).click();
+      await confirm(page, again, 'Confirm these 32 values');
       await section(page).getByText('32 of its values count.').waitFor();
-      await saved(page);
       await competitor.shot('sheet-confirmed');
     });
   },
