@@ -2,6 +2,7 @@ import type { Page } from 'playwright-core';
 import { expect, test } from 'vitest';
 import { journey } from '../../support/browser';
 import { eventually } from '../../support/wait';
+import { CLAUSES } from './demo-class';
 import {
   addClause,
   OFFICIAL,
@@ -11,77 +12,7 @@ import {
   sent,
   settled,
   startFrom,
-  type Written,
 } from './steps';
-
-const LIMIT = 'A limit on a measured or derived quantity';
-
-const CLAUSES: readonly (Written & { readonly under?: string })[] = [
-  { heading: 'Engine', words: 'What holds for the engine.' },
-  {
-    under: '1',
-    heading: 'Displacement',
-    words: 'Displacement is at most 362.0 cubic inches.',
-    kind: LIMIT,
-    fill: async (page) => {
-      await page.getByLabel('Quantity').selectOption({ label: 'Displacement' });
-      await page.getByRole('textbox', { name: 'At most', exact: true }).fill('362.0');
-    },
-  },
-  { heading: 'Tappets', words: 'What holds for the tappets.' },
-  {
-    under: '2',
-    heading: 'Type',
-    words: 'Tappets are flat.',
-    kind: 'A listed choice',
-    fill: async (page) => {
-      await page.getByLabel(/^Question/).fill('Which type are the tappets?');
-      await page.getByLabel('Key', { exact: true }).first().fill('tappet-type');
-      await page.getByRole('button', { name: 'Add an option' }).click();
-      await page.getByLabel('Option 1', { exact: true }).fill('Flat');
-      await page.getByRole('button', { name: 'Add an option' }).click();
-      await page.getByLabel('Option 2', { exact: true }).fill('Roller');
-      await page.getByRole('checkbox', { name: 'Flat' }).check();
-    },
-  },
-  {
-    under: '2',
-    heading: 'Body size',
-    words: 'The body measures 0.842 in, 0.0006 in over and 0.0004 in under.',
-    kind: LIMIT,
-    fill: async (page) => {
-      await page.getByLabel('Which figure counts').selectOption('mean');
-      await page.getByLabel('Stated as').selectOption('nominal');
-      await page.getByLabel('Nominal', { exact: true }).fill('0.8420');
-      await page.getByLabel('Over, at most', { exact: true }).fill('0.0006');
-      await page.getByLabel('Under, at most', { exact: true }).fill('0.0004');
-    },
-  },
-  {
-    under: '2',
-    heading: 'Bushed bores',
-    words: 'Bores are not bushed.',
-    kind: 'Yes or no',
-    fill: async (page) => {
-      await page.getByLabel(/^Question/).fill('Is the lifter bore bushed?');
-      await page.getByLabel('Key', { exact: true }).first().fill('bore-bushed');
-      await page.getByLabel('Once for').selectOption('bore');
-      await page.getByLabel('The answer that complies').selectOption('no');
-    },
-  },
-  {
-    under: '2',
-    heading: 'Valve lift',
-    words: 'Valve lift at the retainer is at most 0.4800 in.',
-    kind: LIMIT,
-    fill: async (page) => {
-      await page.getByLabel('Quantity').selectOption({ label: 'Valve lift' });
-      await page.getByLabel('Lash', { exact: true }).fill('0.000');
-      await page.getByLabel('Checking lifter').selectOption('solid');
-      await page.getByRole('textbox', { name: 'At most', exact: true }).fill('0.4800');
-    },
-  },
-];
 
 /** Midnight after the clocks of the demo series' zone went forward next year: second Sunday of March. */
 const springDay = (): string => {
@@ -104,6 +35,9 @@ test('an official writes the demo class from empty, publishes it and amends it a
     await page.getByLabel('Name', { exact: true }).fill('A');
     await page.getByLabel('For which breaches').fill('A part that can improve performance');
     await page.getByLabel('First breach').fill('Loss of the result');
+    await page.getByRole('button', { name: 'Add a step' }).click();
+    await page.getByLabel('Breach 2').fill('Loss of the season’s points');
+    await page.getByLabel('Breaches count on into the next season').check();
     for (const clause of CLAUSES) await addClause(page, clause.under, clause);
 
     // The lift has no datum yet: the fault says so and leads to the field.
@@ -190,6 +124,20 @@ test('an official writes the demo class from empty, publishes it and amends it a
     await read(`/clauses/2.4?on=${day}`);
     await reader.page.getByRole('img', { name: 'Address of clause 2.4' }).waitFor();
     await reader.expectAccessible();
+    await read('');
+    const whole = (await reader.page.locator('main').textContent()) ?? '';
+    for (const { heading } of CLAUSES) expect(whole).toContain(heading);
+    for (const words of [
+      'Judged by the officials.',
+      'what most builders do',
+      'Loss of the result; then Loss of the season’s points. Counts on into the next season.',
+      'A 0.8450 in gauge must not pass each lifter bore',
+      'of the mean of at least 3 reference parts',
+      'intake bolts',
+    ]) {
+      expect(whole).toContain(words);
+    }
+    expect(await reader.page.locator('[id="3.7"] a[href$="#2.2"]').count()).toBe(1);
     await read(`?find=bushed`);
     expect(await reader.page.locator('article.rule').count()).toBe(1);
   });
