@@ -11,6 +11,7 @@ import { readProduct } from '../../support/product';
 import { eventually } from '../../support/wait';
 import { INSPECTOR, keptOf, openEngine, openSheet, sessionOf, sheetReady } from './engine';
 import { allSent, Hand } from './hand';
+import { ownServer } from './own-server';
 
 const MINUTES = 60_000;
 const CLAUSES = TAPPET_RULE_SET.clauses.filter(({ number }) => ['4.2', '4.6'].includes(number));
@@ -155,4 +156,55 @@ test('an answer lost after the server wrote doubles nothing, and what follows wa
     console.log(`Answer lost: all sent after ${Math.round(performance.now() - begun)} ms`);
     expect(await valuesOf(id)).toEqual(FULL);
   });
+});
+
+test('the server killed in the middle loses nothing and doubles nothing', {
+  timeout: 4 * MINUTES,
+}, async () => {
+  const { id, path } = await openEngine(CLAUSES);
+  const server = await ownServer();
+  await server.start();
+  try {
+    await journey('server killed', async ({ enter }) => {
+      const visitor = await enter({ viewport: { width: 1180, height: 820 }, touch: true });
+      const { page, context } = visitor;
+      const value = await sessionOf(INSPECTOR);
+      await context.addCookies([{ name: SESSION_COOKIE, value, url: server.url }]);
+      await page.goto(`${server.url}${path}`);
+      await sheetReady(page);
+      const hand = new Hand(page);
+      await hand.read('21');
+      await eventually('the first reading on the server', async () =>
+        (await valuesOf(id)).length === 1 ? true : undefined,
+      );
+      // The first answer after this is lost: the server has it, the tablet does not know.
+      visitor.expectRefusal({ url: /\/captures$/, status: 'offline' });
+      await page.route(
+        '**/captures',
+        async (route) => {
+          await route.fetch();
+          await server.kill();
+          await route.abort();
+        },
+        { times: 1 },
+      );
+      await hand.read('22');
+      await eventually('the second reading on the server', async () =>
+        (await valuesOf(id)).length === 2 ? true : undefined,
+      );
+      for (const digits of BODIES.slice(2)) await hand.read(digits);
+      await page.getByText(/entries not sent yet/).waitFor();
+      const begun = performance.now();
+      await server.start();
+      await page.reload();
+      await sheetReady(page);
+      await allSent(visitor);
+      console.log(
+        `Server killed: started again and all sent after ${Math.round(performance.now() - begun)} ms`,
+      );
+      expect(await valuesOf(id)).toEqual(FULL);
+    });
+  } finally {
+    await server.kill();
+  }
 });
