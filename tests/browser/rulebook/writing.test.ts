@@ -6,6 +6,7 @@ import { CLAUSES } from './demo-class';
 import {
   addClause,
   OFFICIAL,
+  openClassInForce,
   openNewClass,
   ready,
   SECOND,
@@ -187,5 +188,52 @@ test('two officials on one draft choose, clause by clause, what stays', async ()
     expect(await one.page.getByLabel('Words', { exact: true }).inputValue()).toBe(
       'Each lifter weighs at least 82.0 g.',
     );
+  });
+});
+
+test('an official copies last season’s rulebook and changes one limit', async () => {
+  await journey('copy of last season', async ({ enter }) => {
+    const official = await enter();
+    const { page } = official;
+    await official.signInAs(OFFICIAL);
+    const stamp = Date.now().toString(36);
+    const name = `Copied ${stamp}`;
+    await openClassInForce(official, name);
+
+    await official.open('/office');
+    await page.getByRole('link', { name: 'Seasons and classes' }).first().click();
+    const year = new Date().getFullYear() + 1;
+    const season = `${year} ${stamp}`;
+    await page.getByLabel('Name', { exact: true }).fill(season);
+    await page.getByLabel('First day').fill(`${year}-01-01`);
+    await page.getByLabel('Last day').fill(`${year}-12-31`);
+    await page.getByRole('button', { name: 'Open the season' }).click();
+    const next = page.locator('section', {
+      has: page.getByRole('heading', { name: `Season ${season}` }),
+    });
+    await next.getByLabel(`New class in season ${season}`).fill(name);
+    await next.getByRole('button', { name: 'Add it and write its rulebook' }).click();
+    await page.waitForURL(/\/start$/);
+    await official.expectAccessible();
+    await page.getByLabel(new RegExp(`${name}, season .*, edition 1`)).check();
+    await page.getByRole('button', { name: 'Start writing' }).click();
+    await page.waitForURL(/\/draft\//);
+    await ready(page);
+    await page.locator('.clause-row', { hasText: 'Displacement' }).click();
+    await page.getByRole('textbox', { name: 'At most', exact: true }).fill('355.0');
+    // The words still say the old limit: the editor asks.
+    await page.getByText(/The words do not say 355\.0/).waitFor();
+    await page.getByLabel('Words', { exact: true }).fill('Displacement is at most 355.0 in³.');
+    await page.getByRole('heading', { name: 'Nothing is ambiguous' }).waitFor();
+    await sent(page);
+    await settled(page);
+    await page.getByRole('link', { name: 'Check before publishing' }).click();
+    // What changes against last season's: one clause.
+    const changes = page.locator('article.entry');
+    await changes.first().waitFor();
+    expect(await changes.count()).toBe(1);
+    expect(await changes.textContent()).toContain('355.0 in³');
+    await page.getByRole('button', { name: `Publish this edition for ${name}` }).click();
+    await page.getByRole('rowheader', { name: 'Edition 1' }).waitFor();
   });
 });
