@@ -17,6 +17,8 @@ export const variables = [
   'S3_SECRET_ACCESS_KEY',
   'SMTP_URL',
   'MAIL_FROM',
+  'MAIL_BOUNCES',
+  'MAIL_BOUNCE_KEY',
   'OIDC_ISSUER',
   'OIDC_CLIENT_ID',
   'OIDC_CLIENT_SECRET',
