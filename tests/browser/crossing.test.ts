@@ -19,7 +19,9 @@ interface Owned {
   readonly owner: string;
   readonly paperwork: string;
   readonly engine: string;
+  /** A photograph. */
   readonly file: string;
+  readonly sheet: string | undefined;
   readonly entry: string;
   readonly notice: string | undefined;
   readonly versions: number;
@@ -49,10 +51,15 @@ const enter = async (name: string): Promise<void> => {
 
 const ownedBy = async (owner: string): Promise<Owned> => {
   const { rows } = await client.query<
-    Omit<Owned, 'owner' | 'rights' | 'notice'> & { rights: string[] | null; notice: string | null }
+    Omit<Owned, 'owner' | 'rights' | 'notice' | 'sheet'> & {
+      rights: string[] | null;
+      notice: string | null;
+      sheet: string | null;
+    }
   >(
     `select p.id as paperwork, p.engine_id as engine, p.versions,
        (select f.id from public.file f where f.paperwork_id = p.id and f.purpose = 'photograph' and f.removed_at is null limit 1) as file,
+       (select f.id from public.file f where f.paperwork_id = p.id and f.purpose = 'sheet' and f.removed_at is null limit 1) as sheet,
        (select e.id from public.entry e where e.competitor_id = o.id limit 1) as entry,
        (select v.number from record.verdict v join public.entry e on e.id = v.entry_id where e.competitor_id = o.id limit 1) as notice,
        (select g.rights from public.builder_grant g join public.person b on b.id = g.builder_id
@@ -64,12 +71,19 @@ const ownedBy = async (owner: string): Promise<Owned> => {
   );
   const [row] = rows;
   if (row?.rights == null) throw new Error(`The demo's builder has no grant of ${owner}.`);
-  return { ...row, owner, rights: row.rights, notice: row.notice ?? undefined };
+  return {
+    ...row,
+    owner,
+    rights: row.rights,
+    notice: row.notice ?? undefined,
+    sheet: row.sheet ?? undefined,
+  };
 };
 
 /** A second engine of the first customer, with a draft and a picture, that the builder's grant does not name. */
 const unlent = async (beside: Owned): Promise<Owned> => {
-  const [engine, paperwork, file] = [randomUUID(), randomUUID(), randomUUID()];
+  const [engine, paperwork] = [randomUUID(), randomUUID()];
+  const [file, sheet] = [randomUUID(), randomUUID()];
   await client.query(
     `insert into public.engine (id, owner_id, reference, layout, created_at)
      select $1, owner_id, $2, layout, now() from public.engine where id = $3`,
@@ -81,14 +95,18 @@ const unlent = async (beside: Owned): Promise<Owned> => {
      from public.paperwork where id = $3`,
     [paperwork, engine, beside.paperwork],
   );
-  await client.query(
-    `insert into public.file (series_id, id, paperwork_id, purpose, item, name, declared_type, declared_bytes, upload_key,
-       state, object_key, media_type, bytes, sha256, created_by, created_at, kept_at)
-     select series_id, $1, $2, purpose, item, name, declared_type, declared_bytes, '', state, object_key, media_type,
-       bytes, sha256, created_by, now(), now() from public.file where id = $3`,
-    [file, paperwork, beside.file],
-  );
-  return { ...beside, engine, paperwork, file, notice: undefined, versions: 0, rights: [] };
+  for (const [id, of] of [
+    [file, beside.file],
+    [sheet, beside.sheet],
+  ])
+    await client.query(
+      `insert into public.file (series_id, id, paperwork_id, purpose, item, name, declared_type, declared_bytes, upload_key,
+         state, object_key, media_type, bytes, sha256, created_by, created_at, kept_at)
+       select series_id, $1, $2, purpose, item, name, declared_type, declared_bytes, '', state, object_key, media_type,
+         bytes, sha256, created_by, now(), now() from public.file where id = $3`,
+      [id, paperwork, of],
+    );
+  return { ...beside, engine, paperwork, file, sheet, notice: undefined, versions: 0, rights: [] };
 };
 
 beforeAll(async () => {
@@ -126,6 +144,7 @@ const parametersOf = (thing: Owned): ReadonlyMap<string, string> =>
       '/paddock/paperwork/[id]': thing.paperwork,
       '/paddock/engines/[id]': thing.engine,
       '/api/files/[file]': thing.file,
+      '/api/sheets/[file]': thing.sheet ?? NOBODYS,
       '/paddock/verdicts/[number]': thing.notice ?? NOBODYS,
       '[width]': '160',
       '[sheet]': 'lifter-sheet',
@@ -225,6 +244,7 @@ describe.each(owned)('%s', (route) => {
               paperwork: NOBODYS,
               engine: NOBODYS,
               file: NOBODYS,
+              sheet: NOBODYS,
               notice: undefined,
             }),
           );
@@ -244,10 +264,11 @@ describe.each(owned)('%s', (route) => {
     for (const thing of things) {
       if (route.includes('versions') && thing.versions === 0) continue;
       if (route.includes('verdicts') && thing.notice === undefined) continue;
+      if (route.includes('/sheets/') && thing.sheet === undefined) continue;
       for (const visitor of [thing.owner, BUILDER]) {
         if (!isOpen(visitor, route, thing)) continue;
         const { status } = await ask(visitor, route, 'GET', pathOf(route, parametersOf(thing)));
-        // A finished thing leads to where it stands now; a picture is no sheet to correct.
+        // A finished thing leads to where it stands now.
         const open = status < 404 || status === 409;
         expect([visitor, thing.owner, open ? 'open' : status]).toEqual([
           visitor,

@@ -81,6 +81,8 @@ test('a gauge is withdrawn: the look-back lists what relied on it, and changes n
     const stranger = await enter({ viewport: { width: 390, height: 844 } });
     const shown = async () => {
       await stranger.open(`/series/corran-valley/verdicts/${sound}`);
+      // A public page may be kept by the browser for a moment.
+      await stranger.page.reload();
       return words(stranger);
     };
     expect(await shown()).not.toMatch(/review/);
