@@ -22,7 +22,7 @@ const openClass = async ({ page, open }: Visitor, name: string): Promise<void> =
   await open('/office');
   await page.getByRole('link', { name: 'Seasons and classes' }).first().click();
   await page
-    .getByLabel(/^New class in season/)
+    .getByLabel(/^New class in season \d{4}$/)
     .first()
     .fill(name);
   await page.getByRole('button', { name: 'Add the class' }).first().click();

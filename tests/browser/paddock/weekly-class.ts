@@ -120,7 +120,7 @@ export const openClass = async (
   const { page, open } = official;
   await open('/office/series/corran-valley');
   await page
-    .getByLabel(/^New class in season/)
+    .getByLabel(/^New class in season \d{4}$/)
     .first()
     .fill(name);
   await page.getByRole('button', { name: 'Add the class' }).first().click();

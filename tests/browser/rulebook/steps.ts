@@ -20,7 +20,7 @@ export const openNewClass = async ({ page, open }: Visitor, name: string): Promi
   await settled(page);
   await page.getByRole('link', { name: 'Seasons and classes' }).first().click();
   await page
-    .getByLabel(/^New class in season/)
+    .getByLabel(/^New class in season \d{4}$/)
     .first()
     .fill(name);
   await page.getByRole('button', { name: 'Add the class' }).first().click();

@@ -8,7 +8,7 @@ export const openClass = async (official: Visitor, story: Story): Promise<void> 
   await look(official, 'office');
   await page.getByRole('link', { name: 'Seasons and classes' }).first().click();
   await page
-    .getByLabel(/^New class in season/)
+    .getByLabel(/^New class in season \d{4}$/)
     .first()
     .fill(story.className);
   await look(official, 'classes');
