@@ -2,6 +2,7 @@ import { expect, test } from 'vitest';
 import { uuidV7 } from '@/components/measuring/queue/uuid-v7';
 import { journey, type Visitor } from '../support/browser';
 import { readProduct } from '../support/product';
+import { runningSeason } from '../support/season';
 
 const OFFICIAL = 'Ilse Törnkvist';
 const CHIEF = 'Marit Quell';
@@ -21,11 +22,9 @@ const inHours = (hours: number): string =>
 const openClass = async ({ page, open }: Visitor, name: string): Promise<void> => {
   await open('/office');
   await page.getByRole('link', { name: 'Seasons and classes' }).first().click();
-  await page
-    .getByLabel(/^New class in season \d{4}$/)
-    .first()
-    .fill(name);
-  await page.getByRole('button', { name: 'Add the class' }).first().click();
+  const season = runningSeason(page);
+  await season.getByLabel(/^New class in season/).fill(name);
+  await season.getByRole('button', { name: 'Add the class' }).click();
   await page.getByRole('link', { name, exact: true }).click();
   await page.getByRole('link', { name: 'Start the first edition' }).click();
   await page.getByLabel('Rule set: Weights').check();

@@ -3,6 +3,7 @@ import type { Clause } from '@/domain/rulebook/clause';
 import { limit } from '@/domain/rulebook/rule-sets/rule-set';
 import { TAPPET_RULE_SET } from '@/domain/rulebook/rule-sets/tappet';
 import type { Visitor } from '../../support/browser';
+import { runningSeason } from '../../support/season';
 
 const text = (number: string, subject: string, question: string): Clause => ({
   number,
@@ -119,11 +120,9 @@ export const openClass = async (
 ): Promise<string> => {
   const { page, open } = official;
   await open('/office/series/corran-valley');
-  await page
-    .getByLabel(/^New class in season \d{4}$/)
-    .first()
-    .fill(name);
-  await page.getByRole('button', { name: 'Add the class' }).first().click();
+  const season = runningSeason(page);
+  await season.getByLabel(/^New class in season/).fill(name);
+  await season.getByRole('button', { name: 'Add the class' }).click();
   const link = page.getByRole('link', { name, exact: true });
   const classId = ((await link.getAttribute('href')) ?? '').split('/').at(-1) ?? '';
   const content = { clauses, penalties: TAPPET_RULE_SET.penalties };

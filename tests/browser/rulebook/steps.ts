@@ -1,5 +1,6 @@
 import type { Page } from 'playwright-core';
 import type { Visitor } from '../../support/browser';
+import { runningSeason } from '../../support/season';
 
 export const OFFICIAL = 'Ilse Törnkvist';
 export const SECOND = 'Jory Vantreese';
@@ -19,11 +20,9 @@ export const openNewClass = async ({ page, open }: Visitor, name: string): Promi
   await open('/office');
   await settled(page);
   await page.getByRole('link', { name: 'Seasons and classes' }).first().click();
-  await page
-    .getByLabel(/^New class in season \d{4}$/)
-    .first()
-    .fill(name);
-  await page.getByRole('button', { name: 'Add the class' }).first().click();
+  const season = runningSeason(page);
+  await season.getByLabel(/^New class in season/).fill(name);
+  await season.getByRole('button', { name: 'Add the class' }).click();
   await page.getByRole('link', { name, exact: true }).click();
   await page.waitForURL(/\/office\/rulebooks\/[0-9a-f-]+$/);
   await settled(page);

@@ -1,5 +1,6 @@
 import { expect } from 'vitest';
 import type { Visitor } from '../../support/browser';
+import { runningSeason } from '../../support/season';
 import { here, look, type Story } from './story';
 
 /** Adds a class to the season and publishes its rulebook, started from the tappet rule set. */
@@ -7,12 +8,10 @@ export const openClass = async (official: Visitor, story: Story): Promise<void> 
   const { page } = official;
   await look(official, 'office');
   await page.getByRole('link', { name: 'Seasons and classes' }).first().click();
-  await page
-    .getByLabel(/^New class in season \d{4}$/)
-    .first()
-    .fill(story.className);
+  const season = runningSeason(page);
+  await season.getByLabel(/^New class in season/).fill(story.className);
   await look(official, 'classes');
-  await page.getByRole('button', { name: 'Add the class' }).first().click();
+  await season.getByRole('button', { name: 'Add the class' }).click();
   await page.getByRole('link', { name: story.className, exact: true }).click();
   await page.getByRole('link', { name: 'Start the first edition' }).click();
   await page.getByLabel('Rule set: Tappets').check();
