@@ -31,6 +31,7 @@ const openClass = async ({ page, open }: Visitor, name: string): Promise<void> =
   await page.getByRole('button', { name: 'Start writing' }).click();
   await page.waitForURL(/\/draft\//);
   await page.getByRole('heading', { name: 'Nothing is ambiguous' }).waitFor();
+  await page.waitForLoadState('networkidle');
   await page.getByRole('link', { name: 'Check before publishing' }).click();
   await page.getByRole('button', { name: `Publish this edition for ${name}` }).click();
   await page.getByRole('rowheader', { name: 'Edition 1' }).waitFor();

@@ -38,7 +38,7 @@ export function watch(context: BrowserContext): {
   const failed = (request: Request) => {
     const reason = request.failure()?.errorText ?? '';
     // A page that is left drops what it was still loading; a download ends its own navigation.
-    const passive = ['image', 'font', 'stylesheet', 'other', 'eventsource'].includes(
+    const passive = ['image', 'font', 'stylesheet', 'script', 'other', 'eventsource'].includes(
       request.resourceType(),
     );
     if (reason === 'net::ERR_ABORTED' && (request.isNavigationRequest() || passive)) return;

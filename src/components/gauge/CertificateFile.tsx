@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useState } from 'react';
 import { uuidV7 } from '../measuring/queue/uuid-v7';
 
 interface CertificateFileProps {
@@ -32,6 +32,9 @@ export const CertificateFile = ({ seriesId, gaugeId, value }: CertificateFilePro
   const [kept, setKept] = useState(value);
   const [said, setSaid] = useState('');
   const [problem, setProblem] = useState<string>();
+  // A file chosen before this listens would go nowhere.
+  const [listens, setListens] = useState(false);
+  useEffect(() => setListens(true), []);
   const send = async (file: File) => {
     setSaid(`Sending ${file.name} …`);
     setProblem(undefined);
@@ -82,6 +85,7 @@ export const CertificateFile = ({ seriesId, gaugeId, value }: CertificateFilePro
       <input
         id="certificate-file"
         type="file"
+        disabled={!listens}
         accept="application/pdf,image/jpeg,image/png,image/webp"
         aria-describedby={
           problem === undefined ? 'certificate-hint' : 'certificate-hint certificate-error'

@@ -104,6 +104,7 @@ test('a gauge is withdrawn: the look-back lists what relied on it, and changes n
     await chief.open('/crib');
     await chief.page.getByRole('link', { name: 'IM-02', exact: true }).click();
     await chief.page.getByRole('link', { name: 'Figures and certificate' }).click();
+    await chief.page.locator('#certificate-file:enabled').waitFor();
     await chief.page.getByLabel('The certificate itself').setInputFiles({
       name: 'C-7801.pdf',
       mimeType: 'application/pdf',
