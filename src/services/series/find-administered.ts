@@ -13,6 +13,9 @@ export interface AdministeredSeries {
     readonly id: string;
     readonly slug: string;
     readonly name: string;
+    /** Days, `2026-03-01`. */
+    readonly startsOn: string;
+    readonly endsOn: string;
     readonly classes: readonly {
       readonly id: string;
       readonly slug: string;
@@ -47,6 +50,8 @@ export const findAdministered = async (
         id: season.id,
         slug: season.slug,
         name: season.name,
+        startsOn: season.startsOn,
+        endsOn: season.endsOn,
         classes: classes
           .filter((one) => one.seasonId === season.id)
           .map((one) => ({ id: one.id, slug: one.slug, name: one.name })),

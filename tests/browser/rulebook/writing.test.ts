@@ -235,5 +235,9 @@ test('an official copies last season’s rulebook and changes one limit', async 
     expect(await changes.textContent()).toContain('355.0 in³');
     await page.getByRole('button', { name: `Publish this edition for ${name}` }).click();
     await page.getByRole('rowheader', { name: 'Edition 1' }).waitFor();
+    // An event is opened in the running season, though a newer one is there.
+    await official.open('/office/events/new');
+    const chosen = page.getByLabel('Season').locator('option:checked');
+    expect(await chosen.textContent()).toMatch(/, \d{4}$/);
   });
 });
