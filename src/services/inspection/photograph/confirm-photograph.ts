@@ -47,8 +47,6 @@ export const confirmPhotograph = async (
   const refused = wrongSize ?? (facts.ok ? undefined : facts.failure.detail);
   const hash = sha256(bytes);
   const objectKey = `originals/${toHex(hash)}`;
-  if (refused === undefined && facts.ok)
-    await deps.objects.write(objectKey, bytes, facts.value.type);
   const kept = await performAct(
     deps,
     actor,
