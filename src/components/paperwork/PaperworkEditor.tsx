@@ -14,17 +14,17 @@ import {
 } from '@/domain/paperwork/still-missing';
 import { withUsualUncertainty } from '@/domain/paperwork/usual-uncertainty';
 import { evaluateRules } from '@/domain/rulebook/evaluate/evaluate-rules';
-import { CheckList } from './CheckList';
+import { CheckList } from './checks/CheckList';
+import { LastFoundList } from './checks/LastFoundList';
 import { ChooseFields } from './draft/ChooseFields';
 import { useDraft } from './draft/use-draft';
+import { Photographs } from './files/Photographs';
 import { useFiles } from './files/use-files';
 import { HandInBar } from './HandInBar';
-import { LastFoundList } from './LastFoundList';
-import { Photographs } from './Photographs';
 import type { PaperworkProps } from './paperwork-props';
-import { Questions } from './Questions';
-import { RemarksOn } from './RemarksOn';
-import { type Replies, RepliesContext } from './replies';
+import { Questions } from './questions/Questions';
+import { RemarksOn } from './remarks/RemarksOn';
+import { type Replies, RepliesContext } from './remarks/replies';
 import { BuildSheet } from './sheet/BuildSheet';
 
 const Editor = (props: PaperworkProps) => {

@@ -2,7 +2,7 @@ import { renderToStaticMarkup } from 'react-dom/server';
 import { describe, expect, it } from 'vitest';
 import { HoldAdvice } from '@/components/finding/HoldAdvice';
 import { Remedies } from '@/components/finding/Remedies';
-import { CheckList } from '@/components/paperwork/CheckList';
+import { CheckList } from '@/components/paperwork/checks/CheckList';
 import { assessInspection } from '@/domain/inspection/assess-inspection';
 import { remediesInClass } from '@/domain/inspection/remedies-in-class';
 import { body, RULES, reading, record } from '../../domain/inspection/build';

@@ -14,7 +14,7 @@ import { FileRow } from '../files/FileRow';
 import { SendingRow } from '../files/SendingRow';
 import type { Files } from '../files/use-files';
 import type { ShownFile } from '../paperwork-props';
-import { RemarksOn } from '../RemarksOn';
+import { RemarksOn } from '../remarks/RemarksOn';
 import { CellsToCorrect } from './CellsToCorrect';
 import { Completeness } from './Completeness';
 import { ValuesGrid } from './grid/ValuesGrid';

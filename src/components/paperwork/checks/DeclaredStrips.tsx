@@ -1,8 +1,8 @@
 import type { Clause } from '@/domain/rulebook/clause';
 import type { ClauseResult } from '@/domain/rulebook/clause-result';
-import { GaugeStrip } from '../look/GaugeStrip';
-import { displayNumber } from '../look/ReadingValue';
-import { shownResult } from '../measuring/sheet/shown';
+import { GaugeStrip } from '../../look/GaugeStrip';
+import { displayNumber } from '../../look/ReadingValue';
+import { shownResult } from '../../measuring/sheet/shown';
 
 interface DeclaredStripsProps {
   readonly clause: Clause;

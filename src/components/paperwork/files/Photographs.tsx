@@ -1,11 +1,11 @@
 import type { ItemRemark } from '@/domain/paperwork/state';
 import type { Shot } from '@/domain/rulebook/form/form';
-import { FilePick } from './files/FilePick';
-import { FileRow } from './files/FileRow';
-import { SendingRow } from './files/SendingRow';
-import { SendingSummary } from './files/SendingSummary';
-import type { Files } from './files/use-files';
-import { RemarksOn } from './RemarksOn';
+import { RemarksOn } from '../remarks/RemarksOn';
+import { FilePick } from './FilePick';
+import { FileRow } from './FileRow';
+import { SendingRow } from './SendingRow';
+import { SendingSummary } from './SendingSummary';
+import type { Files } from './use-files';
 
 const PICTURES = {
   'image/jpeg': ['.jpg', '.jpeg'],

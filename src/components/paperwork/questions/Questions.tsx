@@ -4,10 +4,10 @@ import { findTyped, type PaperworkDraft, withAnswer } from '@/domain/paperwork/d
 import type { ItemRemark } from '@/domain/paperwork/state';
 import type { Question } from '@/domain/rulebook/form/form';
 import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
+import { RemarksOn } from '../remarks/RemarksOn';
 import { answerWords } from './answer-words';
+import { PlaceAnswers } from './PlaceAnswers';
 import { QuestionField } from './QuestionField';
-import { PlaceAnswers } from './questions/PlaceAnswers';
-import { RemarksOn } from './RemarksOn';
 
 interface QuestionsProps {
   readonly questions: readonly Question[];

@@ -1,8 +1,8 @@
 import type { DeclaredAgainstFound } from '@/domain/inspection/declared-against-found';
 import { againstLastFound, type LastFound } from '@/domain/paperwork/last-found';
 import type { Facts } from '@/domain/rulebook/evaluate/facts';
-import { displayNumber } from '../look/ReadingValue';
-import { StatusWord } from '../look/StatusWord';
+import { displayNumber } from '../../look/ReadingValue';
+import { StatusWord } from '../../look/StatusWord';
 
 interface LastFoundProps {
   readonly last: LastFound;

@@ -2,10 +2,10 @@ import { remediesInClass } from '@/domain/inspection/remedies-in-class';
 import type { ClauseResult, PositionResult, State } from '@/domain/rulebook/clause-result';
 import type { Facts } from '@/domain/rulebook/evaluate/facts';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
-import { Budgets } from '../finding/Budgets';
-import { Remedies } from '../finding/Remedies';
-import { Mark } from '../look/Mark';
-import { markOfState, wordOfState } from '../look/status';
+import { Budgets } from '../../finding/Budgets';
+import { Remedies } from '../../finding/Remedies';
+import { Mark } from '../../look/Mark';
+import { markOfState, wordOfState } from '../../look/status';
 import { DeclaredStrips } from './DeclaredStrips';
 
 const WORTH_NAMING: readonly State[] = ['outside', 'does-not-comply', 'too-close'];
