@@ -3,17 +3,17 @@ import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import { positionsOf } from '@/domain/tappet/layout/bore-layout';
 import { GENERIC_LAYOUTS } from '@/domain/tappet/layout/generic-layouts';
 import { findRules } from '@/services/rulebook/find-rules';
-import { type Oddities, trueEngine } from './engine';
+import { type Oddities, trueEngine } from './make/engine';
 import { COMPETITORS, type DemoCompetitor, EVERYBODY, INSPECTOR, SECOND_INSPECTOR } from './people';
 import { openStage, type Stage } from './stage';
-import { writeBuilders } from './write-builders';
-import { writeChecks, writeCustody } from './write-custody';
-import { writeEvents, writeGauges } from './write-events';
-import { type DemoInspection, writeInspection } from './write-inspections';
-import { type PaperworkEnd, writePaperwork } from './write-paperwork';
-import { writePeople } from './write-people';
-import { type DemoClasses, writeRulebooks } from './write-rulebooks';
-import { writeVerdict } from './write-verdicts';
+import { writeBuilders } from './write/write-builders';
+import { writeChecks, writeCustody } from './write/write-custody';
+import { writeEvents, writeGauges } from './write/write-events';
+import { type DemoInspection, writeInspection } from './write/write-inspections';
+import { type PaperworkEnd, writePaperwork } from './write/write-paperwork';
+import { writePeople } from './write/write-people';
+import { type DemoClasses, writeRulebooks } from './write/write-rulebooks';
+import { writeVerdict } from './write/write-verdicts';
 
 const DAY = 86_400_000;
 

@@ -4,7 +4,7 @@ import { instantOf, wallTimeAt } from '@/domain/deadline/zone';
 import type { Failure } from '@/domain/failure';
 import type { Result } from '@/domain/result';
 import type { Clock, Ports } from '@/services/ports';
-import { type Chance, chanceFrom } from './chance';
+import { type Chance, chanceFrom } from './make/chance';
 import type { DemoPerson } from './people';
 
 export const ZONE = 'America/Chicago';

@@ -1,8 +1,8 @@
 import { acceptBuilderInvitation } from '@/services/people/builder/accept-builder-invitation';
 import { inviteBuilder, type NewGrant } from '@/services/people/builder/invite-builder';
 import { newToken, tokenHash } from '@/services/session/token';
-import { BUILDER, COMPETITORS } from './people';
-import { done, type Stage } from './stage';
+import { BUILDER, COMPETITORS } from '../people';
+import { done, type Stage } from '../stage';
 
 /** What three customers let the builder do: sheets only, everything, and to see verdicts. */
 const GRANTS: Readonly<Record<string, NewGrant['rights']>> = {

@@ -5,7 +5,7 @@ import { assignInspector } from '@/services/inspection/assign-inspector';
 import { recordCaptures } from '@/services/inspection/capture/record-captures';
 import { changeState } from '@/services/inspection/change-state';
 import { signReport } from '@/services/inspection/report/sign-report';
-import type { TrueBore } from './engine';
+import type { TrueBore } from '../make/engine';
 import {
   checkRow,
   cylinderRows,
@@ -13,9 +13,9 @@ import {
   lifterRows,
   runRows,
   witnessRow,
-} from './measure';
-import { CHIEF, type DemoPerson } from './people';
-import { done, type Stage } from './stage';
+} from '../make/measure';
+import { CHIEF, type DemoPerson } from '../people';
+import { done, type Stage } from '../stage';
 
 export interface DemoInspection {
   readonly inspectionId: string;

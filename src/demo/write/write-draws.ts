@@ -1,8 +1,8 @@
 import { announceDraw } from '@/services/draw/announce-draw';
 import { findClassDraw } from '@/services/draw/find-class-draw';
 import { publishDraw } from '@/services/draw/publish-draw';
-import { OFFICIAL } from './people';
-import { done, type Stage } from './stage';
+import { OFFICIAL } from '../people';
+import { done, type Stage } from '../stage';
 
 const VALUES = [
   {

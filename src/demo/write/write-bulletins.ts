@@ -3,8 +3,8 @@ import { TAPPET_RULE_SET } from '@/domain/rulebook/rule-sets/tappet';
 import { publishBulletin } from '@/services/rulebook/bulletin/publish-bulletin';
 import { openBulletin } from '@/services/rulebook/draft/open-bulletin';
 import { publishClarification } from '@/services/rulebook/ruling/publish-clarification';
-import { OFFICIAL } from './people';
-import { done, type Stage } from './stage';
+import { OFFICIAL } from '../people';
+import { done, type Stage } from '../stage';
 
 const foot = (): Clause => {
   const clause = TAPPET_RULE_SET.clauses.find(({ number }) => number === '4.3');

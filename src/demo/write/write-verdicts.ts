@@ -1,8 +1,8 @@
 import type { DecisionDraft } from '@/domain/verdict/decision';
 import { publishVerdict } from '@/services/verdict/publish-verdict';
 import { saveVerdictDraft } from '@/services/verdict/save-verdict-draft';
-import { OFFICIAL } from './people';
-import { done, type Stage } from './stage';
+import { OFFICIAL } from '../people';
+import { done, type Stage } from '../stage';
 
 /** An official's decision, written down and published. */
 export const writeVerdict = async (

@@ -2,8 +2,8 @@ import type { Role } from '@/domain/access/permission';
 import { Membership } from '@/entities/people/membership';
 import { Person } from '@/entities/people/person';
 import { createSeries } from '@/services/series/create-series';
-import { ADMINISTRATOR, EVERYBODY } from './people';
-import { done, type Stage, ZONE } from './stage';
+import { ADMINISTRATOR, EVERYBODY } from '../people';
+import { done, type Stage, ZONE } from '../stage';
 
 /** The people, the series they take part in, and their roles in it. */
 export const writePeople = async (stage: Stage): Promise<{ readonly seriesId: string }> => {

@@ -2,9 +2,9 @@ import { createEvent } from '@/services/event/create-event';
 import { enterCars } from '@/services/event/enter-cars';
 import { pickCars } from '@/services/event/pick-cars';
 import { saveGauge } from '@/services/gauge/save-gauge';
-import type { DemoGauges } from './measure';
-import { CHIEF, COMPETITORS, type DemoCompetitor, OFFICIAL } from './people';
-import { done, type Stage, ZONE } from './stage';
+import type { DemoGauges } from '../make/measure';
+import { CHIEF, COMPETITORS, type DemoCompetitor, OFFICIAL } from '../people';
+import { done, type Stage, ZONE } from '../stage';
 import { writeAnnouncement, writeDrawMade } from './write-draws';
 import type { DemoClasses } from './write-rulebooks';
 

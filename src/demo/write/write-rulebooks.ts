@@ -4,8 +4,8 @@ import { openDraft } from '@/services/rulebook/open-draft';
 import { publishEdition } from '@/services/rulebook/publish-edition';
 import { addClass } from '@/services/series/add-class';
 import { openSeason } from '@/services/series/open-season';
-import { OFFICIAL } from './people';
-import { done, type Stage } from './stage';
+import { OFFICIAL } from '../people';
+import { done, type Stage } from '../stage';
 import { writeBulletins } from './write-bulletins';
 
 export interface DemoClasses {

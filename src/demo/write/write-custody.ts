@@ -5,9 +5,9 @@ import { recordSeal } from '@/services/custody/record-seal';
 import { tagPart } from '@/services/custody/tag-part';
 import { recordGaugeCheck } from '@/services/gauge/record-gauge-check';
 import { reportGaugeBad } from '@/services/gauge/report-gauge-bad';
-import type { DemoGauges } from './measure';
-import { CHIEF, INSPECTOR } from './people';
-import { done, type Stage } from './stage';
+import type { DemoGauges } from '../make/measure';
+import { CHIEF, INSPECTOR } from '../people';
+import { done, type Stage } from '../stage';
 
 const inch = (text: string) => ({ text, unit: 'in' });
 

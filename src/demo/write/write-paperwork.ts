@@ -12,10 +12,10 @@ import { handInPaperwork } from '@/services/paperwork/hand-in-paperwork';
 import { saveDraft } from '@/services/paperwork/save-draft';
 import { PLAIN_FORM, writeCsv } from '@/services/paperwork/sheet/csv/write-csv';
 import { startPaperwork } from '@/services/paperwork/start-paperwork';
-import { micrometer, SPOTS, type TrueBore } from './engine';
-import { type DemoCompetitor, OFFICIAL } from './people';
-import { drawPhotograph } from './photograph';
-import { done, type Stage } from './stage';
+import { micrometer, SPOTS, type TrueBore } from '../make/engine';
+import { drawPhotograph } from '../make/photograph';
+import { type DemoCompetitor, OFFICIAL } from '../people';
+import { done, type Stage } from '../stage';
 
 export type PaperworkEnd = 'draft' | 'handed-in' | 'accepted' | 'returned';
 
