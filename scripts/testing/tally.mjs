@@ -7,6 +7,7 @@
  * @property {number} failed
  * @property {number} milliseconds
  * @property {string} [detail] the output, where something failed
+ * @property {readonly string[]} [failures] the tests that failed, each with the first line of why
  */
 
 /** Collects the results and says them. */
@@ -27,12 +28,17 @@ export class Tally {
     return this.#lines.reduce((sum, line) => sum + line.failed, 0);
   }
 
-  /** @returns {string} the table of all steps; the last line is `N passed, N failed` alone */
+  /**
+   * @returns {string} the table of all steps, then what failed by name, since the end of a long
+   *   output is often all that is kept; the last line is `N passed, N failed` alone
+   */
   toString() {
     const rows = this.#lines.map(
       ({ name, passed, failed, milliseconds }) =>
         `  ${failed === 0 ? 'ok    ' : 'FAILED'} ${name.padEnd(12)} ${String(passed).padStart(5)} passed ${String(failed).padStart(4)} failed ${(milliseconds / 1000).toFixed(1).padStart(7)} s`,
     );
-    return `\n${rows.join('\n')}\n\n${this.passed} passed, ${this.failed} failed`;
+    const failures = this.#lines.flatMap((line) => line.failures ?? []);
+    const named = failures.length === 0 ? '' : `\n${failures.join('\n')}\n`;
+    return `\n${rows.join('\n')}\n${named}\n${this.passed} passed, ${this.failed} failed`;
   }
 }

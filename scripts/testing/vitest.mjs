@@ -1,5 +1,6 @@
 import { existsSync, readFileSync } from 'node:fs';
 import { join, relative } from 'node:path';
+import { stripVTControlCharacters } from 'node:util';
 import { root } from '../set-up/files.mjs';
 import { run } from '../set-up/run.mjs';
 
@@ -9,7 +10,8 @@ import { run } from '../set-up/run.mjs';
  * @typedef {object} FileResult
  * @property {string} name
  * @property {'passed' | 'failed'} status
- * @property {{ status: string }[]} assertionResults
+ * @property {string} [message] why the file could not be read
+ * @property {{ status: string, fullName?: string, failureMessages?: string[] }[]} assertionResults
  */
 
 /**
@@ -26,15 +28,39 @@ export function linesOf(projects, files, filtered) {
     const own = files.filter((file) => file.name.startsWith(`tests/${name}/`));
     const results = own.flatMap((file) => file.assertionResults.map(({ status }) => status));
     const passed = results.filter((status) => status === 'passed').length;
-    const broken = own.filter(
-      (file) =>
-        file.status === 'failed' &&
-        !file.assertionResults.some(({ status }) => status === 'failed'),
-    ).length;
+    const broken = own.filter(isBroken).length;
     const empty = !filtered && results.length === 0 && broken === 0 ? 1 : 0;
-    return { name, passed, failed: results.length - passed + broken + empty };
+    const failed = results.length - passed + broken + empty;
+    return failed === 0
+      ? { name, passed, failed }
+      : { name, passed, failed, failures: own.flatMap(failuresOf) };
   });
 }
+
+/**
+ * It failed outside its tests: before the first, or after the last.
+ *
+ * @param {FileResult} file
+ */
+const isBroken = (file) =>
+  file.status === 'failed' && !file.assertionResults.some(({ status }) => status === 'failed');
+
+/**
+ * @param {FileResult} file
+ * @returns {string[]} a line for each test of the file that did not pass
+ */
+function failuresOf(file) {
+  const tests = file.assertionResults.filter(({ status }) => status !== 'passed');
+  const named = tests.map((test) => ({
+    name: `${file.name} > ${test.fullName ?? ''}`,
+    why: test.failureMessages?.[0] ?? test.status,
+  }));
+  if (isBroken(file)) named.push({ name: file.name, why: file.message ?? 'outside its tests' });
+  return named.map(({ name, why }) => `  ${name}\n      ${firstLine(why)}`);
+}
+
+/** @param {string} text */
+const firstLine = (text) => stripVTControlCharacters(text).trim().split('\n')[0]?.slice(0, 300);
 
 /**
  * Runs test projects and shows their output.

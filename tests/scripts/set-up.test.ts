@@ -29,6 +29,7 @@ import { beginningOf, takeLock } from '../../scripts/set-up/lock.mjs';
 import { demandFree, rememberedPorts } from '../../scripts/set-up/ports.mjs';
 import { explain, Problem } from '../../scripts/set-up/problem.mjs';
 import { newTemporaryFolder } from '../../scripts/set-up/temporary.mjs';
+import { Tally } from '../../scripts/testing/tally.mjs';
 import { linesOf } from '../../scripts/testing/vitest.mjs';
 
 const execute = promisify(execFile);
@@ -257,18 +258,46 @@ describe('what is said', () => {
         status: 'passed' as const,
         assertionResults: [{ status: 'passed' }, { status: 'passed' }],
       },
-      { name: 'tests/domain/b.test.ts', status: 'failed' as const, assertionResults: [] },
+      {
+        name: 'tests/domain/b.test.ts',
+        status: 'failed' as const,
+        message: 'no such file\nand more',
+        assertionResults: [],
+      },
       {
         name: 'tests/api/c.test.ts',
         status: 'failed' as const,
-        assertionResults: [{ status: 'failed' }, { status: 'passed' }],
+        assertionResults: [
+          {
+            status: 'failed',
+            fullName: 'asks twice',
+            failureMessages: ['\u001b[31mtimed out\n at'],
+          },
+          { status: 'passed' },
+        ],
       },
     ];
-    expect(linesOf(['domain', 'api', 'browser'], files, false)).toEqual([
-      { name: 'domain', passed: 2, failed: 1 },
-      { name: 'api', passed: 1, failed: 1 },
-      { name: 'browser', passed: 0, failed: 1 },
+    const lines = linesOf(['domain', 'api', 'browser'], files, false);
+    expect(lines).toEqual([
+      {
+        name: 'domain',
+        passed: 2,
+        failed: 1,
+        failures: ['  tests/domain/b.test.ts\n      no such file'],
+      },
+      {
+        name: 'api',
+        passed: 1,
+        failed: 1,
+        failures: ['  tests/api/c.test.ts > asks twice\n      timed out'],
+      },
+      { name: 'browser', passed: 0, failed: 1, failures: [] },
     ]);
+    const tally = new Tally();
+    for (const line of lines) tally.add({ ...line, milliseconds: 0 });
+    expect(tally.toString()).toMatch(
+      /b\.test\.ts\n {6}no such file\n {2}.*asks twice\n {6}timed out\n\n3 passed, 3 failed$/,
+    );
     expect(linesOf(['browser'], files, true)).toEqual([{ name: 'browser', passed: 0, failed: 0 }]);
   });
 });
