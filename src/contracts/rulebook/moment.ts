@@ -1,4 +1,4 @@
-import { instantOf, wallTimeAt } from '@/domain/deadline/zone';
+import { instantOf, instantsOf, wallTimeAt } from '@/domain/deadline/zone';
 
 const MOMENT = /^(\d{4})-(\d\d)-(\d\d)(?:T(\d\d):(\d\d)(?::(\d\d))?)?$/;
 
@@ -29,3 +29,7 @@ export const momentText = (at: Date, zone: string): string => {
   const day = `${wall.year}-${two(wall.month)}-${two(wall.day)}`;
   return `${day}T${two(wall.hour)}:${two(wall.minute)}`;
 };
+
+/** Every instant at which the zone's clocks show what they show at this one: two in an hour that comes again. */
+export const sameOnTheClock = (at: Date, zone: string): readonly Date[] =>
+  instantsOf(zone, wallTimeAt(zone, at.getTime())).map((instant) => new Date(instant));

@@ -70,6 +70,18 @@ export const offsetAt = (zone: string, at: number): number => {
 };
 
 /**
+ * Every instant (epoch milliseconds, in order) at which the zone's clocks show this wall time: one as
+ * a rule, two in the hour that comes again where clocks are set back, none in an hour they skip.
+ */
+export const instantsOf = (zone: string, wall: WallTime): readonly number[] => {
+  const utc = asUtc(wall);
+  const shown = [utc - offsetAt(zone, utc - DAY), utc - offsetAt(zone, utc + DAY)];
+  return [...new Set(shown)]
+    .filter((at) => at + offsetAt(zone, at) === utc)
+    .sort((one, other) => one - other);
+};
+
+/**
  * The instant at which the zone's clocks show this wall time. Where they show it twice (clocks
  * set back) the later one; where they skip it (clocks set forward) the same length of time after
  * the jump: 02:30 that does not exist is 03:30. Both favour the person who has to be in time.
@@ -77,8 +89,5 @@ export const offsetAt = (zone: string, at: number): number => {
  */
 export const instantOf = (zone: string, wall: WallTime): number => {
   const utc = asUtc(wall);
-  const before = offsetAt(zone, utc - DAY);
-  const after = offsetAt(zone, utc + DAY);
-  const shown = [utc - before, utc - after].filter((at) => at + offsetAt(zone, at) === utc);
-  return shown.length === 0 ? utc - before : Math.max(...shown);
+  return instantsOf(zone, wall).at(-1) ?? utc - offsetAt(zone, utc - DAY);
 };

@@ -15,7 +15,13 @@ const bytesOf = async (path: string): Promise<Uint8Array> => {
 const textOf = async (path: string) => new TextDecoder().decode(await bytesOf(path));
 
 /** A bulletin that replaces the words of clause 4.4, from a moment as it is typed. */
-const amendByHand = async ({ page }: Visitor, office: string, words: string, from: string) => {
+const amendByHand = async (
+  { page }: Visitor,
+  office: string,
+  words: string,
+  from: string,
+  atTheClock?: () => Promise<void>,
+) => {
   await page.getByRole('button', { name: 'Write a bulletin' }).click();
   await page.waitForURL(/\/draft\//);
   await ready(page);
@@ -25,6 +31,7 @@ const amendByHand = async ({ page }: Visitor, office: string, words: string, fro
   const field = page.getByRole('textbox', { name: 'From' });
   await field.fill(from);
   await field.press('Enter');
+  await atTheClock?.();
   await page.getByLabel('Clause in force').selectOption('4.4');
   await page.getByRole('button', { name: 'Change this clause' }).click();
   await page.getByLabel('Words', { exact: true }).fill(words);
@@ -90,12 +97,21 @@ test('the rules on a day are exact to the second, over midnight and over both ch
     const at = (instant: string) => ({ kind: 'instant', at: instant });
     const book = { office, address };
     await amend(official, book, 'Over midnight.', at(`${night}T05:00:00.000Z`));
-    await amend(official, book, 'The second time.', at(`${autumn}T07:30:00.000Z`));
+    // A repeated hour asks which of the two is meant; what the rules are is told by both bulletins.
+    const pass = () => official.page.getByLabel('The clocks show 01:30 twice that night');
+    await amendByHand(official, office, 'The first time.', `${autumn} 01:30`, async () => {
+      expect(await pass().locator('option:checked').textContent()).toContain('The second time');
+      await pass().selectOption({ label: 'The first time: before they go back' });
+    });
+    await amendByHand(official, office, 'The second time.', `${autumn} 01:30`, () =>
+      pass().waitFor(),
+    );
 
     const feed = await textOf(`${address}/feed.xml`);
     const counts = [...feed.matchAll(/Counts from (\S+)\./g)].map(([, at]) => at);
-    expect(counts.slice(0, 3)).toEqual([
+    expect(counts.slice(0, 4)).toEqual([
       `${autumn}T07:30:00.000Z`,
+      `${autumn}T06:30:00.000Z`,
       `${night}T05:00:00.000Z`,
       `${spring}T08:30:00.000Z`,
     ]);
@@ -113,8 +129,9 @@ test('the rules on a day are exact to the second, over midnight and over both ch
       [`${night}T00:00:00`, 'Over midnight.'],
       [`${autumn}T00:59:59`, 'Over midnight.'],
       // Both passes of the repeated hour, told apart as instants.
-      [`${autumn}T06:59:59.999Z`, 'Over midnight.'],
-      [`${autumn}T07:29:59.999Z`, 'Over midnight.'],
+      [`${autumn}T06:29:59.999Z`, 'Over midnight.'],
+      [`${autumn}T06:30:00.000Z`, 'The first time.'],
+      [`${autumn}T07:29:59.999Z`, 'The first time.'],
       [`${autumn}T07:30:00.000Z`, 'The second time.'],
       [`${autumn}T02:00:00`, 'The second time.'],
     ] as const) {

@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { findClockStart, type Publication } from '@/domain/deadline/clock-start';
 import { deadlineFrom, isInTime, timeLeft, type Window } from '@/domain/deadline/deadline';
 import { formatDeadline, formatInZone, formatOffset } from '@/domain/deadline/format-in-zone';
-import { instantOf, isZone, offsetAt, wallTimeAt } from '@/domain/deadline/zone';
+import { instantOf, instantsOf, isZone, offsetAt, wallTimeAt } from '@/domain/deadline/zone';
 
 const CHICAGO = 'America/Chicago';
 
@@ -147,6 +147,17 @@ describe('a zone', () => {
         },
       ),
     );
+  });
+
+  it('shows an hour twice where clocks go back, and skips one where they go forward', () => {
+    const shown = (month: number, day: number, hour: number) =>
+      instantsOf(CHICAGO, { year: 2026, month, day, hour, minute: 30, second: 0 }).map((at) =>
+        new Date(at).toISOString(),
+      );
+    expect(shown(11, 1, 1)).toEqual(['2026-11-01T06:30:00.000Z', '2026-11-01T07:30:00.000Z']);
+    expect(shown(3, 8, 2)).toEqual([]);
+    expect(shown(11, 1, 0)).toEqual(['2026-11-01T05:30:00.000Z']);
+    expect(shown(11, 1, 2)).toEqual(['2026-11-01T08:30:00.000Z']);
   });
 
   it('is known by its IANA name only', () => {
