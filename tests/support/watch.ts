@@ -41,7 +41,13 @@ export function watch(context: BrowserContext): {
     const passive = ['image', 'font', 'stylesheet', 'script', 'other', 'eventsource'].includes(
       request.resourceType(),
     );
-    if (reason === 'net::ERR_ABORTED' && (request.isNavigationRequest() || passive)) return;
+    // Nothing is lost by a reading that a page gives up as it is left.
+    const reads = request.resourceType() === 'fetch' && request.method() === 'GET';
+    if (reason === 'net::ERR_ABORTED' && (request.isNavigationRequest() || passive || reads))
+      return;
+    // Where the walk has cut the line, a picture or a letter form that was not there yet stays away.
+    const cut = reason === 'net::ERR_INTERNET_DISCONNECTED';
+    if (cut && ['image', 'font'].includes(request.resourceType())) return;
     refusals.push({ url: request.url(), status: 'offline' });
   };
   const listen = (page: Page) => {

@@ -131,6 +131,7 @@ test(
       const path = await begin(seller, className, '3', engine);
       await seller.open(path);
       await seller.page.getByRole('link', { name: `Engine ${engine}: seals and history` }).click();
+      await seller.page.getByRole('link', { name: 'Sell or lend it' }).waitFor();
       await look(seller, 'engine');
       await seller.page.getByRole('link', { name: 'Sell or lend it' }).click();
       await seller.page.getByLabel('Their e-mail address').fill(emailOf('Greta Silverlock'));
@@ -183,6 +184,7 @@ test(
       await addPicture(minor, '#8b4513');
       await saved(minor);
       await minor.page.getByRole('link', { name: 'Check and hand in' }).click();
+      await minor.page.getByRole('button', { name: 'Ask Maud Ashgrove to sign' }).waitFor();
       await look(minor, 'minor-check');
       expect(await minor.page.getByRole('button', { name: /^Hand in/ }).count()).toBe(0);
       await minor.page.getByRole('button', { name: 'Ask Maud Ashgrove to sign' }).click();

@@ -78,6 +78,7 @@ test(
       expect(bar?.height ?? 999).toBeLessThanOrEqual(100);
       await look(competitor, 'weekly-complete');
       await hand.tap(page.getByRole('link', { name: 'Check and hand in' }));
+      await page.getByRole('button', { name: 'Hand in version 1' }).waitFor();
       await look(competitor, 'weekly-check');
       await hand.tap(page.getByRole('button', { name: 'Hand in version 1' }));
       await page.getByText(/^Version 1, ledger line \d+, SHA-256/).waitFor();

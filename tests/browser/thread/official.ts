@@ -21,8 +21,10 @@ export const openClass = async (official: Visitor, story: Story): Promise<void> 
   await page.getByRole('heading', { name: 'Nothing is ambiguous' }).waitFor();
   await look(official, 'rulebook-draft');
   await page.getByRole('link', { name: 'Check before publishing' }).click();
+  const publish = page.getByRole('button', { name: `Publish this edition for ${story.className}` });
+  await publish.waitFor();
   await look(official, 'rulebook-check');
-  await page.getByRole('button', { name: `Publish this edition for ${story.className}` }).click();
+  await publish.click();
   await page.getByRole('rowheader', { name: 'Edition 1' }).waitFor();
   await look(official, 'rulebook-published');
 };
@@ -124,8 +126,11 @@ export const decideBreach = async (
   const { page, open } = official;
   await open('/office');
   await page.getByRole('link', { name: 'Verdicts', exact: true }).first().click();
+  const undecided = page.locator(`a[href="/office/verdicts/${inspectionId}"]`);
+  await undecided.waitFor();
   await look(official, 'verdicts');
-  await page.locator(`a[href="/office/verdicts/${inspectionId}"]`).click();
+  await undecided.click();
+  await page.waitForURL(new RegExp(inspectionId));
   expect(await page.locator('main').textContent()).toContain('finding: fail');
   await look(official, 'decide');
   await page.getByRole('radio', { name: /^Breach/ }).check();
