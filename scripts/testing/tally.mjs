@@ -7,7 +7,7 @@
  * @property {number} failed
  * @property {number} milliseconds
  * @property {string} [detail] the output, where something failed
- * @property {readonly string[]} [failures] the tests that failed, each with the first line of why
+ * @property {readonly string[]} [failures] the tests that failed, each with how its reason begins
  */
 
 /** Collects the results and says them. */

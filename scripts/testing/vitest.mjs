@@ -56,11 +56,18 @@ function failuresOf(file) {
     why: test.failureMessages?.[0] ?? test.status,
   }));
   if (isBroken(file)) named.push({ name: file.name, why: file.message ?? 'outside its tests' });
-  return named.map(({ name, why }) => `  ${name}\n      ${firstLine(why)}`);
+  return named.map(({ name, why }) => `  ${name}\n${beginning(why)}`);
 }
 
 /** @param {string} text */
-const firstLine = (text) => stripVTControlCharacters(text).trim().split('\n')[0]?.slice(0, 300);
+const beginning = (text) =>
+  stripVTControlCharacters(text)
+    .trim()
+    .split('\n')
+    .filter((line) => line.trim() !== '')
+    .slice(0, 3)
+    .map((line) => `      ${line.trim().slice(0, 200)}`)
+    .join('\n');
 
 /**
  * Runs test projects and shows their output.

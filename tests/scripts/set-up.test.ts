@@ -261,7 +261,7 @@ describe('what is said', () => {
       {
         name: 'tests/domain/b.test.ts',
         status: 'failed' as const,
-        message: 'no such file\nand more',
+        message: 'no such file\n\n at x\n at y',
         assertionResults: [],
       },
       {
@@ -271,7 +271,7 @@ describe('what is said', () => {
           {
             status: 'failed',
             fullName: 'asks twice',
-            failureMessages: ['\u001b[31mtimed out\n at'],
+            failureMessages: ['\u001b[31mtimed out'],
           },
           { status: 'passed' },
         ],
@@ -283,7 +283,7 @@ describe('what is said', () => {
         name: 'domain',
         passed: 2,
         failed: 1,
-        failures: ['  tests/domain/b.test.ts\n      no such file'],
+        failures: ['  tests/domain/b.test.ts\n      no such file\n      at x\n      at y'],
       },
       {
         name: 'api',
@@ -296,7 +296,7 @@ describe('what is said', () => {
     const tally = new Tally();
     for (const line of lines) tally.add({ ...line, milliseconds: 0 });
     expect(tally.toString()).toMatch(
-      /b\.test\.ts\n {6}no such file\n {2}.*asks twice\n {6}timed out\n\n3 passed, 3 failed$/,
+      /b\.test\.ts\n {6}no such file\n[\s\S]*asks twice\n {6}timed out\n\n3 passed, 3 failed$/,
     );
     expect(linesOf(['browser'], files, true)).toEqual([{ name: 'browser', passed: 0, failed: 0 }]);
   });

@@ -56,12 +56,16 @@ const amend = async (
   const statuses = await page.evaluate(
     async ([path, sending]) => {
       const id = () => crypto.randomUUID();
-      const post = async (to: string, body: object) =>
-        fetch(to, {
+      const post = async (to: string, body: object) => {
+        const answer = await fetch(to, {
           method: 'POST',
           headers: { 'content-type': 'application/json' },
           body: JSON.stringify({ act: id(), ...body }),
         });
+        // Taken whole: a page that is left drops what it has not read.
+        await answer.arrayBuffer();
+        return answer;
+      };
       const draft = id();
       const opened = await post(path as string, { id: draft, kind: 'bulletin', content: sending });
       const done = await post(`/api/rulebooks/drafts/${draft}/publish`, { version: 1 });
