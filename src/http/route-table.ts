@@ -63,6 +63,7 @@ export const ROUTES: Readonly<Record<string, RouteAccess>> = {
     permission: 'inspection.record',
   },
   '/api/inspections/[id]/report': { access: 'permission', permission: 'inspection.record' },
+  '/api/inspections/[id]/sheet': { access: 'permission', permission: 'inspection.record' },
   '/api/inspections/[id]/state': { access: 'permission', permission: 'inspection.read' },
   '/api/ledger/[series]/checkpoint': open,
   '/api/ledger/[series]/consistency': open,

@@ -78,7 +78,11 @@ export const gaugeFigures = {
   },
 } as const;
 
-export const openRaceNight = async (world: World, slug = 'corran-valley'): Promise<RaceNight> => {
+export const openRaceNight = async (
+  world: World,
+  slug = 'corran-valley',
+  { clauses, penalties }: Pick<typeof TAPPET_RULE_SET, 'clauses' | 'penalties'> = TAPPET_RULE_SET,
+): Promise<RaceNight> => {
   const seriesId = await addSeries(world, slug);
   const ports = () => world.ports();
   const uuid = () => ports().random.uuid();
@@ -97,7 +101,6 @@ export const openRaceNight = async (world: World, slug = 'corran-valley'): Promi
   const named = { id: classId, seasonId, name: 'Street Stock' };
   get(await addClass(ports(), official, { act: uuid(), seriesId, ...named }));
   const draftId = uuid();
-  const { clauses, penalties } = TAPPET_RULE_SET;
   const content = { clauses, penalties } as unknown as Parameters<typeof openDraft>[2]['content'];
   const draft = { id: draftId, classId, title: 'First edition', content };
   get(await openDraft(ports(), official, { act: uuid(), seriesId, ...draft }));

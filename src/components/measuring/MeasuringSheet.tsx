@@ -1,78 +1,45 @@
-import { useCallback, useRef, useState } from 'react';
+import { useCallback, useMemo, useRef, useState } from 'react';
 import { SavedLine } from '@/components/look/SavedLine';
 import { Keypad } from '@/components/tappet/Keypad';
 import { MeasuringLayout, TurningBoreMap } from '@/components/tappet/MeasuringLayout';
 import { Tally } from '@/components/tappet/Tally';
 import type { SentRow } from '@/contracts/inspection/rows';
 import type { InspectionAssessment } from '@/domain/inspection/assess-inspection';
-import { boreName } from '@/domain/tappet/layout/bore-layout';
-import type { Bay, Hands } from './bay';
+import type { Hands } from './bay';
 import { beginSecond, endSecond } from './go-second';
+import { lastHeard, whoseFrom } from './live/heard';
+import { useLive } from './live/use-live';
 import { PadActs } from './panels/pad/PadActs';
 import { type PadPanel, PanelBeside } from './panels/pad/PanelBeside';
 import { RackPanel } from './panels/pad/RackPanel';
 import { RunPanel } from './panels/RunPanel';
 import { WorkPanel } from './panels/work/WorkPanel';
 import { assessSheet } from './sheet/assess-sheet';
-import { boreStates, checkStates, rackStates } from './sheet/bore-states';
-import type { Step } from './sheet/flow/steps';
 import { impliedOf } from './sheet/keys/typed-base';
+import { factsOf, hintOf, statesOf } from './sheet/on-screen';
 import type { Sheet } from './sheet/sheet';
 import { useBay } from './use-bay';
 import { useCapture } from './use-capture';
 import { useEntry } from './use-entry';
 import { usePlace } from './use-place';
 
-/** What Enter does now, under its word. */
-const hintOf = (step: Step | undefined): string | undefined => {
-  switch (step?.kind) {
-    case 'bore':
-      return `on to ${boreName(step.to)}`;
-    case 'part':
-      return `on to ${step.part.label.toLowerCase()}, ${boreName(step.to)}`;
-    case 'checks':
-      return 'on to the checks';
-    case 'opening':
-      return 'opening zero';
-    case 'closing':
-      return 'closing zero';
-    case 'closed':
-      return 'zero seen';
-    default:
-      return undefined;
-  }
-};
-
-const statesOf = (bay: Bay) => {
-  const { part, positions, checks, assessment, outOfReach, rack, cursor } = bay;
-  if (part !== undefined) return boreStates({ ...bay, part });
-  return cursor.part === 'rack'
-    ? rackStates(rack)
-    : checkStates(positions, checks, assessment, outOfReach);
-};
-
-const factsOf = ({ sheet, gauge }: Bay) => [
-  { name: 'Engine', value: sheet.engine },
-  { name: 'Bay', value: sheet.bay || '–' },
-  { name: 'Inspector', value: sheet.inspector, minor: true },
-  ...(gauge === undefined
-    ? []
-    : [
-        {
-          name: `${gauge.name} ${gauge.code}`,
-          value: gauge.dueOn === undefined ? 'No calibration' : `Calibrated to ${gauge.dueOn}`,
-        },
-      ]),
-];
-
 /** The measuring screen: every key goes here, every act to the device first. */
-export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
-  const { cursor, setUp, isRead, go, goAndKeep, setUpAs } = usePlace(sheet, 'lifter-body-diameter');
+export const MeasuringSheet = ({ sheet: page }: { readonly sheet: Sheet }) => {
+  const { cursor, setUp, isRead, go, goAndKeep, setUpAs } = usePlace(page, 'lifter-body-diameter');
   const latest = useRef<InspectionAssessment>(undefined);
-  const capture = useCapture(sheet, () => assessSheet.told(latest.current));
+  const { sheet, link, onKept } = useLive(page);
+  const capture = useCapture(page, {
+    known: sheet.rows,
+    tablet: () => assessSheet.told(latest.current),
+    onKept,
+  });
   const [panel, setPanel] = useState<PadPanel>();
   const [trouble, setTrouble] = useState<string>();
-  const bay = useBay(sheet, cursor, setUp, capture.rows);
+  const whose = useMemo(
+    () => whoseFrom(sheet, page.rows, capture.own),
+    [sheet, page.rows, capture.own],
+  );
+  const bay = useBay(sheet, cursor, setUp, capture.rows, whose);
   // Half of a bore's readings would be assessed: the server's own word is enough then.
   latest.current = bay?.blind === true || sheet.second !== undefined ? undefined : bay?.assessment;
 
@@ -91,8 +58,16 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
     [keep],
   );
   const entry = useEntry(bay, { go, setUpAs, record });
-  const { take } = entry;
-  const goAfterKeys = useCallback<Hands['go']>((to) => take(() => go(to)), [take, go]);
+  const { take, clear } = entry;
+  const goAfterKeys = useCallback<Hands['go']>(
+    (to) =>
+      take(() => {
+        go(to);
+        // Digits belong to the place and the number that they were begun for.
+        if (to.part !== undefined || to.zero !== undefined || to.bore !== undefined) clear();
+      }),
+    [take, go, clear],
+  );
   const hands: Hands = { go: goAfterKeys, setUpAs, record };
   if (bay === undefined) return <p>This engine’s position map has no bores.</p>;
 
@@ -101,8 +76,10 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
   const listens = capture.ready && isRead && panel === undefined;
   const select = (bore: string) => {
     take(() => {
-      go({ bore, cell: undefined, set: 1, zero: undefined, closed: undefined });
-      entry.clear();
+      const { second } = sheet;
+      const set = second?.bores.includes(bore) ? second.set : 1;
+      go({ bore, cell: undefined, set, zero: undefined, closed: undefined });
+      clear();
     });
   };
   const both = async () => {
@@ -113,7 +90,10 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
   const unsent =
     capture.waiting > 0
       ? `${capture.waiting} ${capture.waiting === 1 ? 'entry' : 'entries'} not sent yet`
-      : undefined;
+      : link === 'asking'
+        ? 'Other tablets: asked every 10 s'
+        : undefined;
+  const heard = lastHeard(bay.rows, bay.judged, page.rows, whose);
   const implied =
     base === undefined
       ? `${scale?.decimals ?? 0} ${scale?.decimals === 1 ? 'decimal' : 'decimals'} implied`
@@ -124,7 +104,7 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
       carNumber={sheet.carNumber}
       hand={setUp.hand}
       ready={capture.ready && isRead}
-      facts={factsOf(bay)}
+      facts={factsOf(bay, heard)}
       saved={
         <SavedLine
           state={capture.saved.state}
@@ -168,12 +148,16 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
             unitNote={implied}
             {...(hint === undefined ? {} : { enterHint: hint })}
             listens={listens}
+            more={
+              <button className="btn" type="button" onClick={() => setPanel('more')}>
+                More
+              </button>
+            }
             acts={
               <PadActs
                 bay={bay}
                 capture={capture}
                 onStrike={() => setPanel('strike')}
-                onMore={() => setPanel('more')}
                 onProblem={setTrouble}
               />
             }
@@ -188,11 +172,12 @@ export const MeasuringSheet = ({ sheet }: { readonly sheet: Sheet }) => {
           />
         ) : (
           <PanelBeside
+            key={[panel, cursor.bore, cursor.part, cursor.set].join(' ')}
             panel={panel ?? 'more'}
             bay={bay}
             hands={hands}
             open={setPanel}
-            onSecond={() => void beginSecond(cursor.bore, part?.key, goAndKeep)}
+            onSecond={(asked) => void beginSecond(asked, part?.key, goAndKeep)}
             onRedo={(runId) => void entry.redo(runId)}
             closable={part !== undefined || cursor.part === 'rack'}
           />

@@ -33,6 +33,8 @@ export interface Bay {
   readonly judged: readonly JudgedReading[];
   readonly assessment: InspectionAssessment;
   readonly outOfReach: ReadonlySet<string>;
+  /** Whose a row is, where it was not recorded by this person at this tablet. */
+  readonly whose: (row: { readonly id: string; readonly takenBy: string }) => string | undefined;
   /** An independent second set is being taken: the first is nowhere to be seen. */
   readonly blind: boolean;
   readonly step: Step | undefined;

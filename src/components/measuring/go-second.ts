@@ -1,3 +1,4 @@
+import { type SecondAsked, secondQuery } from '@/domain/inspection/second-set/asked';
 import type { Cursor } from './sheet/sheet';
 
 const WAIT_MS = 4000;
@@ -14,24 +15,25 @@ const isThere = async (address: string): Promise<boolean> => {
 };
 
 /**
- * Begins an independent second set at a bore: on a page that was made without the first one, so that not
- * even its source holds it; without signal on this page, which hides it.
+ * Begins an independent set at its bores: on a page that was made without the earlier ones, so that not
+ * even its source holds them; without signal on this page, which hides them.
  */
 export const beginSecond = async (
-  bore: string,
+  asked: SecondAsked,
   part: string | undefined,
   goAndKeep: (to: Partial<Cursor>) => Promise<void>,
 ): Promise<void> => {
+  const [bore] = asked.bores;
   await goAndKeep({
-    bore,
-    set: 2,
+    ...(bore === undefined ? {} : { bore }),
+    set: asked.set,
     cell: undefined,
     run: undefined,
     zero: undefined,
     closed: undefined,
     ...(part === undefined ? {} : { part }),
   });
-  const address = `${window.location.pathname}?second=${encodeURIComponent(bore)}`;
+  const address = `${window.location.pathname}?${secondQuery(asked)}`;
   if (await isThere(address)) window.location.assign(address);
 };
 

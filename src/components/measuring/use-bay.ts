@@ -3,13 +3,13 @@ import { assessInspection } from '@/domain/inspection/assess-inspection';
 import { checkAsksOf } from '@/domain/inspection/plan/check-asks';
 import { planOf } from '@/domain/inspection/plan/plan';
 import { rackOf } from '@/domain/inspection/rack/rack';
+import { hideFirst } from '@/domain/inspection/second-set/hide-first';
 import { boreName, positionsOf } from '@/domain/tappet/layout/bore-layout';
 import type { Bay } from './bay';
 import { assessSheet } from './sheet/assess-sheet';
 import { askedBy, partsAsked } from './sheet/flow/asked';
 import { nextStep, type Step } from './sheet/flow/steps';
 import { isComplete } from './sheet/flow/taken';
-import { hideFirst } from './sheet/hide-first';
 import { baseFor } from './sheet/keys/typed-base';
 import { partsOf } from './sheet/parts';
 import type { SheetRows } from './sheet/recorded';
@@ -22,14 +22,18 @@ export const useBay = (
   cursor: Cursor,
   setUp: SetUp,
   all: SheetRows,
+  whose: Bay['whose'],
 ): Bay | undefined => {
   const positions = useMemo(() => positionsOf(sheet.layout), [sheet.layout]);
   const parts = useMemo(() => partsOf(sheet.rules, setUp.form), [sheet.rules, setUp.form]);
   const blind = cursor.set > 1;
-  const rows = useMemo(
-    () => (blind ? hideFirst(all, cursor.bore, cursor.set) : all),
-    [all, blind, cursor.bore, cursor.set],
-  );
+  const { second } = sheet;
+  const rows = useMemo(() => {
+    // This device may hold the first set too: its own rows are hidden here, not by the server.
+    const asked =
+      second ?? (cursor.set > 1 ? { bores: [cursor.bore], set: cursor.set } : undefined);
+    return asked === undefined ? all : hideFirst(all, asked);
+  }, [all, second, cursor.bore, cursor.set]);
   const settled = useDeferredValue(rows);
   const assessment = useMemo(
     () => assessInspection(assessSheet.record(sheet, settled)),
@@ -66,6 +70,7 @@ export const useBay = (
       judged,
       outOfReach,
       asked,
+      second: second?.bores ?? [cursor.bore],
     });
   const unanswered = checks.some(({ answer }) => answer === undefined);
   const step: Step | undefined =
@@ -90,6 +95,7 @@ export const useBay = (
     judged,
     assessment,
     outOfReach,
+    whose,
     blind,
     step,
     gauge,

@@ -1,5 +1,5 @@
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
-import type { CapturesRequest } from '@/contracts/inspection/captures';
+import type { CapturesAnswer, CapturesRequest } from '@/contracts/inspection/captures';
 import type { SentRow } from '@/contracts/inspection/rows';
 import { wallTimeAt } from '@/domain/deadline/zone';
 import type { Place } from '@/domain/inspection/capture/rows';
@@ -24,6 +24,8 @@ import type { Sheet } from './sheet/sheet';
 
 export interface Capture {
   readonly rows: SheetRows;
+  /** Rows that this device recorded. */
+  readonly own: ReadonlySet<string>;
   /** Whether what this device holds has been read: nothing is entered before. */
   readonly ready: boolean;
   readonly waiting: number;
@@ -56,8 +58,15 @@ const clock = (zone: string, at: number): string => {
   return `${String(hour).padStart(2, '0')}:${String(minute).padStart(2, '0')}`;
 };
 
-/** Rows of one inspection: what the server had, what this device holds, and the way between. */
-export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']): Capture => {
+export interface CaptureDeps {
+  /** The server's rows as far as they are known now; the sheet's own are those of the page. */
+  readonly known: SheetRows;
+  readonly tablet: () => CapturesRequest['tablet'];
+  readonly onKept: (answer: CapturesAnswer) => void;
+}
+
+/** Rows of one inspection: what the server has, what this device holds, and the way between. */
+export const useCapture = (sheet: Sheet, { known, tablet, onKept }: CaptureDeps): Capture => {
   const { inspectionId, personId, zone } = sheet;
   const [acts, setActs] = useState<readonly KeptAct[]>([]);
   const [pictures, setPictures] = useState<readonly KeptPicture[]>([]);
@@ -76,13 +85,13 @@ export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']
   }, [inspectionId]);
 
   useEffect(() => {
-    const known = new Set(
+    const onPage = new Set(
       [sheet.rows.readings, sheet.rows.zeros, sheet.rows.remarks].flat().map((row) => row.id),
     );
     const open = async () => {
       const kept = await readActs(inspectionId);
       const done = kept.filter(
-        (act) => act.state === 'sent' && act.rows.every((row) => known.has(row.id)),
+        (act) => act.state === 'sent' && act.rows.every((row) => onPage.has(row.id)),
       );
       await forgetActs(done);
       await reread();
@@ -93,7 +102,11 @@ export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']
       {
         readWaiting,
         changeActs,
-        post: postCaptures,
+        post: async (id, body) => {
+          const posted = await postCaptures(id, body);
+          if (posted.kind === 'kept' && id === inspectionId) onKept(posted.answer);
+          return posted;
+        },
         sendPicture,
         newSending: (id) => ({
           act: uuidV7(),
@@ -108,7 +121,7 @@ export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']
       },
     );
     return () => sender.current?.stop();
-  }, [inspectionId, offset, reread, sheet.rows]);
+  }, [inspectionId, offset, reread, sheet.rows, onKept]);
 
   const keep = useCallback(
     async (write: () => Promise<void>) => {
@@ -180,17 +193,19 @@ export const useCapture = (sheet: Sheet, tablet: () => CapturesRequest['tablet']
   const rows = useMemo(
     () =>
       joinRows(
-        sheet.rows,
+        known,
         acts.filter((act) => act.state !== 'refused').flatMap((act) => act.rows),
         personId,
         offset,
       ),
-    [sheet.rows, acts, personId, offset],
+    [known, acts, personId, offset],
   );
+  const own = useMemo(() => new Set(acts.flatMap((act) => act.rows).map(({ id }) => id)), [acts]);
   const waiting = acts.filter((act) => act.state === 'waiting').length;
   const state = failedAt !== undefined ? 'failed' : waiting > 0 ? 'device' : 'sent';
   return {
     rows,
+    own,
     ready,
     waiting,
     refused: acts.filter((act) => act.state === 'refused'),

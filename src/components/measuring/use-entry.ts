@@ -14,6 +14,7 @@ import { questionOf } from './sheet/keys/question';
 import { NOTHING, press, type Typed, typedNumber } from './sheet/keys/typing';
 import { closingRow, openingRow, readingRow, strikeRow } from './sheet/rows';
 import { isComparative } from './sheet/set-up';
+import { useHold } from './use-hold';
 
 /** The step after a reading, by a plan that knows it: a value near a limit asks for more at once. */
 const stepAfter = (bay: Bay, row: SentReading): Step | undefined => {
@@ -30,12 +31,13 @@ const stepAfter = (bay: Bay, row: SentReading): Step | undefined => {
     cursor: { ...cursor, cell: undefined },
     judged: assessSheet.judge(then).judged,
     asked: bay.blind ? bay.asked : askedBy(setUp, plan),
+    second: sheet.second?.bores ?? [cursor.bore],
   });
 };
 
-/** Where Enter alone leads; nothing where a number is wanted. */
-const onward = (step: Step): Parameters<Hands['go']>[0] | undefined => {
-  if (step.kind === 'bore') return { bore: boreName(step.to), cell: undefined, set: 1 };
+/** Where Enter alone leads; nothing where a number is wanted. A bore after another is of the same set. */
+const onward = (step: Step, set: number): Parameters<Hands['go']>[0] | undefined => {
+  if (step.kind === 'bore') return { bore: boreName(step.to), cell: undefined, set };
   if (step.kind === 'part')
     return { part: step.part.key, bore: boreName(step.to), cell: undefined, set: 1 };
   if (step.kind === 'checks') return { part: 'checks', cell: undefined, set: 1 };
@@ -56,6 +58,7 @@ export const useEntry = (bay: Bay | undefined, hands: Hands) => {
   const busy = useRef(false);
   const waiting = useRef<(PadKey | (() => void))[]>([]);
   const typing = useRef(NOTHING);
+  const { onTyped, drop } = useHold(bay, go);
   const type = useCallback((to: Typed) => {
     typing.current = to;
     setTyped(to);
@@ -95,7 +98,7 @@ export const useEntry = (bay: Bay | undefined, hands: Hands) => {
       return;
     }
     if (value === undefined) {
-      const to = onward(step);
+      const to = onward(step, cursor.set);
       if (to !== undefined) go(to);
       return;
     }
@@ -120,6 +123,7 @@ export const useEntry = (bay: Bay | undefined, hands: Hands) => {
     }
     // Digits of the next number may come while this one is being kept.
     type(NOTHING);
+    drop();
     setAsked(undefined);
     const kept = async (sent: readonly SentRow[]) => {
       const done = await record(sent);
@@ -156,7 +160,7 @@ export const useEntry = (bay: Bay | undefined, hands: Hands) => {
       const after = single ? stepAfter(bay, row) : undefined;
       go({
         cell: undefined,
-        ...(after && after.kind !== 'part' ? onward(after) : {}),
+        ...(after && after.kind !== 'part' ? onward(after, cursor.set) : {}),
         ...(after?.kind === 'closing' ? { zero: 'closing' } : {}),
       });
     }
@@ -178,13 +182,15 @@ export const useEntry = (bay: Bay | undefined, hands: Hands) => {
         return;
       }
       if (key !== 'enter') {
-        type(press(typing.current, key));
+        const next = press(typing.current, key);
+        onTyped(typing.current, next);
+        type(next);
         return;
       }
       busy.current = true;
       void latestEnter.current().finally(() => settle((turn) => turn + 1));
     },
-    [type],
+    [type, onTyped],
   );
   useEffect(() => {
     if (turn === 0) return;
@@ -197,7 +203,8 @@ export const useEntry = (bay: Bay | undefined, hands: Hands) => {
 
   const clear = useCallback(() => {
     type(NOTHING);
+    drop();
     setProblem(undefined);
-  }, [type]);
+  }, [type, drop]);
   return { typed, problem, take, clear, redo };
 };

@@ -15,9 +15,9 @@ export const usePlace = (sheet: Sheet, firstPart: string) => {
   const [first] = positionsOf(sheet.layout);
   const [place, setPlace] = useState<Kept>(() => ({
     cursor: {
-      bore: sheet.second ?? (first === undefined ? '' : boreName(first)),
+      bore: sheet.second?.bores[0] ?? (first === undefined ? '' : boreName(first)),
       part: firstPart,
-      set: sheet.second === undefined ? 1 : 2,
+      set: sheet.second?.set ?? 1,
     },
     setUp: usualSetUp(sheet.gauges, sheet.servedAt.slice(0, 10)),
   }));
@@ -29,7 +29,8 @@ export const usePlace = (sheet: Sheet, firstPart: string) => {
         if (kept === undefined) return;
         const { second } = sheet;
         const elsewhere =
-          second !== undefined && (kept.cursor.bore !== second || kept.cursor.set < 2);
+          second !== undefined &&
+          (!second.bores.includes(kept.cursor.bore) || kept.cursor.set !== second.set);
         setPlace((usual) => ({
           cursor: elsewhere ? { ...usual.cursor, part: kept.cursor.part } : kept.cursor,
           // What a newer version chooses besides has its usual answer.

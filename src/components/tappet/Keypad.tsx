@@ -11,6 +11,8 @@ export interface KeypadProps {
   readonly decimal?: '.' | ',';
   /** Whether keys of a hardware keyboard reach the pad from anywhere on the page. */
   readonly listens?: boolean;
+  /** What is wanted once in a while, as a button beside the unit. */
+  readonly more?: ReactNode;
   /** Strike and photograph, as buttons of class `btn`. */
   readonly acts?: ReactNode;
 }
@@ -56,10 +58,13 @@ export const Keypad = (props: KeypadProps) => {
 
   return (
     <section className="pad" aria-label="Keypad">
-      <p className="pad-unit">
-        <span>{unit}</span>
-        <span>{unitNote}</span>
-      </p>
+      <div className="pad-unit">
+        <p>
+          <span>{unit}</span>
+          <span>{unitNote}</span>
+        </p>
+        {props.more}
+      </div>
       <div className="pad-keys">
         {digits.map((digit) => (
           <button key={digit} className="key" {...press(digit)}>

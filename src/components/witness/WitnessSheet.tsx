@@ -37,10 +37,17 @@ interface WitnessSheetProps {
   }[];
 }
 
+/** Nothing is read anew here: the sheet stands as it was when it was turned round. */
+const keptIsKept = () => undefined;
+
 /** What the tablet shows when it is turned to the competitor's side; all of it works without signal. */
 export const WitnessSheet = ({ sheet, head, open, checks }: WitnessSheetProps) => {
   const latest = useRef<InspectionAssessment>(undefined);
-  const capture = useCapture(sheet, () => assessSheet.told(latest.current));
+  const capture = useCapture(sheet, {
+    known: sheet.rows,
+    tablet: () => assessSheet.told(latest.current),
+    onKept: keptIsKept,
+  });
   const { rows } = capture;
   const assessment = useMemo(
     () => assessInspection(assessSheet.record(sheet, rows)),

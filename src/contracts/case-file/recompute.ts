@@ -1,4 +1,4 @@
-import { plainSet } from '@/domain/inspection/report';
+import { plainBore } from '@/domain/inspection/report';
 import { findHex, sameBytes, sha256, toHex, utf8 } from '@/domain/ledger/bytes';
 import { chainNextHash, chainStart } from '@/domain/ledger/chain';
 import { type PlainDocument, toDocument } from '@/domain/rulebook/document';
@@ -76,11 +76,7 @@ export const recompute = (file: CaseFile): readonly Recomputed[] =>
       throw new Error(`The batches in the file do not lead to the chain of report ${revision}.`);
     const anew = assessAnew(report, rules, rowsOfBatches(file.batches.slice(0, batches)));
     const { findings, completeness, redo, judged: readings, domainVersion } = anew;
-    const bores = anew.bores.map(({ key, position, sets }) => ({
-      key,
-      position,
-      sets: sets.map(plainSet),
-    }));
+    const bores = anew.bores.map(plainBore);
     const made = toDocument({ findings, bores, completeness, redo, readings });
     return {
       revision,

@@ -14,6 +14,8 @@ export const checkRequest = z.strictObject({
   gaugeId: z.optional(z.uuid('Choose the gauge.')),
   /** Takes back what was entered last for this car and clause, with the reason. */
   takeBack: z.optional(text(300)),
+  /** What was read last stands, under `gaugeId` instead: why the gauge is corrected. */
+  correction: z.optional(text(300)),
 });
 
 export const checkAnswer = z.strictObject({
@@ -46,6 +48,8 @@ export const checkedShown = z.strictObject({
   answer: z.string(),
   value: z.nullable(z.strictObject({ text: z.string(), unit: z.string() })),
   gauge: z.nullable(z.string()),
+  /** Why its gauge was corrected; empty where it was not. */
+  correctedBecause: z.string(),
   state: z.enum(['within', 'outside', 'no-statement']),
   sentence: z.string(),
   by: z.string(),

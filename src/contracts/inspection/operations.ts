@@ -10,6 +10,7 @@ import {
 } from './acts';
 import { capturesAnswer, capturesRequest } from './captures';
 import { expectPhotographRequest } from './photograph';
+import { sheetNow } from './sheet';
 
 const signedIn = { method: 'post', access: 'signed-in' } as const;
 
@@ -31,6 +32,20 @@ export const operations: readonly Operation[] = [
     summary: 'Record readings, zeros and remarks taken in the bay, exactly once.',
     body: capturesRequest,
     answer: capturesAnswer,
+  },
+  {
+    method: 'get',
+    access: 'signed-in',
+    path: '/api/inspections/{id}/sheet',
+    summary: 'The sheet in the bay as it is now: rows, state and gauges.',
+    query: [
+      {
+        name: 'second',
+        words: 'A bore whose earlier sets are left out for an independent one; may be repeated.',
+      },
+      { name: 'set', words: 'Number of the independent set; 2 where it is left out.' },
+    ],
+    answer: sheetNow,
   },
   {
     ...signedIn,

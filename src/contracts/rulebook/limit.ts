@@ -60,6 +60,7 @@ export const limitRequirement = z.strictObject({
       step: written,
     }),
   ),
+  twoSets: z.optional(z.enum(['each'])),
 });
 
 export const referenceAverageRequirement = z.strictObject({

@@ -38,6 +38,7 @@ import { referencesFrom } from './measure/reference-parts';
 import { type RunOutcome, runOutcomes } from './measure/run-outcome';
 import type { Capture } from './measure/runs';
 import { choicesFrom, type SetChoice } from './second-set/choice';
+import { withSets } from './second-set/each-set';
 import { type SecondSet, secondSetsOf, standingFacts } from './second-set/second-sets';
 
 /** Everything recorded in the bay, and what it is held against. */
@@ -140,7 +141,9 @@ export const assessInspection = (record: InspectionRecord): InspectionAssessment
   const positions = positionsIn(layout);
   const plain = plainNumbers(counting, gauges);
   const numbers = [
-    ...bores.flatMap(({ key, sets, choice }) => joinSets(key, standingFacts(sets, choice))),
+    ...bores.flatMap(({ key, sets, choice }) =>
+      withSets(joinSets(key, standingFacts(sets, choice)), sets),
+    ),
     ...plain,
     ...derivedNumbers(plain, positions, rules),
   ].map((fact): NumberFact => {

@@ -2,7 +2,7 @@ import type { Written } from '../quantity/dimension';
 import type { Quantity } from '../quantity/quantity';
 import { type PlainDocument, toDocument } from '../rulebook/document';
 import type { BoreLayout } from '../tappet/layout/bore-layout';
-import type { InspectionAssessment } from './assess-inspection';
+import type { BoreResult, InspectionAssessment } from './assess-inspection';
 import type { GaugeRecord } from './capture/gauge-record';
 import type { RemarkRow, ZeroRow } from './capture/rows';
 import type { Revision } from './finding';
@@ -55,7 +55,7 @@ const three = (figures: { mean: Quantity; min: Quantity; max: Quantity } | null 
     : { mean: written(figures.mean), min: written(figures.min), max: written(figures.max) };
 
 /** One set's results as plain data: lengths as written, the budget in metres. */
-export const plainSet = ({ set, measurement, foot }: SetResult) => ({
+const plainSet = ({ set, measurement, foot }: SetResult) => ({
   set: set.set,
   method: set.sheet.method,
   run: set.runId,
@@ -97,6 +97,15 @@ const plainSecondSet = ({ set, firstBy, secondBy, alone, agreements }: SecondSet
   agreements,
 });
 
+/** One bore as it stands in a report: its sets, second ones beside the first, and which a person chose. */
+export const plainBore = ({ key, position, sets, secondSets, choice }: BoreResult) => ({
+  key,
+  position,
+  sets: sets.map(plainSet),
+  ...(secondSets.length > 0 && { secondSets: secondSets.map(plainSecondSet) }),
+  ...(choice && { stands: String(choice.stands), standsBecause: choice.reason }),
+});
+
 /**
  * The report that is signed: rules, map, every row with what became of it, gauges with certificates,
  * results, findings. Plain data without numbers, to be canonicalised (RFC 8785) and hashed.
@@ -112,13 +121,7 @@ export const reportDocument = (
     ...parts,
     domainVersion: assessment.domainVersion,
     readings: assessment.judged,
-    bores: assessment.bores.map(({ key, position, sets, secondSets, choice }) => ({
-      key,
-      position,
-      sets: sets.map(plainSet),
-      ...(secondSets.length > 0 && { secondSets: secondSets.map(plainSecondSet) }),
-      ...(choice && { stands: String(choice.stands), standsBecause: choice.reason }),
-    })),
+    bores: assessment.bores.map(plainBore),
     completeness: assessment.completeness,
     redo: assessment.redo,
     ...(lifters.some(({ state }) => state !== 'in-engine') && {

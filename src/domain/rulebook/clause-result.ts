@@ -24,6 +24,15 @@ export interface BudgetWords {
   readonly share: string;
 }
 
+/** What one of several independent sets came to by itself. */
+export interface SetWords {
+  readonly set: string;
+  readonly state: State;
+  readonly value?: Written | undefined;
+  readonly exact?: Written | undefined;
+  readonly uncertainty?: Written | undefined;
+}
+
 export interface PositionResult {
   /** `engine`, a cylinder's number, or a bore's key from the position map. */
   readonly position: string;
@@ -46,6 +55,10 @@ export interface PositionResult {
   readonly guardBand?: Written | undefined;
   /** Checks of the gauge on a ring that night, each in words. */
   readonly checked?: readonly string[] | undefined;
+  /** Where the clause holds each set by itself and there are two or more. */
+  readonly sets?: readonly SetWords[] | undefined;
+  /** What its clause wants before more is stated: a second independent set, or one more as two differ. */
+  readonly wants?: 'second-set' | 'new-set' | undefined;
   /** A choice or yes / no as declared or found. */
   readonly answer?: string | undefined;
   readonly sentence: string;

@@ -95,6 +95,11 @@ const limitParts = (limit: LimitRequirement): readonly string[] => [
         } ${writtenWords(limit.rounding.step)}`,
       ]),
   ...heldWords(limit),
+  ...(limit.twoSets === 'each'
+    ? [
+        'a breach is stated only when two independent sets each show it; sets that differ beyond their uncertainty are measured again',
+      ]
+    : []),
 ];
 
 /** The requirement in words, for reading, printing and comparing two points in time. */

@@ -64,6 +64,11 @@ export interface LimitRequirement extends Measurand, HeldAgainst {
   readonly nominal?: Nominal | undefined;
   readonly sample: Sample;
   readonly rounding?: LimitRounding | undefined;
+  /**
+   * `each`: independent sets are not pooled. A breach is stated only when two or more sets each show it by
+   * themselves; sets that differ by more than their joint U give no statement. Left out: they are pooled.
+   */
+  readonly twoSets?: 'each' | undefined;
 }
 
 /** The value must lie from − `minus` to + `plus` about the mean of at least `n` reference parts. */

@@ -178,7 +178,7 @@ test('the server killed in the middle loses nothing and doubles nothing', {
         (await valuesOf(id)).length === 1 ? true : undefined,
       );
       // The first answer after this is lost: the server has it, the tablet does not know.
-      visitor.expectRefusal({ url: /\/captures$/, status: 'offline' });
+      visitor.expectRefusal({ url: /\/(captures|live|sheet)(\?|$)/, status: 'offline' });
       await page.route(
         '**/captures',
         async (route) => {

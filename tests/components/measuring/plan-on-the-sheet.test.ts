@@ -3,7 +3,6 @@ import { assessSheet } from '@/components/measuring/sheet/assess-sheet';
 import { boreStates, checkStates } from '@/components/measuring/sheet/bore-states';
 import { askedBy, partsAsked } from '@/components/measuring/sheet/flow/asked';
 import { nextStep, type Standing } from '@/components/measuring/sheet/flow/steps';
-import { hideFirst } from '@/components/measuring/sheet/hide-first';
 import { questionOf } from '@/components/measuring/sheet/keys/question';
 import { baseFor } from '@/components/measuring/sheet/keys/typed-base';
 import { partsOf } from '@/components/measuring/sheet/parts';
@@ -12,6 +11,7 @@ import type { SheetGauge } from '@/components/measuring/sheet/sheet';
 import { assessInspection, type InspectionRecord } from '@/domain/inspection/assess-inspection';
 import { checkAsksOf } from '@/domain/inspection/plan/check-asks';
 import { planOf } from '@/domain/inspection/plan/plan';
+import { hideFirst } from '@/domain/inspection/second-set/hide-first';
 import type { Clause } from '@/domain/rulebook/clause';
 import { positionsOf } from '@/domain/tappet/layout/bore-layout';
 import {
@@ -52,6 +52,7 @@ const sheetOver = (more: Partial<InspectionRecord>, part = 'lifter-body-diameter
     judged: assessment.judged,
     outOfReach: new Set(),
     asked: askedBy(setUp, plan),
+    second: [],
   };
   return { standing, assessment, plan, parts, part: here };
 };
@@ -146,7 +147,7 @@ describe('a hidden first set', () => {
       zeros: [],
       remarks: [remark('m4', 'move', { readingId: 'b3', place: intake })],
     };
-    const left = hideFirst(rows, '1 intake', 2);
+    const left = hideFirst(rows, { bores: ['1 intake'], set: 2 });
     expect(left.readings.map(({ id }) => id)).toEqual(['b9']);
     const { facts } = assessInspection(assessSheetRecord(left));
     expect(

@@ -146,6 +146,7 @@ describe('what comes next', () => {
       part,
       parts,
       asked: askedBy(chosen, []),
+      second: [],
       cursor: { bore: boreName(first), part: part.quantity, set: 1 },
       setUp: chosen,
       positions,

@@ -143,6 +143,7 @@ describe('what is stored', () => {
             per: 'lifter',
             max: { text: '90.0', unit: 'g' },
             sample: { kind: 'some', count: 4 },
+            twoSets: 'each',
           }),
         },
       },

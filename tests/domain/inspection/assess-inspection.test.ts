@@ -261,7 +261,9 @@ describe('an independent second set', () => {
       body('r2', '0.8427'),
       body('r3', '0.8423', { place: exhaust }),
     ];
-    expect(secondSetsWanted(assessInspection(record({ readings: near })))).toEqual(['1 intake']);
+    expect(secondSetsWanted(assessInspection(record({ readings: near })))).toEqual([
+      { bore: '1 intake', set: 2 },
+    ]);
     const second = [...near, body('r4', '0.8426', { set: 2 }), body('r5', '0.8427', { set: 2 })];
     expect(secondSetsWanted(assessInspection(record({ readings: second })))).toEqual([]);
     const advisory = [...bodies, reading('r3', '0.8442')];

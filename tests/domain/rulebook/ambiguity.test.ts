@@ -4,7 +4,7 @@ import type { Clause } from '@/domain/rulebook/clause';
 import type { QuantityName } from '@/domain/rulebook/quantity-catalogue';
 import type { Requirement } from '@/domain/rulebook/requirement';
 import { ENGINE_RULE_SET } from '@/domain/rulebook/rule-sets/engine';
-import { inches } from '@/domain/rulebook/rule-sets/rule-set';
+import { inches, limit } from '@/domain/rulebook/rule-sets/rule-set';
 import { TAPPET_RULE_SET } from '@/domain/rulebook/rule-sets/tappet';
 import { WEIGHTS_RULE_SET } from '@/domain/rulebook/rule-sets/weights';
 import { clause, clearance, lift } from './build';
@@ -125,6 +125,31 @@ const requirements: readonly [string, Requirement, string, RegExp][] = [
     clearance({ ringCheck: inches('0.0000') }),
     '/ringCheck',
     /more than zero/,
+  ],
+  [
+    'two sets of what is worked out from other numbers',
+    limit({
+      quantity: 'displacement',
+      unit: 'in³',
+      per: 'engine',
+      max: { text: '358.0', unit: 'in³' },
+      twoSets: 'each',
+    }),
+    '/twoSets',
+    /worked out from other numbers/,
+  ],
+  [
+    'two sets of a whole car',
+    limit({
+      quantity: 'car-weight',
+      unit: 'lb',
+      per: 'car',
+      datum: 'with the driver, after the race',
+      min: { text: '2600', unit: 'lb' },
+      twoSets: 'each',
+    }),
+    '/twoSets',
+    /at the line, once/,
   ],
   [
     'an uncertainty of zero',

@@ -5,7 +5,17 @@ import { WEIGHTS_RULE_SET } from '@/domain/rulebook/rule-sets/weights';
 import { clausesCsv, readClausesCsv } from '@/services/rulebook/file/clauses-csv';
 import { readFile } from '@/services/rulebook/file/read-file';
 
-const SETS = [TAPPET_RULE_SET, ENGINE_RULE_SET, WEIGHTS_RULE_SET];
+/** With each of two sets by itself wherever a limit may say so. */
+const EACH_SET = {
+  ...TAPPET_RULE_SET,
+  title: 'Two sets, each by itself',
+  clauses: TAPPET_RULE_SET.clauses.map((clause) =>
+    clause.requirement?.kind === 'limit'
+      ? { ...clause, requirement: { ...clause.requirement, twoSets: 'each' as const } }
+      : clause,
+  ),
+};
+const SETS = [TAPPET_RULE_SET, ENGINE_RULE_SET, WEIGHTS_RULE_SET, EACH_SET];
 const details = (result: ReturnType<typeof readFile>) =>
   result.ok ? [] : (result.failure.faults ?? []).map((fault) => fault.detail);
 

@@ -8,17 +8,19 @@ import type {
 import { clockWords } from '@/domain/verdict/instant-words';
 import { CarPlate } from '../../look/CarPlate';
 import { StatusWord } from '../../look/StatusWord';
+import { CorrectGauge } from './CorrectGauge';
 
 interface CheckRowProps {
   readonly car: ChecksShown['cars'][number];
   readonly ask: LineCheckShown['ask'];
   readonly checked: CheckedShown | undefined;
   readonly records: boolean;
+  readonly gauges: ChecksShown['gauges'];
   /** The event's: times are read off the track's clocks. */
   readonly zone: string;
   /** Gives what there is to say about it, where there is anything. */
   readonly send: (
-    said: Pick<CheckRequest, 'answer' | 'value' | 'takeBack'>,
+    said: Pick<CheckRequest, 'answer' | 'value' | 'takeBack' | 'correction' | 'gaugeId'>,
   ) => Promise<{ readonly refused: boolean; readonly words: string } | undefined>;
 }
 
@@ -29,7 +31,7 @@ const STATUS = {
 } as const;
 
 /** One car and one check: a tap, or a value and Enter. */
-export const CheckRow = ({ car, ask, checked, records, zone, send }: CheckRowProps) => {
+export const CheckRow = ({ car, ask, checked, records, gauges, zone, send }: CheckRowProps) => {
   const [text, setText] = useState('');
   const [reason, setReason] = useState('');
   const [busy, setBusy] = useState(false);
@@ -89,7 +91,7 @@ export const CheckRow = ({ car, ask, checked, records, zone, send }: CheckRowPro
             <StatusWord
               status={status}
               word={word}
-              detail={`${checked.value === null ? '' : `${checked.value.text} ${checked.value.unit}, ${checked.gauge ?? ''}. `}${clockWords(checked.at, zone)}, ${checked.by}`}
+              detail={`${checked.value === null ? '' : `${checked.value.text} ${checked.value.unit}, ${checked.gauge ?? ''}. `}${clockWords(checked.at, zone)}, ${checked.by}${checked.correctedBecause === '' ? '' : `. Gauge corrected: ${checked.correctedBecause}`}`}
             />
             {checked.state !== 'within' && <span className="note">{checked.sentence}</span>}
           </>
@@ -103,6 +105,15 @@ export const CheckRow = ({ car, ask, checked, records, zone, send }: CheckRowPro
         <a href={`/barn/inspections/${car.inspectionId}`}>
           <span className="visually-hidden">Car {car.carNumber}: </span>inspection
         </a>
+      )}
+      {records && checked?.value != null && gauges.length > 1 && (
+        <CorrectGauge
+          key={checked.id}
+          car={car.carNumber}
+          gauges={gauges.filter(({ code }) => code !== checked.gauge)}
+          busy={busy}
+          onCorrect={(said) => void say(said)}
+        />
       )}
       {records && checked !== undefined && (
         <details>

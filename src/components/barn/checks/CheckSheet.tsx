@@ -67,7 +67,7 @@ const Sheet = ({ shown: first }: CheckSheetProps) => {
 
   const send = async (
     entryId: string,
-    said: Pick<CheckRequest, 'answer' | 'value' | 'takeBack'>,
+    said: Pick<CheckRequest, 'answer' | 'value' | 'takeBack' | 'correction' | 'gaugeId'>,
   ): ReturnType<Parameters<typeof CheckRow>[0]['send']> => {
     if (check === undefined) return undefined;
     try {
@@ -154,6 +154,7 @@ const Sheet = ({ shown: first }: CheckSheetProps) => {
                   (one) => one.entryId === car.entryId && one.clause === check.clause,
                 )}
                 records={shown.records}
+                gauges={shown.gauges}
                 zone={shown.zone}
                 send={(said) => send(car.entryId, said)}
               />

@@ -5,15 +5,17 @@ import { FindingRow, FindingTable } from '@/components/look/FindingRow';
 import { StatusWord } from '@/components/look/StatusWord';
 import { markOfState, type Status, wordOfState } from '@/components/look/status';
 import type { InspectionAssessment } from '@/domain/inspection/assess-inspection';
+import type { GaugeRecord } from '@/domain/inspection/capture/gauge-record';
 import type { Finding } from '@/domain/inspection/finding';
 import { remediesInClass } from '@/domain/inspection/remedies-in-class';
 import type { Clause } from '@/domain/rulebook/clause';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
-import { shownResult } from '../sheet/shown';
+import { placesRead, shownResult } from '../sheet/shown';
 
 interface ClauseFindingsProps {
   readonly rules: RulesInForce;
   readonly assessment: InspectionAssessment;
+  readonly gauges: readonly GaugeRecord[];
 }
 
 const BREACHING: readonly string[] = ['outside', 'does-not-comply', 'too-close', 'no-statement'];
@@ -24,9 +26,18 @@ const ofClearance = ({ requirement }: Clause): boolean =>
 const passWord = (pass: boolean | null, state: Finding['state']): string =>
   pass === null ? wordOfState(state) : `${wordOfState(state)}: ${pass ? 'pass' : 'fail'}`;
 
-const Numbers = ({ clause, finding }: { readonly clause: Clause; readonly finding: Finding }) => {
+const Numbers = ({
+  clause,
+  finding,
+  gauges,
+}: {
+  readonly clause: Clause;
+  readonly finding: Finding;
+  readonly gauges: readonly GaugeRecord[];
+}) => {
+  const most = placesRead(clause, finding, gauges);
   const rows = finding.perPosition.flatMap((result) => {
-    const shown = shownResult(clause, result);
+    const shown = shownResult(clause, result, most);
     return shown === undefined ? [] : [{ result, shown }];
   });
   const [first] = rows;
@@ -70,7 +81,7 @@ const Others = ({ finding }: { readonly finding: Finding }) => {
 };
 
 /** Every clause with its statement, its numbers on their strips, the rule's sentence, and the budget. */
-export const ClauseFindings = ({ rules, assessment }: ClauseFindingsProps) => {
+export const ClauseFindings = ({ rules, assessment, gauges }: ClauseFindingsProps) => {
   const { findings, bores, facts } = assessment;
   return (
     <div className="grid gap-8 mt-5">
@@ -106,7 +117,7 @@ export const ClauseFindings = ({ rules, assessment }: ClauseFindingsProps) => {
               <>
                 <details open={BREACHING.includes(finding.state)}>
                   <summary>Numbers, each with its uncertainty</summary>
-                  <Numbers clause={clause} finding={finding} />
+                  <Numbers clause={clause} finding={finding} gauges={gauges} />
                 </details>
                 <Budgets results={finding.perPosition} />
                 {ofClearance(clause) && <HoldAdvice bores={bores} />}

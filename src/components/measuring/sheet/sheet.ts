@@ -1,21 +1,19 @@
-import type { GaugeRecord } from '@/domain/inspection/capture/gauge-record';
+import type { SheetNow } from '@/contracts/inspection/sheet';
 import type { Place } from '@/domain/inspection/capture/rows';
-import type { InspectionState } from '@/domain/inspection/state';
+import type { SecondAsked } from '@/domain/inspection/second-set/asked';
 import type { PaperworkDocument } from '@/domain/paperwork/document';
-import type { Written } from '@/domain/quantity/dimension';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import type { BoreLayout, BorePosition } from '@/domain/tappet/layout/bore-layout';
 import type { Part } from './parts';
-import type { SheetRows } from './recorded';
 
-export interface SheetGauge extends GaugeRecord {
-  readonly name: string;
-  readonly size?: Written | undefined;
-}
+export type SheetGauge = SheetNow['gauges'][number];
 
 /** Everything the measuring screen starts from; plain JSON, so that it can be kept. */
-export interface Sheet {
+export interface Sheet extends SheetNow {
   readonly inspectionId: string;
+  readonly seriesId: string;
+  /** How far the series' barn had come before the rows were read. */
+  readonly mark: string | undefined;
   readonly personId: string;
   readonly carNumber: string;
   readonly engine: string;
@@ -24,14 +22,11 @@ export interface Sheet {
   readonly bay: string;
   readonly inspector: string;
   readonly zone: string;
-  readonly state: InspectionState;
   readonly layout: BoreLayout;
   readonly rules: RulesInForce;
-  readonly gauges: readonly SheetGauge[];
-  readonly rows: SheetRows;
   readonly paperwork: PaperworkDocument | null;
-  /** A bore whose first set this page was made without: an independent second one is taken here. */
-  readonly second?: string | undefined;
+  /** This page was made without what earlier sets read at these bores: an independent one is taken here. */
+  readonly second?: SecondAsked | undefined;
   /** The server's clock when it made the page; the device measures its own against it. */
   readonly servedAt: string;
 }

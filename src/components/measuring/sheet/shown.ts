@@ -1,5 +1,6 @@
 import type { GaugeStripProps } from '@/components/look/GaugeStrip';
 import { markOfState } from '@/components/look/status';
+import type { GaugeRecord } from '@/domain/inspection/capture/gauge-record';
 import type { Finding } from '@/domain/inspection/finding';
 import { baseNumber, convert, widthIn } from '@/domain/quantity/convert';
 import type { Written } from '@/domain/quantity/dimension';
@@ -33,8 +34,34 @@ export const unitShown = (requirement: Limit): { unit: string; shown: string } =
     : { unit: requirement.unit, shown: requirement.unit };
 };
 
-/** The numbers of a result against its clause; nothing where the position has none. */
-export const shownResult = (clause: Clause, result: PositionResult): ShownResult | undefined => {
+/**
+ * How many places of a result are worth reading: one more than the finest gauge behind it resolves, in
+ * the unit of the sheet. Nothing where no gauge says.
+ */
+export const placesRead = (
+  { requirement }: Clause,
+  { gauges: ids }: Pick<Finding, 'gauges'>,
+  gauges: readonly Pick<GaugeRecord, 'id' | 'division'>[],
+): number | undefined => {
+  if (requirement?.kind !== 'limit') return undefined;
+  const { dimension } = getQuantityEntry(requirement.quantity);
+  const { unit } = unitShown(requirement);
+  const resolved = gauges.flatMap(({ id, division }) => {
+    const read = ids.includes(id) && division ? parseWritten(division, dimension) : undefined;
+    return read?.ok === true ? [decimalsOf(convert(read.value, unit).text)] : [];
+  });
+  return resolved.length === 0 ? undefined : Math.max(...resolved) + 1;
+};
+
+/**
+ * The numbers of a result against its clause; nothing where the position has none. A mean is rounded,
+ * half to even, to `most` places; in full it stands in the finding's `exact`.
+ */
+export const shownResult = (
+  clause: Clause,
+  result: PositionResult,
+  most = Number.POSITIVE_INFINITY,
+): ShownResult | undefined => {
   const { requirement } = clause;
   if (requirement?.kind !== 'limit' || result.value === undefined) return undefined;
   const { dimension } = getQuantityEntry(requirement.quantity);
@@ -47,7 +74,7 @@ export const shownResult = (clause: Clause, result: PositionResult): ShownResult
   };
   const number = (written: Written) => steps(baseNumber(read(written)));
   const exact = read(result.exact ?? result.value);
-  const places = decimalsOf(convert(read(result.value), unit).text);
+  const places = Math.min(most, decimalsOf(convert(read(result.value), unit).text));
   const value = asciiIn(exact, unit, unit === 'thou' ? Math.max(places, 2) : places);
   const { limits } = decisionOf(requirement);
   const bound = (limit: typeof limits.max, word: string) =>

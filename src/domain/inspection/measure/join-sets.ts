@@ -1,7 +1,7 @@
+import { agrees } from '../../decision/agree';
 import { mean } from '../../measurement/series';
 import { quantityOf } from '../../quantity/quantity';
 import type { NumberFact } from '../../rulebook/evaluate/facts';
-import { agrees } from '../second-set/agreement';
 import type { Fact } from './measure-position';
 
 const DISAGREE = 'two independent sets of readings differ by more than their uncertainty';

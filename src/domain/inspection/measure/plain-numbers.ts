@@ -35,6 +35,29 @@ export const gaugeBudget = (
   ];
 };
 
+const figuresOf = (
+  readings: readonly JudgedReading[],
+  gauges: readonly GaugeRecord[],
+): readonly NumberFact[] => {
+  const [first] = readings;
+  if (first === undefined) return [];
+  const { quantity, gaugeId } = first.row;
+  const { dimension, per, unit } = getQuantityEntry(quantity);
+  const series = readings.map(({ row }) => fromStored(row.value, dimension).value);
+  const budget = gaugeBudget(gauges, gaugeId, dimension);
+  const fact = {
+    quantity,
+    position: positionKey(first.place, per),
+    ...combine(budget),
+    budget,
+  };
+  return [
+    { ...fact, figure: 'mean', value: quantityOf(dimension, mean(series), unit) },
+    { ...fact, figure: 'smallest', value: quantityOf(dimension, smallest(series), unit) },
+    { ...fact, figure: 'largest', value: quantityOf(dimension, largest(series), unit) },
+  ];
+};
+
 /** Quantities read off a gauge as they are: weights, lifts, cylinder bores and such. */
 export const plainNumbers = (
   counting: readonly JudgedReading[],
@@ -48,22 +71,21 @@ export const plainNumbers = (
     groups.set(key, [...(groups.get(key) ?? []), reading]);
   }
   return [...groups.values()].flatMap((readings): readonly NumberFact[] => {
-    const [first] = readings;
-    if (first === undefined) return [];
-    const { quantity, gaugeId } = first.row;
-    const { dimension, per, unit } = getQuantityEntry(quantity);
-    const series = readings.map(({ row }) => fromStored(row.value, dimension).value);
-    const budget = gaugeBudget(gauges, gaugeId, dimension);
-    const fact = {
-      quantity,
-      position: positionKey(first.place, per),
-      ...combine(budget),
-      budget,
-    };
-    return [
-      { ...fact, figure: 'mean', value: quantityOf(dimension, mean(series), unit) },
-      { ...fact, figure: 'smallest', value: quantityOf(dimension, smallest(series), unit) },
-      { ...fact, figure: 'largest', value: quantityOf(dimension, largest(series), unit) },
-    ];
+    const pooled = figuresOf(readings, gauges);
+    const sets = [...new Set(readings.map(({ row }) => row.set))].sort((a, b) => a - b);
+    if (sets.length < 2) return pooled;
+    const own = sets.map((set) => ({
+      set,
+      numbers: figuresOf(
+        readings.filter(({ row }) => row.set === set),
+        gauges,
+      ),
+    }));
+    return pooled.map((number) => ({
+      ...number,
+      sets: own.flatMap(({ set, numbers }) =>
+        numbers.filter(({ figure }) => figure === number.figure).map((one) => ({ set, ...one })),
+      ),
+    }));
   });
 };

@@ -11,6 +11,7 @@ import { getQuantityEntry } from '../../rulebook/quantity-catalogue';
  */
 export const isNearLimit = ({ requirement }: Clause, result: PositionResult): boolean => {
   if (['too-close', 'outside', 'does-not-comply'].includes(result.state)) return true;
+  if (result.wants !== undefined) return true;
   if (result.state !== 'within' || requirement?.kind !== 'limit') return false;
   const { dimension } = getQuantityEntry(requirement.quantity);
   const value = result.exact && parseWritten(result.exact, dimension);

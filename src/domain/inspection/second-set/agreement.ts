@@ -1,4 +1,4 @@
-import { assess } from '../../decision/assess';
+import { agrees, jointUncertainty } from '../../decision/agree';
 import { widthIn } from '../../quantity/convert';
 import type { Written } from '../../quantity/dimension';
 import { asciiIn, formatWidth } from '../../quantity/format';
@@ -19,21 +19,6 @@ export interface Agreement {
   readonly agree: boolean;
 }
 
-const joint = (first: Fact, second: Fact): number =>
-  Math.hypot(first.standardUncertainty, second.standardUncertainty);
-
-/** Whether a second value differs from a first by no more than their joint U. */
-export const agrees = (first: Fact, second: Fact): boolean =>
-  assess(
-    {
-      limits: { min: first.value, max: first.value },
-      decisionRule: { kind: 'guarded-rejection', guardFactor: '1' },
-      comparison: { method: 'absolute' },
-      fitRatio: '0',
-    },
-    { value: second.value, standardUncertainty: joint(first, second) },
-  ).complies === true;
-
 const SMALL: readonly QuantityName[] = [
   'tappet-clearance',
   'foot-less-body',
@@ -45,7 +30,7 @@ const agreementOf = (first: Fact, second: Fact): Agreement => {
   const { dimension, unit } = first.value;
   const small = unit === 'in' && SMALL.includes(first.quantity);
   const shown = small ? 'thou' : unit;
-  const wanted = joint(first, second) * 2;
+  const wanted = jointUncertainty(first, second) * 2;
   const step = Math.abs(widthIn(dimension, wanted, shown));
   // Two figures of U say enough of every value beside it.
   const places =

@@ -1,3 +1,4 @@
+import type { Finding } from '../finding';
 import { type Fact, factsOfSet, type SetResult } from '../measure/measure-position';
 import { type Agreement, agreementsOf } from './agreement';
 import type { SetChoice } from './choice';
@@ -13,7 +14,9 @@ export interface SecondSet {
   readonly agree: boolean;
 }
 
-const ownReadings = ({ set }: SetResult) => set.used.filter(({ row }) => row.set === set.set);
+/** The readings of a set itself, without a lifter that it took over. */
+export const ownReadings = ({ set }: SetResult) =>
+  set.used.filter(({ row }) => row.set === set.set);
 
 const takers = (result: SetResult): readonly string[] => [
   ...new Set(ownReadings(result).map(({ row }) => row.takenBy)),
@@ -47,3 +50,14 @@ export const standingFacts = (
   const chosen = sets.filter(({ set }) => set.set === choice?.stands);
   return (chosen.length > 0 ? chosen : sets).map(factsOfSet);
 };
+
+/** Clauses that do not pool the sets of a bore but hold each by itself, by number. */
+export const clausesHoldingEach = (
+  findings: readonly Pick<Finding, 'clause' | 'perPosition'>[],
+  bore: string,
+): readonly string[] =>
+  findings
+    .filter(({ perPosition }) =>
+      perPosition.some(({ position, sets }) => position === bore && sets !== undefined),
+    )
+    .map(({ clause }) => clause);

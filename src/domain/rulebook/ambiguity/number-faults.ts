@@ -1,9 +1,12 @@
 import type { Fault } from '../../failure';
 import type { LimitRequirement, Measurand, ReferenceAverageRequirement } from '../limit';
-import { getQuantityEntry, isQuantityName } from '../quantity-catalogue';
+import { getQuantityEntry, isQuantityName, type QuantityName } from '../quantity-catalogue';
 import { boundFaults } from './bound-faults';
 import { isNegative, isZero, read, when } from './check';
 import { heldFaults, measurandFaults } from './measurand-faults';
+
+/** Worked out from numbers of several places; no set of readings is theirs alone. */
+const NO_SETS: readonly QuantityName[] = ['displacement', 'compression-ratio'];
 
 const roundingFaults = (limit: LimitRequirement, pointer: string): readonly Fault[] => {
   const { dimension } = getQuantityEntry(limit.quantity);
@@ -44,6 +47,16 @@ export const limitFaults = (limit: LimitRequirement, pointer: string): readonly 
       !Number.isInteger(count) || count < 1,
       `${pointer}/sample/count`,
       'A sample is a whole number of one or more.',
+    ),
+    ...when(
+      limit.twoSets === 'each' && NO_SETS.includes(limit.quantity),
+      `${pointer}/twoSets`,
+      `${getQuantityEntry(limit.quantity).label} is worked out from other numbers: sets are taken of those, not of it.`,
+    ),
+    ...when(
+      limit.twoSets === 'each' && limit.per === 'car',
+      `${pointer}/twoSets`,
+      'A whole car is checked at the line, once: sets are taken of parts.',
     ),
   ];
 };

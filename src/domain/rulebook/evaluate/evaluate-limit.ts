@@ -4,6 +4,7 @@ import type { LimitRequirement } from '../limit';
 import { comparedValue, decisionOf } from './decision-of';
 import { type Facts, findNumber, type Position, positionsFor, wasOutOfReach } from './facts';
 import { heldNumber, missingAt } from './held-number';
+import { heldSets } from './held-sets';
 
 const sampled = (
   limit: LimitRequirement,
@@ -31,16 +32,19 @@ export const evaluateLimit = (
     const fact = findNumber(facts, limit.quantity, position.key, limit.figure);
     if (fact === undefined)
       return missingAt(position, wasOutOfReach(facts, limit.quantity, position.key));
-    return heldNumber({
+    const held = {
       position,
       fact,
-      compared: comparedValue(limit, fact.value),
       decision,
       ringCheck: limit.ringCheck,
       unit: limit.unit,
       figure: limit.figure,
       advisory,
       limit: words,
-    });
+    };
+    // A declaration is one statement, and no set of readings.
+    return limit.twoSets === 'each' && facts.origin === 'found'
+      ? heldSets({ ...held, compare: (value) => comparedValue(limit, value) })
+      : heldNumber({ ...held, compared: comparedValue(limit, fact.value) });
   });
 };

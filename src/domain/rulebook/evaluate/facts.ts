@@ -3,6 +3,15 @@ import type { Quantity } from '../../quantity/quantity';
 import type { Figure } from '../limit';
 import type { Per, QuantityName, RuleDimension } from '../quantity-catalogue';
 
+/** A number as one independent set gave it. */
+export interface SetNumber {
+  readonly set: number;
+  readonly value: Quantity<RuleDimension>;
+  readonly standardUncertainty: number;
+  readonly degreesOfFreedom?: number | null | undefined;
+  readonly budget?: readonly UncertaintyComponent[] | undefined;
+}
+
 /** One number, declared or measured, at one position. */
 export interface NumberFact {
   readonly quantity: QuantityName;
@@ -17,6 +26,8 @@ export interface NumberFact {
   readonly assumedGauge?: boolean | undefined;
   /** What the standard uncertainty is made of, where that is known. */
   readonly budget?: readonly UncertaintyComponent[] | undefined;
+  /** What each of two or more independent sets gave by itself; `value` is then pooled, or one of them. */
+  readonly sets?: readonly SetNumber[] | undefined;
   /** Why nothing can be stated from this value, neither way: `the gauge’s error is not known`. */
   readonly noStatement?: string | undefined;
   /** Why this value cannot support a breach, `the gauge was overdue for calibration`. */

@@ -48,7 +48,10 @@ export interface Held {
 }
 
 /** Why this number cannot support a breach under this clause; nothing where a ring check makes up for it. */
-const weaknessOf = ({ fact, ringCheck }: Held): string | undefined => {
+export const weaknessOf = ({
+  fact,
+  ringCheck,
+}: Pick<Held, 'fact' | 'ringCheck'>): string | undefined => {
   const { cannotSupportBreach, liftedBy } = fact;
   if (cannotSupportBreach === undefined || liftedBy === undefined || ringCheck === undefined)
     return cannotSupportBreach;

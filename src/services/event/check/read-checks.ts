@@ -50,7 +50,7 @@ export const readChecks = async (
     `select last.* from (
        select distinct on (k.entry_id, k.clause) k.id, k.entry_id as "entryId", k.clause, k.answer,
               k.value_text as "valueText", k.value_unit as "valueUnit", g.code as gauge, k.state,
-              k.sentence, p.name as by,
+              k.sentence, k.reason as "correctedBecause", p.name as by,
               to_char(k.taken_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS"Z"') as at
        from record.event_check k join public.person p on p.id = k.taken_by
        left join public.gauge g on g.series_id = k.series_id and g.id = k.gauge_id

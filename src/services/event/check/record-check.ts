@@ -19,6 +19,7 @@ import { openInspections } from '../open-inspections';
 import { keepCheck } from './keep-check';
 import { readAnswer } from './read-answer';
 import { rulesByClass } from './read-checks';
+import { readCorrection } from './read-correction';
 
 const refuse = (pointer: string, detail: string) => fail(invalid([{ pointer, detail }]));
 
@@ -30,7 +31,8 @@ const gaugesOf = async (em: EntityManager, { seriesId, id }: Event) => {
 
 /**
  * Keeps one check of one car without teardown, judged by the rules in force. A mandatory clause that is
- * not kept opens an inspection in the same act: nobody is excluded by a check at the line.
+ * not kept opens an inspection in the same act: nobody is excluded by a check at the line. One that was
+ * written down under a wrong gauge is said again under the right one, with the reason; both rows stay.
  */
 export const recordCheck = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
@@ -90,7 +92,14 @@ export const recordCheck = async (
         keep({ answer: '', state: 'taken-back', sentence: '', reason });
         return ok({ state: 'taken-back', sentence: '', inspection: before?.id ?? null });
       }
-      const read = readAnswer(found.rules, asked);
+      const { correction } = asked;
+      const again =
+        correction === undefined
+          ? ok(undefined)
+          : await readCorrection(em, { seriesId, eventId }, { ...asked, correction });
+      if (!again.ok) return again;
+      const takenAt = again.value?.takenAt ?? at.toISOString();
+      const read = readAnswer(found.rules, { ...asked, value: again.value?.value ?? asked.value });
       if (!read.ok) return read;
       const { answer, value } = read.value;
       const gauges = await gaugesOf(em, event);
@@ -101,7 +110,7 @@ export const recordCheck = async (
         {
           ...asked,
           takenBy: actor.personId,
-          takenAt: at.toISOString(),
+          takenAt,
           carNumber: entry.carNumber,
           answer: value === undefined ? answer : undefined,
           value,
@@ -114,8 +123,9 @@ export const recordCheck = async (
         value_exact: String(value.exact),
         gauge_id: asked.gaugeId,
       };
-      keep({ answer, ...onGauge, state: judged.state, sentence: judged.sentence, reason: '' });
       const { state, sentence } = judged;
+      const reason = again.value?.reason ?? '';
+      keep({ answer, ...onGauge, state, sentence, reason, taken_at: takenAt });
       if (judged.pass !== false || before !== null)
         return ok({ state, sentence, inspection: before?.id ?? null });
       const inspectionId = deps.random.uuid();

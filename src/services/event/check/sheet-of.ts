@@ -9,7 +9,9 @@ export interface CarOnSheet {
   readonly carNumber: string;
   /** `inspection`: what is decided about it is decided there. */
   readonly outcome: 'passed' | 'inspection';
-  readonly checks: readonly Omit<Checked, 'entryId' | 'id'>[];
+  readonly checks: readonly (Omit<Checked, 'entryId' | 'id' | 'correctedBecause'> & {
+    readonly correctedBecause?: string;
+  })[];
 }
 
 export interface EventSheetOfChecks {
@@ -54,7 +56,10 @@ export const sheetOf = (shown: Omit<ChecksShown, 'records'>): EventSheetOfChecks
     cars.push({
       ...car,
       outcome: inspectionId === null ? 'passed' : 'inspection',
-      checks: here.map(({ entryId: _, id: __, ...check }) => check),
+      checks: here.map(({ entryId: _, id: __, correctedBecause, ...check }) => ({
+        ...check,
+        ...(correctedBecause === '' ? {} : { correctedBecause }),
+      })),
     });
   }
   const names = new Map(shown.cars.map(({ classId, className }) => [classId, className]));

@@ -24,7 +24,7 @@ export interface ReliedReport {
   } | null;
 }
 
-/** A check without teardown by the gauge. */
+/** A check without teardown that stands on the gauge: neither taken back nor corrected to another. */
 export interface ReliedCheck {
   readonly carNumber: string;
   readonly clause: string;
@@ -118,13 +118,14 @@ export const lookBack = async (
       .map(({ inspectionId, carNumber }) => ({ inspectionId, carNumber })),
     checks: await em.execute<ReliedCheck[]>(
       `select e.car_number as "carNumber", k.clause, v.name as event, k.state
-       from record.event_check k
+       from (select distinct on (entry_id, clause) * from record.event_check where series_id = ?
+             order by entry_id, clause, received_at desc, id desc) k
        join public.entry e on e.series_id = k.series_id and e.id = k.entry_id
        join public.event v on v.series_id = k.series_id and v.id = k.event_id
        where k.series_id = ? and k.gauge_id = ? and k.taken_at > ?::timestamptz
-         and k.taken_at <= ?::timestamptz
+         and k.taken_at <= ?::timestamptz and k.state <> 'taken-back'
        order by k.taken_at, k.id`,
-      window,
+      [seriesId, ...window],
     ),
   };
 };

@@ -1,9 +1,10 @@
 import type { SentRow } from '@/contracts/inspection/rows';
 import type { JudgedReading } from '@/domain/inspection/capture/readings-that-count';
 import { positionKey } from '@/domain/inspection/capture/rows';
-import { secondSetsWanted } from '@/domain/inspection/second-set/wanted';
+import { secondSetsWanted, withOthers } from '@/domain/inspection/second-set/wanted';
 import { boreName } from '@/domain/tappet/layout/bore-layout';
 import { keyOf } from '../../sheet/flow/asked';
+import { setToTake } from '../../sheet/flow/set-to-take';
 import { strikeRow } from '../../sheet/rows';
 import type { Cursor } from '../../sheet/sheet';
 import type { PanelBesideProps } from './PanelBeside';
@@ -15,11 +16,15 @@ interface MorePanelProps extends PanelBesideProps {
   readonly done: (rows: readonly SentRow[], to?: Partial<Cursor>) => Promise<void>;
 }
 
+const ORDINALS: Readonly<Record<number, string>> = { 2: 'second', 3: 'third' };
+
 /** Everything about this bore that is wanted once in a while. */
 export const MorePanel = ({ bay, hands, open, onSecond, onRedo, here, done }: MorePanelProps) => {
   const { sheet, part, position, cursor, setUp, assessment, judged, rows } = bay;
   const bore = boreName(position);
-  const wanted = secondSetsWanted(assessment).includes(bore);
+  const all = secondSetsWanted(assessment);
+  const wanted = all.find((one) => one.bore === bore);
+  const set = part === undefined ? 2 : setToTake({ ...bay, part });
   const full = part && `${part.key} ${keyOf(part, position)}`;
   const failed = assessment.runs.filter((run) => !run.held && run.bores.length > 0);
   const hot = new Set(
@@ -65,9 +70,9 @@ export const MorePanel = ({ bay, hands, open, onSecond, onRedo, here, done }: Mo
         here.length > 0 &&
         cursor.set === 1 &&
         button(
-          wanted ? 'Independent second set (wanted here)' : 'Independent second set',
-          onSecond,
-          wanted ? 'btn btn-primary' : 'btn',
+          `Independent ${ORDINALS[set] ?? `${set}th`} set${wanted === undefined ? '' : ' (wanted here)'}`,
+          () => onSecond(withOthers(all, { bore, set })),
+          wanted === undefined ? 'btn' : 'btn btn-primary',
         )}
       {full !== undefined &&
         (setUp.form === 'plan' || setUp.form === 'screening') &&

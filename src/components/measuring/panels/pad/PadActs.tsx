@@ -8,7 +8,6 @@ interface PadActsProps {
   readonly bay: Bay;
   readonly capture: Capture;
   readonly onStrike: () => void;
-  readonly onMore: () => void;
   readonly onProblem: (words: string) => void;
 }
 
@@ -18,8 +17,8 @@ export const picturesOf = ({ rows, position }: Bay): number =>
     (row) => row.kind === 'photograph' && positionKey(row.place, 'bore') === boreName(position),
   ).length;
 
-/** Under the keys: strike, photograph in two taps, and everything that is wanted once in a while. */
-export const PadActs = ({ bay, capture, onStrike, onMore, onProblem }: PadActsProps) => {
+/** Under the keys: strike, and photograph in two taps. */
+export const PadActs = ({ bay, capture, onStrike, onProblem }: PadActsProps) => {
   const { position, part } = bay;
   const count = picturesOf(bay);
   const keep = async (file: File) => {
@@ -57,9 +56,6 @@ export const PadActs = ({ bay, capture, onStrike, onMore, onProblem }: PadActsPr
           }}
         />
       </label>
-      <button className="btn" type="button" onClick={onMore}>
-        More
-      </button>
     </>
   );
 };

@@ -1,6 +1,8 @@
+import { useState } from 'react';
 import type { SentRow } from '@/contracts/inspection/rows';
 import type { JudgedReading } from '@/domain/inspection/capture/readings-that-count';
 import { isStrikeReason, STRIKE_REASONS } from '@/domain/inspection/capture/strike-reasons';
+import type { SecondAsked } from '@/domain/inspection/second-set/asked';
 import { boreName } from '@/domain/tappet/layout/bore-layout';
 import type { Bay, Hands } from '../../bay';
 import { takenAt } from '../../sheet/flow/taken';
@@ -17,7 +19,7 @@ export interface PanelBesideProps {
   readonly bay: Bay;
   readonly hands: Hands;
   readonly open: (panel: PadPanel | undefined) => void;
-  readonly onSecond: () => void;
+  readonly onSecond: (asked: SecondAsked) => void;
   readonly onRedo: (runId: string) => void;
   /** Whether there is a keypad to go back to. */
   readonly closable: boolean;
@@ -39,19 +41,24 @@ const TITLES: Readonly<Record<PadPanel, string>> = {
 };
 
 /** The readings of the part here, the latest last. */
-const readHere = ({ part, judged, position, cursor }: Bay): readonly JudgedReading[] =>
-  part === undefined
-    ? []
-    : [...takenAt(judged, part, position, cursor.set).values()].sort((a, b) =>
-        a.row.occurredAt < b.row.occurredAt ? -1 : 1,
-      );
+const readHere = ({ part, judged, position, cursor }: Bay): readonly JudgedReading[] => {
+  if (part === undefined) return [];
+  const here = new Set(takenAt(judged, part, position, cursor.set).values());
+  return judged.filter((reading) => here.has(reading));
+};
+
+const stillCounts = ({ judged }: Bay, { row }: JudgedReading): boolean =>
+  judged.some((one) => one.row.id === row.id && one.state === 'counts');
 
 /** What stands in the keypad's place while something else than a number is being said. */
 export const PanelBeside = (props: PanelBesideProps) => {
   const { panel, bay, hands, open } = props;
   const { part, position, positions, cursor, judged } = bay;
-  const here = readHere(bay);
-  const last = here.at(-1);
+  // As it was when the panel was opened: another tablet's reading does not slip under the finger.
+  const [seen] = useState(() => readHere(bay));
+  const here = seen.filter((reading) => stillCounts(bay, reading));
+  const last = here.findLast(({ row }) => bay.whose(row) === undefined) ?? here.at(-1);
+  const by = last && bay.whose(last.row);
   const done = async (rows: readonly SentRow[], to: Partial<Cursor> = {}) => {
     if (await hands.record(rows)) {
       hands.go({ cell: undefined, ...to });
@@ -76,7 +83,7 @@ export const PanelBeside = (props: PanelBesideProps) => {
               <b className="num">
                 {last.row.value.text} {last.row.value.unit}
               </b>
-              . It stays on record, with the reason.
+              {by === undefined ? '' : `, read by ${by}`}. It stays on record, with the reason.
             </p>
             {Object.entries(STRIKE_REASONS)
               .filter(([reason]) => reason !== 'zero-moved')

@@ -69,15 +69,26 @@ const Text = ({
   );
 };
 
+const checkKey = ({ clause, position }: CheckAsk): string => `${clause.number} ${position}`;
+
 /** The check that comes first here: of this bore, then of the engine, then of the next bore. */
-const nextCheck = ({ checks, position }: Bay, bore: string): CheckAsk | undefined => {
-  const open = checks.filter(({ answer }) => answer === undefined);
+const nextCheck = (
+  { checks, position }: Bay,
+  bore: string,
+  given: ReadonlySet<string>,
+): CheckAsk | undefined => {
+  const open = checks.filter((one) => one.answer === undefined && !given.has(checkKey(one)));
   return (
     open.find((one) => one.position === bore) ??
     open.find((one) => one.position === 'engine' || one.position === 'car') ??
     open.find((one) => one.position === String(position.cylinder)) ??
     open[0]
   );
+};
+
+const whereWords = ({ position }: CheckAsk): string => {
+  if (position === 'engine' || position === 'car') return 'whole engine';
+  return /^\d+$/.test(position) ? `cylinder ${position}` : position;
 };
 
 const positionFor = ({ positions, position }: Bay, key: string): BorePosition =>
@@ -101,7 +112,15 @@ export const ChecksPanel = ({
     (one) =>
       [bore, 'engine', 'car'].includes(one.position) || one.position === String(position.cylinder),
   );
-  const current = nextCheck(bay, bore);
+  // Answered at this tablet, though it may not have gone round yet.
+  const [given, setGiven] = useState<ReadonlySet<string>>(new Set());
+  // Until this tablet has answered it a check stays under the keys, whoever else answers it meanwhile.
+  const [held, hold] = useState<string>();
+  const kept = here.find((one) => held === `${bore} ${checkKey(one)}` && !given.has(checkKey(one)));
+  const current = kept ?? nextCheck(bay, bore, given);
+  const shown = current === undefined || here.includes(current) ? here : [...here, current];
+  const holds = current && `${bore} ${checkKey(current)}`;
+  useEffect(() => hold(holds), [holds]);
   const declaredOf = ({ subject, position: at }: CheckAsk) =>
     assessment.facts.declared && findAnswer(assessment.facts.declared, subject, at);
   const busy = useRef(false);
@@ -110,7 +129,11 @@ export const ChecksPanel = ({
     if (check === undefined || !('per' in check)) return false;
     const per = check.per === 'lifter' ? 'bore' : check.per;
     const there = positionFor(bay, at);
-    return hands.record([checkRow(placeOf(there, per), subject, value)]);
+    const key = checkKey({ clause, subject, position: at, answer: value });
+    setGiven((before) => new Set([...before, key]));
+    const done = await hands.record([checkRow(placeOf(there, per), subject, value)]);
+    if (!done) setGiven((before) => new Set([...before].filter((one) => one !== key)));
+    return done;
   };
   /** A key answers the check that comes first, and goes on to where the next one is. */
   const answer = async (ask: CheckAsk, value: string) => {
@@ -119,7 +142,9 @@ export const ChecksPanel = ({
       busy.current = false;
       return;
     }
-    const rest = checks.filter((one) => one !== current && one.answer === undefined);
+    const rest = checks.filter(
+      (one) => one !== ask && one.answer === undefined && !given.has(checkKey(one)),
+    );
     const more = rest.some((one) => one.position === bore || one.position === 'engine');
     const [next] = rest;
     if (!more && next !== undefined) hands.go({ bore: boreName(positionFor(bay, next.position)) });
@@ -147,7 +172,7 @@ export const ChecksPanel = ({
   return (
     <div className="grid gap-5">
       <h2>Checks at {bore}, and for the engine</h2>
-      {here.map((ask) => {
+      {shown.map((ask) => {
         const check = ask.clause.requirement;
         if (check === undefined) return null;
         const answers = answersOf(check, declaredOf(ask));
@@ -159,13 +184,7 @@ export const ChecksPanel = ({
           >
             <legend>
               <span className="finding-clause">{ask.clause.number}</span> {questionOf(check)}{' '}
-              <span className="note">
-                {ask.position === bore
-                  ? bore
-                  : ask.position === 'engine' || ask.position === 'car'
-                    ? 'whole engine'
-                    : `cylinder ${ask.position}`}
-              </span>
+              <span className="note">{whereWords(ask)}</span>
             </legend>
             <div className="actions">
               {answers.map(({ value, label }, at) => (

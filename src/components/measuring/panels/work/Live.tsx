@@ -1,5 +1,6 @@
 import { displayNumber } from '@/components/look/ReadingValue';
 import { LiveReading } from '@/components/tappet/BorePanels';
+import type { JudgedReading } from '@/domain/inspection/capture/readings-that-count';
 import { positionKey } from '@/domain/inspection/capture/rows';
 import { boreName } from '@/domain/tappet/layout/bore-layout';
 import type { Bay } from '../../bay';
@@ -8,12 +9,15 @@ import { aloud, type Typed, typedNumber } from '../../sheet/keys/typing';
 import { cellKey, cellWords, type Part } from '../../sheet/parts';
 import { isComparative } from '../../sheet/set-up';
 
-const lastOf = (bay: Bay, part: Part) => {
-  const here = [...takenAt(bay.judged, part, bay.position, bay.cursor.set).values()].at(-1);
-  return (
-    here ??
-    bay.judged.findLast(({ row, state }) => state === 'counts' && row.quantity === part.quantity)
+/** The last reading here; else the last of this part that was taken at this tablet, else anybody's. */
+export const lastOf = (bay: Bay, part: Part): JudgedReading | undefined => {
+  const { judged, position, cursor, whose } = bay;
+  const here = new Set(takenAt(judged, part, position, cursor.set).values());
+  if (here.size > 0) return judged.findLast((reading) => here.has(reading));
+  const read = judged.filter(
+    ({ row, state }) => state === 'counts' && row.quantity === part.quantity,
   );
+  return read.findLast(({ row }) => whose(row) === undefined) ?? read.at(-1);
 };
 
 /** The number that is being typed, or the last one for the read-back. */
@@ -52,16 +56,22 @@ export const Live = ({
       cursor.set,
     ).values(),
   ].at(-1);
+  const by = last && bay.whose(last.row);
+  const meanwhile =
+    typed.digits === '' || key === undefined || zero !== undefined
+      ? undefined
+      : takenAt(judged, part, position, cursor.set).get(key);
+  const filledBy = meanwhile && bay.whose(meanwhile.row);
   const against =
     zero !== undefined
       ? 'as the dial stands'
       : last !== undefined
-        ? elsewhere
-          ? `last value, ${at}`
-          : 'last value'
-        : comparative && lifter
-          ? `lifter ${lifter.row.value.text} ${lifter.row.value.unit}`
-          : undefined;
+        ? ['last value', elsewhere ? at : undefined, by].filter(Boolean).join(', ')
+        : filledBy !== undefined
+          ? `${filledBy} has read this too: yours is a repeat`
+          : comparative && lifter
+            ? `lifter ${lifter.row.value.text} ${lifter.row.value.unit}`
+            : undefined;
   return (
     <LiveReading
       place={words}

@@ -8,7 +8,7 @@ import { boreName } from '@/domain/tappet/layout/bore-layout';
 import type { Bay } from '../../bay';
 import { keyOf } from '../../sheet/flow/asked';
 import type { Part } from '../../sheet/parts';
-import { nearWords, resultAt, shownResult } from '../../sheet/shown';
+import { nearWords, placesRead, resultAt, shownResult } from '../../sheet/shown';
 
 const tone = {
   outside: 'outside',
@@ -24,10 +24,12 @@ export const Result = ({ bay, part }: { readonly bay: Bay; readonly part: Part }
   const { clause } = part;
   const result = resultAt(assessment.findings, clause?.number, keyOf(part, position));
   if (clause === undefined || result === undefined) return null;
-  const shown = shownResult(clause, result);
+  const finding = assessment.findings.find((one) => one.clause === clause.number);
+  const most = finding && placesRead(clause, finding, bay.sheet.gauges);
+  const shown = shownResult(clause, result, most);
   const status = result.state in tone ? tone[result.state as keyof typeof tone] : 'set-aside';
   const word = wordOfState(result.state);
-  const wanted = secondSetsWanted(assessment).includes(boreName(position));
+  const wanted = secondSetsWanted(assessment).some(({ bore }) => bore === boreName(position));
   return (
     <>
       {shown !== undefined && (
@@ -48,7 +50,7 @@ export const Result = ({ bay, part }: { readonly bay: Bay; readonly part: Part }
           {result.state === 'no-statement' || shown === undefined
             ? result.sentence
             : nearWords(shown)}
-          {wanted && ' An independent second set follows the closing zero, this set hidden.'}
+          {wanted && ' An independent set follows the closing zero, what was read before hidden.'}
         </p>
       </Caution>
     </>

@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { displayNumber } from '@/components/look/ReadingValue';
 import type { BoreResult } from '@/domain/inspection/assess-inspection';
+import { clausesHoldingEach } from '@/domain/inspection/second-set/second-sets';
 import { getQuantityEntry } from '@/domain/rulebook/quantity-catalogue';
 import { boreName } from '@/domain/tappet/layout/bore-layout';
 import type { Bay, Hands } from '../../bay';
@@ -28,7 +29,8 @@ export const SecondSet = ({
   const [stands, setStands] = useState<Stands>('pooled');
   const [reason, setReason] = useState('');
   const { choice, secondSets } = result;
-  const [second] = secondSets;
+  const second = secondSets.at(-1);
+  const each = clausesHoldingEach(bay.assessment.findings, boreName(bay.position));
   if (second === undefined) return null;
   const keep = () =>
     void hands.record([standsRow(placeOf(bay.position, 'bore'), stands, reason.trim())]);
@@ -77,6 +79,12 @@ export const SecondSet = ({
           ))}
         </tbody>
       </table>
+      {each.length > 0 && (
+        <p>
+          {each.length === 1 ? 'Clause' : 'Clauses'} {each.join(', ')}: each set by itself, whatever
+          is chosen here.
+        </p>
+      )}
       {choice === undefined ? (
         <p className="note">Both count together until somebody says which stands.</p>
       ) : (

@@ -7,8 +7,10 @@ import { limitWords } from '@/domain/rulebook/describe';
 import { boreName } from '@/domain/tappet/layout/bore-layout';
 import type { Bay, Hands } from '../../bay';
 import { askAt } from '../../sheet/flow/asked';
+import { begunSet } from '../../sheet/flow/set-to-take';
 import { takenAt } from '../../sheet/flow/taken';
 import type { Typed } from '../../sheet/keys/typing';
+import { stateNoteOf } from '../../sheet/on-screen';
 import { cellKey } from '../../sheet/parts';
 import { isComparative } from '../../sheet/set-up';
 import { isSetComplete } from '../../use-bay';
@@ -106,7 +108,8 @@ export const WorkPanel = (props: WorkPanelProps) => {
   const cell = step?.kind === 'cell' ? step.cell : cursor.cell;
   const complete = isSetComplete(bay);
   const result = assessment.bores.find(({ key }) => key === boreName(position));
-  const notOpen = sheet.state !== 'open' && sheet.state !== 'closed';
+  const stateNote = stateNoteOf(sheet);
+  const begun = cursor.set === 1 ? begunSet({ ...bay, part }) : undefined;
   return (
     <div className="work gap-2 justify-start">
       {switcher}
@@ -147,12 +150,23 @@ export const WorkPanel = (props: WorkPanelProps) => {
         </Caution>
       )}
       {!bay.blind && step?.kind !== 'closed' && complete && <Result bay={bay} part={part} />}
-      {!bay.blind && result !== undefined && result.secondSets.length > 0 && (
-        <SecondSet key={boreName(position)} bay={bay} hands={hands} result={result} />
+      {!bay.blind && begun !== undefined && (
+        <Caution status="set-aside" title={`Set ${begun.set} is being taken`}>
+          <p>
+            {begun.taken} of {begun.of} read
+            {begun.by === undefined ? '' : ` by ${begun.by}`}. Both are shown once it is complete.
+          </p>
+        </Caution>
       )}
-      {notOpen && !complete && (
-        <Caution title="This inspection is not open">
-          <p>What is entered now is kept and does not count.</p>
+      {!bay.blind &&
+        begun === undefined &&
+        result !== undefined &&
+        result.secondSets.length > 0 && (
+          <SecondSet key={boreName(position)} bay={bay} hands={hands} result={result} />
+        )}
+      {stateNote !== undefined && (
+        <Caution title={stateNote.title}>
+          <p>{stateNote.words}</p>
         </Caution>
       )}
     </div>

@@ -29,6 +29,8 @@ export interface Standing {
   readonly judged: readonly JudgedReading[];
   readonly outOfReach: ReadonlySet<string>;
   readonly asked: Asked;
+  /** The bores of an independent set, while one is taken. */
+  readonly second: readonly string[];
 }
 
 /** The bores that one zero serves: a bank by a ring, one bore by its own lifter. */
@@ -74,7 +76,11 @@ export const nextStep = (standing: Standing): Step => {
     const rest = nextPosition(judged, part, inRun, here, outOfReach, asked);
     return rest === undefined ? { kind: 'closing' } : { kind: 'bore', to: rest };
   }
-  if (cursor.set > 1) return { kind: 'both' };
+  if (cursor.set > 1) {
+    const near = positions.filter((one) => standing.second.includes(boreName(one)));
+    const next = nextPosition(judged, part, near, here, outOfReach, asked, cursor.set);
+    return next === undefined ? { kind: 'both' } : { kind: 'bore', to: next };
+  }
   const to = nextPosition(judged, part, positions, here, outOfReach, asked);
   return to === undefined ? nextPart(standing) : { kind: 'bore', to };
 };

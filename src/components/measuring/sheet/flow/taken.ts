@@ -68,12 +68,13 @@ export const nextPosition = (
   from: string,
   outOfReach: ReadonlySet<string>,
   asked: Asked,
+  set = 1,
 ): BorePosition | undefined => {
   const at = positions.findIndex((position) => boreName(position) === from);
   const round = [...positions.slice(at + 1), ...positions.slice(0, at + 1)];
   return onceEach(part, round).find(
     (position) =>
       (part.per !== 'bore' || !outOfReach.has(boreName(position))) &&
-      !isComplete(judged, part, position, 1, asked),
+      !isComplete(judged, part, position, set, asked),
   );
 };

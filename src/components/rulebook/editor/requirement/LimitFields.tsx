@@ -18,6 +18,11 @@ const BOUNDS = [
   { value: 'nominal', label: 'A nominal with its tolerance' },
 ];
 
+const TWO_SETS = [
+  { value: 'pooled', label: 'Are pooled: their mean counts' },
+  { value: 'each', label: 'Each stands by itself: a breach needs both' },
+];
+
 export const LimitFields = ({ value, onChange }: Props<LimitRequirement>) => {
   const { dimension } = getQuantityEntry(value.quantity);
   const { nominal, unit } = value;
@@ -98,6 +103,15 @@ export const LimitFields = ({ value, onChange }: Props<LimitRequirement>) => {
       </Group>
       <Group at="/requirement/held" label="How it is decided">
         <HeldFields value={value} onChange={onChange} />
+        {value.per !== 'car' && (
+          <SelectField
+            at="/requirement/twoSets"
+            label="Two sets of one place"
+            value={value.twoSets ?? 'pooled'}
+            options={TWO_SETS}
+            onChange={(way) => onChange({ ...value, twoSets: way === 'each' ? way : undefined })}
+          />
+        )}
       </Group>
     </>
   );
