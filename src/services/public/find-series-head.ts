@@ -19,6 +19,7 @@ export interface BulletinListed {
   readonly title: string;
   readonly className: string;
   readonly classSlug: string;
+  /** Nothing while a bulletin waits for an event that is not announced. */
   readonly inForceAt: string | null;
 }
 
@@ -107,7 +108,10 @@ export const listBulletins = async (
 ): Promise<readonly BulletinListed[]> => {
   const rows = await deps.db.execute<(BulletinListed & { inForceAt: Date | null })[]>(
     `select p.kind, p.number, p.title, c.name as "className", c.slug as "classSlug",
-            coalesce(p.in_force_at, p.published_at) as "inForceAt"
+            coalesce(p.in_force_at, case when p.kind <> 'bulletin' then p.published_at else
+              (select min(e.starts_at) from public.event e
+               where e.series_id = c.series_id and e.season_id = c.season_id
+                 and e.starts_at >= p.published_at) end) as "inForceAt"
      from record.rule_publication p
      join public.class c on c.series_id = p.series_id and c.id = p.class_id
      where p.series_id = ? and p.kind in ('bulletin', 'clarification', 'withdrawal', 'edition')

@@ -2,6 +2,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { readMoment } from '@/contracts/rulebook/moment';
 import type { BulletinContent } from '@/contracts/rulebook/read-rulebook';
 import { toHex } from '@/domain/ledger/bytes';
+import { listBulletins } from '@/services/public/find-series-head';
 import { findRules } from '@/services/rulebook/find-rules';
 import { grantWaiver } from '@/services/rulebook/ruling/grant-waiver';
 import { publishClarification } from '@/services/rulebook/ruling/publish-clarification';
@@ -143,6 +144,11 @@ describe('the rules in force', () => {
     must(await publish(world, office, change));
     const start = Date.parse('2026-07-18T23:00:00.000Z');
     expect(await wordsAt(office, start)).toBe('Lifter bores are not bushed.');
+    const onTheBoard = async () => {
+      const listed = await listBulletins(world.ports(), office.seriesId);
+      return listed.find(({ kind }) => kind === 'bulletin')?.inForceAt;
+    };
+    expect(await onTheBoard()).toBeNull();
     await world.ports().db.execute(
       `insert into public.event (series_id, id, season_id, number, slug, name, track, zone, starts_at, ends_at, protest_minutes)
          values (?, ?, ?, 1, 'one', 'One', 'Quarrel Fen Oval', ?, ?, ?, 30)`,
@@ -157,5 +163,6 @@ describe('the rules in force', () => {
     );
     expect(await wordsAt(office, start - 1)).toBe('Lifter bores are not bushed.');
     expect(await wordsAt(office, start)).toBe('Bores are as cast.');
+    expect(await onTheBoard()).toBe(new Date(start).toISOString());
   });
 });
