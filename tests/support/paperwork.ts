@@ -91,7 +91,6 @@ export const fullDraft = (change: Readonly<Record<string, string>> = {}): Paperw
       ]),
     },
   ],
-  mapping: {},
   note: '',
 });
 

@@ -58,15 +58,15 @@ export const columnMeaning = z.discriminatedUnion('kind', [
 
 export const mapping = z.record(line, columnMeaning);
 
-/** A draft as it is typed: any text may stand in it. */
-export const paperworkDraft = z.strictObject({
+const typedDraft = z.strictObject({
   answers: z
     .array(z.strictObject({ subject: line, position: line, typed, unit: z.optional(line) }))
     .check(z.maxLength(600)),
   sheets: z
     .array(z.strictObject({ subject: line, cells: z.array(cell).check(z.maxLength(2_000)) }))
     .check(z.maxLength(20)),
-  mapping,
+  // Pages that were open before still send what was said about headings; that is kept by itself now.
+  mapping: z.optional(z.unknown()),
   note: z.string().check(z.maxLength(2_000, 'At most 2,000 characters.')),
   replies: z.optional(
     z
@@ -79,3 +79,9 @@ export const paperworkDraft = z.strictObject({
       .check(z.maxLength(100)),
   ),
 });
+
+/** A draft as it is typed: any text may stand in it. */
+export const paperworkDraft = z.pipe(
+  typedDraft,
+  z.transform(({ mapping: _said, ...draft }) => draft),
+);

@@ -1,4 +1,3 @@
-import type { Mapping } from './sheet/find-columns';
 import type { SheetCell } from './sheet/sheet-cell';
 import type { ItemRemark } from './state';
 
@@ -21,14 +20,12 @@ export interface DraftSheet {
 export interface PaperworkDraft {
   readonly answers: readonly DraftAnswer[];
   readonly sheets: readonly DraftSheet[];
-  /** What somebody said about headings that explain nothing, for the next file. */
-  readonly mapping: Mapping;
   readonly note: string;
   /** Answers to remarks that were not followed, by item. */
   readonly replies?: readonly ItemRemark[] | undefined;
 }
 
-export const EMPTY_DRAFT: PaperworkDraft = { answers: [], sheets: [], mapping: {}, note: '' };
+export const EMPTY_DRAFT: PaperworkDraft = { answers: [], sheets: [], note: '' };
 
 export const findTyped = (
   draft: PaperworkDraft,

@@ -43,10 +43,7 @@ export const typedIn = (field: DraftField | undefined): string => {
 };
 
 /** The draft that these fields make; sheets stand in the order in which their first value comes. */
-export const draftFrom = (
-  fields: readonly DraftField[],
-  mapping: PaperworkDraft['mapping'],
-): PaperworkDraft => {
+export const draftFrom = (fields: readonly DraftField[]): PaperworkDraft => {
   const sheets = new Map<string, SheetCell[]>();
   for (const field of fields) {
     if (field.kind !== 'cell') continue;
@@ -56,7 +53,6 @@ export const draftFrom = (
   return {
     answers: fields.flatMap((field) => (field.kind === 'answer' ? [field.answer] : [])),
     sheets: [...sheets].map(([subject, cells]) => ({ subject, cells })),
-    mapping,
     note: fields.flatMap((field) => (field.kind === 'note' ? [field.text] : [])).join(''),
     ...(replies.length > 0 && { replies }),
   };

@@ -63,5 +63,5 @@ export const mergeDrafts = (
     const field = (side === 'mine' ? m : t).get(key);
     return field === undefined ? [] : [field];
   });
-  return draftFrom(fields, { ...theirs.mapping, ...mine.mapping });
+  return draftFrom(fields);
 };
