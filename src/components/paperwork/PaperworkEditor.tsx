@@ -39,8 +39,8 @@ const Editor = (props: PaperworkProps) => {
     [files.files],
   );
   const facts = useMemo(
-    () => declaredFacts(declare(settled, form, layout, kept)),
-    [settled, form, layout, kept],
+    () => declaredFacts(declare(settled, form, layout, kept), rules),
+    [settled, form, layout, kept, rules],
   );
   const results = useMemo(
     () => evaluateRules(rules, withUsualUncertainty(facts), { carNumber, engineId }),
@@ -108,6 +108,7 @@ const Editor = (props: PaperworkProps) => {
                 layout={layout}
                 draft={draft}
                 files={files}
+                rules={rules}
                 results={results}
                 remarks={remarks}
                 onChange={change}

@@ -37,7 +37,7 @@ export const requirement = z.discriminatedUnion('kind', [
   z.strictObject({
     kind: z.literal('sheet'),
     subject: key,
-    sheet: z.enum(['lifters', 'engine', 'camshaft', 'weights', 'other']),
+    sheet: z.enum(['lifters', 'engine', 'camshaft', 'lift-table', 'weights', 'other']),
     title: short,
   }),
   z.strictObject({ kind: z.literal('seal'), subject: key, place: short, count: whole }),

@@ -3,7 +3,10 @@ import { derivedNumbers } from '../inspection/measure/derived-numbers';
 import { fromStored } from '../quantity/stored';
 import type { AnswerFact, Facts, NumberFact } from '../rulebook/evaluate/facts';
 import { getQuantityEntry, isQuantityName } from '../rulebook/quantity-catalogue';
+import type { RulesInForce } from '../rulebook/rules-in-force';
 import type { BoreLayout } from '../tappet/layout/bore-layout';
+import { lobeOf } from './cam/cam-place';
+import { lobeFacts } from './cam/lobe-facts';
 import type { DeclaredAnswer, PaperworkDocument } from './document';
 import { numbersFrom } from './sheet-numbers';
 
@@ -33,14 +36,21 @@ const answered = (answer: DeclaredAnswer): readonly AnswerFact[] =>
 
 /**
  * A declaration as the rules evaluate it, and as an inspection compares with it (`Facts.declared`).
- * Throws on a number that was never one: what is handed in has been read before.
+ * Throws on a number that was never one: what is handed in has been read before. The rules say at which
+ * lift a cam table gives a duration.
  */
-export const declaredFacts = (paperwork: Declared): Facts => {
-  const positions = positionsIn(paperwork.engine.layout);
-  const numbers = [
+export const declaredFacts = (
+  paperwork: Declared,
+  rules?: Pick<RulesInForce, 'clauses'>,
+): Facts => {
+  const { layout } = paperwork.engine;
+  const positions = positionsIn(layout);
+  const readings = paperwork.sheets.flatMap((sheet) => sheet.readings);
+  const written = [
     ...paperwork.answers.flatMap(answeredNumber),
-    ...numbersFrom(paperwork.sheets.flatMap((sheet) => sheet.readings)),
+    ...numbersFrom(readings.filter((reading) => lobeOf(reading) === undefined)),
   ];
+  const numbers = [...written, ...lobeFacts(readings, layout, written, rules)];
   return {
     origin: 'declared',
     positions,

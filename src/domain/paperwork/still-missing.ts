@@ -2,10 +2,12 @@ import type { PaperworkForm, Question, SheetForm, Shot } from '../rulebook/form/
 import type { RulesInForce } from '../rulebook/rules-in-force';
 import type { BoreLayout } from '../tappet/layout/bore-layout';
 import { isAnswered } from './answers';
+import { LOBES, lobeOf } from './cam/cam-place';
 import type { PaperworkFile } from './declare';
 import { cellsOf, type PaperworkDraft } from './draft';
 import { type JudgedCell, judgeCells } from './sheet/judge-cells';
 import { rowsFor } from './sheet/positions';
+import type { SheetCell } from './sheet/sheet-cell';
 import type { ItemRemark } from './state';
 
 /** What stands between a draft and handing it in. */
@@ -36,17 +38,29 @@ export interface IncompletePlace {
   readonly lacks: readonly string[];
 }
 
+/** A lobe is there with as many lifts as make a curve; how fine its steps are is the person’s own matter. */
+const FEWEST_LIFTS = 3;
+
+const incompleteLobes = (
+  written: readonly SheetCell[],
+  { columns }: SheetForm,
+): readonly IncompletePlace[] =>
+  LOBES.filter((lobe) => written.filter((cell) => lobeOf(cell) === lobe).length < FEWEST_LIFTS).map(
+    (lobe) => ({
+      position: `${lobe} lobe`,
+      lacks: columns.map(({ label }) => label.toLowerCase()),
+    }),
+  );
+
 /** Place by place, what the sheet does not say yet. */
 export const incompletePlaces = (
   draft: PaperworkDraft,
   form: SheetForm,
   layout: BoreLayout,
 ): readonly IncompletePlace[] => {
-  const given = new Set(
-    cellsOf(draft, form.subject)
-      .filter((cell) => cell.typed.trim() !== '')
-      .map(({ position, quantity }) => `${position}|${quantity}`),
-  );
+  const written = cellsOf(draft, form.subject).filter((cell) => cell.typed.trim() !== '');
+  if (form.per === 'degree') return incompleteLobes(written, form);
+  const given = new Set(written.map(({ position, quantity }) => `${position}|${quantity}`));
   return rowsFor(form.per, layout).flatMap(({ key }) => {
     const lacks = form.columns
       .filter(({ quantity }) => !given.has(`${key}|${quantity}`))

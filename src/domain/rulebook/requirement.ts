@@ -55,7 +55,8 @@ export interface PhotographRequirement {
   readonly visible: readonly string[];
 }
 
-export type SheetKind = 'lifters' | 'engine' | 'camshaft' | 'weights' | 'other';
+/** A `lift-table` gives the lift of each lobe by degree of crankshaft angle. */
+export type SheetKind = 'lifters' | 'engine' | 'camshaft' | 'lift-table' | 'weights' | 'other';
 
 export interface SheetRequirement {
   readonly kind: 'sheet';

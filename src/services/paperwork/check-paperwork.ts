@@ -88,10 +88,14 @@ export const checkRow = async (
     declared,
     missing: stillMissing(row.draft, standing.rules, form, row.layout, kept, open),
     returned,
-    results: evaluateRules(standing.rules, withUsualUncertainty(declaredFacts(declared)), {
-      carNumber: row.carNumber,
-      engineId: row.engineId,
-    }),
+    results: evaluateRules(
+      standing.rules,
+      withUsualUncertainty(declaredFacts(declared, standing.rules)),
+      {
+        carNumber: row.carNumber,
+        engineId: row.engineId,
+      },
+    ),
   };
 };
 

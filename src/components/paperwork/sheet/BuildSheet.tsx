@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import { boreMarks } from '@/domain/paperwork/bore-marks';
+import { checkingLiftIn } from '@/domain/paperwork/cam/cam-table';
 import { cellsOf, type PaperworkDraft, withCells } from '@/domain/paperwork/draft';
 import { judgeCells } from '@/domain/paperwork/sheet/judge-cells';
 import { placeKey, type SheetCell } from '@/domain/paperwork/sheet/sheet-cell';
@@ -7,6 +8,7 @@ import type { ItemRemark } from '@/domain/paperwork/state';
 import { emptyValues } from '@/domain/paperwork/still-missing';
 import type { ClauseResult } from '@/domain/rulebook/clause-result';
 import type { SheetForm } from '@/domain/rulebook/form/form';
+import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
 import { BoreMap } from '../../tappet/BoreMap';
 import { FilePick } from '../files/FilePick';
@@ -17,6 +19,8 @@ import type { ShownFile } from '../paperwork-props';
 import { RemarksOn } from '../remarks/RemarksOn';
 import { CellsToCorrect } from './CellsToCorrect';
 import { Completeness } from './Completeness';
+import { LiftCurve } from './cam/LiftCurve';
+import { liftsOf } from './cam/lifts-of';
 import { ValuesGrid } from './grid/ValuesGrid';
 import { SheetImport } from './import/SheetImport';
 import { boreStates } from './marks';
@@ -36,6 +40,7 @@ interface BuildSheetProps {
   readonly layout: BoreLayout;
   readonly draft: PaperworkDraft;
   readonly files: Files;
+  readonly rules: Pick<RulesInForce, 'clauses'>;
   readonly results: readonly ClauseResult[];
   readonly remarks: readonly ItemRemark[];
   readonly onChange: (make: (before: PaperworkDraft) => PaperworkDraft) => void;
@@ -50,7 +55,8 @@ const merged = (
 
 /** One measurement sheet: a file to read from, the bores at a glance, what to correct, and every value. */
 export const BuildSheet = (props: BuildSheetProps) => {
-  const { paperworkId, form, required, layout, draft, files, results, remarks, onChange } = props;
+  const { paperworkId, form, required, layout, draft, files, rules, results } = props;
+  const { remarks, onChange } = props;
   const judged = judgeCells(cellsOf(draft, form.subject));
   const wrong = judged.filter(({ state }) => state !== 'ok');
   const missing = emptyValues(draft, form, layout);
@@ -131,6 +137,13 @@ export const BuildSheet = (props: BuildSheetProps) => {
           view="mini"
           bores={boreStates(boreMarks(layout, form, judged, results))}
           label={`${form.title}, front at the left`}
+        />
+      )}
+      {form.per === 'degree' && judged.length > 0 && (
+        <LiftCurve
+          readings={liftsOf(judged)}
+          checkingLift={checkingLiftIn(rules)}
+          label={form.title}
         />
       )}
       <CellsToCorrect cells={wrong} onChange={(cell) => take([cell])} />

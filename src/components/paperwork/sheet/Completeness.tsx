@@ -1,7 +1,8 @@
+import { LOBES } from '@/domain/paperwork/cam/cam-place';
 import type { PaperworkDraft } from '@/domain/paperwork/draft';
 import { rowsFor } from '@/domain/paperwork/sheet/positions';
 import { incompletePlaces } from '@/domain/paperwork/still-missing';
-import type { SheetForm } from '@/domain/rulebook/form/form';
+import type { SheetForm, SheetRow } from '@/domain/rulebook/form/form';
 import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
 
 interface CompletenessProps {
@@ -10,11 +11,13 @@ interface CompletenessProps {
   readonly draft: PaperworkDraft;
 }
 
+const KINDS: Partial<Record<SheetRow, string>> = { cylinder: 'cylinders', degree: 'lobes' };
+
 /** How many places are complete, and what the others lack. */
 export const Completeness = ({ form, layout, draft }: CompletenessProps) => {
-  const places = rowsFor(form.per, layout);
+  const places = form.per === 'degree' ? LOBES : rowsFor(form.per, layout);
   const open = incompletePlaces(draft, form, layout);
-  const kind = form.per === 'cylinder' ? 'cylinders' : 'bores';
+  const kind = KINDS[form.per] ?? 'bores';
   const words = `${places.length - open.length} of ${places.length} ${kind} complete`;
   if (open.length === 0) return <p className="py-2">{words}.</p>;
   return (

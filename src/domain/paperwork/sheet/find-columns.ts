@@ -1,3 +1,5 @@
+import { findDegree } from '../cam/cam-place';
+import { degreeMeaning, isDegreeRow } from '../cam/read-cam-table';
 import { type ColumnMeaning, columnName, type SheetColumn } from './column-meaning';
 import { headings } from './headings';
 import { findBore, findCylinder, findValve } from './positions';
@@ -21,6 +23,7 @@ const SAMPLES = 3;
 const isByBore = ({ form }: WantedSheet): boolean => form.per === 'bore' || form.per === 'lifter';
 
 const isValueRow = (row: readonly string[], wanted: WantedSheet): boolean => {
+  if (wanted.form.per === 'degree') return isDegreeRow(row);
   const says = (test: (text: string) => unknown) => row.some((cell) => test(cell) !== undefined);
   const hasNumber = row.filter((cell) => /\d/.test(cell)).length > 1;
   return (
@@ -34,9 +37,10 @@ const firstValueRow = (rows: TextRows, wanted: WantedSheet): number => {
   const filled = rows.findIndex((row) => isValueRow(row, wanted));
   if (filled >= 0) return filled;
   const heading = rows.findIndex((row) => row.filter((cell) => cell.trim() !== '').length > 1);
+  const names = wanted.form.per === 'degree' ? findDegree : findCylinder;
   return heading < 0
     ? -1
-    : rows.findIndex((row, at) => at > heading && findCylinder(row[0] ?? '') !== undefined);
+    : rows.findIndex((row, at) => at > heading && names(row[0] ?? '') !== undefined);
 };
 
 const share = (cells: readonly string[], test: (text: string) => unknown): number =>
@@ -48,6 +52,8 @@ const meaningOf = (
   wanted: WantedSheet,
 ): ColumnMeaning => {
   if (isOwnColumn(header)) return { kind: 'not-taken' };
+  if (wanted.form.per === 'degree')
+    return degreeMeaning(header, share(cells, findDegree) > 0.5, wanted.form);
   const byBore = isByBore(wanted);
   if (byBore && share(cells, (cell) => findBore(cell, wanted.layout)) > 0.5)
     return { kind: 'position' };
@@ -82,7 +88,9 @@ const chosenFor = (
 ): ColumnMeaning | undefined => {
   const chosen = Object.hasOwn(mapping, key) ? mapping[key] : undefined;
   const known =
-    chosen?.kind !== 'reading' || form.columns.some(({ quantity }) => quantity === chosen.quantity);
+    chosen?.kind !== 'reading' ||
+    (form.columns.some(({ quantity }) => quantity === chosen.quantity) &&
+      (form.per !== 'degree' || chosen.valve !== undefined));
   return known ? chosen : undefined;
 };
 

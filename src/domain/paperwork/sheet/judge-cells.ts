@@ -4,6 +4,8 @@ import { parseQuantity } from '../../quantity/parse';
 import type { Quantity } from '../../quantity/quantity';
 import { toNumber } from '../../quantity/rational';
 import { getQuantityEntry, type RuleDimension } from '../../rulebook/quantity-catalogue';
+import { lobeOf } from '../cam/cam-place';
+import { offTheCurve } from '../cam/off-the-curve';
 import { implausible, type Seen } from './plausible';
 import { placeKey, type SheetCell } from './sheet-cell';
 
@@ -24,9 +26,11 @@ const SHORT: Readonly<Record<string, string>> = {
   'tappet-bore-diameter': 'bore',
 };
 
-/** `3 intake, bore above across`. */
+/** `3 intake, bore above across`; of a cam table `110 deg, intake lobe lift`. */
 export const cellWords = (cell: SheetCell): string => {
   const label = SHORT[cell.quantity] ?? getQuantityEntry(cell.quantity).label.toLowerCase();
+  const lobe = lobeOf(cell);
+  if (lobe !== undefined) return `${cell.position} deg, ${lobe} ${label}`;
   const place = [label, cell.depth, cell.axis].filter((part) => part !== '').join(' ');
   return `${cell.position === 'engine' ? 'Engine' : cell.position}, ${place}`;
 };
@@ -88,7 +92,13 @@ export const judgeCells = (cells: readonly SheetCell[]): readonly JudgedCell[] =
       : [];
   });
   const questions = new Map(
-    implausible(seen, shown).map(({ cell, detail }) => [placeKey(cell), detail]),
+    [
+      ...implausible(
+        seen.filter(({ cell }) => lobeOf(cell) === undefined),
+        shown,
+      ),
+      ...offTheCurve(seen, shown),
+    ].map(({ cell, detail }) => [placeKey(cell), detail]),
   );
   return written.map((cell): JudgedCell => {
     const parsed = read(cell);

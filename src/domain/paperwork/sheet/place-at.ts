@@ -1,4 +1,5 @@
 import type { Valve } from '../../tappet/layout/bore-layout';
+import { findDegree } from '../cam/cam-place';
 import { findBore, findCylinder, findValve, rowsFor } from './positions';
 import type { WantedSheet } from './sheet-cell';
 
@@ -19,6 +20,7 @@ export const placeAt = (
   ownValve: Valve | undefined,
   { form, layout }: WantedSheet,
 ): string | undefined => {
+  if (form.per === 'degree') return findDegree(at(row, places.position));
   const byBore = form.per === 'bore' || form.per === 'lifter';
   const cylinder = findCylinder(at(row, places.cylinder));
   if (!byBore) return rowsFor(form.per, layout).find((place) => place.key === cylinder)?.key;

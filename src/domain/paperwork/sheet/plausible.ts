@@ -16,7 +16,7 @@ export interface Doubt {
   readonly detail: string;
 }
 
-type Show = (quantity: Quantity) => string;
+export type Show = (quantity: Quantity) => string;
 
 /** How far one part may lie from its fellows before it is asked about: parts are alike, weights and loads less so. */
 const ALIKE: Partial<Record<QuantityName, number>> = {

@@ -1,7 +1,9 @@
 import { positionsIn } from '../../inspection/found-facts';
 import type { Position } from '../../rulebook/evaluate/facts';
+import type { SheetForm } from '../../rulebook/form/form';
 import type { Per } from '../../rulebook/quantity-catalogue';
 import type { BoreLayout, Valve } from '../../tappet/layout/bore-layout';
+import { degreeRows } from '../cam/cam-place';
 
 const VALVES: Readonly<Record<string, Valve>> = {
   i: 'intake',
@@ -49,10 +51,17 @@ export const findBore = (text: string, layout: BoreLayout): string | undefined =
   return positionsIn(layout).bores.find((bore) => bore.key === name)?.key;
 };
 
-/** The rows that a sheet has. */
+/** The places that something is asked for. */
 export const rowsFor = (per: Per, layout: BoreLayout): readonly Position[] => {
   const positions = positionsIn(layout);
   if (per === 'bore' || per === 'lifter') return positions.bores;
   if (per === 'cylinder') return positions.cylinders;
   return [{ key: per, label: per === 'car' ? 'Car' : 'Engine' }];
 };
+
+/** The rows that a sheet has: places of the engine, or the angles of a cam table as far as it is written. */
+export const sheetRows = (
+  { per }: Pick<SheetForm, 'per'>,
+  layout: BoreLayout,
+  written: readonly { readonly position: string; readonly source?: unknown }[],
+): readonly Position[] => (per === 'degree' ? degreeRows(written) : rowsFor(per, layout));

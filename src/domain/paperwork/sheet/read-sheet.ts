@@ -30,9 +30,16 @@ type ReadingColumn = SheetColumn & { readonly meaning: Reading };
 const isReading = (column: SheetColumn): column is ReadingColumn =>
   column.meaning.kind === 'reading';
 
-const placesIn = (columns: readonly SheetColumn[]): SheetPlaces => {
-  const of = (kind: ColumnMeaning['kind']) =>
-    columns.find((column) => column.meaning.kind === kind)?.at;
+/** Of a cam table the lobe; two columns of one lobe are told apart by nothing, so the first stands. */
+const axisOf = ({ meaning }: ReadingColumn, { form }: WantedSheet): string =>
+  form.per === 'degree' ? (meaning.valve ?? '') : meaning.axis;
+
+/** What says where a column’s values belong: the nearest to its left where there are several, as of two lobes side by side. */
+const placesFor = (columns: readonly SheetColumn[], at: number): SheetPlaces => {
+  const of = (kind: ColumnMeaning['kind']) => {
+    const alike = columns.filter((column) => column.meaning.kind === kind);
+    return (alike.findLast((column) => column.at < at) ?? alike[0])?.at;
+  };
   return { position: of('position'), cylinder: of('cylinder'), valve: of('valve') };
 };
 
@@ -91,7 +98,11 @@ export const readGrid = (
   if (found === undefined)
     return { ...base, columns: [], cells: [], notes: [withoutPlaces(wanted)], headingRow: 0 };
   const readings = found.columns.filter(isReading);
-  const places = placesIn(found.columns);
+  const placed = readings.map((column) => ({
+    column,
+    places: placesFor(found.columns, column.at),
+  }));
+  const places = placed[0]?.places ?? placesFor(found.columns, 0);
   const commas = hasDecimalCommas(rows);
   const cells = new Map<string, SheetCell>();
   const notes: SheetNote[] = [];
@@ -103,15 +114,16 @@ export const readGrid = (
       hiddenRows.push(at);
       continue;
     }
-    let placed = false;
+    let isPlaced = false;
     const twice = new Set<string>();
-    for (const column of readings) {
-      const { quantity, unit, depth, axis, valve } = column.meaning;
-      const position = placeAt(row, places, valve, wanted);
+    for (const { column, places: own } of placed) {
+      const { quantity, unit, depth, valve } = column.meaning;
+      const position = placeAt(row, own, valve, wanted);
       if (position === undefined) continue;
-      placed = true;
+      isPlaced = true;
       const written = (row[column.at] ?? '').trim();
       if (written === '') continue;
+      const axis = axisOf(column, wanted);
       const place = { position, quantity, depth, axis };
       const key = placeKey(place);
       if (cells.has(key)) {
@@ -122,7 +134,7 @@ export const readGrid = (
       const typed = (commas ? withPoint(written) : written).slice(0, 200);
       cells.set(key, { ...place, typed, unit, source });
     }
-    if (!placed)
+    if (!isPlaced)
       notes.push({ where: names.row(at), ...unplaced(nameIn(row, places), wanted), ...rowOf(at) });
     for (const position of twice) {
       notes.push({

@@ -8,22 +8,32 @@ export interface SheetNote {
   readonly row?: number | undefined;
 }
 
-const wordsFor = ({ form }: WantedSheet) =>
-  form.per === 'cylinder'
-    ? { place: 'cylinder', example: '“3”' }
-    : { place: 'bore', example: '“3 intake”' };
+const wordsFor = ({ form }: WantedSheet) => {
+  if (form.per === 'degree')
+    return {
+      row: 'a crankshaft angle',
+      place: 'crankshaft angle',
+      none: 'crankshaft angle',
+      example: '“110” under a heading such as “Degrees”',
+    };
+  const [place, example] = form.per === 'cylinder' ? ['cylinder', '“3”'] : ['bore', '“3 intake”'];
+  return { row: 'a place on this engine', place, none: `${place} of this engine`, example };
+};
 
-export const withoutPlaces = (wanted: WantedSheet): SheetNote => ({
-  where: 'The whole file',
-  detail: `No row names a place on this engine, such as ${wordsFor(wanted).example}. Start from the template.`,
-});
+export const withoutPlaces = (wanted: WantedSheet): SheetNote => {
+  const { row, example } = wordsFor(wanted);
+  return {
+    where: 'The whole file',
+    detail: `No row names ${row}, such as ${example}. Start from the template.`,
+  };
+};
 
 export const unplaced = (name: string, wanted: WantedSheet): Pick<SheetNote, 'detail'> => {
-  const { place, example } = wordsFor(wanted);
+  const { place, none, example } = wordsFor(wanted);
   return {
     detail:
       name === ''
         ? `It does not say which ${place} it is for. Write it such as ${example}; its values were not taken.`
-        : `“${name}” is no ${place} of this engine. Write it such as ${example}; its values were not taken.`,
+        : `“${name}” is no ${none}. Write it such as ${example}; its values were not taken.`,
   };
 };

@@ -1,6 +1,8 @@
 import { getUnit } from '../../quantity/find-unit';
+import type { SheetRow } from '../../rulebook/form/form';
 import { getQuantityEntry } from '../../rulebook/quantity-catalogue';
-import { rowsFor } from './positions';
+import { LOBES } from '../cam/cam-place';
+import { sheetRows } from './positions';
 import type { WantedSheet } from './sheet-cell';
 
 const IN_MILLIMETRES: Readonly<Record<string, string>> = {
@@ -35,21 +37,28 @@ export const sheetTemplate = (
   about: TemplateFor,
   system: UnitSystem,
 ): SheetTemplate => {
-  const headings = form.columns.map(({ quantity, label, unit }) => {
+  const lobes = form.per === 'degree' ? LOBES : [];
+  const headings = form.columns.flatMap(({ quantity, label, unit }) => {
     const chosen = system === 'metric' ? (IN_MILLIMETRES[unit] ?? unit) : unit;
     const { symbol } = getUnit(getQuantityEntry(quantity).dimension, chosen);
-    return symbol === '1' ? label : `${label} (${symbol})`;
+    const title = symbol === '1' ? label : `${label} (${symbol})`;
+    return lobes.length === 0 ? [title] : lobes.map((lobe) => `${lobe} ${title}`);
   });
-  const first = form.per === 'cylinder' ? 'Cylinder' : 'Position';
+  const firsts: Partial<Record<SheetRow, string>> = {
+    cylinder: 'Cylinder',
+    degree: 'Crankshaft degrees',
+  };
   return {
     notes: [
       `${form.title}. Car number: ${about.carNumber}. Engine: ${about.reference}. Class: ${about.className}.`,
       `Paperwork: ${about.paperworkId}`,
       'Leave empty what was not measured. Units stand in the heading; a unit written in a cell goes before it.',
-      'Several readings at one place: copy the column and say where in its heading, “above across” or “below along”.',
+      form.per === 'degree'
+        ? 'Degrees are those of the crankshaft, rising from row to row; write your own in their place.'
+        : 'Several readings at one place: copy the column and say where in its heading, “above across” or “below along”.',
     ],
-    heading: [first, ...headings],
-    places: rowsFor(form.per, layout).map((place) => place.key),
+    heading: [firsts[form.per] ?? 'Position', ...headings],
+    places: sheetRows(form, layout, []).map((place) => place.key),
   };
 };
 

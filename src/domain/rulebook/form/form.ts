@@ -44,11 +44,14 @@ export interface SheetColumn {
   readonly clauses: readonly string[];
 }
 
+/** What a sheet has a row for; of a cam table the crankshaft angle. */
+export type SheetRow = Per | 'degree';
+
 export interface SheetForm {
   readonly sheet: SheetKind;
   readonly subject: string;
   readonly title: string;
-  readonly per: Per;
+  readonly per: SheetRow;
   readonly columns: readonly SheetColumn[];
   readonly clauses: readonly string[];
 }

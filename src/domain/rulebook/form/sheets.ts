@@ -47,6 +47,27 @@ const column = (quantity: QuantityName, clauses: ReadonlySet<string>): SheetColu
   return { quantity, label, unit, clauses: [...clauses] };
 };
 
+/** Lobe lift, unless the rules limit the lift at the valve alone. */
+const liftIn = (clauses: readonly Clause[]): QuantityName => {
+  const limited = clauses.flatMap(({ requirement: rule }) =>
+    rule?.kind === 'limit' || rule?.kind === 'reference-average' ? [rule.quantity] : [],
+  );
+  return limited.includes('valve-lift') && !limited.includes('lobe-lift')
+    ? 'valve-lift'
+    : 'lobe-lift';
+};
+
+/** The clauses that a table of lifts answers: those on the lift and on the duration. */
+const liftColumn = (clauses: readonly Clause[]): SheetColumn => {
+  const quantity = liftIn(clauses);
+  const named = clauses.filter(
+    ({ requirement: rule }) =>
+      (rule?.kind === 'limit' || rule?.kind === 'reference-average') &&
+      (rule.quantity === quantity || rule.quantity === 'duration'),
+  );
+  return column(quantity, new Set(named.map(({ number }) => number)));
+};
+
 /** Sheets by what limits need per bore, lifter or cylinder, and those that a clause asks by name. */
 export const sheetsFrom = (clauses: readonly Clause[]): readonly SheetForm[] => {
   const asked = clauses.flatMap(({ number, requirement }) =>
@@ -68,15 +89,12 @@ export const sheetsFrom = (clauses: readonly Clause[]): readonly SheetForm[] => 
   const covered = new Set(worked.map((form) => form.sheet));
   const files = asked
     .filter((row) => row.sheet === 'other' || !covered.has(row.sheet))
-    .map(
-      (row): SheetForm => ({
-        sheet: row.sheet,
-        subject: row.subject,
-        title: row.title,
-        per: 'engine',
-        columns: [],
-        clauses: [row.number],
-      }),
-    );
+    .map((row): SheetForm => {
+      const { sheet, subject, title, number } = row;
+      const base = { sheet, subject, title };
+      if (sheet !== 'lift-table') return { ...base, per: 'engine', columns: [], clauses: [number] };
+      const lift = liftColumn(clauses);
+      return { ...base, per: 'degree', columns: [lift], clauses: [number, ...lift.clauses] };
+    });
   return [...worked, ...files];
 };

@@ -50,7 +50,7 @@ export const openRow = async (
   if (version === undefined || (await isErased(em, row.seriesId, row.id, number))) return undefined;
   const document = await getVersionDocument(em, row.seriesId, row.id, number);
   const rules = await getRules(em, row.seriesId, Buffer.from(version.rulesHash, 'hex'));
-  const results = evaluateRules(rules, withUsualUncertainty(declaredFacts(document)), {
+  const results = evaluateRules(rules, withUsualUncertainty(declaredFacts(document, rules)), {
     carNumber: document.carNumber,
     engineId: document.engine.id,
   });

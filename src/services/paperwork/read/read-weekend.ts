@@ -41,7 +41,10 @@ const resultsAt = async (
   }
   const [last] = await readVersions(em, seriesId, id);
   const document = await getVersionDocument(em, seriesId, id, versions);
-  const results = evaluateRules(standing.rules, declaredFacts(document), { carNumber, engineId });
+  const results = evaluateRules(standing.rules, declaredFacts(document, standing.rules), {
+    carNumber,
+    engineId,
+  });
   return { results, rulesChanged: last?.rulesHash !== toHex(standing.hash) };
 };
 

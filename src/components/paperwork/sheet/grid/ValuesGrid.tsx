@@ -1,13 +1,13 @@
 import { type KeyboardEvent, type Ref, useId, useImperativeHandle, useRef, useState } from 'react';
 import type { JudgedCell } from '@/domain/paperwork/sheet/judge-cells';
-import { rowsFor } from '@/domain/paperwork/sheet/positions';
+import { sheetRows } from '@/domain/paperwork/sheet/positions';
 import {
   placeKey,
   retyped,
   type SheetCell,
   sourceWords,
 } from '@/domain/paperwork/sheet/sheet-cell';
-import type { SheetForm } from '@/domain/rulebook/form/form';
+import type { SheetForm, SheetRow } from '@/domain/rulebook/form/form';
 import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
 import { type GridColumn, gridColumns } from './grid-columns';
 import { type GridPlace, keyStep, leavesCell } from './grid-keys';
@@ -28,6 +28,9 @@ interface ValuesGridProps {
 
 /** Rows and cells of a table that is a grid are the grid’s (HTML AAM). */
 const AS_GRID = { role: 'grid' } as const;
+
+/** What heads the rows that are no bores. */
+const ROWS: Partial<Record<SheetRow, string>> = { cylinder: 'Cylinder', degree: 'Degrees' };
 
 const emptyAt = (position: string, { title: _title, ...column }: GridColumn): SheetCell => ({
   position,
@@ -53,7 +56,11 @@ export const ValuesGrid = ({ form, layout, judged, label, onChange, ref }: Value
   const editing = useRef(false);
   const before = useRef<SheetCell>(undefined);
   const columns = gridColumns(form, judged);
-  const rows = rowsFor(form.per, layout);
+  const rows = sheetRows(
+    form,
+    layout,
+    judged.map(({ cell }) => cell),
+  );
   const byPlace = new Map(judged.map((one) => [placeKey(one.cell), one]));
   const size = { rows: rows.length, columns: columns.length };
 
@@ -145,7 +152,7 @@ export const ValuesGrid = ({ form, layout, judged, label, onChange, ref }: Value
         <table {...AS_GRID} ref={table} aria-label={label} aria-describedby={`${id}-keys`}>
           <thead>
             <tr>
-              <th scope="col">{form.per === 'cylinder' ? 'Cylinder' : 'Bore'}</th>
+              <th scope="col">{ROWS[form.per] ?? 'Bore'}</th>
               {columns.map((column) => (
                 <th scope="col" key={column.title}>
                   {column.title} ({column.unit})

@@ -1,3 +1,4 @@
+import { LOBES } from '@/domain/paperwork/cam/cam-place';
 import type { JudgedCell } from '@/domain/paperwork/sheet/judge-cells';
 import type { SheetCell } from '@/domain/paperwork/sheet/sheet-cell';
 import type { SheetForm } from '@/domain/rulebook/form/form';
@@ -10,16 +11,22 @@ export interface GridColumn {
   readonly title: string;
 }
 
-/** A column for every quantity the rules want, and for each depth, axis or repeat that somebody wrote. */
+/** A column for every quantity the rules want, and for each lobe, depth, axis or repeat that somebody wrote. */
 export const gridColumns = (
   form: SheetForm,
   judged: readonly JudgedCell[],
 ): readonly GridColumn[] =>
   form.columns.flatMap(({ quantity, label, unit }) => {
     const own = judged.filter(({ cell }) => cell.quantity === quantity);
-    const kinds = new Map(own.map(({ cell }) => [`${cell.depth}|${cell.axis}`, cell]));
-    const cells =
-      kinds.size === 0 ? [{ quantity, depth: '', axis: '', unit }] : [...kinds.values()];
+    const empty = { quantity, depth: '', axis: '', unit };
+    const lobes = form.per === 'degree' ? LOBES.map((axis) => ({ ...empty, axis })) : [];
+    const kinds = new Map(
+      [...lobes, ...own.map(({ cell }) => cell)].map((cell) => [
+        `${cell.depth}|${cell.axis}`,
+        cell,
+      ]),
+    );
+    const cells = kinds.size === 0 ? [empty] : [...kinds.values()];
     return cells.map((cell) => {
       const place = [cell.depth, cell.axis].filter((part) => part !== '').join(' ');
       const title = [label, place].filter((part) => part !== '').join(', ');

@@ -54,6 +54,8 @@ export const ColumnsHeld = ({ sheet, form, onChoose }: ColumnsHeldProps) => {
   const { columns, turned } = sheet;
   const open = columns.filter(isUnexplained);
   const options = meaningOptions(form);
+  // A lobe has one lift at an angle.
+  const hasSpots = form.per !== 'degree';
   const line = turned ? 'Row' : 'Column';
   const nameOf = (at: number) => (turned ? String(at + 1) : columnName(at));
   return (
@@ -70,7 +72,7 @@ export const ColumnsHeld = ({ sheet, form, onChoose }: ColumnsHeldProps) => {
             <th scope="col">First values</th>
             <th scope="col">Holds</th>
             <th scope="col">Unit</th>
-            <th scope="col">Where</th>
+            {hasSpots ? <th scope="col">Where</th> : <td />}
           </tr>
         </thead>
         <tbody>
@@ -105,8 +107,8 @@ export const ColumnsHeld = ({ sheet, form, onChoose }: ColumnsHeldProps) => {
                       />
                     )}
                   </td>
-                  <td data-label={reading && 'Where'}>
-                    {reading && (
+                  <td data-label={reading && hasSpots && 'Where'}>
+                    {reading && hasSpots && (
                       <Choice
                         label={`Where ${name} was measured`}
                         value={

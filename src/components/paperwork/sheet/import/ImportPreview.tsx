@@ -8,6 +8,8 @@ import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
 import { BoreMap } from '../../../tappet/BoreMap';
 import type { ShownFile } from '../../paperwork-props';
 import { CellsToCorrect } from '../CellsToCorrect';
+import { LiftCurve } from '../cam/LiftCurve';
+import { liftsOf } from '../cam/lifts-of';
 import { type GridHandle, ValuesGrid } from '../grid/ValuesGrid';
 import { boreStates } from '../marks';
 
@@ -64,6 +66,9 @@ export const ImportPreview = (props: ImportPreviewProps) => {
           label={`${file.name} before it counts, front at the left`}
           onSelect={(position) => grid.current?.goTo(position)}
         />
+      )}
+      {form.per === 'degree' && (
+        <LiftCurve readings={liftsOf(judged)} label={`${file.name} before it counts`} />
       )}
       <CellsToCorrect cells={wrong} onChange={onChange} />
       <ValuesGrid

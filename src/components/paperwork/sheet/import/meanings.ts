@@ -22,9 +22,10 @@ export const optionOf = (meaning: ColumnMeaning): string =>
 /** Every choice for this sheet; a reading of one valve where a row can be a cylinder. */
 export const meaningOptions = (form: SheetForm): readonly MeaningOption[] => {
   const byBore = form.per === 'bore' || form.per === 'lifter';
+  const byDegree = form.per === 'degree';
   const readings = form.columns.flatMap(({ quantity, label }) => [
-    { value: optionFor(quantity, ''), words: label },
-    ...(byBore
+    ...(byDegree ? [] : [{ value: optionFor(quantity, ''), words: label }]),
+    ...(byBore || byDegree
       ? [
           { value: optionFor(quantity, 'intake'), words: `${label}, intake` },
           { value: optionFor(quantity, 'exhaust'), words: `${label}, exhaust` },
@@ -35,7 +36,9 @@ export const meaningOptions = (form: SheetForm): readonly MeaningOption[] => {
     { value: 'not-taken', words: 'nothing for this sheet' },
     ...readings,
     ...(byBore ? [{ value: 'position', words: 'which bore, such as 3 intake' }] : []),
-    { value: 'cylinder', words: 'the cylinder’s number' },
+    ...(byDegree
+      ? [{ value: 'position', words: 'the crankshaft angle, in degrees' }]
+      : [{ value: 'cylinder', words: 'the cylinder’s number' }]),
     ...(byBore ? [{ value: 'valve', words: 'intake or exhaust' }] : []),
   ];
 };

@@ -75,6 +75,7 @@ const SHEETS = [
   { value: 'lifters', label: 'Lifter sheet' },
   { value: 'engine', label: 'Build sheet' },
   { value: 'camshaft', label: 'Cam card' },
+  { value: 'lift-table', label: 'Cam table, lift by degree' },
   { value: 'weights', label: 'Weights' },
   { value: 'other', label: 'Another sheet' },
 ];
