@@ -19,6 +19,7 @@ import { SetsAndRacks } from './0017-sets-and-racks';
 import { EventDay } from './0018-event-day';
 import { GaugesAndCustody } from './0019-gauges-and-custody';
 import { OwnReadings } from './0022-own-readings';
+import { DaysAfterASwap } from './0024-days-after-a-swap';
 
 /** In order of application. A new migration is added here by hand. */
 export const migrationsList: MigrationObject[] = [
@@ -42,4 +43,5 @@ export const migrationsList: MigrationObject[] = [
   { name: '0018-event-day', class: EventDay },
   { name: '0019-gauges-and-custody', class: GaugesAndCustody },
   { name: '0022-own-readings', class: OwnReadings },
+  { name: '0024-days-after-a-swap', class: DaysAfterASwap },
 ];

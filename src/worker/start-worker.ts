@@ -7,6 +7,7 @@ import { proveForNotice } from '@/services/ledger/proof/prove-for-notice';
 import { sendMail } from '@/services/mail/send-mail';
 import { renderNotice } from '@/services/notice/render-notice';
 import { remindDue } from '@/services/paperwork/remind-due';
+import { remindOverdue } from '@/services/paperwork/remind-overdue';
 import type { JobPayloads, Ports } from '@/services/ports';
 
 type Handlers = {
@@ -22,7 +23,10 @@ const handlers: Handlers = {
   'make-previews': makePreviews,
   'sign-checkpoint': signCheckpoint,
   'sweep-uploads': sweepUpload,
-  'remind-due': remindDue,
+  'remind-due': async (ports) => {
+    await remindDue(ports);
+    await remindOverdue(ports);
+  },
   'remove-objects': removeObjects,
   'render-notice': (ports, verdict) =>
     renderNotice(ports, verdict, (line) => proveForNotice(ports, verdict.seriesId, line)),

@@ -99,7 +99,7 @@ export const openUploadQueue = (
     if (one === undefined) return;
     if (bytes === undefined) return forget(id);
     if (isStale(one.upload, Date.now())) {
-      await forget(id);
+      if (!one.upload.named) await forget(id);
       return add({ ...renewed(one.upload, uuidV7), paused: false }, bytes);
     }
     set(id, { phase: 'sending' });

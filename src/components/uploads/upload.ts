@@ -21,6 +21,8 @@ export interface Upload {
   readonly keptAt: number;
   readonly announcedAt?: number | undefined;
   readonly paused: boolean;
+  /** Something on record names this file by its id: however late, it is sent under that id. */
+  readonly named?: boolean | undefined;
   /** The store's answers to the parts that arrived, by part; of one request there is one. */
   readonly tags: readonly string[];
 }
@@ -56,10 +58,10 @@ const ANNOUNCED_MS = 20 * 60 * 60 * 1000;
 export const isStale = ({ announcedAt }: Upload, now: number): boolean =>
   announcedAt !== undefined && now - announcedAt > ANNOUNCED_MS;
 
-/** The same file, to be announced anew under another id. */
+/** The same file, to be announced anew: under another id, unless the record names this one. */
 export const renewed = (upload: Upload, newId: () => string): Upload => ({
   ...upload,
-  id: newId(),
+  id: upload.named ? upload.id : newId(),
   announceAct: newId(),
   confirmAct: newId(),
   announcedAt: undefined,

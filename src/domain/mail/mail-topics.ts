@@ -28,8 +28,8 @@ export const MAIL_TOPICS: readonly MailTopic[] = [
   {
     id: 'due-soon',
     title: 'Due soon',
-    explanation: 'Something of yours is due within a day. The paddock shows it as well.',
-    kinds: ['due-soon'],
+    explanation: 'Something of yours is due within a day, or was. The paddock shows it as well.',
+    kinds: ['due-soon', 'overdue'],
     to: ['competitor'],
   },
 ];
@@ -63,6 +63,7 @@ const KIND_WORDS: Readonly<Record<string, string>> = {
   'engine-swapped': 'Engine swapped',
   'gauge-found-bad': 'Gauge found bad',
   'due-soon': 'Due soon',
+  overdue: 'Overdue',
   invitation: 'Invitation',
 };
 

@@ -57,6 +57,8 @@ export interface SwapListed {
   /** `not-in-yet` until its bytes are here; `another` where they are not those that were announced. */
   readonly photograph: 'kept' | 'not-in-yet' | 'another';
   readonly photographId: string;
+  /** When its bytes arrived; nothing until then. */
+  readonly photographAt: string | null;
   readonly paperwork: PaperworkState;
   /** Whether the rest has been handed in. */
   readonly handedIn: boolean;

@@ -9,6 +9,8 @@ export const RaceClass = defineEntity({
     seasonId: p.uuid(),
     slug: p.text(),
     name: p.text(),
+    /** Days until the rest of the paperwork is due after an engine was changed at the track. */
+    swapDueDays: p.integer().default(3),
   }),
 });
 

@@ -1,3 +1,4 @@
+import { LockMode } from '@mikro-orm/postgresql';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure, invalid } from '@/domain/failure';
 import {
@@ -12,6 +13,7 @@ import { performAct } from '../act/perform-act';
 import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 import { addressUpload, type UploadAddress } from './address-upload';
+import { expectAgain, isSameFile } from './announce-again';
 import { needFor, takesFile } from './own-file';
 import { sweptAt } from './sweep-upload';
 import { withStore } from './with-store';
@@ -41,7 +43,7 @@ export const wrongPlace = (): Failure =>
 
 /**
  * Announces a file and answers where its bytes go, within minutes; asked again, it gives new addresses
- * for the same upload. It counts only after `confirmUpload` has read it back.
+ * for the same upload, also after a day in which it never came. It counts only after `confirmUpload` has read it back.
  */
 export const expectUpload = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs' | 'objects' | 'uploads'>,
@@ -69,6 +71,17 @@ export const expectUpload = async (
       const paperwork = await findOwnPaperwork(em, actor, paperworkId, true, need);
       if (paperwork === undefined) return fail(absent());
       if (!(await takesFile(em, paperwork, fileId))) return fail(wrongPlace());
+      const lock = { lockMode: LockMode.PESSIMISTIC_WRITE };
+      const before = await em.findOne(KeptFile, { seriesId, id: fileId }, lock);
+      if (before !== null) {
+        const { personId: by } = actor;
+        const announced = { paperworkId, purpose, item, by };
+        if (!isSameFile(before, { ...announced, declaredType: type, declaredBytes: bytes }))
+          return fail(absent());
+        expectAgain(before, at);
+        send('sweep-uploads', { seriesId, fileId }, sweptAt(at));
+        return ok({ fileId });
+      }
       const there = await em.count(KeptFile, {
         seriesId,
         paperworkId,

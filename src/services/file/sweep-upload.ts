@@ -8,7 +8,7 @@ import type { Ports } from '../ports';
 const HOUR = 60 * 60 * 1000;
 const DAY = 24 * HOUR;
 
-const NEVER_CONFIRMED =
+export const NEVER_CONFIRMED =
   'The file was announced and not confirmed within a day: what had been sent of it is removed. Send it again.';
 
 /** When an upload announced at an instant is looked at. */
@@ -32,7 +32,8 @@ export const sweepUpload = async (
   if (file.state !== 'expected') return;
   // The queue's clock is the database's: it may run a little ahead of this one.
   if (deps.clock.now().getTime() < sweptAt(file.createdAt).getTime() - HOUR) return;
-  const id = actIdFor('sweep-upload', fileId);
+  // Announced anew, it is looked at anew.
+  const id = actIdFor('sweep-upload', `${fileId} ${file.createdAt.toISOString()}`);
   const swept = await performAct(
     deps,
     null,

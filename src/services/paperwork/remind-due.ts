@@ -5,8 +5,6 @@ import { actIdFor } from '../notice/act-id';
 import type { Ports } from '../ports';
 import { isoOf } from './read/read-row';
 
-const DAY = 24 * 60 * 60 * 1000;
-
 interface DueRow {
   readonly seriesId: string;
   readonly paperworkId: string;
@@ -22,8 +20,9 @@ interface DueRow {
 }
 
 /**
- * Paperwork with its competitor whose event begins between two instants, or the rest of which is due
- * then after a change of engine. A draft counts where the car is entered.
+ * Paperwork with its competitor whose event begins within a day, or the rest of which is due soon after a
+ * change of engine: within a day, or within half a day where the class gives no more than one. A
+ * draft counts where the car is entered.
  */
 const SELECT = `
 select p.series_id as "seriesId", p.id as "paperworkId", p.car_number as "carNumber",
@@ -34,23 +33,25 @@ join public.series s on s.id = p.series_id
 join public.class c on c.series_id = p.series_id and c.id = p.class_id
 join public.person o on o.id = p.competitor_id
 join lateral (
-  select v.starts_at as at, 'the start of ' || v.name as what from public.event v
+  select v.starts_at as at, v.starts_at - interval '1 day' as from_at,
+    'the start of ' || v.name as what from public.event v
   where v.series_id = p.series_id and v.season_id = c.season_id and (p.state = 'returned' or exists (
     select from public.entry e where e.series_id = v.series_id and e.event_id = v.id
       and e.class_id = p.class_id and e.competitor_id = p.competitor_id and e.state = 'entered'))
   union all
-  select w.due_at, 'the day that was set when the engine was changed' from record.engine_swap w
+  select w.due_at, w.due_at - least(interval '1 day', make_interval(hours => c.swap_due_days * 12)),
+    'the day that was set when the engine was changed' from record.engine_swap w
   where w.series_id = p.series_id and w.paperwork_id = p.id
-) due on due.at > ? and due.at <= ?
+) due on due.at > ? and due.from_at <= ?
 where p.state in ('draft', 'returned')
 order by due.at, p.id`;
 
-/** Tells competitors a day before that paperwork of theirs is still to be handed in; of each day once. */
+/** Tells competitors a day before, at the most, that paperwork of theirs is still to be handed in; of each day once. */
 export const remindDue = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs' | 'site'>,
 ): Promise<void> => {
   const now = deps.clock.now();
-  const rows = await deps.db.execute<DueRow[]>(SELECT, [now, new Date(now.getTime() + DAY)]);
+  const rows = await deps.db.execute<DueRow[]>(SELECT, [now, now]);
   for (const row of rows) {
     const { seriesId, paperworkId, carNumber, className, seriesName, state, dueAt, dueFor } = row;
     const reminded = await performAct(

@@ -20,6 +20,7 @@ export interface AdministeredSeries {
       readonly id: string;
       readonly slug: string;
       readonly name: string;
+      readonly swapDueDays: number;
     }[];
   }[];
 }
@@ -54,7 +55,7 @@ export const findAdministered = async (
         endsOn: season.endsOn,
         classes: classes
           .filter((one) => one.seasonId === season.id)
-          .map((one) => ({ id: one.id, slug: one.slug, name: one.name })),
+          .map(({ id, slug, name, swapDueDays }) => ({ id, slug, name, swapDueDays })),
       })),
   }));
 };

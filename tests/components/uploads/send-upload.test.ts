@@ -186,4 +186,16 @@ describe('what goes wrong', () => {
       name: 'rack.jpg',
     });
   });
+
+  it('what the record names by its id is announced anew under that id', () => {
+    let made = 0;
+    const announced = { ...upload, announcedAt: 0, tags: ['a'], named: true };
+    expect(renewed(announced, () => `new-${++made}`)).toMatchObject({
+      id: upload.id,
+      announceAct: 'new-1',
+      confirmAct: 'new-2',
+      announcedAt: undefined,
+      tags: [],
+    });
+  });
 });

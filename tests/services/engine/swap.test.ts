@@ -1,16 +1,24 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { SwapRequest } from '@/contracts/engine/swap';
+import type { Actor } from '@/domain/access/permission';
 import { sha256, toHex } from '@/domain/ledger/bytes';
+import { isLegalNotice, topicOf } from '@/domain/mail/mail-topics';
 import { findSwappable } from '@/services/engine/swap/find-swappable';
 import { listOwnSwaps, listSwapsToCheck } from '@/services/engine/swap/list-swaps';
 import { swapEngine } from '@/services/engine/swap/swap-engine';
 import { createEvent } from '@/services/event/create-event';
 import { enterCars } from '@/services/event/enter-cars';
 import { pickCars } from '@/services/event/pick-cars';
+import { confirmUpload } from '@/services/file/confirm-upload';
+import { expectUpload } from '@/services/file/expect-upload';
 import { keepFile } from '@/services/file/keep-file';
 import { openOriginal } from '@/services/file/open-file';
+import { sweepUpload } from '@/services/file/sweep-upload';
 import { decidePaperwork } from '@/services/paperwork/decide-paperwork';
-import { handedIn, openPaddock, type Paddock, picture } from '../../support/paperwork';
+import { remindDue } from '@/services/paperwork/remind-due';
+import { remindOverdue } from '@/services/paperwork/remind-overdue';
+import { setSwapDays } from '@/services/series/set-swap-days';
+import { handedIn, openPaddock, type Paddock, picture, start } from '../../support/paperwork';
 import { openWorld, type World } from '../../support/world';
 import { must } from '../rulebook/build';
 
@@ -18,6 +26,7 @@ let world: World;
 let paddock: Paddock;
 let eventId: string;
 let first: { readonly paperworkId: string };
+const HOUR = 3_600_000;
 const photograph = await picture(200, 150);
 
 const rows = <T>(sql: string, parameters: unknown[] = []) =>
@@ -224,5 +233,165 @@ describe('a race-night engine swap', () => {
       });
     expect(await kept(back.photograph.fileId)).toMatchObject({ ok: true });
     expect(await kept(uuid())).toMatchObject({ failure: { name: 'not-in-this-state' } });
+  });
+});
+
+describe('the day by which the rest is due', () => {
+  const days = (actor: Actor, value: string) =>
+    setSwapDays(paddock.ports(), actor, {
+      act: paddock.uuid(),
+      seriesId: paddock.seriesId,
+      classId: paddock.classId,
+      days: value,
+    });
+  const overdue = () =>
+    rows<{ address: string; subject: string; message_id: string }>(
+      "select address, subject, message_id from public.mail where kind = 'overdue' order by created_at",
+    );
+  const dueSoon = () => rows("select 1 from public.mail where kind = 'due-soon'");
+  const remind = async () => {
+    await remindDue(paddock.ports());
+    await remindOverdue(paddock.ports());
+  };
+
+  it('is set by the class’s officials, from 1 to 30 days, for swaps to come', async () => {
+    const { official, competitor } = paddock;
+    expect(await days(competitor, '5')).toMatchObject({ failure: { name: 'absent' } });
+    for (const wrong of ['0', '31', '-1', '2.5', 'three', ''])
+      expect(await days(official, wrong)).toMatchObject({
+        failure: { faults: [{ pointer: '/days' }] },
+      });
+    const before = await rows('select id, due_at from record.engine_swap order by id');
+    expect(must(await days(official, '1'))).toEqual({ days: 1 });
+    expect(await rows('select id, due_at from record.engine_swap order by id')).toEqual(before);
+  });
+
+  it('is told of when half of a short time has passed, and once when it is over', async () => {
+    const { ports, competitor } = paddock;
+    await rows("update public.paperwork set state = 'withdrawn' where state = 'draft'");
+    const asked = await swap({
+      engine: { id: paddock.uuid(), reference: 'SPARE-2', blockCasting: '' },
+    });
+    const { dueAt } = must(await swapEngine(ports(), competitor, asked));
+    const swappedAt = world.clock.now().getTime();
+    expect(Date.parse(dueAt)).toBe(swappedAt + 24 * HOUR);
+    const at = (hours: number) => world.clock.set(new Date(swappedAt + hours * HOUR).toISOString());
+
+    at(11);
+    await remind();
+    expect(await dueSoon()).toEqual([]);
+    at(13);
+    await remind();
+    await remind();
+    expect((await dueSoon()).length).toBe(1);
+    expect(await overdue()).toEqual([]);
+    at(24);
+    await remind();
+    at(30);
+    await remind();
+    const told = await overdue();
+    expect(told.map(({ subject }) => subject)).toEqual([
+      expect.stringMatching(/^Overdue: paperwork for car 12J, /),
+    ]);
+    expect(told[0]?.message_id).toMatch(/^<[0-9a-f-]{36}@/);
+    const [row] = await listOwnSwaps(ports(), competitor);
+    expect(row).toMatchObject({ to: 'SPARE-2', dueAt, handedIn: false });
+  });
+
+  it('is told of to nobody whose paperwork is handed in, nor of a day long past', async () => {
+    const { ports, competitor } = paddock;
+    world.clock.set('2026-07-11T20:10:00.000Z');
+    const asked = await swap({
+      engine: { id: paddock.uuid(), reference: 'SPARE-3', blockCasting: '' },
+    });
+    must(await swapEngine(ports(), competitor, asked));
+    const before = (await overdue()).length;
+    const stands = (state: string) =>
+      rows('update public.paperwork set state = ? where id = ?', [state, asked.paperworkId]);
+    await stands('handed-in');
+    world.clock.advance(25 * HOUR);
+    await remind();
+    expect((await overdue()).length).toBe(before);
+    await stands('draft');
+    world.clock.advance(8 * 24 * HOUR);
+    await remind();
+    expect((await overdue()).length).toBe(before);
+  });
+
+  it('may be turned off like other optional messages, which a notice may not', () => {
+    expect(topicOf('overdue')?.id).toBe('due-soon');
+    expect(isLegalNotice('overdue')).toBe(false);
+  });
+});
+
+describe('a photograph that waited on a device', () => {
+  it('still comes under its own id after its day, with paperwork that is closed by then', async () => {
+    const { ports, competitor, rival, official, uuid, seriesId, objects } = paddock;
+    world.clock.set('2026-07-11T20:30:00.000Z');
+    const asked = await swap({ engine: { id: paddock.engineId }, seal: 'T-0420' });
+    const { paperworkId } = must(await swapEngine(ports(), competitor, asked));
+    expect(paperworkId).toBe(first.paperworkId);
+    const { fileId } = asked.photograph;
+    const announced = {
+      fileId,
+      paperworkId,
+      purpose: 'photograph',
+      item: 'engine-swap',
+      name: 'seal.jpg',
+      type: 'image/jpeg',
+      bytes: photograph.length,
+    } as const;
+    const announce = (actor: Actor, change: object = {}) =>
+      expectUpload(ports(), actor, { act: uuid(), ...announced, ...change });
+    must(await announce(competitor));
+    world.clock.advance(24 * HOUR);
+    await sweepUpload(ports(), { seriesId, fileId });
+    world.clock.advance(24 * HOUR);
+    expect(await announce(rival)).toMatchObject({ failure: { name: 'absent' } });
+    expect(await announce(competitor, { bytes: 12 })).toMatchObject({
+      failure: { name: 'absent' },
+    });
+    const { url } = must(await announce(competitor));
+    expect(url).toContain(fileId);
+    // What was given up once is looked at once more, from the second announcement on.
+    world.clock.advance(20 * HOUR);
+    await sweepUpload(ports(), { seriesId, fileId });
+    await objects.write(`uploads/${seriesId}/${fileId}`, photograph, 'image/jpeg');
+    expect(must(await confirmUpload(ports(), competitor, { act: uuid(), fileId })).state).toBe(
+      'kept',
+    );
+    const [listed] = (await listSwapsToCheck(ports(), official)).filter(
+      ({ id }) => id === asked.id,
+    );
+    expect(listed).toMatchObject({
+      photograph: 'kept',
+      swappedAt: expect.stringMatching(/^20/),
+      photographAt: expect.stringMatching(/^2026-07-14T/),
+    });
+  });
+
+  it('that never came the second time is given up as well', async () => {
+    const { ports, competitor, uuid, seriesId } = paddock;
+    const fileId = uuid();
+    const paperworkId = await start(paddock, '44');
+    const announce = () =>
+      expectUpload(ports(), competitor, {
+        act: uuid(),
+        fileId,
+        paperworkId,
+        purpose: 'photograph',
+        item: 'lifters-racked',
+        name: 'rack.jpg',
+        type: 'image/jpeg',
+        bytes: 4_000,
+      });
+    const stateOf = () => rows('select state from public.file where id = ?', [fileId]);
+    for (const _ of [1, 2]) {
+      must(await announce());
+      expect(await stateOf()).toEqual([{ state: 'expected' }]);
+      world.clock.advance(24 * HOUR);
+      await sweepUpload(ports(), { seriesId, fileId });
+      expect(await stateOf()).toEqual([{ state: 'refused' }]);
+    }
   });
 });

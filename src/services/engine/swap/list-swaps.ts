@@ -9,7 +9,7 @@ select w.id, v.name as "eventName", w.car_number as "carNumber", o.name as "comp
   w.from_reference as from, w.to_reference as to, w.seal, w.paperwork_id as "paperworkId",
   case when f.state is distinct from 'kept' then 'not-in-yet'
     when f.sha256 = w.photograph_sha256 then 'kept' else 'another' end as photograph,
-  w.photograph_id as "photographId", p.state as paperwork,
+  w.photograph_id as "photographId", ${isoOf('f.kept_at')} as "photographAt", p.state as paperwork,
   p.state in ('handed-in', 'accepted') as "handedIn",
   ${isoOf('w.due_at')} as "dueAt", ${isoOf('w.received_at')} as "swappedAt", v.zone
 from record.engine_swap w

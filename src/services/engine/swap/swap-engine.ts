@@ -7,6 +7,7 @@ import { Entry } from '@/entities/event/entry';
 import { Inspection } from '@/entities/event/inspection';
 import { Engine } from '@/entities/paperwork/engine';
 import { Paperwork } from '@/entities/paperwork/paperwork';
+import { RaceClass } from '@/entities/series/race-class';
 import { performAct } from '../../act/perform-act';
 import type { Ports } from '../../ports';
 import { findRules } from '../../rulebook/find-rules';
@@ -15,12 +16,9 @@ import { swapMails } from './swap-mails';
 import { swappedPaperwork } from './swapped-paperwork';
 import { takeEngine } from './take-engine';
 
-/** Common practice, not a published figure: the rest of the paperwork follows within three days. */
-const DUE_DAYS = 3;
-
 /**
  * Another engine in an entered car, at the track: engine, seal number and the hash of one photograph now,
- * the rest by a date. Picks made after it go by the new engine; an inspection that was opened before stays
+ * the rest by a date that the class sets. Picks made after it go by the new engine; an inspection that was opened before stays
  * as it was opened.
  */
 export const swapEngine = async (
@@ -74,7 +72,8 @@ export const swapEngine = async (
         engineId: engine.id,
         paperworkId,
       });
-      const dueAt = new Date(at.getTime() + DUE_DAYS * 86_400_000).toISOString();
+      const { swapDueDays } = await em.findOneOrFail(RaceClass, { seriesId, id: classId });
+      const dueAt = new Date(at.getTime() + swapDueDays * 86_400_000).toISOString();
       act.append('engine_swap', [
         {
           series_id: seriesId,
