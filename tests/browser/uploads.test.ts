@@ -5,7 +5,7 @@ import { expect, test } from 'vitest';
 import { MOST_AT_ONCE, PART_BYTES } from '@/domain/paperwork/file/limits';
 import { journey, type Visitor } from '../support/browser';
 import { startDroppingLink } from '../support/dropping-link';
-import { heicFixture } from '../support/hostile-files';
+import { heicFixture } from '../support/hostile/pictures';
 import { readProduct } from '../support/product';
 import { eventually } from '../support/wait';
 

@@ -5,7 +5,7 @@ import { images } from '@/adapters/images/sharp';
 import { heicPixels } from '@/domain/paperwork/file/heic-size';
 import { inspectFile } from '@/services/file/inspect-file';
 import { PREVIEW_WIDTHS } from '@/services/file/make-previews';
-import { heicFixture } from '../../support/hostile-files';
+import { heicFixture } from '../../support/hostile/pictures';
 
 const rack = heicFixture('rack');
 const all = { pixels: 50_000_000, wantsPixels: true };

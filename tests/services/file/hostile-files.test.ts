@@ -5,7 +5,7 @@ import { basename, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { MOST_BYTES } from '@/domain/paperwork/file/limits';
-import { type HostileFile, hostileFiles } from '../../support/hostile-files';
+import { type HostileFile, hostileFiles } from '../../support/hostile/files';
 import type { Inspected } from '../../support/inspect-hostile';
 
 /** A process with the program's modules loaded has about 150 MB before it sees a file. */

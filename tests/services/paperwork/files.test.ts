@@ -1,4 +1,4 @@
-import { deflateRawSync, deflateSync } from 'node:zlib';
+import { deflateRawSync } from 'node:zlib';
 import sharp from 'sharp';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { sha256, toHex } from '@/domain/ledger/bytes';
@@ -11,6 +11,8 @@ import { removeFile } from '@/services/file/remove-file';
 import { openPaperworkToCheck } from '@/services/paperwork/read/open-paperwork-to-check';
 import { openOwnVersion } from '@/services/paperwork/read/open-version';
 import { readSheetFile } from '@/services/paperwork/read-sheet-file';
+import { packed } from '../../support/hostile/packed';
+import { png } from '../../support/hostile/png';
 import {
   fullDraft,
   handedIn,
@@ -79,63 +81,6 @@ const because = async (sent: Sent): Promise<string> => {
 };
 
 const utf8 = (text: string): Uint8Array => new TextEncoder().encode(text);
-
-const crc = (bytes: Uint8Array): number => {
-  let value = 0xffffffff;
-  for (const byte of bytes) {
-    value ^= byte;
-    for (let bit = 0; bit < 8; bit += 1)
-      value = value & 1 ? (value >>> 1) ^ 0xedb88320 : value >>> 1;
-  }
-  return (value ^ 0xffffffff) >>> 0;
-};
-const chunk = (type: string, body: Uint8Array): Buffer => {
-  const typed = Buffer.concat([Buffer.from(type), body]);
-  const length = Buffer.alloc(4);
-  length.writeUInt32BE(body.length);
-  const sum = Buffer.alloc(4);
-  sum.writeUInt32BE(crc(typed));
-  return Buffer.concat([length, typed, sum]);
-};
-/** A small file that says it has 20,000 × 20,000 grey pixels, and has them. */
-const pngBomb = (side = 20_000): Buffer => {
-  const head = Buffer.alloc(13);
-  head.writeUInt32BE(side, 0);
-  head.writeUInt32BE(side, 4);
-  head.writeUInt8(1, 8);
-  const rows = Buffer.alloc((side / 8 + 1) * side);
-  return Buffer.concat([
-    Buffer.from([0x89, 0x50, 0x4e, 0x47, 0x0d, 0x0a, 0x1a, 0x0a]),
-    chunk('IHDR', head),
-    chunk('IDAT', deflateSync(rows)),
-    chunk('IEND', new Uint8Array()),
-  ]);
-};
-
-/** A ZIP of one entry; `stated` is what its directory claims the entry unpacks to. */
-const zip = (name: string, packed: Uint8Array, stated: number): Buffer => {
-  const local = Buffer.alloc(30);
-  local.writeUInt32LE(0x04034b50, 0);
-  local.writeUInt16LE(8, 8);
-  local.writeUInt32LE(packed.length, 18);
-  local.writeUInt32LE(stated, 22);
-  local.writeUInt16LE(name.length, 26);
-  const entry = Buffer.alloc(46);
-  entry.writeUInt32LE(0x02014b50, 0);
-  entry.writeUInt16LE(8, 10);
-  entry.writeUInt32LE(packed.length, 20);
-  entry.writeUInt32LE(stated, 24);
-  entry.writeUInt16LE(name.length, 28);
-  const body = Buffer.concat([local, Buffer.from(name), packed]);
-  const directory = Buffer.concat([entry, Buffer.from(name)]);
-  const end = Buffer.alloc(22);
-  end.writeUInt32LE(0x06054b50, 0);
-  end.writeUInt16LE(1, 8);
-  end.writeUInt16LE(1, 10);
-  end.writeUInt32LE(directory.length, 12);
-  end.writeUInt32LE(body.length, 16);
-  return Buffer.concat([body, directory, end]);
-};
 
 describe('a photograph', () => {
   it('is kept byte for byte under its own hash, whatever was announced of its type', async () => {
@@ -258,7 +203,7 @@ describe('hostile and broken files are refused with the right words', () => {
   });
 
   it('a small file of 400 million pixels, without unfolding it', async () => {
-    const bytes = pngBomb();
+    const bytes = png({ side: 20_000, depth: 1, colour: 0 });
     expect(bytes.length).toBeLessThan(200_000);
     expect(await because({ bytes })).toBe(
       'This picture has 400 million pixels; at most 50 million are taken. Send it in a smaller size.',
@@ -294,20 +239,20 @@ describe('hostile and broken files are refused with the right words', () => {
   });
 
   it('a packed file whose directory lies about what it unfolds to', async () => {
-    const packed = deflateRawSync(Buffer.alloc(60_000_000));
+    const zeros = deflateRawSync(Buffer.alloc(60_000_000));
+    const book = (stated: number) => packed([{ name: 'xl/workbook.xml', packed: zeros, stated }]);
     const words =
       'Unpacked, this XLSX file holds more than 20 MB; a measurement sheet has far less. Save only the sheet itself, or save it as CSV.';
     const sheet = { purpose: 'sheet', name: 'lifters.xlsx', type: 'application/zip' } as const;
-    expect(await because({ ...sheet, bytes: zip('xl/workbook.xml', packed, 60_000_000) })).toBe(
-      words,
-    );
-    expect(await because({ ...sheet, bytes: zip('xl/workbook.xml', packed, 1_000) })).toBe(words);
+    expect(await because({ ...sheet, bytes: book(60_000_000) })).toBe(words);
+    expect(await because({ ...sheet, bytes: book(1_000) })).toBe(words);
     expect(
-      await because({ ...sheet, bytes: zip('a.txt', deflateRawSync(Buffer.from('a')), 1) }),
+      await because({
+        ...sheet,
+        bytes: packed([{ name: 'a.txt', packed: deflateRawSync(Buffer.from('a')), stated: 1 }]),
+      }),
     ).toContain('no XLSX sheet');
-    expect(
-      await because({ ...sheet, bytes: zip('xl/workbook.xml', packed, 1_000).subarray(0, 900) }),
-    ).toContain('damaged');
+    expect(await because({ ...sheet, bytes: book(1_000).subarray(0, 900) })).toContain('damaged');
   });
 
   it('nothing arrived yet: it says so and may be asked again', async () => {
