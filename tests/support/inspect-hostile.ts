@@ -2,7 +2,7 @@
 import { readFileSync } from 'node:fs';
 import { images } from '@/adapters/images/sharp';
 import type { FilePurpose } from '@/domain/paperwork/file/limits';
-import { inspectFile } from '@/services/file/inspect-file';
+import { inspectFile } from '@/services/file/content/inspect-file';
 import { PREVIEW_WIDTHS } from '@/services/file/make-previews';
 
 export interface Inspected {

@@ -30,11 +30,20 @@ const uploadOf = async ({ db, uploads }: Deps, file: KeptFile): Promise<string> 
   return uploadId ?? begun;
 };
 
+/** The address for all of a file's bytes in one request. */
+export const addressWhole = async (
+  { objects }: Pick<Ports, 'objects'>,
+  file: Pick<KeptFile, 'id' | 'uploadKey' | 'declaredType' | 'declaredBytes'>,
+): Promise<UploadAddress> => {
+  const { id: fileId, uploadKey, declaredType: type, declaredBytes: bytes } = file;
+  return { fileId, url: await objects.presignPut(uploadKey, type, bytes), type };
+};
+
 /** Addresses for the bytes of a file that was announced; asked again, new ones for the same upload. */
 export const addressUpload = async (deps: Deps, file: KeptFile): Promise<UploadAddress> => {
-  const { id: fileId, uploadKey, declaredType: type, declaredBytes: bytes } = file;
-  const url = await deps.objects.presignPut(uploadKey, type, bytes);
-  if (bytes <= MOST_AT_ONCE) return { fileId, url, type };
+  const { uploadKey, declaredBytes: bytes } = file;
+  const whole = await addressWhole(deps, file);
+  if (bytes <= MOST_AT_ONCE) return whole;
   const uploadId = await uploadOf(deps, file);
   const parts = await Promise.all(
     partSizes(bytes).map(async (size, at) => ({
@@ -42,5 +51,5 @@ export const addressUpload = async (deps: Deps, file: KeptFile): Promise<UploadA
       bytes: size,
     })),
   );
-  return { fileId, url, type, parts };
+  return { ...whole, parts };
 };

@@ -5,8 +5,9 @@ import { fail, ok, type Result } from '@/domain/result';
 import type { KeptFile } from '@/entities/paperwork/file';
 import { performAct } from '../act/perform-act';
 import type { ObjectHead, Ports, SentPart } from '../ports';
-import { answered, type KeepDeps, type KeptAnswer, keepFile } from './keep-file';
+import { keepFile } from './keep-file';
 import { findOwnFile } from './own-file';
+import { answered, type KeepDeps, type KeptAnswer, refuseFile } from './settle-file';
 import { takeTurns } from './take-turns';
 import { withStore } from './with-store';
 
@@ -29,8 +30,7 @@ const refuseUnread = (
     async ({ em }) => {
       const found = await findOwnFile(em, actor, fileId, true);
       if (found === undefined) return fail(absent());
-      Object.assign(found.file, { state: 'refused', refusedBecause });
-      return ok<KeptAnswer>({ fileId, state: 'refused', refusedBecause });
+      return ok(refuseFile(found.file, refusedBecause));
     },
   );
 };

@@ -2,7 +2,7 @@ import { LockMode } from '@mikro-orm/postgresql';
 import { toHex } from '@/domain/ledger/bytes';
 import { KeptFile } from '@/entities/paperwork/file';
 import type { Ports } from '../ports';
-import { lockContent } from './hold-object';
+import { lockContent } from './content/hold-object';
 
 export const PREVIEW_WIDTHS = [160, 640, 1600] as const;
 export const MOST_PHOTOGRAPH_BYTES = 25_000_000;

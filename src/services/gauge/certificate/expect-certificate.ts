@@ -1,11 +1,10 @@
 import { type Actor, may } from '@/domain/access/permission';
-import { absent, type Failure, failure } from '@/domain/failure';
+import { absent, type Failure } from '@/domain/failure';
 import { sizeWords } from '@/domain/paperwork/file/limits';
 import { fail, ok, type Result } from '@/domain/result';
 import { GaugeRow } from '@/entities/event/gauge';
-import { KeptFile } from '@/entities/paperwork/file';
-import { performAct } from '../../act/perform-act';
-import { sweptAt } from '../../file/sweep-upload';
+import { addressWhole, type UploadAddress } from '../../file/address-upload';
+import { announcedType, announceFile, tooManyBytes } from '../../file/announce-file';
 import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 
@@ -27,48 +26,31 @@ export const expectCertificate = async (
     readonly type: string;
     readonly bytes: number;
   },
-): Promise<
-  Result<{ readonly fileId: string; readonly url: string; readonly type: string }, Failure>
-> => {
+): Promise<Result<UploadAddress, Failure>> => {
   const { act, seriesId, gaugeId, fileId, name, bytes } = input;
   if (!may(actor, 'gauge.manage', seriesId) || !isId(gaugeId)) return fail(absent());
-  if (bytes > MOST_CERTIFICATE_BYTES) {
-    const detail = tooLargeCertificate(bytes);
-    return fail(failure('too-large', detail, [{ pointer: '/bytes', detail }]));
-  }
-  const type = input.type.trim() === '' ? 'application/octet-stream' : input.type.trim();
-  const uploadKey = `uploads/${seriesId}/${fileId}`;
-  const expected = await performAct(
+  if (bytes > MOST_CERTIFICATE_BYTES) return fail(tooManyBytes(tooLargeCertificate(bytes)));
+  const type = announcedType(input.type);
+  const announced = await announceFile(
     deps,
     actor,
     {
-      id: act,
+      act,
       kind: 'expect-certificate',
       seriesId,
       input: { gaugeId, fileId, name, type, bytes },
     },
-    async ({ em, at, send }) => {
-      if ((await em.findOne(GaugeRow, { seriesId, id: gaugeId })) === null) return fail(absent());
-      em.persist(
-        em.create(KeptFile, {
-          seriesId,
-          id: fileId,
-          gaugeId,
-          purpose: 'certificate',
-          item: gaugeId,
-          name,
-          declaredType: type,
-          declaredBytes: bytes,
-          uploadKey,
-          state: 'expected',
-          createdBy: actor.personId,
-          createdAt: at,
-        }),
-      );
-      send('sweep-uploads', { seriesId, fileId }, sweptAt(at));
-      return ok({ fileId });
+    {
+      id: fileId,
+      gaugeId,
+      purpose: 'certificate',
+      item: gaugeId,
+      name,
+      declaredType: type,
+      declaredBytes: bytes,
     },
+    async (em) =>
+      (await em.findOne(GaugeRow, { seriesId, id: gaugeId })) === null ? absent() : undefined,
   );
-  if (!expected.ok) return expected;
-  return ok({ fileId, url: await deps.objects.presignPut(uploadKey, type, bytes), type });
+  return announced.ok ? ok(await addressWhole(deps, announced.value)) : announced;
 };

@@ -1,10 +1,9 @@
 import type { Actor } from '@/domain/access/permission';
-import { absent, type Failure, failure } from '@/domain/failure';
+import { absent, type Failure } from '@/domain/failure';
 import { MOST_BYTES, tooLargeWords } from '@/domain/paperwork/file/limits';
 import { fail, ok, type Result } from '@/domain/result';
-import { KeptFile } from '@/entities/paperwork/file';
-import { performAct } from '../../act/perform-act';
-import { sweptAt } from '../../file/sweep-upload';
+import { addressWhole, type UploadAddress } from '../../file/address-upload';
+import { announcedType, announceFile, tooManyBytes } from '../../file/announce-file';
 import type { Ports } from '../../ports';
 import { findInspectionRow, worksOn } from '../read/find-inspection';
 
@@ -21,49 +20,30 @@ export const expectPhotograph = async (
     readonly type: string;
     readonly bytes: number;
   },
-): Promise<
-  Result<{ readonly fileId: string; readonly url: string; readonly type: string }, Failure>
-> => {
+): Promise<Result<UploadAddress, Failure>> => {
   const { act, inspectionId, fileId, item, name, bytes } = input;
   const inspection = await findInspectionRow(deps.db, actor, 'inspection.record', inspectionId);
   if (inspection === null || !worksOn(actor, inspection)) return fail(absent());
-  if (bytes > MOST_BYTES.photograph) {
-    const detail = tooLargeWords('photograph', bytes);
-    return fail(failure('too-large', detail, [{ pointer: '/bytes', detail }]));
-  }
-  const { seriesId } = inspection;
-  const type = input.type.trim() === '' ? 'application/octet-stream' : input.type.trim();
-  const uploadKey = `uploads/${seriesId}/${fileId}`;
-  const expected = await performAct(
+  if (bytes > MOST_BYTES.photograph) return fail(tooManyBytes(tooLargeWords('photograph', bytes)));
+  const type = announcedType(input.type);
+  const announced = await announceFile(
     deps,
     actor,
     {
-      id: act,
+      act,
       kind: 'expect-photograph',
-      seriesId,
+      seriesId: inspection.seriesId,
       input: { inspectionId, fileId, item, name, type, bytes },
     },
-    async ({ em, at, send }) => {
-      em.persist(
-        em.create(KeptFile, {
-          seriesId,
-          id: fileId,
-          inspectionId,
-          purpose: 'finding',
-          item,
-          name,
-          declaredType: type,
-          declaredBytes: bytes,
-          uploadKey,
-          state: 'expected',
-          createdBy: actor.personId,
-          createdAt: at,
-        }),
-      );
-      send('sweep-uploads', { seriesId, fileId }, sweptAt(at));
-      return ok({ fileId });
+    {
+      id: fileId,
+      inspectionId,
+      purpose: 'finding',
+      item,
+      name,
+      declaredType: type,
+      declaredBytes: bytes,
     },
   );
-  if (!expected.ok) return expected;
-  return ok({ fileId, url: await deps.objects.presignPut(uploadKey, type, bytes), type });
+  return announced.ok ? ok(await addressWhole(deps, announced.value)) : announced;
 };

@@ -1,4 +1,4 @@
-import { lockContent } from '../../file/hold-object';
+import { lockContent } from '../../file/content/hold-object';
 import type { Ports } from '../../ports';
 
 const hashIn = (key: string): string => /[0-9a-f]{64}/.exec(key)?.[0] ?? key;

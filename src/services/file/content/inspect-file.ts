@@ -9,8 +9,8 @@ import {
 import { findPixels } from '@/domain/paperwork/file/pixel-size';
 import { KIND_WORDS, type SniffedKind, sniff } from '@/domain/paperwork/file/sniff';
 import { fail, ok, type Result } from '@/domain/result';
-import { readSheetRows } from '../paperwork/sheet/read-sheet-rows';
-import type { Ports } from '../ports';
+import { readSheetRows } from '../../paperwork/sheet/read-sheet-rows';
+import type { Ports } from '../../ports';
 import type { FileFacts } from './file-facts';
 import { inspectPdf } from './inspect-pdf';
 

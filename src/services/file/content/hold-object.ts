@@ -1,5 +1,5 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import type { Ports } from '../ports';
+import type { Ports } from '../../ports';
 
 /**
  * Waits for whoever else names or removes objects of this content, and keeps them waiting to the end
