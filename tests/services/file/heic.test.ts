@@ -3,7 +3,7 @@ import { expect, test } from 'vitest';
 import { decodeHeic, HEIC_BOUNDS, type HeicBounds } from '@/adapters/images/heic';
 import { images } from '@/adapters/images/sharp';
 import { heicPixels } from '@/domain/paperwork/file/heic-size';
-import { inspectFile } from '@/services/file/inspect-file';
+import { inspectFile } from '@/services/file/content/inspect-file';
 import { PREVIEW_WIDTHS } from '@/services/file/make-previews';
 import { heicFixture } from '../../support/hostile/pictures';
 
