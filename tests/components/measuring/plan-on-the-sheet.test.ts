@@ -199,6 +199,22 @@ describe('a gauge for each quantity', () => {
     expect(gaugesFor('stroke', all).map(({ code }) => code)).toEqual(['IM-02', 'MC-01']);
   });
 
+  it('reads what its division is of: no length off a burette, no volume off a micrometer', () => {
+    const burette: SheetGauge = {
+      ...inside,
+      id: 'bu-1',
+      code: 'AB-1',
+      kind: 'other',
+      division: { text: '0.1', unit: 'cc' },
+      range: undefined,
+    };
+    const more = [burette, ...all];
+    const set = usualSetUp(more, '2026-07-16');
+    expect(gaugeFor(set, 'cylinder-bore', more)?.code).toBe('IM-02');
+    expect(gaugeFor(set, 'gasket-thickness', more)?.code).toBe('MC-01');
+    expect(gaugesFor('chamber-volume', more).map(({ code }) => code)).toEqual(['AB-1']);
+  });
+
   it('is asked about when it does not reach what was read off it', () => {
     const read = { value: '1.8740', unit: 'in', comparative: false, quantity: 'stroke' } as const;
     expect(questionOf(read, depth)).toContain('out of the range of MC-01, 0 to 1 in');

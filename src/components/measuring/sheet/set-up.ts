@@ -44,7 +44,9 @@ const firstOf = (
 ): string => {
   const alike = gauges.filter(
     (gauge) =>
-      kinds.includes(gauge.kind) && (size === undefined || reaches(gaugeOf(gauge, 'length'), size)),
+      kinds.includes(gauge.kind) &&
+      (gauge.division === undefined || parseWritten(gauge.division, 'length').ok) &&
+      (size === undefined || reaches(gaugeOf(gauge, 'length'), size)),
   );
   const good = alike.find(
     (gauge) =>
@@ -101,7 +103,7 @@ export const gaugesFor = (
     if (kind === 'setting-ring' || kind === 'plug-gauge') return false;
     if (dimension === 'mass') return kind === 'scale';
     if (kind === 'scale') return false;
-    return division === undefined || parseWritten(division, dimension).ok || kind === 'other';
+    return division === undefined || parseWritten(division, dimension).ok;
   });
 };
 
