@@ -20,6 +20,8 @@ import { EventDay } from './0018-event-day';
 import { GaugesAndCustody } from './0019-gauges-and-custody';
 import { OwnReadings } from './0022-own-readings';
 import { DaysAfterASwap } from './0024-days-after-a-swap';
+import { HeldByALedger } from './0025-held-by-a-ledger';
+import { WordsThatCanGo } from './0026-words-that-can-go';
 
 /** In order of application. A new migration is added here by hand. */
 export const migrationsList: MigrationObject[] = [
@@ -44,4 +46,6 @@ export const migrationsList: MigrationObject[] = [
   { name: '0019-gauges-and-custody', class: GaugesAndCustody },
   { name: '0022-own-readings', class: OwnReadings },
   { name: '0024-days-after-a-swap', class: DaysAfterASwap },
+  { name: '0025-held-by-a-ledger', class: HeldByALedger },
+  { name: '0026-words-that-can-go', class: WordsThatCanGo },
 ];

@@ -139,3 +139,27 @@ it('an official erases for good what was handed in and never inspected; the page
     ),
   ).toEqual([]);
 }, 90_000);
+
+it('an official holds an inspection: its pen strokes cannot be erased until the hold is lifted', async () => {
+  const [signed] = await ask<{ id: string }>(
+    'select inspection_id as id from record.signature_strokes where strokes is not null order by 1 limit 1',
+  );
+  if (signed === undefined) throw new Error('The demo has no pen strokes.');
+  await journey('hold an inspection', async ({ enter }) => {
+    const official = await enter({ viewport: { width: 820, height: 1180 } });
+    await official.signInAs('Ilse Törnkvist');
+    await official.open(`/office/strokes/${signed.id}`);
+    const { page } = official;
+    const erase = page.getByRole('button', { name: 'Erase the strokes for good' });
+    await erase.waitFor();
+    await page.getByLabel('Reason').fill('The appeal of this car is open.');
+    await page.getByRole('button', { name: /Put on hold/ }).click();
+    await page.getByText('This inspection, since').waitFor();
+    expect(await erase.count()).toBe(0);
+    await official.expectAccessible();
+    await official.shot('inspection-held');
+    await page.getByRole('button', { name: 'Lift this hold' }).click();
+    await erase.waitFor();
+    expect(await page.getByText('This inspection, since').count()).toBe(0);
+  });
+}, 90_000);

@@ -6,28 +6,18 @@ import { findClassDraw } from '@/services/draw/find-class-draw';
 import { publishDraw } from '@/services/draw/publish-draw';
 import { enterCars } from '@/services/event/enter-cars';
 import { signReport } from '@/services/inspection/report/sign-report';
-import { eraseContent } from '@/services/ledger/erasure/erase-content';
 import { eraseStrokes } from '@/services/ledger/erasure/erase-strokes';
-import { removeObjects } from '@/services/ledger/erasure/remove-objects';
 import { proveForNotice } from '@/services/ledger/proof/prove-for-notice';
 import { renderNotice } from '@/services/notice/render-notice';
-import { decidePaperwork } from '@/services/paperwork/decide-paperwork';
 import type { Ports } from '@/services/ports';
 import { publishVerdict } from '@/services/verdict/publish-verdict';
 import { saveVerdictDraft } from '@/services/verdict/save-verdict-draft';
 import { fileOf, get, openInspection, openRaceNight, type RaceNight, rowsFor, send } from './bay';
 import { FakeObjects } from './fakes';
-import {
-  fullDraft,
-  handIn,
-  keepPhotograph,
-  openPaddock,
-  type Paddock,
-  picture,
-  save,
-  start,
-} from './paperwork';
+import { handedIn, openPaddock, type Paddock } from './paperwork';
 import { openRecordWorld, type RecordWorld, signNow } from './record';
+import { recordThePaddock } from './record-of-a-paddock';
+import { recordTheDay } from './record-of-the-day';
 import { NO_BREACH } from './verdict-case';
 
 /** Two series whose record holds rows of every kind that is committed to, some of them erased. */
@@ -36,6 +26,13 @@ export interface RecordOfANight {
   readonly objects: FakeObjects;
   readonly night: RaceNight;
   readonly paddock: Paddock;
+  /** What was written and not erased, for tests that erase. */
+  readonly left: {
+    readonly eventId: string;
+    readonly takenBack: string;
+    readonly signedFor: string;
+    readonly swapped: string;
+  };
   /** By series: the key, a head signed early and one signed last, as somebody outside kept them. */
   readonly kept: ReadonlyMap<string, { key: string; early: string; last: string }>;
   ports(): Ports;
@@ -148,37 +145,44 @@ const write = (objects: FakeObjects) => async (world: RecordWorld) => {
     );
   };
 
+  const day = recordTheDay(ports, night);
+  world.clock.set('2026-07-11T20:30:00.000Z');
+  await day.openWeighing();
   await draw();
   const early = await signNow(ports(), seriesId);
-  await decide(await inspect('12J'));
+  const inspected = await inspect('12J');
+  await decide(inspected);
+  await day.weigh(await day.enterLate());
+  await day.hold(inspected);
+  await day.results();
   const inspectionId = await inspect('90X');
   const reason = 'The season’s retention time has passed.';
   get(await eraseStrokes(ports(), official, { act: uuid(), seriesId, inspectionId, reason }));
+  await day.doubt();
   return { night, early, last: await signNow(ports(), seriesId) };
 };
 
-/** Paperwork that was handed in and returned, twice: what the first said is erased. */
+/** Paperwork of every end, an event with a bulletin and swaps, engines sold; some of it erased. */
 const fillPaddock = async (paddock: Paddock) => {
-  const { ports, uuid, official, seriesId } = paddock;
-  const ids: string[] = [];
-  for (const [at, carNumber] of ['12J', '7'].entries()) {
-    const paperworkId = await start(paddock, carNumber);
-    await keepPhotograph(paddock, paperworkId, await picture(300 + at));
-    await handIn(paddock, paperworkId, await save(paddock, paperworkId, 1, fullDraft()));
-    const decision = {
-      number: 1,
-      decision: 'returned' as const,
-      remarks: [{ item: 'general', text: 'The rack is not legible' }],
-    };
-    get(await decidePaperwork(ports(), official, { act: uuid(), paperworkId, ...decision }));
-    ids.push(paperworkId);
-  }
+  const { ports, seriesId, engineId } = paddock;
+  const write = recordThePaddock(paddock);
+  const [first] = [await write.returned('12J', 300), await write.returned('7', 301)];
   const early = await signNow(ports(), seriesId);
-  const reason = 'The season’s retention time has passed.';
-  const [paperworkId = ''] = ids;
-  get(await eraseContent(ports(), official, { act: uuid(), seriesId, paperworkId, reason }));
-  await removeObjects(ports(), { seriesId });
-  return { early, last: await signNow(ports(), seriesId) };
+  const { paperworkId: accepted } = await handedIn(paddock, '20');
+  await write.decide(accepted, 'accepted');
+  const [back, takenBack] = [await write.takenBack('30'), await write.takenBack('31')];
+  const [signed = '', signedFor = ''] = await write.signedFor(['40', '41']);
+  const eventId = await write.openEvent();
+  const entries = [await write.enter(eventId, '20'), await write.enter(eventId, '21')];
+  await write.bulletin(eventId, entries);
+  const erased = await write.swap(entries[0] ?? '', 'SPARE-1');
+  const swapped = await write.swap(entries[1] ?? '', 'SPARE-2');
+  await write.serveOtherwise();
+  await write.sell(engineId, 'Bought 1');
+  await write.sell(await write.undeclared(), 'Bought 2');
+  for (const paperworkId of [first, back, signed, erased]) await write.erase(paperworkId);
+  const left = { eventId, takenBack, signedFor, swapped };
+  return { left, early, last: await signNow(ports(), seriesId) };
 };
 
 export const openRecordOfANight = async (): Promise<RecordOfANight> => {
@@ -187,11 +191,11 @@ export const openRecordOfANight = async (): Promise<RecordOfANight> => {
   const { night, ...heads } = await write(objects)(world);
   const opened = await openPaddock(world);
   const paddock: Paddock = { ...opened, objects, ports: () => ({ ...opened.ports(), objects }) };
-  const paddockHeads = await fillPaddock(paddock);
+  const { left, ...paddockHeads } = await fillPaddock(paddock);
   const key = (seriesId: string) => formatVerifierKey(world.keys.signer(seriesId).key);
   const kept = new Map([
     [night.seriesId, { key: key(night.seriesId), ...heads }],
     [paddock.seriesId, { key: key(paddock.seriesId), ...paddockHeads }],
   ]);
-  return { world, objects, night, paddock, kept, ports: () => world.ports({ objects }) };
+  return { world, objects, night, paddock, left, kept, ports: () => world.ports({ objects }) };
 };

@@ -68,14 +68,22 @@ export const hexBytes = (row: Readonly<Record<string, unknown>>): Record<string,
     ]),
   );
 
-/** Appends one line to the series' ledger. The last write of its transaction. */
+/** The number of the series' next line; nobody else takes it before the commit. */
+export const nextLine = async (em: EntityManager, seriesId: string): Promise<number> => {
+  const [next] = await em.execute<{ index: string }[]>('select append.next_line(?) as index', [
+    seriesId,
+  ]);
+  return Number(next?.index);
+};
+
+/** Appends one line to the series' ledger, under the number that was taken for it. */
 export const writeLine = async (
   em: EntityManager,
   random: Random,
-  act: string,
-  at: Date,
+  of: { readonly act: string; readonly at: Date; readonly index: number },
   line: NewLedgerLine,
-): Promise<number> => {
+): Promise<void> => {
+  const { act, at, index } = of;
   const contents = Object.entries(line.contents).map(([role, content]) => {
     const salt = random.bytes(SALT_LENGTH);
     const commitment =
@@ -88,10 +96,6 @@ export const writeLine = async (
       commitment: toHex(commitment),
     };
   });
-  const [next] = await em.execute<{ index: string }[]>('select append.next_line(?) as index', [
-    line.seriesId,
-  ]);
-  const index = Number(next?.index);
   const text = lineText({
     series: line.seriesId,
     index,
@@ -111,5 +115,4 @@ export const writeLine = async (
       contents.map(({ role, open, salt, content }) => hexBytes({ role, open, salt, content })),
     ),
   ]);
-  return index;
 };

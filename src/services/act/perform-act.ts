@@ -5,8 +5,8 @@ import { sha256, utf8 } from '@/domain/ledger/bytes';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { fail, type Result } from '@/domain/result';
 import type { JobPayloads, Ports } from '../ports';
-import { type AppendTable, hexBytes, type NewLedgerLine, writeLine } from './append';
-import { withRows } from './with-rows';
+import { type AppendTable, hexBytes, type NewLedgerLine, nextLine, writeLine } from './append';
+import { closeAct, withRows } from './with-rows';
 
 export interface ActRequest {
   /** Client-made UUIDv7: the same one twice is the same act. */
@@ -115,14 +115,18 @@ export const performAct = async <T>(
         jobs.push(() => deps.jobs.send(em, 'sign-checkpoint', { seriesId: line.seriesId }));
       }
       for (const send of jobs) await send();
-      await em.execute('select append.answer_act(?, ?::jsonb)', [
-        id,
-        JSON.stringify({ value: result.value ?? null }),
-      ]);
+      const answer = JSON.stringify({ value: result.value ?? null });
+      const [first, ...others] = lines;
+      if (first === undefined) {
+        await em.execute('select append.answer_act(?, ?::jsonb)', [id, answer]);
+        return result;
+      }
       const tables = ['act', ...appends.map(([table]) => table)];
-      for (const line of lines) {
-        const anchored = await withRows(em, id, tables, line);
-        await writeLine(em, deps.random, id, act.at, anchored);
+      const { rows, index } = await closeAct(em, id, answer, tables, first.seriesId);
+      await writeLine(em, deps.random, { act: id, at: act.at, index }, withRows(first, rows));
+      for (const line of others) {
+        const of = { act: id, at: act.at, index: await nextLine(em, line.seriesId) };
+        await writeLine(em, deps.random, of, withRows(line, rows));
       }
       return result;
     });

@@ -15,27 +15,39 @@ export interface RowsDocument {
   readonly open: readonly string[];
 }
 
-/** The line with one commitment more: to every column of the rows that its act wrote, as they stand. */
-export const withRows = async (
+/** What the database says of an act's rows, and the number of its first line. */
+export interface ClosedAct {
+  readonly rows: Pick<RowsDocument, 'digest' | 'columns'>;
+  readonly index: number;
+}
+
+/** Stores the answer, digests the act's rows, and takes the next line of the series' ledger: one question. */
+export const closeAct = async (
   em: EntityManager,
   act: string,
+  answer: string,
   tables: readonly string[],
-  line: NewLedgerLine,
-): Promise<NewLedgerLine> => {
-  const [row] = await em.execute<{ rows: Pick<RowsDocument, 'digest' | 'columns'> }[]>(
-    'select append.act_digest(?, ?::text[], null) as rows',
-    [act, `{${tables.join()}}`],
+  seriesId: string,
+): Promise<ClosedAct> => {
+  const [row] = await em.execute<{ rows: ClosedAct['rows']; index: string }[]>(
+    'select * from append.close_act(?, ?::jsonb, ?::text[], ?)',
+    [act, answer, `{${tables.join()}}`, seriesId],
   );
   if (row === undefined) throw new Error('The act has no digest.');
+  return { rows: row.rows, index: Number(row.index) };
+};
+
+/** The line with one commitment more: to every column of the rows that its act wrote, as they stand. */
+export const withRows = (line: NewLedgerLine, rows: ClosedAct['rows']): NewLedgerLine => {
   const open = Object.entries(line.contents).flatMap(([role, content]) =>
     content.open ? [role] : [],
   );
   const document: RowsDocument = {
     document: 'tagwire/act-rows',
     version: '1',
-    ...row.rows,
+    ...rows,
     open: open.sort(),
   };
-  const rows = { text: canonicalJson(document), open: false };
-  return { ...line, contents: { ...line.contents, [ROWS_ROLE]: rows } };
+  const said = { text: canonicalJson(document), open: false };
+  return { ...line, contents: { ...line.contents, [ROWS_ROLE]: said } };
 };

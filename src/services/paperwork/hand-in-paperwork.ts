@@ -146,7 +146,12 @@ export const handInPaperwork = async (
           paperwork: { text: document, open: false },
           ...(signature && {
             signature: {
-              text: canonicalJson({ method: signature.method, at: signature.authenticated_at }),
+              text: canonicalJson({
+                method: signature.method,
+                at: signature.authenticated_at,
+                minor: signature.minor_id,
+                guardian: signature.guardian_id,
+              }),
               open: false,
             },
           }),

@@ -70,6 +70,10 @@ export const exampleBlocks = async (): Promise<ReadonlyMap<string, string>> => {
     ['checkpoint', (await headAt(5)).trimEnd()],
     ['newer checkpoint', (await headAt(7)).trimEnd()],
     [
+      'checkpoint with its time',
+      (await headAt(7, [signer], { signedAt: '2027-05-01T16:00:03.250Z' })).trimEnd(),
+    ],
+    [
       'hand-over',
       canonicalJson({
         document: text.key,

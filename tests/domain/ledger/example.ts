@@ -186,8 +186,11 @@ export const lines: readonly string[] = [
 
 export const tree = grow(lines.length, lines.map(lineLeaf));
 
-export const headAt = (size: number, by: readonly NoteSigner[] = [signer]): Promise<string> =>
-  signCheckpoint({ origin: ORIGIN, size, root: tree.root(size) }, by);
+export const headAt = (
+  size: number,
+  by: readonly NoteSigner[] = [signer],
+  time: { readonly signedAt?: string } = {},
+): Promise<string> => signCheckpoint({ origin: ORIGIN, size, root: tree.root(size), ...time }, by);
 
 /** Proves a line of any small ledger under a head of all its lines. */
 export const proofIn = async (

@@ -189,6 +189,25 @@ describe('a checkpoint', () => {
     expect(parseCheckpointText(text).ok).toBe(false);
   });
 
+  it('carries the time of its signing in an extension line, once, and as an instant', async () => {
+    const signedAt = '2027-05-01T16:00:03.250Z';
+    const head = { origin: signer.key.name, size: 12, root, signedAt };
+    const signed = await signCheckpoint(head, [signer]);
+    expect(openCheckpoint(signed, [signer.key])).toEqual({ ok: true, value: head });
+    const later = signed.replace('03.250Z', '04.250Z');
+    expect(openCheckpoint(later, [signer.key]).ok).toBe(false);
+    const text = checkpointText(head);
+    const { signedAt: _, ...without } = head;
+    expect(text.startsWith(checkpointText(without))).toBe(true);
+    for (const wrong of [
+      `${text}tagwire/signed-at ${signedAt}\n`,
+      text.replace('.250Z', 'Z'),
+      text.replace('2027-05-01T', '2027-05-01 '),
+    ])
+      expect(parseCheckpointText(wrong).ok, wrong).toBe(false);
+    expect(() => checkpointText({ ...head, signedAt: 'yesterday' })).toThrow(TypeError);
+  });
+
   it('may carry extension lines, which it does not read', () => {
     const text = `o\n0\n${toBase64(new Uint8Array(32))}\nextension\n`;
     expect(parseCheckpointText(text)).toMatchObject({ ok: true, value: { origin: 'o', size: 0 } });

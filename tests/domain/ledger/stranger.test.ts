@@ -66,6 +66,15 @@ describe('a stranger with the page alone', () => {
     expect(() => checkConsistency(head('newer checkpoint'), head('checkpoint'), [])).toThrow();
   });
 
+  it('reads when a head was signed, where the head says it', () => {
+    const timed = head('checkpoint with its time');
+    expect(timed.signedAt).toBe('2027-05-01T16:00:03.250Z');
+    expect(head('newer checkpoint').signedAt).toBe('');
+    expect(timed.root.equals(head('newer checkpoint').root)).toBe(true);
+    const later = block('checkpoint with its time').replace('03.250Z', '04.250Z');
+    expect(() => readHead(`${later}\n`, key)).toThrow('the signature is wrong');
+  });
+
   it('follows the key', () => {
     expect(checkHandOver(block('hand-over'), key)).toMatch(new RegExp(`^${ORIGIN}\\+`));
   });

@@ -1,6 +1,6 @@
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { toHex } from '@/domain/ledger/bytes';
-import { openCheckpoint } from '@/domain/ledger/checkpoint';
+import { openCheckpoint, signCheckpoint as signHead } from '@/domain/ledger/checkpoint';
 import { lineLeaf } from '@/domain/ledger/line';
 import {
   formatVerifierKey,
@@ -11,11 +11,15 @@ import { frontierOf, rootOf } from '@/domain/ledger/tree';
 import { checkExtension, checkLine } from '@/domain/ledger/verify/check-line';
 import { followKeys } from '@/domain/ledger/verify/follow-keys';
 import { conclude } from '@/domain/ledger/verify/step';
+import { auditLedger } from '@/services/ledger/audit/audit-ledger';
+import { publishKey } from '@/services/ledger/checkpoint/published-key';
 import { signCheckpoint } from '@/services/ledger/checkpoint/sign-checkpoint';
+import { readRoot } from '@/services/ledger/nodes';
 import { findSeriesKeys } from '@/services/ledger/proof/list-keys';
 import { proveExtension, proveLine } from '@/services/ledger/proof/prove-line';
 import { connect } from '../../../scripts/postgres/roles.mjs';
 import { failureOf, get } from '../../support/bay';
+import { FakeObjects } from '../../support/fakes';
 import {
   openRecordWorld,
   type RecordWorld,
@@ -75,6 +79,48 @@ describe('signing the head of a ledger', () => {
     const root = rootOf(frontierOf(lines.map(({ line }) => lineLeaf(line))));
     expect(opened.ok && toHex(opened.value.root)).toBe(toHex(root));
     expect(world.heads.notes.get(seriesId)).toBe(note);
+  });
+
+  it('says in the note when it was signed, and stores no other time', async () => {
+    await write(2);
+    world.clock.set('2026-07-11T21:00:00.125Z');
+    const note = await signNow(world.ports(), seriesId);
+    const opened = openCheckpoint(note, [keyOf('first')]);
+    expect(opened.ok && opened.value.signedAt).toBe('2026-07-11T21:00:00.125Z');
+    const [row] = await world
+      .ports()
+      .db.execute<{ at: Date }[]>('select signed_at as at from record.checkpoint where note = ?', [
+        note,
+      ]);
+    expect(new Date(row?.at ?? 0).toISOString()).toBe('2026-07-11T21:00:00.125Z');
+  });
+
+  it('gives a head that was signed before out again, though its row was lost', async () => {
+    await write(2);
+    const note = await signNow(world.ports(), seriesId);
+    const superuser = await connect(world.database.superuserUrl);
+    await superuser.query('delete from record.checkpoint where series_id = $1', [seriesId]);
+    await superuser.end();
+    world.clock.advance(60_000);
+    expect(await signNow(world.ports(), seriesId)).toBe(note);
+  });
+
+  it('keeps heads of before they said when: stored, audited and proved under as ever', async () => {
+    await write(2);
+    await publishKey(world.ports(), seriesId);
+    const { db } = world.ports();
+    const signer = world.keys.signer(seriesId);
+    const head = { origin: signer.key.name, size: 3, root: await readRoot(db, seriesId, 3) };
+    const old = await signHead(head, [signer]);
+    await db.execute('select append.checkpoint(?, ?, ?)', [seriesId, 3, old]);
+    await write(1);
+    await signNow(world.ports(), seriesId);
+    const asked = { seriesId, heads: [old], keys: [formatVerifierKey(signer.key)] };
+    const objects = new FakeObjects();
+    expect((await auditLedger({ ...world.ports(), objects }, asked)).faults).toEqual([]);
+    const proof = get(await proveLine(world.ports(), { seriesId, index: 1, size: 3 }));
+    expect(proof.checkpoint).toBe(old);
+    expect(conclude(checkLine(proof, [signer.key]).steps)).toBe('passed');
   });
 
   it('signs one head for a burst, whichever of several workers comes first', async () => {

@@ -36,9 +36,14 @@ const set = (
     version,
     uninspectedPaperwork: to,
     penStrokes: to,
+    dayWords: to,
   });
 const look = async ({ seriesId, official }: ReturnType<typeof paddock>) =>
   get(await findRetention(record.ports(), official, seriesId));
+const dueOf = async (of: ReturnType<typeof paddock>, kind: string) =>
+  (await look(of)).due.filter((one) => one.kind === kind);
+const carDue = async (carNumber: string) =>
+  (await dueOf(paddock(), 'paperwork')).filter((one) => one.carNumber === carNumber);
 const erase = (
   { seriesId, official }: ReturnType<typeof paddock>,
   confirmed: readonly string[],
@@ -55,7 +60,7 @@ describe('retention', () => {
     record.world.clock.set('2040-01-01T00:00:00.000Z');
     const found = await look(paddock());
     expect(found).toEqual({
-      set: { uninspectedPaperwork: 'keep', penStrokes: 'keep', version: 0 },
+      set: { uninspectedPaperwork: 'keep', penStrokes: 'keep', dayWords: 'keep', version: 0 },
       due: [],
     });
   });
@@ -79,27 +84,26 @@ describe('retention', () => {
     record.world.clock.set(SEASON_END);
     expect((await look(paddock())).due).toEqual([]);
     record.world.clock.set(AFTER);
-    const { due } = await look(paddock());
-    // Of two that were handed in, one was erased before.
-    expect(due).toMatchObject([
-      { kind: 'paperwork', carNumber: '7', season: '2026', endedOn: '2026-12-31', held: null },
-    ]);
-    const [one] = due;
+    // Of each kind of two that were handed in, one was erased before.
+    const cars = (await dueOf(paddock(), 'paperwork')).map(({ carNumber }) => carNumber);
+    expect(cars.sort()).toEqual(['20', '21', '31', '41', '7']);
+    const [one] = await carDue('7');
+    expect(one).toMatchObject({ season: '2026', endedOn: '2026-12-31', held: null });
     if (one === undefined) throw new Error('nothing is due');
 
     const { seriesId, official } = paddock();
     const hold = { act: uuid(), id: uuid(), seriesId, paperworkId: one.id };
     const reason = 'A protest is open.';
     get(await placeHold(record.ports(), official, { ...hold, reason }));
-    expect((await look(paddock())).due).toMatchObject([{ id: one.id, held: reason }]);
+    expect(await carDue('7')).toMatchObject([{ id: one.id, held: reason }]);
     expect(get(await erase(paddock(), [one.id]))).toEqual({ erased: 0, left: 1 });
     get(await liftHold(record.ports(), official, { act: uuid(), seriesId, holdId: hold.id }));
 
     expect(get(await erase(paddock(), []))).toEqual({ erased: 0, left: 0 });
-    expect((await look(paddock())).due).toHaveLength(1);
+    expect(await carDue('7')).toHaveLength(1);
     const act = uuid();
     expect(get(await erase(paddock(), [one.id, uuid()], act))).toEqual({ erased: 1, left: 1 });
-    expect((await look(paddock())).due).toEqual([]);
+    expect(await carDue('7')).toEqual([]);
     await removeObjects(record.ports(), { seriesId });
     expect(await faults(seriesId)).toEqual([]);
     const [line] = await record.ports().db.execute<{ content: string }[]>(
@@ -115,16 +119,39 @@ describe('retention', () => {
   it('lists pen strokes of inspections, whose reports and signatures stay', async () => {
     record.world.clock.set(AFTER);
     get(await set(night(), 'season-end', 0));
-    const { due } = await look(night());
-    expect(due).toMatchObject([{ kind: 'inspection', carNumber: '12J', held: null }]);
+    const due = await dueOf(night(), 'inspection');
+    expect(due).toMatchObject([{ carNumber: '12J', held: null }]);
     const confirmed = due.map(({ id }) => id);
     expect(get(await erase(night(), confirmed))).toEqual({ erased: 1, left: 0 });
-    expect((await look(night())).due).toEqual([]);
+    expect(await dueOf(night(), 'inspection')).toEqual([]);
     const { seriesId } = night();
     expect(await faults(seriesId)).toEqual([]);
     const reports = await record
       .ports()
       .db.execute<unknown[]>('select 1 from record.report where series_id = ?', [seriesId]);
     expect(reports).toHaveLength(2);
+  });
+
+  it('lists an event whose names and reasons stand, and keeps it while its inspection is held', async () => {
+    record.world.clock.set(AFTER);
+    get(await set(night(), 'season-end', 0));
+    const { seriesId, official } = night();
+    const [event] = await dueOf(night(), 'event');
+    expect(event).toMatchObject({ id: record.night.eventId, carNumber: '', held: null });
+    const [inspection] = await record
+      .ports()
+      .db.execute<{ id: string }[]>(
+        'select id from public.inspection where series_id = ? and event_id = ? limit 1',
+        [seriesId, record.night.eventId],
+      );
+    const hold = { act: uuid(), id: uuid(), seriesId, inspectionId: inspection?.id };
+    const reason = 'A protest is open.';
+    get(await placeHold(record.ports(), official, { ...hold, reason }));
+    expect(await dueOf(night(), 'event')).toMatchObject([{ held: reason }]);
+    expect(get(await erase(night(), [record.night.eventId]))).toEqual({ erased: 0, left: 1 });
+    get(await liftHold(record.ports(), official, { act: uuid(), seriesId, holdId: hold.id }));
+    expect(get(await erase(night(), [record.night.eventId]))).toEqual({ erased: 1, left: 0 });
+    expect(await dueOf(night(), 'event')).toEqual([]);
+    expect(await faults(seriesId)).toEqual([]);
   });
 });

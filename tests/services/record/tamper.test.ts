@@ -26,6 +26,16 @@ beforeAll(async () => {
      where n.nspname = 'record' and c.contype = 'c'`,
   );
   for (const { sql } of checks) await em.fork().execute(sql);
+  const unique = await em.fork().execute<{ sql: string }[]>(
+    `select case when k.oid is null then format('drop index %s', i.indexrelid::regclass)
+       else format('alter table %s drop constraint %I cascade', i.indrelid::regclass, k.conname)
+       end as sql
+     from pg_index i join pg_class c on c.oid = i.indrelid
+     join pg_namespace n on n.oid = c.relnamespace and n.nspname = 'record'
+     left join pg_constraint k on k.conindid = i.indexrelid and k.contype = 'u'
+     where i.indisunique and not i.indisprimary`,
+  );
+  for (const { sql } of unique) await em.fork().execute(sql);
   const needed = await em.fork().execute<{ sql: string }[]>(
     `select format('alter table record.%I alter column %I drop not null', c.relname, a.attname) as sql
      from pg_class c join pg_namespace n on n.oid = c.relnamespace and n.nspname = 'record'
@@ -91,36 +101,8 @@ const OTHER: Readonly<Record<string, string>> = {
   'timestamp with time zone': "coalesce(%c, now()) + interval '1 second'",
 };
 
-/**
- * When a head was stored. The note that is signed carries no time, and nothing is decided by this; what
- * can be known of it is the time of the last line under the head, which is committed to.
- */
-const UNANCHORED = ['checkpoint.signed_at'];
-
-/** Tables of every kind of row that this world holds; others stay empty here. */
-const SAMPLED = [
-  'act',
-  'capture_batch',
-  'checkpoint',
-  'draw',
-  'draw_end',
-  'erasure',
-  'ledger_content',
-  'ledger_head',
-  'ledger_line',
-  'ledger_node',
-  'notice_pdf',
-  'paperwork_decision',
-  'paperwork_version',
-  'reading',
-  'remark',
-  'report',
-  'rule_publication',
-  'rules',
-  'signature_strokes',
-  'verdict',
-  'zero',
-] as const;
+/** Tables of the record of which this world holds no row, each with the reason. */
+const WITHOUT_ROWS: Readonly<Record<string, string>> = {};
 
 interface Table {
   readonly name: string;
@@ -176,7 +158,8 @@ describe('an audit with heads that were issued before', () => {
     const untouched: string[] = [];
     let altered = 0;
     let columns = 0;
-    for (const table of await readTables()) {
+    const tables = await readTables();
+    for (const table of tables) {
       const places = await sampleOf(superuser.em.fork(), table.name);
       if (places.length === 0) untouched.push(table.name);
       else columns += table.columns.length;
@@ -194,12 +177,10 @@ describe('an audit with heads that were issued before', () => {
         }
       }
     }
-    expect([...missed].sort()).toEqual(UNANCHORED);
-    expect(SAMPLED.filter((table) => untouched.includes(table))).toEqual([]);
-    console.info(
-      `altered ${altered} values in ${columns} columns; not held: ${[...missed].join(', ')}; tables without a row here: ${untouched.join(', ') || 'none'}`,
-    );
-  }, 300_000);
+    expect([...missed].sort()).toEqual([]);
+    expect(untouched).toEqual(Object.keys(WITHOUT_ROWS));
+    console.info(`altered ${altered} values in ${columns} columns of ${tables.length} tables`);
+  }, 600_000);
 
   it('names content that is taken away without a line that says so', async () => {
     for (const [table, column] of [
@@ -208,11 +189,10 @@ describe('an audit with heads that were issued before', () => {
       ['paperwork_version', 'document'],
       ['signature_strokes', 'strokes'],
     ] as const) {
-      const kept = await superuser.em
-        .fork()
-        .execute<{ place: string }[]>(
-          `select ctid::text as place from record."${table}" where "${column}" is not null`,
-        );
+      const kept = await superuser.em.fork().execute<{ place: string }[]>(
+        `select ${table === 'ledger_content' ? 'distinct on (role)' : ''} ctid::text as place
+           from record."${table}" where "${column}" is not null`,
+      );
       expect(kept.length).toBeGreaterThan(0);
       for (const { place } of kept) {
         const faults = await tampered((em) =>
@@ -244,7 +224,7 @@ describe('an audit with heads that were issued before', () => {
   });
 
   it('names the table from which a row is deleted', async () => {
-    for (const table of SAMPLED)
+    for (const { name: table } of await readTables())
       for (const { place } of await sampleOf(superuser.em.fork(), table)) {
         const faults = await tampered((em) =>
           em.execute(`delete from record."${table}" where ctid = '${place}'`),
@@ -254,10 +234,17 @@ describe('an audit with heads that were issued before', () => {
   }, 120_000);
 
   it('names a row that was put in, though every column is right for its place', async () => {
+    const withId = (await readTables())
+      .filter(({ name, columns }) => name !== 'act' && columns.some((one) => one.name === 'id'))
+      .map(({ name }) => [name, 'id = gen_random_uuid()'] as const);
+    expect(withId.length).toBeGreaterThan(15);
     for (const [table, change] of [
-      ['reading', 'id = gen_random_uuid()'],
-      ['zero', 'id = gen_random_uuid()'],
-      ['remark', 'id = gen_random_uuid()'],
+      ...withId,
+      ['bulletin_engine', 'paperwork_id = gen_random_uuid()'],
+      ['event_clearance', 'number = number + 1'],
+      ['guardian_signature', 'number = number + 7'],
+      ['paperwork_withdrawal', 'paperwork_id = gen_random_uuid()'],
+      ['result_statement', 'number = number + 7'],
       ['capture_batch', 'number = number + 7'],
       ['report', 'revision = revision + 1'],
       ['signature_strokes', 'revision = revision + 1'],
@@ -289,8 +276,7 @@ describe('an audit with heads that were issued before', () => {
     const seen: string[] = [];
     const batched = ['reading', 'zero', 'remark', 'capture_batch', 'ledger_line'];
     for (const { name, columns } of await readTables()) {
-      const own = columns.map((column) => column.name);
-      if (batched.includes(name) || !own.includes('act_id') || !own.includes('series_id')) continue;
+      if (batched.includes(name) || !columns.some((column) => column.name === 'act_id')) continue;
       // A primary key takes no null: every column of one gets some value of its type.
       const faults = await tampered(async (em) => {
         const keys = await em.execute<{ name: string; type: string }[]>(
@@ -315,7 +301,7 @@ describe('an audit with heads that were issued before', () => {
       seen.push(name);
       expect([name, names(faults, name)]).toEqual([name, true]);
     }
-    expect(seen.length).toBeGreaterThan(8);
+    expect(seen.length).toBeGreaterThan(25);
     console.info(`a row put in was named in each of: ${seen.join(', ')}`);
   }, 120_000);
 
@@ -385,7 +371,7 @@ describe('an audit with heads that were issued before', () => {
     const { stored } = record.objects;
     const keys = [...stored.keys()];
     expect(keys.filter((one) => one.startsWith('notices/'))).toHaveLength(1);
-    expect(keys.filter((one) => one.startsWith('originals/'))).toHaveLength(2);
+    expect(keys.filter((one) => one.startsWith('originals/')).length).toBeGreaterThan(2);
     for (const one of keys) {
       const kept = stored.get(one);
       if (kept === undefined) throw new Error(one);
@@ -402,7 +388,8 @@ describe('an audit with heads that were issued before', () => {
     // The row that says where a photograph is kept is no part of the record; the documents name it.
     const faults = await tampered((em) => em.execute('delete from public.file'));
     expect(wheres(faults)).toEqual(['objects']);
-    expect(faults).toHaveLength(2);
+    const originals = keys.filter((one) => one.startsWith('originals/'));
+    expect(faults.map(({ what }) => `originals/${what}`).sort()).toEqual(originals.sort());
   });
 
   it('names an object of erased content that is still in the store, or was put back', async () => {

@@ -11,8 +11,9 @@ export interface Transfer {
 }
 
 /**
- * Enters a change of hands in the record, and a line in the ledger of every series that has paperwork
- * of the engine. Names stand in neither; the line's content says who by their ids, to the parties.
+ * Enters a change of hands in the record, and a line in the ledger of every series that knows the
+ * engine; where none does, of those in which the two race. Names stand in neither; the line's content
+ * says who by their ids, to the parties.
  */
 export const recordTransfer = async (act: Act, transfer: Transfer): Promise<void> => {
   const { id, engineId, kind, fromId, toId } = transfer;
@@ -21,9 +22,8 @@ export const recordTransfer = async (act: Act, transfer: Transfer): Promise<void
     { id, engine_id: engineId, kind, from_id: fromId, to_id: toId, until_at: untilAt },
   ]);
   const series = await act.em.execute<{ id: string }[]>(
-    `select distinct series_id as id from public.paperwork
-     where engine_id = ? and versions > 0 order by series_id`,
-    [engineId],
+    'select s as id from append.series_of_engine(?, ?, ?) s order by s',
+    [engineId, fromId, toId],
   );
   const said = { kind, from: fromId, to: toId, ...(untilAt !== null && { until: untilAt }) };
   for (const { id: seriesId } of series) {

@@ -66,7 +66,7 @@ export const changeEntry = async (
     readonly eventId: string;
     readonly entryId: string;
   },
-): Promise<Result<{ readonly was: string; readonly becomes: string }, Failure>> => {
+): Promise<Result<null, Failure>> => {
   const { act, seriesId, eventId, entryId, kind } = input;
   const becomes = input.becomes.trim();
   const reason = input.reason.trim();
@@ -118,7 +118,8 @@ export const changeEntry = async (
       if (!done.ok) return done;
       const change = { id: deps.random.uuid(), entryId, kind, reason, ...done.value };
       keepChanges({ append, line }, { seriesId, eventId, by: actor.personId }, [change]);
-      return done;
+      // The answer is kept for good: it repeats no name.
+      return ok(null);
     },
   );
 };

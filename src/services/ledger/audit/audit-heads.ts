@@ -33,10 +33,19 @@ export const sizesOf = (notes: readonly string[]): ReadonlySet<number> =>
     }),
   );
 
+interface StoredHead {
+  readonly size: string;
+  readonly root: string;
+  /** To the microsecond, `2027-05-01T16:00:03.000000Z`. */
+  readonly signedAt: string | null;
+}
+
 /** The stored heads as they stand. */
 export const readHeads = (em: EntityManager, seriesId: string) =>
-  em.execute<{ size: string; root: string; note: string }[]>(
-    `select size, encode(root, 'hex') as root, note from record.checkpoint
+  em.execute<(StoredHead & { readonly note: string })[]>(
+    `select size, encode(root, 'hex') as root, note,
+            to_char(signed_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.US"Z"') as "signedAt"
+     from record.checkpoint
      where series_id = ? order by size`,
     [seriesId],
   );
@@ -46,7 +55,7 @@ export const headFaults = (
   head: {
     readonly note: string;
     readonly what: string;
-    readonly stored?: { size: string; root: string };
+    readonly stored?: StoredHead;
   },
   seriesId: string,
   keys: readonly VerifierKey[],
@@ -55,11 +64,14 @@ export const headFaults = (
   const { note, what, stored } = head;
   const opened = openCheckpoint(note, keys);
   if (!opened.ok) return [inHead(what, opened.failure.detail)];
-  const { size, root, origin } = opened.value;
+  const { size, root, origin, signedAt } = opened.value;
   const faults: AuditFault[] = [];
   if (!isOriginOf(origin, seriesId)) faults.push(inHead(what, 'It is of another series.'));
   if (stored && (Number(stored.size) !== size || stored.root !== toHex(root)))
     faults.push(inHead(what, 'The columns do not say what the signed note says.'));
+  // Heads of before the time was signed hold none.
+  if (stored && signedAt !== undefined && stored.signedAt !== signedAt.replace('Z', '000Z'))
+    faults.push(inHead(what, 'The column does not say when the note says that it was signed.'));
   if (size > grown.size)
     faults.push(
       inHead(what, `It was signed over ${size} lines; ${size - grown.size} of them are gone.`),

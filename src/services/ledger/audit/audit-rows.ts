@@ -2,7 +2,7 @@ import type { EntityManager } from '@mikro-orm/postgresql';
 import type { Line } from '@/domain/ledger/line';
 import { ROWS_ROLE, type RowsDocument } from '../../act/with-rows';
 import { digestsNow, type NamedRows, unknownColumns } from './act-digests';
-import { erasableFaults } from './erasable';
+import { coversErasable, erasableFaults } from './erasable';
 import type { Erasures } from './erasures';
 import { type AuditFault, faultIn } from './fault';
 
@@ -52,14 +52,25 @@ const openFaults = async (
   });
 };
 
-/** Tables of the record whose rows name the act that wrote them. */
+/** Tables of the record whose rows name the act that wrote them, and whether they name a series. */
 const tablesByAct = (em: EntityManager) =>
-  em.execute<{ name: string }[]>(
-    `select c.relname as name from pg_class c
+  em.execute<{ name: string; ofSeries: boolean }[]>(
+    `select c.relname as name, s.attname is not null as "ofSeries" from pg_class c
      join pg_namespace n on n.oid = c.relnamespace and n.nspname = 'record'
      join pg_attribute a on a.attrelid = c.oid and a.attname = 'act_id' and not a.attisdropped
-     join pg_attribute s on s.attrelid = c.oid and s.attname = 'series_id' and not s.attisdropped
+     left join pg_attribute s on s.attrelid = c.oid and s.attname = 'series_id' and not s.attisdropped
      where c.relkind = 'r' order by 1`,
+  );
+
+/** Acts whose rows in a table of no series are held by no line of any ledger. */
+const unheldActs = (em: EntityManager, table: string) =>
+  em.execute<{ act: string | null }[]>(
+    `select distinct t.act_id as act from record."${table}" t where not exists (
+       select from record.ledger_line l
+       join record.ledger_content c on c.series_id = l.series_id and c.line_index = l.index
+         and c.role = ?
+       where l.act_id = t.act_id and append.json_of(c.content) -> 'columns' -> ? is not null)`,
+    [ROWS_ROLE, table],
   );
 
 const strayFaults = async (
@@ -68,14 +79,16 @@ const strayFaults = async (
   claimed: ReadonlyMap<string, ReadonlySet<string>>,
 ): Promise<readonly AuditFault[]> => {
   const faults: AuditFault[] = [];
-  for (const { name } of await tablesByAct(em)) {
+  for (const { name, ofSeries } of await tablesByAct(em)) {
     if (ELSEWHERE.has(name)) continue;
-    const rows = await em.execute<{ act: string | null }[]>(
-      `select distinct act_id as act from record."${name}" where series_id = ?`,
-      [seriesId],
-    );
+    const rows = ofSeries
+      ? await em.execute<{ act: string | null }[]>(
+          `select distinct act_id as act from record."${name}" where series_id = ?`,
+          [seriesId],
+        )
+      : await unheldActs(em, name);
     for (const { act } of rows) {
-      if (act !== null && claimed.get(act)?.has(name)) continue;
+      if (ofSeries && act !== null && claimed.get(act)?.has(name)) continue;
       const words = 'A row belongs to no line of the ledger.';
       faults.push(faultIn(`record.${name}`)(`act ${act ?? 'none'}`, words));
     }
@@ -122,7 +135,7 @@ export const auditRows = async (
     const tables = Object.keys(document.columns);
     claimed.set(act, new Set([...(claimed.get(act) ?? []), ...tables]));
     // A digest of before erasable columns were left out of it ends with them.
-    const gone = erasedActs.has(act) && coversErasable(document);
+    const gone = erasedActs.has(act) && coversErasable(document.columns);
     if (!gone) named.push({ act, line, document });
   }
   return [
@@ -132,7 +145,3 @@ export const auditRows = async (
     ...(await strayFaults(em, seriesId, claimed)),
   ];
 };
-
-const coversErasable = ({ columns }: RowsDocument): boolean =>
-  columns['paperwork_version']?.includes('document') === true ||
-  columns['paperwork_decision']?.includes('remarks') === true;

@@ -1,6 +1,11 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import { signCheckpoint as signHead } from '@/domain/ledger/checkpoint';
-import { formatVerifierKey } from '@/domain/ledger/note/verifier-key';
+import { sameBytes } from '@/domain/ledger/bytes';
+import {
+  type Checkpoint,
+  openCheckpoint,
+  signCheckpoint as signHead,
+} from '@/domain/ledger/checkpoint';
+import { formatVerifierKey, type VerifierKey } from '@/domain/ledger/note/verifier-key';
 import type { Ports } from '../../ports';
 import { findSize, readRoot } from '../nodes';
 import { isLost } from '../restore/lost-heads';
@@ -25,6 +30,17 @@ const signersOf = async (em: EntityManager, { keys }: SigningDeps, seriesId: str
   return handsOver ? [previous, current] : [current];
 };
 
+/** The head remembered of exactly these lines: signed once, though the database has lost its row. */
+const findSame = (
+  note: string | undefined,
+  { size, root }: Pick<Checkpoint, 'size' | 'root'>,
+  key: VerifierKey,
+) => {
+  const head = note === undefined ? undefined : openCheckpoint(note, [key]);
+  const same = head?.ok && head.value.size === size && sameBytes(head.value.root, root);
+  return same ? note : undefined;
+};
+
 /**
  * Signs the head of a series' ledger as it stands, once; a burst of acts is one head. The note is
  * remembered outside the database before it can be shown: should the database ever come back
@@ -47,9 +63,11 @@ export const signCheckpoint = async (
     }
     const signers = await signersOf(em, deps, seriesId);
     const root = await readRoot(em, seriesId, size);
-    const note = await signHead({ origin: deps.keys.signer(seriesId).key.name, size, root }, [
-      ...signers,
-    ]);
+    const { key } = deps.keys.signer(seriesId);
+    const signedAt = deps.clock.now().toISOString();
+    const note =
+      findSame(remembered, { size, root }, key) ??
+      (await signHead({ origin: key.name, size, root, signedAt }, [...signers]));
     await deps.heads.remember(seriesId, note);
     await em.execute('select append.checkpoint(?, ?, ?)', [seriesId, size, note]);
   });

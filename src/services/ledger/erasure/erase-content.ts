@@ -9,7 +9,11 @@ import type { Ports } from '../../ports';
 import { eraseLines, listErasable } from './erase-lines';
 import { findErasureObstacle } from './obstacle';
 
-/** Erases what a paperwork says, for good: every version, its files, the remarks on it. The ledger stays whole. */
+/**
+ * Erases what a paperwork says, for good: every version, its files, the remarks on it, why it was taken
+ * back, who signed for whom, and of an engine that was swapped in its names and seal. The ledger stays
+ * whole.
+ */
 export const eraseContent = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
   actor: Actor,
@@ -23,7 +27,7 @@ export const eraseContent = async (
 ): Promise<Result<{ readonly contents: number; readonly files: number }, Failure>> => {
   const { act: id, seriesId, paperworkId } = input;
   if (!may(actor, 'series.administer', seriesId) || !isId(paperworkId)) return fail(absent());
-  const where = { seriesId, id: paperworkId, versions: { $gt: 0 } };
+  const where = { seriesId, id: paperworkId };
   if ((await deps.db.findOne(Paperwork, where)) === null) return fail(absent());
   const reason = input.reason.trim();
   if (reason.length < 10 || reason.length > 500) {
@@ -35,11 +39,14 @@ export const eraseContent = async (
     actor,
     { id, kind: 'erase-content', seriesId, input: { paperworkId, reason } },
     async (act) => {
-      await act.em.findOneOrFail(Paperwork, where, { lockMode: LockMode.PESSIMISTIC_WRITE });
+      const lock = { lockMode: LockMode.PESSIMISTIC_WRITE } as const;
+      const { versions } = await act.em.findOneOrFail(Paperwork, where, lock);
       const subject = { kind: 'paperwork', id: paperworkId } as const;
       const obstacle = await findErasureObstacle(act.em, seriesId, subject);
       if (obstacle !== undefined) return fail(failure('not-in-this-state', obstacle));
       const contents = await listErasable(act.em, seriesId, subject);
+      // A draft that nobody was given says nothing here.
+      if (contents.length === 0 && versions === 0) return fail(absent());
       if (contents.length === 0)
         return fail(failure('not-in-this-state', 'This paperwork was erased already.'));
       const erased = await eraseLines(act, { seriesId, subject, reason, contents });

@@ -4,11 +4,41 @@ import type { Act } from '../../act/perform-act';
 import type { ErasureDocument } from '../audit/erasures';
 import { forgetPaperwork } from './forget-paperwork';
 
-/** Whose content is erased: what was handed in, or the pen strokes on an inspection's reports. */
+/**
+ * Whose content is erased: what was handed in and said beside it, the pen strokes on an inspection's
+ * reports, or the names and reasons given on an event's day.
+ */
 export interface ErasureSubject {
-  readonly kind: 'paperwork' | 'inspection';
+  readonly kind: 'paperwork' | 'inspection' | 'event';
   readonly id: string;
 }
+
+/** Kinds of lines and the roles of theirs that go with a subject. Migration 0026 has the same list. */
+const ROLES: Readonly<Record<ErasureSubject['kind'], readonly (readonly [string, string])[]>> = {
+  paperwork: [
+    ['paperwork-handed-in', 'paperwork'],
+    ['paperwork-handed-in', 'signature'],
+    ['paperwork-decided', 'decision'],
+    ['paperwork-withdrawn', 'withdrawal'],
+    ['engine-swapped', 'swap'],
+  ],
+  inspection: [
+    ['report-signed', 'strokes'],
+    ['report-revised', 'strokes'],
+  ],
+  event: [
+    ['entries-changed', 'changes'],
+    ['bulletin-acknowledged', 'acknowledgement'],
+    ['part-tagged', 'part'],
+    ['custody-recorded', 'custody'],
+    ['seal-recorded', 'seal'],
+    ['gauge-checked', 'check'],
+  ],
+};
+
+/** Line `l` and content `c` are of a kind and role that can be erased with the subject. */
+export const erasableWith = (kind: ErasureSubject['kind']): string =>
+  `(l.kind, c.role) in (${ROLES[kind].map(([line, role]) => `('${line}', '${role}')`).join(', ')})`;
 
 export interface ErasableContent {
   readonly line: string;
@@ -27,12 +57,8 @@ export const listErasable = (
      from record.ledger_line l
      join record.ledger_content c on c.series_id = l.series_id and c.line_index = l.index
      where l.series_id = ? and c.content is not null
-       and (l.kind, c.role) in (${
-         kind === 'paperwork'
-           ? "('paperwork-handed-in', 'paperwork'), ('paperwork-decided', 'decision')"
-           : "('report-signed', 'strokes'), ('report-revised', 'strokes')"
-       })
-       and l.line::jsonb #>> '{refs,${kind}}' = ?
+       and ${erasableWith(kind)}
+       and ${kind === 'event' ? 'append.event_of_line(l)::text' : `l.line::jsonb #>> '{refs,${kind}}'`} = ?
      order by l.index, c.role`,
     [seriesId, id],
   );

@@ -15,14 +15,16 @@ export const findErasureObstacle = async (
   await lockHolds(em, seriesId);
   const [hold] = await em.execute<{ reason: string }[]>(
     `select reason from public.hold
-     where series_id = ? and lifted_at is null and (subject_id in (?, ?) or subject_id =
-       (select paperwork_id from public.inspection where series_id = ? and id = ?))
+     where series_id = ? and lifted_at is null and (subject_id in (?, ?)
+       or exists (select from public.inspection i where i.series_id = ?
+         and ((i.id = ? and subject_id = i.paperwork_id)
+           or (i.event_id = ? and subject_id in (i.id, i.paperwork_id)))))
      order by since limit 1`,
-    [seriesId, seriesId, subject.id, seriesId, subject.id],
+    [seriesId, seriesId, subject.id, seriesId, subject.id, subject.id],
   );
   if (hold !== undefined)
     return `A hold stands: ${hold.reason} Nothing is erased before it is lifted.`;
-  if (subject.kind === 'inspection') return undefined;
+  if (subject.kind !== 'paperwork') return undefined;
   const [inspection] = await em.execute<{ n: number }[]>(
     'select 1 as n from public.inspection where series_id = ? and paperwork_id = ? limit 1',
     [seriesId, subject.id],

@@ -2,17 +2,11 @@ import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import { isId } from '../../paperwork/own-paperwork';
-import { isoOf, type PaperworkRow, readPaperwork } from '../../paperwork/read/read-row';
+import { type PaperworkRow, readPaperwork } from '../../paperwork/read/read-row';
 import type { Ports } from '../../ports';
 import { type ErasableContent, listErasable } from './erase-lines';
 import { type ErasedPaperwork, findErasure } from './find-erasure';
-
-export interface Hold {
-  readonly id: string;
-  readonly kind: 'series' | 'paperwork';
-  readonly reason: string;
-  readonly since: string;
-}
+import { type Hold, listHolds } from './list-holds';
 
 export interface ErasureDesk {
   readonly row: PaperworkRow;
@@ -31,14 +25,12 @@ export const openErasure = async (
 ): Promise<Result<ErasureDesk, Failure>> => {
   if (!isId(paperworkId)) return fail(absent());
   const { db } = deps;
-  const [row] = await readPaperwork(db, 'p.id = ? and p.versions > 0', [paperworkId]);
+  const [row] = await readPaperwork(db, 'p.id = ?', [paperworkId]);
   if (row === undefined || !may(actor, 'series.administer', row.seriesId)) return fail(absent());
   const { seriesId } = row;
-  const holds = await db.execute<Hold[]>(
-    `select id, subject_kind as kind, reason, ${isoOf('since')} as since from public.hold
-     where series_id = ? and lifted_at is null and subject_id in (?, ?) order by since`,
-    [seriesId, seriesId, paperworkId],
-  );
+  const contents = await listErasable(db, seriesId, { kind: 'paperwork', id: paperworkId });
+  if (row.versions === 0 && contents.length === 0) return fail(absent());
+  const holds = await listHolds(db, seriesId, [paperworkId]);
   const inspections = await db.execute<{ n: number }[]>(
     'select 1 as n from public.inspection where series_id = ? and paperwork_id = ? limit 1',
     [seriesId, paperworkId],
@@ -46,7 +38,7 @@ export const openErasure = async (
   return ok({
     row,
     erased: await findErasure(deps, actor, paperworkId),
-    contents: await listErasable(db, seriesId, { kind: 'paperwork', id: paperworkId }),
+    contents,
     holds,
     inspected: inspections.length > 0,
   });

@@ -6,7 +6,7 @@ import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { lockHolds } from './obstacle';
 
-/** Stops every erasure of a paperwork, or in the whole series, until the hold is lifted. */
+/** Stops every erasure of a paperwork, of an inspection, or in the whole series, until the hold is lifted. */
 export const placeHold = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
   actor: Actor,
@@ -14,17 +14,24 @@ export const placeHold = async (
     readonly act: string;
     readonly id: string;
     readonly seriesId: string;
-    /** The whole series where not given. */
+    /** One of the two, or neither for the whole series. */
     readonly paperworkId?: string | undefined;
+    readonly inspectionId?: string | undefined;
     readonly reason: string;
   },
 ): Promise<Result<{ readonly holdId: string }, Failure>> => {
-  const { act, id, seriesId, paperworkId } = input;
+  const { act, id, seriesId, paperworkId, inspectionId } = input;
   if (!may(actor, 'series.administer', seriesId) || !isId(id)) return fail(absent());
-  if (paperworkId !== undefined) {
+  const [kind, subject] =
+    paperworkId !== undefined
+      ? (['paperwork', paperworkId] as const)
+      : inspectionId !== undefined
+        ? (['inspection', inspectionId] as const)
+        : (['series', seriesId] as const);
+  if (kind !== 'series') {
     const [known] = await deps.db.execute<{ n: number }[]>(
-      'select 1 as n from public.paperwork where series_id = ? and id::text = ?',
-      [seriesId, paperworkId],
+      `select 1 as n from public.${kind} where series_id = ? and id::text = ?`,
+      [seriesId, subject],
     );
     if (known === undefined) return fail(absent());
   }
@@ -33,8 +40,6 @@ export const placeHold = async (
     const detail = 'Say in 10 to 500 characters why nothing may be erased.';
     return fail(invalid([{ pointer: '/reason', detail }]));
   }
-  const [kind, subject] =
-    paperworkId === undefined ? ['series', seriesId] : ['paperwork', paperworkId];
   return performAct(
     deps,
     actor,

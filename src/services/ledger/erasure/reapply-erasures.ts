@@ -38,9 +38,9 @@ const findProven = ({ series, line, salt, document }: PublishedErasure): Proven 
   if (commitment === undefined || salted === undefined) return undefined;
   if (!opens(commitment, salted, sha256(utf8(document)))) return undefined;
   const read = erasureDocument.safeParse(JSON.parse(document));
-  const kind = refs['inspection'] === undefined ? 'paperwork' : 'inspection';
-  const id = refs[kind];
-  return read.success && id !== undefined
+  const kind = (['inspection', 'event', 'paperwork'] as const).find((one) => refs[one]);
+  const id = kind && refs[kind];
+  return read.success && kind !== undefined && id !== undefined
     ? { subject: { kind, id }, document: read.data }
     : undefined;
 };

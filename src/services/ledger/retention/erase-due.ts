@@ -4,6 +4,7 @@ import { fail, ok, type Result } from '@/domain/result';
 import { actIdFor } from '../../notice/act-id';
 import type { Ports } from '../../ports';
 import { eraseContent } from '../erasure/erase-content';
+import { eraseDayWords } from '../erasure/erase-day-words';
 import { eraseStrokes } from '../erasure/erase-strokes';
 import { listDue } from './list-due';
 
@@ -17,7 +18,7 @@ export const eraseDue = async (
   input: {
     readonly act: string;
     readonly seriesId: string;
-    /** Ids of paperwork and inspections, as they stood on the list. */
+    /** Ids of paperwork, inspections and events, as they stood on the list. */
     readonly confirmed: readonly string[];
   },
 ): Promise<Result<{ readonly erased: number; readonly left: number }, Failure>> => {
@@ -36,7 +37,9 @@ export const eraseDue = async (
     const done =
       kind === 'paperwork'
         ? await eraseContent(deps, actor, { ...common, paperworkId: id })
-        : await eraseStrokes(deps, actor, { ...common, inspectionId: id });
+        : kind === 'inspection'
+          ? await eraseStrokes(deps, actor, { ...common, inspectionId: id })
+          : await eraseDayWords(deps, actor, { ...common, eventId: id });
     // A hold or an inspection that came at this moment stops this one, not the others.
     if (done.ok) erased += 1;
     else if (done.failure.name !== 'not-in-this-state') return done;

@@ -11,17 +11,19 @@ export type Keeping = 'keep' | 'season-end';
 export interface Retention {
   readonly uninspectedPaperwork: Keeping;
   readonly penStrokes: Keeping;
+  /** Names and reasons given on an event's day. */
+  readonly dayWords: Keeping;
   /** 0 where nothing was ever set. */
   readonly version: number;
 }
 
 export const readRetention = async (em: EntityManager, seriesId: string): Promise<Retention> => {
   const [row] = await em.execute<Retention[]>(
-    `select uninspected_paperwork as "uninspectedPaperwork", pen_strokes as "penStrokes", version
-     from public.retention where series_id = ?`,
+    `select uninspected_paperwork as "uninspectedPaperwork", pen_strokes as "penStrokes",
+            day_words as "dayWords", version from public.retention where series_id = ?`,
     [seriesId],
   );
-  return row ?? { uninspectedPaperwork: 'keep', penStrokes: 'keep', version: 0 };
+  return row ?? { uninspectedPaperwork: 'keep', penStrokes: 'keep', dayWords: 'keep', version: 0 };
 };
 
 /** A series' setting, and what is due by it, for its officials. */

@@ -16,9 +16,10 @@ export const saveRetention = async (
     readonly version: number;
     readonly uninspectedPaperwork: Keeping;
     readonly penStrokes: Keeping;
+    readonly dayWords: Keeping;
   },
 ): Promise<Result<Retention, Failure>> => {
-  const { act, seriesId, version, uninspectedPaperwork, penStrokes } = input;
+  const { act, seriesId, version, uninspectedPaperwork, penStrokes, dayWords } = input;
   if (!may(actor, 'series.administer', seriesId)) return fail(absent());
   return performAct(
     deps,
@@ -27,20 +28,21 @@ export const saveRetention = async (
       id: act,
       kind: 'save-retention',
       seriesId,
-      input: { version: String(version), uninspectedPaperwork, penStrokes },
+      input: { version: String(version), uninspectedPaperwork, penStrokes, dayWords },
     },
     async ({ em }) => {
-      const values = [uninspectedPaperwork, penStrokes, seriesId];
+      const values = [uninspectedPaperwork, penStrokes, dayWords, seriesId];
       const rows = await em.execute<unknown[]>(
         version === 0
-          ? `insert into public.retention (uninspected_paperwork, pen_strokes, series_id)
-             values (?, ?, ?) on conflict do nothing returning 1`
-          : `update public.retention set uninspected_paperwork = ?, pen_strokes = ?, version = version + 1
+          ? `insert into public.retention (uninspected_paperwork, pen_strokes, day_words, series_id)
+             values (?, ?, ?, ?) on conflict do nothing returning 1`
+          : `update public.retention set uninspected_paperwork = ?, pen_strokes = ?, day_words = ?,
+             version = version + 1
              where series_id = ? and version = ? returning 1`,
         version === 0 ? values : [...values, version],
       );
       if (rows.length === 0) return fail(stale());
-      return ok({ uninspectedPaperwork, penStrokes, version: version + 1 });
+      return ok({ uninspectedPaperwork, penStrokes, dayWords, version: version + 1 });
     },
   );
 };

@@ -31,6 +31,8 @@ export interface Head {
   readonly origin: string;
   readonly size: bigint;
   readonly root: Buffer;
+  /** The instant at which it was signed; empty where the head says none. */
+  readonly signedAt: string;
 }
 
 export interface Proof {
@@ -73,9 +75,16 @@ export const readHead = (note: string, verifierKey: string): Head => {
   for (const bytes of signatures) {
     demand(verify(null, Buffer.from(text), key, bytes.subarray(4)), 'the signature is wrong');
   }
-  const [origin = '', size = '', root = ''] = text.split('\n');
+  const [origin = '', size = '', root = '', ...extensions] = text.slice(0, -1).split('\n');
   demand(origin === name, 'the key is another ledger’s');
-  return { origin, size: BigInt(size), root: base64Of(root) };
+  const times = extensions.filter((line) => line.startsWith('tagwire/signed-at '));
+  const signedAt = (times[0] ?? '').slice('tagwire/signed-at '.length);
+  demand(times.length <= 1, 'two times');
+  demand(
+    times.length === 0 || /^\d{4}-\d\d-\d\dT\d\d:\d\d:\d\d\.\d{3}Z$/.test(signedAt),
+    'the time is no instant',
+  );
+  return { origin, size: BigInt(size), root: base64Of(root), signedAt };
 };
 
 const leaf = (line: string): Buffer => sha256(Uint8Array.of(0), line);

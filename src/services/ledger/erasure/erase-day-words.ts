@@ -1,0 +1,53 @@
+import { LockMode } from '@mikro-orm/postgresql';
+import { type Actor, may } from '@/domain/access/permission';
+import { absent, type Failure, failure, invalid } from '@/domain/failure';
+import { fail, ok, type Result } from '@/domain/result';
+import { Event } from '@/entities/event/event';
+import { performAct } from '../../act/perform-act';
+import { isId } from '../../paperwork/own-paperwork';
+import type { Ports } from '../../ports';
+import { eraseLines, listErasable } from './erase-lines';
+import { findErasureObstacle } from './obstacle';
+
+/**
+ * Erases the names and reasons given on an event's day: changes of entries, who signed on, custody,
+ * seals, witnesses of gauge checks. That each happened, and when, stands; so do reports and verdicts.
+ */
+export const eraseDayWords = async (
+  deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs'>,
+  actor: Actor,
+  input: {
+    readonly act: string;
+    readonly seriesId: string;
+    readonly eventId: string;
+    /** Published in the ledger: it names no person. */
+    readonly reason: string;
+  },
+): Promise<Result<{ readonly contents: number }, Failure>> => {
+  const { act: id, seriesId, eventId } = input;
+  if (!may(actor, 'series.administer', seriesId) || !isId(eventId)) return fail(absent());
+  const where = { seriesId, id: eventId };
+  if ((await deps.db.findOne(Event, where)) === null) return fail(absent());
+  const reason = input.reason.trim();
+  if (reason.length < 10 || reason.length > 500) {
+    const detail = 'Say in 10 to 500 characters why they are erased, without naming anybody.';
+    return fail(invalid([{ pointer: '/reason', detail }]));
+  }
+  return performAct(
+    deps,
+    actor,
+    { id, kind: 'erase-day-words', seriesId, input: { eventId, reason } },
+    async (act) => {
+      // Whoever changes entries or records a check of the event waits here.
+      await act.em.findOneOrFail(Event, where, { lockMode: LockMode.PESSIMISTIC_WRITE });
+      const subject = { kind: 'event', id: eventId } as const;
+      const obstacle = await findErasureObstacle(act.em, seriesId, subject);
+      if (obstacle !== undefined) return fail(failure('not-in-this-state', obstacle));
+      const contents = await listErasable(act.em, seriesId, subject);
+      if (contents.length === 0)
+        return fail(failure('not-in-this-state', 'There are no names and reasons to be erased.'));
+      await eraseLines(act, { seriesId, subject, reason, contents });
+      return ok({ contents: contents.length });
+    },
+  );
+};
