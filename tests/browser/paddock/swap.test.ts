@@ -26,7 +26,21 @@ test(
         const official = await enter();
         await official.signInAs(OFFICIAL);
         const spare = `S-${stamp.slice(-4)}`.toUpperCase();
-        const classId = await openClass(official, `Swap Eight ${stamp}`);
+        const className = `Swap Eight ${stamp}`;
+        const classId = await openClass(official, className);
+        // This class wants the rest in two days.
+        await official.open('/office/series/corran-valley');
+        await official.page
+          .getByText(`Engine swaps: the rest is due in 3 days, ${className}`)
+          .click();
+        await official.page
+          .getByLabel(`Days until the rest of the paperwork is due, ${className}`)
+          .fill('2');
+        await official.page.getByRole('button', { name: `Set the days, ${className}` }).click();
+        await official.page
+          .getByText(`Engine swaps: the rest is due in 2 days, ${className}`)
+          .waitFor();
+        await look(official, 'swap-days');
         const seriesId = await one("select id from public.series where slug = 'corran-valley'");
         const eventId = randomUUID();
         await send(official, `/api/events/${seriesId}`, {
@@ -83,7 +97,11 @@ test(
         });
         await look(competitor, 'swap');
         await hand.tap(page.getByRole('button', { name: 'Swap the engine of car 61' }));
+        const inTwoDays = () => new Date(Date.now() + 2 * 86_400_000).toISOString().slice(0, 10);
+        const earliest = inTwoDays();
         await page.getByText('The officials see it now.').waitFor();
+        const due = /due by ([\d-]+)\./.exec((await page.locator('main').textContent()) ?? '')?.[1];
+        expect([earliest, inTwoDays()]).toContain(due);
 
         await official.open('/office/paperwork');
         const row = official.page.getByRole('row', { name: new RegExp(spare) });
@@ -114,6 +132,14 @@ test(
         await page.getByText(/of 8 answered/).waitFor();
         // What the swap said is filled in.
         expect(await page.locator('main').textContent()).toContain('0418');
+        await competitor.open('/paddock');
+        await page
+          .getByText(new RegExp(`^Engine ${spare} went into car 61; the rest .* is due`))
+          .waitFor();
+        const first = page.getByRole('table', { name: 'Paperwork' }).getByRole('row').nth(1);
+        expect(await first.textContent()).toContain(spare);
+        expect(await first.textContent()).toContain('Rest due by');
+        await look(competitor, 'paddock-rest-due');
       });
     } finally {
       await client.end();
