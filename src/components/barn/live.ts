@@ -55,6 +55,7 @@ export const followBarn = (
   let state: LiveState = 'connecting';
   let read = since;
   let endSilence = () => {};
+  let waits = false;
   let endAsking = () => {};
   let endAgain = () => {};
 
@@ -70,12 +71,19 @@ export const followBarn = (
     endAgain();
     become('live');
   };
+  // Asked for again while it waits, it keeps its time: a stream that fails every few seconds would put it off for good.
   const ask = () => {
-    endAsking();
-    endAsking = means.after(ASK_MS, () => {
+    if (waits) return;
+    waits = true;
+    const end = means.after(ASK_MS, () => {
+      waits = false;
       onRefresh();
       ask();
     });
+    endAsking = () => {
+      waits = false;
+      end();
+    };
   };
   const failed = () => {
     stream?.close();

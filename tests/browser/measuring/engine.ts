@@ -107,6 +107,28 @@ export const openEngine = async (clauses: readonly Clause[]): Promise<OpenEngine
   return { id: inspection, path: `/barn/inspections/${inspection}/measure` };
 };
 
+/** Puts a gauge into the demo's register by hand, in calibration tonight. */
+export const addGauge = async (
+  code: string,
+  description: Readonly<Record<string, unknown>>,
+): Promise<void> => {
+  await query(
+    `insert into public.gauge
+     select (jsonb_populate_record(g, $1::jsonb)).* from public.gauge g where g.code = 'MIC-014'`,
+    [
+      JSON.stringify({
+        id: randomUUID(),
+        code,
+        description: {
+          calibratedOn: '2020-01-01',
+          dueOn: '2099-12-31',
+          ...description,
+        },
+      }),
+    ],
+  );
+};
+
 export interface Kept {
   readonly readings: readonly {
     readonly quantity: string;

@@ -141,6 +141,17 @@ describe('following the barn', () => {
     expect(one.streams).toHaveLength(1);
   });
 
+  it('asks every ten seconds though the stream fails anew every three', () => {
+    const one = follow();
+    last(one.streams).readyState = 0;
+    for (let second = 0; second < 30; second += 3) {
+      last(one.streams).fire('error');
+      one.pass(3_000);
+    }
+    expect(one.refreshed()).toBe(3);
+    expect(one.states).toEqual(['asking']);
+  });
+
   it('leaves nothing running once it is stopped', () => {
     const one = follow();
     last(one.streams).readyState = 2;

@@ -43,8 +43,8 @@ interface Told {
 
 /** The cells of the top bar; the last one is what another tablet has just recorded. */
 export const factsOf = ({ sheet, gauge }: Bay, heard: Heard | undefined): readonly Told[] => [
-  { name: 'Engine', value: sheet.engine },
-  { name: 'Bay', value: sheet.bay || '–' },
+  { name: 'Engine', value: sheet.engine, minor: heard !== undefined },
+  { name: 'Bay', value: `${sheet.bay || '–'}${sheet.state === 'held-hot' ? ', held' : ''}` },
   { name: 'Inspector', value: sheet.inspector, minor: true },
   ...(gauge === undefined
     ? []
@@ -64,20 +64,23 @@ export const stateNoteOf = ({
 }: {
   readonly state: InspectionState;
   readonly correcting: boolean;
-}): { readonly title: string; readonly words: string } | undefined => {
+}): { readonly title: string; readonly words: string; readonly counts: boolean } | undefined => {
   if (correcting || state === 'open') return undefined;
   if (acceptsReadings(state))
     return {
       title: 'Held until parts have settled',
       words: 'What is read now counts. Read hot bores again once the block has cooled.',
+      counts: true,
     };
   return state === 'closed'
     ? {
         title: 'The report is signed and closed',
         words: 'What is entered now is kept and does not count.',
+        counts: false,
       }
     : {
         title: 'This inspection is not open',
         words: 'What is entered now is kept and does not count.',
+        counts: false,
       };
 };

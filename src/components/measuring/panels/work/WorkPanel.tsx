@@ -164,7 +164,7 @@ export const WorkPanel = (props: WorkPanelProps) => {
         result.secondSets.length > 0 && (
           <SecondSet key={boreName(position)} bay={bay} hands={hands} result={result} />
         )}
-      {stateNote !== undefined && (
+      {stateNote !== undefined && !(complete && stateNote.counts) && (
         <Caution title={stateNote.title}>
           <p>{stateNote.words}</p>
         </Caution>
