@@ -158,6 +158,7 @@ test('a file is mapped and entered, all cars are checked, one page is signed, re
     const chief = await enter();
     await chief.signInAs(CHIEF);
     await addScale(chief, `SC-${stamp}`);
+    await addScale(chief, `SD-${stamp}`);
 
     // Every car over the scale, on a tablet; another tablet sees it at once.
     const tablet = await enter(TABLET);
@@ -186,8 +187,24 @@ test('a file is mapped and entered, all cars are checked, one page is signed, re
     await tablet.page.getByRole('button', { name: /^Sign for/ }).click();
     await tablet.page.getByText('Car 8: clause 2 is not checked').waitFor();
     await tablet.page.getByRole('link', { name: 'Back to the checks' }).click();
-    await tablet.page.getByLabel('Read on').selectOption({ label: `SC-${stamp}, Platform scale` });
+    // Written down under the wrong scale: corrected with why, and not weighed or typed again.
+    await tablet.page.getByLabel('Read on').selectOption({ label: `SD-${stamp}, Platform scale` });
     await weigh('8', '2834', 'Passed');
+    const row = tablet.page
+      .getByRole('listitem')
+      .filter({ has: tablet.page.getByLabel('Car 8, lb') });
+    await row.getByText(`2834 lb, SD-${stamp}`).waitFor();
+    await row.getByText('Another gauge').click();
+    await row
+      .getByLabel('Gauge it was read on, car 8')
+      .selectOption({ label: `SC-${stamp}, Platform scale` });
+    await row.getByLabel('Why the gauge is corrected, car 8').fill('It stood on the other scale');
+    await tablet.expectAccessible();
+    await tablet.expectNoSidewaysScroll();
+    await tablet.shot('event-820-correct-gauge');
+    await row.getByRole('button', { name: 'Correct the gauge' }).click();
+    await row.getByText(`2834 lb, SC-${stamp}`).waitFor();
+    await row.getByText('Gauge corrected: It stood on the other scale').waitFor();
     await tablet.page.getByRole('link', { name: 'One page, one signature' }).click();
     await tablet.page.getByRole('button', { name: 'Sign for 3 cars', exact: true }).click();
     await tablet.page.getByText(`Signed by ${INSPECTOR}`).waitFor();

@@ -1,11 +1,12 @@
 import type { InspectionAssessment } from '@/domain/inspection/assess-inspection';
+import type { GaugeRecord } from '@/domain/inspection/capture/gauge-record';
 import type { Finding } from '@/domain/inspection/finding';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import { GaugeStrip } from '../look/GaugeStrip';
 import { ReadingValue } from '../look/ReadingValue';
 import { StatusWord } from '../look/StatusWord';
 import { markOfState, wordOfState } from '../look/status';
-import { shownResult } from '../measuring/sheet/shown';
+import { shownResult, valueRead } from '../measuring/sheet/shown';
 
 const verdict = ({ pass, state }: Finding): string =>
   pass === null ? wordOfState(state) : `${wordOfState(state)}: ${pass ? 'pass' : 'fail'}`;
@@ -19,9 +20,11 @@ const telling = ({ perPosition }: Finding) =>
 export const SeenFindings = ({
   rules,
   assessment,
+  gauges,
 }: {
   readonly rules: RulesInForce;
   readonly assessment: InspectionAssessment;
+  readonly gauges: readonly GaugeRecord[];
 }) => (
   <ol className="list-rows" aria-label="Findings">
     {assessment.findings
@@ -30,6 +33,7 @@ export const SeenFindings = ({
         const clause = rules.clauses.find(({ number }) => number === finding.clause);
         const result = telling(finding);
         const shown = clause && result && shownResult(clause, result);
+        const value = clause && result && valueRead(clause, finding, result, gauges);
         const checked = [...new Set(finding.perPosition.flatMap(({ checked: said = [] }) => said))];
         return (
           <li key={finding.clause} className="witness-finding">
@@ -39,14 +43,14 @@ export const SeenFindings = ({
                 <strong>{finding.heading}</strong>
               </p>
               {finding.limit !== undefined && <p>{finding.limit}</p>}
-              {shown !== undefined && result?.value !== undefined && (
+              {shown !== undefined && result !== undefined && value !== undefined && (
                 <>
                   <p>
                     {result.position}:{' '}
                     <ReadingValue
                       large
-                      value={result.value.text}
-                      unit={result.value.unit}
+                      value={value.text}
+                      unit={value.unit}
                       {...(result.uncertainty === undefined || result.coverageFactor === undefined
                         ? {}
                         : {

@@ -86,7 +86,7 @@ export const WitnessSheet = ({ sheet, head, open, checks }: WitnessSheetProps) =
         {open && <SavedLine state={capture.saved.state} at={capture.saved.at} />}
       </header>
       <section>
-        <SeenFindings rules={sheet.rules} assessment={assessment} />
+        <SeenFindings rules={sheet.rules} assessment={assessment} gauges={sheet.gauges} />
       </section>
       <section>
         <h2>The gauge</h2>

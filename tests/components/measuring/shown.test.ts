@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { placesRead, shownResult } from '@/components/measuring/sheet/shown';
+import { placesRead, shownResult, valueRead } from '@/components/measuring/sheet/shown';
 import { assessInspection } from '@/domain/inspection/assess-inspection';
 import { body, GAUGES, RULES, reading, record } from '../../domain/inspection/build';
 
@@ -18,7 +18,7 @@ const shownAt = (number: string, readings: Parameters<typeof body>[]) => {
   if (finding === undefined || result === undefined) throw new Error('no result');
   const clause = clauseOf(number);
   const most = placesRead(clause, finding, GAUGES);
-  return { result, most, value: shownResult(clause, result, most)?.value };
+  return { finding, result, most, value: shownResult(clause, result, most)?.value };
 };
 
 const eight: Parameters<typeof body>[] = [
@@ -49,6 +49,15 @@ describe('a mean on the screen', () => {
     const { most, value } = shownAt('4.6', eight);
     expect(most).toBe(2);
     expect(value).toMatch(/^1\.\d\d$/);
+  });
+
+  it('in the unit of the rule too, for the competitor’s side', () => {
+    const { finding, result } = shownAt('4.2', eight);
+    expect(valueRead(clauseOf('4.2'), finding, result, GAUGES)).toEqual({
+      text: '0.84244',
+      unit: 'in',
+    });
+    expect(valueRead(clauseOf('4.2'), finding, result, [])).toEqual(result.value);
   });
 
   it('is as it was written where no gauge says what it resolves', () => {

@@ -42,10 +42,11 @@ export const placesRead = (
   { requirement }: Clause,
   { gauges: ids }: Pick<Finding, 'gauges'>,
   gauges: readonly Pick<GaugeRecord, 'id' | 'division'>[],
+  inUnit?: string,
 ): number | undefined => {
   if (requirement?.kind !== 'limit') return undefined;
   const { dimension } = getQuantityEntry(requirement.quantity);
-  const { unit } = unitShown(requirement);
+  const unit = inUnit ?? unitShown(requirement).unit;
   const resolved = gauges.flatMap(({ id, division }) => {
     const read = ids.includes(id) && division ? parseWritten(division, dimension) : undefined;
     return read?.ok === true ? [decimalsOf(convert(read.value, unit).text)] : [];
@@ -119,6 +120,21 @@ export const shownResult = (
           }),
     },
   };
+};
+
+/** A result's value in the unit of its rule, rounded half to even to what its gauges resolve and one place more. */
+export const valueRead = (
+  clause: Clause,
+  finding: Finding,
+  { value, exact }: PositionResult,
+  gauges: readonly Pick<GaugeRecord, 'id' | 'division'>[],
+): Written | undefined => {
+  const { requirement } = clause;
+  if (value === undefined || requirement?.kind !== 'limit') return value;
+  const most = placesRead(clause, finding, gauges, value.unit);
+  if (most === undefined || decimalsOf(value.text) <= most) return value;
+  const read = parseWritten(exact ?? value, getQuantityEntry(requirement.quantity).dimension);
+  return read.ok ? { text: asciiIn(read.value, value.unit, most), unit: value.unit } : value;
 };
 
 export const resultAt = (
