@@ -23,6 +23,7 @@ export const useLive = (first: Sheet): Live => {
   const [sheet, setSheet] = useState(first);
   const [link, setLink] = useState<LiveState>('connecting');
   const seen = useRef(seenFrom(first.batch));
+  const [turn, setTurn] = useState(0);
 
   useEffect(() => {
     const leave = new AbortController();
@@ -52,12 +53,18 @@ export const useLive = (first: Sheet): Live => {
       for (const timer of timers) window.clearTimeout(timer);
       leave.abort();
     };
+    // A page that comes back as it was left has missed what happened meanwhile.
+    const back = ({ persisted }: PageTransitionEvent) => {
+      if (persisted) setTurn(turn + 1);
+    };
     window.addEventListener('pagehide', stop);
+    window.addEventListener('pageshow', back);
     return () => {
       window.removeEventListener('pagehide', stop);
+      window.removeEventListener('pageshow', back);
       stop();
     };
-  }, [first]);
+  }, [first, turn]);
 
   const onKept = useCallback(({ batch, received, marked }: CapturesAnswer) => {
     // What does not count, or counts for no breach, is read as the server has it.

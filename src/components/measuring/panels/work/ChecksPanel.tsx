@@ -1,43 +1,12 @@
 import { useEffect, useRef, useState } from 'react';
 import { padKeyOf, padMayTake } from '@/components/tappet/keys';
 import type { CheckAsk } from '@/domain/inspection/plan/check-asks';
-import type { Clause } from '@/domain/rulebook/clause';
 import { findAnswer } from '@/domain/rulebook/evaluate/facts';
 import { type BorePosition, boreName } from '@/domain/tappet/layout/bore-layout';
 import type { Bay, Hands } from '../../bay';
 import { checkRow } from '../../sheet/rows';
 import { placeOf } from '../../sheet/sheet';
-
-type Check = NonNullable<Clause['requirement']>;
-interface Answer {
-  readonly value: string;
-  readonly label: string;
-}
-
-const answersOf = (check: Check, declared: string | undefined): readonly Answer[] => {
-  switch (check.kind) {
-    case 'choice':
-      return check.options;
-    case 'yes-no':
-      return [
-        { value: 'yes', label: 'Yes' },
-        { value: 'no', label: 'No' },
-      ];
-    case 'plug-gauge':
-      return [
-        { value: 'goes', label: 'Goes' },
-        { value: 'does-not-go', label: 'Does not go' },
-      ];
-    default:
-      return declared === undefined ? [] : [{ value: declared, label: `As declared: ${declared}` }];
-  }
-};
-
-const questionOf = (check: Check): string => {
-  if (check.kind === 'plug-gauge')
-    return `${check.gauge === 'go' ? 'Go' : 'No-go'} gauge ${check.size.text} ${check.size.unit}, ${check.where}. Offer it by hand, never force it.`;
-  return 'question' in check ? check.question : '';
-};
+import { answersOf, checkKey, nextCheck, questionOf, whereWords } from './check-answers';
 
 const Text = ({
   given,
@@ -67,28 +36,6 @@ const Text = ({
       </button>
     </form>
   );
-};
-
-const checkKey = ({ clause, position }: CheckAsk): string => `${clause.number} ${position}`;
-
-/** The check that comes first here: of this bore, then of the engine, then of the next bore. */
-const nextCheck = (
-  { checks, position }: Bay,
-  bore: string,
-  given: ReadonlySet<string>,
-): CheckAsk | undefined => {
-  const open = checks.filter((one) => one.answer === undefined && !given.has(checkKey(one)));
-  return (
-    open.find((one) => one.position === bore) ??
-    open.find((one) => one.position === 'engine' || one.position === 'car') ??
-    open.find((one) => one.position === String(position.cylinder)) ??
-    open[0]
-  );
-};
-
-const whereWords = ({ position }: CheckAsk): string => {
-  if (position === 'engine' || position === 'car') return 'whole engine';
-  return /^\d+$/.test(position) ? `cylinder ${position}` : position;
 };
 
 const positionFor = ({ positions, position }: Bay, key: string): BorePosition =>
