@@ -16,17 +16,18 @@ const idsOf = ({ readings, zeros, remarks }: SheetRows): ReadonlySet<string> =>
  * Whose a row is, where it is not this person's at this tablet: a name, or "another tablet" for one of
  * their own that came while the page was open.
  */
-export const whoseFrom =
-  (
-    { personId, people }: Pick<Sheet, 'personId' | 'people'>,
-    onPage: SheetRows,
-    own: ReadonlySet<string>,
-  ) =>
-  ({ id, takenBy }: Row): string | undefined => {
+export const whoseFrom = (
+  { personId, people }: Pick<Sheet, 'personId' | 'people'>,
+  onPage: SheetRows,
+  own: ReadonlySet<string>,
+): ((row: Row) => string | undefined) => {
+  const before = idsOf(onPage);
+  return ({ id, takenBy }) => {
     if (own.has(id)) return undefined;
     if (takenBy !== personId) return people[takenBy] ?? 'another inspector';
-    return idsOf(onPage).has(id) ? undefined : 'another tablet';
+    return before.has(id) ? undefined : 'another tablet';
   };
+};
 
 export interface Heard {
   readonly by: string;
