@@ -46,21 +46,23 @@ export const lastHeard = (
   whose: (row: Row) => string | undefined,
 ): Heard | undefined => {
   const before = idsOf(onPage);
-  const words = ({ row, place }: JudgedReading, more = '') => {
-    const { per } = getQuantityEntry(row.quantity);
-    const where = per === 'engine' || per === 'car' ? '' : `${positionKey(place, per)} `;
-    return `${where}${row.value.text.replace('-', '−')}${more}`;
-  };
+  const isNews = (row: Row) => !before.has(row.id) && whose(row) !== undefined;
   const told = [
-    ...judged.map((reading) => ({ row: reading.row, words: words(reading) })),
+    ...judged.filter(({ row }) => isNews(row)).map((reading) => ({ row: reading.row, reading })),
     ...remarks.flatMap((row) => {
-      const struck = row.kind === 'strike' && judged.find((one) => one.row.id === row.readingId);
-      return struck ? [{ row, words: words(struck, ' struck') }] : [];
+      if (row.kind !== 'strike' || !isNews(row)) return [];
+      const struck = judged.find((one) => one.row.id === row.readingId);
+      return struck === undefined ? [] : [{ row, reading: struck }];
     }),
-  ].flatMap(({ row, words: said }) => {
-    const by = before.has(row.id) ? undefined : whose(row);
-    return by === undefined ? [] : [{ at: Date.parse(row.occurredAt), by, words: said }];
-  });
-  const last = told.sort((a, b) => a.at - b.at).at(-1);
-  return last && { by: last.by, words: last.words };
+  ];
+  const last = told
+    .sort((a, b) => Date.parse(a.row.occurredAt) - Date.parse(b.row.occurredAt))
+    .at(-1);
+  if (last === undefined) return undefined;
+  const { row, reading } = last;
+  const { per } = getQuantityEntry(reading.row.quantity);
+  const where = per === 'engine' || per === 'car' ? '' : `${positionKey(reading.place, per)} `;
+  const value = reading.row.value.text.replace('-', '−');
+  const words = `${where}${value}${row === reading.row ? '' : ' struck'}`;
+  return { by: whose(row) ?? '', words };
 };
