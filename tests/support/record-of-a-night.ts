@@ -179,7 +179,9 @@ const fillPaddock = async (paddock: Paddock) => {
   const swapped = await write.swap(entries[1] ?? '', 'SPARE-2');
   await write.serveOtherwise();
   await write.sell(engineId, 'Bought 1');
-  await write.sell(await write.undeclared(), 'Bought 2');
+  const shelved = await write.undeclared();
+  await write.correct(shelved);
+  await write.sell(shelved, 'Bought 2');
   for (const paperworkId of [first, back, signed, erased]) await write.erase(paperworkId);
   const left = { eventId, takenBack, signedFor, swapped };
   return { left, early, last: await signNow(ports(), seriesId) };

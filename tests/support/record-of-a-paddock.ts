@@ -2,6 +2,7 @@ import type { SwapRequest } from '@/contracts/engine/swap';
 import { sha256, toHex } from '@/domain/ledger/bytes';
 import type { Clause } from '@/domain/rulebook/clause';
 import { createEngine } from '@/services/engine/create-engine';
+import { correctEngine } from '@/services/engine/facts/correct-engine';
 import { swapEngine } from '@/services/engine/swap/swap-engine';
 import { acceptEngineOffer } from '@/services/engine/transfer/accept-engine-offer';
 import { offerEngine } from '@/services/engine/transfer/offer-engine';
@@ -184,6 +185,11 @@ export const recordThePaddock = (paddock: Paddock) => {
     return id;
   };
 
+  const correct = async (engineId: string) => {
+    const facts = { blockCasting: '41-7731', headCastings: '62-119', serial: '0418' };
+    must(await correctEngine(ports(), competitor, { act: uuid(), engineId, version: 1, ...facts }));
+  };
+
   return {
     decide,
     returned,
@@ -197,5 +203,6 @@ export const recordThePaddock = (paddock: Paddock) => {
     serveOtherwise,
     sell,
     undeclared,
+    correct,
   };
 };

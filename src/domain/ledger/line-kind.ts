@@ -45,6 +45,7 @@ export const LINE_KINDS = [
   'engine-swapped',
   'served-otherwise',
   'check-recorded',
+  'engine-corrected',
 ] as const;
 
 export type LineKind = (typeof LINE_KINDS)[number];

@@ -47,6 +47,7 @@ const WORDS: { readonly [K in LineKind]: string } = {
   'seal-recorded': 'An engine’s seal was applied, found or removed.',
   'served-otherwise': 'Somebody whom a message did not reach was served otherwise.',
   'check-recorded': 'A car was checked without teardown, or a check was taken back.',
+  'engine-corrected': 'Castings or the serial of an engine were put right by its owner.',
 };
 
 /** Kinds of later versions are shown by their own name. */

@@ -1,5 +1,6 @@
 import type { SealRow } from '../inspection/custody/seals';
 import type { BoreLayout } from '../tappet/layout/bore-layout';
+import type { EngineFacts } from './engine-facts';
 
 export interface OwnEngine {
   readonly id: string;
@@ -22,6 +23,15 @@ export interface TransferSeen {
   readonly to: string;
   readonly untilAt: string | null;
   readonly at: string;
+}
+
+/** What the owner put right of an engine; each fact before and since. */
+export interface CorrectionSeen {
+  readonly id: string;
+  readonly at: string;
+  readonly by: string;
+  readonly before: EngineFacts;
+  readonly now: EngineFacts;
 }
 
 export interface AcceptedSeen {

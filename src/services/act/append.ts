@@ -26,6 +26,7 @@ export type AppendTable =
   | 'erasure'
   | 'engine_transfer'
   | 'engine_swap'
+  | 'engine_correction'
   | 'guardian_signature'
   | 'paperwork_withdrawal'
   | 'entry_change'

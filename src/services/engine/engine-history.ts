@@ -2,6 +2,7 @@ import type { EntityManager } from '@mikro-orm/postgresql';
 import type { SealAct } from '@/domain/inspection/custody/seals';
 import type {
   AcceptedSeen,
+  CorrectionSeen,
   SealChecked,
   SealGiven,
   SealSeen,
@@ -17,6 +18,19 @@ export const readTransfers = (em: EntityManager, engineId: string): Promise<Tran
      from record.engine_transfer t join public.person a on a.id = t.from_id
      join public.person b on b.id = t.to_id
      where t.engine_id = ? order by t.received_at, t.id`,
+    [engineId],
+  );
+
+/** What the engine's owners put right of it, in order of time. */
+export const readCorrections = (em: EntityManager, engineId: string): Promise<CorrectionSeen[]> =>
+  em.execute<CorrectionSeen[]>(
+    `select c.id, ${isoOf('c.received_at')} as at, p.name as by,
+       json_build_object('blockCasting', c.block_casting_before,
+         'headCastings', c.head_castings_before, 'serial', c.serial_before) as before,
+       json_build_object('blockCasting', c.block_casting, 'headCastings', c.head_castings,
+         'serial', c.serial) as now
+     from record.engine_correction c join public.person p on p.id = c.corrected_by
+     where c.engine_id = ? order by c.received_at, c.id`,
     [engineId],
   );
 

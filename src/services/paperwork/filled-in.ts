@@ -1,15 +1,12 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
+import { type EngineFacts, factNamed } from '@/domain/paddock/engine-facts';
 import { EMPTY_DRAFT, findTyped, type PaperworkDraft, withAnswer } from '@/domain/paperwork/draft';
 import type { PaperworkForm } from '@/domain/rulebook/form/form';
 import type { Engine } from '@/entities/paperwork/engine';
 
 /** What is known of an engine, by what a rulebook calls it. */
-const FACTS = [
-  [/block.*casting/, 'blockCasting'],
-  [/head.*casting/, 'headCastings'],
-  [/serial/, 'serial'],
-  [/seal/, 'seals'],
-] as const;
+const factFor = (subject: string): keyof EngineFacts | 'seals' | undefined =>
+  factNamed(subject) ?? (/seal/.test(subject) ? 'seals' : undefined);
 
 /** Seal numbers that a race-night swap put on record last, as one would write them down. */
 const sealsOn = async (em: EntityManager, engineId: string): Promise<string> => {
@@ -40,7 +37,7 @@ export const filledIn = async (
   const facts = { ...engine, seals: seal ?? (await sealsOn(em, engine.id)) };
   return form.questions.reduce(
     (draft: PaperworkDraft, { kind, subject, per }) => {
-      const fact = FACTS.find(([named]) => kind === 'text' && named.test(subject))?.[1];
+      const fact = kind === 'text' ? factFor(subject) : undefined;
       const position = per === 'car' ? 'car' : 'engine';
       // A seal given just now replaces one that was written down before.
       const known = findTyped(draft, subject, position) !== undefined;
