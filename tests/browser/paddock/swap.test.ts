@@ -36,7 +36,9 @@ test(
         await official.page
           .getByLabel(`Days until the rest of the paperwork is due, ${className}`)
           .fill('2');
-        await official.page.getByRole('button', { name: `Set the days, ${className}` }).click();
+        await official.page
+          .getByRole('button', { name: new RegExp(`^Set the days ?, ${className}$`) })
+          .click();
         await official.page
           .getByText(`Engine swaps: the rest is due in 2 days, ${className}`)
           .waitFor();
