@@ -30,6 +30,15 @@ const ERASABLE = [
 const erased = (...columns: readonly string[]): string =>
   columns.map((name) => `${name} = case when ${name} = '' then '' else 'erased' end`).join(', ');
 
+/** Equal names stay equal, so that a chain still shows where it breaks; whose they were, nobody can tell. */
+const unnamed = (...columns: readonly string[]): string =>
+  columns
+    .map(
+      (name) => `${name} = case when ${name} = '' then '' else 'erased ' || left(encode(sha256(
+          convert_to(v_secret::text || ${name}, 'UTF8')), 'hex'), 6) end`,
+    )
+    .join(', ');
+
 /**
  * Names and reasons beside paperwork, and those given on an event's day, can be erased: each is
  * committed to by the line of its act under a role of its own.
@@ -87,7 +96,10 @@ $fn$`);
     this.addSql(`
 create or replace function append.erasure(p_rows jsonb) returns integer
 language plpgsql security definer set search_path = pg_catalog, pg_temp as $fn$
-declare v record.erasure; v_line record.ledger_line; v_ref text; v_of uuid; n integer := 0;
+declare
+  v record.erasure; v_line record.ledger_line; v_ref text; v_of uuid; n integer := 0;
+  -- Kept nowhere.
+  v_secret uuid := gen_random_uuid();
 begin
   for v in select * from jsonb_populate_recordset(null::record.erasure, p_rows) loop
     if not exists (select from record.act a where a.id = v.act_id and a.series_id = v.series_id
@@ -175,7 +187,7 @@ begin
       else
         update record.held_part set document = null
           where series_id = v.series_id and act_id = v_line.act_id;
-        update record.custody_act set ${erased('giver', 'receiver', 'witness', 'reason')}
+        update record.custody_act set ${unnamed('giver', 'receiver', 'witness')}, ${erased('reason')}
           where series_id = v.series_id and act_id = v_line.act_id;
     end case;
     n := n + 1;

@@ -149,6 +149,19 @@ export const recordTheDay = (ports: () => Ports, night: RaceNight) => {
       occurredAt: '2026-07-12T03:20:00.000Z',
     };
     get(await recordCustody(ports(), inspector, custodyRequest.parse(opened)));
+    // Not by whom it was taken: the chain has a gap.
+    const over = {
+      act: uuid(),
+      id: uuid(),
+      partId,
+      kind: 'hand-over',
+      giver: 'Somebody Else',
+      receiver: 'Perrin Oakhollow',
+      place: 'Impound, shelf 4',
+      reason: 'Overnight',
+      occurredAt: '2026-07-12T03:22:00.000Z',
+    };
+    get(await recordCustody(ports(), inspector, custodyRequest.parse(over)));
     for (const [kind, state] of [
       ['applied', null],
       ['found', 'intact'],

@@ -1,9 +1,11 @@
 import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import type { Migration } from '@mikro-orm/migrations';
 import { afterAll, beforeAll, describe, expect, inject, it } from 'vitest';
 import { openDatabase } from '@/adapters/database/orm';
 import type { Actor } from '@/domain/access/permission';
+import { findPart } from '@/services/custody/find-part';
 import { auditLedger } from '@/services/ledger/audit/audit-ledger';
 import { eraseContent } from '@/services/ledger/erasure/erase-content';
 import { eraseDayWords } from '@/services/ledger/erasure/erase-day-words';
@@ -14,11 +16,14 @@ import { listHolds } from '@/services/ledger/erasure/list-holds';
 import { openErasure } from '@/services/ledger/erasure/open-erasure';
 import { placeHold } from '@/services/ledger/erasure/place-hold';
 import { reapplyErasures } from '@/services/ledger/erasure/reapply-erasures';
+import { StrokesAndRetention } from '../../../migrations/0012-strokes-and-retention';
+import { WordsThatCanGo } from '../../../migrations/0026-words-that-can-go';
 import { connect, createDatabase, withDatabase } from '../../../scripts/postgres/roles.mjs';
 import { makeBackup } from '../../../scripts/record/make-backup';
 import { restoreBackup } from '../../../scripts/record/restore-backup';
 import { failureOf, get } from '../../support/bay';
 import { openRecordOfANight, type RecordOfANight } from '../../support/record-of-a-night';
+import { recordThePaddock } from '../../support/record-of-a-paddock';
 
 const REASON = 'The season’s retention time has passed.';
 /** Words of the day that stand in the record before they are erased, and in nothing that is kept for good. */
@@ -182,11 +187,21 @@ describe('names and reasons of an event’s day', () => {
       );
       return rows[0]?.n;
     };
-    const before = await count();
+    const [part] = await record
+      .ports()
+      .db.execute<{ id: string }[]>('select id from record.held_part limit 1');
+    const chain = async () => {
+      const found = get(await findPart(record.ports(), record.night.official, part?.id ?? ''));
+      return found.custody.gaps.map(({ after, before }) => [after, before]);
+    };
+    const [before, gaps] = [await count(), await chain()];
+    expect(gaps).not.toEqual([]);
     const { contents } = get(await eraseDay(night(), record.night.official));
     expect(contents).toBeGreaterThan(6);
     for (const words of DAY) expect([words, await tablesWith(words)]).toEqual([words, []]);
     expect(await count()).toBe(before);
+    // What did not follow in a chain of custody does not become whole by it.
+    expect(await chain()).toEqual(gaps);
     expect(await faults(record.night.seriesId)).toEqual([]);
     const again = failureOf(await eraseDay(night(), record.night.official));
     expect(again.name).toBe('not-in-this-state');
@@ -201,6 +216,42 @@ describe('names and reasons of an event’s day', () => {
     get(await eraseDay({ seriesId, eventId: record.left.eventId }, official));
     expect(await tablesWith('Edda Lindqvist')).toEqual([]);
     expect(await faults(seriesId)).toEqual([]);
+  });
+});
+
+describe('rows of before these columns could be erased', () => {
+  const digestOf = (migration: Migration): string => {
+    migration.up();
+    const found = migration.getQueries().find((sql) => String(sql).includes('append.act_digest('));
+    return String(found);
+  };
+
+  it('are held whole by the digest of then, can be erased alike, and the ledger verifies', async () => {
+    const { seriesId } = record.paddock;
+    const orm = await openDatabase(record.world.database.superuserUrl, 1);
+    try {
+      const [driver, config] = [orm.em.getDriver(), orm.config] as const;
+      await orm.em.fork().execute(digestOf(new StrokesAndRetention(driver, config)));
+      const engineId = await recordThePaddock(record.paddock).undeclared();
+      const paperworkId = await recordThePaddock({ ...record.paddock, engineId }).takenBack('50');
+      await orm.em.fork().execute(digestOf(new WordsThatCanGo(driver, config)));
+      const [kept] = await record.ports().db.execute<{ columns: Record<string, string[]> }[]>(
+        `select c.content::jsonb -> 'columns' as columns from record.ledger_line l
+         join record.ledger_content c on c.series_id = l.series_id and c.line_index = l.index
+         where l.series_id = ? and l.kind = 'paperwork-withdrawn' and c.role = 'rows'
+         order by l.index desc limit 1`,
+        [seriesId],
+      );
+      expect(kept?.columns['paperwork_withdrawal']).toContain('reason');
+      expect(await faults(seriesId)).toEqual([]);
+      const words = 'Joss Farrow bought car 50';
+      expect(await tablesWith(words)).not.toEqual([]);
+      get(await erasePaperwork(paperworkId));
+      expect(await tablesWith(words)).toEqual([]);
+      expect(await faults(seriesId)).toEqual([]);
+    } finally {
+      await orm.close();
+    }
   });
 });
 

@@ -14,8 +14,8 @@ interface Erasable {
   readonly gone?: string;
 }
 
-/** What an erasure leaves of a text; a text that was empty stays empty. */
-const ERASED = "('', 'erased')";
+/** What an erasure leaves of a text, or of a name in a chain; what was empty stays empty. */
+const ERASED = "'^(|erased|erased [0-9a-f]{6})$'";
 
 const texts = (
   table: string,
@@ -29,7 +29,7 @@ const texts = (
     roles,
     kept: `array[${columns.map((name) => `t.${name}`).join(', ')}]`,
     said: `array[${Object.values(said).join(', ')}]`,
-    gone: columns.map((name) => `t.${name} in ${ERASED}`).join(' and '),
+    gone: columns.map((name) => `t.${name} ~ ${ERASED}`).join(' and '),
   };
 };
 
