@@ -1,6 +1,6 @@
 import type PgBoss from 'pg-boss';
 import { makePreviews } from '@/services/file/make-previews';
-import { sweepUpload } from '@/services/file/sweep-upload';
+import { sweepUpload } from '@/services/file/upload/sweep-upload';
 import { signCheckpoint } from '@/services/ledger/checkpoint/sign-checkpoint';
 import { removeObjects } from '@/services/ledger/erasure/remove-objects';
 import { proveForNotice } from '@/services/ledger/proof/prove-for-notice';

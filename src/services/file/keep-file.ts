@@ -9,8 +9,7 @@ import { performAct } from '../act/perform-act';
 import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
 import { inspectFile } from './content/inspect-file';
 import { judgeBytes } from './content/judge-bytes';
-import { wrongPlace } from './expect-upload';
-import { needFor, takesFile } from './own-file';
+import { findUnwelcome, needFor } from './find-unwelcome';
 import { type KeepDeps, type KeptAnswer, settleFile } from './settle-file';
 
 export interface FileToKeep {
@@ -33,9 +32,8 @@ export const keepFile = async (
   input: FileToKeep,
 ): Promise<Result<KeptAnswer, Failure>> => {
   const { act, fileId, paperworkId, purpose, item, name, declaredType, declaredBytes } = input;
-  const need = needFor(purpose);
   const known = isId(paperworkId)
-    ? await findOwnPaperwork(deps.db, actor, paperworkId, false, need)
+    ? await findOwnPaperwork(deps.db, actor, paperworkId, false, needFor(purpose))
     : undefined;
   if (known === undefined) return fail(absent());
   const { seriesId } = known;
@@ -49,9 +47,8 @@ export const keepFile = async (
     { id: act, kind: 'keep-file', seriesId, input: request },
     async (doing) => {
       const { em, at } = doing;
-      const paperwork = await findOwnPaperwork(em, actor, paperworkId, true, need);
-      if (paperwork === undefined) return fail(absent());
-      if (!(await takesFile(em, paperwork, fileId))) return fail(wrongPlace());
+      const unwelcome = await findUnwelcome(em, actor, { paperworkId, fileId, purpose });
+      if (unwelcome !== undefined) return fail(unwelcome);
       const row =
         (await em.findOne(
           KeptFile,

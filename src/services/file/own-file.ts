@@ -1,30 +1,11 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import { LockMode } from '@mikro-orm/postgresql';
-import { type Need, openings } from '@/domain/access/paperwork-access';
+import { openings } from '@/domain/access/paperwork-access';
 import { type Actor, may, seriesWhere } from '@/domain/access/permission';
-import { isWritable } from '@/domain/paperwork/state';
 import { KeptFile } from '@/entities/paperwork/file';
 import type { Paperwork } from '@/entities/paperwork/paperwork';
 import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
-
-const isOfSwap = async (em: EntityManager, seriesId: string, fileId: string): Promise<boolean> => {
-  const [row] = await em.execute<{ n: number }[]>(
-    'select 1 as n from record.engine_swap where series_id = ? and photograph_id = ? limit 1',
-    [seriesId, fileId],
-  );
-  return row !== undefined;
-};
-
-/** Whether a file may still come to this paperwork: to a draft, or the photograph of an engine swap. */
-export const takesFile = async (
-  em: EntityManager,
-  { seriesId, state }: Paperwork,
-  fileId: string,
-): Promise<boolean> => isWritable(state) || isOfSwap(em, seriesId, fileId);
-
-/** What one must be let to do, to add or take out such a file. */
-export const needFor = (purpose: KeptFile['purpose']): Need =>
-  purpose === 'sheet' ? 'sheets' : 'answers';
+import { isOfSwap, needFor } from './find-unwelcome';
 
 export interface FileInPaperwork {
   readonly file: KeptFile;

@@ -3,7 +3,7 @@ import { absent, type Failure } from '@/domain/failure';
 import { isWritable } from '@/domain/paperwork/state';
 import { fail, ok, type Result } from '@/domain/result';
 import { type ActDeps, performAct } from '../act/perform-act';
-import { wrongPlace } from './expect-upload';
+import { wrongPlace } from './find-unwelcome';
 import { findOwnFile } from './own-file';
 
 /** Takes a file out of the draft. Versions that were handed in before keep it. */

@@ -1,8 +1,8 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Actor } from '@/domain/access/permission';
 import type { Mapping } from '@/domain/paperwork/sheet/find-columns';
-import { confirmUpload } from '@/services/file/confirm-upload';
-import { expectUpload } from '@/services/file/expect-upload';
+import { confirmUpload } from '@/services/file/upload/confirm-upload';
+import { expectUpload } from '@/services/file/upload/expect-upload';
 import { readSheetFile } from '@/services/paperwork/read-sheet-file';
 import { annotateSheet } from '@/services/paperwork/sheet/annotate/annotate-sheet';
 import { rememberColumns } from '@/services/paperwork/sheet/file/remember-columns';

@@ -1,8 +1,8 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { KeptFile } from '@/entities/paperwork/file';
-import { confirmUpload } from '@/services/file/confirm-upload';
-import { expectUpload } from '@/services/file/expect-upload';
-import { sweepUpload } from '@/services/file/sweep-upload';
+import { confirmUpload } from '@/services/file/upload/confirm-upload';
+import { expectUpload } from '@/services/file/upload/expect-upload';
+import { sweepUpload } from '@/services/file/upload/sweep-upload';
 import { openPaddock, type Paddock, picture, start } from '../../support/paperwork';
 import { openWorld, type World } from '../../support/world';
 import { must } from '../rulebook/build';

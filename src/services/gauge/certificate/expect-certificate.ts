@@ -3,8 +3,8 @@ import { absent, type Failure } from '@/domain/failure';
 import { sizeWords } from '@/domain/paperwork/file/limits';
 import { fail, ok, type Result } from '@/domain/result';
 import { GaugeRow } from '@/entities/event/gauge';
-import { addressWhole, type UploadAddress } from '../../file/address-upload';
-import { announcedType, announceFile, tooManyBytes } from '../../file/announce-file';
+import { addressWhole, type UploadAddress } from '../../file/upload/address-upload';
+import { announcedType, announceFile, tooManyBytes } from '../../file/upload/announce-file';
 import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 
@@ -49,8 +49,10 @@ export const expectCertificate = async (
       declaredType: type,
       declaredBytes: bytes,
     },
-    async (em) =>
-      (await em.findOne(GaugeRow, { seriesId, id: gaugeId })) === null ? absent() : undefined,
+    {
+      any: async (em) =>
+        (await em.findOne(GaugeRow, { seriesId, id: gaugeId })) === null ? absent() : undefined,
+    },
   );
   return announced.ok ? ok(await addressWhole(deps, announced.value)) : announced;
 };

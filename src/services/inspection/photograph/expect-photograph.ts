@@ -2,8 +2,8 @@ import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
 import { MOST_BYTES, tooLargeWords } from '@/domain/paperwork/file/limits';
 import { fail, ok, type Result } from '@/domain/result';
-import { addressWhole, type UploadAddress } from '../../file/address-upload';
-import { announcedType, announceFile, tooManyBytes } from '../../file/announce-file';
+import { addressWhole, type UploadAddress } from '../../file/upload/address-upload';
+import { announcedType, announceFile, tooManyBytes } from '../../file/upload/announce-file';
 import type { Ports } from '../../ports';
 import { findInspectionRow, worksOn } from '../read/find-inspection';
 

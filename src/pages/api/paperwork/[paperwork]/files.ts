@@ -1,7 +1,7 @@
 import { expectUploadRequest } from '@/contracts/file/file';
 import { fail } from '@/domain/result';
 import { signInFirst, write } from '@/http/api';
-import { expectUpload } from '@/services/file/expect-upload';
+import { expectUpload } from '@/services/file/upload/expect-upload';
 
 export const POST = write(expectUploadRequest, async ({ ports, actor, body, params }) =>
   actor === null

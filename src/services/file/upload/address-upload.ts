@@ -1,6 +1,6 @@
 import { MOST_AT_ONCE, partSizes } from '@/domain/paperwork/file/limits';
 import { KeptFile } from '@/entities/paperwork/file';
-import type { Ports } from '../ports';
+import type { Ports } from '../../ports';
 
 /** Where a file's bytes go, for a few minutes. */
 export interface UploadAddress {

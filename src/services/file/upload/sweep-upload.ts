@@ -1,9 +1,9 @@
 import { LockMode } from '@mikro-orm/postgresql';
 import { ok } from '@/domain/result';
 import { KeptFile } from '@/entities/paperwork/file';
-import { performAct } from '../act/perform-act';
-import { actIdFor } from '../notice/act-id';
-import type { Ports } from '../ports';
+import { performAct } from '../../act/perform-act';
+import { actIdFor } from '../../notice/act-id';
+import type { Ports } from '../../ports';
 
 const HOUR = 60 * 60 * 1000;
 const DAY = 24 * HOUR;

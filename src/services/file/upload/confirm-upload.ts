@@ -3,13 +3,13 @@ import { absent, type Failure, failure } from '@/domain/failure';
 import { type FilePurpose, MOST_BYTES, tooLargeWords } from '@/domain/paperwork/file/limits';
 import { fail, ok, type Result } from '@/domain/result';
 import type { KeptFile } from '@/entities/paperwork/file';
-import { performAct } from '../act/perform-act';
-import type { ObjectHead, Ports, SentPart } from '../ports';
-import { keepFile } from './keep-file';
-import { findOwnFile } from './own-file';
-import { answered, type KeepDeps, type KeptAnswer, refuseFile } from './settle-file';
+import { performAct } from '../../act/perform-act';
+import type { ObjectHead, Ports, SentPart } from '../../ports';
+import { keepFile } from '../keep-file';
+import { findOwnFile } from '../own-file';
+import { answered, type KeepDeps, type KeptAnswer, refuseFile } from '../settle-file';
+import { withStore } from '../with-store';
 import { takeTurns } from './take-turns';
-import { withStore } from './with-store';
 
 // Each holds a whole file in memory.
 const inTurn = takeTurns(3);

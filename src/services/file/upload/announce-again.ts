@@ -1,25 +1,24 @@
 import type { KeptFile } from '@/entities/paperwork/file';
 import { NEVER_CONFIRMED } from './sweep-upload';
 
-/** What an announcement says of a file. */
-export interface Announced {
-  readonly paperworkId: string;
-  readonly purpose: string;
-  readonly item: string;
-  readonly declaredType: string;
-  readonly declaredBytes: number;
-  readonly by: string;
-}
+/** A file as it is announced, and what it belongs to: a paperwork, an inspection or a gauge. */
+export type AnnouncedFile = Pick<
+  KeptFile,
+  'id' | 'purpose' | 'item' | 'name' | 'declaredType' | 'declaredBytes'
+> &
+  Partial<Pick<KeptFile, 'paperworkId' | 'inspectionId' | 'gaugeId'>>;
 
 /** Whether a file of this id is the one announced before by the same person; another one is refused. */
-export const isSameFile = (file: KeptFile, announced: Announced): boolean =>
+export const isSameFile = (file: KeptFile, announced: AnnouncedFile, by: string): boolean =>
   file.removedAt === null &&
-  file.paperworkId === announced.paperworkId &&
+  (['paperworkId', 'inspectionId', 'gaugeId'] as const).every(
+    (owner) => (file[owner] ?? null) === (announced[owner] ?? null),
+  ) &&
   file.purpose === announced.purpose &&
   file.item === announced.item &&
   file.declaredType === announced.declaredType &&
   Number(file.declaredBytes) === announced.declaredBytes &&
-  file.createdBy === announced.by;
+  file.createdBy === by;
 
 /**
  * Expects the file anew from this instant: one that was given up because it never came in its day may

@@ -1,17 +1,11 @@
-import type { EntityManager } from '@mikro-orm/postgresql';
+import { type EntityManager, LockMode } from '@mikro-orm/postgresql';
 import type { Actor } from '@/domain/access/permission';
-import { type Failure, failure } from '@/domain/failure';
+import { absent, type Failure, failure } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import { KeptFile } from '@/entities/paperwork/file';
-import { type ActDeps, performAct } from '../act/perform-act';
+import { type ActDeps, performAct } from '../../act/perform-act';
+import { type AnnouncedFile, expectAgain, isSameFile } from './announce-again';
 import { sweptAt } from './sweep-upload';
-
-/** A file and what it belongs to: a paperwork, an inspection or a gauge. */
-export type AnnouncedFile = Pick<
-  KeptFile,
-  'id' | 'purpose' | 'item' | 'name' | 'declaredType' | 'declaredBytes'
-> &
-  Partial<Pick<KeptFile, 'paperworkId' | 'inspectionId' | 'gaugeId'>>;
 
 /** The type that a browser says; many say none. */
 export const announcedType = (said: string): string =>
@@ -21,9 +15,16 @@ export const announcedType = (said: string): string =>
 export const tooManyBytes = (detail: string): Failure =>
   failure('too-large', detail, [{ pointer: '/bytes', detail }]);
 
+/** Within the act: why the file may not come at all, and why one more may not. */
+interface Obstacles {
+  readonly any?: (em: EntityManager) => Promise<Failure | undefined>;
+  readonly more?: (em: EntityManager) => Promise<Failure | undefined>;
+}
+
 /**
  * Writes down that a file is to come and where its bytes go; what was not confirmed within a day is
- * swept. It counts only after the server has read it back.
+ * swept. Announced again by the same person it is expected anew. It counts only after the server has
+ * read it back.
  */
 export const announceFile = async (
   deps: ActDeps,
@@ -35,8 +36,7 @@ export const announceFile = async (
     readonly input: unknown;
   },
   file: AnnouncedFile,
-  /** Within the act: why it may not come. */
-  findObstacle: (em: EntityManager) => Promise<Failure | undefined> = async () => undefined,
+  obstacles: Obstacles = {},
 ): Promise<Result<AnnouncedFile & { readonly uploadKey: string }, Failure>> => {
   const { act: id, kind, seriesId, input } = request;
   const uploadKey = `uploads/${seriesId}/${file.id}`;
@@ -45,18 +45,19 @@ export const announceFile = async (
     actor,
     { id, kind, seriesId, input },
     async ({ em, at, send }) => {
-      const obstacle = await findObstacle(em);
-      if (obstacle !== undefined) return fail(obstacle);
-      em.persist(
-        em.create(KeptFile, {
-          ...file,
-          seriesId,
-          uploadKey,
-          state: 'expected',
-          createdBy: actor.personId,
-          createdAt: at,
-        }),
-      );
+      const unwelcome = await obstacles.any?.(em);
+      if (unwelcome !== undefined) return fail(unwelcome);
+      const lock = { lockMode: LockMode.PESSIMISTIC_WRITE };
+      const before = await em.findOne(KeptFile, { seriesId, id: file.id }, lock);
+      if (before === null) {
+        const crowded = await obstacles.more?.(em);
+        if (crowded !== undefined) return fail(crowded);
+        const by = { createdBy: actor.personId, createdAt: at };
+        em.persist(em.create(KeptFile, { ...file, ...by, seriesId, uploadKey, state: 'expected' }));
+      } else {
+        if (!isSameFile(before, file, actor.personId)) return fail(absent());
+        expectAgain(before, at);
+      }
       send('sweep-uploads', { seriesId, fileId: file.id }, sweptAt(at));
       return ok({ fileId: file.id });
     },
