@@ -1,30 +1,14 @@
+import { postJson, putBytes } from '../../uploads/network';
+import { type SendDeps, sendUpload } from '../../uploads/send-upload';
 import { readPicture } from './picture-store';
 import type { PictureAnswer } from './send-waiting';
 
-interface Told {
-  readonly url?: string;
-  readonly type?: string;
-  readonly state?: string;
-  readonly refusedBecause?: string;
-  readonly detail?: string;
-}
-
-const TIMEOUT_MS = 120_000;
-
-const post = async (path: string, body: unknown) => {
-  const response = await fetch(path, {
-    method: 'POST',
-    headers: { 'content-type': 'application/json' },
-    body: JSON.stringify(body),
-    signal: AbortSignal.timeout(TIMEOUT_MS),
-  });
-  return { status: response.status, told: (await response.json()) as Told };
-};
-
-const refusal = (status: number, { detail }: Told): PictureAnswer => {
-  if (status === 401) return { kind: 'sign-in' };
-  if (status >= 500 || status === 429) return { kind: 'unreachable' };
-  return { kind: 'refused', detail: detail ?? `The server answered ${status}.` };
+/** The device holds the picture until its row is seen on the server: how far a try came is not kept. */
+const network: SendDeps = {
+  post: postJson,
+  put: putBytes,
+  keep: async () => {},
+  now: () => Date.now(),
 };
 
 /**
@@ -36,33 +20,39 @@ export const sendPicture = async (pictureId: string): Promise<PictureAnswer> => 
   if (picture === undefined)
     return { kind: 'refused', detail: 'This device no longer holds the picture. Take it again.' };
   const { fileId, inspectionId, name, type, bytes, item, announceAct, confirmAct } = picture;
-  const base = `/api/inspections/${inspectionId}/photographs`;
-  try {
-    const announced = await post(base, {
-      act: announceAct,
-      fileId,
-      item,
+  const announce = `/api/inspections/${inspectionId}/photographs`;
+  const outcome = await sendUpload(
+    {
+      id: fileId,
+      group: inspectionId,
       name,
       type,
       bytes: bytes.byteLength,
-    });
-    if (announced.status !== 200 || announced.told.url === undefined)
-      return refusal(announced.status, announced.told);
-    const put = await fetch(announced.told.url, {
-      method: 'PUT',
-      body: bytes,
-      headers: { 'content-type': announced.told.type ?? type },
-      signal: AbortSignal.timeout(TIMEOUT_MS),
-    });
-    // An answer that nobody reads is cut off when the page is left, as if the sending had failed.
-    await put.arrayBuffer();
-    if (!put.ok) return { kind: 'unreachable' };
-    const kept = await post(`${base}/${fileId}`, { act: confirmAct });
-    if (kept.status !== 200) return refusal(kept.status, kept.told);
-    return kept.told.state === 'kept'
-      ? { kind: 'kept' }
-      : { kind: 'refused', detail: kept.told.refusedBecause ?? 'It was refused.' };
-  } catch {
-    return { kind: 'unreachable' };
+      announce,
+      fields: { item },
+      confirm: `${announce}/{id}`,
+      announceAct,
+      confirmAct,
+      keptAt: Date.now(),
+      paused: false,
+      tags: [],
+    },
+    new Blob([bytes], { type }),
+    network,
+    new AbortController().signal,
+    () => {},
+  );
+  switch (outcome.kind) {
+    case 'answered':
+      return outcome.answer.state === 'kept'
+        ? { kind: 'kept' }
+        : { kind: 'refused', detail: outcome.answer.refusedBecause ?? 'It was refused.' };
+    case 'refused':
+      return outcome;
+    case 'sign-in':
+      return { kind: 'sign-in' };
+    case 'no-signal':
+    case 'stopped':
+      return { kind: 'unreachable' };
   }
 };
