@@ -163,3 +163,26 @@ it('an official holds an inspection: its pen strokes cannot be erased until the 
     expect(await page.getByText('This inspection, since').count()).toBe(0);
   });
 }, 90_000);
+
+it('an official sets how long the names and reasons of an event’s day are kept', async () => {
+  const [series] = await ask<{ slug: string }>(
+    'select s.slug from public.series s join public.event e on e.series_id = s.id order by 1 limit 1',
+  );
+  await journey('retention', async ({ enter }) => {
+    const official = await enter({ viewport: { width: 390, height: 844 } });
+    await official.signInAs('Ilse Törnkvist');
+    await official.open(`/office/retention/${series?.slug}`);
+    const { page } = official;
+    const choice = page.getByLabel('Names and reasons of an event’s day');
+    for (const kept of ['season-end', 'keep']) {
+      await choice.selectOption(kept);
+      await page.getByRole('button', { name: 'Save' }).click();
+      await page.locator(`select[name="dayWords"] option[value="${kept}"][selected]`).waitFor({
+        state: 'attached',
+      });
+    }
+    await official.expectNoSidewaysScroll();
+    await official.expectAccessible();
+    await official.shot('retention');
+  });
+}, 60_000);
