@@ -7,7 +7,7 @@ import { hideFirst } from '@/domain/inspection/second-set/hide-first';
 import { boreName, positionsOf } from '@/domain/tappet/layout/bore-layout';
 import type { Bay } from './bay';
 import { assessSheet } from './sheet/assess-sheet';
-import { askedBy, partsAsked } from './sheet/flow/asked';
+import { askedBy, leadsBy, partsAsked } from './sheet/flow/asked';
 import { nextStep, type Step } from './sheet/flow/steps';
 import { isComplete } from './sheet/flow/taken';
 import { baseFor } from './sheet/keys/typed-base';
@@ -70,6 +70,7 @@ export const useBay = (
       judged,
       outOfReach,
       asked,
+      leads: leadsBy(setUp, plan),
       second: second?.bores ?? [cursor.bore],
     });
   const unanswered = checks.some(({ answer }) => answer === undefined);

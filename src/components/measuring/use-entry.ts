@@ -7,7 +7,7 @@ import { boreName } from '@/domain/tappet/layout/bore-layout';
 import type { Bay, Hands } from './bay';
 import { uuidV7 } from './queue/uuid-v7';
 import { assessSheet } from './sheet/assess-sheet';
-import { askedBy } from './sheet/flow/asked';
+import { askedBy, leadsBy } from './sheet/flow/asked';
 import { nextStep, type Step, scopeOf } from './sheet/flow/steps';
 import { takenAt } from './sheet/flow/taken';
 import { questionOf } from './sheet/keys/question';
@@ -31,6 +31,7 @@ const stepAfter = (bay: Bay, row: SentReading): Step | undefined => {
     cursor: { ...cursor, cell: undefined },
     judged: assessSheet.judge(then).judged,
     asked: bay.blind ? bay.asked : askedBy(setUp, plan),
+    leads: leadsBy(setUp, plan),
     second: sheet.second?.bores ?? [cursor.bore],
   });
 };

@@ -64,6 +64,9 @@ export const SeenFindings = ({
                   <GaugeStrip {...shown.strip} size="measuring" />
                 </>
               )}
+              {result !== undefined &&
+                (result.sets ?? result.wants) !== undefined &&
+                result.sentence !== finding.sentence && <p>{result.sentence}</p>}
               <p>{finding.sentence}</p>
               {checked.map((words) => (
                 <p key={words} className="note">

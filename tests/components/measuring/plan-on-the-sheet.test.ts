@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { assessSheet } from '@/components/measuring/sheet/assess-sheet';
 import { boreStates, checkStates } from '@/components/measuring/sheet/bore-states';
-import { askedBy, partsAsked } from '@/components/measuring/sheet/flow/asked';
+import { askedBy, leadsBy, partsAsked } from '@/components/measuring/sheet/flow/asked';
 import { nextStep, type Standing } from '@/components/measuring/sheet/flow/steps';
 import { questionOf } from '@/components/measuring/sheet/keys/question';
 import { baseFor } from '@/components/measuring/sheet/keys/typed-base';
@@ -52,6 +52,7 @@ const sheetOver = (more: Partial<InspectionRecord>, part = 'lifter-body-diameter
     judged: assessment.judged,
     outOfReach: new Set(),
     asked: askedBy(setUp, plan),
+    leads: leadsBy(setUp, plan),
     second: [],
   };
   return { standing, assessment, plan, parts, part: here };
@@ -76,6 +77,25 @@ describe('the sheet follows the plan', () => {
       part: { key: 'foot-diameter' },
     });
     expect(standing.parts.map(({ key }) => key)).not.toContain('tappet-bore-diameter');
+  });
+
+  it('leads through a sample and no further', () => {
+    const clauses = RULES.clauses.flatMap((clause): readonly Clause[] =>
+      clause.number === '4.2' && clause.requirement?.kind === 'limit'
+        ? [
+            {
+              ...clause,
+              requirement: { ...clause.requirement, sample: { kind: 'some', count: 1 } },
+            },
+          ]
+        : [],
+    );
+    const rules = { ...RULES, clauses };
+    const readings = [body('b1', '0.8421', { depth: 'upper' })];
+    expect(nextStep(sheetOver({ rules, readings }).standing)).toEqual({ kind: 'done' });
+    const { standing } = sheetOver({ rules, readings });
+    const everywhere = { ...standing, leads: leadsBy({ form: 'screening' }, []) };
+    expect(nextStep(everywhere)).toMatchObject({ kind: 'bore' });
   });
 
   it('shows no result while the set is not complete', () => {

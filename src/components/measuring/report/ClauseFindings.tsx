@@ -26,6 +26,14 @@ const ofClearance = ({ requirement }: Clause): boolean =>
 const passWord = (pass: boolean | null, state: Finding['state']): string =>
   pass === null ? wordOfState(state) : `${wordOfState(state)}: ${pass ? 'pass' : 'fail'}`;
 
+const Sentences = ({ results }: { readonly results: Finding['perPosition'] }) => (
+  <ul>
+    {results.map(({ position, sentence }) => (
+      <li key={position}>{sentence}</li>
+    ))}
+  </ul>
+);
+
 const Numbers = ({
   clause,
   finding,
@@ -41,7 +49,8 @@ const Numbers = ({
     return shown === undefined ? [] : [{ result, shown }];
   });
   const [first] = rows;
-  if (first === undefined) return null;
+  if (first === undefined)
+    return <Sentences results={finding.perPosition.filter(({ value }) => value !== undefined)} />;
   return (
     <FindingTable
       unit={first.shown.unit}
@@ -115,6 +124,12 @@ export const ClauseFindings = ({ rules, assessment, gauges }: ClauseFindingsProp
             ))}
             {finding.perPosition.some((result) => result.value !== undefined) ? (
               <>
+                <Sentences
+                  results={finding.perPosition.filter(
+                    ({ sets, wants, sentence }) =>
+                      (sets ?? wants) !== undefined && sentence !== finding.sentence,
+                  )}
+                />
                 <details open={BREACHING.includes(finding.state)}>
                   <summary>Numbers, each with its uncertainty</summary>
                   <Numbers clause={clause} finding={finding} gauges={gauges} />

@@ -4,7 +4,7 @@ import type { BorePosition } from '@/domain/tappet/layout/bore-layout';
 import { boreName } from '@/domain/tappet/layout/bore-layout';
 import { cellsFor, type Part } from '../parts';
 import type { SetUp } from '../set-up';
-import type { Asked } from './taken';
+import type { Asked, Leads } from './taken';
 
 /** How facts and results name the place of a part that is read at a bore. */
 export const keyOf = (part: Pick<Part, 'per'>, position: BorePosition): string => {
@@ -31,6 +31,18 @@ export const askedBy =
   (setUp: Pick<SetUp, 'form' | 'fullAt'>, plan: readonly Ask[]): Asked =>
   (part, position) =>
     cellsFor(part, extentAt(setUp, plan, part, position));
+
+/**
+ * Where Enter leads for a part: by the plan to the places that it asks, so that a sample is no more than
+ * it says; everywhere for a part that the plan does not ask, and where a form was chosen instead.
+ */
+export const leadsBy =
+  ({ form }: Pick<SetUp, 'form'>, plan: readonly Ask[]): Leads =>
+  (part, position) =>
+    form !== 'plan' ||
+    part.reference === true ||
+    !plan.some(({ quantity }) => quantity === part.quantity) ||
+    askAt(plan, part, position) !== undefined;
 
 /** The parts that Enter leads through: all of a chosen form; of the plan those that it asks for. */
 export const partsAsked = (

@@ -3,7 +3,7 @@ import { type BorePosition, boreName } from '@/domain/tappet/layout/bore-layout'
 import type { Part } from '../parts';
 import { isComparative, type SetUp } from '../set-up';
 import type { Cursor } from '../sheet';
-import { type Asked, nextCell, nextPosition, takenAt } from './taken';
+import { type Asked, type Leads, nextCell, nextPosition, takenAt } from './taken';
 
 /** What is entered next, and where Enter leads. */
 export type Step =
@@ -29,6 +29,8 @@ export interface Standing {
   readonly judged: readonly JudgedReading[];
   readonly outOfReach: ReadonlySet<string>;
   readonly asked: Asked;
+  /** Left out: to every position. */
+  readonly leads?: Leads;
   /** The bores of an independent set, while one is taken. */
   readonly second: readonly string[];
 }
@@ -42,6 +44,8 @@ export const boresIn = (scope: string, positions: readonly BorePosition[]) =>
     (position) => scope === `bank ${position.bank}` || scope === `bore ${boreName(position)}`,
   );
 
+const ledBy = ({ leads }: Standing) => (leads === undefined ? {} : { leads });
+
 /** Whether the open run serves this bore. */
 const served = ({ cursor, setUp, position }: Standing): boolean =>
   cursor.run?.scope === scopeOf(setUp, position, cursor.set);
@@ -53,7 +57,7 @@ const nextPart = (standing: Standing): Step => {
   const last = positions.at(-1);
   for (const other of [...parts.slice(at + 1), ...parts.slice(0, at)]) {
     const from = last === undefined ? '' : boreName(last);
-    const to = nextPosition(judged, other, positions, from, outOfReach, asked);
+    const to = nextPosition(judged, other, positions, from, outOfReach, asked, ledBy(standing));
     if (to !== undefined) return { kind: 'part', part: other, to };
   }
   return { kind: 'done' };
@@ -73,14 +77,16 @@ export const nextStep = (standing: Standing): Step => {
   const here = boreName(position);
   if (comparative && cursor.run !== undefined) {
     const inRun = cursor.set > 1 ? [] : boresIn(cursor.run.scope, positions);
-    const rest = nextPosition(judged, part, inRun, here, outOfReach, asked);
+    const rest = nextPosition(judged, part, inRun, here, outOfReach, asked, ledBy(standing));
     return rest === undefined ? { kind: 'closing' } : { kind: 'bore', to: rest };
   }
   if (cursor.set > 1) {
     const near = positions.filter((one) => standing.second.includes(boreName(one)));
-    const next = nextPosition(judged, part, near, here, outOfReach, asked, cursor.set);
+    const next = nextPosition(judged, part, near, here, outOfReach, asked, {
+      set: cursor.set,
+    });
     return next === undefined ? { kind: 'both' } : { kind: 'bore', to: next };
   }
-  const to = nextPosition(judged, part, positions, here, outOfReach, asked);
+  const to = nextPosition(judged, part, positions, here, outOfReach, asked, ledBy(standing));
   return to === undefined ? nextPart(standing) : { kind: 'bore', to };
 };

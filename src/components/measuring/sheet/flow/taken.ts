@@ -7,6 +7,9 @@ import { placeOf, samePlace } from '../sheet';
 /** The cells that are asked of a part at a position. */
 export type Asked = (part: Part, position: BorePosition) => readonly CellPlace[];
 
+/** Whether Enter leads to a position for a part. */
+export type Leads = (part: Part, position: BorePosition) => boolean;
+
 /** The readings of one part at one position in one set that count, the last of each cell. */
 export const takenAt = (
   judged: readonly JudgedReading[],
@@ -68,13 +71,14 @@ export const nextPosition = (
   from: string,
   outOfReach: ReadonlySet<string>,
   asked: Asked,
-  set = 1,
+  { set = 1, leads = () => true }: { readonly set?: number; readonly leads?: Leads } = {},
 ): BorePosition | undefined => {
   const at = positions.findIndex((position) => boreName(position) === from);
   const round = [...positions.slice(at + 1), ...positions.slice(0, at + 1)];
   return onceEach(part, round).find(
     (position) =>
       (part.per !== 'bore' || !outOfReach.has(boreName(position))) &&
+      leads(part, position) &&
       !isComplete(judged, part, position, set, asked),
   );
 };
