@@ -2,6 +2,7 @@ import { afterAll, beforeAll, expect, it } from 'vitest';
 import { readCaseFile } from '@/contracts/case-file/case-file';
 import { checkCaseFile } from '@/contracts/case-file/check-case-file';
 import { recompute } from '@/contracts/case-file/recompute';
+import type { SentRow } from '@/contracts/inspection/rows';
 import { toHex } from '@/domain/ledger/bytes';
 import { formatVerifierKey } from '@/domain/ledger/note/verifier-key';
 import { TAPPET_RULE_SET } from '@/domain/rulebook/rule-sets/tappet';
@@ -44,6 +45,16 @@ it('a report under a clause that holds each set by itself is worked out anew fro
   const first = [body('1', '0.8431'), body('3', '0.8431'), body('5', '0.8431')];
   get(await send(world, night.inspector, inspectionId, first));
   get(await send(world, other, inspectionId, [body('1', '0.8430', 2), body('3', '0.8423', 2)]));
+  const choice: SentRow = {
+    kind: 'remark',
+    id: uuid(),
+    occurredAt: rows.reading({}).occurredAt,
+    place: { bank: 'left', cylinder: '3', valve: 'exhaust' },
+    remark: 'second-set',
+    value: '1',
+    reason: 'The second was read on the groove.',
+  };
+  get(await send(world, night.inspector, inspectionId, [choice]));
   const head = toHex((await fileOf(world, night.inspector, inspectionId)).chain.head);
   const inspector = { ...night.inspector, authenticatedAt: world.clock.now().toISOString() };
   get(await signReport(world.ports(), inspector, { act: uuid(), inspectionId, head }));
@@ -66,6 +77,7 @@ it('a report under a clause that holds each set by itself is worked out anew fro
   const stateAt = (bore: string) => at.find(({ position }) => position === bore);
   expect(stateAt('1 exhaust')).toMatchObject({ state: 'outside', pass: false });
   expect(stateAt('1 exhaust')?.sets).toHaveLength(2);
+  // Chosen or not: sets that differ state nothing under this clause.
   expect(stateAt('3 exhaust')).toMatchObject({ state: 'no-statement', pass: null });
   expect(stateAt('5 exhaust')).toMatchObject({ state: 'no-statement', pass: null });
 
