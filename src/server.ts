@@ -3,9 +3,9 @@ import { fileURLToPath } from 'node:url';
 import compression from 'compression';
 import sirv from 'sirv';
 import { composition } from '@/composition';
-import { limitBody } from '@/http/limit-body';
-import { passOneClick } from '@/http/one-click';
-import { secureHeaders } from '@/http/secure-headers';
+import { limitBody } from '@/http/node/limit-body';
+import { passOneClick } from '@/http/node/one-click';
+import { secureHeaders } from '@/http/node/secure-headers';
 
 type Handler = (request: IncomingMessage, response: ServerResponse, next?: () => void) => void;
 

@@ -1,5 +1,5 @@
 import { stampWords } from '@/domain/verdict/instant-words';
-import { hashWords } from '@/domain/verdict/notice-words';
+import { hashWords } from '@/domain/verdict/notice/notice-words';
 
 /** A public page: nothing in it depends on who asks, and it may be kept for a moment. */
 export const publicHeaders = (headers: Headers, seconds = 15): void =>

@@ -5,7 +5,7 @@ import type { HeldPart } from '@/domain/inspection/custody/tag';
 import type { NoteSigner } from '@/domain/ledger/note/signed-note';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import type { NonCompliance } from '@/domain/verdict/non-compliance';
-import type { NoticeDocument } from '@/domain/verdict/notice';
+import type { NoticeDocument } from '@/domain/verdict/notice/notice';
 
 /** What the use cases need of the world. Each one names its own share: `Pick<Ports, 'db' | 'clock'>`. */
 export interface Ports {

@@ -1,5 +1,5 @@
 import { type Pen, SHEET } from './pen';
-import type { Style } from './typeface';
+import type { Style } from './typeface/typeface';
 
 /** A piece of the sheet that never breaks over a page. */
 export interface Block {

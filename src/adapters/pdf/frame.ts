@@ -1,6 +1,6 @@
 import QRCode from 'qrcode';
 import { stampWords } from '@/domain/verdict/instant-words';
-import { hashWords } from '@/domain/verdict/notice-words';
+import { hashWords } from '@/domain/verdict/notice/notice-words';
 import type { NoticeToPrint } from '@/services/ports';
 import { BOLD, HEAD, NUM } from './blocks';
 import { type Pen, SHEET } from './pen';

@@ -1,9 +1,9 @@
 import { clockWords, dayWords } from '@/domain/verdict/instant-words';
-import type { NoticeDocument } from '@/domain/verdict/notice';
-import { DECISION_WORDS } from '@/domain/verdict/notice-words';
+import type { NoticeDocument } from '@/domain/verdict/notice/notice';
+import { DECISION_WORDS } from '@/domain/verdict/notice/notice-words';
 import { TEXT } from './blocks';
 import { type Pen, SHEET } from './pen';
-import type { Style } from './typeface';
+import type { Style } from './typeface/typeface';
 
 const TITLE: Style = { face: 'bold', size: 29 };
 const WORD: Style = { face: 'bold', size: 22 };

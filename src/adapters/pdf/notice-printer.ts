@@ -5,7 +5,7 @@ import { drawFoot, drawFrame } from './frame';
 import { drawMasthead, drawRunningHead } from './masthead';
 import { POINTS, penOn, SHEET } from './pen';
 import { sectionsOf } from './sections';
-import { openTypefaces } from './typeface';
+import { openTypefaces } from './typeface/typeface';
 
 const FIRST = 138;
 const LATER = 104;

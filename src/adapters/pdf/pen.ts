@@ -1,5 +1,5 @@
 import { type PDFPage, rgb } from 'pdf-lib';
-import type { Style, Typesetter } from './typeface';
+import type { Style, Typesetter } from './typeface/typeface';
 
 /** A4 in the CSS pixels that the sheet was drawn in: 96 to the inch, from the top left. */
 export const SHEET = { width: 794, height: 1123, left: 50, content: 176, right: 744 } as const;

@@ -1,11 +1,11 @@
-import type { NoticeClause, NoticePosition } from '@/domain/verdict/notice';
+import type { NoticeClause, NoticePosition } from '@/domain/verdict/notice/notice';
 import { type Block, BOLD, gap, NUM, paragraph, TEXT } from './blocks';
 import type { Section } from './flow';
 import { drawMark } from './masthead';
 import { SHEET } from './pen';
 import { drawLargeStrip, drawSmallStrip, LARGE_STRIP_HEIGHT, stripOf } from './strip';
 import { type Cell, type Column, table } from './table';
-import type { Style } from './typeface';
+import type { Style } from './typeface/typeface';
 
 type Width = (text: string, style: Style) => number;
 

@@ -7,7 +7,7 @@ import { type Block, BOLD, gap, HEAD, NUM, paragraph, type Span, TEXT } from './
 import { paginate, type Section } from './flow';
 import { drawQr } from './frame';
 import { type Pen, POINTS, penOn, SHEET } from './pen';
-import { openTypefaces, type Style, type Typesetter } from './typeface';
+import { openTypefaces, type Style, type Typesetter } from './typeface/typeface';
 
 const TITLE: Style = { face: 'bold', size: 29 };
 type Width = (text: string, style: Style) => number;

@@ -1,6 +1,6 @@
 import { dayAndClockWords, shortDay } from '@/domain/verdict/instant-words';
 import { moneyWords } from '@/domain/verdict/money';
-import type { NoticeDocument, NoticeGauge, NoticePerson } from '@/domain/verdict/notice';
+import type { NoticeDocument, NoticeGauge, NoticePerson } from '@/domain/verdict/notice/notice';
 import {
   appealUntilWords,
   computedSentence,
@@ -9,13 +9,13 @@ import {
   provisionalWords,
   ROLE_WORDS,
   sourceWords,
-} from '@/domain/verdict/notice-words';
+} from '@/domain/verdict/notice/notice-words';
 import { BOLD, gap, NUM, paragraph, type Span, TEXT } from './blocks';
 import type { Section } from './flow';
 import { SHEET } from './pen';
 import { readingSection } from './reading-section';
 import { type Cell, table } from './table';
-import type { Style, Typesetter } from './typeface';
+import type { Style, Typesetter } from './typeface/typeface';
 
 type Width = Typesetter['width'];
 type Setting = Pick<Typesetter, 'width' | 'covers'>;

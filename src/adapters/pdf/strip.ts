@@ -1,8 +1,8 @@
 import { guardBands, type StripInput, stripScale } from '@/domain/decision/strip-scale';
 import type { Written } from '@/domain/quantity/dimension';
-import type { NoticeClause, NoticePosition } from '@/domain/verdict/notice';
+import type { NoticeClause, NoticePosition } from '@/domain/verdict/notice/notice';
 import type { Pen } from './pen';
-import type { Style } from './typeface';
+import type { Style } from './typeface/typeface';
 
 const LABEL: Style = { face: 'num', size: 14.5 };
 const WORD: Style = { face: 'text', size: 14.5 };

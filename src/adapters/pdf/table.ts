@@ -1,6 +1,6 @@
 import { type Block, HEAD, TEXT } from './blocks';
 import { type Align, type Pen, SHEET } from './pen';
-import type { Style } from './typeface';
+import type { Style } from './typeface/typeface';
 
 export interface Column {
   readonly head: string;

@@ -3,7 +3,7 @@ import { FindingRow, FindingTable } from '@/components/look/FindingRow';
 import { GaugeStrip, type GaugeStripProps } from '@/components/look/GaugeStrip';
 import { displayNumber, ReadingValue } from '@/components/look/ReadingValue';
 import { markOfState } from '@/components/look/status';
-import type { NoticeClause, NoticePosition } from '@/domain/verdict/notice';
+import type { NoticeClause, NoticePosition } from '@/domain/verdict/notice/notice';
 
 const beyond = ({ limits }: NoticeClause, { value }: NoticePosition): number => {
   const reading = Number(value?.text);

@@ -1,7 +1,7 @@
 import { readNoticeFile } from '@/domain/ledger/verify/notice-file';
 import type { Outcome, Step } from '@/domain/ledger/verify/step';
-import type { NoticeDocument } from '@/domain/verdict/notice';
-import { decisionWords } from '@/domain/verdict/notice-words';
+import type { NoticeDocument } from '@/domain/verdict/notice/notice';
+import { decisionWords } from '@/domain/verdict/notice/notice-words';
 import { type Ask, checkNotice } from './check-notice';
 import { readFile } from './read-file';
 

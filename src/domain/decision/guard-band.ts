@@ -1,6 +1,6 @@
 import { fromDecimalText, toNumber } from '../quantity/rational';
-import type { Spread } from './coverage';
 import { DEFAULT_PROBABILITY, type DecisionRule } from './decision-rule';
+import type { Spread } from './probability/coverage';
 
 /** Standard uncertainty u and expanded uncertainty U = k·u, in the base of the dimension. */
 interface Uncertainty {

@@ -1,4 +1,4 @@
-import { coverageFactor, spreadOf } from '../decision/coverage';
+import { coverageFactor, spreadOf } from '../decision/probability/coverage';
 
 /** One line of an uncertainty budget. */
 export interface UncertaintyComponent {

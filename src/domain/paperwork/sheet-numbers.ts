@@ -3,11 +3,8 @@ import type { Quantity } from '../quantity/quantity';
 import { quantityOf } from '../quantity/quantity';
 import { fromStored } from '../quantity/stored';
 import type { NumberFact } from '../rulebook/evaluate/facts';
-import {
-  getQuantityEntry,
-  type QuantityName,
-  type RuleDimension,
-} from '../rulebook/quantity-catalogue';
+import type { RuleDimension } from '../rulebook/quantities/entry';
+import { getQuantityEntry, type QuantityName } from '../rulebook/quantity-catalogue';
 import { clearanceOf } from '../tappet/clearance';
 import { footAgainstBody } from '../tappet/foot';
 import type { DeclaredReading } from './document';

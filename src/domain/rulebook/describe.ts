@@ -1,7 +1,8 @@
 import { DEFAULT_PROBABILITY, type DecisionRule } from '../decision/decision-rule';
 import type { Written } from '../quantity/dimension';
 import type { HeldAgainst, LimitRequirement, Measurand } from './limit';
-import { getQuantityEntry, type Per } from './quantity-catalogue';
+import type { Per } from './quantities/entry';
+import { getQuantityEntry } from './quantity-catalogue';
 import type { Requirement } from './requirement';
 
 /** `0.8420 in`; a ratio stands alone, a degree close up. */

@@ -1,7 +1,8 @@
 import type { DecisionRule } from '../decision/decision-rule';
 import type { Comparison } from '../decision/requirement';
 import type { Written } from '../quantity/dimension';
-import type { Per, QuantityName } from './quantity-catalogue';
+import type { Per } from './quantities/entry';
+import type { QuantityName } from './quantity-catalogue';
 
 /** Which figure of the readings at one position is held against the limit. */
 export type Figure = 'mean' | 'smallest' | 'largest';

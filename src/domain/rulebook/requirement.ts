@@ -1,6 +1,6 @@
 import type { Written } from '../quantity/dimension';
 import type { LimitRequirement, ReferenceAverageRequirement } from './limit';
-import type { Per } from './quantity-catalogue';
+import type { Per } from './quantities/entry';
 
 export interface Option {
   /** A lasting key, `hydraulic-flat`. */

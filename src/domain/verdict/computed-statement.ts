@@ -1,5 +1,5 @@
 import type { State } from '../rulebook/clause-result';
-import type { ComputedStatement } from './notice';
+import type { ComputedStatement } from './notice/notice';
 
 export interface StatedFinding {
   readonly clause: string;

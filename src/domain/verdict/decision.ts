@@ -2,7 +2,7 @@ import type { Fault } from '../failure';
 import type { PenaltyRow } from '../rulebook/edition';
 import type { RulesInForce } from '../rulebook/rules-in-force';
 import { agreesWithStatement, computedStatement, type StatedFinding } from './computed-statement';
-import type { Decision } from './notice';
+import type { Decision } from './notice/notice';
 
 /** What an official writes down before publishing. */
 export interface DecisionDraft {

@@ -2,10 +2,10 @@ import type { Written } from '../quantity/dimension';
 import { measurandWords } from '../rulebook/describe';
 import { getQuantityEntry, isQuantityName } from '../rulebook/quantity-catalogue';
 import type { RulesInForce } from '../rulebook/rules-in-force';
-import type { NoticeClause, NoticeGauge, NoticePerson } from './notice';
-import { noticeClause, positionsAtFault, readingsAt } from './notice-clause';
-import { noticeGauges } from './notice-gauges';
-import { type Named, noticePeople } from './notice-people';
+import type { NoticeClause, NoticeGauge, NoticePerson } from './notice/notice';
+import { noticeClause, positionsAtFault, readingsAt } from './notice/notice-clause';
+import { noticeGauges } from './notice/notice-gauges';
+import { type Named, noticePeople } from './notice/notice-people';
 import type { ReportFinding, ReportView } from './report-view';
 
 /** A reading behind a clause that is not complied with, with the gauge it was taken by. */

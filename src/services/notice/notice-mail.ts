@@ -1,12 +1,12 @@
 import { moneyWords } from '@/domain/verdict/money';
-import type { NoticeDocument } from '@/domain/verdict/notice';
+import type { NoticeDocument } from '@/domain/verdict/notice/notice';
 import {
   appealUntilWords,
   DECISION_WORDS,
   decisionWords,
   penaltySentence,
   provisionalWords,
-} from '@/domain/verdict/notice-words';
+} from '@/domain/verdict/notice/notice-words';
 import type { NewMail } from '../mail/queue-mail';
 
 /** What makes the reader of the mail a witness: kept elsewhere, it cannot be changed here. */

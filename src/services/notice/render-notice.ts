@@ -1,7 +1,7 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import { sha256, toHex, utf8 } from '@/domain/ledger/bytes';
 import { ok } from '@/domain/result';
-import type { NoticeDocument } from '@/domain/verdict/notice';
+import type { NoticeDocument } from '@/domain/verdict/notice/notice';
 import { performAct } from '../act/perform-act';
 import { queueMail } from '../mail/queue-mail';
 import type { Ports } from '../ports';

@@ -1,4 +1,4 @@
-import type { NoticeDocument } from '@/domain/verdict/notice';
+import type { NoticeDocument } from '@/domain/verdict/notice/notice';
 import { findNoticeLine } from '../notice/notice-file';
 import type { Ports } from '../ports';
 

@@ -1,4 +1,4 @@
-import type { Decision, NoticeDocument } from '@/domain/verdict/notice';
+import type { Decision, NoticeDocument } from '@/domain/verdict/notice/notice';
 import type { Ports } from '../ports';
 
 /** A row of the notice board. */

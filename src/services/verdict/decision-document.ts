@@ -2,7 +2,7 @@ import type { Actor } from '@/domain/access/permission';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { toDocument } from '@/domain/rulebook/document';
 import type { DecisionDraft } from '@/domain/verdict/decision';
-import type { NoticeDocument } from '@/domain/verdict/notice';
+import type { NoticeDocument } from '@/domain/verdict/notice/notice';
 import type { DecisionCase } from './find-case';
 
 /** The whole decision as canonical text, for the parties and the panel; the notice is its public part. */

@@ -2,7 +2,7 @@ import type { EntityManager } from '@mikro-orm/postgresql';
 import { findHex } from '@/domain/ledger/bytes';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import type { Deciding } from '@/domain/verdict/before-deciding';
-import type { Named } from '@/domain/verdict/notice-people';
+import type { Named } from '@/domain/verdict/notice/notice-people';
 import { type ReportView, readReport } from '@/domain/verdict/report-view';
 import { getRules } from '../rulebook/find-rules';
 

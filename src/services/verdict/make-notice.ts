@@ -1,7 +1,7 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
-import { composeNotice } from '@/domain/verdict/compose-notice';
 import type { DecisionDraft } from '@/domain/verdict/decision';
-import type { NoticeDocument } from '@/domain/verdict/notice';
+import { composeNotice } from '@/domain/verdict/notice/compose-notice';
+import type { NoticeDocument } from '@/domain/verdict/notice/notice';
 import { type DecisionCase, readNames, type SignedReport } from './find-case';
 
 /** The one way from a decision to its notice: for the preview and for publishing alike. */

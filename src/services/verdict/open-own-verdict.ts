@@ -3,7 +3,7 @@ import { absent, type Failure } from '@/domain/failure';
 import { findHex } from '@/domain/ledger/bytes';
 import { fail, ok, type Result } from '@/domain/result';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
-import type { NoticeDocument } from '@/domain/verdict/notice';
+import type { NoticeDocument } from '@/domain/verdict/notice/notice';
 import { type ReportView, readReport } from '@/domain/verdict/report-view';
 import type { Ports } from '../ports';
 import { getRules } from '../rulebook/find-rules';

@@ -2,7 +2,7 @@ import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, type Fault, stale } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import { type DecisionDraft, decisionFaults } from '@/domain/verdict/decision';
-import type { NoticeDocument } from '@/domain/verdict/notice';
+import type { NoticeDocument } from '@/domain/verdict/notice/notice';
 import { NoticeCounter } from '@/entities/event/notice-counter';
 import { VerdictDraft } from '@/entities/event/verdict-draft';
 import type { Ports } from '../ports';

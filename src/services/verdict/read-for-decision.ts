@@ -5,7 +5,7 @@ import { type EarlierBreach, type PenaltyRow, penaltyFor } from '@/domain/rulebo
 import { beforeDeciding, type Precondition } from '@/domain/verdict/before-deciding';
 import { computedStatement } from '@/domain/verdict/computed-statement';
 import { type DecisionDraft, decidableClauses } from '@/domain/verdict/decision';
-import type { ComputedStatement } from '@/domain/verdict/notice';
+import type { ComputedStatement } from '@/domain/verdict/notice/notice';
 import { VerdictDraft } from '@/entities/event/verdict-draft';
 import { type PartKept, readPartsOf } from '../custody/read-parts';
 import type { Ports } from '../ports';

@@ -1,9 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import { assess } from '@/domain/decision/assess';
-import { spreadOf } from '@/domain/decision/coverage';
 import type { DecisionRule } from '@/domain/decision/decision-rule';
+import { spreadOf } from '@/domain/decision/probability/coverage';
+import { globalRisk } from '@/domain/decision/probability/risk';
 import type { Comparison, LimitRequirement } from '@/domain/decision/requirement';
-import { globalRisk } from '@/domain/decision/risk';
 import { asciiIn } from '@/domain/quantity/format';
 import { compareQuantities } from '@/domain/quantity/quantity';
 import { fromDecimalText, toNumber } from '@/domain/quantity/rational';

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { spreadOf } from '@/domain/decision/coverage';
+import { spreadOf } from '@/domain/decision/probability/coverage';
 import { budgetLines } from '@/domain/measurement/budget';
 import { pooledRepeatability } from '@/domain/measurement/repeatability';
 import { mean } from '@/domain/measurement/series';

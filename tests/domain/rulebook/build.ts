@@ -3,8 +3,9 @@ import type { Quantity } from '@/domain/quantity/quantity';
 import type { Clause } from '@/domain/rulebook/clause';
 import type { Facts, NumberFact } from '@/domain/rulebook/evaluate/facts';
 import type { LimitRequirement } from '@/domain/rulebook/limit';
+import type { RuleDimension } from '@/domain/rulebook/quantities/entry';
 import type { QuantityName } from '@/domain/rulebook/quantity-catalogue';
-import { getQuantityEntry, type RuleDimension } from '@/domain/rulebook/quantity-catalogue';
+import { getQuantityEntry } from '@/domain/rulebook/quantity-catalogue';
 import type { Requirement } from '@/domain/rulebook/requirement';
 import { inches, limit } from '@/domain/rulebook/rule-sets/rule-set';
 

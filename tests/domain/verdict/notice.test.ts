@@ -3,8 +3,12 @@ import { describe, expect, it } from 'vitest';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import type { Clause } from '@/domain/rulebook/clause';
 import { toDocument } from '@/domain/rulebook/document';
-import { composeNotice } from '@/domain/verdict/compose-notice';
-import { appealUntilWords, decisionWords, provisionalWords } from '@/domain/verdict/notice-words';
+import { composeNotice } from '@/domain/verdict/notice/compose-notice';
+import {
+  appealUntilWords,
+  decisionWords,
+  provisionalWords,
+} from '@/domain/verdict/notice/notice-words';
 import type { ReportFinding, ReportView } from '@/domain/verdict/report-view';
 import { BIG_FEET, NO_BREACH, reportText, STREET_EIGHT } from '../../support/verdict-case';
 import { noticeOf, partsOf, reportOf } from './parts';

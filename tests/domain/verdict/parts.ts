@@ -1,4 +1,4 @@
-import { composeNotice, type NoticeParts } from '@/domain/verdict/compose-notice';
+import { composeNotice, type NoticeParts } from '@/domain/verdict/notice/compose-notice';
 import { readReport } from '@/domain/verdict/report-view';
 import { BIG_FEET, BREACH, reportText, STREET_EIGHT } from '../../support/verdict-case';
 

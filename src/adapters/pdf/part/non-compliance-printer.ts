@@ -2,7 +2,7 @@ import { PDFDocument } from 'pdf-lib';
 import { formatInZone } from '@/domain/deadline/format-in-zone';
 import { clockWords, dayAndClockWords, shortDay } from '@/domain/verdict/instant-words';
 import type { ClauseAtFault, NonCompliance } from '@/domain/verdict/non-compliance';
-import { hashWords, ROLE_WORDS, sourceWords } from '@/domain/verdict/notice-words';
+import { hashWords, ROLE_WORDS, sourceWords } from '@/domain/verdict/notice/notice-words';
 import type { NonCompliancePrinter, NonComplianceToPrint } from '@/services/ports';
 import { type Block, BOLD, gap, HEAD, NUM, paragraph, type Span, TEXT } from '../blocks';
 import { paginate, type Section } from '../flow';
@@ -10,7 +10,7 @@ import { drawFrame, drawQr } from '../frame';
 import { type Pen, POINTS, penOn, SHEET } from '../pen';
 import { readingSection } from '../reading-section';
 import { table } from '../table';
-import { openTypefaces, type Style } from '../typeface';
+import { openTypefaces, type Style } from '../typeface/typeface';
 
 type Width = (text: string, style: Style) => number;
 const TITLE: Style = { face: 'bold', size: 29 };

@@ -5,7 +5,7 @@ import type { TagPrinter, TagToPrint } from '@/services/ports';
 import { type Span, wrap } from '../blocks';
 import { drawQr } from '../frame';
 import { type Pen, POINTS, penOn, SHEET } from '../pen';
-import { openTypefaces, type Style } from '../typeface';
+import { openTypefaces, type Style } from '../typeface/typeface';
 
 /** 100 × 62 mm in CSS pixels. */
 const LABEL = { width: 378, height: 234 } as const;

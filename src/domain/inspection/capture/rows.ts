@@ -1,5 +1,6 @@
 import type { Written } from '../../quantity/dimension';
-import type { Per, QuantityName } from '../../rulebook/quantity-catalogue';
+import type { Per } from '../../rulebook/quantities/entry';
+import type { QuantityName } from '../../rulebook/quantity-catalogue';
 import { boreName, type Valve } from '../../tappet/layout/bore-layout';
 
 /** A place on the engine; parts that do not apply are empty texts. */

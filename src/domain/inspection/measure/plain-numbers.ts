@@ -4,11 +4,8 @@ import { combine, type UncertaintyComponent } from '../../measurement/uncertaint
 import { quantityOf } from '../../quantity/quantity';
 import { fromStored } from '../../quantity/stored';
 import type { NumberFact } from '../../rulebook/evaluate/facts';
-import {
-  getQuantityEntry,
-  type QuantityName,
-  type RuleDimension,
-} from '../../rulebook/quantity-catalogue';
+import type { RuleDimension } from '../../rulebook/quantities/entry';
+import { getQuantityEntry, type QuantityName } from '../../rulebook/quantity-catalogue';
 import { type GaugeRecord, gaugeOf } from '../capture/gauge-record';
 import type { JudgedReading } from '../capture/readings-that-count';
 import { positionKey } from '../capture/rows';

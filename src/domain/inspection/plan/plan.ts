@@ -1,7 +1,8 @@
 import type { Clause } from '../../rulebook/clause';
 import type { PositionResult } from '../../rulebook/clause-result';
 import type { LimitRequirement } from '../../rulebook/limit';
-import { getQuantityEntry, type Per, type QuantityName } from '../../rulebook/quantity-catalogue';
+import type { Per } from '../../rulebook/quantities/entry';
+import { getQuantityEntry, type QuantityName } from '../../rulebook/quantity-catalogue';
 import type { RulesInForce } from '../../rulebook/rules-in-force';
 import type { InspectionAssessment } from '../assess-inspection';
 import { positionKey } from '../capture/rows';

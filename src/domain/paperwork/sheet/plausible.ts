@@ -1,7 +1,8 @@
 import { asciiIn } from '../../quantity/format';
 import { decimalsOf } from '../../quantity/number-text';
 import type { Quantity } from '../../quantity/quantity';
-import type { QuantityName, RuleDimension } from '../../rulebook/quantity-catalogue';
+import type { RuleDimension } from '../../rulebook/quantities/entry';
+import type { QuantityName } from '../../rulebook/quantity-catalogue';
 import { placeKey, type SheetCell } from './sheet-cell';
 
 /** A cell that is a number; `number` in the base of its dimension, only to compare with. */

@@ -1,7 +1,7 @@
 import { positionsIn } from '../../inspection/found-facts';
 import type { Position } from '../../rulebook/evaluate/facts';
 import type { SheetForm } from '../../rulebook/form/form';
-import type { Per } from '../../rulebook/quantity-catalogue';
+import type { Per } from '../../rulebook/quantities/entry';
 import type { BoreLayout, Valve } from '../../tappet/layout/bore-layout';
 import { degreeRows } from '../cam/cam-place';
 

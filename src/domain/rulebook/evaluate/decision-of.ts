@@ -4,7 +4,8 @@ import { parseWritten } from '../../quantity/parse';
 import { minus, plus, type Quantity, quantityOf } from '../../quantity/quantity';
 import { down, halfEven, type Rounding, roundToStep, up } from '../../quantity/round';
 import type { HeldAgainst, LimitRequirement, LimitRounding } from '../limit';
-import { getQuantityEntry, type RuleDimension } from '../quantity-catalogue';
+import type { RuleDimension } from '../quantities/entry';
+import { getQuantityEntry } from '../quantity-catalogue';
 
 /** A number of a published rule; a fault here is a defect, since none is published with one. */
 export const getWritten = <D extends Dimension>(written: Written, dimension: D): Quantity<D> => {

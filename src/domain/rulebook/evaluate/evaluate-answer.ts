@@ -1,5 +1,5 @@
 import type { PositionResult } from '../clause-result';
-import type { Per } from '../quantity-catalogue';
+import type { Per } from '../quantities/entry';
 import type {
   ChoiceRequirement,
   PhotographRequirement,

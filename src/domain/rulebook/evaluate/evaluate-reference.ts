@@ -4,7 +4,8 @@ import { type Quantity, quantityOf } from '../../quantity/quantity';
 import type { PositionResult } from '../clause-result';
 import { writtenWords } from '../describe';
 import type { ReferenceAverageRequirement } from '../limit';
-import { getQuantityEntry, type RuleDimension } from '../quantity-catalogue';
+import type { RuleDimension } from '../quantities/entry';
+import { getQuantityEntry } from '../quantity-catalogue';
 import { around, decisionWithin } from './decision-of';
 import {
   type Facts,

@@ -1,7 +1,8 @@
 import type { UncertaintyComponent } from '../../measurement/uncertainty';
 import type { Quantity } from '../../quantity/quantity';
 import type { Figure } from '../limit';
-import type { Per, QuantityName, RuleDimension } from '../quantity-catalogue';
+import type { Per, RuleDimension } from '../quantities/entry';
+import type { QuantityName } from '../quantity-catalogue';
 
 /** A number as one independent set gave it. */
 export interface SetNumber {

@@ -9,7 +9,7 @@ import { compareQuantities, minus, type Quantity } from '../../quantity/quantity
 import type { BudgetWords, PositionResult, State } from '../clause-result';
 import { writtenWords } from '../describe';
 import type { Figure } from '../limit';
-import type { RuleDimension } from '../quantity-catalogue';
+import type { RuleDimension } from '../quantities/entry';
 import { getWritten } from './decision-of';
 import type { NumberFact, Position } from './facts';
 

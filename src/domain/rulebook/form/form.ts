@@ -1,6 +1,7 @@
 import type { Force } from '../clause';
 import type { CheckingLifter } from '../limit';
-import type { Per, QuantityName } from '../quantity-catalogue';
+import type { Per } from '../quantities/entry';
+import type { QuantityName } from '../quantity-catalogue';
 import type { Option, SheetKind } from '../requirement';
 
 interface Asked {

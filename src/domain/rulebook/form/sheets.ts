@@ -1,11 +1,6 @@
 import type { Clause } from '../clause';
-import {
-  getQuantityEntry,
-  type Per,
-  type QuantityName,
-  readingsFor,
-  type Source,
-} from '../quantity-catalogue';
+import type { Per, Source } from '../quantities/entry';
+import { getQuantityEntry, type QuantityName, readingsFor } from '../quantity-catalogue';
 import type { SheetKind } from '../requirement';
 import type { SheetColumn, SheetForm } from './form';
 

@@ -1,6 +1,6 @@
 import type { APIRoute } from 'astro';
 import { absent } from '@/domain/failure';
-import { DECISION_WORDS } from '@/domain/verdict/notice-words';
+import { DECISION_WORDS } from '@/domain/verdict/notice/notice-words';
 import { problem } from '@/http/problem';
 import { findSeriesHead } from '@/services/public/find-series-head';
 import { listNotices } from '@/services/public/list-notices';

@@ -1,7 +1,7 @@
 import type { Actor } from '@/domain/access/permission';
 import { findHex } from '@/domain/ledger/bytes';
 import { foundBefore, type LastFound } from '@/domain/paperwork/last-found';
-import type { NoticeDocument } from '@/domain/verdict/notice';
+import type { NoticeDocument } from '@/domain/verdict/notice/notice';
 import { readReport } from '@/domain/verdict/report-view';
 import type { Ports } from '../../ports';
 import { getRules } from '../../rulebook/find-rules';

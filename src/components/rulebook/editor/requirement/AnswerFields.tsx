@@ -1,4 +1,4 @@
-import type { Per } from '@/domain/rulebook/quantity-catalogue';
+import type { Per } from '@/domain/rulebook/quantities/entry';
 import type {
   ChoiceRequirement,
   MatchesPaperworkRequirement,

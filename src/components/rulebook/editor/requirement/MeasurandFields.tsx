@@ -1,12 +1,12 @@
 import { dimensionWords } from '@/domain/quantity/dimension';
 import { unitSymbols } from '@/domain/quantity/find-unit';
 import type { Measurand } from '@/domain/rulebook/limit';
+import type { Source } from '@/domain/rulebook/quantities/entry';
 import {
   getQuantityEntry,
   isQuantityName,
   QUANTITY_NAMES,
   type QuantityName,
-  type Source,
 } from '@/domain/rulebook/quantity-catalogue';
 import { SelectField } from '../fields/SelectField';
 import { TextField } from '../fields/TextField';

@@ -1,4 +1,4 @@
-import { normalCdf } from '../statistics/distribution';
+import { normalCdf } from '../../statistics/distribution';
 
 /** A population of parts and a measurement of them, both normal, in one unit (JCGM 106:2012, 9). */
 export interface Population {

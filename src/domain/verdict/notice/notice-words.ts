@@ -1,6 +1,6 @@
-import { formatDeadline, formatInZone } from '../deadline/format-in-zone';
-import { dayWords } from './instant-words';
-import { moneyWords } from './money';
+import { formatDeadline, formatInZone } from '../../deadline/format-in-zone';
+import { dayWords } from '../instant-words';
+import { moneyWords } from '../money';
 import type { NoticeClause, NoticeDocument, NoticeRole } from './notice';
 
 /** `4.3`, `4.1 and 4.3`, `3.1, 4.1 and 4.3` */

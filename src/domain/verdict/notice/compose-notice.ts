@@ -1,12 +1,12 @@
-import { deadlineFrom } from '../deadline/deadline';
-import type { RulesInForce } from '../rulebook/rules-in-force';
-import { computedStatement } from './computed-statement';
-import { type DecisionDraft, penaltyWords } from './decision';
+import { deadlineFrom } from '../../deadline/deadline';
+import type { RulesInForce } from '../../rulebook/rules-in-force';
+import { computedStatement } from '../computed-statement';
+import { type DecisionDraft, penaltyWords } from '../decision';
+import type { ReportView } from '../report-view';
 import type { NoticeDocument, NoticePenalty } from './notice';
 import { noticeClause } from './notice-clause';
 import { noticeGauges } from './notice-gauges';
 import { type Named, noticePeople } from './notice-people';
-import type { ReportView } from './report-view';
 
 /** Everything a notice is made from; only a part of it becomes public. */
 export interface NoticeParts {

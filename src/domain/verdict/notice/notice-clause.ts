@@ -1,12 +1,12 @@
-import { convert } from '../quantity/convert';
-import { asciiIn } from '../quantity/format';
-import { decimalsOf } from '../quantity/number-text';
-import type { Clause } from '../rulebook/clause';
-import { decisionOf } from '../rulebook/evaluate/decision-of';
-import { getQuantityEntry, isQuantityName } from '../rulebook/quantity-catalogue';
-import type { RulesInForce } from '../rulebook/rules-in-force';
+import { convert } from '../../quantity/convert';
+import { asciiIn } from '../../quantity/format';
+import { decimalsOf } from '../../quantity/number-text';
+import type { Clause } from '../../rulebook/clause';
+import { decisionOf } from '../../rulebook/evaluate/decision-of';
+import { getQuantityEntry, isQuantityName } from '../../rulebook/quantity-catalogue';
+import type { RulesInForce } from '../../rulebook/rules-in-force';
+import type { ReportFinding, ReportPosition, ReportView } from '../report-view';
 import type { NoticeClause, NoticeLimits, NoticePosition, NoticeReading } from './notice';
-import type { ReportFinding, ReportPosition, ReportView } from './report-view';
 
 /** The positions that fail; where none does, those that have a number or answer and no pass. */
 export const positionsAtFault = (finding: ReportFinding): readonly ReportPosition[] => {

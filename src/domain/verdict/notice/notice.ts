@@ -1,5 +1,5 @@
-import type { Written } from '../quantity/dimension';
-import type { BudgetWords, State } from '../rulebook/clause-result';
+import type { Written } from '../../quantity/dimension';
+import type { BudgetWords, State } from '../../rulebook/clause-result';
 
 /** A person's decision on an entry. */
 export type Decision = 'breach' | 'no-breach';

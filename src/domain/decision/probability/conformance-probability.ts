@@ -1,6 +1,6 @@
-import { type Rational, sub, toNumber } from '../quantity/rational';
+import { type Rational, sub, toNumber } from '../../quantity/rational';
+import { contains, type Window } from '../window';
 import type { Spread } from './coverage';
-import { contains, type Window } from './window';
 
 /** P(low ≤ Y ≤ high) for Y about the measured value (JCGM 106:2012, 7.2 to 7.4); without uncertainty 0 or 1. */
 export const conformanceProbability = (

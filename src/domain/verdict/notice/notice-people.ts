@@ -1,6 +1,6 @@
+import type { ReportFinding, ReportView } from '../report-view';
 import type { NoticePerson } from './notice';
 import { positionsAtFault, readingsAt } from './notice-clause';
-import type { ReportFinding, ReportView } from './report-view';
 
 export interface Named {
   readonly name: string;

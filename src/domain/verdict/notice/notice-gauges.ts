@@ -1,6 +1,6 @@
+import type { ReportFinding, ReportView } from '../report-view';
 import type { NoticeGauge } from './notice';
 import { positionsAtFault, readingsAt } from './notice-clause';
-import type { ReportFinding, ReportView } from './report-view';
 
 /** The gauges behind the readings that a notice shows, rings included, with the zeros of their runs. */
 export const noticeGauges = (

@@ -1,4 +1,9 @@
-import { normalCdf, normalQuantile, studentCdf, studentQuantile } from '../statistics/distribution';
+import {
+  normalCdf,
+  normalQuantile,
+  studentCdf,
+  studentQuantile,
+} from '../../statistics/distribution';
 
 /** The distribution of a measured value about its estimate. */
 export interface Spread {

@@ -1,0 +1,73 @@
+import type { QuantityEntry } from './entry';
+
+/** Lifters and their bores: what stands on the sheet of the bores. */
+export const LIFTER_QUANTITIES = {
+  'lifter-body-diameter': {
+    label: 'Lifter body diameter',
+    dimension: 'length',
+    unit: 'in',
+    per: 'lifter',
+    source: 'lifter-sheet',
+    from: 'micrometer readings of the body at its widest, off the oil groove and holes',
+    needsFigure: true,
+  },
+  'foot-diameter': {
+    label: 'Lifter foot diameter',
+    dimension: 'length',
+    unit: 'in',
+    per: 'lifter',
+    source: 'lifter-sheet',
+    from: 'micrometer readings of the foot',
+    needsFigure: true,
+  },
+  'foot-less-body': {
+    label: 'Foot diameter less body diameter',
+    dimension: 'length',
+    unit: 'in',
+    per: 'lifter',
+    source: 'lifter-sheet',
+    from: 'mean foot diameter less mean body diameter of the same lifter',
+  },
+  'lifter-height': {
+    label: 'Lifter height',
+    dimension: 'length',
+    unit: 'in',
+    per: 'lifter',
+    source: 'lifter-sheet',
+    from: 'height gauge or micrometer reading from the foot to the top of the body',
+  },
+  'tappet-bore-diameter': {
+    label: 'Tappet bore diameter',
+    dimension: 'length',
+    unit: 'in',
+    per: 'bore',
+    source: 'lifter-sheet',
+    from: 'bore gauge readings, off the oil holes',
+    needsFigure: true,
+  },
+  'tappet-clearance': {
+    label: 'Lifter-bore clearance',
+    dimension: 'length',
+    unit: 'in',
+    per: 'bore',
+    source: 'lifter-sheet',
+    from: 'bore diameter less lifter body diameter at the same bore',
+    needsFigure: true,
+  },
+  'bore-out-of-round': {
+    label: 'Tappet bore out-of-round',
+    dimension: 'length',
+    unit: 'in',
+    per: 'bore',
+    source: 'lifter-sheet',
+    from: 'largest difference in diameter between axes at one depth',
+  },
+  'bore-taper': {
+    label: 'Tappet bore taper',
+    dimension: 'length',
+    unit: 'in',
+    per: 'bore',
+    source: 'lifter-sheet',
+    from: "range of the depths' means",
+  },
+} as const satisfies Readonly<Record<string, QuantityEntry>>;
