@@ -1,16 +1,15 @@
 import { LockMode } from '@mikro-orm/core';
 import { readPublishable } from '@/contracts/rulebook/read-rulebook';
 import { type Actor, may } from '@/domain/access/permission';
-import { absent, type Failure, failure, stale } from '@/domain/failure';
-import { toHex } from '@/domain/ledger/bytes';
+import { absent, type Failure } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import type { Edition } from '@/domain/rulebook/edition';
 import { RaceClass } from '@/entities/series/race-class';
-import { RulebookDraft } from '@/entities/series/rulebook-draft';
 import { Season } from '@/entities/series/season';
 import { performAct } from '../act/perform-act';
 import type { Ports } from '../ports';
-import { publicationDocument } from './publication';
+import { lockDraft } from './draft/lock-draft';
+import { appendPublication } from './ruling/append-publication';
 
 /**
  * Freezes a draft as the class's next edition, in force from `inForceAt` (never before now).
@@ -33,17 +32,12 @@ export const publishEdition = async (
     deps,
     actor,
     { id, kind: 'publish-edition', seriesId, input: { draftId, version, inForceAt } },
-    async ({ em, at, append, line }) => {
-      const draft = await em.findOne(
-        RulebookDraft,
-        { seriesId, id: draftId, kind: 'edition' },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
-      );
-      if (draft === null) return fail(absent());
-      if (draft.publishedAt) {
-        return fail(failure('not-in-this-state', 'This draft has been published already.'));
-      }
-      if (draft.version !== version) return fail(stale());
+    async (act) => {
+      const { em, at } = act;
+      const where = { seriesId, id: draftId, kind: 'edition' } as const;
+      const found = await lockDraft(em, where, version, 'This draft has been published already.');
+      if (!found.ok) return found;
+      const draft = found.value;
       const content = readPublishable(draft.content);
       if (!content.ok) return content;
       const raceClass = await em.findOneOrFail(
@@ -67,30 +61,16 @@ export const publishEdition = async (
         ...content.value,
         inForceAt: from.toISOString(),
       };
-      const { document, hash } = publicationDocument({ kind: 'edition', content: edition });
       draft.publishedAt = at;
-      append('rule_publication', [
-        {
-          series_id: seriesId,
-          id: draft.id,
-          class_id: draft.classId,
-          kind: 'edition',
-          number: edition.number,
-          title: draft.title,
-          document,
-          hash,
-          in_force_at: edition.inForceAt,
-          published_at: at.toISOString(),
-          published_by: actor.personId,
-        },
-      ]);
-      line({
+      const hash = appendPublication(
+        act,
+        actor,
         seriesId,
-        kind: 'rulebook-published',
-        contents: { edition: { text: document, open: true } },
-        refs: { edition: draft.id },
-      });
-      return ok({ number: edition.number, hash: toHex(hash) });
+        draft.classId,
+        { kind: 'edition', content: edition },
+        { title: draft.title, inForceAt: edition.inForceAt },
+      );
+      return ok({ number: edition.number, hash });
     },
   );
 };

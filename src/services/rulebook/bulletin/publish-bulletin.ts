@@ -1,12 +1,11 @@
-import { LockMode } from '@mikro-orm/core';
 import { readBulletinContent } from '@/contracts/rulebook/read-rulebook';
 import { type Actor, may } from '@/domain/access/permission';
-import { absent, type Failure, failure, invalid, stale } from '@/domain/failure';
+import { absent, type Failure, failure, invalid } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
 import type { Bulletin } from '@/domain/rulebook/bulletin';
-import { RulebookDraft } from '@/entities/series/rulebook-draft';
 import { performAct } from '../../act/perform-act';
 import type { Ports } from '../../ports';
+import { lockDraft } from '../draft/lock-draft';
 import { appendPublication } from '../ruling/append-publication';
 import { takeNumber } from '../ruling/next-number';
 import { affectedEngines } from './affected-engines';
@@ -43,16 +42,15 @@ export const publishBulletin = async (
     { id, kind: 'publish-bulletin', seriesId, input: { draftId, version } },
     async (act) => {
       const { em, at } = act;
-      const draft = await em.findOne(
-        RulebookDraft,
-        { seriesId, id: draftId, kind: 'bulletin' },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
+      const where = { seriesId, id: draftId, kind: 'bulletin' } as const;
+      const found = await lockDraft(
+        em,
+        where,
+        version,
+        'This bulletin has been published already.',
       );
-      if (draft === null) return fail(absent());
-      if (draft.publishedAt) {
-        return fail(failure('not-in-this-state', 'This bulletin has been published already.'));
-      }
-      if (draft.version !== version) return fail(stale());
+      if (!found.ok) return found;
+      const draft = found.value;
       const read = readBulletinContent(draft.content);
       if (!read.ok) return read;
       const { classId } = draft;

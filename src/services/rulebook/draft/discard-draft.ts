@@ -1,10 +1,9 @@
-import { LockMode } from '@mikro-orm/core';
 import { type Actor, may } from '@/domain/access/permission';
-import { absent, type Failure, failure, stale } from '@/domain/failure';
+import { absent, type Failure } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
-import { RulebookDraft } from '@/entities/series/rulebook-draft';
 import { performAct } from '../../act/perform-act';
 import type { Ports } from '../../ports';
+import { lockDraft } from './lock-draft';
 
 /** Throws an unpublished draft away, if it is still the one that was looked at. */
 export const discardDraft = async (
@@ -24,16 +23,9 @@ export const discardDraft = async (
     actor,
     { id, kind: 'discard-draft', seriesId, input: { draftId, version } },
     async ({ em }) => {
-      const draft = await em.findOne(
-        RulebookDraft,
-        { seriesId, id: draftId },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
-      );
-      if (draft === null) return fail(absent());
-      if (draft.publishedAt) {
-        return fail(failure('not-in-this-state', 'This draft has been published and stays so.'));
-      }
-      if (draft.version !== version) return fail(stale());
+      const found = await lockDraft(em, { seriesId, id: draftId }, version);
+      if (!found.ok) return found;
+      const draft = found.value;
       em.remove(draft);
       return ok({ classId: draft.classId });
     },

@@ -1,11 +1,10 @@
-import { LockMode } from '@mikro-orm/core';
 import { readBulletinContent, readRulebookContent } from '@/contracts/rulebook/read-rulebook';
 import { type Actor, may } from '@/domain/access/permission';
-import { absent, type Failure, failure, stale } from '@/domain/failure';
+import { absent, type Failure } from '@/domain/failure';
 import { fail, ok, type Result } from '@/domain/result';
-import { RulebookDraft } from '@/entities/series/rulebook-draft';
 import { performAct } from '../../act/perform-act';
 import type { Ports } from '../../ports';
+import { lockDraft } from './lock-draft';
 
 const READ = { edition: readRulebookContent, bulletin: readBulletinContent } as const;
 
@@ -41,16 +40,9 @@ export const saveDraft = async (
       input: { draftId, version, title, content: content.value },
     },
     async ({ em, at }) => {
-      const draft = await em.findOne(
-        RulebookDraft,
-        { seriesId, id: draftId, kind },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
-      );
-      if (draft === null) return fail(absent());
-      if (draft.publishedAt) {
-        return fail(failure('not-in-this-state', 'This draft has been published and stays so.'));
-      }
-      if (draft.version !== version) return fail(stale());
+      const found = await lockDraft(em, { seriesId, id: draftId, kind }, version);
+      if (!found.ok) return found;
+      const draft = found.value;
       draft.title = title;
       draft.content = content.value as unknown as Record<string, unknown>;
       draft.updatedBy = actor.personId;
