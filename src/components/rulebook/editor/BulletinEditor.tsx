@@ -1,5 +1,5 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { useDeferredValue, useEffect, useMemo, useState } from 'react';
+import { useDeferredValue, useMemo, useState } from 'react';
 import { findBulletinFaults } from '@/domain/rulebook/ambiguity/bulletin-faults';
 import type { ClauseChange } from '@/domain/rulebook/bulletin';
 import type { Clause } from '@/domain/rulebook/clause';
@@ -8,7 +8,7 @@ import { BulletinHead } from './bulletin/BulletinHead';
 import { ChangeItem } from './bulletin/ChangeItem';
 import { NewChange } from './bulletin/NewChange';
 import { FaultList, type PlacedFault } from './clause/FaultList';
-import { focusField } from './fields/faults';
+import { useGoTo } from './fields/use-go-to';
 import { ConflictChoice } from './saving/ConflictChoice';
 import { DraftSaved } from './saving/DraftSaved';
 import { type BulletinContent, bulletinFrom, bulletinParts, type Titled } from './saving/parts';
@@ -45,7 +45,7 @@ const place = (content: BulletinContent, pointer: string, detail: string): Place
 const Editor = ({ draft, rules, zone, publishHref }: BulletinEditorProps) => {
   const [content, setContent] = useState(draft.content);
   const [open, setOpen] = useState<number>();
-  const [goTo, setGoTo] = useState<string>();
+  const goTo = useGoTo();
   const written = useMemo(
     () => ({ kind: 'bulletin' as const, title: content.title, content }),
     [content],
@@ -64,11 +64,6 @@ const Editor = ({ draft, rules, zone, publishHref }: BulletinEditorProps) => {
       ),
     [later, rules],
   );
-  useEffect(() => {
-    if (goTo === undefined) return;
-    focusField(goTo);
-    setGoTo(undefined);
-  }, [goTo]);
 
   const { changes } = content;
   // A change keeps its place; the number in it may be typed over.
@@ -102,7 +97,7 @@ const Editor = ({ draft, rules, zone, publishHref }: BulletinEditorProps) => {
           sound="Next: see which accepted engines it would make illegal."
           onGo={(fault) => {
             setOpen(fault.key === undefined ? undefined : Number(fault.key));
-            setGoTo(fault.pointer);
+            goTo(fault.pointer);
           }}
         />
         <p className="actions">

@@ -1,12 +1,12 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { useCallback, useDeferredValue, useEffect, useMemo, useReducer, useState } from 'react';
+import { useCallback, useDeferredValue, useMemo, useReducer } from 'react';
 import { findAmbiguities } from '@/domain/rulebook/ambiguity/find-ambiguities';
 import { FaultList, type PlacedFault } from './clause/FaultList';
 import { ClauseList } from './edition/ClauseList';
 import { draftState, PENALTIES, reduceDraft } from './edition/draft-state';
 import { PenaltySection } from './edition/PenaltySection';
 import { byRow, faultsOf, placeFaults } from './edition/place-faults';
-import { focusField } from './fields/faults';
+import { useGoTo } from './fields/use-go-to';
 import { ConflictChoice } from './saving/ConflictChoice';
 import { DraftSaved } from './saving/DraftSaved';
 import { type EditionContent, editionFrom, editionParts, type Titled } from './saving/parts';
@@ -23,7 +23,7 @@ interface DraftEditorProps {
 
 const Editor = ({ draft, publishHref }: DraftEditorProps) => {
   const [state, act] = useReducer(reduceDraft, draft, draftState);
-  const [goTo, setGoTo] = useState<string>();
+  const goTo = useGoTo();
   const { title, rows, penalties } = state;
 
   const written = useMemo(() => {
@@ -46,19 +46,20 @@ const Editor = ({ draft, publishHref }: DraftEditorProps) => {
   const placed = useMemo(() => byRow(faults), [faults]);
   const rowNames = useMemo(() => penalties.map((row) => row.row), [penalties]);
 
-  useEffect(() => {
-    if (goTo === undefined) return;
-    focusField(goTo);
-    setGoTo(undefined);
-  }, [goTo]);
-  const openRow = useCallback((key: string) => {
-    act({ do: 'open', key });
-    setGoTo('/heading');
-  }, []);
-  const go = useCallback((fault: PlacedFault) => {
-    act({ do: 'open', key: fault.key });
-    setGoTo(fault.pointer);
-  }, []);
+  const openRow = useCallback(
+    (key: string) => {
+      act({ do: 'open', key });
+      goTo('/heading');
+    },
+    [goTo],
+  );
+  const go = useCallback(
+    (fault: PlacedFault) => {
+      act({ do: 'open', key: fault.key });
+      goTo(fault.pointer);
+    },
+    [goTo],
+  );
 
   if (saving.state.kind === 'newer') {
     const { newer } = saving.state;

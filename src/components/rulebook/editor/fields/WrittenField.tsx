@@ -1,6 +1,6 @@
 import type { Dimension, Written } from '@/domain/quantity/dimension';
 import { unitSymbols } from '@/domain/quantity/find-unit';
-import { fieldId, useFaultsAt } from './faults';
+import { Around, fieldId, useFaultsAt } from './faults';
 
 interface WrittenFieldProps {
   readonly at: string;
@@ -24,18 +24,7 @@ export const WrittenField = ({ at, label, hint, dimension, unit, ...rest }: Writ
   const here = value?.unit ?? unit;
   const units = unitSymbols(dimension);
   return (
-    <div className="field">
-      <label htmlFor={id}>{label}</label>
-      {hint !== undefined && (
-        <p className="hint" id={`${id}:hint`}>
-          {hint}
-        </p>
-      )}
-      {faults.map((fault) => (
-        <p className="field-error" key={fault.detail} id={`${id}:error`}>
-          {fault.detail}
-        </p>
-      ))}
+    <Around at={at} label={label} hint={hint} faults={faults}>
       <span className="written">
         <input
           id={id}
@@ -65,6 +54,6 @@ export const WrittenField = ({ at, label, hint, dimension, unit, ...rest }: Writ
           ))}
         </select>
       </span>
-    </div>
+    </Around>
   );
 };

@@ -27,12 +27,15 @@ interface AroundProps {
   readonly at: string;
   readonly label: string;
   readonly hint?: string | undefined;
+  /** Where it is not what stands at the pointer alone. */
+  readonly faults?: readonly Fault[];
   readonly children: ReactNode;
 }
 
 /** Label, hint, field, and what is wrong with it. */
-export const Around = ({ at, label, hint, children }: AroundProps) => {
-  const faults = useFaultsAt(at);
+export const Around = ({ at, label, hint, faults: told, children }: AroundProps) => {
+  const own = useFaultsAt(at);
+  const faults = told ?? own;
   const id = fieldId(at);
   return (
     <div className="field">
