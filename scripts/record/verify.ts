@@ -1,6 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { MOST_BYTES } from '@/components/verify/find-attachment';
-import { askServer, checkBytes, checkNumber, type Report } from '@/components/verify/run-check';
+import type { Report } from '@/components/verify/report';
+import { askServer, checkBytes, checkNumber } from '@/components/verify/run-check';
 import { readArguments, run } from './arguments';
 
 const usage = `usage: npm run verify -- <file or address> [--key <verifier key> | --key-file <file>] [--server <address>]

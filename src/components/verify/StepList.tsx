@@ -1,18 +1,6 @@
-import type { Outcome, Step } from '@/domain/ledger/verify/step';
+import type { Step } from '@/domain/ledger/verify/step';
 import { Mark } from '../look/Mark';
-import type { Status } from '../look/status';
-
-const MARKS: Readonly<Record<Outcome, Status>> = {
-  passed: 'within',
-  failed: 'outside',
-  'not checked': 'not-measured',
-};
-
-const WORDS: Readonly<Record<Outcome, string>> = {
-  passed: 'Holds',
-  failed: 'Does not hold',
-  'not checked': 'Not checked',
-};
+import { OUTCOME_MARKS, OUTCOME_WORDS } from './outcome-words';
 
 /** What was looked at, one by one: what was found, what that proves, and what it does not. */
 export const StepList = ({ steps }: { readonly steps: readonly Step[] }) => (
@@ -20,9 +8,9 @@ export const StepList = ({ steps }: { readonly steps: readonly Step[] }) => (
     {steps.map((step) => (
       <li key={`${step.id} ${step.found}`} data-step={step.id} data-outcome={step.outcome}>
         <p className="status">
-          <Mark status={MARKS[step.outcome]} />
+          <Mark status={OUTCOME_MARKS[step.outcome]} />
           <span>
-            <strong>{WORDS[step.outcome]}</strong> {step.checked}
+            <strong>{OUTCOME_WORDS[step.outcome]}</strong> {step.checked}
           </span>
         </p>
         <dl className="gap-x-5 break-words md:grid md:grid-cols-[9rem_minmax(0,1fr)]">

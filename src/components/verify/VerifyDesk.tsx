@@ -1,6 +1,7 @@
 import { type DragEvent, type FormEvent, useEffect, useRef, useState } from 'react';
 import { StateSheet } from '../look/StateSheet';
-import { askServer, checkBytes, checkNumber, type Report } from './run-check';
+import type { Report } from './report';
+import { askServer, checkBytes, checkNumber } from './run-check';
 import { StepList } from './StepList';
 
 interface VerifyDeskProps {

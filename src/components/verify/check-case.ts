@@ -2,7 +2,7 @@ import { readCaseFile } from '@/contracts/case-file/case-file';
 import { checkCaseFile } from '@/contracts/case-file/check-case-file';
 import { conclude } from '@/domain/ledger/verify/step';
 import type { Ask } from './check-notice';
-import type { Report } from './run-check';
+import type { Report } from './report';
 import { readKeys, trustedKeys } from './trusted-keys';
 
 /** Checks a case file and works its reports out anew; loaded only when one is dropped. */

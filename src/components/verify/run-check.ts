@@ -1,19 +1,10 @@
 import { readNoticeFile } from '@/domain/ledger/verify/notice-file';
-import type { Outcome, Step } from '@/domain/ledger/verify/step';
+import type { Outcome } from '@/domain/ledger/verify/step';
 import type { NoticeDocument } from '@/domain/verdict/notice/notice';
 import { decisionWords } from '@/domain/verdict/notice/notice-words';
 import { type Ask, checkNotice } from './check-notice';
 import { readFile } from './read-file';
-
-export interface Report {
-  /** The one sentence that counts. */
-  readonly headline: string;
-  readonly outcome: Outcome;
-  readonly steps: readonly Step[];
-  /** What the checked record says, to be held against the page in hand. */
-  readonly says: readonly string[];
-  readonly keys: readonly string[];
-}
+import type { Report } from './report';
 
 const HEADLINES: Readonly<Record<Outcome, string>> = {
   passed: 'This is what the series recorded, unchanged.',

@@ -1,11 +1,21 @@
-import type { DrawCommitment } from './documents';
 import { bitsNeeded } from './entropy';
 
 /** What a seed of SHA-256 can hold. */
 export const SEED_BITS = 256;
 
+/** The pool and the values that are announced. */
+interface Announced {
+  readonly pool: readonly { readonly number: string; readonly car: string }[];
+  readonly select: string;
+  readonly values: readonly {
+    readonly name: string;
+    readonly ifMissing: string;
+    readonly substitute: string;
+  }[];
+}
+
 /** What makes a well-shaped commitment no fair basis for a draw; undefined if nothing. */
-export const findCommitmentFault = (commitment: DrawCommitment): string | undefined => {
+export const findCommitmentFault = (commitment: Announced): string | undefined => {
   const { pool, select, values } = commitment;
   if (pool.some(({ number }, i) => number !== String(i + 1))) return 'The pool has a gap.';
   if (new Set(pool.map(({ car }) => car)).size !== pool.length) return 'A car stands twice.';

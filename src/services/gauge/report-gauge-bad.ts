@@ -1,5 +1,4 @@
 import { LockMode } from '@mikro-orm/core';
-import type { EntityManager } from '@mikro-orm/postgresql';
 import type { GaugeFaultRequest } from '@/contracts/gauge/check';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, invalid } from '@/domain/failure';
@@ -9,17 +8,11 @@ import { toDocument } from '@/domain/rulebook/document';
 import { GaugeRow } from '@/entities/event/gauge';
 import { performAct } from '../act/perform-act';
 import { queueMail } from '../mail/queue-mail';
+import { officialsOf } from '../people/officials-of';
 import type { Ports } from '../ports';
 import { gaugeEntryText } from './gauge-entry';
 import { findLastGood } from './last-good';
 import { lookBack } from './review/look-back';
-
-const officialsOf = (em: EntityManager, seriesId: string) =>
-  em.execute<{ id: string; email: string }[]>(
-    `select p.id, p.email from public.membership m join public.person p on p.id = m.person_id
-     where m.series_id = ? and m.role = 'official' and m.ended_at is null`,
-    [seriesId],
-  );
 
 /**
  * A gauge was found bad. It is withdrawn, the look-back since its last good check opens a review for

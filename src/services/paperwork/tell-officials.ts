@@ -1,5 +1,6 @@
 import type { Act } from '../act/perform-act';
 import { queueMail } from '../mail/queue-mail';
+import { officialsOf } from '../people/officials-of';
 import type { Ports } from '../ports';
 import type { PaperworkRow } from './read/read-row';
 
@@ -13,14 +14,8 @@ export const tellOfficials = async (
   { seriesId, seriesName, className, carNumber, id, competitorId }: PaperworkRow,
   number: number,
 ): Promise<void> => {
-  const officials = await act.em.execute<{ id: string; email: string }[]>(
-    `select distinct p.id, p.email from public.membership m
-     join public.person p on p.id = m.person_id
-     where m.series_id = ? and m.role = 'official' and m.ended_at is null and p.id <> ?
-     order by p.id`,
-    [seriesId, competitorId],
-  );
-  for (const official of officials) {
+  for (const official of await officialsOf(act.em, seriesId)) {
+    if (official.id === competitorId) continue;
     queueMail(deps, act.em, act, {
       seriesId,
       personId: official.id,

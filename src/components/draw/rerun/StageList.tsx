@@ -1,19 +1,6 @@
-import type { Outcome } from '@/domain/ledger/verify/step';
 import { Mark } from '../../look/Mark';
-import type { Status } from '../../look/status';
+import { OUTCOME_MARKS, OUTCOME_WORDS } from '../../verify/outcome-words';
 import type { Stage } from './stages';
-
-const MARKS: Readonly<Record<Outcome, Status>> = {
-  passed: 'within',
-  failed: 'outside',
-  'not checked': 'not-measured',
-};
-
-const WORDS: Readonly<Record<Outcome, string>> = {
-  passed: 'Holds',
-  failed: 'Does not hold',
-  'not checked': 'Not checked',
-};
 
 /** The stages of a draw run again, in order. */
 export const StageList = ({
@@ -37,7 +24,7 @@ export const StageList = ({
           tabIndex={-1}
           {...(i === stages.length - 1 && lastRef !== undefined && { ref: lastRef })}
         >
-          <Mark status={MARKS[stage.outcome]} title={WORDS[stage.outcome]} />
+          <Mark status={OUTCOME_MARKS[stage.outcome]} title={OUTCOME_WORDS[stage.outcome]} />
           <span>
             {i + 1}. {stage.title}
           </span>

@@ -1,4 +1,4 @@
-import type { TextRows } from './find-columns';
+import type { TextRows } from './sheet-grid';
 
 /** Longer than any number with its unit. */
 const LONGEST = 40;

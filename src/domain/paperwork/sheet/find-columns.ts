@@ -5,8 +5,7 @@ import { headings } from './headings';
 import { findBore, findCylinder, findValve } from './positions';
 import { isOwnColumn, readHeader } from './read-header';
 import type { WantedSheet } from './sheet-cell';
-
-export type TextRows = readonly (readonly string[])[];
+import type { TextRows } from './sheet-grid';
 
 export interface FoundColumns {
   readonly columns: readonly SheetColumn[];

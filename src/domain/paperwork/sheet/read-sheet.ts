@@ -1,8 +1,9 @@
 import { type ColumnMeaning, cellName, isUnexplained, type SheetColumn } from './column-meaning';
 import { hasDecimalCommas, withPoint } from './decimal-mark';
-import { findColumns, type Mapping, type TextRows } from './find-columns';
+import { findColumns, type Mapping } from './find-columns';
 import { nameIn, placeAt, type SheetPlaces } from './place-at';
 import { placeKey, type SheetCell, type WantedSheet } from './sheet-cell';
+import type { TextRows } from './sheet-grid';
 import { plainGrid, type SheetGrid, turned } from './sheet-grid';
 import { type SheetNote, unplaced, withoutPlaces } from './sheet-note';
 

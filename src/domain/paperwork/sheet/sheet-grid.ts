@@ -1,4 +1,4 @@
-import type { TextRows } from './find-columns';
+export type TextRows = readonly (readonly string[])[];
 
 /** One sheet of a file as rows of text. Rows and columns count from 0. */
 export interface SheetGrid {

@@ -4,6 +4,7 @@ import { fail, ok, type Result } from '@/domain/result';
 import { RulesQuestion } from '@/entities/series/rules-question';
 import { performAct } from '../../act/perform-act';
 import { queueMail } from '../../mail/queue-mail';
+import { officialsOf } from '../../people/officials-of';
 import type { Ports } from '../../ports';
 import { findRules } from '../find-rules';
 
@@ -59,12 +60,7 @@ export const askQuestion = async (
           version: 1,
         }),
       );
-      const officials = await em.execute<{ id: string; email: string }[]>(
-        `select distinct p.id, p.email from public.membership m join public.person p on p.id = m.person_id
-         where m.series_id = ? and m.role = 'official' and m.ended_at is null`,
-        [seriesId],
-      );
-      for (const official of officials) {
+      for (const official of await officialsOf(em, seriesId)) {
         queueMail(
           deps,
           em,

@@ -1,6 +1,6 @@
 import { parse } from 'csv-parse/sync';
 import { type Failure, failure } from '@/domain/failure';
-import type { TextRows } from '@/domain/paperwork/sheet/find-columns';
+import type { TextRows } from '@/domain/paperwork/sheet/sheet-grid';
 import { fail, ok, type Result } from '@/domain/result';
 import { readText } from '../read-text';
 import { MOST_CELL, MOST_COLUMNS, MOST_ROWS, MOST_SPENT, nothingSpent, type Spent } from '../spent';

@@ -1,4 +1,4 @@
-import type { TextRows } from '@/domain/paperwork/sheet/find-columns';
+import type { TextRows } from '@/domain/paperwork/sheet/sheet-grid';
 import type { CsvForm } from './csv-form';
 import { inWindows1252 } from './windows-1252';
 
