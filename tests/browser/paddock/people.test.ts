@@ -313,3 +313,32 @@ test(
   },
   5 * MINUTES,
 );
+
+test(
+  'an owner puts the casting of an engine right; the draft follows, what stood there before stays to be read',
+  async () => {
+    await journey('engine put right', async ({ enter }) => {
+      const stamp = Date.now().toString(36);
+      const official = await enter(DESK);
+      await official.signInAs(OFFICIAL);
+      const className = `Casting Eight ${stamp}`;
+      await openClass(official, className, SHORT);
+      const owner = await enter(PHONE);
+      await owner.signInAs('Nell Farrowby');
+      const engine = `NC-${stamp}`.toUpperCase();
+      const path = await begin(owner, className, '56', engine);
+      expect(await owner.page.locator('main').textContent()).toContain('41-7730');
+      await owner.page.getByRole('link', { name: `Engine ${engine}: seals and history` }).click();
+      await owner.page.getByText('Put castings or serial right').click();
+      await owner.page.getByLabel('Block casting number').fill('41-7780');
+      await look(owner, 'engine-put-right');
+      await owner.page.getByRole('button', { name: 'Put it right' }).click();
+      await owner.page.getByText(/by Nell Farrowby: block casting 41-7730, now 41-7780/).waitFor();
+      await owner.open(path);
+      await ready(owner);
+      expect(await owner.page.locator('main').textContent()).toContain('41-7780');
+      expect(await owner.page.locator('main').textContent()).not.toContain('41-7730');
+    });
+  },
+  5 * MINUTES,
+);

@@ -3,7 +3,7 @@ import { asciiIn } from '@/domain/quantity/format';
 import type { Quantity } from '@/domain/quantity/quantity';
 import { toNumber } from '@/domain/quantity/rational';
 import { writtenWords } from '@/domain/rulebook/describe';
-import { face, paint } from '../../../look/paint';
+import { paint } from '../../../look/paint';
 
 interface LiftCurveProps {
   readonly readings: readonly LiftReading[];
@@ -14,7 +14,7 @@ interface LiftCurveProps {
 
 const WIDTH = 640;
 const HEIGHT = 220;
-const EDGE = 28;
+const EDGE = 12;
 
 /** `Intake: largest lift 0.3210 in at 110 deg; 246.2 deg between 0.050 in rising and falling.` */
 const lobeWords = (
@@ -48,7 +48,6 @@ export const LiftCurve = ({ readings, checkingLift, label }: LiftCurveProps) => 
     EDGE + ((degree - from) / Math.max(to - from, Number.EPSILON)) * (WIDTH - 2 * EDGE);
   const y = (lift: number) => HEIGHT - EDGE - (Math.max(lift, 0) / most) * (HEIGHT - 2 * EDGE);
   const words = lobes.map((one) => lobeWords(one, checkingLift));
-  const text = { fontSize: 16, fontFamily: face.num, fill: paint.ink2 } as const;
   return (
     <figure className="my-3">
       <svg
@@ -79,14 +78,9 @@ export const LiftCurve = ({ readings, checkingLift, label }: LiftCurveProps) => 
             strokeDasharray={lobe === 'intake' ? undefined : '10 6'}
           />
         ))}
-        <text {...text} x={EDGE} y={HEIGHT - 6}>
-          {from} deg
-        </text>
-        <text {...text} x={WIDTH - EDGE} y={HEIGHT - 6} textAnchor="end">
-          {to} deg
-        </text>
       </svg>
       <figcaption>
+        From {from} to {to} degrees of the crankshaft.
         <ul>
           {lobes.map((one, at) => (
             <li key={one.lobe}>
