@@ -1,9 +1,8 @@
-import { useState } from 'react';
 import type { LoggedTemperatures } from '@/domain/inspection/capture/rows';
-import { parseQuantity } from '@/domain/quantity/parse';
 import { FORM_WORDS, type Form, type Part } from '../../sheet/parts';
 import { gaugeFor, gaugesFor, type SetUp } from '../../sheet/set-up';
 import type { Sheet, SheetGauge } from '../../sheet/sheet';
+import { Temperature } from './Temperature';
 
 interface SetUpPanelProps {
   readonly sheet: Sheet;
@@ -40,46 +39,28 @@ const gaugeWords = (gauge: SheetGauge, today: string): string => {
   return `${gauge.code} ${gauge.name}${state}`;
 };
 
-const Temperature = ({
-  id,
-  label,
-  given,
-  onGive,
-}: {
-  readonly id: string;
-  readonly label: string;
-  readonly given: LoggedTemperatures['bore'];
-  readonly onGive: (value: LoggedTemperatures['bore']) => void;
-}) => {
-  const [text, setText] = useState(given === undefined ? '' : `${given.text} ${given.unit}`);
-  const [fault, setFault] = useState<string>();
-  const take = () => {
-    if (text.trim() === '') {
-      setFault(undefined);
-      onGive(undefined);
-      return;
-    }
-    const read = parseQuantity(text, { dimension: 'temperature' });
-    setFault(read.ok ? undefined : read.failure.detail);
-    if (read.ok) onGive({ text: read.value.text, unit: read.value.unit });
-  };
-  return (
-    <div className="field">
-      <label htmlFor={id}>{label}</label>
-      {fault !== undefined && <p className="field-error">{fault}</p>}
-      <input
-        id={id}
-        className="input-num"
-        inputMode="text"
-        placeholder="74 °F"
-        value={text}
-        aria-invalid={fault === undefined ? undefined : 'true'}
-        onChange={(event) => setText(event.target.value)}
-        onBlur={take}
-      />
-    </div>
-  );
-};
+/** Which gauge of the crib is taken for what, unless a part has one of its own. */
+const GAUGES = [
+  {
+    key: 'micrometerId',
+    id: 'micrometer',
+    label: 'Lifters with',
+    kinds: ['micrometer', 'caliper', 'other'],
+  },
+  {
+    key: 'boreGaugeId',
+    id: 'bore-gauge',
+    label: 'Bores with',
+    kinds: ['dial-bore-gauge', 'telescoping-gauge', 'micrometer', 'caliper', 'other'],
+  },
+  { key: 'ringId', id: 'ring', label: 'Setting ring', kinds: ['setting-ring'] },
+  {
+    key: 'otherGaugeId',
+    id: 'other-gauge',
+    label: 'Everything else with',
+    kinds: ['micrometer', 'caliper', 'scale', 'other'],
+  },
+] as const;
 
 /** How the sheet is taken: kept on this device, and written into every row that it touches. */
 export const SetUpPanel = ({ sheet, setUp, setUpAs, part }: SetUpPanelProps) => {
@@ -146,34 +127,16 @@ export const SetUpPanel = ({ sheet, setUp, setUpAs, part }: SetUpPanelProps) => 
           onChoose={(zeroedOn) => setUpAs({ zeroedOn: zeroedOn as SetUp['zeroedOn'] })}
         />
       )}
-      <Choose
-        id="micrometer"
-        label="Lifters with"
-        value={setUp.micrometerId}
-        options={of(['micrometer', 'caliper', 'other'])}
-        onChoose={(micrometerId) => setUpAs({ micrometerId })}
-      />
-      <Choose
-        id="bore-gauge"
-        label="Bores with"
-        value={setUp.boreGaugeId}
-        options={of(['dial-bore-gauge', 'telescoping-gauge', 'micrometer', 'caliper', 'other'])}
-        onChoose={(boreGaugeId) => setUpAs({ boreGaugeId })}
-      />
-      <Choose
-        id="ring"
-        label="Setting ring"
-        value={setUp.ringId}
-        options={of(['setting-ring'])}
-        onChoose={(ringId) => setUpAs({ ringId })}
-      />
-      <Choose
-        id="other-gauge"
-        label="Everything else with"
-        value={setUp.otherGaugeId}
-        options={of(['micrometer', 'caliper', 'scale', 'other'])}
-        onChoose={(otherGaugeId) => setUpAs({ otherGaugeId })}
-      />
+      {GAUGES.map(({ key, id, label, kinds }) => (
+        <Choose
+          key={key}
+          id={id}
+          label={label}
+          value={setUp[key]}
+          options={of(kinds)}
+          onChoose={(chosen) => setUpAs({ [key]: chosen })}
+        />
+      ))}
       <Temperature
         id="t-bore"
         label="Block, with its unit"
