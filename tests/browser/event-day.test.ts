@@ -196,7 +196,7 @@ test('a file is mapped and entered, all cars are checked, one page is signed, re
     await row.getByText(`2834 lb, SD-${stamp}`).waitFor();
     await row.getByText('Another gauge').click();
     await row
-      .getByLabel('Gauge it was read on, car 8')
+      .getByLabel('Which gauge it was, car 8')
       .selectOption({ label: `SC-${stamp}, Platform scale` });
     await row.getByLabel('Why the gauge is corrected, car 8').fill('It stood on the other scale');
     await tablet.expectAccessible();

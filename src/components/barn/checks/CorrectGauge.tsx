@@ -27,7 +27,7 @@ export const CorrectGauge = ({ car, gauges, busy, onCorrect }: CorrectGaugeProps
       >
         <select
           className="input"
-          aria-label={`Gauge it was read on, car ${car}`}
+          aria-label={`Which gauge it was, car ${car}`}
           value={gaugeId}
           onChange={(event) => choose(event.target.value)}
         >
