@@ -1,22 +1,7 @@
 import * as z from 'zod/mini';
-import { parseWritten } from '@/domain/quantity/parse';
+import { readsAs, writtenWith } from '../written';
 
-const length = z
-  .strictObject({
-    text: z.string().check(z.minLength(1, 'A figure is missing.'), z.maxLength(40)),
-    unit: z.string().check(z.minLength(1, 'A unit is missing.'), z.maxLength(20)),
-  })
-  .check((context) => {
-    const read = parseWritten(context.value, 'length');
-    if (!read.ok)
-      context.issues.push({
-        code: 'custom',
-        input: context.value,
-        path: ['text'],
-        message: read.failure.detail,
-      });
-  });
-
+const length = writtenWith('A figure is missing.', 40).check(readsAs('length'));
 const act = z.uuid('The act needs its identifier.');
 const instant = z.iso.datetime({ error: 'Write the instant in UTC.' });
 

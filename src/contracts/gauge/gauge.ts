@@ -2,24 +2,20 @@ import * as z from 'zod/mini';
 import { GAUGE_KINDS } from '@/domain/measurement/gauge';
 import { dimensionsOf } from '@/domain/quantity/find-unit';
 import { parseWritten } from '@/domain/quantity/parse';
+import { writtenWith } from '../written';
 
-const figure = z
-  .strictObject({
-    text: z.string().check(z.minLength(1, 'A figure is missing.'), z.maxLength(40)),
-    unit: z.string().check(z.minLength(1, 'A unit is missing.'), z.maxLength(20)),
-  })
-  .check((context) => {
-    const [dimension] = dimensionsOf(context.value.unit);
-    const read = dimension && parseWritten(context.value, dimension);
-    const message =
-      read === undefined
-        ? `"${context.value.unit}" is no unit known here.`
-        : read.ok
-          ? undefined
-          : read.failure.detail;
-    if (message !== undefined)
-      context.issues.push({ code: 'custom', input: context.value, path: ['text'], message });
-  });
+const figure = writtenWith('A figure is missing.', 40).check((context) => {
+  const [dimension] = dimensionsOf(context.value.unit);
+  const read = dimension && parseWritten(context.value, dimension);
+  const message =
+    read === undefined
+      ? `"${context.value.unit}" is no unit known here.`
+      : read.ok
+        ? undefined
+        : read.failure.detail;
+  if (message !== undefined)
+    context.issues.push({ code: 'custom', input: context.value, path: ['text'], message });
+});
 
 const day = z.iso.date('Write the day as 2026-03-02.');
 const decimal = z.string().check(z.regex(/^\d{1,4}(\.\d{1,4})?$/, 'Write a number such as 2.'));

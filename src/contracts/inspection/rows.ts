@@ -2,6 +2,7 @@ import * as z from 'zod/mini';
 import { isStrikeReason } from '@/domain/inspection/capture/strike-reasons';
 import { parseWritten } from '@/domain/quantity/parse';
 import { getQuantityEntry, isQuantityName } from '@/domain/rulebook/quantity-catalogue';
+import { readsAs, writtenWith } from '../written';
 
 const id = z.uuid('This is no identifier.');
 /** ISO 8601 instant in UTC with milliseconds, by the device's own clock. */
@@ -11,32 +12,9 @@ const instant = z.iso.datetime({
 });
 const name = z.string().check(z.maxLength(40));
 
-export const writtenValue = z.strictObject({
-  text: z.string().check(z.minLength(1, 'A value is missing.'), z.maxLength(60)),
-  unit: z.string().check(z.minLength(1, 'A unit is missing.'), z.maxLength(20)),
-});
-
-const length = writtenValue.check((context) => {
-  const read = parseWritten(context.value, 'length');
-  if (!read.ok)
-    context.issues.push({
-      code: 'custom',
-      input: context.value,
-      path: ['text'],
-      message: read.failure.detail,
-    });
-});
-
-const temperature = writtenValue.check((context) => {
-  const read = parseWritten(context.value, 'temperature');
-  if (!read.ok)
-    context.issues.push({
-      code: 'custom',
-      input: context.value,
-      path: ['text'],
-      message: read.failure.detail,
-    });
-});
+export const writtenValue = writtenWith('A value is missing.', 60);
+const length = writtenValue.check(readsAs('length'));
+const temperature = writtenValue.check(readsAs('temperature'));
 
 const temperatures = z.strictObject({
   bore: z.optional(temperature),
