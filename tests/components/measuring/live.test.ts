@@ -241,6 +241,12 @@ describe('whose a reading is', () => {
     expect(heard([])).toEqual({ by: 'Marit Quell', words: '1 intake 0.8422' });
     expect(heard([strike])).toEqual({ by: 'Marit Quell', words: '1 intake 0.8422 struck' });
     expect(heard([], { ...NONE, readings: [reading] })).toBeUndefined();
+    // Until this tablet records the next.
+    const own = body('b6', '0.8421', { depth: 'lower' });
+    const whose = whoseFrom(sheetWith([]), NONE, new Set(['b6']));
+    expect(
+      lastHeard({ remarks: [] }, judgeReadings([reading, own], []), NONE, whose),
+    ).toBeUndefined();
   });
 });
 

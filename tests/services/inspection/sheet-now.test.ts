@@ -1,9 +1,12 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Actor } from '@/domain/access/permission';
 import { readingsThatCount } from '@/domain/inspection/capture/readings-that-count';
+import { assessFile } from '@/services/inspection/read/assess-file';
+import { compareWithTablet } from '@/services/inspection/read/compare-with-tablet';
 import { findSheetNow } from '@/services/inspection/read/sheet-now';
 import {
   failureOf,
+  fileOf,
   get,
   openInspection,
   openRaceNight,
@@ -81,5 +84,24 @@ describe('the sheet as it is now', () => {
     expect(await texts(['1 exhaust'], '3')).toEqual(['0.8427', '0.8421']);
     // No bore of this engine: no independent set, and so nothing for whoever is not named.
     expect(failureOf(await ask(other, id, ['9 sideways'])).name).toBe('absent');
+  });
+});
+
+describe('what a tablet made of its rows', () => {
+  it('is compared with the server’s only while nothing came after it', async () => {
+    const id = await openInspection(world, night, '44');
+    const rows = rowsFor(world, night);
+    const tablet = { domainVersion: '1.2.0', states: { '4.2': 'outside' } };
+    get(await send(world, night.inspector, id, [rows.reading({})], { tablet }));
+    const compared = async () => {
+      const file = await fileOf(world, night.chief, id);
+      return compareWithTablet(world.ports().db, file.inspection, assessFile(file));
+    };
+    expect((await compared())?.differences).toEqual([
+      { clause: '4.2', tablet: 'outside', server: 'not-measured' },
+    ]);
+    // A second set is sent without a word on the whole: its tablet has not seen the first.
+    get(await send(world, night.chief, id, [rows.reading({ set: 2 })]));
+    expect(await compared()).toBeUndefined();
   });
 });

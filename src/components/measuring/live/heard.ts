@@ -36,7 +36,7 @@ export interface Heard {
 }
 
 /**
- * The last thing that another tablet read or struck while this page was open. What is hidden from an
+ * What another tablet has just read or struck, until this one records the next. What is hidden from an
  * independent set is among neither the rows nor the judged, and so is not told of.
  */
 export const lastHeard = (
@@ -46,11 +46,11 @@ export const lastHeard = (
   whose: (row: Row) => string | undefined,
 ): Heard | undefined => {
   const before = idsOf(onPage);
-  const isNews = (row: Row) => !before.has(row.id) && whose(row) !== undefined;
+  const isNew = (row: Row) => !before.has(row.id);
   const told = [
-    ...judged.filter(({ row }) => isNews(row)).map((reading) => ({ row: reading.row, reading })),
+    ...judged.filter(({ row }) => isNew(row)).map((reading) => ({ row: reading.row, reading })),
     ...remarks.flatMap((row) => {
-      if (row.kind !== 'strike' || !isNews(row)) return [];
+      if (row.kind !== 'strike' || !isNew(row)) return [];
       const struck = judged.find((one) => one.row.id === row.readingId);
       return struck === undefined ? [] : [{ row, reading: struck }];
     }),
@@ -58,11 +58,12 @@ export const lastHeard = (
   const last = told
     .sort((a, b) => Date.parse(a.row.occurredAt) - Date.parse(b.row.occurredAt))
     .at(-1);
-  if (last === undefined) return undefined;
+  const by = last && whose(last.row);
+  if (last === undefined || by === undefined) return undefined;
   const { row, reading } = last;
   const { per } = getQuantityEntry(reading.row.quantity);
   const where = per === 'engine' || per === 'car' ? '' : `${positionKey(reading.place, per)} `;
   const value = reading.row.value.text.replace('-', '−');
   const words = `${where}${value}${row === reading.row ? '' : ' struck'}`;
-  return { by: whose(row) ?? '', words };
+  return { by, words };
 };

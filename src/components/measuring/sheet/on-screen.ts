@@ -52,6 +52,7 @@ export const factsOf = ({ sheet, gauge }: Bay, heard: Heard | undefined): readon
         {
           name: `${gauge.name} ${gauge.code}`,
           value: gauge.dueOn === undefined ? 'No calibration' : `Calibrated to ${gauge.dueOn}`,
+          minor: heard !== undefined,
         },
       ]),
   ...(heard === undefined ? [] : [{ name: `By ${heard.by}`, value: heard.words }]),

@@ -13,21 +13,21 @@ export interface TabletComparison {
   }[];
 }
 
-/** Nothing where no tablet sent an assessment. The last batch's counts: it saw the most rows. */
+/** Nothing where the last batch came without an assessment: no tablet has seen all that is here. */
 export const compareWithTablet = async (
   em: EntityManager,
   { seriesId, id }: Pick<Inspection, 'seriesId' | 'id'>,
   assessment: InspectionAssessment,
 ): Promise<TabletComparison | undefined> => {
   const [row] = await em.execute<
-    { tablet: { domainVersion: string; states: Record<string, string> } }[]
+    { tablet: { domainVersion: string; states: Record<string, string> } | null }[]
   >(
     `select document::jsonb -> 'tablet' as tablet from record.capture_batch
-     where series_id = ? and inspection_id = ? and document::jsonb -> 'tablet' is not null
+     where series_id = ? and inspection_id = ?
      order by number desc limit 1`,
     [seriesId, id],
   );
-  if (row === undefined) return undefined;
+  if (row === undefined || row.tablet === null) return undefined;
   const { domainVersion, states } = row.tablet;
   return {
     tabletVersion: domainVersion,
