@@ -1,7 +1,7 @@
 import { type Actor, seriesWhere } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
-import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 import { type PartKept, readPart } from './read-parts';
 

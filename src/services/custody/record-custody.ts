@@ -1,11 +1,11 @@
 import type { CustodyRequest } from '@/contracts/custody/custody';
 import { type Actor, seriesWhere } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { fail, ok, type Result } from '@/domain/result';
 import { toDocument } from '@/domain/rulebook/document';
 import { performAct } from '../act/perform-act';
-import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 
 /**

@@ -1,12 +1,12 @@
 import { type EntityManager, LockMode } from '@mikro-orm/postgresql';
 import type { DrawCommitment, DrawMade, DrawVoid } from '@/domain/draw/documents';
 import { absent, type Failure, failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { sha256, utf8 } from '@/domain/ledger/bytes';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { fail, ok, type Result } from '@/domain/result';
 import { Event } from '@/entities/event/event';
 import type { Act } from '../act/perform-act';
-import { isId } from '../paperwork/own-paperwork';
 import { type DrawRow, findDrawRow, findDrawState } from './find-history';
 import { whoBefore } from './who-before';
 

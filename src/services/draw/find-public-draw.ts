@@ -1,9 +1,9 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import type { PublicDrawAnswer } from '@/contracts/draw/draw';
 import type { DrawShown } from '@/contracts/draw/draw-shown';
+import { isId } from '@/domain/is-id';
 import { findCovering } from '../ledger/checkpoint/find-checkpoint';
 import { proofUnder } from '../ledger/proof/prove-line';
-import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 import { type DrawRow, findDrawRow, listDrawRows } from './find-history';
 

@@ -3,9 +3,9 @@ import type { DrawnCar } from '@/contracts/draw/draw';
 import { type Actor, may } from '@/domain/access/permission';
 import { readDrawMade } from '@/domain/draw/documents';
 import { absent, type Failure, failure, invalid } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { pickCars } from '../event/pick-cars';
-import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 import { type DrawRow, findDrawRow } from './find-history';
 

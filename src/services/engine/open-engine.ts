@@ -1,8 +1,8 @@
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
-import { isId } from '../paperwork/own-paperwork';
 import { isoOf } from '../paperwork/read/read-row';
 import type { Ports } from '../ports';
 

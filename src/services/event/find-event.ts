@@ -2,11 +2,11 @@ import { type Actor, may, seriesWhere } from '@/domain/access/permission';
 import { fastestLap } from '@/domain/event/lap-time';
 import { absent, type Failure } from '@/domain/failure';
 import type { InspectionState } from '@/domain/inspection/state';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Event } from '@/entities/event/event';
 import { RaceClass } from '@/entities/series/race-class';
 import { Series } from '@/entities/series/series';
-import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 
 export interface EventNamed {

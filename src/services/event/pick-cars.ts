@@ -2,10 +2,10 @@ import { LockMode } from '@mikro-orm/core';
 import type { Pick as CarPick } from '@/contracts/event/event';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Event } from '@/entities/event/event';
 import { performAct } from '../act/perform-act';
-import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 import { openInspections } from './open-inspections';
 

@@ -1,8 +1,8 @@
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, type Fault } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Event } from '@/entities/event/event';
-import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 import type { CarsToEnter } from './enter-cars';
 import { type Planned, planEntries } from './plan-entries';

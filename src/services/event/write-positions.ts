@@ -1,11 +1,11 @@
 import { LockMode } from '@mikro-orm/core';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, type Fault, invalid } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Entry } from '@/entities/event/entry';
 import { Event } from '@/entities/event/event';
 import { performAct } from '../act/perform-act';
-import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 import { type EntryChanged, keepChanges } from './changes/keep-changes';
 import { officialClasses, refuseOfficial, resultsStateOf } from './results/official-classes';

@@ -1,12 +1,13 @@
 import { LockMode } from '@mikro-orm/postgresql';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { toHex } from '@/domain/ledger/bytes';
 import type { FilePurpose } from '@/domain/paperwork/file/limits';
 import { fail, ok, type Result } from '@/domain/result';
 import { KeptFile } from '@/entities/paperwork/file';
 import { performAct } from '../act/perform-act';
-import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
+import { findOwnPaperwork } from '../paperwork/own-paperwork';
 import { inspectFile } from './content/inspect-file';
 import { judgeBytes } from './content/judge-bytes';
 import { findUnwelcome, needFor } from './find-unwelcome';

@@ -2,9 +2,10 @@ import type { EntityManager } from '@mikro-orm/postgresql';
 import { LockMode } from '@mikro-orm/postgresql';
 import { openings } from '@/domain/access/paperwork-access';
 import { type Actor, may, seriesWhere } from '@/domain/access/permission';
+import { isId } from '@/domain/is-id';
 import { KeptFile } from '@/entities/paperwork/file';
 import type { Paperwork } from '@/entities/paperwork/paperwork';
-import { findOwnPaperwork, isId } from '../paperwork/own-paperwork';
+import { findOwnPaperwork } from '../paperwork/own-paperwork';
 import { isOfSwap, needFor } from './find-unwelcome';
 
 export interface FileInPaperwork {

@@ -1,5 +1,6 @@
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import type { Written } from '@/domain/quantity/dimension';
 import { fail, ok, type Result } from '@/domain/result';
 import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
@@ -8,7 +9,6 @@ import { GaugeRow } from '@/entities/event/gauge';
 import { Series } from '@/entities/series/series';
 import { findInspectionRow } from '../inspection/read/find-inspection';
 import { type RegisteredGauge, registered } from '../inspection/read/inspection-file';
-import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 import { getRules } from '../rulebook/find-rules';
 

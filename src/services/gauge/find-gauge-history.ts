@@ -1,11 +1,11 @@
 import { type Actor, may, seriesWhere } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import type { Written } from '@/domain/quantity/dimension';
 import { fail, ok, type Result } from '@/domain/result';
 import { GaugeRow } from '@/entities/event/gauge';
 import { Series } from '@/entities/series/series';
 import { type RegisteredGauge, registered } from '../inspection/read/inspection-file';
-import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 
 const iso = (column: string): string =>

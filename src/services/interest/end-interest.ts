@@ -1,11 +1,11 @@
 import { LockMode } from '@mikro-orm/core';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { fail, ok, type Result } from '@/domain/result';
 import { Interest } from '@/entities/event/interest';
 import { performAct } from '../act/perform-act';
-import { isId } from '../paperwork/own-paperwork';
 import type { Ports } from '../ports';
 
 /** Ends an interest from now on. Only the chief or an official does: nobody clears themselves. */

@@ -2,6 +2,7 @@ import type { EntityManager } from '@mikro-orm/postgresql';
 import type { Need } from '@/domain/access/paperwork-access';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { toHex } from '@/domain/ledger/bytes';
 import { declare } from '@/domain/paperwork/declare';
 import { type Declared, declaredFacts } from '@/domain/paperwork/declared-facts';
@@ -23,7 +24,7 @@ import type { PaperworkForm } from '@/domain/rulebook/form/form';
 import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';
 import type { Ports } from '../ports';
 import { findRules, type StandingRules } from '../rulebook/find-rules';
-import { isId, openTo } from './own-paperwork';
+import { openTo } from './own-paperwork';
 import {
   declaredFile,
   isKept,

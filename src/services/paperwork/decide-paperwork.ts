@@ -1,6 +1,7 @@
 import { LockMode } from '@mikro-orm/postgresql';
 import { type Actor, seriesWhere } from '@/domain/access/permission';
 import { absent, type Failure, failure, invalid, stale } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { type ItemRemark, NOT_AN_APPROVAL, STATE_WORDS } from '@/domain/paperwork/state';
 import { fail, ok, type Result } from '@/domain/result';
@@ -8,7 +9,6 @@ import { Paperwork } from '@/entities/paperwork/paperwork';
 import { performAct } from '../act/perform-act';
 import { queueMail } from '../mail/queue-mail';
 import type { Ports } from '../ports';
-import { isId } from './own-paperwork';
 import { readPaperwork } from './read/read-row';
 
 export interface PaperworkDecision {

@@ -1,6 +1,7 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure, invalid, stale } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { sha256, toHex, utf8 } from '@/domain/ledger/bytes';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { missingFaults } from '@/domain/paperwork/missing-faults';
@@ -13,7 +14,7 @@ import { queueMail } from '../mail/queue-mail';
 import type { Ports } from '../ports';
 import { checkRow, findOwnRow, noRules } from './check-paperwork';
 import { maySign, type SignedBy } from './may-sign';
-import { findOwnPaperwork, isId } from './own-paperwork';
+import { findOwnPaperwork } from './own-paperwork';
 import { paperworkDocument } from './paperwork-document';
 import type { PaperworkRow } from './read/read-row';
 import { tellOfficials } from './tell-officials';

@@ -1,6 +1,7 @@
 import { rightsOn } from '@/domain/access/paperwork-access';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, type Fault, failure, invalid, stale } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import type { PaperworkDraft } from '@/domain/paperwork/draft';
 import { isWritable, STATE_WORDS } from '@/domain/paperwork/state';
@@ -8,7 +9,7 @@ import { fail, ok, type Result } from '@/domain/result';
 import { toDocument } from '@/domain/rulebook/document';
 import type { Paperwork } from '@/entities/paperwork/paperwork';
 import { type ActDeps, performAct } from '../act/perform-act';
-import { findOwnPaperwork, isId } from './own-paperwork';
+import { findOwnPaperwork } from './own-paperwork';
 
 const same = (a: unknown, b: unknown): boolean =>
   canonicalJson(toDocument(a ?? null)) === canonicalJson(toDocument(b ?? null));

@@ -1,11 +1,12 @@
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure, invalid, stale } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { fail, ok, type Result } from '@/domain/result';
 import { performAct } from '../act/perform-act';
 import { queueMail } from '../mail/queue-mail';
 import type { Ports } from '../ports';
-import { findOwnPaperwork, isId } from './own-paperwork';
+import { findOwnPaperwork } from './own-paperwork';
 import { readPaperwork } from './read/read-row';
 
 const MOST = 500;

@@ -1,4 +1,5 @@
 import { type Actor, seriesWhere } from '@/domain/access/permission';
+import { isId } from '@/domain/is-id';
 import { toHex } from '@/domain/ledger/bytes';
 import { findEffectiveAt } from '@/domain/rulebook/bulletin';
 import type { RulesInForce, RulesQuestion } from '@/domain/rulebook/rules-in-force';
@@ -58,7 +59,7 @@ export const findWrittenClass = async (
   classId: string,
 ): Promise<ClassNamed | undefined> => {
   const series = seriesWhere(actor, 'rulebook.write');
-  if (series.length === 0 || !/^[0-9a-f-]{36}$/.test(classId)) return undefined;
+  if (series.length === 0 || !isId(classId)) return undefined;
   const [row] = await deps.db.execute<ClassNamed[]>(
     `${CLASS} where c.series_id = any(?::uuid[]) and c.id = ?`,
     [`{${series.join(',')}}`, classId],

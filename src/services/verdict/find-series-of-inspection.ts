@@ -1,4 +1,5 @@
 import { type Actor, seriesWhere } from '@/domain/access/permission';
+import { isId } from '@/domain/is-id';
 import { Inspection } from '@/entities/event/inspection';
 import type { Ports } from '../ports';
 
@@ -9,7 +10,7 @@ export const findSeriesOfInspection = async (
   inspectionId: string,
 ): Promise<string | undefined> => {
   const series = seriesWhere(actor, 'verdict.read-drafts');
-  if (series.length === 0 || !/^[0-9a-f-]{36}$/.test(inspectionId)) return undefined;
+  if (series.length === 0 || !isId(inspectionId)) return undefined;
   const found = await deps.db.findOne(
     Inspection,
     { id: inspectionId, seriesId: { $in: [...series] } },

@@ -1,13 +1,13 @@
 import { LockMode } from '@mikro-orm/postgresql';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure, invalid, stale } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { type EngineFacts, sameFacts } from '@/domain/paddock/engine-facts';
 import { fail, ok, type Result } from '@/domain/result';
 import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';
 import { Engine } from '@/entities/paperwork/engine';
 import { type ActDeps, performAct } from '../../act/perform-act';
-import { isId } from '../../paperwork/own-paperwork';
 import { engineFaults } from '../engine-fields';
 import { correctDrafts } from './correct-drafts';
 

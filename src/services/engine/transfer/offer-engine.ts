@@ -1,12 +1,12 @@
 import { LockMode } from '@mikro-orm/postgresql';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, type Fault, failure, invalid } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Engine } from '@/entities/paperwork/engine';
 import { EngineOffer } from '@/entities/paperwork/engine-offer';
 import { performAct } from '../../act/perform-act';
 import { queueMail } from '../../mail/queue-mail';
-import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { newToken, tokenHash } from '../../session/token';
 import { holderOf } from '../engine-holder';

@@ -1,10 +1,10 @@
 import { LockMode } from '@mikro-orm/postgresql';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Engine } from '@/entities/paperwork/engine';
 import { type ActDeps, performAct } from '../../act/perform-act';
-import { isId } from '../../paperwork/own-paperwork';
 import { recordTransfer } from './transfer-line';
 
 /** Gives a lent engine back before the loan's end; on that day it goes back by itself. */

@@ -1,9 +1,9 @@
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { EngineOffer } from '@/entities/paperwork/engine-offer';
 import { type ActDeps, performAct } from '../../act/perform-act';
-import { isId } from '../../paperwork/own-paperwork';
 
 /** Takes back an offer that nobody has accepted yet. */
 export const takeOfferBack = async (

@@ -1,9 +1,9 @@
 import type { ChecksShown } from '@/contracts/event/check';
 import { type Actor, may, seriesWhere } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Event } from '@/entities/event/event';
-import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { readChecks } from './read-checks';
 

@@ -1,13 +1,13 @@
 import { LockMode } from '@mikro-orm/core';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, type Fault, failure, invalid, stale } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { sha256, toHex, utf8 } from '@/domain/ledger/bytes';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { fail, ok, type Result } from '@/domain/result';
 import { Event } from '@/entities/event/event';
 import { performAct } from '../../act/perform-act';
 import { FRESH_MINUTES, isFresh } from '../../inspection/report/sign-report';
-import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { readChecks, rulesByClass } from './read-checks';
 import { sheetOf } from './sheet-of';

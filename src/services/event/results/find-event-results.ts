@@ -1,9 +1,9 @@
 import { type Actor, seriesWhere } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Event } from '@/entities/event/event';
 import { Series } from '@/entities/series/series';
-import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { type ClassResults, readResults } from './read-results';
 

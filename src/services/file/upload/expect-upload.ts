@@ -1,6 +1,7 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure, failure, invalid } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import {
   type FilePurpose,
   MOST_BYTES,
@@ -9,7 +10,7 @@ import {
 } from '@/domain/paperwork/file/limits';
 import { fail, ok, type Result } from '@/domain/result';
 import { KeptFile } from '@/entities/paperwork/file';
-import { findOwnPaperwork, isId } from '../../paperwork/own-paperwork';
+import { findOwnPaperwork } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { findUnwelcome, needFor } from '../find-unwelcome';
 import { withStore } from '../with-store';

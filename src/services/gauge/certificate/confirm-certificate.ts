@@ -1,5 +1,6 @@
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { sniff } from '@/domain/paperwork/file/sniff';
 import { fail, ok, type Result } from '@/domain/result';
 import { KeptFile } from '@/entities/paperwork/file';
@@ -7,7 +8,6 @@ import type { FileFacts } from '../../file/content/file-facts';
 import { inspectFile } from '../../file/content/inspect-file';
 import { keepSent } from '../../file/keep-sent';
 import type { KeepDeps, KeptAnswer } from '../../file/settle-file';
-import { isId } from '../../paperwork/own-paperwork';
 import { MOST_CERTIFICATE_BYTES, tooLargeCertificate } from './expect-certificate';
 
 /** A PDF or a photograph, by its content. */

@@ -1,11 +1,11 @@
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { sizeWords } from '@/domain/paperwork/file/limits';
 import { fail, ok, type Result } from '@/domain/result';
 import { GaugeRow } from '@/entities/event/gauge';
 import { addressWhole, type UploadAddress } from '../../file/upload/address-upload';
 import { announcedType, announceFile, tooManyBytes } from '../../file/upload/announce-file';
-import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 
 export const MOST_CERTIFICATE_BYTES = 10_000_000;

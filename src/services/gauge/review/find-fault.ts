@@ -1,8 +1,8 @@
 import { type Actor, may, seriesWhere } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import type { Written } from '@/domain/quantity/dimension';
 import { fail, ok, type Result } from '@/domain/result';
-import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { type LookBack, lookBack } from './look-back';
 import { type Review, readReviews } from './read-reviews';

@@ -1,10 +1,10 @@
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { GaugeRow } from '@/entities/event/gauge';
 import { Series } from '@/entities/series/series';
 import { type RegisteredGauge, registered } from '../../inspection/read/inspection-file';
-import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { findLastGood, type LastGood } from '../last-good';
 import { type LookBack, lookBack } from './look-back';

@@ -1,7 +1,7 @@
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
-import { isId } from '../../paperwork/own-paperwork';
 import type { BarnFeed, Ports } from '../../ports';
 import { readMark } from './read-mark';
 

@@ -1,12 +1,12 @@
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { MOST_BYTES, tooLargeWords } from '@/domain/paperwork/file/limits';
 import { fail, type Result } from '@/domain/result';
 import { KeptFile } from '@/entities/paperwork/file';
 import { inspectFile } from '../../file/content/inspect-file';
 import { keepSent } from '../../file/keep-sent';
 import type { KeepDeps, KeptAnswer } from '../../file/settle-file';
-import { isId } from '../../paperwork/own-paperwork';
 import { findInspectionRow, worksOn } from '../read/find-inspection';
 
 /** After the bytes of a bay photograph were sent: it is kept, or refused by what it is. */

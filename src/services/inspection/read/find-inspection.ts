@@ -1,9 +1,9 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import { type Actor, type Permission, rolesIn, seriesWhere } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Inspection } from '@/entities/event/inspection';
-import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { getInspectionFile, type InspectionFile } from './inspection-file';
 

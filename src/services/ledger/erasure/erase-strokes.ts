@@ -1,9 +1,9 @@
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, failure, invalid } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Inspection } from '@/entities/event/inspection';
 import { performAct } from '../../act/perform-act';
-import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { eraseLines, listErasable } from './erase-lines';
 import { findErasureObstacle } from './obstacle';

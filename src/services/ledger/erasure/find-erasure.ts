@@ -1,5 +1,5 @@
 import { type Actor, may } from '@/domain/access/permission';
-import { isId } from '../../paperwork/own-paperwork';
+import { isId } from '@/domain/is-id';
 import { type PaperworkRow, readPaperwork } from '../../paperwork/read/read-row';
 import type { Ports } from '../../ports';
 

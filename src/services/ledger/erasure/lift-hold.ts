@@ -1,8 +1,8 @@
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { performAct } from '../../act/perform-act';
-import { isId } from '../../paperwork/own-paperwork';
 import type { Ports } from '../../ports';
 import { lockHolds } from './obstacle';
 

@@ -1,7 +1,7 @@
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
-import { isId } from '../../paperwork/own-paperwork';
 import { type PaperworkRow, readPaperwork } from '../../paperwork/read/read-row';
 import type { Ports } from '../../ports';
 import { type ErasableContent, listErasable } from './erase-lines';

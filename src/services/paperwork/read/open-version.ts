@@ -1,6 +1,7 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import { type Actor, seriesWhere } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { declaredFacts } from '@/domain/paperwork/declared-facts';
 import type { PaperworkDocument } from '@/domain/paperwork/document';
 import { withUsualUncertainty } from '@/domain/paperwork/usual-uncertainty';
@@ -11,7 +12,6 @@ import type { RulesInForce } from '@/domain/rulebook/rules-in-force';
 import type { Ports } from '../../ports';
 import { getRules } from '../../rulebook/find-rules';
 import { findOwnRow } from '../check-paperwork';
-import { isId } from '../own-paperwork';
 import { type PaperworkRow, readPaperwork, readVersions, type VersionRow } from './read-row';
 import { getVersionDocument } from './version-document';
 

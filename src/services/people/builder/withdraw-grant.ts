@@ -1,10 +1,10 @@
 import { LockMode } from '@mikro-orm/postgresql';
 import type { Actor } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
+import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { BuilderGrant } from '@/entities/paperwork/builder-grant';
 import { type ActDeps, performAct } from '../../act/perform-act';
-import { isId } from '../../paperwork/own-paperwork';
 
 /** Ends what a builder may do, at once; what they wrote stays. */
 export const withdrawGrant = async (

@@ -1,5 +1,6 @@
 import type { BulletinContent, RulebookContent } from '@/contracts/rulebook/read-rulebook';
 import { type Actor, seriesWhere } from '@/domain/access/permission';
+import { isId } from '@/domain/is-id';
 import { Person } from '@/entities/people/person';
 import { RulebookDraft } from '@/entities/series/rulebook-draft';
 import type { Ports } from '../../ports';
@@ -28,7 +29,7 @@ export const findDraft = async (
   draftId: string,
 ): Promise<DraftFound | undefined> => {
   const seriesIds = seriesWhere(actor, 'rulebook.write');
-  if (seriesIds.length === 0 || !/^[0-9a-f-]{36}$/.test(draftId)) return undefined;
+  if (seriesIds.length === 0 || !isId(draftId)) return undefined;
   const em = deps.db.fork();
   const draft = await em.findOne(RulebookDraft, { seriesId: { $in: [...seriesIds] }, id: draftId });
   if (draft === null) return undefined;

@@ -1,5 +1,6 @@
 import { type RulebookContent, readRulebookContent } from '@/contracts/rulebook/read-rulebook';
 import { type Actor, may } from '@/domain/access/permission';
+import { isId } from '@/domain/is-id';
 import { ENGINE_RULE_SET } from '@/domain/rulebook/rule-sets/engine';
 import { TAPPET_RULE_SET } from '@/domain/rulebook/rule-sets/tappet';
 import { WEIGHTS_RULE_SET } from '@/domain/rulebook/rule-sets/weights';
@@ -90,7 +91,7 @@ export const findStartingContent = async (
     const set = SETS.find((one) => one.id === id);
     return set && read({ clauses: set.clauses, penalties: set.penalties });
   }
-  if (!/^[0-9a-f-]{36}$/.test(id)) return undefined;
+  if (!isId(id)) return undefined;
   if (kind === 'rules') {
     const standing = await findRules(deps.db, seriesId, id, deps.clock.now());
     return standing && read(standing.rules);
