@@ -1,17 +1,10 @@
 import { deviceWord, newId } from '../../paperwork/api';
 import type { Upload } from '../../uploads/upload';
 import { openUploadQueue, type UploadQueue } from '../../uploads/upload-queue';
+import { waitedWords } from './waited-words';
 
 const GROUP = 'engine swaps';
 let queue: UploadQueue | undefined;
-
-const LONG_MS = 20 * 60 * 60 * 1000;
-
-/** Why a photograph that comes late still counts: its hash went with the swap, so it was taken by then. */
-const waitedWords = (keptAt: number): string =>
-  Date.now() - keptAt < LONG_MS
-    ? ''
-    : ` It waited on this ${deviceWord()} since ${new Date(keptAt).toLocaleString()}. It is sent all the same: its fingerprint was recorded with the swap, which shows that it was taken by then; the officials also see when it arrived.`;
 
 /** Says in words how photographs of swaps on this device stand; those that wait are sent on. */
 export const watchPhotographs = (say: (words: string | undefined) => void): (() => void) => {
@@ -22,7 +15,7 @@ export const watchPhotographs = (say: (words: string | undefined) => void): (() 
       say(
         one.phase === 'refused'
           ? `The photograph was refused: ${one.detail ?? 'take another one'}.`
-          : `The photograph is being sent, ${Math.round(one.share * 100)} %.${waitedWords(one.upload.keptAt)}`,
+          : `The photograph is being sent, ${Math.round(one.share * 100)} %.${waitedWords(one.upload.keptAt, Date.now(), deviceWord())}`,
       );
     },
     answered: (_upload, answer) =>
