@@ -1,4 +1,3 @@
-import { LockMode } from '@mikro-orm/postgresql';
 import type { AnnounceRequest } from '@/contracts/draw/draw';
 import { type Actor, may } from '@/domain/access/permission';
 import { findCommitmentFault } from '@/domain/draw/commitment-fault';
@@ -9,9 +8,9 @@ import { absent, type Failure, failure, invalid } from '@/domain/failure';
 import { sha256, toHex } from '@/domain/ledger/bytes';
 import { canonicalBytes, canonicalJson } from '@/domain/ledger/canonical';
 import { fail, ok, type Result } from '@/domain/result';
-import { Event } from '@/entities/event/event';
 import { RaceClass } from '@/entities/series/race-class';
 import { performAct } from '../act/perform-act';
+import { lockEvent } from '../event/lock-event';
 import type { Ports } from '../ports';
 import { findDrawState } from './find-history';
 import { findPool } from './find-pool';
@@ -45,11 +44,7 @@ export const announceDraw = async (
     { id: act, kind: 'announce-draw', seriesId, input: request },
     async ({ em, at, append, line }) => {
       // The event's row is the queue in which draws of its classes stand.
-      const event = await em.findOne(
-        Event,
-        { seriesId, id: eventId },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
-      );
+      const event = await lockEvent(em, seriesId, eventId);
       const drawn =
         event && (await em.findOne(RaceClass, { seriesId, id: classId, seasonId: event.seasonId }));
       if (event === null || drawn === null) return fail(absent());

@@ -1,4 +1,3 @@
-import { LockMode } from '@mikro-orm/core';
 import type { EntryRow } from '@/contracts/event/event';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, invalid } from '@/domain/failure';
@@ -6,10 +5,10 @@ import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { ColumnChoice } from '@/entities/event/column-choice';
 import { Entry } from '@/entities/event/entry';
-import { Event } from '@/entities/event/event';
 import { performAct } from '../act/perform-act';
 import type { Ports } from '../ports';
 import { type EntryChanged, keepChanges } from './changes/keep-changes';
+import { lockEvent } from './lock-event';
 import { type Planned, planEntries } from './plan-entries';
 import { officialClasses, refuseOfficial, resultsStateOf } from './results/official-classes';
 
@@ -55,11 +54,7 @@ export const enterCars = async (
     },
     async ({ em, at, append, line }) => {
       // The event's row is the queue in which all that changes its entries stands.
-      const event = await em.findOne(
-        Event,
-        { seriesId, id: eventId },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
-      );
+      const event = await lockEvent(em, seriesId, eventId);
       if (event === null) return fail(absent());
       const { planned, faults } = await planEntries(em, event, entries);
       if (faults.length > 0) return fail(invalid(faults));

@@ -1,12 +1,11 @@
-import { LockMode } from '@mikro-orm/core';
 import type { Pick as CarPick } from '@/contracts/event/event';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure } from '@/domain/failure';
 import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
-import { Event } from '@/entities/event/event';
 import { performAct } from '../act/perform-act';
 import type { Ports } from '../ports';
+import { lockEvent } from './lock-event';
 import { openInspections } from './open-inspections';
 
 /**
@@ -30,11 +29,7 @@ export const pickCars = async (
     actor,
     { id: act, kind: 'pick-cars', seriesId, input: { eventId, picks } },
     async (within) => {
-      const event = await within.em.findOne(
-        Event,
-        { seriesId, id: eventId },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
-      );
+      const event = await lockEvent(within.em, seriesId, eventId);
       if (event === null) return fail(absent());
       const opened = await openInspections(within, event, actor.personId, picks);
       return opened.ok ? ok({ inspections: opened.value }) : opened;

@@ -1,13 +1,12 @@
-import { LockMode } from '@mikro-orm/core';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, type Fault, invalid } from '@/domain/failure';
 import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Entry } from '@/entities/event/entry';
-import { Event } from '@/entities/event/event';
 import { performAct } from '../act/perform-act';
 import type { Ports } from '../ports';
 import { type EntryChanged, keepChanges } from './changes/keep-changes';
+import { lockEvent } from './lock-event';
 import { officialClasses, refuseOfficial, resultsStateOf } from './results/official-classes';
 
 export interface WrittenPosition {
@@ -37,11 +36,7 @@ export const writePositions = async (
     actor,
     { id: act, kind: 'write-positions', seriesId, input: { eventId, positions } },
     async ({ em, append, line }) => {
-      const event = await em.findOne(
-        Event,
-        { seriesId, id: eventId },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
-      );
+      const event = await lockEvent(em, seriesId, eventId);
       if (event === null) return fail(absent());
       const entries = await em.find(Entry, { seriesId, eventId });
       const official = await officialClasses(em, { seriesId, eventId });

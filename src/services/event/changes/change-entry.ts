@@ -1,4 +1,3 @@
-import { LockMode } from '@mikro-orm/core';
 import type { EntityManager } from '@mikro-orm/postgresql';
 import type { EntryChange } from '@/contracts/event/event';
 import { type Actor, may } from '@/domain/access/permission';
@@ -6,11 +5,11 @@ import { absent, type Failure, failure, invalid } from '@/domain/failure';
 import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Entry } from '@/entities/event/entry';
-import { Event } from '@/entities/event/event';
 import { Inspection } from '@/entities/event/inspection';
 import { RaceClass } from '@/entities/series/race-class';
 import { performAct } from '../../act/perform-act';
 import type { Ports } from '../../ports';
+import { lockEvent } from '../lock-event';
 import { officialClasses, refuseOfficial } from '../results/official-classes';
 import { keepChanges } from './keep-changes';
 
@@ -78,11 +77,7 @@ export const changeEntry = async (
     actor,
     { id: act, kind: 'change-entry', seriesId, input: { eventId, entryId, kind, becomes, reason } },
     async ({ em, append, line }) => {
-      const event = await em.findOne(
-        Event,
-        { seriesId, id: eventId },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
-      );
+      const event = await lockEvent(em, seriesId, eventId);
       const entry = event && (await em.findOne(Entry, { seriesId, eventId, id: entryId }));
       if (event === null || entry === null) return fail(absent());
       const official = await officialClasses(em, { seriesId, eventId });

@@ -1,4 +1,3 @@
-import { LockMode } from '@mikro-orm/core';
 import type { EntityManager } from '@mikro-orm/postgresql';
 import type { CheckAnswer, CheckRequest } from '@/contracts/event/check';
 import { type Actor, may } from '@/domain/access/permission';
@@ -7,7 +6,7 @@ import { judgeLineCheck } from '@/domain/inspection/line-check/judge-line-check'
 import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Entry } from '@/entities/event/entry';
-import { Event } from '@/entities/event/event';
+import type { Event } from '@/entities/event/event';
 import { GaugeRow } from '@/entities/event/gauge';
 import { Inspection } from '@/entities/event/inspection';
 import { performAct } from '../../act/perform-act';
@@ -15,6 +14,7 @@ import { readStandings } from '../../gauge/gauge-standing';
 import { interestsInEntry } from '../../inspection/interest';
 import { registered } from '../../inspection/read/inspection-file';
 import type { Ports } from '../../ports';
+import { lockEvent } from '../lock-event';
 import { openInspections } from '../open-inspections';
 import { keepCheck } from './keep-check';
 import { readAnswer } from './read-answer';
@@ -47,11 +47,7 @@ export const recordCheck = async (
     { id: act, kind: 'record-check', seriesId, input: { eventId, ...asked } },
     async (within) => {
       const { em, at, keepRules } = within;
-      const event = await em.findOne(
-        Event,
-        { seriesId, id: eventId },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
-      );
+      const event = await lockEvent(em, seriesId, eventId);
       const entry = event && (await em.findOne(Entry, { seriesId, eventId, id: asked.entryId }));
       if (event === null || entry === null) return fail(absent());
       if (entry.state === 'withdrawn')

@@ -1,14 +1,13 @@
-import { LockMode } from '@mikro-orm/core';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, type Fault, failure, invalid, stale } from '@/domain/failure';
 import { isId } from '@/domain/is-id';
 import { sha256, toHex, utf8 } from '@/domain/ledger/bytes';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { fail, ok, type Result } from '@/domain/result';
-import { Event } from '@/entities/event/event';
 import { performAct } from '../../act/perform-act';
 import { FRESH_MINUTES, isFresh } from '../../inspection/report/sign-report';
 import type { Ports } from '../../ports';
+import { lockEvent } from '../lock-event';
 import { readChecks, rulesByClass } from './read-checks';
 import { sheetOf } from './sheet-of';
 
@@ -42,11 +41,7 @@ export const signChecks = async (
     actor,
     { id: act, kind: 'sign-checks', seriesId, input: { eventId, mark } },
     async ({ em, at, append, keepRules, line }) => {
-      const event = await em.findOne(
-        Event,
-        { seriesId, id: eventId },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
-      );
+      const event = await lockEvent(em, seriesId, eventId);
       if (event === null) return fail(absent());
       const shown = await readChecks(em, event);
       if (shown.mark !== mark) return fail(stale());

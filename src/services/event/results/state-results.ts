@@ -1,4 +1,3 @@
-import { LockMode } from '@mikro-orm/core';
 import { type Actor, may } from '@/domain/access/permission';
 import { absent, type Failure, type Fault, failure, invalid } from '@/domain/failure';
 import { isId } from '@/domain/is-id';
@@ -6,9 +5,9 @@ import { sha256, utf8 } from '@/domain/ledger/bytes';
 import { canonicalJson } from '@/domain/ledger/canonical';
 import { fail, ok, type Result } from '@/domain/result';
 import { Entry } from '@/entities/event/entry';
-import { Event } from '@/entities/event/event';
 import { performAct } from '../../act/perform-act';
 import type { Ports } from '../../ports';
+import { lockEvent } from '../lock-event';
 import { officialClasses, resultsStateOf } from './official-classes';
 import { type ClassResults, readResults } from './read-results';
 
@@ -38,11 +37,7 @@ const state = (
     actor,
     { id: act, kind: `results-${kind}`, seriesId, input },
     async ({ em, at, append, line }) => {
-      const event = await em.findOne(
-        Event,
-        { seriesId, id: eventId },
-        { lockMode: LockMode.PESSIMISTIC_WRITE },
-      );
+      const event = await lockEvent(em, seriesId, eventId);
       if (event === null) return fail(absent());
       const results = (await readResults(em, { seriesId, eventId })).find(
         (one) => one.classId === classId,
