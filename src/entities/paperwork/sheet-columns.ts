@@ -1,5 +1,5 @@
 import { defineEntity, type InferEntity } from '@mikro-orm/core';
-import type { ColumnMeaning } from '@/domain/paperwork/sheet/column-meaning';
+import type { ColumnMeaning } from '@/domain/paperwork/sheet/header/column-meaning';
 
 /** What a person said about the columns of one set of headings, for the next file that has the same. */
 export const SheetColumns = defineEntity({

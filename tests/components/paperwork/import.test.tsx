@@ -11,7 +11,7 @@ import {
   withSpot,
   withUnit,
 } from '@/components/paperwork/sheet/import/meanings';
-import type { ColumnMeaning } from '@/domain/paperwork/sheet/column-meaning';
+import type { ColumnMeaning } from '@/domain/paperwork/sheet/header/column-meaning';
 import { judgeCells } from '@/domain/paperwork/sheet/judge-cells';
 import { readSheet } from '@/domain/paperwork/sheet/read-sheet';
 import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';

@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { correctionsOf, neutral } from '@/domain/paperwork/sheet/corrections';
+import { isOwnColumn } from '@/domain/paperwork/sheet/header/read-header';
 import { judgeCells } from '@/domain/paperwork/sheet/judge-cells';
-import { isOwnColumn } from '@/domain/paperwork/sheet/read-header';
 import { readBook } from '@/domain/paperwork/sheet/read-sheet';
 import { paperworkForm } from '@/domain/rulebook/form/paperwork-form';
 import { TAPPET_RULE_SET } from '@/domain/rulebook/rule-sets/tappet';

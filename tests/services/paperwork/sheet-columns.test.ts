@@ -1,6 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Actor } from '@/domain/access/permission';
-import type { Mapping } from '@/domain/paperwork/sheet/find-columns';
+import type { Mapping } from '@/domain/paperwork/sheet/header/find-columns';
 import { confirmUpload } from '@/services/file/upload/confirm-upload';
 import { expectUpload } from '@/services/file/upload/expect-upload';
 import { readSheetFile } from '@/services/paperwork/read-sheet-file';

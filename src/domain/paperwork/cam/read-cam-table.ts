@@ -1,7 +1,7 @@
 import type { SheetForm } from '../../rulebook/form/form';
-import type { ColumnMeaning } from '../sheet/column-meaning';
+import type { ColumnMeaning } from '../sheet/header/column-meaning';
+import { readHeader, unitIn } from '../sheet/header/read-header';
 import { findValve } from '../sheet/positions';
-import { readHeader, unitIn } from '../sheet/read-header';
 import { findDegree } from './cam-place';
 
 /** An angle and a number beside it. */

@@ -1,6 +1,11 @@
-import { type ColumnMeaning, cellName, isUnexplained, type SheetColumn } from './column-meaning';
 import { hasDecimalCommas, withPoint } from './decimal-mark';
-import { findColumns, type Mapping } from './find-columns';
+import {
+  type ColumnMeaning,
+  cellName,
+  isUnexplained,
+  type SheetColumn,
+} from './header/column-meaning';
+import { findColumns, type Mapping } from './header/find-columns';
 import { nameIn, placeAt, type SheetPlaces } from './place-at';
 import { placeKey, type SheetCell, type WantedSheet } from './sheet-cell';
 import type { TextRows } from './sheet-grid';

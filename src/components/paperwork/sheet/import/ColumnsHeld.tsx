@@ -3,8 +3,8 @@ import {
   type ColumnMeaning,
   columnName,
   isUnexplained,
-} from '@/domain/paperwork/sheet/column-meaning';
-import { isOwnColumn } from '@/domain/paperwork/sheet/read-header';
+} from '@/domain/paperwork/sheet/header/column-meaning';
+import { isOwnColumn } from '@/domain/paperwork/sheet/header/read-header';
 import type { SheetForm } from '@/domain/rulebook/form/form';
 import {
   type MeaningOption,

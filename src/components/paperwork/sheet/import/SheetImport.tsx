@@ -1,7 +1,7 @@
 import { useMutation } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import type { ReadSheetAnswer } from '@/contracts/paperwork/sheet';
-import type { ColumnMeaning } from '@/domain/paperwork/sheet/column-meaning';
+import type { ColumnMeaning } from '@/domain/paperwork/sheet/header/column-meaning';
 import { placeKey, type SheetCell } from '@/domain/paperwork/sheet/sheet-cell';
 import type { SheetForm } from '@/domain/rulebook/form/form';
 import type { BoreLayout } from '@/domain/tappet/layout/bore-layout';

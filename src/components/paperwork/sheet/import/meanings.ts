@@ -1,5 +1,5 @@
-import type { ColumnMeaning } from '@/domain/paperwork/sheet/column-meaning';
-import { unitIn } from '@/domain/paperwork/sheet/read-header';
+import type { ColumnMeaning } from '@/domain/paperwork/sheet/header/column-meaning';
+import { unitIn } from '@/domain/paperwork/sheet/header/read-header';
 import { unitSymbols } from '@/domain/quantity/find-unit';
 import type { SheetForm } from '@/domain/rulebook/form/form';
 import { getQuantityEntry, isQuantityName } from '@/domain/rulebook/quantity-catalogue';

@@ -1,6 +1,6 @@
 import type { Failure } from '@/domain/failure';
 import { type Corrections, neutral } from '@/domain/paperwork/sheet/corrections';
-import { TO_CORRECT } from '@/domain/paperwork/sheet/read-header';
+import { TO_CORRECT } from '@/domain/paperwork/sheet/header/read-header';
 import { ok, type Result } from '@/domain/result';
 import { readCsv } from '../csv/read-csv';
 import { writeCsv } from '../csv/write-csv';

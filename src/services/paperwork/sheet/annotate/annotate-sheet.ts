@@ -1,8 +1,8 @@
 import type { Actor } from '@/domain/access/permission';
 import type { Failure } from '@/domain/failure';
 import { correctionsOf } from '@/domain/paperwork/sheet/corrections';
+import { isOwnColumn } from '@/domain/paperwork/sheet/header/read-header';
 import { judgeCells } from '@/domain/paperwork/sheet/judge-cells';
-import { isOwnColumn } from '@/domain/paperwork/sheet/read-header';
 import { ok, type Result } from '@/domain/result';
 import type { OpenedFile } from '../../../file/open-file';
 import { openSheetFile, type SheetDeps } from '../file/sheet-file';

@@ -1,6 +1,6 @@
 import { type Failure, failure } from '@/domain/failure';
-import { cellName } from '@/domain/paperwork/sheet/column-meaning';
-import { TO_CORRECT } from '@/domain/paperwork/sheet/read-header';
+import { cellName } from '@/domain/paperwork/sheet/header/column-meaning';
+import { TO_CORRECT } from '@/domain/paperwork/sheet/header/read-header';
 import { fail, ok, type Result } from '@/domain/result';
 import { nothingSpent } from '../spent';
 import { damagedXlsx, openPackage } from '../xlsx/open-package';

@@ -1,6 +1,6 @@
 import type { Actor } from '@/domain/access/permission';
 import type { Failure } from '@/domain/failure';
-import type { Mapping } from '@/domain/paperwork/sheet/find-columns';
+import type { Mapping } from '@/domain/paperwork/sheet/header/find-columns';
 import { ok, type Result } from '@/domain/result';
 import { SheetColumns } from '@/entities/paperwork/sheet-columns';
 import { type ActDeps, performAct } from '../../../act/perform-act';

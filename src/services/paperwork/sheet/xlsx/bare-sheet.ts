@@ -1,4 +1,4 @@
-import { cellName } from '@/domain/paperwork/sheet/column-meaning';
+import { cellName } from '@/domain/paperwork/sheet/header/column-meaning';
 import type { ScannedCell, ScannedSheet } from './scan-sheet';
 
 const MAIN = 'http://schemas.openxmlformats.org/spreadsheetml/2006/main';

@@ -1,11 +1,11 @@
-import { findDegree } from '../cam/cam-place';
-import { degreeMeaning, isDegreeRow } from '../cam/read-cam-table';
+import { findDegree } from '../../cam/cam-place';
+import { degreeMeaning, isDegreeRow } from '../../cam/read-cam-table';
+import { findBore, findCylinder, findValve } from '../positions';
+import type { WantedSheet } from '../sheet-cell';
+import type { TextRows } from '../sheet-grid';
 import { type ColumnMeaning, columnName, type SheetColumn } from './column-meaning';
 import { headings } from './headings';
-import { findBore, findCylinder, findValve } from './positions';
 import { isOwnColumn, readHeader } from './read-header';
-import type { WantedSheet } from './sheet-cell';
-import type { TextRows } from './sheet-grid';
 
 export interface FoundColumns {
   readonly columns: readonly SheetColumn[];

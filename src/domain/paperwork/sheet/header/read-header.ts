@@ -1,8 +1,8 @@
-import { findUnit } from '../../quantity/find-unit';
-import type { SheetForm } from '../../rulebook/form/form';
-import { getQuantityEntry, type QuantityName } from '../../rulebook/quantity-catalogue';
+import { findUnit } from '../../../quantity/find-unit';
+import type { SheetForm } from '../../../rulebook/form/form';
+import { getQuantityEntry, type QuantityName } from '../../../rulebook/quantity-catalogue';
+import { findValve } from '../positions';
 import type { ColumnMeaning } from './column-meaning';
-import { findValve } from './positions';
 
 /** Words by which people head a column; the first quantity whose words occur is meant. */
 const WORDS: readonly (readonly [QuantityName, RegExp])[] = [

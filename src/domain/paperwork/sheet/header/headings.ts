@@ -1,4 +1,4 @@
-import type { TextRows } from './sheet-grid';
+import type { TextRows } from '../sheet-grid';
 
 const isBlank = (cell: string): boolean => cell.trim() === '';
 

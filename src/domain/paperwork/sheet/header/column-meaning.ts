@@ -1,5 +1,5 @@
-import type { QuantityName } from '../../rulebook/quantity-catalogue';
-import type { Valve } from '../../tappet/layout/bore-layout';
+import type { QuantityName } from '../../../rulebook/quantity-catalogue';
+import type { Valve } from '../../../tappet/layout/bore-layout';
 
 /** What a column of somebody's sheet holds. */
 export type ColumnMeaning =
