@@ -151,8 +151,9 @@ export const measureBore = async (
   await page.getByRole('img', { name: /closing zero 0\.1/ }).waitFor();
   await page.getByText('The zero held').waitFor();
   await pad.getByRole('button', { name: 'Enter zero seen' }).click();
-  // Ring 0.8440 in, dial −0.1 to +0.2 less its share of 0.1 of drift, lifter 0.842275 in.
-  await page.getByText(/1\.725 ± /).waitFor();
+  // Ring 0.8440 in, dial −0.1 to +0.2 less its share of 0.1 of drift, lifter 0.842275 in: 1.725
+  // thousandths, shown to one place more than the dial's division.
+  await page.getByText(/1\.72 ± /).waitFor();
   await look(inspector, 'bore');
 
   await page.getByLabel(/^Photograph/).setInputFiles(picture);

@@ -13,7 +13,7 @@ const secrets = (story: Story): readonly string[] => [
   '0.4581',
   '0.4622',
   '0.8438',
-  '1.725',
+  '1.72',
   '0.8432',
 ];
 
