@@ -16,12 +16,15 @@ const REQUEST_DAYS = 7;
 const MOST_A_DAY = 5;
 const DAY = 86_400_000;
 
-/** Sends the guardian a link by which they read this paperwork, sign, and hand it in. */
+/**
+ * Sends the guardian a link by which they read this paperwork, sign, and hand it in. The answer names
+ * nobody: it is kept for a repeat, and a name there would outlive the erasure of what it belongs to.
+ */
 export const askGuardian = async (
   deps: Pick<Ports, 'db' | 'clock' | 'random' | 'jobs' | 'site'>,
   actor: Actor,
   { act: id, paperworkId }: { readonly act: string; readonly paperworkId: string },
-): Promise<Result<{ readonly sentTo: string }, Failure>> => {
+): Promise<Result<null, Failure>> => {
   const known = await findOwnRow(deps.db, actor, paperworkId, 'hand-in');
   if (known === undefined) return fail(absent());
   const { seriesId } = known;
@@ -71,7 +74,7 @@ export const askGuardian = async (
         next: 'read the paperwork and sign it, or tell the competitor what is wrong.',
         link: { label: 'Read and sign', path: `/invitations/guardian/${token}` },
       });
-      return ok({ sentTo: guardian.guardianName });
+      return ok(null);
     },
   );
 };
