@@ -90,7 +90,7 @@ export const BuildSheet = (props: BuildSheetProps) => {
         what={form.title}
         onFiles={(list) => files.add(list, 'sheet', form.subject)}
       >
-        <p className="min-w-0 flex-1 basis-36 py-2 text-ink-2">
+        <p className="min-w-0 flex-1 basis-60 py-2 text-ink-2">
           CSV or XLSX as you have it.{' '}
           {form.columns.length > 0 && <TemplateLinks paperworkId={paperworkId} form={form} />}
         </p>
