@@ -7,8 +7,8 @@ import { keyOf } from '../../sheet/flow/asked';
 import { setToTake } from '../../sheet/flow/set-to-take';
 import { strikeRow } from '../../sheet/rows';
 import type { Cursor } from '../../sheet/sheet';
-import type { PanelBesideProps } from './PanelBeside';
 import { Pictures } from './Pictures';
+import type { PanelBesideProps } from './panel-beside-props';
 
 interface MorePanelProps extends PanelBesideProps {
   /** The readings of the part here. */

@@ -2,28 +2,15 @@ import { useState } from 'react';
 import type { SentRow } from '@/contracts/inspection/rows';
 import type { JudgedReading } from '@/domain/inspection/capture/readings-that-count';
 import { isStrikeReason, STRIKE_REASONS } from '@/domain/inspection/capture/strike-reasons';
-import type { SecondAsked } from '@/domain/inspection/second-set/asked';
 import { boreName } from '@/domain/tappet/layout/bore-layout';
-import type { Bay, Hands } from '../../bay';
+import type { Bay } from '../../bay';
 import { takenAt } from '../../sheet/flow/taken';
 import { cellWords } from '../../sheet/parts';
 import { moveRow, notReachedRow, strikeRow } from '../../sheet/rows';
 import { type Cursor, placeOf } from '../../sheet/sheet';
 import { MorePanel } from './MorePanel';
+import type { PadPanel, PanelBesideProps } from './panel-beside-props';
 import { SetUpPanel } from './SetUpPanel';
-
-export type PadPanel = 'strike' | 'more' | 'set-up' | 'not-reached' | 'move';
-
-export interface PanelBesideProps {
-  readonly panel: PadPanel;
-  readonly bay: Bay;
-  readonly hands: Hands;
-  readonly open: (panel: PadPanel | undefined) => void;
-  readonly onSecond: (asked: SecondAsked) => void;
-  readonly onRedo: (runId: string) => void;
-  /** Whether there is a keypad to go back to. */
-  readonly closable: boolean;
-}
 
 const NOT_REACHED = [
   'Not taken apart that far',
