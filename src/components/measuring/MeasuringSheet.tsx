@@ -18,7 +18,7 @@ import { WorkPanel } from './panels/work/WorkPanel';
 import { assessSheet } from './sheet/assess-sheet';
 import { impliedOf } from './sheet/keys/typed-base';
 import { factsOf, hintOf, statesOf } from './sheet/on-screen';
-import type { Sheet } from './sheet/sheet';
+import type { Cursor, Sheet } from './sheet/sheet';
 import { useBay } from './use-bay';
 import { useCapture } from './use-capture';
 import { useEntry } from './use-entry';
@@ -26,7 +26,8 @@ import { usePlace } from './use-place';
 
 /** The measuring screen: every key goes here, every act to the device first. */
 export const MeasuringSheet = ({ sheet: page }: { readonly sheet: Sheet }) => {
-  const { cursor, setUp, isRead, go, goAndKeep, setUpAs } = usePlace(page, 'lifter-body-diameter');
+  const place = usePlace(page, 'lifter-body-diameter');
+  const { cursor, setUp, isRead, go, goAndKeep, placeAfter, setUpAs } = place;
   const latest = useRef<InspectionAssessment>(undefined);
   const { sheet, link, onKept } = useLive(page);
   const capture = useCapture(page, {
@@ -46,9 +47,9 @@ export const MeasuringSheet = ({ sheet: page }: { readonly sheet: Sheet }) => {
 
   const { record: keep } = capture;
   const record = useCallback(
-    async (sent: readonly SentRow[]) => {
+    async (sent: readonly SentRow[], to?: Partial<Cursor>) => {
       try {
-        await keep(sent);
+        await keep(sent, to && placeAfter(to));
         setTrouble(undefined);
         return true;
       } catch {
@@ -56,7 +57,7 @@ export const MeasuringSheet = ({ sheet: page }: { readonly sheet: Sheet }) => {
         return false;
       }
     },
-    [keep],
+    [keep, placeAfter],
   );
   const entry = useEntry(bay, { go, setUpAs, record });
   const { take, clear } = entry;

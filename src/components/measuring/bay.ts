@@ -49,5 +49,6 @@ export interface Hands {
   readonly go: (to: Partial<Cursor>) => void;
   readonly setUpAs: (to: Partial<SetUp>) => void;
   /** Whether the rows are kept on this device. */
-  readonly record: (rows: readonly SentRow[]) => Promise<boolean>;
+  /** Keeps rows on the device, together with where the hand goes on to. */
+  readonly record: (rows: readonly SentRow[], to?: Partial<Cursor>) => Promise<boolean>;
 }

@@ -33,7 +33,7 @@ export interface Capture {
   readonly outcome: SendOutcome | undefined;
   readonly saved: { readonly state: 'device' | 'sent' | 'failed'; readonly at: string };
   /** Resolves once the rows are written through to the device; rejects when they are not. */
-  readonly record: (rows: readonly SentRow[]) => Promise<void>;
+  readonly record: (rows: readonly SentRow[], place?: unknown) => Promise<void>;
   /** Keeps a photograph of a place the same way; it goes when there is signal. */
   readonly photograph: (
     file: PictureFile,
@@ -140,7 +140,8 @@ export const useCapture = (sheet: Sheet, { known, tablet, onKept }: CaptureDeps)
   );
 
   const record = useCallback(
-    (rows: readonly SentRow[]) => keep(() => keepAct({ inspectionId, rows, keptAt: Date.now() })),
+    (rows: readonly SentRow[], place?: unknown) =>
+      keep(() => keepAct({ inspectionId, rows, keptAt: Date.now() }, place)),
     [inspectionId, keep],
   );
 

@@ -14,6 +14,7 @@ import { questionOf } from './sheet/keys/question';
 import { NOTHING, press, type Typed, typedNumber } from './sheet/keys/typing';
 import { closingRow, openingRow, readingRow, strikeRow } from './sheet/rows';
 import { isComparative } from './sheet/set-up';
+import type { Cursor } from './sheet/sheet';
 import { useHold } from './use-hold';
 
 /** The step after a reading, by a plan that knows it: a value near a limit asks for more at once. */
@@ -126,24 +127,24 @@ export const useEntry = (bay: Bay | undefined, hands: Hands) => {
     type(NOTHING);
     drop();
     setAsked(undefined);
-    const kept = async (sent: readonly SentRow[]) => {
-      const done = await record(sent);
-      if (!done) {
+    // Kept with where it leads: whatever ends the page in between, it opens again where the hand is.
+    const kept = async (sent: readonly SentRow[], to: Partial<Cursor>) => {
+      if (await record(sent, to)) go(to);
+      else {
         type(entered);
         setProblem(
           'This device did not keep it: its storage is closed or full. Nothing typed is lost; try Enter again, or write it down.',
         );
       }
-      return done;
     };
     const base = { gauge, setUp, gauges: sheet.gauges, value: { text: value, unit: scale.unit } };
     if (step.kind === 'opening') {
       const run = { id: uuidV7(), scope: scopeOf(setUp, position, cursor.set) };
-      if (await kept([openingRow({ ...base, runId: run.id })])) go({ run, zero: undefined });
+      await kept([openingRow({ ...base, runId: run.id })], { run, zero: undefined });
     } else if (step.kind === 'closing') {
       const runId = cursor.run?.id ?? '';
-      if (await kept([closingRow({ ...base, runId })]))
-        go({ run: undefined, zero: undefined, closed: runId });
+      const to = { run: undefined, zero: undefined, closed: runId };
+      await kept([closingRow({ ...base, runId })], to);
     } else if (cell !== undefined) {
       const taken = takenAt(judged, part, position, cursor.set).get(cell);
       const row = readingRow({
@@ -155,11 +156,10 @@ export const useEntry = (bay: Bay | undefined, hands: Hands) => {
         set: cursor.set,
         runId: comparative ? cursor.run?.id : undefined,
       });
-      if (!(await kept([row]))) return;
       // A single reading a place: its number is read back at the next one, without a key between.
       const single = bay.asked(part, position).length === 1 && taken === undefined;
       const after = single ? stepAfter(bay, row) : undefined;
-      go({
+      await kept([row], {
         cell: undefined,
         ...(after && after.kind !== 'part' ? onward(after, cursor.set) : {}),
         ...(after?.kind === 'closing' ? { zero: 'closing' } : {}),

@@ -55,13 +55,18 @@ export const usePlace = (sheet: Sheet, firstPart: string) => {
       setPlace(({ cursor, setUp }) => ({ cursor, setUp: { ...setUp, ...to } })),
     [],
   );
+  /** What this device keeps of having gone there. */
+  const placeAfter = useCallback(
+    (to: Partial<Cursor>): Kept => ({ ...place, cursor: { ...place.cursor, ...to } }),
+    [place],
+  );
   /** Goes there, resolved once this device has it: for leaving the page. */
   const goAndKeep = useCallback(
     (to: Partial<Cursor>) => {
       go(to);
-      return keepPlace(inspectionId, { ...place, cursor: { ...place.cursor, ...to } });
+      return keepPlace(inspectionId, placeAfter(to));
     },
-    [go, inspectionId, place],
+    [go, inspectionId, placeAfter],
   );
-  return { goAndKeep, cursor: place.cursor, setUp: place.setUp, isRead, go, setUpAs };
+  return { goAndKeep, placeAfter, cursor: place.cursor, setUp: place.setUp, isRead, go, setUpAs };
 };

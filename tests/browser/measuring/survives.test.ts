@@ -40,6 +40,9 @@ const enterBodies = async (page: Page) => {
       .first()
       .waitFor();
   }
+  // A number stands on the screen while it is typed; these say that it is kept and the hand has gone on.
+  await page.getByText(`${BODIES.length} entries not sent yet`).waitFor();
+  await page.getByRole('button', { name: 'Body, upper, Along: empty' }).waitFor();
 };
 
 const valuesOf = async (id: string) => (await keptOf(id)).readings.map(({ value }) => value);
@@ -118,6 +121,46 @@ test.each(SCREENS)(
     }
   },
 );
+
+test('a reading and where the hand goes on to are on the device at one moment', async () => {
+  const { path } = await openEngine(CLAUSES);
+  await journey('kept together', async ({ enter }) => {
+    const visitor = await enter({ viewport: { width: 1180, height: 820 }, touch: true });
+    await openSheet(visitor, path);
+    const { page } = visitor;
+    visitor.expectRefusal({ url: /\/captures$/, status: 'offline' });
+    await page.route('**/captures', (route) => route.abort());
+    // Looks at the device's store again and again: how many readings, and where it would open.
+    const seen = await page.evaluateHandle(() => {
+      const pairs: string[] = [];
+      const opening = indexedDB.open('tagwire-bay');
+      opening.onsuccess = () => {
+        const look = () => {
+          const read = opening.result.transaction(['acts', 'places'], 'readonly');
+          const acts = read.objectStore('acts').count();
+          const places = read.objectStore('places').getAll();
+          read.oncomplete = () => {
+            const [kept] = places.result as { place: { cursor: { bore: string } } }[];
+            pairs.push(`${acts.result} ${kept?.place.cursor.bore ?? 'nowhere'}`);
+            look();
+          };
+        };
+        look();
+      };
+      return pairs;
+    });
+    await enterBodies(page);
+    await eventually('a look after the last reading', async () =>
+      (await seen.evaluate((pairs) => pairs.at(-1)))?.startsWith(`${BODIES.length} `)
+        ? true
+        : undefined,
+    );
+    const pairs = [...new Set(await seen.evaluate((all) => all))].filter((one) => !/^0 /.test(one));
+    const counts = pairs.map((one) => one.split(' ')[0]);
+    expect([pairs, counts]).toEqual([pairs, [...new Set(counts)]]);
+    expect(counts.at(-1)).toBe(String(BODIES.length));
+  });
+});
 
 test('an answer lost after the server wrote doubles nothing, and what follows waits for it', {
   timeout: 4 * MINUTES,

@@ -86,11 +86,16 @@ export const withStore = async <T>(run: (db: IDBPDatabase<Schema>) => Promise<T>
 
 export const strict = { durability: 'strict' } as const;
 
-/** Keeps an act; resolves when it is written through to the device. */
-export const keepAct = (act: Omit<KeptAct, 'seq' | 'state'>): Promise<void> =>
+/**
+ * Keeps an act, with where its hand goes on to, both or neither; resolves when it is written through to
+ * the device.
+ */
+export const keepAct = (act: Omit<KeptAct, 'seq' | 'state'>, place?: unknown): Promise<void> =>
   withStore(async (db) => {
-    const change = db.transaction('acts', 'readwrite', strict);
-    await change.store.add({ ...act, state: 'waiting' });
+    const change = db.transaction(['acts', 'places'], 'readwrite', strict);
+    await change.objectStore('acts').add({ ...act, state: 'waiting' });
+    const { inspectionId } = act;
+    if (place !== undefined) await change.objectStore('places').put({ inspectionId, place });
     await change.done;
   });
 
