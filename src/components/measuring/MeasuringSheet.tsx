@@ -27,7 +27,7 @@ import { usePlace } from './use-place';
 /** The measuring screen: every key goes here, every act to the device first. */
 export const MeasuringSheet = ({ sheet: page }: { readonly sheet: Sheet }) => {
   const place = usePlace(page, 'lifter-body-diameter');
-  const { cursor, setUp, isRead, go, goAndKeep, placeAfter, setUpAs } = place;
+  const { cursor, setUp, isRead, go, goAndKeep, keepAfter, setUpAs } = place;
   const latest = useRef<InspectionAssessment>(undefined);
   const { sheet, link, onKept } = useLive(page);
   const capture = useCapture(page, {
@@ -49,7 +49,7 @@ export const MeasuringSheet = ({ sheet: page }: { readonly sheet: Sheet }) => {
   const record = useCallback(
     async (sent: readonly SentRow[], to?: Partial<Cursor>) => {
       try {
-        await keep(sent, to && placeAfter(to));
+        await (to === undefined ? keep(sent) : keepAfter(to, (after) => keep(sent, after)));
         setTrouble(undefined);
         return true;
       } catch {
@@ -57,7 +57,7 @@ export const MeasuringSheet = ({ sheet: page }: { readonly sheet: Sheet }) => {
         return false;
       }
     },
-    [keep, placeAfter],
+    [keep, keepAfter],
   );
   const entry = useEntry(bay, { go, setUpAs, record });
   const { take, clear } = entry;

@@ -1,4 +1,4 @@
-import { useCallback, useEffect, useState } from 'react';
+import { useCallback, useEffect, useRef, useState } from 'react';
 import { boreName, positionsOf } from '@/domain/tappet/layout/bore-layout';
 import { keepPlace, readPlace } from './queue/device-store';
 import { type SetUp, usualSetUp } from './sheet/set-up';
@@ -22,6 +22,7 @@ export const usePlace = (sheet: Sheet, firstPart: string) => {
     setUp: usualSetUp(sheet.gauges, sheet.servedAt.slice(0, 10)),
   }));
   const [isRead, setIsRead] = useState(false);
+  const isKeeping = useRef(false);
 
   useEffect(() => {
     readPlace<Kept>(inspectionId)
@@ -42,7 +43,7 @@ export const usePlace = (sheet: Sheet, firstPart: string) => {
   }, [inspectionId, sheet]);
 
   useEffect(() => {
-    if (isRead) keepPlace(inspectionId, place).catch(() => undefined);
+    if (isRead && !isKeeping.current) keepPlace(inspectionId, place).catch(() => undefined);
   }, [inspectionId, isRead, place]);
 
   const go = useCallback(
@@ -55,18 +56,25 @@ export const usePlace = (sheet: Sheet, firstPart: string) => {
       setPlace(({ cursor, setUp }) => ({ cursor, setUp: { ...setUp, ...to } })),
     [],
   );
-  /** What this device keeps of having gone there. */
-  const placeAfter = useCallback(
-    (to: Partial<Cursor>): Kept => ({ ...place, cursor: { ...place.cursor, ...to } }),
+  /** Keeps having gone there together with something else; no place of before is written over it. */
+  const keepAfter = useCallback(
+    async (to: Partial<Cursor>, keep: (after: Kept) => Promise<void>) => {
+      isKeeping.current = true;
+      try {
+        await keep({ ...place, cursor: { ...place.cursor, ...to } });
+      } finally {
+        isKeeping.current = false;
+      }
+    },
     [place],
   );
   /** Goes there, resolved once this device has it: for leaving the page. */
   const goAndKeep = useCallback(
     (to: Partial<Cursor>) => {
       go(to);
-      return keepPlace(inspectionId, placeAfter(to));
+      return keepAfter(to, (after) => keepPlace(inspectionId, after));
     },
-    [go, inspectionId, placeAfter],
+    [go, inspectionId, keepAfter],
   );
-  return { goAndKeep, placeAfter, cursor: place.cursor, setUp: place.setUp, isRead, go, setUpAs };
+  return { goAndKeep, keepAfter, cursor: place.cursor, setUp: place.setUp, isRead, go, setUpAs };
 };
