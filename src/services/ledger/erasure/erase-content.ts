@@ -1,6 +1,6 @@
 import { LockMode } from '@mikro-orm/postgresql';
 import { type Actor, may } from '@/domain/access/permission';
-import { absent, type Failure, failure, invalid } from '@/domain/failure';
+import { absent, type Failure, failure } from '@/domain/failure';
 import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { Paperwork } from '@/entities/paperwork/paperwork';
@@ -8,6 +8,7 @@ import { performAct } from '../../act/perform-act';
 import type { Ports } from '../../ports';
 import { eraseLines, listErasable } from './erase-lines';
 import { findErasureObstacle } from './obstacle';
+import { readReason } from './read-reason';
 
 /**
  * Erases what a paperwork says, for good: every version, its files, the remarks on it, why it was taken
@@ -29,11 +30,9 @@ export const eraseContent = async (
   if (!may(actor, 'series.administer', seriesId) || !isId(paperworkId)) return fail(absent());
   const where = { seriesId, id: paperworkId };
   if ((await deps.db.findOne(Paperwork, where)) === null) return fail(absent());
-  const reason = input.reason.trim();
-  if (reason.length < 10 || reason.length > 500) {
-    const detail = 'Say in 10 to 500 characters why it is erased, without naming anybody.';
-    return fail(invalid([{ pointer: '/reason', detail }]));
-  }
+  const said = readReason(input.reason, 'why it is erased, without naming anybody');
+  if (!said.ok) return said;
+  const reason = said.value;
   return performAct(
     deps,
     actor,

@@ -1,13 +1,13 @@
 import { LockMode } from '@mikro-orm/postgresql';
 import { type Actor, may } from '@/domain/access/permission';
-import { absent, type Failure, failure, invalid } from '@/domain/failure';
+import { absent, type Failure } from '@/domain/failure';
 import { isId } from '@/domain/is-id';
-import { fail, ok, type Result } from '@/domain/result';
+import { fail, type Result } from '@/domain/result';
 import { Event } from '@/entities/event/event';
 import { performAct } from '../../act/perform-act';
 import type { Ports } from '../../ports';
-import { eraseLines, listErasable } from './erase-lines';
-import { findErasureObstacle } from './obstacle';
+import { eraseWords } from './erase-words';
+import { readReason } from './read-reason';
 
 /**
  * Erases the names and reasons given on an event's day: changes of entries, who signed on, custody,
@@ -28,11 +28,9 @@ export const eraseDayWords = async (
   if (!may(actor, 'series.administer', seriesId) || !isId(eventId)) return fail(absent());
   const where = { seriesId, id: eventId };
   if ((await deps.db.findOne(Event, where)) === null) return fail(absent());
-  const reason = input.reason.trim();
-  if (reason.length < 10 || reason.length > 500) {
-    const detail = 'Say in 10 to 500 characters why they are erased, without naming anybody.';
-    return fail(invalid([{ pointer: '/reason', detail }]));
-  }
+  const said = readReason(input.reason, 'why they are erased, without naming anybody');
+  if (!said.ok) return said;
+  const reason = said.value;
   return performAct(
     deps,
     actor,
@@ -41,13 +39,8 @@ export const eraseDayWords = async (
       // Whoever changes entries or records a check of the event waits here.
       await act.em.findOneOrFail(Event, where, { lockMode: LockMode.PESSIMISTIC_WRITE });
       const subject = { kind: 'event', id: eventId } as const;
-      const obstacle = await findErasureObstacle(act.em, seriesId, subject);
-      if (obstacle !== undefined) return fail(failure('not-in-this-state', obstacle));
-      const contents = await listErasable(act.em, seriesId, subject);
-      if (contents.length === 0)
-        return fail(failure('not-in-this-state', 'There are no names and reasons to be erased.'));
-      await eraseLines(act, { seriesId, subject, reason, contents });
-      return ok({ contents: contents.length });
+      const nothing = 'There are no names and reasons to be erased.';
+      return eraseWords(act, { seriesId, subject, reason, nothing });
     },
   );
 };

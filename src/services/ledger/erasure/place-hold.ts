@@ -1,10 +1,11 @@
 import { type Actor, may } from '@/domain/access/permission';
-import { absent, type Failure, invalid } from '@/domain/failure';
+import { absent, type Failure } from '@/domain/failure';
 import { isId } from '@/domain/is-id';
 import { fail, ok, type Result } from '@/domain/result';
 import { performAct } from '../../act/perform-act';
 import type { Ports } from '../../ports';
 import { lockHolds } from './obstacle';
+import { readReason } from './read-reason';
 
 /** Stops every erasure of a paperwork, of an inspection, or in the whole series, until the hold is lifted. */
 export const placeHold = async (
@@ -35,11 +36,9 @@ export const placeHold = async (
     );
     if (known === undefined) return fail(absent());
   }
-  const reason = input.reason.trim();
-  if (reason.length < 10 || reason.length > 500) {
-    const detail = 'Say in 10 to 500 characters why nothing may be erased.';
-    return fail(invalid([{ pointer: '/reason', detail }]));
-  }
+  const said = readReason(input.reason, 'why nothing may be erased');
+  if (!said.ok) return said;
+  const reason = said.value;
   return performAct(
     deps,
     actor,
